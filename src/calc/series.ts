@@ -1,0 +1,122 @@
+import { type Acquisition, type ClassKey, classRow, type Family } from './classes.js';
+import { acquiredLines } from './lines.js';
+import { type NumberParameterKey, type ParameterKey, type ParameterTable, parameterKeys, parameterRow } from './parameters.js';
+
+export type PhaseDirection = ParameterTable['phaseDirection']['choices'][number];
+export type FatSuppression = ParameterTable['fatSuppression']['choices'][number];
+
+/** b-values with the averages of each; one average list entry per b-value; directions count 1 at b 0. */
+export interface Diffusion {
+  readonly bValuesSPerMm2: readonly number[];
+  readonly directions: number;
+  readonly averages: readonly number[];
+}
+
+export const pacingKinds = ['none', 'breath-hold', 'respiratory-trigger', 'cardiac-gate'] as const;
+
+/** What starts each shot. */
+export interface Pacing {
+  readonly kind: (typeof pacingKinds)[number];
+  /** Breath interval, or RR interval. */
+  readonly periodMs?: number;
+  /** Quiet part of the breath in which slices may be acquired. */
+  readonly windowMs?: number;
+  /** Gated series acquired in breath-holds. */
+  readonly breathHold?: boolean;
+}
+
+type AbsentKey = { [K in NumberParameterKey]: ParameterTable[K]['otherwise'] extends 'absent' ? K : never }[NumberParameterKey];
+type PresentKey = Exclude<NumberParameterKey, AbsentKey>;
+
+/** Every parameter of a series, defaults filled in; what a class does not have keeps its neutral value. */
+export type Parameters = { readonly [K in PresentKey]: number } & { readonly [K in AbsentKey]: number | undefined } & {
+  readonly phaseDirection: PhaseDirection;
+  readonly fatSuppression: FatSuppression;
+  readonly ellipticalSampling: boolean;
+  readonly flowCompensation: boolean;
+  readonly slabSelective: boolean;
+  readonly reconstruction: 'learned' | undefined;
+  readonly diffusion: Diffusion | undefined;
+  readonly pacing: Pacing;
+};
+
+/** Parameters as a file gives them: only what differs from the defaults. */
+export type GivenParameters = { readonly [K in ParameterKey]?: Parameters[K] };
+
+/** Values that replace a tissue's own. */
+export interface TissueOverride {
+  readonly t1Ms?: number;
+  readonly t2Ms?: number;
+  readonly t2StarMs?: number;
+  readonly protonDensity?: number;
+}
+
+/** What the model needs to know of one series. */
+export interface Series {
+  readonly family: Family;
+  readonly acquisition: Acquisition;
+  /** `axial`, `sagittal oblique`, `short axis`... as a person writes it. */
+  readonly plane: string;
+  /** `dynamic` marks a timed contrast phase. */
+  readonly purpose: string | null;
+  readonly target: string;
+  readonly comparison: string;
+  readonly contrastAgent: boolean;
+  readonly nullTissue: string | null;
+  readonly tissueOverrides: Readonly<Record<string, TissueOverride>>;
+  readonly parameters: Parameters;
+}
+
+/** The class of a series. A series is only ever built with a family and acquisition that stand together in the table. */
+export function classOf(series: Pick<Series, 'family' | 'acquisition'>): ClassKey {
+  return `${series.family}/${series.acquisition}` as ClassKey;
+}
+
+/**
+ * Fills in what a file leaves out: the defaults of the parameter table, then those of the class.
+ * Trains that read all lines in one go (single-shot, echo-planar, inversion-prepared) take their length from the lines.
+ */
+export function fillDefaults(key: ClassKey, given: GivenParameters): Parameters {
+  const row = classRow(key);
+  const filled: Record<string, unknown> = {};
+  for (const name of parameterKeys) {
+    const value = given[name];
+    filled[name] = value === undefined ? defaultOf(name, key) : value;
+  }
+  const parameters = filled as unknown as Parameters;
+  if (row.otherwise.echoTrainLength === 'lines' && given.echoTrainLength === undefined) {
+    return { ...parameters, echoTrainLength: linesInOneTrain(key, parameters) };
+  }
+  return parameters;
+}
+
+/** Value of a parameter that was left out, before anything that depends on the lines. */
+function defaultOf(name: ParameterKey, key: ClassKey): unknown {
+  const row = parameterRow(name);
+  const otherwise = classRow(key).otherwise;
+  if (row.kind === 'object') return row.otherwise === 'none' ? { kind: 'none' } : undefined;
+  if (row.otherwise === 'absent' || row.otherwise === 'required') return undefined;
+  if (row.otherwise !== 'by-class') return row.otherwise;
+  if (name === 'flipAngleDeg') return otherwise.flipAngleDeg === 'required' ? undefined : otherwise.flipAngleDeg;
+  if (name === 'echoTrainLength') return otherwise.echoTrainLength === 'lines' ? 1 : otherwise.echoTrainLength;
+  if (name === 'echoSpacingMs') return otherwise.echoSpacingMs;
+  return otherwise.slabSelective;
+}
+
+/** Readouts of a train that takes all its lines in one go: partitions inside the cycle, or the phase lines. */
+export function linesInOneTrain(key: ClassKey, parameters: Parameters): number {
+  const lines = acquiredLines(key, parameters);
+  return key === 'inversion-prepared-gradient-echo/3D' ? lines.slice : lines.phase;
+}
+
+/** True when a parameter does what this class cannot use: it is set to something else than its neutral value. */
+export function isUnusedButSet(name: ParameterKey, series: Series): boolean {
+  const row = classRow(classOf(series));
+  if (row.parameters.includes(name)) return false;
+  const value = series.parameters[name];
+  if (value === undefined) return false;
+  if (name === 'pacing') return (value as Pacing).kind !== 'none';
+  const neutral = defaultOf(name, classOf(series));
+  // The excitation and refocusing angle, and the spacing, have no neutral value that matters where the class has none.
+  return name !== 'refocusingAngleDeg' && name !== 'echoSpacingMs' && name !== 'flipAngleDeg' && name !== 'slabSelective' && value !== neutral;
+}

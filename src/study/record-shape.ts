@@ -1,0 +1,143 @@
+import { type RecordedLimits, recordVersion } from './record.js';
+import { holdStates, outcomeWords, qualityWords, recommendationWords } from './record-words.js';
+
+/** Where a record has not the shape of the format, and what was expected there. */
+export interface ShapeFault {
+  readonly path: string;
+  readonly expected: string;
+}
+
+type Check = (value: unknown, path: string) => ShapeFault | null;
+
+const text: Check = (value, path) => (typeof value === 'string' ? null : { path, expected: 'text' });
+const number: Check = (value, path) => (typeof value === 'number' ? null : { path, expected: 'a number' });
+const flag: Check = (value, path) => (typeof value === 'boolean' ? null : { path, expected: 'true or false' });
+
+function exactly(wanted: string | number): Check {
+  return (value, path) => (value === wanted ? null : { path, expected: JSON.stringify(wanted) });
+}
+
+function wordOf(words: readonly string[]): Check {
+  return (value, path) => (typeof value === 'string' && words.includes(value) ? null : { path, expected: `one of ${words.join(', ')}` });
+}
+
+function orNull(check: Check): Check {
+  return (value, path) => (value === null ? null : check(value, path));
+}
+
+function listOf(check: Check): Check {
+  return (value, path) => {
+    if (!Array.isArray(value)) return { path, expected: 'a list' };
+    return firstFault(value.map((item, index) => check(item, `${path}.${index}`)));
+  };
+}
+
+/** An object with at least these keys; more are left alone, so that a later program may add some. */
+function withKeys(checks: Readonly<Record<string, Check>>, needed: 'all keys' | 'any keys' = 'all keys'): Check {
+  const rows = Object.entries(checks);
+  return (value, path) => {
+    if (!isObject(value)) return { path, expected: 'an object' };
+    for (const [key, check] of rows) {
+      if (needed === 'any keys' && !Object.hasOwn(value, key)) continue;
+      const fault = check(value[key], path === '' ? key : `${path}.${key}`);
+      if (fault !== null) return fault;
+    }
+    return null;
+  };
+}
+
+function valuesOf(check: Check): Check {
+  return (value, path) => {
+    if (!isObject(value)) return { path, expected: 'an object' };
+    for (const key in value) {
+      const fault = check(value[key], `${path}.${key}`);
+      if (fault !== null) return fault;
+    }
+    return null;
+  };
+}
+
+const anything: Check = () => null;
+
+const day: Check = (value, path) => (typeof value === 'string' && isDay(value) ? null : { path, expected: 'a day as YYYY-MM-DD, or null' });
+
+const values = withKeys({ parameters: valuesOf(anything), figures: valuesOf(orNull(number)) });
+
+const reading = withKeys(
+  { timeS: number, b1rmsUt: number, sarWkg: number, operatingMode: text, changedByScanner: text, notModelled: listOf(text) },
+  'any keys',
+);
+
+const limitChecks: Readonly<Record<keyof RecordedLimits, Check>> = {
+  holdS: orNull(number),
+  holdsAvailable: orNull(number),
+  holdState: orNull(wordOf(holdStates)),
+  minutesLeft: orNull(number),
+  longestSeriesS: orNull(number),
+  b1rmsCapUt: orNull(number),
+  b1rmsReadFrom: orNull(text),
+  sarCapWkg: orNull(number),
+  sarReadFrom: orNull(text),
+  labelConditions: listOf(text),
+  frontBackMm: orNull(number),
+  leftRightMm: orNull(number),
+  contrastGiven: orNull(flag),
+};
+
+const record = withKeys({
+  format: exactly('holdfast record'),
+  version: exactly(recordVersion),
+  id: text,
+  tool: text,
+  model: text,
+  day: orNull(day),
+  preset: withKeys({ id: text, revision: number, hash: text }),
+  region: text,
+  fieldT: number,
+  scanner: text,
+  coil: orNull(text),
+  role: text,
+  initials: orNull(text),
+  reasons: listOf(text),
+  limits: withKeys(limitChecks),
+  series: listOf(
+    withKeys({
+      id: text,
+      outcome: wordOf(Object.keys(outcomeWords)),
+      reason: text,
+      quality: orNull(wordOf(Object.keys(qualityWords))),
+      planned: values,
+      used: values,
+      crossed: listOf(withKeys({ rule: text, role: orNull(text) })),
+      readings: withKeys({ before: orNull(reading), after: orNull(reading) }),
+    }),
+  ),
+  recommendation: orNull(wordOf(Object.keys(recommendationWords))),
+});
+
+/** The first place where a value read from a file is no record, or null when it is one. */
+export function faultOfRecord(value: unknown): ShapeFault | null {
+  return record(value, '');
+}
+
+/**
+ * True for a day of the calendar written YYYY-MM-DD, without a time.
+ *
+ * @example isDay('2026-02-29') //=> false
+ */
+export function isDay(given: string): boolean {
+  const parts = /^(\d{4})-(\d{2})-(\d{2})$/.exec(given);
+  if (parts === null) return false;
+  const [year, month, date] = [Number(parts[1]), Number(parts[2]), Number(parts[3])];
+  const leap = year % 4 === 0 && (year % 100 !== 0 || year % 400 === 0);
+  const days = [31, leap ? 29 : 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31][month - 1];
+  return days !== undefined && date >= 1 && date <= days;
+}
+
+function firstFault(faults: readonly (ShapeFault | null)[]): ShapeFault | null {
+  return faults.find((fault) => fault !== null) ?? null;
+}
+
+function isObject(value: unknown): value is Record<string, unknown> {
+  return typeof value === 'object' && value !== null && !Array.isArray(value);
+}

@@ -1,0 +1,62 @@
+/** Writes `schema/preset.schema.json` from the tables and compiles it to `build/validate-preset.js`. Run before build and test. */
+import { mkdir, readFile, writeFile } from 'node:fs/promises';
+import { Ajv } from 'ajv';
+import standalone from 'ajv/dist/standalone/index.js';
+import { build } from 'esbuild';
+import { presetSchema } from './preset-schema.js';
+import { schemaText } from './schema-text.js';
+
+const root = new URL('../', import.meta.url);
+
+/** Leaves a file alone that already says this, so that watchers and build caches stay quiet. */
+async function writeIfChanged(path: string, text: string): Promise<void> {
+  const file = new URL(path, root);
+  const before = await readFile(file, 'utf8').catch(() => null);
+  if (before !== text) await writeFile(file, text);
+}
+
+const ajv = new Ajv({
+  allErrors: true,
+  verbose: true,
+  messages: false,
+  strict: true,
+  allowUnionTypes: true,
+  strictRequired: false,
+  strictTypes: false,
+  code: { source: true, esm: true },
+});
+// Node gives the CommonJS module of ajv as the default import.
+const toCode = ((standalone as unknown as { default?: unknown }).default ?? standalone) as (ajv: Ajv, validate: unknown) => string;
+
+await mkdir(new URL('schema/', root), { recursive: true });
+await mkdir(new URL('build/', root), { recursive: true });
+// The build compiles only: the test that compares the committed schema with the tables must be able to fail.
+if (!process.argv.includes('--code-only')) await writeIfChanged('schema/preset.schema.json', schemaText(presetSchema));
+
+// The ESM output of ajv still calls `require` for its run-time parts: one pass through esbuild makes it stand alone.
+const bundled = await build({
+  stdin: { contents: toCode(ajv, ajv.compile(presetSchema)), resolveDir: new URL('.', root).pathname, loader: 'js' },
+  bundle: true,
+  format: 'esm',
+  platform: 'neutral',
+  mainFields: ['module', 'main'],
+  minify: true,
+  write: false,
+});
+await writeIfChanged('build/validate-preset.js', bundled.outputFiles[0]?.text ?? '');
+await writeIfChanged(
+  'build/validate-preset.d.ts',
+  `export interface SchemaError {
+  instancePath: string;
+  schemaPath: string;
+  keyword: string;
+  params: Record<string, unknown>;
+  schema: unknown;
+  parentSchema: Record<string, unknown>;
+  data: unknown;
+  propertyName?: string;
+}
+export declare const validate: { (data: unknown): boolean; errors?: SchemaError[] | null };
+export default validate;
+`,
+);

@@ -1,0 +1,58 @@
+import { classKeyOf } from '../calc/classes.js';
+import type { ParameterKey } from '../calc/parameters.js';
+import { fillDefaults, type GivenParameters } from '../calc/series.js';
+import { cleanText } from './clean-text.js';
+import type { PresetFile, SeriesFile } from './preset-file.js';
+import type { MustKeep, Study, StudySeries } from './study.js';
+
+/** Copies without the bare objects of the JSON reader, so that equal studies are equal in every comparison. */
+function plainCopy<T>(value: T): T {
+  return value === undefined ? value : (JSON.parse(JSON.stringify(value)) as T);
+}
+
+function cleanMustKeep(mustKeep: MustKeep): MustKeep {
+  return { ...plainCopy(mustKeep), source: cleanText(mustKeep.source) };
+}
+
+function seriesOf(file: SeriesFile, index: number): StudySeries {
+  const key = classKeyOf(file.family, file.acquisition);
+  if (key === null) throw new Error(`no class ${file.family} ${file.acquisition}: check the structure first`);
+  const given = plainCopy(file.parameters) as Record<ParameterKey, never> & GivenParameters;
+  return {
+    id: file.id,
+    title: cleanText(file.title),
+    plane: cleanText(file.plane ?? 'axial'),
+    purpose: file.purpose === undefined ? null : cleanText(file.purpose),
+    priority: file.priority ?? index + 1,
+    family: file.family,
+    acquisition: file.acquisition,
+    target: file.target,
+    comparison: file.comparison,
+    contrastAgent: file.contrastAgent ?? false,
+    nullTissue: file.nullTissue ?? null,
+    tissueOverrides: plainCopy(file.tissueOverrides ?? {}),
+    parameters: fillDefaults(key, given),
+    ranges: plainCopy(file.ranges ?? {}),
+    mustKeep: (file.mustKeep ?? []).map(cleanMustKeep),
+    pairedWith: plainCopy(file.pairedWith ?? []),
+    locked: plainCopy(file.locked ?? []),
+    opened: plainCopy(file.opened ?? []),
+  };
+}
+
+/** Builds the study from a file whose structure was checked: defaults filled in, texts cleaned. */
+export function studyOfFile(file: PresetFile): Study {
+  return {
+    format: 'holdfast preset',
+    version: 1,
+    id: file.id,
+    title: cleanText(file.title),
+    region: cleanText(file.region),
+    fieldT: file.fieldT,
+    status: file.status ?? 'draft',
+    revision: file.revision ?? 1,
+    notes: cleanText(file.notes ?? ''),
+    minimumSet: plainCopy(file.minimumSet ?? []),
+    series: file.series.map(seriesOf),
+  };
+}

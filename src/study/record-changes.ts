@@ -1,0 +1,66 @@
+import { type FigureKey, figureKeys, figureTable } from '../calc/figures.js';
+import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
+import type { Diffusion, Pacing } from '../calc/series.js';
+import type { RecordedSeries } from './record.js';
+
+/** Parameters whose planned and used value differ, in table order. */
+export function changedParameters({ planned, used }: RecordedSeries): ParameterKey[] {
+  return parameterKeys.filter((key) => JSON.stringify(planned.parameters[key]) !== JSON.stringify(used.parameters[key]));
+}
+
+/** Figures that differ in the digits that are shown, in column order. */
+export function changedFigures({ planned, used }: RecordedSeries): FigureKey[] {
+  return figureKeys.filter((key) => figureWords(key, planned.figures[key] ?? null) !== figureWords(key, used.figures[key] ?? null));
+}
+
+/**
+ * A parameter's value with its unit, as a person reads it.
+ *
+ * @example parameterWords('sliceThicknessMm', 3.5) //=> '3.5 mm'
+ */
+export function parameterWords(key: ParameterKey, value: unknown): string {
+  const row = parameterRow(key);
+  if (value === undefined || value === null) return 'none';
+  if (key === 'pacing') return pacingWords(value as Pacing);
+  if (key === 'diffusion') return diffusionWords(value as Diffusion);
+  if (typeof value === 'boolean') return value ? 'yes' : 'no';
+  if (row.kind !== 'number' || typeof value !== 'number') return String(value);
+  return withUnit(trimmed(value, row.digits), row.unit);
+}
+
+/**
+ * A figure's value with its unit; scan times above a minute in minutes and seconds.
+ *
+ * @example figureWords('scanTimeS', 148) //=> '2:28 min'
+ */
+export function figureWords(key: FigureKey, value: number | null): string {
+  if (value === null) return 'none';
+  const { unit, digits } = figureTable[key];
+  if (unit === 's' && Math.abs(value) >= 60) {
+    const seconds = Math.round(value);
+    return `${Math.floor(seconds / 60)}:${String(seconds % 60).padStart(2, '0')} min`;
+  }
+  return withUnit(value.toFixed(digits), unit);
+}
+
+function pacingWords({ kind, periodMs, windowMs, breathHold }: Pacing): string {
+  const parts = [kind.replace('-', ' ')];
+  if (periodMs !== undefined) parts.push(`${trimmed(periodMs, 0)} ms`);
+  if (windowMs !== undefined) parts.push(`window ${trimmed(windowMs, 0)} ms`);
+  if (breathHold === true) parts.push('in breath-holds');
+  return parts.join(' ');
+}
+
+function diffusionWords({ bValuesSPerMm2, directions, averages }: Diffusion): string {
+  return `b ${bValuesSPerMm2.join('/')}, ${directions} directions, averages ${averages.join('/')}`;
+}
+
+/** At least the digits a person expects, more where the value has them: a change must never look like none. */
+function trimmed(value: number, digits: number): string {
+  const exact = Number(value.toPrecision(6));
+  return Number(exact.toFixed(digits)) === exact ? exact.toFixed(digits) : String(exact);
+}
+
+function withUnit(number: string, unit: string): string {
+  return unit === '' ? number : `${number} ${unit}`;
+}

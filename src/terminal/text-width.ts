@@ -1,0 +1,59 @@
+import { eastAsianWidthType } from 'get-east-asian-width';
+import stringWidth from 'string-width';
+
+/**
+ * Columns that a text takes on the screen; escape sequences take none, East Asian wide characters and emoji two.
+ *
+ * @example textWidth('\u6f22a') //=> 3
+ */
+export function textWidth(text: string): number {
+  return stringWidth(text);
+}
+
+/**
+ * True if every terminal agrees on the width of these characters. Not so for those whose width depends on the font or on a
+ * setting (Unicode calls it ambiguous: box drawing, blocks, arrows, Greek), nor for emoji and combining marks.
+ *
+ * @example isSureWidth('\u28ff') //=> true
+ * @example isSureWidth('\u00b1') //=> false
+ */
+export function isSureWidth(text: string): boolean {
+  for (const character of text) {
+    const code = character.codePointAt(0) ?? 0;
+    if (code >= 0x20 && code < 0x7f) continue;
+    const type = eastAsianWidthType(code);
+    if (type === 'ambiguous' || code < 0xa0 || /\p{Emoji}|\p{Mark}|\p{Format}/u.test(character)) return false;
+  }
+  return true;
+}
+
+const graphemes = new Intl.Segmenter(undefined, { granularity: 'grapheme' });
+
+/** The characters of a text as people count them: a letter with its accents is one. */
+export function graphemesOf(text: string): readonly string[] {
+  return Array.from(graphemes.segment(text), ({ segment }) => segment);
+}
+
+/**
+ * A plain text (no escape sequences) in exactly so many columns: cut with an ellipsis, or filled with blanks.
+ *
+ * @param columns At least 0.
+ * @param ellipsis One column wide; `glyphs.ellipsis`.
+ * @param align Where a text that is too short stands.
+ * @example fitText('breath-hold', 7, '~') //=> 'breath~'
+ * @example fitText('17.0', 6, '~', 'right') //=> '  17.0'
+ */
+export function fitText(text: string, columns: number, ellipsis: string, align: 'left' | 'right' = 'left'): string {
+  const width = textWidth(text);
+  if (width <= columns) return align === 'left' ? text + ' '.repeat(columns - width) : ' '.repeat(columns - width) + text;
+  if (columns <= 0) return '';
+  let kept = '';
+  let keptWidth = 0;
+  for (const grapheme of graphemesOf(text)) {
+    const next = keptWidth + textWidth(grapheme);
+    if (next > columns - 1) break;
+    kept += grapheme;
+    keptWidth = next;
+  }
+  return kept + ellipsis + ' '.repeat(columns - 1 - keptWidth);
+}

@@ -91,7 +91,10 @@ const range: Schema = {
 
 const override = closed(
   Object.fromEntries(
-    ['t1Ms', 't2Ms', 't2StarMs', 'protonDensity'].map((key) => [key, { type: 'number', exclusiveMinimum: 0, maximum: key === 'protonDensity' ? 2 : 20000 }]),
+    ['t1Ms', 't2Ms', 't2StarMs', 'protonDensity'].map((key) => [
+      key,
+      { type: 'number', exclusiveMinimum: 0, maximum: key === 'protonDensity' ? 2 : 20000 },
+    ]),
   ),
   [],
 );
@@ -100,6 +103,17 @@ const tissue: Schema = { enum: tissueNames, description: 'name of the tissue tab
 const keyList: Schema = { type: 'array', items: { enum: parameterKeys }, maxItems: parameterKeys.length };
 const idList: Schema = { type: 'array', items: { type: 'string' }, maxItems: presetLimits.series };
 
+/** Spelt apart, since an object with a `then` looks like a promise. */
+const consequenceKey = 'then';
+
+/** `if` and `then` of JSON Schema. */
+function onlyWhere(condition: Schema, consequence: Schema): Schema {
+  return Object.fromEntries([
+    ['if', condition],
+    [consequenceKey, consequence],
+  ]);
+}
+
 /** What a class asks beyond the table: the keys it needs, and that it exists. */
 function classConditions(): Schema[] {
   const always = parameterKeys.filter((key) => parameterRow(key).otherwise === 'required');
@@ -107,11 +121,10 @@ function classConditions(): Schema[] {
     const known = classKeys.map(classRow).filter((row) => row.family === family);
     if (known.length === 2) return [];
     return [
-      {
-        if: { properties: { family: { const: family } }, required: ['family'] },
-        // biome-ignore lint/suspicious/noThenProperty: a keyword of JSON Schema
-        then: { properties: { acquisition: { enum: known.map((row) => row.acquisition) } } },
-      },
+      onlyWhere(
+        { properties: { family: { const: family } }, required: ['family'] },
+        { properties: { acquisition: { enum: known.map((row) => row.acquisition) } } },
+      ),
     ];
   });
   const needs = families.flatMap((family): Schema[] => {
@@ -119,11 +132,7 @@ function classConditions(): Schema[] {
     const more = key === undefined ? [] : requiredParameters(key).filter((name) => !always.includes(name));
     if (more.length === 0) return [];
     return [
-      {
-        if: { properties: { family: { const: family } }, required: ['family'] },
-        // biome-ignore lint/suspicious/noThenProperty: a keyword of JSON Schema
-        then: { properties: { parameters: { required: more } } },
-      },
+      onlyWhere({ properties: { family: { const: family } }, required: ['family'] }, { properties: { parameters: { required: more } } }),
     ];
   });
   return [...acquisitions, ...needs];
@@ -135,7 +144,12 @@ const series = closed(
     title: named(presetLimits.title, 'words on screen'),
     plane: text(presetLimits.word, 'axial, sagittal, coronal oblique, short axis...'),
     purpose: text(presetLimits.word, 'what the series is for; dynamic marks a timed contrast phase'),
-    priority: { type: 'number', minimum: 0, maximum: 1000, description: 'place in the running order, lower is earlier; left out: the place in the file' },
+    priority: {
+      type: 'number',
+      minimum: 0,
+      maximum: 1000,
+      description: 'place in the running order, lower is earlier; left out: the place in the file',
+    },
     family: { enum: families },
     acquisition: { enum: ['2D', '3D'] },
     target: tissue,

@@ -1,4 +1,7 @@
-/** Writes `schema/preset.schema.json` from the tables and compiles it to `build/validate-preset.js`. Run before build and test. */
+/**
+ * Writes `schema/preset.schema.json` from the tables and compiles it to `build/validate-preset.js`. Run before build and test.
+ * With `--code-only` the committed schema is left alone, so that a test can tell that it no longer follows the tables.
+ */
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { Ajv } from 'ajv';
 import standalone from 'ajv/dist/standalone/index.js';

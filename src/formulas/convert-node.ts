@@ -20,27 +20,52 @@ export class NotAllowed extends Error {
 }
 
 const comparisons: ReadonlyMap<string, Comparison> = new Map([
-  ['smaller', '<'], ['smallerEq', '<='], ['larger', '>'], ['largerEq', '>='], ['equal', '=='], ['unequal', '!='],
+  ['smaller', '<'],
+  ['smallerEq', '<='],
+  ['larger', '>'],
+  ['largerEq', '>='],
+  ['equal', '=='],
+  ['unequal', '!='],
 ]);
-const arithmetic: ReadonlyMap<string, Arithmetic> = new Map([['add', '+'], ['subtract', '-'], ['multiply', '*'], ['divide', '/'], ['pow', '^']]);
+const arithmetic: ReadonlyMap<string, Arithmetic> = new Map([
+  ['add', '+'],
+  ['subtract', '-'],
+  ['multiply', '*'],
+  ['divide', '/'],
+  ['pow', '^'],
+]);
 
 const kindsInWords: ReadonlyMap<string, string> = new Map([
-  ['AssignmentNode', 'an assignment'], ['FunctionAssignmentNode', 'the definition of a function'], ['AccessorNode', 'a property'], ['IndexNode', 'an index'],
-  ['ArrayNode', 'a matrix'], ['ObjectNode', 'an object'], ['RangeNode', 'a range'], ['BlockNode', 'more than one expression'],
-  ['ConditionalNode', 'a choice with ? and :'], ['ConstantNode', 'a value that is no number'], ['FunctionNode', 'a function'],
+  ['AssignmentNode', 'an assignment'],
+  ['FunctionAssignmentNode', 'the definition of a function'],
+  ['AccessorNode', 'a property'],
+  ['IndexNode', 'an index'],
+  ['ArrayNode', 'a matrix'],
+  ['ObjectNode', 'an object'],
+  ['RangeNode', 'a range'],
+  ['BlockNode', 'more than one expression'],
+  ['ConditionalNode', 'a choice with ? and :'],
+  ['ConstantNode', 'a value that is no number'],
+  ['FunctionNode', 'a function'],
 ]);
 
 const allowed = 'names of parameters and figures, numbers, comparisons, and, or, not, + - * / ^, parentheses, min, max, abs, sqrt';
 
 function partOf(node: ParsedNode): string {
   try {
-    return String(node);
+    return (node as unknown as { toString(): string }).toString();
   } catch {
     return node.type;
   }
 }
 
-function refuse(node: ParsedNode, code: Refusal['code'], because: string, expected = allowed, hint = 'Write the rule with what is allowed.'): never {
+function refuse(
+  node: ParsedNode,
+  code: Refusal['code'],
+  because: string,
+  expected = allowed,
+  hint = 'Write the rule with what is allowed.',
+): never {
   throw new NotAllowed({ code, part: partOf(node), because, expected, hint });
 }
 
@@ -53,7 +78,11 @@ function refuseKind(node: ParsedNode): never {
 function checkDepth(node: ParsedNode, depth: number): void {
   if (depth > deepestFormula) {
     throw new NotAllowed({
-      code: 'formula-depth', part: '', because: `it is nested more than ${deepestFormula} deep`, expected: `at most ${deepestFormula} levels`, hint: `Split it into several rules (${node.type}).`.replace(/ \(.*\)/, ''),
+      code: 'formula-depth',
+      part: '',
+      because: `it is nested more than ${deepestFormula} deep`,
+      expected: `at most ${deepestFormula} levels`,
+      hint: `Split it into several rules (${node.type}).`.replace(/ \(.*\)/, ''),
     });
   }
 }
@@ -69,8 +98,17 @@ function nameOf(node: ParsedNode, wanted: 'number' | 'flag'): string {
   const kind = formulaNames.get(name);
   if (kind === undefined) return refuse(node, 'formula-name', `the name "${name}" is not known`, 'a parameter or figure key');
   if (kind !== wanted) {
-    const hint = kind === 'flag' ? 'A flag stands alone: write it without a comparison, or after not.' : 'Compare it: for example with <= and a number.';
-    return refuse(node, 'formula-kind', kind === 'flag' ? `"${name}" is true or false` : `"${name}" is a number`, wanted === 'number' ? 'a number here' : 'a comparison here', hint);
+    const hint =
+      kind === 'flag'
+        ? 'A flag stands alone: write it without a comparison, or after not.'
+        : 'Compare it: for example with <= and a number.';
+    return refuse(
+      node,
+      'formula-kind',
+      kind === 'flag' ? `"${name}" is true or false` : `"${name}" is a number`,
+      wanted === 'number' ? 'a number here' : 'a comparison here',
+      hint,
+    );
   }
   return name;
 }
@@ -78,10 +116,18 @@ function nameOf(node: ParsedNode, wanted: 'number' | 'flag'): string {
 function callOf(node: ParsedNode, depth: number): NumberTree {
   const called = node.fn as ParsedNode | undefined;
   const name = called?.type === 'SymbolNode' ? String(called.name) : '';
-  if (!(callNames as readonly string[]).includes(name)) return refuse(node, 'formula-part', name === '' ? 'a function is not allowed' : `the function "${name}" is not allowed`);
+  if (!(callNames as readonly string[]).includes(name))
+    return refuse(node, 'formula-part', name === '' ? 'a function is not allowed' : `the function "${name}" is not allowed`);
   const args = argsOf(node);
   const one = name === 'abs' || name === 'sqrt';
-  if (one ? args.length !== 1 : args.length < 1) return refuse(node, 'formula-part', `"${name}" has ${args.length} values`, one ? 'one value' : 'at least one value', 'Count the values.');
+  if (one ? args.length !== 1 : args.length < 1)
+    return refuse(
+      node,
+      'formula-part',
+      `"${name}" has ${args.length} values`,
+      one ? 'one value' : 'at least one value',
+      'Count the values.',
+    );
   return { kind: 'call', name: name as CallName, of: args.map((arg) => toNumber(arg, depth + 1)) };
 }
 
@@ -96,13 +142,26 @@ export function toNumber(node: ParsedNode, depth: number): NumberTree {
   }
   if (node.type === 'SymbolNode') return { kind: 'name', name: nameOf(node, 'number') };
   if (node.type === 'FunctionNode') return callOf(node, depth);
-  if (node.type === 'RelationalNode') return refuse(node, 'formula-kind', 'a comparison stands where a number belongs', 'a number', 'Put parentheses where they belong.');
+  if (node.type === 'RelationalNode')
+    return refuse(node, 'formula-kind', 'a comparison stands where a number belongs', 'a number', 'Put parentheses where they belong.');
   if (node.type !== 'OperatorNode') return refuseKind(node);
   const args = argsOf(node);
   const operator = arithmetic.get(String(node.fn));
-  if (node.implicit === true) return refuse(node, 'formula-part', 'a number or name follows another without an operator', allowed, 'Write the * in between, and numbers in the unit of their key, without a unit.');
+  if (node.implicit === true)
+    return refuse(
+      node,
+      'formula-part',
+      'a number or name follows another without an operator',
+      allowed,
+      'Write the * in between, and numbers in the unit of their key, without a unit.',
+    );
   if (operator !== undefined && args.length === 2) {
-    return { kind: 'arithmetic', operator, left: toNumber(args[0] as ParsedNode, depth + 1), right: toNumber(args[1] as ParsedNode, depth + 1) };
+    return {
+      kind: 'arithmetic',
+      operator,
+      left: toNumber(args[0] as ParsedNode, depth + 1),
+      right: toNumber(args[1] as ParsedNode, depth + 1),
+    };
   }
   if (node.fn === 'unaryMinus') return { kind: 'negate', of: toNumber(args[0] as ParsedNode, depth + 1) };
   if (comparisons.has(String(node.fn)) || node.fn === 'and' || node.fn === 'or' || node.fn === 'not') {
@@ -118,7 +177,12 @@ function chainOf(node: ParsedNode, depth: number): Formula {
   const links = (node.conditionals as readonly string[]).map((name, i): Formula => {
     const operator = comparisons.get(name);
     if (operator === undefined) return refuseKind(node);
-    return { kind: 'compare', operator, left: toNumber(params[i] as ParsedNode, depth + 1), right: toNumber(params[i + 1] as ParsedNode, depth + 1) };
+    return {
+      kind: 'compare',
+      operator,
+      left: toNumber(params[i] as ParsedNode, depth + 1),
+      right: toNumber(params[i + 1] as ParsedNode, depth + 1),
+    };
   });
   if (links.length > deepestFormula) checkDepth(node, links.length);
   return links.slice(1).reduce<Formula>((left, right) => ({ kind: 'and', left, right }), links[0] as Formula);
@@ -135,7 +199,12 @@ export function toFormula(node: ParsedNode, depth: number): Formula {
     const args = argsOf(node);
     const operator = comparisons.get(String(node.fn));
     if (operator !== undefined && args.length === 2) {
-      return { kind: 'compare', operator, left: toNumber(args[0] as ParsedNode, depth + 1), right: toNumber(args[1] as ParsedNode, depth + 1) };
+      return {
+        kind: 'compare',
+        operator,
+        left: toNumber(args[0] as ParsedNode, depth + 1),
+        right: toNumber(args[1] as ParsedNode, depth + 1),
+      };
     }
     if (node.fn === 'and' || node.fn === 'or') {
       return { kind: node.fn, left: toFormula(args[0] as ParsedNode, depth + 1), right: toFormula(args[1] as ParsedNode, depth + 1) };
@@ -144,5 +213,11 @@ export function toFormula(node: ParsedNode, depth: number): Formula {
   }
   // What is no number either is refused by its own kind; what is one lacks a comparison.
   toNumber(node, depth);
-  return refuse(node, 'formula-kind', 'a number stands where a comparison belongs', 'a comparison', 'Compare it: for example with <= and a number.');
+  return refuse(
+    node,
+    'formula-kind',
+    'a number stands where a comparison belongs',
+    'a comparison',
+    'Compare it: for example with <= and a number.',
+  );
 }

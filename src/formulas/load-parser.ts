@@ -1,4 +1,4 @@
-import type { ParseExpression, ParsedNode } from './parsed-node.js';
+import type { ParsedNode, ParseExpression } from './parsed-node.js';
 
 /**
  * Loads the expression parser of mathjs, and only that: no functions, no constants, no units come along.
@@ -7,7 +7,7 @@ import type { ParseExpression, ParsedNode } from './parsed-node.js';
  */
 export async function loadParser(): Promise<ParseExpression> {
   const { create, parseDependencies } = await import('mathjs');
-  const { parse } = create(parseDependencies, {});
-  if (parse === undefined) throw new Error('mathjs gave no parser');
-  return (text) => parse(text) as unknown as ParsedNode;
+  const math = parseDependencies === undefined ? null : create(parseDependencies, {});
+  if (math === null) throw new Error('mathjs gave no parser');
+  return (text) => math.parse(text) as unknown as ParsedNode;
 }

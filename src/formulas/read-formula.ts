@@ -9,7 +9,9 @@ export interface FormulaProblem extends Problem {
   readonly expected: string;
 }
 
-export type FormulaReading = { readonly ok: true; readonly value: Formula } | { readonly ok: false; readonly problems: readonly FormulaProblem[] };
+export type FormulaReading =
+  | { readonly ok: true; readonly value: Formula }
+  | { readonly ok: false; readonly problems: readonly FormulaProblem[] };
 
 /** Characters of a formula: 10 kB and more is refused before it is parsed. */
 const longestFormula = 9999;
@@ -22,17 +24,35 @@ function refused(code: string, given: string, expected: string, hint: string): F
 
 /** What can be refused without parsing: length, foreign characters, parentheses too deep for a recursive parser. */
 function refusalBeforeParsing(text: string): FormulaReading | null {
-  if (text.length > longestFormula) return refused('formula-length', `a formula of ${text.length} characters was given`, `at most ${longestFormula}`, 'Split it into several rules.');
-  if (text.trim() === '') return refused('formula-empty', 'an empty formula was given', 'a comparison', 'Write for example voxelSliceMm <= 5.');
+  if (text.length > longestFormula)
+    return refused(
+      'formula-length',
+      `a formula of ${text.length} characters was given`,
+      `at most ${longestFormula}`,
+      'Split it into several rules.',
+    );
+  if (text.trim() === '')
+    return refused('formula-empty', 'an empty formula was given', 'a comparison', 'Write for example voxelSliceMm <= 5.');
   let depth = 0;
   for (let i = 0; i < text.length; i += 1) {
     const character = text[i] as string;
     if (!allowedCharacter.test(character)) {
       const what = /[[\]{}"'`;:?%&|~#@\\=]/.test(character) ? character : shown(character);
-      return refused('formula-character', `"${what}" at character ${i + 1} of the formula is not allowed`, 'letters, digits, blanks and < > = ! + - * / ^ ( ) . ,', 'Take it out.');
+      return refused(
+        'formula-character',
+        `"${what}" at character ${i + 1} of the formula is not allowed`,
+        'letters, digits, blanks and < > = ! + - * / ^ ( ) . ,',
+        'Take it out.',
+      );
     }
     depth += character === '(' ? 1 : character === ')' ? -1 : 0;
-    if (depth > deepestFormula) return refused('formula-depth', `the formula is nested more than ${deepestFormula} deep`, `at most ${deepestFormula} levels`, 'Split it into several rules.');
+    if (depth > deepestFormula)
+      return refused(
+        'formula-depth',
+        `the formula is nested more than ${deepestFormula} deep`,
+        `at most ${deepestFormula} levels`,
+        'Split it into several rules.',
+      );
   }
   return null;
 }
@@ -51,15 +71,22 @@ export function readFormula(text: string, parse: ParseExpression): FormulaReadin
   try {
     node = parse(text);
   } catch (error) {
-    if (error instanceof RangeError) return refused('formula-depth', 'the formula is nested too deep', `at most ${deepestFormula} levels`, 'Split it into several rules.');
+    if (error instanceof RangeError)
+      return refused('formula-depth', 'the formula is nested too deep', `at most ${deepestFormula} levels`, 'Split it into several rules.');
     const place = (error as { char?: unknown }).char;
     const where = typeof place === 'number' ? ` at character ${place}` : '';
-    return refused('formula-syntax', `the formula cannot be read${where}: "${shown(text)}"`, 'a comparison such as voxelSliceMm <= 5', 'Check operators and parentheses.');
+    return refused(
+      'formula-syntax',
+      `the formula cannot be read${where}: "${shown(text)}"`,
+      'a comparison such as voxelSliceMm <= 5',
+      'Check operators and parentheses.',
+    );
   }
   try {
     return { ok: true, value: toFormula(node, 1) };
   } catch (error) {
-    if (error instanceof RangeError) return refused('formula-depth', 'the formula is nested too deep', `at most ${deepestFormula} levels`, 'Split it into several rules.');
+    if (error instanceof RangeError)
+      return refused('formula-depth', 'the formula is nested too deep', `at most ${deepestFormula} levels`, 'Split it into several rules.');
     if (!(error instanceof NotAllowed)) throw error;
     const { code, part, because, expected, hint } = error.refusal;
     const at = part === '' ? -1 : text.indexOf(part);

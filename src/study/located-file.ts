@@ -62,7 +62,11 @@ function pathInWords(root: JsonNode | null, path: JsonPath): string {
       node = node.items[step as number];
       const id: JsonNode | undefined = node?.kind === 'object' ? node.entries.findLast((entry) => entry.key === 'id')?.value : undefined;
       const isSeries = words.length === 1 && words[0] === 'series';
-      words.push(isSeries && id?.kind === 'plain' && typeof id.value === 'string' && id.value !== '' ? cleanText(id.value, 40) : String((step as number) + 1));
+      words.push(
+        isSeries && id?.kind === 'plain' && typeof id.value === 'string' && id.value !== ''
+          ? cleanText(id.value, 40)
+          : String((step as number) + 1),
+      );
     } else {
       node = node?.kind === 'object' ? node.entries.findLast((entry) => entry.key === step)?.value : undefined;
       words.push(cleanText(String(step), 40));

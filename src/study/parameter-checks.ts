@@ -32,7 +32,12 @@ export function parameterClashes(given: GivenParameters): Clash[] {
     }
     const twice = diffusion.bValuesSPerMm2.find((b, i) => diffusion.bValuesSPerMm2.indexOf(b) !== i);
     if (twice !== undefined) {
-      clashes.push({ path: ['diffusion', 'bValuesSPerMm2'], given: `b ${twice} stands there twice`, expected: 'each b-value once', hint: 'Add its averages up.' });
+      clashes.push({
+        path: ['diffusion', 'bValuesSPerMm2'],
+        given: `b ${twice} stands there twice`,
+        expected: 'each b-value once',
+        hint: 'Add its averages up.',
+      });
     }
   }
   if (pacing?.windowMs !== undefined && pacing.periodMs !== undefined && pacing.windowMs > pacing.periodMs) {

@@ -39,4 +39,3 @@ export interface PresetFile {
   readonly minimumSet?: readonly (string | readonly string[])[];
   readonly series: readonly SeriesFile[];
 }
-

@@ -59,7 +59,8 @@ export function readJson(text: string, deepest: number): JsonReading {
     at += 1;
     for (;;) {
       const unit = text.charCodeAt(at);
-      if (at >= text.length || unit === 10 || unit === 13) stop('not-json', start, 'a text without an end', 'a closing quote on the same line');
+      if (at >= text.length || unit === 10 || unit === 13)
+        stop('not-json', start, 'a text without an end', 'a closing quote on the same line');
       if (unit < 32) stop('not-json', at, 'a control character inside a text', 'plain characters');
       if (unit === 34) break;
       if (unit === 92) {

@@ -2,8 +2,8 @@ import { type SchemaError, validate } from '../../build/validate-preset.js';
 import type { Outcome, Problem } from '../calc/problem.js';
 import type { ParseExpression } from '../formulas/parsed-node.js';
 import { cleanText } from './clean-text.js';
-import { type LocatedFile, lineOf, locateIn, type PlacedProblem } from './located-file.js';
 import { presetLimits } from './limits.js';
+import { type LocatedFile, lineOf, locateIn, type PlacedProblem } from './located-file.js';
 import { presetProblems } from './preset-checks.js';
 import type { PresetFile } from './preset-file.js';
 import { type JsonNode, jsonValue, readJson } from './read-json.js';
@@ -32,7 +32,7 @@ function refusal(text: string, fileName: string): Problem | null {
     const message = `${name}: more than ${presetLimits.bytes / 1e6} MB were given; expected a preset of at most ${presetLimits.bytes / 1e6} MB.`;
     return { code: 'too-large', path: '', message, hint: 'A preset is one study: check that this is the right file.' };
   }
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what it looks for
+  // oxlint-disable-next-line no-control-regex
   const binary = text.search(/[\u0000-\u0008\u000e-\u001f\uFFFD]/);
   if (binary === -1) return null;
   const message = `${name}, line ${lineOf(text, binary)}: bytes that are no text were given; expected a JSON file in UTF-8.`;
@@ -51,12 +51,16 @@ function duplicateKeys(node: JsonNode, file: LocatedFile, text: string, path: re
       first.set(entry.key, entry.keyOffset);
       return inner;
     }
-    const placed = file.problem([...path, entry.key], {
-      code: 'duplicate-key',
-      given: `the key "${cleanText(entry.key, 40)}" stands there twice, first on line ${lineOf(text, before)}`,
-      expected: 'each key once',
-      hint: 'Take one of them out.',
-    }, 'key');
+    const placed = file.problem(
+      [...path, entry.key],
+      {
+        code: 'duplicate-key',
+        given: `the key "${cleanText(entry.key, 40)}" stands there twice, first on line ${lineOf(text, before)}`,
+        expected: 'each key once',
+        hint: 'Take one of them out.',
+      },
+      'key',
+    );
     return [placed, ...inner];
   });
 }
@@ -69,7 +73,10 @@ function refused(problems: readonly PlacedProblem[]): { ok: false; problems: Pro
     .map(({ code, path, message, hint }) => ({ code, path, message, hint }));
   if (sorted.length <= mostProblems) return { ok: false, problems: sorted };
   const more = `and ${sorted.length - mostProblems} more problems.`;
-  return { ok: false, problems: [...sorted.slice(0, mostProblems), { code: 'more-problems', path: '', message: more, hint: 'Mend these first.' }] };
+  return {
+    ok: false,
+    problems: [...sorted.slice(0, mostProblems), { code: 'more-problems', path: '', message: more, hint: 'Mend these first.' }],
+  };
 }
 
 /**
@@ -87,8 +94,15 @@ export function readPreset(text: string, fileName: string, parse?: ParseExpressi
   const json = readJson(text, presetLimits.nesting);
   if (!json.ok) {
     const { code, offset, given, expected } = json.fault;
-    const hint = code === 'not-finite' ? 'Write a plain number.' : code === 'too-deep' ? 'A preset has few levels: check that this is the right file.' : 'Mend the JSON at this line; it allows no comments and no trailing commas.';
-    return refused([locateIn(fileName, text, null).problemAt(offset, '', { code, given: `${cleanText(given, 60)} was found`, expected, hint })]);
+    const hint =
+      code === 'not-finite'
+        ? 'Write a plain number.'
+        : code === 'too-deep'
+          ? 'A preset has few levels: check that this is the right file.'
+          : 'Mend the JSON at this line; it allows no comments and no trailing commas.';
+    return refused([
+      locateIn(fileName, text, null).problemAt(offset, '', { code, given: `${cleanText(given, 60)} was found`, expected, hint }),
+    ]);
   }
   const file = locateIn(fileName, text, json.root);
   const value = jsonValue(json.root);
@@ -101,6 +115,14 @@ export function readPreset(text: string, fileName: string, parse?: ParseExpressi
   const preset = value as PresetFile;
   const deeper = presetProblems(preset, file, parse);
   if (twice.length + deeper.length > 0) return refused([...twice, ...deeper]);
-  if (!valid) return refused([file.problem([], { code: 'wrong-form', given: 'the file does not follow the schema', expected: 'schema/preset.schema.json to hold', hint: 'Compare the two.' })]);
+  if (!valid)
+    return refused([
+      file.problem([], {
+        code: 'wrong-form',
+        given: 'the file does not follow the schema',
+        expected: 'schema/preset.schema.json to hold',
+        hint: 'Compare the two.',
+      }),
+    ]);
   return { ok: true, value: studyOfFile(preset) };
 }

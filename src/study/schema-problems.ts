@@ -17,16 +17,19 @@ const listed = (items: readonly unknown[]) => (items.length > 12 ? `one of the $
 
 /** What a schema of a single value asks for, in words. */
 function expectedValue(schema: Record<string, unknown>): string {
-  if (Array.isArray(schema.enum)) return schema.enum.length > 1 && schema.enum.length <= 12 ? `one of ${listed(schema.enum)}` : listed(schema.enum);
+  if (Array.isArray(schema.enum))
+    return schema.enum.length > 1 && schema.enum.length <= 12 ? `one of ${listed(schema.enum)}` : listed(schema.enum);
   if (schema.const !== undefined) return shownValue(schema.const);
   const types = [schema.type].flat();
   if (types.includes('number') && types.length > 1) return 'numbers, words, true or false';
   const number = types.includes('integer') ? 'a whole number' : types.includes('number') ? 'a number' : null;
   if (number !== null) {
-    const low = schema.exclusiveMinimum === undefined ? schema.minimum : schema.exclusiveMinimum;
-    const more = schema.exclusiveMinimum === undefined ? '' : 'more than ';
+    const above = schema.exclusiveMinimum as number | undefined;
+    const low = above ?? (schema.minimum as number | undefined);
+    const high = schema.maximum as number | undefined;
     if (low === undefined) return number;
-    return schema.maximum === undefined ? `${number} of ${more === '' ? 'at least ' : more}${low}` : `${number} from ${more}${low} to ${schema.maximum}`;
+    if (high === undefined) return `${number} of ${above === undefined ? 'at least' : 'more than'} ${low}`;
+    return `${number} from ${above === undefined ? '' : 'more than '}${low} to ${high}`;
   }
   const words: Readonly<Record<string, string>> = { string: 'a text', boolean: 'true or false', array: 'a list', object: 'an object' };
   return types.map((type) => words[String(type)] ?? String(type)).join(' or ');
@@ -39,13 +42,23 @@ function unknownKey(key: string, known: readonly string[]): Finding {
     code: 'unknown-key',
     given: `the key "${cleanText(key, 40)}" is not known here`,
     expected: near === null ? `one of ${known.length > 12 ? 'the keys that the schema lists' : known.join(', ')}` : `"${near}"`,
-    hint: near !== null ? `Did you mean "${near}"?` : elsewhere ? 'It belongs inside "parameters".' : 'Take the key out, or look it up in schema/preset.schema.json.',
+    hint:
+      near !== null
+        ? `Did you mean "${near}"?`
+        : elsewhere
+          ? 'It belongs inside "parameters".'
+          : 'Take the key out, or look it up in schema/preset.schema.json.',
   };
 }
 
 function wrongWord(value: unknown, known: readonly unknown[], expected: string): Finding {
-  const near = typeof value === 'string' ? nearestWord(value, known.map(String)) : null;
-  return { code: 'unknown-word', given: `${shownValue(value)} was given`, expected, hint: near === null ? 'Use one of the known names, spelt as in the schema.' : `Did you mean "${near}"?` };
+  const near = known.length > 1 && typeof value === 'string' ? nearestWord(value, known.map(String)) : null;
+  return {
+    code: 'unknown-word',
+    given: `${shownValue(value)} was given`,
+    expected,
+    hint: near === null ? 'Use one of the known names, spelt as in the schema.' : `Did you mean "${near}"?`,
+  };
 }
 
 function outOfBounds(error: SchemaError): Finding {
@@ -58,7 +71,12 @@ function lengthFinding(error: SchemaError): Finding {
   const of = Array.isArray(error.data) ? 'items' : 'characters';
   const count = Array.isArray(error.data) ? error.data.length : [...String(error.data)].length;
   const most = error.keyword.startsWith('max');
-  return { code: 'wrong-length', given: `${count} ${of} were given`, expected: `${most ? 'at most' : 'at least'} ${limit}`, hint: most ? 'Make it shorter.' : 'Fill it in.' };
+  return {
+    code: 'wrong-length',
+    given: `${count} ${of} were given`,
+    expected: `${most ? 'at most' : 'at least'} ${limit}`,
+    hint: most ? 'Make it shorter.' : 'Fill it in.',
+  };
 }
 
 /** One finding for one complaint of the compiled schema; null for the umbrella complaints that others explain better. */
@@ -69,9 +87,9 @@ function findingOf(error: SchemaError): Finding | null {
     case 'required':
       return {
         code: 'missing-key',
-        given: `the key "${error.params.missingProperty}" is missing`,
+        given: `the key "${String(error.params.missingProperty)}" is missing`,
         expected: 'it to be there',
-        hint: `Add "${error.params.missingProperty}".`,
+        hint: `Add "${String(error.params.missingProperty)}".`,
       };
     case 'enum':
       return error.propertyName === undefined
@@ -80,7 +98,12 @@ function findingOf(error: SchemaError): Finding | null {
     case 'const':
       return wrongWord(error.data, [error.schema], shownValue(error.schema));
     case 'type':
-      return { code: 'wrong-type', given: `${shownValue(error.data)} was given`, expected: expectedValue(error.parentSchema), hint: 'Change the value to that kind.' };
+      return {
+        code: 'wrong-type',
+        given: `${shownValue(error.data)} was given`,
+        expected: expectedValue(error.parentSchema),
+        hint: 'Change the value to that kind.',
+      };
     case 'minimum':
     case 'maximum':
     case 'exclusiveMinimum':

@@ -3,9 +3,7 @@ import type { ParameterKey } from '../calc/parameters.js';
 import type { Series } from '../calc/series.js';
 
 /** Values a parameter may take in a search: an evenly stepped stretch, or a list. */
-export type Range =
-  | { readonly min: number; readonly max: number; readonly step: number }
-  | readonly (number | string | boolean)[];
+export type Range = { readonly min: number; readonly max: number; readonly step: number } | readonly (number | string | boolean)[];
 
 /**
  * One thing the site or a published source asks to keep: limits on a figure or a parameter, or a rule in words of the tables.

@@ -1,4 +1,4 @@
-import { parameterKeys, parameterRow, type ParameterKey } from '../calc/parameters.js';
+import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
 import { classOf, fillDefaults, type GivenParameters, type Parameters } from '../calc/series.js';
 import { requiredParameters } from './required-keys.js';
 import type { MustKeep, Study, StudySeries } from './study.js';
@@ -76,11 +76,15 @@ const lineLength = 180;
 function laidOut(value: unknown, indent: string, open: boolean): string {
   if (typeof value !== 'object' || value === null) return JSON.stringify(value);
   const inner = Object.values(value);
-  const flat = !open && inner.every((item) => typeof item !== 'object' || item === null || (Array.isArray(item) && item.every((x) => typeof x !== 'object')));
+  const flat =
+    !open &&
+    inner.every((item) => typeof item !== 'object' || item === null || (Array.isArray(item) && item.every((x) => typeof x !== 'object')));
   if (flat) {
     const line = Array.isArray(value)
       ? `[${inner.map((item) => JSON.stringify(item)).join(', ')}]`
-      : `{ ${Object.entries(value).map(([key, item]) => `${JSON.stringify(key)}: ${laidOut(item, '', false)}`).join(', ')} }`;
+      : `{ ${Object.entries(value)
+          .map(([key, item]) => `${JSON.stringify(key)}: ${laidOut(item, '', false)}`)
+          .join(', ')} }`;
     if (line.length <= lineLength || inner.length === 0) return inner.length === 0 ? (Array.isArray(value) ? '[]' : '{}') : line;
   }
   const deeper = `${indent}  `;

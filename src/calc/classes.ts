@@ -174,7 +174,9 @@ export function classKeyOf(family: string, acquisition: string): ClassKey | null
 export const figureNeeds: Readonly<Partial<Record<FigureKey, string>>> = {
   holdTimeS: 'the series is not acquired in breath-holds',
   holds: 'the series is not acquired in breath-holds',
-  nullTimeMs: 'the series has no inversion time',
+  slicesPerRepetition: 'a gated cine takes one slice at a time',
+  roundsNeeded: 'a gated cine takes one slice at a time, or not one slice fits in TR',
+  nullTimeMs: 'the series has no inversion time, or the tissue is never nulled by one',
   temporalResolutionMs: 'the series is not a gated cine',
   cardiacPhases: 'the series is not a gated cine',
   relativeSnr: 'the target has no value, the acceleration is beyond the coil table, or the timing is impossible',

@@ -1,0 +1,63 @@
+import type { Baseline } from '../baseline.js';
+import type { Body } from '../body.js';
+import type { Caution } from '../caution.js';
+import type { SeriesModel } from '../model.js';
+import { atMost, below } from '../rounding.js';
+import { inWords } from './number-words.js';
+
+/** Extent of the body along the phase direction, mm: as typed, or the visible length of the scanner head-feet; null when not known. */
+function bodyAlongPhaseMm(model: SeriesModel, body: Body): number | null {
+  const direction = model.series.parameters.phaseDirection;
+  if (direction === 'HF') return model.scanner.visibleLengthMm;
+  return direction === 'AP' ? body.frontBackMm : body.leftRightMm;
+}
+
+/** True where phase encoding follows no body axis, so that no typed extent lies along it. */
+function isOblique(plane: string): boolean {
+  return plane.includes('oblique') || plane.includes('axis');
+}
+
+/**
+ * Wrap along the phase direction, body centred. At R 1 the fold reaches the kept field when the encoded extent is under
+ * (body + kept) / 2; at R > 1 unfolding fails when it is under the body (geometry; common practice).
+ * Head-feet a saturation band on that side excuses it.
+ */
+export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline, add: (caution: Caution) => void): void {
+  const p = model.series.parameters;
+  if (model.key === 'rotating-strip-fast-spin-echo/2D') return;
+  if (isOblique(model.series.plane)) {
+    if (body.frontBackMm !== null || body.leftRightMm !== null) {
+      add({ code: 'wrap-not-checked', level: 'note', text: `wrap not checked: ${model.series.plane} plane, no body extent lies along phase`, numbers: {} });
+    }
+    return;
+  }
+  const bodyMm = bodyAlongPhaseMm(model, body);
+  if (bodyMm === null) return;
+  const headFeet = p.phaseDirection === 'HF';
+  if (headFeet && p.saturationBands > 0) return;
+  const encoded = model.geometry.encodedPhaseExtentMm;
+  const kept = model.geometry.phaseExtentMm;
+  const numbers = { encodedMm: encoded, keptMm: kept, bodyMm };
+  const what = headFeet ? 'visible length' : 'body';
+  if (p.parallelFactorPhase > 1) {
+    if (atMost(bodyMm, encoded)) return;
+    // Head-feet the visible length is a property of the magnet, not this body: what the preset already does is a caution, an edit that causes it an error.
+    const before = baseline.model;
+    const asPreset = headFeet && before.series.parameters.phaseDirection === 'HF' && atMost(before.geometry.encodedPhaseExtentMm, encoded) && before.series.parameters.parallelFactorPhase > 1;
+    add({
+      code: 'wrap-unfoldable',
+      level: asPreset ? 'caution' : 'error',
+      text: `${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded: acceleration cannot unfold the rest (body taken as centred)`,
+      numbers,
+    });
+    return;
+  }
+  if (below(encoded, (bodyMm + kept) / 2)) {
+    add({
+      code: 'wrap',
+      level: 'caution',
+      text: `wrap reaches the picture: ${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded, ${inWords((bodyMm + kept) / 2, 0)} mm needed (body taken as centred)`,
+      numbers: { ...numbers, neededMm: (bodyMm + kept) / 2 },
+    });
+  }
+}

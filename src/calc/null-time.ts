@@ -1,0 +1,56 @@
+import { classRow } from './classes.js';
+import type { FatSuppression, Series } from './series.js';
+import { inversionPreparedTimingOf, type SignalSetting, spinEchoTimingOf, trainTimingOf } from './signal/class-signal.js';
+import { trainEnd, trainLongitudinal } from './signal/echo-train-signal.js';
+import { inversionPreparedSignal } from './signal/inversion-prepared.js';
+import { spinEchoLongitudinal } from './signal/spin-echo.js';
+import { fatTissue, fluidTissue, type Tissue } from './tissues.js';
+
+/** The tissue whose null a series is about: its own choice, else fat with inversion fat suppression, else fluid with an inversion time, else none. */
+export function nullTissueOf(series: Pick<Series, 'nullTissue'>, fatSuppression: FatSuppression, inversionTimeMs: number | undefined): string | null {
+  if (inversionTimeMs === undefined) return null;
+  return series.nullTissue ?? (fatSuppression === 'inversion' ? fatTissue : fluidTissue);
+}
+
+/**
+ * The textbook null of a fully spoiled inversion recovery, `T1 ln(2 / (1 + e^(-TR/T1)))`, ms (Haacke et al., Magnetic Resonance Imaging, 1999).
+ *
+ * @example simpleNullMs(4300, 9000) //=> 2480.5
+ */
+export function simpleNullMs(t1Ms: number, repetitionTimeMs: number): number {
+  return t1Ms * Math.log(2 / (1 + Math.exp(-repetitionTimeMs / t1Ms)));
+}
+
+/** Root of a function that rises with TI through zero between two times, or null where it has none. */
+function rootMs(signalAt: (inversionTimeMs: number) => number, lowMs: number, highMs: number): number | null {
+  if (!(highMs > lowMs) || signalAt(lowMs) > 0 || signalAt(highMs) < 0) return null;
+  let low = lowMs;
+  let high = highMs;
+  for (let i = 0; i < 50; i += 1) {
+    const middle = (low + high) / 2;
+    if (signalAt(middle) < 0) low = middle;
+    else high = middle;
+  }
+  return (low + high) / 2;
+}
+
+/** Inversion time in ms at which the class's own signal equation gives zero for this tissue, or null where it never does. */
+export function nullTimeMs(setting: SignalSetting, tissue: Tissue): number | null {
+  const { key } = setting;
+  const row = classRow(key);
+  if (key === 'inversion-prepared-gradient-echo/3D') {
+    const timing = inversionPreparedTimingOf(setting);
+    const lead = timing.centre * timing.echoSpacingMs;
+    const longest = timing.repetitionTimeMs - (timing.readouts - timing.centre) * timing.echoSpacingMs;
+    return rootMs((ti) => inversionPreparedSignal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), lead, longest);
+  }
+  if (row.train) {
+    const timing = trainTimingOf(setting);
+    const end = timing.fromEquilibrium ? { z0: 0, gain: 0 } : trainEnd(timing, tissue.t1Ms, tissue.t2Ms);
+    const longest = timing.fromEquilibrium ? 20 * tissue.t1Ms : timing.repetitionTimeMs - timing.echoTrainLength * timing.echoSpacingMs;
+    return rootMs((ti) => trainLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms, end), 0, longest);
+  }
+  const timing = spinEchoTimingOf(setting);
+  const longest = timing.fromEquilibrium ? 20 * tissue.t1Ms : timing.repetitionTimeMs - Math.max(timing.echoTimeMs, timing.secondEchoTimeMs ?? 0);
+  return rootMs((ti) => spinEchoLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), 0, longest);
+}

@@ -47,11 +47,10 @@ function pushCells(cells: Cell[], text: string, style: Style, columns: number): 
     }
     const width = ascii ? 1 : Math.min(2, textWidth(character));
     if (width === 0) continue;
-    const shown = /\p{Surrogate}/u.test(character) ? '?' : character;
     if (width === 1) {
-      cells.push({ text: shown, width: 1, style });
+      cells.push({ text: character, width: 1, style });
     } else if (cells.length + 2 <= columns) {
-      cells.push({ text: shown, width: 2, style }, { text: '', width: 0, style });
+      cells.push({ text: character, width: 2, style }, { text: '', width: 0, style });
     } else {
       cells.push(blank);
     }
@@ -69,7 +68,7 @@ function readRow(source: string, styleBefore: Style, columns: number): Row {
     if (match[2] !== 'm') continue;
     const parameters = match[1] ?? '';
     style = styleAfter(style, parameters);
-    if (cursor === null && cells.length < columns && parameters.split(';').includes(String(cursorMarkCode))) cursor = cells.length;
+    if (cursor === null && cells.length < columns && parameters === String(cursorMarkCode)) cursor = cells.length;
   }
   pushCells(cells, source.slice(from), style, columns);
   while (cells.length < columns) cells.push(blank);

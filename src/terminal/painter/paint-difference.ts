@@ -1,6 +1,6 @@
 import { isSureWidth } from '../text-width.js';
 import { blank, type Cell, type Grid } from './frame-grid.js';
-import type { Style } from './sgr.js';
+import { blankIsPlain, type Style } from './sgr.js';
 
 /** Unchanged cells between two changed ones are written again if that is shorter than moving the cursor over them. */
 const longestBridge = 4;
@@ -17,7 +17,8 @@ class Pen {
 
   put(x: number, y: number, cell: Cell): void {
     this.#moveTo(x, y);
-    this.#wear(cell.style);
+    // A blank shows nothing of a text colour: it is written in whatever style is on, if that has no background.
+    if (!isPlainBlank(cell) || !blankIsPlain(this.#style)) this.#wear(cell.style);
     this.#text += cell.text;
     // Behind a character on whose width terminals disagree, nobody knows where the cursor is.
     this.#x = isSureWidth(cell.text) ? x + cell.width : -1;
@@ -25,7 +26,7 @@ class Pen {
 
   eraseToEndOfLine(x: number, y: number): void {
     this.#moveTo(x, y);
-    this.#wear('');
+    if (!blankIsPlain(this.#style)) this.#wear('');
     this.#text += '\u001b[K';
   }
 
@@ -43,7 +44,8 @@ class Pen {
 
   #wear(style: Style): void {
     if (style === this.#style) return;
-    this.#text += style === '' ? '\u001b[m' : `\u001b[0;${style}m`;
+    // From another style, everything is turned off first: how to turn off one thing is not the same everywhere.
+    this.#text += `\u001b[${this.#style === '' || style === '' ? style : `0;${style}`}m`;
     this.#style = style;
   }
 }
@@ -60,7 +62,7 @@ function bridges(before: readonly Cell[], after: readonly Cell[], x: number, sty
   for (let next = x; next <= x + longestBridge && next < after.length; next++) {
     const cell = after[next] as Cell;
     if (!same(before[next], cell)) return next > x;
-    if (cell.width !== 1 || cell.style !== style) return false;
+    if (cell.width !== 1 || (cell.style !== style && !(isPlainBlank(cell) && blankIsPlain(style)))) return false;
   }
   return false;
 }
@@ -84,7 +86,7 @@ function paintRow(pen: Pen, before: readonly Cell[], after: readonly Cell[], y: 
     }
     if (cell.width > 0) pen.put(x, y, cell);
     overlapped = mayOverlap(cell) || mayOverlap(before[x]);
-    last = { x, style: cell.style };
+    last = { x, style: isPlainBlank(cell) && last !== null && blankIsPlain(last.style) ? last.style : cell.style };
   }
 }
 

@@ -30,7 +30,7 @@ export interface Painter {
   readonly answered: () => void;
   /** True while an answer is outstanding, which would end up in the shell if nobody took it. */
   readonly awaitsAnswer: () => boolean;
-  /** The terminal is ours, its screen unknown: draws the latest frame from nothing. */
+  /** The terminal is ours, its screen unknown: draws the latest frame from nothing, before it returns. */
   readonly start: () => void;
   /** Nothing is written from now on; frames are remembered. */
   readonly pause: () => void;
@@ -114,7 +114,8 @@ class CellPainter implements Painter {
     this.#dirty = true;
     this.#unanswered = 0;
     if (this.#pacing === 'asking') this.#pacing = 'unknown';
-    this.#schedule();
+    // At once, not when the work at hand is done: that work may be loading everything else.
+    this.#paint();
   };
 
   pause = (): void => {

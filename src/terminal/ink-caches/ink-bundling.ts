@@ -1,0 +1,52 @@
+/**
+ * What the build script needs to bundle ink:
+ *
+ *     import { inkDefines, replaceInkCaches } from '../src/terminal/ink-caches/ink-bundling.js';
+ *     await esbuild.build({ ..., define: inkDefines, plugins: [replaceInkCaches()] });
+ *
+ * Ink remembers every text it has measured or wrapped and never forgets one: over 40,000 keys the heap doubles. The plugin puts
+ * `measure-text.ts` and `wrap-text.ts` of this folder in the place of ink's files, which do the same and forget. It fails the build
+ * when ink's files are not where they were, instead of leaving the unbounded ones in silently. It also leaves out ink's connection to
+ * development tools, whose package is not installed.
+ */
+import { fileURLToPath } from 'node:url';
+import type { Plugin } from 'esbuild';
+
+/** Production React, which does not keep what it drew, and ink that never looks for development tools. */
+export const inkDefines: Record<string, string> = { 'process.env.NODE_ENV': '"production"', 'process.env.DEV': '"false"' };
+
+const replacements: ReadonlyMap<string, string> = new Map([
+  ['measure-text', 'measureText'],
+  ['wrap-text', 'wrapText'],
+]);
+
+/** The esbuild plugin; see the head of this file. */
+export function replaceInkCaches(): Plugin {
+  return {
+    name: 'replace-ink-caches',
+    setup(build) {
+      const replaced = new Set<string>();
+      let inkSeen = false;
+      build.onResolve({ filter: /^\.\.?\/(?:.*\/)?(?:measure-text|wrap-text)\.js$/ }, ({ path, importer }) => {
+        const name = /([a-z-]+)\.js$/.exec(path)?.[1] ?? '';
+        if (!/[\\/]ink[\\/]build[\\/]/.test(importer)) return undefined;
+        replaced.add(name);
+        return { path: name, namespace: 'ink-cache' };
+      });
+      // Ink imports the default export; ours is named, as everywhere in this project.
+      build.onLoad({ filter: /.*/, namespace: 'ink-cache' }, ({ path }) => ({
+        contents: `export { ${replacements.get(path)} as default } from './${path}.js';`,
+        resolveDir: fileURLToPath(new URL('.', import.meta.url)),
+      }));
+      build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]devtools\.js$/ }, () => ({ contents: '' }));
+      build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]ink\.js$/ }, () => {
+        inkSeen = true;
+        return undefined;
+      });
+      build.onEnd(() => {
+        const missing = inkSeen ? [...replacements.keys()].filter((name) => !replaced.has(name)) : [];
+        return { errors: missing.map((name) => ({ text: `ink's ${name}.js was not found: its cache would stay unbounded` })) };
+      });
+    },
+  };
+}

@@ -1,0 +1,100 @@
+import { mkdtempSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { build } from 'esbuild';
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { boundedCache } from '../../../src/terminal/ink-caches/bounded-cache.js';
+import { inkDefines, replaceInkCaches } from '../../../src/terminal/ink-caches/ink-bundling.js';
+import { measureText } from '../../../src/terminal/ink-caches/measure-text.js';
+import { type TextWrap, wrapText } from '../../../src/terminal/ink-caches/wrap-text.js';
+
+const inkFile = async (name: string) => ((await import(new URL(`../../../node_modules/ink/build/${name}.js`, import.meta.url).href)) as { default: unknown }).default;
+
+const text = fc.array(fc.oneof(fc.string({ maxLength: 8 }), fc.constantFrom('\n', ' ', '\u6f22\u5b57', '\u001b[31m', '\u001b[39m', 'e\u0301')), { maxLength: 8 }).map((parts) => parts.join(''));
+
+describe('boundedCache', () => {
+  it('remembers the latest and what was asked for, and forgets the rest', () => {
+    const cache = boundedCache<number>(2);
+    for (let key = 0; key < 3; key++) cache.set(String(key), key);
+    expect(cache.get('0')).toBe(0);
+    for (let key = 3; key < 100; key++) {
+      cache.set(String(key), key);
+      expect(cache.get('0')).toBe(0);
+    }
+    expect(cache.get('99')).toBe(99);
+    expect(cache.get('50')).toBeUndefined();
+  });
+
+  it('never holds more than twice its size', () => {
+    const cache = boundedCache<number>(10);
+    for (let key = 0; key < 1000; key++) cache.set(String(key), key);
+    const kept = Array.from({ length: 1000 }, (_, key) => cache.get(String(key))).filter((value) => value !== undefined);
+    expect(kept.length).toBeLessThanOrEqual(20);
+  });
+});
+
+describe('the replacements', () => {
+  it('measure as ink does', async () => {
+    const inkMeasure = (await inkFile('measure-text')) as typeof measureText;
+    fc.assert(fc.property(text, (value) => expect(measureText(value)).toEqual(inkMeasure(value))));
+  });
+
+  it('wrap and cut as ink does', async () => {
+    const inkWrap = (await inkFile('wrap-text')) as typeof wrapText;
+    const wrap = fc.constantFrom<TextWrap>('wrap', 'end', 'middle', 'truncate', 'truncate-end', 'truncate-middle', 'truncate-start');
+    fc.assert(
+      fc.property(text, fc.integer({ min: 1, max: 20 }), wrap, (value, width, type) => {
+        expect(wrapText(value, width, type)).toBe(inkWrap(value, width, type));
+        expect(wrapText(value, width, type)).toBe(inkWrap(value, width, type));
+      }),
+    );
+  });
+});
+
+describe('bundling', () => {
+  const bundle = async (contents: string, resolveDir = process.cwd()) => {
+    const outfile = join(mkdtempSync(join(tmpdir(), 'holdfast-bundle-')), 'out.mjs');
+    const result = await build({
+      stdin: { contents, resolveDir },
+      outfile,
+      bundle: true,
+      write: false,
+      metafile: true,
+      platform: 'node',
+      format: 'esm',
+      define: inkDefines,
+      plugins: [replaceInkCaches()],
+      logLevel: 'silent',
+    });
+    return Object.keys(result.metafile.inputs).map((input) => input.replaceAll('\\', '/'));
+  };
+
+  it("leaves ink's two files out and puts ours in", async () => {
+    const inputs = await bundle("export { render } from 'ink';");
+    expect(inputs.some((input) => input.endsWith('ink/build/dom.js'))).toBe(true);
+    expect(inputs.filter((input) => /ink\/build\/(measure-text|wrap-text)\.js$/.test(input))).toEqual([]);
+    expect(inputs.filter((input) => input.startsWith('src/terminal/ink-caches/')).map((input) => input.split('/').at(-1)).sort()).toEqual([
+      'bounded-cache.ts',
+      'measure-text.ts',
+      'wrap-text.ts',
+    ]);
+    expect(inputs.filter((input) => input.includes('react-devtools-core'))).toEqual([]);
+  });
+
+  it('fails if ink has moved them', async () => {
+    const folder = join(mkdtempSync(join(tmpdir(), 'holdfast-bundle-')), 'node_modules/ink/build');
+    const { mkdirSync } = await import('node:fs');
+    mkdirSync(folder, { recursive: true });
+    writeFileSync(join(folder, 'ink.js'), "import './dom.js'; export const render = 1;");
+    writeFileSync(join(folder, 'dom.js'), "import './wrap-text.js';");
+    await expect(bundle("export * from './ink.js';", folder)).rejects.toThrow(/measure-text/);
+  });
+
+  it('leaves files of the same name elsewhere alone', async () => {
+    const folder = mkdtempSync(join(tmpdir(), 'holdfast-bundle-'));
+    writeFileSync(join(folder, 'wrap-text.js'), 'export const mine = 1;');
+    const inputs = await bundle("export { mine } from './wrap-text.js';", folder);
+    expect(inputs.some((input) => input.endsWith('/wrap-text.js'))).toBe(true);
+  });
+});

@@ -7,7 +7,7 @@ export default defineConfig({
     projects: [
       {
         test: {
-          name: 'rooms',
+          name: 'unit',
           include: ['tests/**/*.test.{ts,tsx}'],
           exclude: ['tests/e2e/**'],
           isolate: false,

@@ -8,27 +8,28 @@ import { existsSync } from 'node:fs';
 import { chmod, mkdir, rename, rm } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
 import { type BuildOptions, build, type Plugin } from 'esbuild';
+import { inkDefines, replaceInkCaches } from '../src/terminal/ink-caches/ink-bundling.js';
 
 const root = fileURLToPath(new URL('../', import.meta.url));
 
-/** The browser development tools that ink offers under DEV=true are a package of their own and no part of this program. */
-const withoutDevelopmentTools: Plugin = {
-  name: 'without-development-tools',
+/**
+ * Bundles the expression parser first and apart: what is imported late inside one file is not shaken free of what it does not use,
+ * and mathjs whole is several times the parser.
+ */
+const parserAlone: Plugin = {
+  name: 'parser-alone',
   setup(building) {
-    building.onResolve({ filter: /^\.\/devtools\.js$/ }, (wanted) =>
-      wanted.importer.includes('/ink/build/') ? { path: wanted.path, namespace: 'nothing' } : null,
-    );
-    building.onLoad({ filter: /.*/, namespace: 'nothing' }, () => ({ contents: 'export {};' }));
-  },
-};
-
-/** Ink's text caches never shrink: bounded ones take their place where the terminal room has them. */
-const boundedTextCaches: Plugin = {
-  name: 'bounded-text-caches',
-  setup(building) {
-    building.onResolve({ filter: /^\.\/(measure-text|wrap-text)\.js$/ }, (wanted) => {
-      const own = `${root}src/terminal/ink-caches/${wanted.path.slice(2, -3)}.ts`;
-      return wanted.importer.includes('/ink/build/') && existsSync(own) ? { path: own } : null;
+    building.onLoad({ filter: /[\\/]formulas[\\/]expression-parser\.ts$/ }, async ({ path }) => {
+      const alone = await build({
+        absWorkingDir: root,
+        entryPoints: [path],
+        bundle: true,
+        format: 'esm',
+        platform: 'node',
+        target: 'node20',
+        write: false,
+      });
+      return { contents: alone.outputFiles[0]?.text ?? '', loader: 'js' };
     });
   },
 };
@@ -42,12 +43,11 @@ const shared: BuildOptions = {
   minify: true,
   legalComments: 'none',
   jsx: 'automatic',
-  define: { 'process.env.NODE_ENV': '"production"', 'process.env.DEV': '"false"' },
+  define: inkDefines,
   // CommonJS packages inside the bundle ask for Node's own modules by `require`.
   banner: {
     js: "#!/usr/bin/env node\nimport { createRequire as __createRequire } from 'node:module';\nconst require = __createRequire(import.meta.url);",
   },
-  plugins: [withoutDevelopmentTools, boundedTextCaches],
   logLevel: 'warning',
 };
 
@@ -60,7 +60,8 @@ function compileSchemas(): void {
 /** Writes beside and renames, so that a program that starts meanwhile finds either the old file or the new one. */
 async function bundle(entry: string, target: string): Promise<void> {
   const fresh = `${root}${target}.${process.pid}`;
-  await build({ ...shared, entryPoints: [entry], outfile: fresh });
+  // The plugin counts what it replaced: a new one for each bundle.
+  await build({ ...shared, plugins: [parserAlone, replaceInkCaches()], entryPoints: [entry], outfile: fresh });
   await chmod(fresh, 0o755);
   await rename(fresh, `${root}${target}`);
 }

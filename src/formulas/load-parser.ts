@@ -6,8 +6,6 @@ import type { ParsedNode, ParseExpression } from './parsed-node.js';
  * @example const parse = await loadParser();
  */
 export async function loadParser(): Promise<ParseExpression> {
-  const { create, parseDependencies } = await import('mathjs');
-  const math = parseDependencies === undefined ? null : create(parseDependencies, {});
-  if (math === null) throw new Error('mathjs gave no parser');
-  return (text) => math.parse(text) as unknown as ParsedNode;
+  const { parse } = await import('./expression-parser.js');
+  return (text) => parse(text) as unknown as ParsedNode;
 }

@@ -33,7 +33,7 @@ function wordsOf(name: string): { label: string; unit: string } {
 const withUnit = (value: number, unit: string) => (unit === '' ? shown(value) : `${shown(value)} ${unit}`);
 
 /** The limit in words: `at most 5 mm`. */
-function limitInWords(mustKeep: MustKeep, unit: string): string {
+export function limitInWords(mustKeep: MustKeep, unit: string): string {
   const parts: string[] = [];
   if (mustKeep.atLeast !== undefined) parts.push(`at least ${withUnit(mustKeep.atLeast, unit)}`);
   if (mustKeep.atMost !== undefined) parts.push(`at most ${withUnit(mustKeep.atMost, unit)}`);

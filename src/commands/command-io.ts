@@ -1,0 +1,33 @@
+import type { Disk } from '../store/disk.js';
+
+/** Shades of meaning in plain text; each also has its own words, so that nothing is lost without colour. */
+export type Emphasis = 'heading' | 'fits' | 'close' | 'over' | 'quiet';
+
+/** Everything a command may touch outside itself. Tests hand in plain objects. */
+export interface CommandIo {
+  /** Standard output: data alone. */
+  readonly write: (text: string) => void;
+  /** Standard error: messages. */
+  readonly complain: (text: string) => void;
+  readonly environment: Readonly<Record<string, string | undefined>>;
+  /** Both ends are terminals that screens can be drawn on. */
+  readonly canDraw: boolean;
+  /** Marks text for the terminal, by the value of `--color` (undefined where it was not given). */
+  readonly emphasis: (choice: string | undefined) => (kind: Emphasis, text: string) => string;
+  readonly disk: Disk;
+  readonly homeFolder: string;
+  readonly workingFolder: string;
+  /** Folder of the presets that come with the program. */
+  readonly shippedPresets: () => Promise<string | null>;
+  /** Opens the terminal interface and answers its exit code; null where this program has none. */
+  readonly openInterface: ((options: InterfaceOptions) => Promise<number>) | null;
+}
+
+/** What the command line says to the interface. */
+export interface InterfaceOptions {
+  readonly presets: string | undefined;
+  readonly records: string | undefined;
+  readonly ascii: boolean;
+  readonly reader: boolean;
+  readonly color: string | undefined;
+}

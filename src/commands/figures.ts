@@ -1,0 +1,106 @@
+import { unknownBody } from '../calc/body.js';
+import { classKeys, classRow } from '../calc/classes.js';
+import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
+import { plainScanner } from '../calc/scanner.js';
+import { classOf, type GivenParameters } from '../calc/series.js';
+import { presetBaseline, type SeriesResult, seriesResult } from '../session/series-result.js';
+import { cleanText } from '../study/clean-text.js';
+import { nearestWord } from '../study/nearest-word.js';
+import { runningOrder } from '../study/running-order.js';
+import { readSetValues } from '../study/set-values.js';
+import type { Study, StudySeries } from '../study/study.js';
+import { type Attempt, refuse, wrongUse } from './attempt.js';
+import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
+import { complain } from './complain.js';
+import { type ExitCode, exitCodes } from './exit-codes.js';
+import { figuresJson } from './figures-json.js';
+import { foldersOfPresets, type LoadedPreset, loadPreset } from './load-preset.js';
+import { pageOf } from './page.js';
+import { readBody, readField, readReadings } from './read-named-numbers.js';
+import { seriesPage } from './series-page.js';
+import { studyPage } from './study-page.js';
+
+/** `holdfast figures`: evaluates a study or one series, with values set, at a field, for a body, from readings. */
+export async function runFigures(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
+  const [wanted = '', seriesId] = request.arguments;
+  const loaded = await loadPreset(wanted, await foldersOfPresets(request, io), io);
+  if (!loaded.ok) return complain(loaded, io);
+  const text = figuresOf(loaded.value, seriesId, request, io);
+  if (!text.ok) return complain(text, io);
+  io.write(text.value);
+  return exitCodes.done;
+}
+
+/** The whole output, formed before a byte of it is written. */
+function figuresOf(preset: LoadedPreset, seriesId: string | undefined, request: CommandRequest, io: CommandIo): Attempt<string> {
+  const { study, rules } = preset;
+  const picked = pickSeries(study, seriesId, request);
+  if (!picked.ok) return picked;
+  const field = readField(request.value('field'));
+  if (!field.ok) return field;
+  const body = readBody(request.value('body'));
+  if (!body.ok) return body;
+  const readings = readReadings(request.values('reading'));
+  if (!readings.ok) return readings;
+
+  const fieldT = field.value ?? study.fieldT;
+  const scanner = plainScanner(fieldT);
+  const results: SeriesResult[] = [];
+  for (const series of picked.value) {
+    const set = readSetValues(request.values('set'), series);
+    if (!set.ok) return { ok: false, exit: exitCodes.wrongUse, problems: set.problems };
+    const foreign = parameterOfOtherClass(series, set.value);
+    if (foreign !== null) return foreign;
+    const baseline = presetBaseline(series, study.fieldT);
+    const circumstances = { scanner, body: body.value, rules };
+    results.push(seriesResult(series, set.value, baseline, circumstances, { tissues: 'all', readings: readings.value }));
+  }
+  if (request.has('json')) return { ok: true, value: figuresJson(study.id, fieldT, results) };
+
+  const page = pageOf(request, io);
+  const single = picked.value.length === 1 ? results[0] : undefined;
+  if (single === undefined) return { ok: true, value: page.plain(studyPage(study, fieldT, results, page)) };
+  const asPreset = seriesResult(single.series, {}, presetBaseline(single.series, study.fieldT), {
+    scanner: plainScanner(study.fieldT),
+    body: unknownBody,
+    rules,
+  });
+  return { ok: true, value: page.plain(seriesPage(study, fieldT, single, asPreset, page)) };
+}
+
+/** The series asked for, or all: JSON keeps the order of the file, a page has the running order. */
+function pickSeries(study: Study, seriesId: string | undefined, request: CommandRequest): Attempt<readonly StudySeries[]> {
+  const ids = study.series.map(({ id }) => id);
+  if (seriesId === undefined) {
+    const option = ['set', 'reading'].find((name) => request.has(name));
+    if (option !== undefined && ids.length > 1) {
+      return wrongUse(
+        `--${option}`,
+        `--${option} needs SERIES: preset ${study.id} has ${ids.length} series.`,
+        `Name one of ${ids.join(', ')}.`,
+      );
+    }
+    return { ok: true, value: request.has('json') ? study.series : runningOrder(study.series) };
+  }
+  const found = study.series.find(({ id }) => id === seriesId);
+  if (found !== undefined) return { ok: true, value: [found] };
+  const near = nearestWord(seriesId, ids);
+  const message = `There is no series "${cleanText(seriesId, 60)}" in preset ${study.id}.`;
+  const hint = near === null ? `Its series: ${ids.join(', ')}.` : `Did you mean ${near}?`;
+  return refuse(exitCodes.noInput, { code: 'series-not-there', path: seriesId, message, hint });
+}
+
+/** Refuses a set value that this class has no use for: it would change nothing, silently. */
+function parameterOfOtherClass(series: StudySeries, set: GivenParameters): Attempt<never> | null {
+  const { parameters: has, label } = classRow(classOf(series));
+  const foreign = (Object.keys(set) as ParameterKey[]).find((key) => !has.includes(key) && set[key] !== series.parameters[key]);
+  if (foreign === undefined) return null;
+  const near = nearestWord(
+    foreign,
+    parameterKeys.filter((key) => has.includes(key)),
+  );
+  const users = classKeys.filter((key) => classRow(key).parameters.includes(foreign)).map((key) => classRow(key).label);
+  const message = `Series ${series.id} is ${label}, which has no ${parameterRow(foreign).label} (${foreign}).`;
+  return wrongUse('--set', message, near === null ? `It belongs to: ${users.join(', ')}.` : `Did you mean ${near}?`);
+}

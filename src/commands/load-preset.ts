@@ -1,0 +1,58 @@
+import type { ParseExpression } from '../formulas/parsed-node.js';
+import { foldersOf } from '../store/folders.js';
+import { findPreset, type PresetFolder, presetFolders, readPresetFile, type StoredPreset } from '../store/preset-folder.js';
+import type { StoreProblem } from '../store/problem-of-error.js';
+import type { Rules } from '../study/must-keep.js';
+import { readRules } from '../study/read-rules.js';
+import type { Study } from '../study/study.js';
+import type { Attempt, Refusal } from './attempt.js';
+import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
+import { exitCodes } from './exit-codes.js';
+
+/** A preset with its rules read. */
+export interface LoadedPreset extends StoredPreset {
+  readonly rules: Rules;
+}
+
+/** The folders that presets are looked for in, in their order. */
+export async function foldersOfPresets(request: CommandRequest, io: CommandIo): Promise<PresetFolder[]> {
+  const { sitePresetsFolder, ownPresetsFolder } = foldersOf({
+    environment: io.environment,
+    homeFolder: io.homeFolder,
+    workingFolder: io.workingFolder,
+    flags: { presets: request.value('presets') },
+  });
+  return presetFolders(sitePresetsFolder, ownPresetsFolder, await io.shippedPresets());
+}
+
+/** Finds a preset by id or path. Its rules are parsed and checked too; the parser is loaded only where there are rules. */
+export async function loadPreset(wanted: string, folders: readonly PresetFolder[], io: CommandIo): Promise<Attempt<LoadedPreset>> {
+  const found = await findPreset(io.disk, folders, wanted, io.workingFolder);
+  if (!found.ok) return refusedByStore(found.problems);
+  const parse = await parserFor(found.value.study);
+  if (parse === null) return { ok: true, value: { ...found.value, rules: new Map() } };
+  const checked = await readPresetFile(io.disk, found.value.path, found.value.origin, parse);
+  if (!checked.ok) return refusedByStore(checked.problems);
+  return {
+    ok: true,
+    value: {
+      ...checked.value,
+      rules: readRules(
+        checked.value.study.series.flatMap(({ mustKeep }) => mustKeep),
+        parse,
+      ),
+    },
+  };
+}
+
+/** The parser of rules, or null for a study without any. */
+async function parserFor(study: Study): Promise<ParseExpression | null> {
+  const hasRules = study.series.some(({ mustKeep }) => mustKeep.some(({ rule, when }) => rule !== undefined || when !== undefined));
+  return hasRules ? (await import('../formulas/load-parser.js')).loadParser() : null;
+}
+
+/** Problems of the store as a refusal: its own exit code. */
+export function refusedByStore(problems: readonly StoreProblem[]): Refusal {
+  return { ok: false, exit: problems[0]?.exitCode ?? exitCodes.inputOutput, problems };
+}

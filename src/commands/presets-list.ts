@@ -1,0 +1,39 @@
+import { listPresets, type StoredPreset } from '../store/preset-folder.js';
+import { cleanText } from '../study/clean-text.js';
+import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
+import { complain } from './complain.js';
+import { type ExitCode, exitCodes } from './exit-codes.js';
+import { foldersOfPresets, refusedByStore } from './load-preset.js';
+import { pageOf } from './page.js';
+import { textTable } from './text-table.js';
+
+const originWords: Readonly<Record<StoredPreset['origin'], string>> = { site: 'site', own: 'saved here', shipped: 'shipped', file: 'file' };
+
+/** `holdfast presets list`: what can be named. Files that are wrong are told on standard error and do not stop the others. */
+export async function runPresetsList(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
+  const folders = await foldersOfPresets(request, io);
+  const { presets, problems } = await listPresets(io.disk, folders);
+  const folderIsMissing = problems.find(({ exitCode }) => exitCode === exitCodes.noInput);
+  if (folderIsMissing !== undefined && request.has('presets')) return complain(refusedByStore([folderIsMissing]), io);
+  if (problems.length > 0) complain(refusedByStore(problems), io);
+  const page = pageOf(request, io);
+  const columns = [
+    { title: 'preset', align: 'left' },
+    { title: 'field', align: 'point' },
+    { title: 'status', align: 'left' },
+    { title: 'revision', align: 'right' },
+    { title: 'from', align: 'left' },
+    { title: 'title', align: 'left' },
+  ] as const;
+  const rows = presets.map(({ study, origin }) => [
+    study.id,
+    `${study.fieldT} T`,
+    study.status,
+    String(study.revision),
+    originWords[origin],
+    cleanText(study.title),
+  ]);
+  io.write(page.plain(`${textTable(columns, rows, page.reader).join('\n')}\n`));
+  return exitCodes.done;
+}

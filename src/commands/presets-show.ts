@@ -1,0 +1,64 @@
+import { classRow } from '../calc/classes.js';
+import { parameterKeys, parameterRow } from '../calc/parameters.js';
+import { classOf } from '../calc/series.js';
+import { cleanText } from '../study/clean-text.js';
+import { limitInWords } from '../study/must-keep.js';
+import { parameterWords } from '../study/record-changes.js';
+import { runningOrder } from '../study/running-order.js';
+import type { MustKeep, Study, StudySeries } from '../study/study.js';
+import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
+import { complain } from './complain.js';
+import { type ExitCode, exitCodes } from './exit-codes.js';
+import { foldersOfPresets, loadPreset } from './load-preset.js';
+import { type Page, pageOf } from './page.js';
+import { textTable } from './text-table.js';
+import { wrapText } from './wrap-text.js';
+
+/** `holdfast presets show`: one preset, its series in running order with parameters and must-keeps. */
+export async function runPresetsShow(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
+  const loaded = await loadPreset(request.arguments[0] ?? '', await foldersOfPresets(request, io), io);
+  if (!loaded.ok) return complain(loaded, io);
+  const page = pageOf(request, io);
+  io.write(page.plain(presetPage(loaded.value.study, page)));
+  return exitCodes.done;
+}
+
+function presetPage(study: Study, page: Page): string {
+  const minimum = study.minimumSet.map((item) => (typeof item === 'string' ? item : `one of ${item.join(' or ')}`));
+  const lines = [
+    page.emphasis('heading', cleanText(study.title)),
+    `preset ${study.id}, ${study.status}, revision ${study.revision}, ${cleanText(study.region)}, ${study.fieldT} T`,
+    ...(study.notes === '' ? [] : wrapText(cleanText(study.notes), page.width)),
+    ...(minimum.length === 0 ? [] : wrapText(`Minimum set: ${minimum.join(', ')}.`, page.width)),
+    ...runningOrder(study.series).flatMap((series) => ['', ...seriesLines(series, page)]),
+  ];
+  return `${lines.join('\n')}\n`;
+}
+
+function seriesLines(series: StudySeries, page: Page): string[] {
+  const row = classRow(classOf(series));
+  const about = `${row.label}, ${series.plane}${series.purpose === null ? '' : `, ${series.purpose}`}; ${series.target} against ${series.comparison}`;
+  const keys = parameterKeys.filter((key) => row.parameters.includes(key) && series.parameters[key] !== undefined);
+  const columns = [
+    { title: 'key', align: 'left' },
+    { title: 'value', align: 'point' },
+    { title: 'meaning', align: 'left' },
+  ] as const;
+  const values = keys.map((key) => [key, cleanText(parameterWords(key, series.parameters[key])), parameterRow(key).label]);
+  return [
+    ...wrapText(cleanText(`${series.id}: ${series.title}`), page.width).map((line) => page.emphasis('heading', line)),
+    ...wrapText(cleanText(about), page.width),
+    ...textTable(columns, values, page.reader),
+    ...series.mustKeep.flatMap((mustKeep) => wrapText(cleanText(`must keep: ${mustKeepWords(mustKeep)} (${mustKeep.source})`), page.width)),
+    ...(series.pairedWith.length === 0 ? [] : [`changes together with: ${series.pairedWith.join(', ')}`]),
+    ...(series.locked.length === 0 ? [] : wrapText(`locked for a search: ${series.locked.join(', ')}`, page.width)),
+    ...(series.opened.length === 0 ? [] : wrapText(`open to a search: ${series.opened.join(', ')}`, page.width)),
+  ];
+}
+
+function mustKeepWords(mustKeep: MustKeep): string {
+  const name = mustKeep.figure ?? mustKeep.parameter;
+  const what = name === undefined ? (mustKeep.rule ?? '') : `${name} ${limitInWords(mustKeep, '')}`;
+  return mustKeep.when === undefined ? what : `${what}, when ${mustKeep.when}`;
+}

@@ -1,0 +1,41 @@
+import type { CommandIo } from './command-io.js';
+import { complain } from './complain.js';
+import { type ExitCode, exitCodes } from './exit-codes.js';
+import { readCommandLine } from './read-command-line.js';
+
+/**
+ * Runs a command line and answers its exit code. Code is loaded for what was asked and nothing else.
+ *
+ * @param args The words after the program's name.
+ */
+export async function run(args: readonly string[], io: CommandIo): Promise<ExitCode | number> {
+  const line = readCommandLine(args);
+  if (!line.ok) return complain(line, io);
+  switch (line.value.kind) {
+    case 'version': {
+      const { toolVersion } = await import('../study/tool-version.js');
+      const { modelVersion } = await import('../calc/model-version.js');
+      io.write(`holdfast ${toolVersion}, model ${modelVersion}\n`);
+      return exitCodes.done;
+    }
+    case 'help': {
+      const { commandHelp, groupHelp, programHelp } = await import('./help.js');
+      const { command, group } = line.value;
+      io.write(command !== null ? commandHelp(command) : group !== null ? groupHelp(group) : programHelp());
+      return exitCodes.done;
+    }
+    case 'command':
+      return (await line.value.command.load())(line.value.request, io);
+    case 'interface': {
+      const { request } = line.value;
+      if (!io.canDraw || io.openInterface === null) return (await import('./demo.js')).runDemo(request, io);
+      return io.openInterface({
+        presets: request.value('presets'),
+        records: request.value('records'),
+        ascii: request.has('ascii'),
+        reader: request.has('reader'),
+        color: request.value('color'),
+      });
+    }
+  }
+}

@@ -54,6 +54,7 @@ export interface Caution {
 const weight: Readonly<Record<CautionLevel, number>> = { error: 0, caution: 1, note: 2 };
 
 /** Cautions ordered worst first; equals keep their order. */
-export function worstFirst(cautions: readonly Caution[]): Caution[] {
+export function worstFirst(cautions: readonly Caution[]): readonly Caution[] {
+  if (cautions.length < 2) return cautions;
   return [...cautions].sort((a, b) => weight[a.level] - weight[b.level]);
 }

@@ -6,7 +6,7 @@ import type { Parameters } from './series.js';
 
 /** Pixels that one hertz of frequency offset moves the picture: along readout, or along phase in echo-planar (spacing / R x full lines; Mansfield 1977). */
 function pixelsPerHz(key: ClassKey, p: Parameters, lines: Lines): number {
-  if (!classRow(key).family.startsWith('echo-planar')) return 1 / p.pixelBandwidthHz;
+  if (!classRow(key).echoPlanar) return 1 / p.pixelBandwidthHz;
   return ((p.echoSpacingMs / 1000) * lines.fullPhase) / p.parallelFactorPhase;
 }
 
@@ -14,7 +14,7 @@ function pixelsPerHz(key: ClassKey, p: Parameters, lines: Lines): number {
 export function displacement(key: ClassKey, p: Parameters, lines: Lines, geometry: Geometry, fieldT: number) {
   const perHz = pixelsPerHz(key, p, lines);
   const shiftPx = fatShiftHz(fieldT) * perHz;
-  const pixelMm = classRow(key).family.startsWith('echo-planar') ? geometry.voxelPhaseMm : geometry.voxelReadMm;
+  const pixelMm = classRow(key).echoPlanar ? geometry.voxelPhaseMm : geometry.voxelReadMm;
   return { chemicalShiftPx: shiftPx, chemicalShiftMm: shiftPx * pixelMm, distortionPxPer100Hz: 100 * perHz };
 }
 

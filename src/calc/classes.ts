@@ -20,6 +20,8 @@ interface ClassRow {
   readonly train: boolean;
   /** No refocusing pulse: T2* decay, TR and TE follow the readout. */
   readonly gradientEcho: boolean;
+  /** One excitation reads a train of gradient-echo lines. */
+  readonly echoPlanar: boolean;
   /** Parameters this class has. */
   readonly parameters: readonly ParameterKey[];
   /** Figures this class can give; the others are null. */
@@ -67,37 +69,37 @@ const gradientOtherwise = { flipAngleDeg: 'required', echoTrainLength: 1, echoSp
  */
 export const classTable = {
   'spin-echo/2D': {
-    label: 'spin echo', family: 'spin-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: false,
+    label: 'spin echo', family: 'spin-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: false, echoPlanar: false,
     parameters: [...common2D, ...refocused, 'secondEchoTimeMs', 'inversionTimeMs'],
     figures: [...always, ...shared, 'nullTimeMs'],
     otherwise: refocusedOtherwise,
   },
   'spin-echo/3D': {
-    label: '3D spin echo', family: 'spin-echo', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: false,
+    label: '3D spin echo', family: 'spin-echo', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: false, echoPlanar: false,
     parameters: [...common3D, ...refocused, 'secondEchoTimeMs', 'inversionTimeMs'],
     figures: [...always, 'linesSlice', 'nullTimeMs'],
     otherwise: refocusedOtherwise,
   },
   'fast-spin-echo/2D': {
-    label: 'fast spin echo', family: 'fast-spin-echo', acquisition: '2D', interleaving: 'interleaved', train: true, gradientEcho: false,
+    label: 'fast spin echo', family: 'fast-spin-echo', acquisition: '2D', interleaving: 'interleaved', train: true, gradientEcho: false, echoPlanar: false,
     parameters: [...common2D, ...refocused, ...trainTiming],
     figures: [...always, ...shared, 'blurFwhmPx', 'nullTimeMs'],
     otherwise: refocusedOtherwise,
   },
   'fast-spin-echo/3D': {
-    label: '3D fast spin echo', family: 'fast-spin-echo', acquisition: '3D', interleaving: 'volume', train: true, gradientEcho: false,
+    label: '3D fast spin echo', family: 'fast-spin-echo', acquisition: '3D', interleaving: 'volume', train: true, gradientEcho: false, echoPlanar: false,
     parameters: [...common3D, ...refocused, ...trainTiming],
     figures: [...always, 'linesSlice', 'blurFwhmPx', 'nullTimeMs'],
     otherwise: { ...refocusedOtherwise, echoSpacingMs: 4 },
   },
   'single-shot-fast-spin-echo/2D': {
-    label: 'single-shot fast spin echo', family: 'single-shot-fast-spin-echo', acquisition: '2D', interleaving: 'slice-by-slice', train: true, gradientEcho: false,
+    label: 'single-shot fast spin echo', family: 'single-shot-fast-spin-echo', acquisition: '2D', interleaving: 'slice-by-slice', train: true, gradientEcho: false, echoPlanar: false,
     parameters: [...common2D, ...refocused, ...trainTiming],
     figures: [...always, 'blurFwhmPx', 'nullTimeMs'],
     otherwise: { ...refocusedOtherwise, echoTrainLength: 'lines', echoSpacingMs: 5 },
   },
   'rotating-strip-fast-spin-echo/2D': {
-    label: 'rotating-strip fast spin echo', family: 'rotating-strip-fast-spin-echo', acquisition: '2D', interleaving: 'interleaved', train: true, gradientEcho: false,
+    label: 'rotating-strip fast spin echo', family: 'rotating-strip-fast-spin-echo', acquisition: '2D', interleaving: 'interleaved', train: true, gradientEcho: false, echoPlanar: false,
     parameters: [
       ...(['fieldOfViewMm', 'phaseDirection'] as const), ...grid, ...slices2D, ...repeats, 'parallelFactorPhase', 'referenceScanS',
       ...timing, ...preparation, ...refocused, ...trainTiming,
@@ -106,43 +108,43 @@ export const classTable = {
     otherwise: { ...refocusedOtherwise, echoSpacingMs: 5 },
   },
   'spoiled-gradient-echo/2D': {
-    label: 'spoiled gradient echo', family: 'spoiled-gradient-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: true,
+    label: 'spoiled gradient echo', family: 'spoiled-gradient-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: true, echoPlanar: false,
     parameters: [...common2D, 'flipAngleDeg', 'secondEchoTimeMs', 'linesPerBeat'],
     figures: [...always, ...shared, ...cine, 'ernstAngleDeg'],
     otherwise: gradientOtherwise,
   },
   'spoiled-gradient-echo/3D': {
-    label: '3D spoiled gradient echo', family: 'spoiled-gradient-echo', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: true,
+    label: '3D spoiled gradient echo', family: 'spoiled-gradient-echo', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: true, echoPlanar: false,
     parameters: [...common3D, 'flipAngleDeg', 'secondEchoTimeMs', 'fatSuppressionEveryLines'],
     figures: [...always, 'linesSlice', 'ernstAngleDeg'],
     otherwise: gradientOtherwise,
   },
   'balanced-steady-state/2D': {
-    label: 'balanced steady state', family: 'balanced-steady-state', acquisition: '2D', interleaving: 'slice-by-slice', train: false, gradientEcho: true,
+    label: 'balanced steady state', family: 'balanced-steady-state', acquisition: '2D', interleaving: 'slice-by-slice', train: false, gradientEcho: true, echoPlanar: false,
     parameters: [...common2D, 'flipAngleDeg', 'linesPerBeat'],
     figures: [...always, ...cine],
     otherwise: gradientOtherwise,
   },
   'balanced-steady-state/3D': {
-    label: '3D balanced steady state', family: 'balanced-steady-state', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: true,
+    label: '3D balanced steady state', family: 'balanced-steady-state', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: true, echoPlanar: false,
     parameters: [...common3D, 'flipAngleDeg', 'fatSuppressionEveryLines'],
     figures: [...always, 'linesSlice'],
     otherwise: gradientOtherwise,
   },
   'inversion-prepared-gradient-echo/3D': {
-    label: '3D inversion-prepared gradient echo', family: 'inversion-prepared-gradient-echo', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: true,
+    label: '3D inversion-prepared gradient echo', family: 'inversion-prepared-gradient-echo', acquisition: '3D', interleaving: 'volume', train: false, gradientEcho: true, echoPlanar: false,
     parameters: [...common3D, 'flipAngleDeg', 'inversionTimeMs', 'echoTrainLength', 'echoSpacingMs'],
     figures: [...always, 'linesSlice', 'nullTimeMs'],
     otherwise: { ...gradientOtherwise, echoTrainLength: 'lines', echoSpacingMs: 7, slabSelective: false },
   },
   'echo-planar-gradient-echo/2D': {
-    label: 'echo-planar gradient echo', family: 'echo-planar-gradient-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: true,
+    label: 'echo-planar gradient echo', family: 'echo-planar-gradient-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: true, echoPlanar: true,
     parameters: [...common2D, 'flipAngleDeg', 'echoTrainLength', 'echoSpacingMs'],
     figures: [...always, ...shared, 'ernstAngleDeg'],
     otherwise: { ...gradientOtherwise, echoTrainLength: 'lines', echoSpacingMs: 0.7 },
   },
   'echo-planar-spin-echo/2D': {
-    label: 'echo-planar spin echo', family: 'echo-planar-spin-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: false,
+    label: 'echo-planar spin echo', family: 'echo-planar-spin-echo', acquisition: '2D', interleaving: 'interleaved', train: false, gradientEcho: false, echoPlanar: true,
     parameters: [...common2D, ...refocused, ...trainTiming, 'diffusion'],
     figures: [...always, ...shared, 'nullTimeMs'],
     otherwise: { ...refocusedOtherwise, echoTrainLength: 'lines', echoSpacingMs: 0.7 },
@@ -158,6 +160,18 @@ export const classKeys = Object.keys(classTable) as readonly ClassKey[];
 
 /** The families in table order, each once. */
 export const families: readonly Family[] = [...new Set(classKeys.map((key) => classTable[key].family))];
+
+const keyByFamily: Readonly<Record<string, Readonly<Partial<Record<Acquisition, ClassKey>>>>> = Object.fromEntries(
+  families.map((family) => [
+    family,
+    Object.fromEntries(classKeys.filter((key) => classTable[key].family === family).map((key) => [classTable[key].acquisition, key])),
+  ]),
+);
+
+/** The class of a family and acquisition that are known to stand together in the table. */
+export function knownClass(family: Family, acquisition: Acquisition): ClassKey {
+  return keyByFamily[family]?.[acquisition] as ClassKey;
+}
 
 /** The row of a class, widened for code that handles any class. */
 export function classRow(key: ClassKey): ClassRow {

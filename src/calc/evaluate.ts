@@ -77,7 +77,7 @@ function figuresOf(model: SeriesModel, comparison: Comparison, nullMs: number | 
   const period = pacingPeriodMs(p) ?? 0;
   const phaseTimes = phaseTimesMs(model.scanner.fieldT);
   const beatMs = (p.linesPerBeat ?? 0) * p.repetitionTimeMs;
-  const ernst = row.figures.includes('ernstAngleDeg') && model.target !== null ? ernstAngleDeg(effectiveRepetitionTimeMs(p), model.target.t1Ms) : null;
+  const ernst = givesErnstAngle(model) && model.target !== null ? ernstAngleDeg(effectiveRepetitionTimeMs(p), model.target.t1Ms) : null;
   return {
     scanTimeS: finite(time.scanTimeS * timeRatio),
     holdTimeS: time.holdTimeS === null ? null : finite(time.holdTimeS * timeRatio),
@@ -118,6 +118,11 @@ function figuresOf(model: SeriesModel, comparison: Comparison, nullMs: number | 
   };
 }
 
+/** True for the classes that a single angle drives to a spoiled steady state. */
+function givesErnstAngle(model: SeriesModel): boolean {
+  return model.series.family === 'spoiled-gradient-echo' || model.series.family === 'echo-planar-gradient-echo';
+}
+
 /** Blur of the target over the whole train; centric when the contrast echo is among the first two. */
 function blurOf(model: SeriesModel, t2Ms: number): number | null {
   const p = model.series.parameters;
@@ -134,7 +139,9 @@ function fromReading(figures: Figures, readings: Readings): FigureKey[] {
 }
 
 function signalsOf(model: SeriesModel, which: 'pair' | 'all'): TissueSignal[] {
-  const signals = [model.target, model.comparison].filter((signal): signal is TissueSignal => signal !== null);
+  const signals: TissueSignal[] = [];
+  if (model.target !== null) signals.push(model.target);
+  if (model.comparison !== null) signals.push(model.comparison);
   if (which === 'pair') return signals;
   const listed = new Set([model.series.target, model.series.comparison]);
   for (const name of tissuesWithValueAt(model.scanner.fieldT)) {

@@ -1,4 +1,4 @@
-import type { ClassKey } from './classes.js';
+import { type ClassKey, classRow } from './classes.js';
 import { guardedCeil, roundHalfUp } from './rounding.js';
 import type { Parameters } from './series.js';
 
@@ -47,7 +47,7 @@ export function acquiredLines(key: ClassKey, p: Parameters): Lines {
   const encodedPhase = guardedCeil(p.partialFourierPhase * fullPhase);
   const phase = accelerated(encodedPhase, p.referenceLines, p.parallelFactorPhase);
   const referencePhase = p.parallelFactorPhase > 1 ? Math.min(p.referenceLines, encodedPhase) : 0;
-  if (!key.endsWith('3D')) {
+  if (classRow(key).acquisition === '2D') {
     return { fullPhase, encodedPhase, phase, fullSlice: 1, encodedSlice: 1, slice: 1, reference: referencePhase, total: phase };
   }
   const fullSlice = Math.max(1, roundHalfUp(p.sliceCount * (1 + p.sliceOversamplingPercent / 100)));

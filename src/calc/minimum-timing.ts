@@ -57,11 +57,16 @@ function elements(key: ClassKey, p: Parameters, geometry: Geometry, pulse: Playe
   };
 }
 
-/** The longest of several named times. */
-function longest(parts: readonly (readonly [string, number])[]): readonly [string, number] {
-  let worst = parts[0] as readonly [string, number];
-  for (const part of parts) if (part[1] > worst[1]) worst = part;
-  return worst;
+/** Puts one estimate together. */
+function estimate(echoTimeMs: number, repetitionTimeMs: number, echoSpacingMs: number | null, binding: string, amplitude: number, scanner: Scanner): MinimumTiming {
+  return { echoTimeMs, repetitionTimeMs, echoSpacingMs, binding, readoutMtPerM: amplitude, readoutOverGradient: amplitude > scanner.gradientMtPerM * (1 + 1e-9) };
+}
+
+/** Which of the lobes before the readout is the longest, in words. */
+function bindingOf(part: Elements, encodeMs: number): string {
+  if (part.prephaseMs >= encodeMs) return 'readout prephasing';
+  if (part.selectRampMs + part.rephaseMs >= encodeMs) return 'slice refocusing';
+  return part.selectRampMs + part.phaseEncodeMs >= encodeMs ? 'phase encoding' : 'partition encoding';
 }
 
 /** Area of a spoiler or crusher that winds two cycles across a slice, mT/m ms (common practice, no source). */
@@ -100,61 +105,52 @@ export function minimumTiming(key: ClassKey, p: Parameters, lines: Lines, geomet
   const row = classRow(key);
   const part = elements(key, p, geometry, pulses.excitation, scanner);
   const amplitude = readoutMtPerM(p.pixelBandwidthHz, p.matrixRead, p.fieldOfViewMm);
-  const shared = { readoutMtPerM: amplitude, readoutOverGradient: amplitude > scanner.gradientMtPerM * (1 + 1e-9) };
   const flowMs = p.flowCompensation ? part.prephaseMs : 0;
-  const encode = longest([
-    ['slice refocusing', part.selectRampMs + part.rephaseMs],
-    ['phase encoding', part.selectRampMs + part.phaseEncodeMs],
-    ['partition encoding', part.selectRampMs + part.partitionMs],
-    ['readout prephasing', part.prephaseMs],
-  ]);
+  // Slice refocusing, phase and partition encoding and readout prephasing run side by side: the longest counts.
+  const sliceSideMs = part.selectRampMs + Math.max(part.rephaseMs, part.phaseEncodeMs, part.partitionMs);
+  const encodeMs = Math.max(sliceSideMs, part.prephaseMs);
   const halfPulse = pulses.excitation.durationMs / 2;
   const half = part.readoutMs / 2;
   const lead = part.readoutRampMs + half;
 
-  if (row.family.startsWith('echo-planar')) {
+  if (row.echoPlanar) {
     // Lines may be sampled on the ramps: the lobe itself must fit, and one line takes at least 1 / bandwidth.
     const spacing = Math.max(part.readoutMs, lobeMs(amplitude * part.readoutMs, scanner));
     const centreMs = echoPlanarLeadMs(p, lines);
     const tail = (lines.fullPhase * p.echoSpacingMs) / p.parallelFactorPhase / 2;
     if (pulses.refocusing === null) {
-      const te = halfPulse + encode[1] + flowMs + centreMs + half;
-      return { ...shared, echoTimeMs: te, repetitionTimeMs: halfPulse + te + tail, echoSpacingMs: spacing, binding: 'the lines before the centre of k-space' };
+      const te = halfPulse + encodeMs + flowMs + centreMs + half;
+      return estimate(te, halfPulse + te + tail, spacing, 'the lines before the centre of k-space', amplitude, scanner);
     }
     const lobe = diffusionLobeMs(highestB(p), pulses.refocusing.durationMs, scanner);
-    const before = halfPulse + encode[1] + flowMs + lobe;
+    const before = halfPulse + encodeMs + flowMs + lobe;
     const after = lobe + centreMs + half;
     const te = 2 * (pulses.refocusing.durationMs / 2 + Math.max(before, after));
     const binding = after >= before ? 'the lines before the centre of k-space' : 'the first half of the echo';
-    return { ...shared, echoTimeMs: te, repetitionTimeMs: halfPulse + te + tail, echoSpacingMs: spacing, binding };
+    return estimate(te, halfPulse + te + tail, spacing, binding, amplitude, scanner);
   }
 
   if (pulses.refocusing !== null) {
     const crusher = crusherMs(geometry, scanner);
-    const side = longest([
-      ['crusher', crusher + part.selectRampMs],
-      ['phase encoding', part.phaseEncodeMs],
-      ['partition encoding', part.partitionMs],
-      ['readout ramp', part.readoutRampMs],
-    ]);
+    const sideMs = Math.max(crusher + part.selectRampMs, part.phaseEncodeMs, part.partitionMs, part.readoutRampMs);
     // Left of the refocusing pulse: excitation and its rephasing; right of it: encoding and half of the readout.
-    const left = halfPulse + Math.max(encode[1] + flowMs, crusher);
-    const right = side[1] + half;
-    const spacing = pulses.refocusing.durationMs + 2 * side[1] + part.readoutMs;
+    const left = halfPulse + Math.max(encodeMs + flowMs, crusher);
+    const right = sideMs + half;
+    const spacing = pulses.refocusing.durationMs + 2 * sideMs + part.readoutMs;
     const te = row.train ? Math.max(spacing, pulses.refocusing.durationMs + 2 * left) : pulses.refocusing.durationMs + 2 * Math.max(left, right);
     const last = row.train ? p.echoTrainLength * p.echoSpacingMs : Math.max(te, p.secondEchoTimeMs ?? 0);
     const repetitionTimeMs = halfPulse + last + half + crusher + (p.inversionTimeMs === undefined ? 0 : p.inversionTimeMs + inversionPulseMs / 2);
-    return { ...shared, echoTimeMs: te, repetitionTimeMs, echoSpacingMs: row.train ? spacing : null, binding: side[0] };
+    return estimate(te, repetitionTimeMs, row.train ? spacing : null, sideMs > crusher + part.selectRampMs ? 'phase encoding' : 'crushers and refocusing pulse', amplitude, scanner);
   }
 
-  const te = halfPulse + encode[1] + flowMs + lead;
+  const te = halfPulse + encodeMs + flowMs + lead;
   const afterReadout = Math.max(part.phaseEncodeMs, part.partitionMs, row.family === 'balanced-steady-state' ? part.prephaseMs : crusherMs(geometry, scanner));
   const lastEchoMs = Math.max(te, p.secondEchoTimeMs ?? 0);
   const line = halfPulse + lastEchoMs + half + part.readoutRampMs + afterReadout;
   if (row.family === 'inversion-prepared-gradient-echo') {
     const centre = (p.partialFourierSlice - 0.5) * (lines.fullSlice / p.parallelFactorSlice);
     const cycle = (p.inversionTimeMs ?? 0) + Math.max(0, p.echoTrainLength - centre) * p.echoSpacingMs;
-    return { ...shared, echoTimeMs: te, repetitionTimeMs: cycle, echoSpacingMs: line, binding: encode[0] };
+    return estimate(te, cycle, line, bindingOf(part, encodeMs), amplitude, scanner);
   }
-  return { ...shared, echoTimeMs: te, repetitionTimeMs: line, echoSpacingMs: null, binding: encode[0] };
+  return estimate(te, line, null, bindingOf(part, encodeMs), amplitude, scanner);
 }

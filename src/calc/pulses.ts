@@ -44,25 +44,19 @@ function waveform(shape: PulseShape): Waveform {
 
 /** Name of the excitation pulse of a class. */
 export function excitationPulse(key: ClassKey, slabSelective: boolean): PulseName {
-  switch (classRow(key).family) {
-    case 'balanced-steady-state':
-      return 'balanced';
-    case 'echo-planar-gradient-echo':
-    case 'echo-planar-spin-echo':
-      return 'echoPlanarExcitation';
-    case 'spoiled-gradient-echo':
-    case 'inversion-prepared-gradient-echo':
-      if (classRow(key).acquisition === '2D') return 'gradientEcho2D';
-      return slabSelective ? 'gradientEcho3D' : 'nonSelective';
-    default:
-      return 'excitation';
-  }
+  const row = classRow(key);
+  if (row.echoPlanar) return 'echoPlanarExcitation';
+  if (!row.gradientEcho) return 'excitation';
+  if (row.family === 'balanced-steady-state') return 'balanced';
+  if (row.acquisition === '2D') return 'gradientEcho2D';
+  return slabSelective ? 'gradientEcho3D' : 'nonSelective';
 }
 
 /** Name of the refocusing pulse of a class, null in gradient echoes. */
 export function refocusingPulse(key: ClassKey): PulseName | null {
-  if (classRow(key).gradientEcho) return null;
-  return classRow(key).family === 'echo-planar-spin-echo' ? 'echoPlanarRefocusing' : 'refocusing';
+  const row = classRow(key);
+  if (row.gradientEcho) return null;
+  return row.echoPlanar ? 'echoPlanarRefocusing' : 'refocusing';
 }
 
 /** B1 in uT of a hard pulse: angle / (2 pi gamma-bar tau). A 90 degree pulse of 1 ms takes 5.8716 uT. */
@@ -102,6 +96,29 @@ export function playPulse(name: PulseName, angleDeg: number, stretch: number, sc
   };
 }
 
+/** Last pulse played of each name on a scanner: a series asks for the same few again and again. */
+interface Played {
+  readonly angleDeg: number;
+  readonly stretch: number;
+  readonly simultaneous: number;
+  readonly pulse: PlayedPulse;
+}
+const lastPlayed = new WeakMap<Scanner, Partial<Record<PulseName, Played>>>();
+
+/** `playPulse`, remembering the last pulse of each name on each scanner. */
+function play(name: PulseName, angleDeg: number, stretch: number, scanner: Scanner, simultaneous: number): PlayedPulse {
+  let known = lastPlayed.get(scanner);
+  if (known === undefined) {
+    known = {};
+    lastPlayed.set(scanner, known);
+  }
+  const last = known[name];
+  if (last !== undefined && last.angleDeg === angleDeg && last.stretch === stretch && last.simultaneous === simultaneous) return last.pulse;
+  const pulse = playPulse(name, angleDeg, stretch, scanner, simultaneous);
+  known[name] = { angleDeg, stretch, simultaneous, pulse };
+  return pulse;
+}
+
 /** The pulses of one slot of a series. */
 export interface SlotPulses {
   readonly excitation: PlayedPulse;
@@ -115,9 +132,9 @@ export function slotPulses(key: ClassKey, p: Parameters, scanner: Scanner): Slot
   const m = p.simultaneousSlices;
   const refocusing = refocusingPulse(key);
   return {
-    excitation: playPulse(excitationPulse(key, p.slabSelective), p.flipAngleDeg, p.rfPulseStretch, scanner, m),
-    refocusing: refocusing === null ? null : playPulse(refocusing, p.refocusingAngleDeg, p.rfPulseStretch, scanner, m),
-    fatSaturation: p.fatSuppression === 'spectral' ? playPulse('fatSaturation', fatSaturationAngleDeg, p.rfPulseStretch, scanner) : null,
-    band: p.saturationBands > 0 ? playPulse('saturationBand', saturationBandAngleDeg, p.rfPulseStretch, scanner) : null,
+    excitation: play(excitationPulse(key, p.slabSelective), p.flipAngleDeg, p.rfPulseStretch, scanner, m),
+    refocusing: refocusing === null ? null : play(refocusing, p.refocusingAngleDeg, p.rfPulseStretch, scanner, m),
+    fatSaturation: p.fatSuppression === 'spectral' ? play('fatSaturation', fatSaturationAngleDeg, p.rfPulseStretch, scanner, 1) : null,
+    band: p.saturationBands > 0 ? play('saturationBand', saturationBandAngleDeg, p.rfPulseStretch, scanner, 1) : null,
   };
 }

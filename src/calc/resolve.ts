@@ -71,7 +71,7 @@ function carryTrainLength(key: ClassKey, before: Parameters, draft: Draft, carry
 function readoutMoved(key: ClassKey, before: Parameters, now: Parameters): boolean {
   const keys = ['pixelBandwidthHz', 'matrixRead', 'rfPulseStretch', 'flowCompensation', 'partialFourierSlice', 'flipAngleDeg', 'refocusingAngleDeg', 'slabSelective', 'simultaneousSlices'] as const;
   if (keys.some((name) => now[name] !== before[name])) return true;
-  if (!key.startsWith('echo-planar')) return false;
+  if (!classRow(key).echoPlanar) return false;
   return now.echoTrainLength !== before.echoTrainLength || now.echoSpacingMs !== before.echoSpacingMs || now.partialFourierPhase !== before.partialFourierPhase || now.diffusion !== before.diffusion;
 }
 
@@ -82,7 +82,7 @@ function minimumOf(key: ClassKey, draft: Parameters, baseline: Baseline, scanner
   const p: Parameters = {
     ...draft,
     fieldOfViewMm: before.fieldOfViewMm,
-    matrixPhase: key.startsWith('echo-planar') ? draft.matrixPhase : before.matrixPhase,
+    matrixPhase: classRow(key).echoPlanar ? draft.matrixPhase : before.matrixPhase,
     sliceThicknessMm: before.sliceThicknessMm,
     sliceCount: before.sliceCount,
   };
@@ -101,7 +101,7 @@ function carryTimes(key: ClassKey, baseline: Baseline, draft: Draft, scanner: Sc
   const old = baseline.model.minimum;
   const now = minimumOf(key, draft, baseline, scanner);
   const row = classRow(key);
-  const follows = (row.gradientEcho || key.startsWith('echo-planar')) && before.secondEchoTimeMs === undefined;
+  const follows = (row.gradientEcho || classRow(key).echoPlanar) && before.secondEchoTimeMs === undefined;
   if (follows) {
     carry('echoTimeMs', Math.max(0.01, before.echoTimeMs + now.echoTimeMs - old.echoTimeMs), 'TE follows readout, pulses and train');
   } else if (!row.train) {
@@ -109,7 +109,7 @@ function carryTimes(key: ClassKey, baseline: Baseline, draft: Draft, scanner: Sc
     // A contrast-setting TE stays while its slack allows: it is raised only when the minimum itself passes it.
     if (now.echoTimeMs > Math.max(draft.echoTimeMs, old.echoTimeMs) && raised > draft.echoTimeMs) carry('echoTimeMs', raised, 'the shortest TE passes it');
   }
-  const lineByLine = row.gradientEcho && !key.startsWith('echo-planar') && key !== 'inversion-prepared-gradient-echo/3D';
+  const lineByLine = row.gradientEcho && !classRow(key).echoPlanar && key !== 'inversion-prepared-gradient-echo/3D';
   if (lineByLine) carry('repetitionTimeMs', Math.max(0.5, before.repetitionTimeMs + now.repetitionTimeMs - old.repetitionTimeMs), 'TR follows readout and pulses');
 }
 

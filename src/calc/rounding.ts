@@ -39,7 +39,7 @@ function tolerance(a: number, b: number): number {
  * @example atMost(0.1 + 0.2, 0.3) //=> true
  */
 export function atMost(a: number, b: number): boolean {
-  return a - b <= tolerance(a, b);
+  return a <= b || a - b <= tolerance(a, b);
 }
 
 /** `a >= b`, forgiving the last binary digit. */

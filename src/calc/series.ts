@@ -1,4 +1,4 @@
-import { type Acquisition, type ClassKey, classRow, type Family } from './classes.js';
+import { type Acquisition, type ClassKey, classKeys, classRow, type Family, knownClass } from './classes.js';
 import { acquiredLines } from './lines.js';
 import { type NumberParameterKey, type ParameterKey, type ParameterTable, parameterKeys, parameterRow } from './parameters.js';
 
@@ -69,7 +69,7 @@ export interface Series {
 
 /** The class of a series. A series is only ever built with a family and acquisition that stand together in the table. */
 export function classOf(series: Pick<Series, 'family' | 'acquisition'>): ClassKey {
-  return `${series.family}/${series.acquisition}` as ClassKey;
+  return knownClass(series.family, series.acquisition);
 }
 
 /**
@@ -109,14 +109,22 @@ export function linesInOneTrain(key: ClassKey, parameters: Parameters): number {
   return key === 'inversion-prepared-gradient-echo/3D' ? lines.slice : lines.phase;
 }
 
-/** True when a parameter does what this class cannot use: it is set to something else than its neutral value. */
-export function isUnusedButSet(name: ParameterKey, series: Series): boolean {
-  const row = classRow(classOf(series));
-  if (row.parameters.includes(name)) return false;
-  const value = series.parameters[name];
-  if (value === undefined) return false;
-  if (name === 'pacing') return (value as Pacing).kind !== 'none';
-  const neutral = defaultOf(name, classOf(series));
-  // The excitation and refocusing angle, and the spacing, have no neutral value that matters where the class has none.
-  return name !== 'refocusingAngleDeg' && name !== 'echoSpacingMs' && name !== 'flipAngleDeg' && name !== 'slabSelective' && value !== neutral;
+/** What a class has no use for: numbers, flags and choices with a neutral value that it would silently ignore. */
+const ignoredByClass = Object.fromEntries(
+  classKeys.map((key) => [
+    key,
+    parameterKeys
+      // An angle or a spacing that a class has not got has no neutral value that would mean anything.
+      .filter((name) => !classRow(key).parameters.includes(name) && !['refocusingAngleDeg', 'echoSpacingMs', 'flipAngleDeg', 'slabSelective'].includes(name))
+      .map((name) => ({ name, neutral: defaultOf(name, key) })),
+  ]),
+) as unknown as Readonly<Record<ClassKey, readonly { readonly name: ParameterKey; readonly neutral: unknown }[]>>;
+
+/** Calls back for each parameter that is set to something this class cannot use. */
+export function forEachIgnored(key: ClassKey, p: Parameters, report: (name: ParameterKey) => void): void {
+  const ignored = ignoredByClass[key];
+  for (let i = 0; i < ignored.length; i += 1) {
+    const entry = ignored[i] as (typeof ignored)[number];
+    if (p[entry.name] !== entry.neutral) report(entry.name);
+  }
 }

@@ -12,7 +12,7 @@ const bandMs = 10;
 function halfReadoutMs(key: ClassKey, p: Parameters, fullLines: number): number {
   const row = classRow(key);
   if (row.train) return p.echoSpacingMs / 2;
-  if (row.family.startsWith('echo-planar')) return (p.echoSpacingMs * fullLines) / p.parallelFactorPhase / 2;
+  if (row.echoPlanar) return (p.echoSpacingMs * fullLines) / p.parallelFactorPhase / 2;
   return 500 / p.pixelBandwidthHz;
 }
 

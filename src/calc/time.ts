@@ -43,28 +43,31 @@ function microseconds(ms: number): number {
   return roundHalfUp(ms * 1000);
 }
 
+function passesFrom(shots: number, shotUs: number, passes: number, extraUs = 0, leadUs = 0): Passes {
+  return { shots, shotUs, passes, extraUs, leadUs };
+}
+
 /** Counts shots and passes by class; `rounds` is the split in force. */
 function passesOf(key: ClassKey, p: Parameters, lines: Lines, rounds: number, scanner: Scanner): Passes {
   const row = classRow(key);
   const shotUs = microseconds(effectiveRepetitionTimeMs(p));
-  const plain = { shotUs, extraUs: 0, leadUs: 0 };
   if (isCine(p)) {
     const beats = guardedCeil(guardedCeil(lines.phase * p.averages) / (p.linesPerBeat as number)) + 1;
-    return { shots: beats, shotUs: microseconds(pacingPeriodMs(p) as number), passes: p.sliceCount, extraUs: 0, leadUs: 0 };
+    return passesFrom(beats, microseconds(pacingPeriodMs(p) as number), p.sliceCount);
   }
   switch (row.family) {
     case 'inversion-prepared-gradient-echo':
-      return { ...plain, shots: guardedCeil(lines.phase * p.averages) + p.dummyShots, passes: p.slabs };
+      return passesFrom(guardedCeil(lines.phase * p.averages) + p.dummyShots, shotUs, p.slabs);
     case 'echo-planar-gradient-echo':
     case 'echo-planar-spin-echo': {
       const acquired = p.diffusion === undefined ? guardedCeil(p.volumes * p.averages) : diffusionShots(p.diffusion);
-      return { ...plain, shots: acquired + p.dummyShots, passes: rounds };
+      return passesFrom(acquired + p.dummyShots, shotUs, rounds);
     }
     case 'single-shot-fast-spin-echo':
-      return { ...plain, shots: guardedCeil(p.averages), passes: guardedCeil(p.sliceCount / p.simultaneousSlices), leadUs: p.dummyShots * shotUs };
+      return passesFrom(guardedCeil(p.averages), shotUs, guardedCeil(p.sliceCount / p.simultaneousSlices), 0, p.dummyShots * shotUs);
     case 'rotating-strip-fast-spin-echo': {
       const blades = bladeCount(p.matrixPhase, p.echoTrainLength, p.parallelFactorPhase);
-      return { ...plain, shots: guardedCeil(blades * p.averages) + p.dummyShots, passes: rounds };
+      return passesFrom(guardedCeil(blades * p.averages) + p.dummyShots, shotUs, rounds);
     }
     default:
   }
@@ -72,10 +75,10 @@ function passesOf(key: ClassKey, p: Parameters, lines: Lines, rounds: number, sc
   if (row.acquisition === '3D') {
     const kept = lines.total * ellipticalShare(p);
     const shots = (row.train ? guardedCeil(guardedCeil(kept / train) * p.averages) : guardedCeil(kept * p.averages)) + p.dummyShots;
-    return { ...plain, shots, passes: p.slabs, extraUs: fatBlocksUs(key, p, shots, scanner) };
+    return passesFrom(shots, shotUs, p.slabs, fatBlocksUs(key, p, shots, scanner));
   }
   const shots = guardedCeil(guardedCeil(lines.phase / train) * p.averages) + p.dummyShots;
-  return { ...plain, shots, passes: row.interleaving === 'slice-by-slice' ? p.sliceCount : rounds };
+  return passesFrom(shots, shotUs, row.interleaving === 'slice-by-slice' ? p.sliceCount : rounds);
 }
 
 /** Time of the fat-suppression blocks of one pass of a 3D gradient echo, microseconds: nothing unless their distance is stated. */
@@ -86,7 +89,7 @@ function fatBlocksUs(key: ClassKey, p: Parameters, shots: number, scanner: Scann
 
 /** True where `volumes` repeat everything; an echo-planar series counts its volumes among its shots. */
 function repeatsVolumes(key: ClassKey): boolean {
-  return !classRow(key).family.startsWith('echo-planar');
+  return !classRow(key).echoPlanar;
 }
 
 /**

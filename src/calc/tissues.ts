@@ -94,8 +94,13 @@ function t2StarAt(name: string, rows: readonly TissueRow[], fieldT: number, t2Ms
 
 /** The table's value at a field, before contrast agent and overrides; null for an unknown name. Values are kept once computed. */
 export function tableTissue(name: string, fieldT: number): Tissue | null {
-  const key = `${name}@${fieldT}`;
-  const known = kept.get(key);
+  let atField = kept.get(fieldT);
+  if (atField === undefined) {
+    if (kept.size > 200) kept.clear();
+    atField = new Map();
+    kept.set(fieldT, atField);
+  }
+  const known = atField.get(name);
   if (known !== undefined) return known;
   const rows = rowsByTissue.get(name);
   if (rows === undefined) return null;
@@ -110,11 +115,10 @@ export function tableTissue(name: string, fieldT: number): Tissue | null {
     protonDensity: first.protonDensity,
     extrapolated: fieldT < first.fieldT - 1e-9 || fieldT > last.fieldT + 1e-9,
   };
-  if (kept.size > 5000) kept.clear();
-  kept.set(key, tissue);
+  atField.set(name, tissue);
   return tissue;
 }
-const kept = new Map<string, Tissue>();
+const kept = new Map<number, Map<string, Tissue>>();
 
 /** Concentration of contrast agent in mmol/L some minutes after injection (assumption, common practice, no source). */
 const agentMmolPerL: Readonly<Record<string, number>> = {

@@ -4,7 +4,7 @@ import type { Comparison } from '../compare.js';
 import type { SeriesModel } from '../model.js';
 import { parameterKeys } from '../parameters.js';
 import { below, same } from '../rounding.js';
-import { isUnusedButSet } from '../series.js';
+import { forEachIgnored } from '../series.js';
 import { inWords } from './number-words.js';
 
 /** Share by which a null may drift before it is said, and before it is lost (common practice, no source). */
@@ -56,14 +56,10 @@ export function driftCautions(model: SeriesModel, nullMs: number | null, compari
   if (p.diffusion !== undefined && !same(p.averages, 1)) {
     add({ code: 'not-modelled', level: 'error', text: 'a diffusion series counts its averages by b-value: its own averages must be 1', numbers: { averages: p.averages } });
   }
-  if (p.fatSuppression === 'spectral' && p.fatSuppressionEveryLines === undefined && model.lines.total > 1 && model.key.endsWith('gradient-echo/3D') && model.key.startsWith('spoiled')) {
-    if (p.fatSuppression !== before.fatSuppression) {
-      add({ code: 'not-modelled', level: 'note', text: 'how often the fat-suppression pulse is played is not stated: its time and RF are not counted', numbers: {} });
-    }
+  if (model.key === 'spoiled-gradient-echo/3D' && p.fatSuppression === 'spectral' && p.fatSuppressionEveryLines === undefined && before.fatSuppression !== 'spectral') {
+    add({ code: 'not-modelled', level: 'note', text: 'how often the fat-suppression pulse is played is not stated: its time and RF are not counted', numbers: {} });
   }
-  for (const key of parameterKeys) {
-    if (isUnusedButSet(key, model.series)) add({ code: 'not-modelled', level: 'caution', text: `${key} has no effect in this class`, numbers: {} });
-  }
+  forEachIgnored(model.key, p, (name) => add({ code: 'not-modelled', level: 'caution', text: `${name} has no effect in this class`, numbers: {} }));
 }
 
 /** True when anything that shows in the picture differs from the baseline. */

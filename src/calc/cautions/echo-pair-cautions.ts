@@ -18,7 +18,7 @@ function fromWhole(x: number): number {
  */
 export function echoPairCautions(model: SeriesModel, add: (caution: Caution) => void): void {
   const p = model.series.parameters;
-  if (p.secondEchoTimeMs === undefined || !model.key.startsWith('spoiled-gradient-echo')) return;
+  if (p.secondEchoTimeMs === undefined || model.series.family !== 'spoiled-gradient-echo') return;
   const cyclesPerMs = fatShiftHz(model.scanner.fieldT) / 1000;
   const first = p.echoTimeMs * cyclesPerMs;
   const second = p.secondEchoTimeMs * cyclesPerMs;

@@ -10,13 +10,16 @@ import { inWords } from './number-words.js';
 
 type Add = (caution: Caution) => void;
 
+/** An estimate that the preset already undercuts by as much says more about the estimate than about the edit. */
+function levelOf(short: number, shortBefore: number): 'note' | 'caution' {
+  return atMost(short, shortBefore) ? 'note' : 'caution';
+}
+
 /** Timing that cannot be played, and timing under the estimates of the fastest possible. */
 export function timingCautions(model: SeriesModel, baseline: Baseline, add: Add): void {
   const p = model.series.parameters;
   const before = baseline.model.series.parameters;
   const beforeMinimum = baseline.model.minimum;
-  // An estimate that the preset already undercuts by as much says more about the estimate than about the edit.
-  const levelOf = (short: number, shortBefore: number) => (atMost(short, shortBefore) ? ('note' as const) : ('caution' as const));
   if (model.impossible !== null) {
     add({ code: 'timing-impossible', level: 'error', text: `impossible timing: ${model.impossible}`, numbers: { repetitionTimeMs: p.repetitionTimeMs, echoTimeMs: p.echoTimeMs } });
   }

@@ -26,7 +26,7 @@ type SignalOf = (setting: SignalSetting, echoTimeMs: number, tissue: Tissue) => 
 function startsAtEquilibrium({ key, parameters: p }: SignalSetting): boolean {
   if (p.averages !== 1 || p.dummyShots !== 0) return false;
   if (key === 'single-shot-fast-spin-echo/2D') return true;
-  return key.startsWith('echo-planar') && p.volumes === 1 && p.diffusion === undefined;
+  return classRow(key).echoPlanar && p.volumes === 1 && p.diffusion === undefined;
 }
 
 /** From one excitation of a slice to the next, ms: single-shot series come back to a slice after all slices of the round. */

@@ -103,15 +103,10 @@ const tissue: Schema = { enum: tissueNames, description: 'name of the tissue tab
 const keyList: Schema = { type: 'array', items: { enum: parameterKeys }, maxItems: parameterKeys.length };
 const idList: Schema = { type: 'array', items: { type: 'string' }, maxItems: presetLimits.series };
 
-/** Spelt apart, since an object with a `then` looks like a promise. */
-const consequenceKey = 'then';
-
 /** `if` and `then` of JSON Schema. */
 function onlyWhere(condition: Schema, consequence: Schema): Schema {
-  return Object.fromEntries([
-    ['if', condition],
-    [consequenceKey, consequence],
-  ]);
+  // biome-ignore lint/suspicious/noThenProperty: a keyword of JSON Schema, and no promise
+  return { if: condition, then: consequence }; // oxlint-disable-line no-thenable
 }
 
 /** What a class asks beyond the table: the keys it needs, and that it exists. */

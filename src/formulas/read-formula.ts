@@ -7,6 +7,8 @@ import type { ParsedNode, ParseExpression } from './parsed-node.js';
 export interface FormulaProblem extends Problem {
   readonly given: string;
   readonly expected: string;
+  /** The part that is refused, as text; empty where it is the whole. */
+  readonly part: string;
 }
 
 export type FormulaReading =
@@ -18,8 +20,8 @@ const longestFormula = 9999;
 const allowedCharacter = /[A-Za-z0-9_.,()<>=!+\-*/^ \t]/;
 const shown = (text: string) => (text.length > 60 ? `${text.slice(0, 57)}...` : text).replace(/[^\x20-\x7e]/g, '?');
 
-function refused(code: string, given: string, expected: string, hint: string): FormulaReading {
-  return { ok: false, problems: [{ code, path: '', message: `${given}; expected ${expected}.`, hint, given, expected }] };
+function refused(code: string, given: string, expected: string, hint: string, part = ''): FormulaReading {
+  return { ok: false, problems: [{ code, path: '', message: `${given}; expected ${expected}.`, hint, given, expected, part }] };
 }
 
 /** What can be refused without parsing: length, foreign characters, parentheses too deep for a recursive parser. */
@@ -91,6 +93,6 @@ export function readFormula(text: string, parse: ParseExpression): FormulaReadin
     const { code, part, because, expected, hint } = error.refusal;
     const at = part === '' ? -1 : text.indexOf(part);
     const place = at === -1 ? '' : ` at character ${at + 1}`;
-    return refused(code, part === '' ? because : `${because} in "${shown(part)}"${place}`, expected, hint);
+    return refused(code, part === '' ? because : `${because} in "${shown(part)}"${place}`, expected, hint, part);
   }
 }

@@ -54,11 +54,13 @@ export function readQuantity(text: string, unit: string): QuantityReading {
   const factor = suffix === '' ? 1 : name === undefined ? undefined : units[name];
   if (factor === undefined) return refused;
   const value = scaled(Number(number), factor);
-  return Number.isFinite(value) ? { ok: true, value } : refused;
+  // Minus zero becomes zero.
+  return Number.isFinite(value) ? { ok: true, value: value + 0 } : refused;
 }
 
 /** Without the last binary digits: 1.005 s is 1005 ms and no 1004.9999999999999. Division by the whole inverse where there is one. */
 function scaled(number: number, factor: number): number {
+  if (factor === 1) return number;
   const inverse = Math.round(1 / factor);
   const product = factor < 1 && Math.abs(inverse * factor - 1) < 1e-12 ? number / inverse : number * factor;
   return Number(product.toPrecision(15));

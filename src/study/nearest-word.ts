@@ -21,7 +21,7 @@ const longestWord = 64;
 
 /**
  * The known word that a misspelt one most likely means, or null when nothing is near: at most a third of its letters
- * (and at least one) may be wrong. Case, blanks, `-` and `_` do not count; a word that only one known word starts with is near too.
+ * (and at least one) may be wrong, of two letters only their order. Case, blanks, `-` and `_` do not count; a word that only one known word starts with is near too.
  * Optimal string alignment distance (Damerau, Commun ACM 1964;7:171).
  *
  * @example nearestWord('matrixReed', ['matrixRead', 'matrixPhase']) //=> 'matrixRead'
@@ -32,6 +32,10 @@ export function nearestWord(word: string, known: readonly string[]): string | nu
   const plain = (text: string) => text.toLowerCase().replace(/[\s_-]/g, '');
   const wanted = plain(word);
   if (wanted === '') return null;
+  if (wanted.length < 3) {
+    const letters = (text: string) => [...text].sort().join('');
+    return known.find((candidate) => letters(plain(candidate)) === letters(wanted)) ?? null;
+  }
   let best: string | null = null;
   let bestDistance = Math.max(1, Math.floor(wanted.length / 3)) + 1;
   for (const candidate of known) {
@@ -42,6 +46,6 @@ export function nearestWord(word: string, known: readonly string[]): string | nu
     }
   }
   if (best !== null) return best;
-  const starting = wanted.length < 3 ? [] : known.filter((candidate) => plain(candidate).startsWith(wanted));
+  const starting = known.filter((candidate) => plain(candidate).startsWith(wanted));
   return starting.length === 1 ? (starting[0] as string) : null;
 }

@@ -1,4 +1,5 @@
 import type { ParameterKey } from '../calc/parameters.js';
+import { formulaNames } from '../formulas/formula-names.js';
 import type { ParseExpression } from '../formulas/parsed-node.js';
 import { readFormula } from '../formulas/read-formula.js';
 import { cleanText } from './clean-text.js';
@@ -85,8 +86,11 @@ function checkMustKeep(mustKeep: MustKeep, path: JsonPath, say: Say, parse: Pars
     if (formula === undefined || parse === undefined) continue;
     const read = readFormula(formula, parse);
     if (read.ok) continue;
-    for (const problem of read.problems)
-      say([...path, key], { code: problem.code, given: problem.given, expected: problem.expected, hint: problem.hint });
+    for (const problem of read.problems) {
+      const near = problem.code === 'formula-name' ? nearestWord(problem.part, [...formulaNames.keys()]) : null;
+      const hint = near === null ? problem.hint : `Did you mean "${near}"?`;
+      say([...path, key], { code: problem.code, given: problem.given, expected: problem.expected, hint });
+    }
   }
 }
 

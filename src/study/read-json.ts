@@ -65,9 +65,9 @@ export function readJson(text: string, deepest: number): JsonReading {
       if (unit === 34) break;
       if (unit === 92) {
         escapes.lastIndex = at;
-        const escape = escapes.exec(text)?.[0];
-        if (escape === undefined) stop('not-json', at, `"${text.slice(at, at + 2)}"`, 'a backslash only before " \\ / b f n r t or uXXXX');
-        else at += escape.length;
+        const escaped = escapes.exec(text)?.[0];
+        if (escaped === undefined) stop('not-json', at, `"${text.slice(at, at + 2)}"`, 'a backslash only before " \\ / b f n r t or uXXXX');
+        else at += escaped.length;
       } else at += 1;
     }
     at += 1;

@@ -32,8 +32,8 @@ function refusal(text: string, fileName: string): Problem | null {
     const message = `${name}: more than ${presetLimits.bytes / 1e6} MB were given; expected a preset of at most ${presetLimits.bytes / 1e6} MB.`;
     return { code: 'too-large', path: '', message, hint: 'A preset is one study: check that this is the right file.' };
   }
-  // oxlint-disable-next-line no-control-regex
-  const binary = text.search(/[\u0000-\u0008\u000e-\u001f\uFFFD]/);
+  // Controls that neither JSON nor a text editor uses, and what a decoder puts where bytes are no UTF-8.
+  const binary = text.search(/[^\P{Cc}\t\n\v\f\r\u007f-\u009f]|\uFFFD/u);
   if (binary === -1) return null;
   const message = `${name}, line ${lineOf(text, binary)}: bytes that are no text were given; expected a JSON file in UTF-8.`;
   return { code: 'not-text', path: '', message, hint: 'Check that this is the right file.' };

@@ -52,12 +52,22 @@ function unknownKey(key: string, known: readonly string[]): Finding {
 }
 
 function wrongWord(value: unknown, known: readonly unknown[], expected: string): Finding {
-  const near = known.length > 1 && typeof value === 'string' ? nearestWord(value, known.map(String)) : null;
+  const near = typeof value === 'string' ? nearestWord(value, known.map(String)) : null;
   return {
     code: 'unknown-word',
     given: `${shownValue(value)} was given`,
     expected,
     hint: near === null ? 'Use one of the known names, spelt as in the schema.' : `Did you mean "${near}"?`,
+  };
+}
+
+function noSuchClass(error: SchemaError): Finding {
+  const given = `${shownValue(error.data)} was given`;
+  return {
+    code: 'unknown-class',
+    given,
+    expected: `${String((error.schema as unknown[])[0])} in this family`,
+    hint: 'Change the acquisition, or the family.',
   };
 }
 
@@ -92,11 +102,17 @@ function findingOf(error: SchemaError): Finding | null {
         hint: `Add "${String(error.params.missingProperty)}".`,
       };
     case 'enum':
+      if (error.instancePath.endsWith('/acquisition') && (error.schema as unknown[]).length === 1) return noSuchClass(error);
       return error.propertyName === undefined
         ? wrongWord(error.data, error.schema as unknown[], expectedValue(error.parentSchema))
         : unknownKey(error.propertyName, error.schema as string[]);
     case 'const':
-      return wrongWord(error.data, [error.schema], shownValue(error.schema));
+      return {
+        code: 'unknown-word',
+        given: `${shownValue(error.data)} was given`,
+        expected: shownValue(error.schema),
+        hint: 'Change it to that.',
+      };
     case 'type':
       return {
         code: 'wrong-type',

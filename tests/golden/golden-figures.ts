@@ -18,7 +18,7 @@ type Plain = string | number | boolean | null | readonly Plain[] | { readonly [k
 
 /** What the model says of one shipped series. */
 export interface GoldenSeries {
-  /** Of the series as its file gives it: tells a changed preset from a changed model. */
+  /** Of what the model reads of the series in its file: tells a changed preset from a changed model. */
   readonly preset: string;
   readonly parameters: Plain;
   readonly figures: Plain;
@@ -53,6 +53,20 @@ const comparing = [
   'roundsNeeded',
   'blurFwhmPx',
 ] as const satisfies readonly (keyof Figures)[];
+
+/** What the model reads of a series in a preset file. */
+const readByModel = [
+  'family',
+  'acquisition',
+  'plane',
+  'purpose',
+  'target',
+  'comparison',
+  'contrastAgent',
+  'nullTissue',
+  'tissueOverrides',
+  'parameters',
+];
 
 function plain(value: unknown): Plain {
   return JSON.parse(JSON.stringify(value)) as Plain;
@@ -105,9 +119,13 @@ export function goldenNow(): Golden {
     const text = readFileSync(`${presetFolder}${file}`, 'utf8');
     const study = readPreset(text, file);
     if (!study.ok) throw new Error(study.problems[0]?.message);
-    const given = JSON.parse(text) as { readonly fieldT: number; readonly series: readonly object[] };
+    const given = JSON.parse(text) as { readonly fieldT: number; readonly series: readonly Record<string, unknown>[] };
     study.value.series.forEach((one, i) => {
-      series[`${study.value.id}/${one.id}`] = goldenSeries(one, study.value.fieldT, JSON.stringify([given.fieldT, given.series[i]]));
+      series[`${study.value.id}/${one.id}`] = goldenSeries(
+        one,
+        study.value.fieldT,
+        JSON.stringify([given.fieldT, readByModel.map((key) => given.series[i]?.[key])]),
+      );
     });
   }
   return { modelVersion, series };

@@ -48,7 +48,7 @@ function power(a: Interval, b: Interval): Interval {
 }
 
 /** Bounds of the numeric part of a formula over a box of values. */
-export function boundNumber(tree: NumberTree, boundsOf: BoundsOfName): Interval {
+function boundNumber(tree: NumberTree, boundsOf: BoundsOfName): Interval {
   switch (tree.kind) {
     case 'number':
       return { low: tree.value, high: tree.value, sure: true };

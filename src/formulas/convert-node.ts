@@ -1,23 +1,7 @@
 import { type Arithmetic, type CallName, type Comparison, callNames, deepestFormula, type Formula, type NumberTree } from './formula.js';
 import { formulaNames } from './formula-names.js';
 import type { ParsedNode } from './parsed-node.js';
-
-/** Why a part of a formula is not allowed. */
-export interface Refusal {
-  readonly code: 'formula-part' | 'formula-name' | 'formula-kind' | 'formula-depth';
-  /** The part, as text. */
-  readonly part: string;
-  readonly because: string;
-  readonly expected: string;
-  readonly hint: string;
-}
-
-/** Carries a refusal up to the reader of the formula. */
-export class NotAllowed extends Error {
-  constructor(readonly refusal: Refusal) {
-    super(refusal.because);
-  }
-}
+import { allowed, checkDepth, refuse, refuseKind } from './refusal.js';
 
 const comparisons: ReadonlyMap<string, Comparison> = new Map([
   ['smaller', '<'],
@@ -34,58 +18,6 @@ const arithmetic: ReadonlyMap<string, Arithmetic> = new Map([
   ['divide', '/'],
   ['pow', '^'],
 ]);
-
-const kindsInWords: ReadonlyMap<string, string> = new Map([
-  ['AssignmentNode', 'an assignment'],
-  ['FunctionAssignmentNode', 'the definition of a function'],
-  ['AccessorNode', 'a property'],
-  ['IndexNode', 'an index'],
-  ['ArrayNode', 'a matrix'],
-  ['ObjectNode', 'an object'],
-  ['RangeNode', 'a range'],
-  ['BlockNode', 'more than one expression'],
-  ['ConditionalNode', 'a choice with ? and :'],
-  ['ConstantNode', 'a value that is no number'],
-  ['FunctionNode', 'a function'],
-]);
-
-const allowed = 'names of parameters and figures, numbers, comparisons, and, or, not, + - * / ^, parentheses, min, max, abs, sqrt';
-
-function partOf(node: ParsedNode): string {
-  try {
-    return (node as unknown as { toString(): string }).toString();
-  } catch {
-    return node.type;
-  }
-}
-
-function refuse(
-  node: ParsedNode,
-  code: Refusal['code'],
-  because: string,
-  expected = allowed,
-  hint = 'Write the rule with what is allowed.',
-): never {
-  throw new NotAllowed({ code, part: partOf(node), because, expected, hint });
-}
-
-function refuseKind(node: ParsedNode): never {
-  const operator = node.type === 'OperatorNode' ? `the operator "${String(node.op)}"` : (kindsInWords.get(node.type) ?? 'something');
-  const hint = node.type === 'AssignmentNode' ? 'Compare with == instead of =.' : 'Write the rule with what is allowed.';
-  return refuse(node, 'formula-part', `${operator} is not allowed`, allowed, hint);
-}
-
-function checkDepth(node: ParsedNode, depth: number): void {
-  if (depth > deepestFormula) {
-    throw new NotAllowed({
-      code: 'formula-depth',
-      part: '',
-      because: `it is nested more than ${deepestFormula} deep`,
-      expected: `at most ${deepestFormula} levels`,
-      hint: `Split it into several rules (${node.type}).`.replace(/ \(.*\)/, ''),
-    });
-  }
-}
 
 const argsOf = (node: ParsedNode): readonly ParsedNode[] => (Array.isArray(node.args) ? (node.args as ParsedNode[]) : []);
 
@@ -132,8 +64,8 @@ function callOf(node: ParsedNode, depth: number): NumberTree {
 }
 
 /** The part of a formula under a node that must be a number. Depth counts from 1. */
-export function toNumber(node: ParsedNode, depth: number): NumberTree {
-  checkDepth(node, depth);
+function toNumber(node: ParsedNode, depth: number): NumberTree {
+  checkDepth(depth);
   const inside = unwrapped(node);
   if (inside !== null) return toNumber(inside, depth + 1);
   if (node.type === 'ConstantNode') {
@@ -184,13 +116,13 @@ function chainOf(node: ParsedNode, depth: number): Formula {
       right: toNumber(params[i + 1] as ParsedNode, depth + 1),
     };
   });
-  if (links.length > deepestFormula) checkDepth(node, links.length);
+  if (links.length > deepestFormula) checkDepth(links.length);
   return links.slice(1).reduce<Formula>((left, right) => ({ kind: 'and', left, right }), links[0] as Formula);
 }
 
 /** The part of a formula under a node that must be true or false. Depth counts from 1. */
 export function toFormula(node: ParsedNode, depth: number): Formula {
-  checkDepth(node, depth);
+  checkDepth(depth);
   const inside = unwrapped(node);
   if (inside !== null) return toFormula(inside, depth + 1);
   if (node.type === 'SymbolNode') return { kind: 'flag', name: nameOf(node, 'flag') };

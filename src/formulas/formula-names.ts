@@ -16,7 +16,7 @@ export const formulaNames: ReadonlyMap<string, 'number' | 'flag'> = new Map<stri
 ]);
 
 /** Value of a parameter as rules and limits see it: a number, a flag, or null when it is absent or neither. */
-export function parameterAsSeen(key: ParameterKey, parameters: Parameters): number | boolean | null {
+function parameterAsSeen(key: ParameterKey, parameters: Parameters): number | boolean | null {
   if (key === 'diffusion') return parameters.diffusion === undefined ? null : Math.max(...parameters.diffusion.bValuesSPerMm2);
   const value = parameters[key];
   return typeof value === 'number' || typeof value === 'boolean' ? value : null;

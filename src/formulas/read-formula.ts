@@ -1,7 +1,8 @@
 import type { Problem } from '../calc/problem.js';
-import { NotAllowed, toFormula } from './convert-node.js';
+import { toFormula } from './convert-node.js';
 import { deepestFormula, type Formula } from './formula.js';
 import type { ParsedNode, ParseExpression } from './parsed-node.js';
+import { NotAllowed } from './refusal.js';
 
 /** A problem of a formula, with its parts for messages that add file and line. */
 export interface FormulaProblem extends Problem {

@@ -7,5 +7,5 @@ export function canDraw(
   output: { readonly isTTY?: boolean },
   environment: Readonly<Record<string, string | undefined>>,
 ): boolean {
-  return input.isTTY === true && output.isTTY === true && environment['TERM'] !== 'dumb';
+  return input.isTTY === true && output.isTTY === true && environment.TERM !== 'dumb';
 }

@@ -15,9 +15,9 @@ export interface ColourQuestion {
 
 /** What the terminal says of itself in TERM and COLORTERM. */
 function levelOfTerminal(environment: ColourQuestion['environment']): ColourLevel {
-  const term = environment['TERM'] ?? '';
+  const term = environment.TERM ?? '';
   if (term === 'dumb' || term === '') return 0;
-  if (/^(truecolor|24bit)$/i.test(environment['COLORTERM'] ?? '') || /-direct/.test(term)) return 3;
+  if (/^(truecolor|24bit)$/i.test(environment.COLORTERM ?? '') || /-direct/.test(term)) return 3;
   if (/-256(color)?$/i.test(term)) return 2;
   if (/-m(ono)?$|^vt(52|100|102|220|320)(-|$)/.test(term)) return 0;
   return 1;
@@ -42,8 +42,8 @@ function forcedLevel(force: string, environment: ColourQuestion['environment']):
  */
 export function colourLevel({ choice, environment, isTerminal }: ColourQuestion): ColourLevel {
   if (choice !== undefined) return colourChoices[choice];
-  const force = environment['FORCE_COLOR'];
+  const force = environment.FORCE_COLOR;
   if (force !== undefined) return forcedLevel(force, environment);
-  if (environment['NO_COLOR']) return 0;
+  if (environment.NO_COLOR) return 0;
   return isTerminal ? levelOfTerminal(environment) : 0;
 }

@@ -75,7 +75,7 @@ export const asciiGlyphs: Glyphs = {
  * @example isUtf8Locale({ LANG: 'de_DE.UTF-8', LC_ALL: 'C' }) //=> false
  */
 export function isUtf8Locale(environment: Readonly<Record<string, string | undefined>>): boolean {
-  return /utf-?8/i.test(environment['LC_ALL'] || environment['LC_CTYPE'] || environment['LANG'] || '');
+  return /utf-?8/i.test(environment.LC_ALL || environment.LC_CTYPE || environment.LANG || '');
 }
 
 /**

@@ -16,9 +16,14 @@ export interface HeldOutput {
  * shown once the screen has been left.
  */
 export function holdOutput(stream: NodeJS.WriteStream): HeldOutput {
-  const original = stream.write;
+  const original = stream.write.bind(stream);
+  const ownProperty = Object.getOwnPropertyDescriptor(stream, 'write');
   let held = '';
-  const keep = (chunk: string | Uint8Array, encoding?: BufferEncoding | ((error?: Error | null) => void), done?: (error?: Error | null) => void): boolean => {
+  const keep = (
+    chunk: string | Uint8Array,
+    encoding?: BufferEncoding | ((error?: Error | null) => void),
+    done?: (error?: Error | null) => void,
+  ): boolean => {
     if (held.length < mostHeldCharacters) held += typeof chunk === 'string' ? chunk : Buffer.from(chunk).toString('utf8');
     const callback = typeof encoding === 'function' ? encoding : done;
     if (callback !== undefined) process.nextTick(callback);
@@ -26,14 +31,15 @@ export function holdOutput(stream: NodeJS.WriteStream): HeldOutput {
   };
   return {
     write: (text, done) => {
-      original.call(stream, text, 'utf8', done === undefined ? undefined : () => done());
+      original(text, 'utf8', done === undefined ? undefined : () => done());
     },
     hold: () => {
       stream.write = keep as typeof stream.write;
     },
     release: (drop) => {
-      stream.write = original;
-      if (held !== '' && drop === undefined) original.call(stream, held, 'utf8');
+      if (ownProperty === undefined) Reflect.deleteProperty(stream, 'write');
+      else Object.defineProperty(stream, 'write', ownProperty);
+      if (held !== '' && drop === undefined) original(held, 'utf8');
       held = '';
     },
   };

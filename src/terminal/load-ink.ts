@@ -1,7 +1,7 @@
 /** What is used of ink, and the colour library that ink draws with. */
 export interface LoadedInk {
-  readonly render: (typeof import('ink'))['render'];
-  readonly chalk: (typeof import('chalk'))['default'];
+  readonly render: typeof import('ink')['render'];
+  readonly chalk: typeof import('chalk')['default'];
 }
 
 /**

@@ -21,9 +21,12 @@ describe('isSureWidth', () => {
     expect(isSureWidth(text)).toBe(true);
   });
 
-  it.each(['\u00b1', '\u00b0', '\u00d7', '\u2026', '\u2500', '\u2588', '\u2190', '\u03b1', '\u{1f600}', '\u2714', 'e\u0301', '\u0085'])('says no to %j', (text) => {
-    expect(isSureWidth(text)).toBe(false);
-  });
+  it.each(['\u00b1', '\u00b0', '\u00d7', '\u2026', '\u2500', '\u2588', '\u2190', '\u03b1', '\u{1f600}', '\u2714', 'e\u0301', '\u0085'])(
+    'says no to %j',
+    (text) => {
+      expect(isSureWidth(text)).toBe(false);
+    },
+  );
 });
 
 describe('fitText', () => {
@@ -41,11 +44,16 @@ describe('fitText', () => {
 
   it('is always exactly as wide as asked', () => {
     fc.assert(
-      fc.property(fc.string({ unit: 'grapheme', maxLength: 12 }), fc.nat({ max: 15 }), fc.constantFrom('left', 'right'), (text, columns, align) => {
-        // Where the pieces of a text add up to something else than the whole (jamo that join), no cut can be exact.
-        fc.pre(graphemesOf(text).reduce((sum, grapheme) => sum + textWidth(grapheme), 0) === textWidth(text));
-        expect(textWidth(fitText(text, columns, '~', align))).toBe(columns);
-      }),
+      fc.property(
+        fc.string({ unit: 'grapheme', maxLength: 12 }),
+        fc.nat({ max: 15 }),
+        fc.constantFrom('left', 'right'),
+        (text, columns, align) => {
+          // Where the pieces of a text add up to something else than the whole (jamo that join), no cut can be exact.
+          fc.pre(graphemesOf(text).reduce((sum, grapheme) => sum + textWidth(grapheme), 0) === textWidth(text));
+          expect(textWidth(fitText(text, columns, '~', align))).toBe(columns);
+        },
+      ),
     );
   });
 });

@@ -7,13 +7,14 @@
  * Ink remembers every text it has measured or wrapped and never forgets one: over 40,000 keys the heap doubles. The plugin puts
  * `measure-text.ts` and `wrap-text.ts` of this folder in the place of ink's files, which do the same and forget. It fails the build
  * when ink's files are not where they were, instead of leaving the unbounded ones in silently. It also leaves out ink's connection to
- * development tools, whose package is not installed.
+ * development tools: their package is not installed, and a bundled ink started with DEV=true in the environment would end at once,
+ * looking for a file beside itself.
  */
 import { fileURLToPath } from 'node:url';
 import type { Plugin } from 'esbuild';
 
-/** Production React, which does not keep what it drew, and ink that never looks for development tools. */
-export const inkDefines: Record<string, string> = { 'process.env.NODE_ENV': '"production"', 'process.env.DEV': '"false"' };
+/** Production React, which does not keep what it drew. */
+export const inkDefines: Record<string, string> = { 'process.env.NODE_ENV': '"production"' };
 
 const replacements: ReadonlyMap<string, string> = new Map([
   ['measure-text', 'measureText'],
@@ -39,6 +40,7 @@ export function replaceInkCaches(): Plugin {
         resolveDir: fileURLToPath(new URL('.', import.meta.url)),
       }));
       build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]devtools\.js$/ }, () => ({ contents: '' }));
+      build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]utils\.js$/ }, () => ({ contents: 'export const isDev = () => false;' }));
       build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]ink\.js$/ }, () => {
         inkSeen = true;
         return undefined;

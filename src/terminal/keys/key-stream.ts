@@ -85,7 +85,8 @@ function afterEscape(state: KeyState & { mode: 'escape' }, byte: number, nowMs: 
   }
   const linuxConsoleKey = bytes.length === 2 && bytes[1] === bracket;
   if (linuxConsoleKey && isFinal(byte)) return noKeys;
-  if (bytes.length === 1 && introducer === bracket && byte === bracket && !late) return { ...state, bytes: [...bytes, byte], sinceMs: nowMs };
+  if (bytes.length === 1 && introducer === bracket && byte === bracket && !late)
+    return { ...state, bytes: [...bytes, byte], sinceMs: nowMs };
   // After a bare `O`, and after a bare `[` that came late, only a letter that keys use ends a sequence: the rest was typed.
   const bare = bytes.length === 1 && (introducer === letterO || late);
   if (isFinal(byte) && (!bare || keyLetters.test(String.fromCharCode(byte)))) return finish(bytes, byte, late, nowMs, out);

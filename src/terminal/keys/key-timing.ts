@@ -17,7 +17,7 @@ export interface KeyTiming {
  */
 export function keyTiming(environment: Readonly<Record<string, string | undefined>>, escapeMs?: number): KeyTiming {
   return {
-    escapeMs: escapeMs ?? (environment['SSH_CONNECTION'] ? 150 : 50),
+    escapeMs: escapeMs ?? (environment.SSH_CONNECTION ? 150 : 50),
     tailMs: 1000,
     sequenceMs: 1000,
     pasteIdleMs: 5000,

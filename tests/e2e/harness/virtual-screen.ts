@@ -86,7 +86,10 @@ export function createVirtualScreen(columns: number, rows: number): VirtualScree
   return {
     terminal,
     write: (bytes) => new Promise((resolve) => terminal.write(bytes, resolve)),
-    text: () => Array.from({ length: terminal.rows }, (_, y) => lineAt(y)?.translateToString(true).trimEnd() ?? '').join('\n').trimEnd(),
+    text: () =>
+      Array.from({ length: terminal.rows }, (_, y) => lineAt(y)?.translateToString(true).trimEnd() ?? '')
+        .join('\n')
+        .trimEnd(),
     cell,
     cells: () =>
       Array.from({ length: terminal.rows }, (_row, y) =>

@@ -1,6 +1,6 @@
 /**
- * A small program for tests of the terminal room. `up` and `down` change a number, a paste and text are shown, `q` closes, `x` throws,
- * `r` rejects, `s` stays busy. With the argument `tall` the frame is as high as the screen.
+ * A small program for tests of the terminal room. Up and down change a number, other keys are shown; `q` closes, `e` exits without
+ * closing, `x` throws, `r` rejects, `b` breaks the component, `p` prints. With the argument `tall` the frame is as high as the screen.
  */
 import { writeFileSync } from 'node:fs';
 import { Box, Text } from 'ink';
@@ -11,13 +11,15 @@ import { cursorHere } from '../../../src/terminal/painter/cursor-mark.js';
 import type { Size } from '../../../src/terminal/size.js';
 
 const tall = process.argv.includes('tall');
-const noteFile = process.env['NOTE_FILE'];
+const noteFile = process.env.NOTE_FILE;
 let count = 5;
 let keys = 0;
 let last = '';
+let broken = false;
 let mounted: Mounted | undefined;
 
 function Counter({ size }: { size: Size }) {
+  if (broken) throw new Error('broken on purpose');
   return (
     <Box flexDirection="column" height={tall ? size.rows : 8} width={size.columns}>
       <Text>
@@ -25,6 +27,7 @@ function Counter({ size }: { size: Size }) {
       </Text>
       <Text color="green">count {cursorHere(String(count))}</Text>
       <Text>last {last}</Text>
+      <Text>pid {process.pid}.</Text>
       <Text>wide {'\u6f22\u5b57'} end</Text>
       <Box flexGrow={1} />
       <Text bold>bottom line</Text>
@@ -42,6 +45,8 @@ function onKey(key: Key): void {
       throw new Error('thrown on purpose');
     });
   } else if (key.name === 'text' && key.text === 'r') void Promise.reject(new Error('rejected on purpose'));
+  else if (key.name === 'text' && key.text === 'e') process.exit(3);
+  else if (key.name === 'text' && key.text === 'b') broken = true;
   else if (key.name === 'text' && key.text === 'p') console.log('a stray print');
   else last = `${keys}:${key.name}${'text' in key ? ` <${key.text}>` : ''}`;
   mounted?.redraw();

@@ -1,4 +1,4 @@
-import { mkdtempSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { build } from 'esbuild';
@@ -9,9 +9,14 @@ import { inkDefines, replaceInkCaches } from '../../../src/terminal/ink-caches/i
 import { measureText } from '../../../src/terminal/ink-caches/measure-text.js';
 import { type TextWrap, wrapText } from '../../../src/terminal/ink-caches/wrap-text.js';
 
-const inkFile = async (name: string) => ((await import(new URL(`../../../node_modules/ink/build/${name}.js`, import.meta.url).href)) as { default: unknown }).default;
+const inkFile = async (name: string) =>
+  ((await import(new URL(`../../../node_modules/ink/build/${name}.js`, import.meta.url).href)) as { default: unknown }).default;
 
-const text = fc.array(fc.oneof(fc.string({ maxLength: 8 }), fc.constantFrom('\n', ' ', '\u6f22\u5b57', '\u001b[31m', '\u001b[39m', 'e\u0301')), { maxLength: 8 }).map((parts) => parts.join(''));
+const text = fc
+  .array(fc.oneof(fc.string({ maxLength: 8 }), fc.constantFrom('\n', ' ', '\u6f22\u5b57', '\u001b[31m', '\u001b[39m', 'e\u0301')), {
+    maxLength: 8,
+  })
+  .map((parts) => parts.join(''));
 
 describe('boundedCache', () => {
   it('remembers the latest and what was asked for, and forgets the rest', () => {
@@ -37,7 +42,12 @@ describe('boundedCache', () => {
 describe('the replacements', () => {
   it('measure as ink does', async () => {
     const inkMeasure = (await inkFile('measure-text')) as typeof measureText;
-    fc.assert(fc.property(text, (value) => expect(measureText(value)).toEqual(inkMeasure(value))));
+    fc.assert(
+      fc.property(text, (value) => {
+        expect(measureText(value)).toEqual(inkMeasure(value));
+        expect(measureText(value)).toEqual(inkMeasure(value));
+      }),
+    );
   });
 
   it('wrap and cut as ink does', async () => {
@@ -74,17 +84,13 @@ describe('bundling', () => {
     const inputs = await bundle("export { render } from 'ink';");
     expect(inputs.some((input) => input.endsWith('ink/build/dom.js'))).toBe(true);
     expect(inputs.filter((input) => /ink\/build\/(measure-text|wrap-text)\.js$/.test(input))).toEqual([]);
-    expect(inputs.filter((input) => input.startsWith('src/terminal/ink-caches/')).map((input) => input.split('/').at(-1)).sort()).toEqual([
-      'bounded-cache.ts',
-      'measure-text.ts',
-      'wrap-text.ts',
-    ]);
+    const ours = inputs.filter((input) => input.startsWith('src/terminal/ink-caches/')).map((input) => input.split('/').at(-1));
+    expect(new Set(ours)).toEqual(new Set(['bounded-cache.ts', 'measure-text.ts', 'wrap-text.ts']));
     expect(inputs.filter((input) => input.includes('react-devtools-core'))).toEqual([]);
   });
 
   it('fails if ink has moved them', async () => {
     const folder = join(mkdtempSync(join(tmpdir(), 'holdfast-bundle-')), 'node_modules/ink/build');
-    const { mkdirSync } = await import('node:fs');
     mkdirSync(folder, { recursive: true });
     writeFileSync(join(folder, 'ink.js'), "import './dom.js'; export const render = 1;");
     writeFileSync(join(folder, 'dom.js'), "import './wrap-text.js';");

@@ -6,9 +6,11 @@ import { createVirtualScreen } from '../../e2e/harness/virtual-screen.js';
 
 const size = { columns: 12, rows: 4 };
 
+const screen = createVirtualScreen(size.columns, size.rows);
+
 /** Cells as they look: a blank without background, inversion or line has no other looks. */
 async function screenAfter(...writes: string[]): Promise<string[]> {
-  const screen = createVirtualScreen(size.columns, size.rows);
+  screen.terminal.reset();
   await screen.write('\u001b[?7l');
   for (const write of writes) await screen.write(write);
   const cells: string[] = [];
@@ -20,7 +22,6 @@ async function screenAfter(...writes: string[]): Promise<string[]> {
     }
   }
   expect(screen.scrolledLines()).toBe(0);
-  screen.terminal.dispose();
   return cells;
 }
 
@@ -32,7 +33,12 @@ const part = fc.oneof(
   { weight: 2, arbitrary: sgr.map((parameters) => `\u001b[${parameters}m`) },
   { weight: 1, arbitrary: fc.constantFrom('\u6f22', '\u5b57\u6f22', '\u28ff\u2847', '\u2713', '\u00b5', '\u00b1', 'e\u0301') },
 );
-const frame = fc.array(fc.array(part, { maxLength: 5 }).map((parts) => parts.join('')), { maxLength: 5 }).map((lines) => lines.join('\n'));
+const frame = fc
+  .array(
+    fc.array(part, { maxLength: 5 }).map((parts) => parts.join('')),
+    { maxLength: 5 },
+  )
+  .map((lines) => lines.join('\n'));
 
 describe('painting the difference', () => {
   it('from frame A to frame B shows what painting B alone shows', async () => {
@@ -48,7 +54,7 @@ describe('painting the difference', () => {
   it('shows what the grid holds', async () => {
     await fc.assert(
       fc.asyncProperty(frame, async (a) => {
-        const screen = createVirtualScreen(size.columns, size.rows);
+        screen.terminal.reset();
         await screen.write(paintDifference(null, grid(a)));
         grid(a).rows.forEach((row, y) => {
           row.cells.forEach((cell, x) => {
@@ -56,11 +62,12 @@ describe('painting the difference', () => {
             expect(shown.text).toBe(cell.text);
             if (cell.text !== ' ') {
               const marks = cell.style.replace(/[34]8;(2(;\d+){3}|5;\d+)/g, '').split(';');
-              expect([shown.bold, shown.dim, shown.underline, shown.inverse]).toEqual(['1', '2', '4', '7'].map((mark) => marks.includes(mark)));
+              expect([shown.bold, shown.dim, shown.underline, shown.inverse]).toEqual(
+                ['1', '2', '4', '7'].map((mark) => marks.includes(mark)),
+              );
             }
           });
         });
-        screen.terminal.dispose();
       }),
       { numRuns: 200 },
     );

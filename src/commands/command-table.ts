@@ -10,6 +10,12 @@ export const everywhere: readonly OptionRow[] = [
   { name: 'help', value: null, help: 'this help' },
 ];
 
+/** Options of the program itself, without a command. */
+export const bareOptions: readonly OptionRow[] = [
+  ...everywhere,
+  { name: 'version', value: null, help: 'version of the program and of its model' },
+];
+
 /** The table of commands. */
 export const commandTable: readonly CommandRow[] = [
   {

@@ -61,11 +61,14 @@ function figuresOf(preset: LoadedPreset, seriesId: string | undefined, request: 
   const page = pageOf(request, io);
   const single = picked.value.length === 1 ? results[0] : undefined;
   if (single === undefined) return { ok: true, value: page.plain(studyPage(study, fieldT, results, page)) };
-  const asPreset = seriesResult(single.series, {}, presetBaseline(single.series, study.fieldT), {
-    scanner: plainScanner(study.fieldT),
-    body: unknownBody,
-    rules,
-  });
+  // Readings are of the preset: its own figures scale with them too.
+  const asPreset = seriesResult(
+    single.series,
+    {},
+    presetBaseline(single.series, study.fieldT),
+    { scanner: plainScanner(study.fieldT), body: unknownBody, rules },
+    { readings: readings.value },
+  );
   return { ok: true, value: page.plain(seriesPage(study, fieldT, single, asPreset, page)) };
 }
 

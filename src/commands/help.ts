@@ -1,5 +1,5 @@
 import type { CommandRow, OptionRow } from './command-row.js';
-import { commandTable, everywhere, usageOf } from './command-table.js';
+import { bareOptions, commandTable, everywhere, usageOf } from './command-table.js';
 import { wrapText } from './wrap-text.js';
 
 const width = 80;
@@ -19,8 +19,7 @@ export function programHelp(): string {
     ...twoColumns(commands),
     '',
     'Options everywhere',
-    ...optionLines(everywhere),
-    ...optionLines([{ name: 'version', value: null, help: 'version of the program and of its model' }]),
+    ...optionLines(bareOptions),
     '',
     'holdfast COMMAND --help says more. Without a terminal, and without a command,',
     'the demo session is printed.',

@@ -1,9 +1,9 @@
 import { classRow } from '../calc/classes.js';
-import { parameterKeys, parameterRow } from '../calc/parameters.js';
+import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
 import { classOf } from '../calc/series.js';
+import { sayParameter } from '../session/say-parameter.js';
 import { cleanText } from '../study/clean-text.js';
 import { limitInWords } from '../study/must-keep.js';
-import { parameterWords } from '../study/record-changes.js';
 import { runningOrder } from '../study/running-order.js';
 import type { MustKeep, Study, StudySeries } from '../study/study.js';
 import type { CommandIo } from './command-io.js';
@@ -45,11 +45,19 @@ function seriesLines(series: StudySeries, page: Page): string[] {
     { title: 'value', align: 'point' },
     { title: 'meaning', align: 'left' },
   ] as const;
-  const values = keys.map((key) => [key, cleanText(parameterWords(key, series.parameters[key])), parameterRow(key).label]);
+  const words = (key: ParameterKey) => cleanText(sayParameter(key, series.parameters[key]));
+  // What holds several values is long: it stands on a line of its own.
+  const single = keys.filter((key) => parameterRow(key).kind !== 'object');
+  const several = keys.filter((key) => parameterRow(key).kind === 'object');
   return [
     ...wrapText(cleanText(`${series.id}: ${series.title}`), page.width).map((line) => page.emphasis('heading', line)),
     ...wrapText(cleanText(about), page.width),
-    ...textTable(columns, values, page.reader),
+    ...textTable(
+      columns,
+      single.map((key) => [key, words(key), parameterRow(key).label]),
+      page.reader,
+    ),
+    ...several.flatMap((key) => wrapText(`${key}: ${words(key)}`, page.width)),
     ...series.mustKeep.flatMap((mustKeep) => wrapText(cleanText(`must keep: ${mustKeepWords(mustKeep)} (${mustKeep.source})`), page.width)),
     ...(series.pairedWith.length === 0 ? [] : [`changes together with: ${series.pairedWith.join(', ')}`]),
     ...(series.locked.length === 0 ? [] : wrapText(`locked for a search: ${series.locked.join(', ')}`, page.width)),

@@ -4,7 +4,7 @@ import { nearestWord } from '../study/nearest-word.js';
 import { type Attempt, wrongUse } from './attempt.js';
 import type { CommandRequest } from './command-request.js';
 import type { CommandRow, OptionRow } from './command-row.js';
-import { commandTable, everywhere } from './command-table.js';
+import { bareOptions, commandTable, everywhere } from './command-table.js';
 
 /** What the person asked for. */
 export type CommandLine =
@@ -12,11 +12,6 @@ export type CommandLine =
   | { readonly kind: 'version' }
   | { readonly kind: 'help'; readonly command: CommandRow | null; readonly group: string | null }
   | { readonly kind: 'command'; readonly command: CommandRow; readonly request: CommandRequest };
-
-const version: OptionRow = { name: 'version', value: null, help: 'version of the program and of its model' };
-
-/** Options of the program itself, without a command. */
-export const bareOptions: readonly OptionRow[] = [...everywhere, version];
 
 const allOptions: readonly OptionRow[] = [...bareOptions, ...commandTable.flatMap((command) => command.options)];
 
@@ -59,7 +54,9 @@ export function readCommandLine(args: readonly string[]): Attempt<CommandLine> {
     if (token.kind === 'option') given.set(token.name, [...(given.get(token.name) ?? []), token.value ?? '']);
   }
   const called = findCommand(words);
-  if (!called.ok) return called;
+  // A misspelt option turns its value into a word: that is told before an unknown command is.
+  const unknown = tokens.find((token) => token.kind === 'option' && !allOptions.some(({ name }) => name === token.name));
+  if (!called.ok) return unknown?.kind === 'option' ? (optionProblem(unknown, bareOptions, null, given) ?? called) : called;
   const command = called.value;
   const options = command === null ? bareOptions : [...everywhere, ...command.options];
 

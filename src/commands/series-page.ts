@@ -4,9 +4,9 @@ import { type ParameterKey, parameterKeys, parameterRow } from '../calc/paramete
 import { same } from '../calc/rounding.js';
 import { classOf } from '../calc/series.js';
 import { sayChange, sayFigure } from '../session/say-figure.js';
+import { sayParameter } from '../session/say-parameter.js';
 import type { SeriesResult } from '../session/series-result.js';
 import { cleanText } from '../study/clean-text.js';
-import { parameterWords } from '../study/record-changes.js';
 import type { Study } from '../study/study.js';
 import { cautionLines } from './caution-lines.js';
 import { closingWords } from './closing-words.js';
@@ -42,18 +42,24 @@ function parameterTableLines({ series, parameters, carried }: SeriesResult, page
   const keys = parameterKeys.filter((key) => has.includes(key) && (parameters[key] !== undefined || before[key] !== undefined));
   const followed: readonly ParameterKey[] = carried.map(({ key }) => key);
   const rows = keys.map((key) => {
-    const now = cleanText(parameterWords(key, parameters[key]));
-    const then = cleanText(parameterWords(key, before[key]));
+    const now = cleanText(sayParameter(key, parameters[key]));
+    const then = cleanText(sayParameter(key, before[key]));
     const note = followed.includes(key) ? 'carried' : now === then ? '' : 'set';
-    return [parameterRow(key).label, now, now === then ? '' : then, note];
+    return { key, cells: [parameterRow(key).label, now, now === then ? '' : then, note] as const };
   });
+  const isLong = (key: ParameterKey) => parameterRow(key).kind === 'object';
   const columns = [
     { title: 'parameter', align: 'left' },
     { title: 'value', align: 'point' },
     { title: 'preset', align: 'point' },
     { title: '', align: 'left' },
   ] as const;
-  return textTable(columns, rows, page.reader);
+  // What holds several values is long: it stands on a line of its own.
+  const long = rows
+    .filter(({ key }) => isLong(key))
+    .map(({ cells: [label, now, then] }) => `${label}: ${now}${then === '' ? '' : ` (preset: ${then})`}`);
+  const short = rows.filter(({ key }) => !isLong(key)).map(({ cells }) => cells);
+  return [...textTable(columns, short, page.reader), ...long.flatMap((line) => wrapText(line, page.width))];
 }
 
 function figureLines({ series, evaluation }: SeriesResult, preset: SeriesResult, page: Page): string[] {
@@ -78,13 +84,17 @@ function figureLines({ series, evaluation }: SeriesResult, preset: SeriesResult,
     { title: 'change', align: 'right' },
     { title: '', align: 'left' },
   ] as const;
-  const missing = figureKeys
-    .filter((key) => figures[key] === null)
-    .map((key) => `${figureTable[key].label} (${reasonOfNull(key, classOf(series))})`);
-  return [
-    ...textTable(columns, rows, page.reader),
-    ...(missing.length === 0 ? [] : wrapText(`No value: ${missing.join('; ')}.`, page.width)),
-  ];
+  return [...textTable(columns, rows, page.reader), ...nullLines(figures, classOf(series), page)];
+}
+
+/** Figures without a value, by the reason. */
+function nullLines(figures: SeriesResult['evaluation']['figures'], classKey: ClassKey, page: Page): string[] {
+  const labels = new Map<string, string[]>();
+  for (const key of figureKeys.filter((candidate) => figures[candidate] === null)) {
+    const reason = reasonOfNull(key, classKey);
+    labels.set(reason, [...(labels.get(reason) ?? []), figureTable[key].label]);
+  }
+  return [...labels].flatMap(([reason, names]) => wrapText(`No value for ${names.join(', ')}: ${reason}.`, page.width));
 }
 
 /** Ratios to the preset change by themselves; the others in percent of the preset's value. */
@@ -95,7 +105,7 @@ function changeOf(key: FigureKey, now: number | null, before: number | null): st
 
 function reasonOfNull(key: FigureKey, classKey: ClassKey): string {
   const row = classRow(classKey);
-  return row.figures.includes(key) ? (figureNeeds[key] ?? 'it cannot be computed with these values') : `${row.label} has none`;
+  return row.figures.includes(key) ? (figureNeeds[key] ?? 'it cannot be computed with these values') : `none in ${row.label}`;
 }
 
 function signalLines({ evaluation, series }: SeriesResult, page: Page): string[] {

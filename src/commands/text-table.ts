@@ -55,18 +55,14 @@ function alignedCells({ title, align }: Column, values: readonly string[]): stri
   const width = Math.max(title.length, ...placed.map(visibleLength));
   const place = (text: string) => {
     const blanks = ' '.repeat(width - visibleLength(text));
-    return align === 'left' ? text + blanks : blanks + text;
+    return align === 'right' ? blanks + text : text + blanks;
   };
   return [place(title), ...placed.map(place)];
 }
 
-/** Pads numbers so that their points stand below each other. */
+/** Pads numbers so that their points stand below each other; words start where the longest number does. */
 function onPoint(values: readonly string[]): string[] {
-  const parts = values.map((value) => {
-    const whole = /^(?:x )?[+-]?[\d:]*/.exec(value)?.[0] ?? '';
-    return { whole, rest: value.slice(whole.length) };
-  });
-  const left = Math.max(...parts.map(({ whole }) => whole.length), 0);
-  const right = Math.max(...parts.map(({ rest }) => rest.length), 0);
-  return parts.map(({ whole, rest }) => whole.padStart(left) + rest.padEnd(right));
+  const wholes = values.map((value) => /^(?:x )?[+-]?\d[\d:]*/.exec(value)?.[0] ?? '');
+  const left = Math.max(...wholes.map((whole) => whole.length), 0);
+  return values.map((value, i) => (wholes[i] === '' ? value : ' '.repeat(left - (wholes[i] as string).length) + value));
 }

@@ -22,9 +22,9 @@ export const demoSession: DemoSession = {
     seriesId: 't1-3d',
     tries: [
       { words: 'as the preset has it', set: {} },
-      { words: 'slices 4 mm, 54 of them', set: { sliceThicknessMm: 4, sliceCount: 54 } },
-      { words: 'slices 5 mm, 44 of them', set: { sliceThicknessMm: 5, sliceCount: 44 } },
-      { words: 'slices 4 mm, phase voxel 2.3 mm', set: { sliceThicknessMm: 4, sliceCount: 54, matrixPhase: 165 } },
+      { words: '54 slices of 4 mm', set: { sliceThicknessMm: 4, sliceCount: 54 } },
+      { words: '44 slices of 5 mm', set: { sliceThicknessMm: 5, sliceCount: 44 } },
+      { words: '4 mm, phase voxel 2.3 mm', set: { sliceThicknessMm: 4, sliceCount: 54, matrixPhase: 165 } },
     ],
   },
 };

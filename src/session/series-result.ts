@@ -7,8 +7,8 @@ import { type Carried, resolveParameters } from '../calc/resolve.js';
 import { plainScanner, type Scanner } from '../calc/scanner.js';
 import type { GivenParameters, Parameters } from '../calc/series.js';
 import { checkMustKeeps, type MustKeepResult, mustKeepCautions, type Rules } from '../study/must-keep.js';
-import { parameterWords } from '../study/record-changes.js';
 import type { StudySeries } from '../study/study.js';
+import { sayParameter } from './say-parameter.js';
 
 /** Everything there is to say about one series with some values set. */
 export interface SeriesResult {
@@ -45,6 +45,6 @@ export function seriesResult(
 
 /** A value that followed an edit by itself, as a note. */
 function carriedCaution({ key, from, to, because }: Carried): Caution {
-  const text = `${parameterRow(key).label} ${parameterWords(key, from)} becomes ${parameterWords(key, to)}: ${because}`;
+  const text = `${parameterRow(key).label} ${sayParameter(key, from)} becomes ${sayParameter(key, to)}: ${because}`;
   return { code: 'timing-carried', level: 'note', text, numbers: { from, to } };
 }

@@ -24,7 +24,7 @@ export function parameterWords(key: ParameterKey, value: unknown): string {
   if (key === 'pacing') return pacingWords(value as Pacing);
   if (key === 'diffusion') return diffusionWords(value as Diffusion);
   if (typeof value === 'boolean') return value ? 'yes' : 'no';
-  if (row.kind !== 'number' || typeof value !== 'number') return String(value);
+  if (row.kind !== 'number' || typeof value !== 'number') return typeof value === 'string' ? value : JSON.stringify(value);
   return withUnit(trimmed(value, row.digits), row.unit);
 }
 

@@ -71,28 +71,40 @@ function tidySeries(series: RecordedSeries): RecordedSeries {
 
 function tidyValues(values: RecordedValues): RecordedValues {
   return {
-    parameters: inOrder(values.parameters, parameterKeys) as RecordedValues['parameters'],
-    figures: inOrder(values.figures, figureKeys) as RecordedValues['figures'],
+    parameters: inOrder(values.parameters, parameterKeys, sayable) as RecordedValues['parameters'],
+    figures: inOrder(values.figures, figureKeys, (value) =>
+      typeof value === 'number' ? finite(value) : value,
+    ) as RecordedValues['figures'],
   };
 }
 
 /** Known keys in table order, then what a later program may have added; what is absent stays away. */
-function inOrder(given: Readonly<Record<string, unknown>>, order: readonly string[]): Record<string, unknown> {
+function inOrder(
+  given: Readonly<Record<string, unknown>>,
+  order: readonly string[],
+  tidy: (value: unknown) => unknown,
+): Record<string, unknown> {
   const keys = [...order.filter((key) => Object.hasOwn(given, key)), ...Object.keys(given).filter((key) => !order.includes(key))];
   const tidied: Record<string, unknown> = {};
   for (const key of keys) {
-    const value = given[key];
-    if (value !== undefined) tidied[key] = tidyValue(value);
+    const value = tidy(given[key]);
+    if (value !== undefined) tidied[key] = value;
   }
   return tidied;
 }
 
-function tidyValue(value: unknown): unknown {
-  if (typeof value === 'number') return finite(value);
+/** A parameter's value as JSON can say it; undefined, and so absent, where it cannot. */
+function sayable(value: unknown): unknown {
+  if (typeof value === 'number') return finite(value) ?? undefined;
   if (typeof value === 'string') return freeText(value);
-  if (Array.isArray(value)) return value.map(tidyValue);
-  if (typeof value === 'object' && value !== null) return inOrder(value as Record<string, unknown>, []);
-  return value;
+  if (Array.isArray(value)) {
+    const items = value.map(sayable);
+    return items.includes(undefined) ? undefined : items;
+  }
+  if (typeof value !== 'object' || value === null) return value;
+  const given = Object.entries(value).filter(([, inner]) => inner !== undefined);
+  const tidied = inOrder(Object.fromEntries(given), [], sayable);
+  return Object.keys(tidied).length < given.length ? undefined : tidied;
 }
 
 function tidyReading(reading: RecordedReading | null): RecordedReading | null {

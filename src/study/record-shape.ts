@@ -1,3 +1,4 @@
+import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
 import { type RecordedLimits, recordVersion } from './record.js';
 import { holdStates, outcomeWords, qualityWords, recommendationWords } from './record-words.js';
 
@@ -46,6 +47,10 @@ function withKeys(checks: Readonly<Record<string, Check>>, needed: 'all keys' | 
   };
 }
 
+function both(first: Check, second: Check): Check {
+  return (value, path) => first(value, path) ?? second(value, path);
+}
+
 function valuesOf(check: Check): Check {
   return (value, path) => {
     if (!isObject(value)) return { path, expected: 'an object' };
@@ -61,7 +66,25 @@ const anything: Check = () => null;
 
 const day: Check = (value, path) => (typeof value === 'string' && isDay(value) ? null : { path, expected: 'a day as YYYY-MM-DD, or null' });
 
-const values = withKeys({ parameters: valuesOf(anything), figures: valuesOf(orNull(number)) });
+const listOfNumbers = listOf(number);
+
+/** Parameters that are objects; what a list or a period holds is read by code that expects numbers there. */
+const objectParameters: Readonly<Record<string, Check>> = {
+  pacing: both(withKeys({ kind: text }), withKeys({ periodMs: number, windowMs: number, breathHold: flag }, 'any keys')),
+  diffusion: withKeys({ bValuesSPerMm2: listOfNumbers, directions: number, averages: listOfNumbers }),
+};
+
+const parameterChecks = Object.fromEntries(parameterKeys.map((key) => [key, parameterCheck(key)]));
+
+function parameterCheck(key: ParameterKey): Check {
+  const row = parameterRow(key);
+  if (row.kind === 'number') return number;
+  if (row.kind === 'flag') return flag;
+  // A choice of a later program is no damage.
+  return row.kind === 'choice' ? text : (objectParameters[key] ?? anything);
+}
+
+const values = withKeys({ parameters: withKeys(parameterChecks, 'any keys'), figures: valuesOf(orNull(number)) });
 
 const reading = withKeys(
   { timeS: number, b1rmsUt: number, sarWkg: number, operatingMode: text, changedByScanner: text, notModelled: listOf(text) },
@@ -123,9 +146,9 @@ export function faultOfRecord(value: unknown): ShapeFault | null {
 /**
  * True for a day of the calendar written YYYY-MM-DD, without a time.
  *
- * @example isDay('2026-02-29') //=> false
+ * `2026-02-29` is none.
  */
-export function isDay(given: string): boolean {
+function isDay(given: string): boolean {
   const parts = /^(\d{4})-(\d{2})-(\d{2})$/.exec(given);
   if (parts === null) return false;
   const [year, month, date] = [Number(parts[1]), Number(parts[2]), Number(parts[3])];

@@ -87,6 +87,17 @@ describe('recordLine', () => {
   });
 });
 
+describe('tidyRecord', () => {
+  it('leaves out a parameter that is no number, whole, and writes such a figure as null', () => {
+    const used = {
+      parameters: { averages: Number.NaN, sliceCount: 5, diffusion: { bValuesSPerMm2: [0, Number.NaN], directions: 3, averages: [1, 1] } },
+      figures: { scanTimeS: Number.POSITIVE_INFINITY, holds: 2 },
+    };
+    const tidy = tidyRecord({ ...inventedRecord, series: [{ ...inventedSeries, used }] });
+    expect(tidy.series[0]!.used).toEqual({ parameters: { sliceCount: 5 }, figures: { scanTimeS: null, holds: 2 } });
+  });
+});
+
 describe('readRecordLine', () => {
   it('gives back any record that recordLine wrote, cleaned', () => {
     fc.assert(
@@ -142,6 +153,9 @@ describe('readRecordLine', () => {
     ['day', (json: string) => json.replace('2026-03-02', '2026-03-02T10:11:12')],
     ['series.0.outcome', (json: string) => json.replace('"done"', '"finished"')],
     ['series.0.used.figures.scanTimeS', (json: string) => json.replace('"scanTimeS":10.8', '"scanTimeS":"10.8"')],
+    ['series.0.used.parameters.sliceCount', (json: string) => json.replace('"sliceCount":54', '"sliceCount":null')],
+    ['series.0.used.parameters.pacing.kind', (json: string) => json.replace('"sliceCount":54', '"pacing":{}')],
+    ['series.0.used.parameters.pacing', (json: string) => json.replace('"sliceCount":54', '"pacing":"none"')],
     ['limits.holdState', (json: string) => json.replace('"expiration"', '"half way"')],
     ['reasons.0', (json: string) => json.replace('"reasons":["breath-hold-short"]', '"reasons":[3]')],
     ['series', (json: string) => json.replace(/"series":.*,"recommendation"/, '"series":{},"recommendation"')],

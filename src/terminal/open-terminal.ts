@@ -145,9 +145,12 @@ export function openTerminal(options: TerminalOptions): OpenTerminal {
     endBy('SIGHUP');
   };
   const onExit = () => {
-    if (leaving === null) options.onLeave?.({ kind: 'closed' });
-    leaveScreen();
-    screen.cook();
+    try {
+      if (leaving === null) options.onLeave?.({ kind: 'closed' });
+    } finally {
+      leaveScreen();
+      screen.cook();
+    }
   };
 
   const keys = listenForKeys(input, { onKey, onAnswer }, keyTiming(environment, options.escapeMs));

@@ -309,7 +309,7 @@ describe('stopping and going on', () => {
     await program.waitFor('count 7');
     program.press('q');
     await program.waitFor('goodbye 7');
-    program.press('clear; echo earlier text; stty -a >' + folder + '/after; echo end noted\r');
+    program.press(`clear; echo earlier text; stty -a >${folder}/after; echo end noted\r`);
     await program.waitFor(/^end noted/m);
     expectRestored(program);
   });

@@ -1,7 +1,7 @@
-import { isBreathHeld } from './pacing.js';
+import { modelOf, type SeriesModel, weightedSignal } from './model.js';
 import { highestB } from './noise.js';
-import { type SeriesModel, modelOf, weightedSignal } from './model.js';
 import { nullTimeMs, nullTissueOf } from './null-time.js';
+import { isBreathHeld } from './pacing.js';
 import type { Scanner } from './scanner.js';
 import type { Series } from './series.js';
 import { type Tissue, tissueOf } from './tissues.js';

@@ -51,10 +51,45 @@ export interface Caution {
   readonly numbers: Readonly<Record<string, number>>;
 }
 
-const weight: Readonly<Record<CautionLevel, number>> = { error: 0, caution: 1, note: 2 };
+/** How the checks of one series report: code, level, numbers, and the sentence, which is only put together when somebody reads it. */
+export type AddCaution = (code: CautionCode, level: CautionLevel, numbers: Readonly<Record<string, number>>, say: () => string) => void;
+
+/** A caution whose sentence is put together when it is read: most evaluations of a search never read one. */
+export class SaidCaution implements Caution {
+  readonly code: CautionCode;
+  readonly level: CautionLevel;
+  readonly numbers: Readonly<Record<string, number>>;
+  private readonly say: () => string;
+
+  constructor(code: CautionCode, level: CautionLevel, numbers: Readonly<Record<string, number>>, say: () => string) {
+    this.code = code;
+    this.level = level;
+    this.numbers = numbers;
+    this.say = say;
+  }
+
+  get text(): string {
+    return this.say();
+  }
+
+  toJSON(): Caution {
+    return { code: this.code, level: this.level, text: this.text, numbers: this.numbers };
+  }
+}
+
+/** Cautions as plain data, sentences put together: for what leaves the thread or is kept. */
+export function plainCautions(cautions: readonly Caution[]): readonly Caution[] {
+  return cautions.map(({ code, level, text, numbers }) => ({ code, level, text, numbers }));
+}
+
+const levels: readonly CautionLevel[] = ['error', 'caution', 'note'];
 
 /** Cautions ordered worst first; equals keep their order. */
 export function worstFirst(cautions: readonly Caution[]): readonly Caution[] {
   if (cautions.length < 2) return cautions;
-  return [...cautions].sort((a, b) => weight[a.level] - weight[b.level]);
+  const ordered: Caution[] = [];
+  for (const level of levels) {
+    for (const caution of cautions) if (caution.level === level) ordered.push(caution);
+  }
+  return ordered;
 }

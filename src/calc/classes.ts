@@ -175,8 +175,15 @@ export function knownClass(family: Family, acquisition: Acquisition): ClassKey {
 
 /** The row of a class, widened for code that handles any class. */
 export function classRow(key: ClassKey): ClassRow {
-  return classTable[key];
+  // One evaluation asks for the same row some thirty times.
+  if (key !== lastKey) {
+    lastKey = key;
+    lastRow = classTable[key];
+  }
+  return lastRow;
 }
+let lastKey: ClassKey = 'spin-echo/2D';
+let lastRow: ClassRow = classTable[lastKey];
 
 /** The class of a family and an acquisition, or null where the trade has no such class. */
 export function classKeyOf(family: string, acquisition: string): ClassKey | null {

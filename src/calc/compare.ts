@@ -23,15 +23,28 @@ export function compareWith(model: SeriesModel, baseline: Baseline): Comparison 
   const { targetSignal, comparisonSignal } = baseline;
   const noiseRatio =
     model.signalFreeSnr === null || baseline.model.signalFreeSnr === null ? null : model.signalFreeSnr / baseline.model.signalFreeSnr;
-  const relativeSnr = noiseRatio === null || target === null || targetSignal === null || targetSignal === 0 ? null : (noiseRatio * target) / targetSignal;
+  const relativeSnr =
+    noiseRatio === null || target === null || targetSignal === null || targetSignal === 0 ? null : (noiseRatio * target) / targetSignal;
   let relativeContrast: number | null = null;
   if (noiseRatio !== null && target !== null && comparison !== null && targetSignal !== null && comparisonSignal !== null) {
     const before = Math.abs(targetSignal - comparisonSignal);
-    if (before >= equalShare * Math.max(targetSignal, comparisonSignal) && before > 0) relativeContrast = (noiseRatio * Math.abs(target - comparison)) / before;
+    if (before >= equalShare * Math.max(targetSignal, comparisonSignal) && before > 0)
+      relativeContrast = (noiseRatio * Math.abs(target - comparison)) / before;
   }
   const contrastRatio = contrastRatioOf(target, comparison);
-  const contrastRatioChange = contrastRatio === null || baseline.contrastRatio === null || baseline.contrastRatio === 0 ? null : contrastRatio / baseline.contrastRatio - 1;
+  const contrastRatioChange =
+    contrastRatio === null || baseline.contrastRatio === null || baseline.contrastRatio === 0
+      ? null
+      : contrastRatio / baseline.contrastRatio - 1;
   const power = (model.b1PlusRmsUt / baseline.model.b1PlusRmsUt) ** 2;
   const sar = sarTrend(power, model.scanner.fieldT / baseline.model.scanner.fieldT);
-  return { relativeSnr, relativeContrast, contrastRatio, contrastRatioChange, rfPowerTrend: power, sarTrendLow: sar.low, sarTrendHigh: sar.high };
+  return {
+    relativeSnr,
+    relativeContrast,
+    contrastRatio,
+    contrastRatioChange,
+    rfPowerTrend: power,
+    sarTrendLow: sar.low,
+    sarTrendHigh: sar.high,
+  };
 }

@@ -2,7 +2,7 @@ import type { Baseline } from './baseline.js';
 import { seriesNullMs } from './baseline.js';
 import { blurFwhmPx } from './blur.js';
 import type { Body } from './body.js';
-import { type Caution, worstFirst } from './caution.js';
+import { type AddCaution, type Caution, SaidCaution, worstFirst } from './caution.js';
 import { driftCautions } from './cautions/drift-cautions.js';
 import { echoPairCautions } from './cautions/echo-pair-cautions.js';
 import { pictureCautions } from './cautions/picture-cautions.js';
@@ -152,10 +152,17 @@ function signalsOf(model: SeriesModel, which: 'pair' | 'all'): TissueSignal[] {
   return signals;
 }
 
-function cautionsOf(model: SeriesModel, body: Body, baseline: Baseline, comparison: Comparison, nullMs: number | null, readings: Readings): readonly Caution[] {
+function cautionsOf(
+  model: SeriesModel,
+  body: Body,
+  baseline: Baseline,
+  comparison: Comparison,
+  nullMs: number | null,
+  readings: Readings,
+): readonly Caution[] {
   const cautions: Caution[] = [];
-  const add = (caution: Caution) => {
-    cautions.push(caution);
+  const add: AddCaution = (code, level, numbers, say) => {
+    cautions.push(new SaidCaution(code, level, numbers, say));
   };
   timingCautions(model, baseline, add);
   splitCautions(model, baseline, isBreathHeld(model.series.parameters), add);

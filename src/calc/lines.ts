@@ -41,7 +41,16 @@ function accelerated(encoded: number, reference: number, factor: number): number
 export function acquiredLines(key: ClassKey, p: Parameters): Lines {
   if (key === 'rotating-strip-fast-spin-echo/2D') {
     const lines = bladeCount(p.matrixPhase, p.echoTrainLength, p.parallelFactorPhase) * p.echoTrainLength;
-    return { fullPhase: p.matrixPhase, encodedPhase: p.matrixPhase, phase: lines, fullSlice: 1, encodedSlice: 1, slice: 1, reference: 0, total: lines };
+    return {
+      fullPhase: p.matrixPhase,
+      encodedPhase: p.matrixPhase,
+      phase: lines,
+      fullSlice: 1,
+      encodedSlice: 1,
+      slice: 1,
+      reference: 0,
+      total: lines,
+    };
   }
   const fullPhase = Math.max(1, roundHalfUp(p.matrixPhase * (p.phaseFieldOfViewPercent / 100) * (1 + p.phaseOversamplingPercent / 100)));
   const encodedPhase = guardedCeil(p.partialFourierPhase * fullPhase);
@@ -55,13 +64,31 @@ export function acquiredLines(key: ClassKey, p: Parameters): Lines {
   if (key === 'inversion-prepared-gradient-echo/3D') {
     // One ceiling over the whole product: the readouts of a cycle are counted once.
     const readouts = guardedCeil((p.partialFourierSlice * fullSlice) / p.parallelFactorSlice);
-    return { fullPhase, encodedPhase, phase, fullSlice, encodedSlice, slice: readouts, reference: referencePhase * readouts, total: phase * readouts };
+    return {
+      fullPhase,
+      encodedPhase,
+      phase,
+      fullSlice,
+      encodedSlice,
+      slice: readouts,
+      reference: referencePhase * readouts,
+      total: phase * readouts,
+    };
   }
   if (p.parallelFactorPhase > 1 && p.parallelFactorSlice > 1) {
     const referenceSlice = Math.min(p.referenceLines, encodedSlice);
     const reference = referencePhase * referenceSlice;
     const total = guardedCeil((encodedPhase * encodedSlice - reference) / (p.parallelFactorPhase * p.parallelFactorSlice)) + reference;
-    return { fullPhase, encodedPhase, phase, fullSlice, encodedSlice, slice: accelerated(encodedSlice, p.referenceLines, p.parallelFactorSlice), reference, total };
+    return {
+      fullPhase,
+      encodedPhase,
+      phase,
+      fullSlice,
+      encodedSlice,
+      slice: accelerated(encodedSlice, p.referenceLines, p.parallelFactorSlice),
+      reference,
+      total,
+    };
   }
   const slice = accelerated(encodedSlice, 0, p.parallelFactorSlice);
   return { fullPhase, encodedPhase, phase, fullSlice, encodedSlice, slice, reference: referencePhase * encodedSlice, total: phase * slice };

@@ -58,8 +58,22 @@ function elements(key: ClassKey, p: Parameters, geometry: Geometry, pulse: Playe
 }
 
 /** Puts one estimate together. */
-function estimate(echoTimeMs: number, repetitionTimeMs: number, echoSpacingMs: number | null, binding: string, amplitude: number, scanner: Scanner): MinimumTiming {
-  return { echoTimeMs, repetitionTimeMs, echoSpacingMs, binding, readoutMtPerM: amplitude, readoutOverGradient: amplitude > scanner.gradientMtPerM * (1 + 1e-9) };
+function estimate(
+  echoTimeMs: number,
+  repetitionTimeMs: number,
+  echoSpacingMs: number | null,
+  binding: string,
+  amplitude: number,
+  scanner: Scanner,
+): MinimumTiming {
+  return {
+    echoTimeMs,
+    repetitionTimeMs,
+    echoSpacingMs,
+    binding,
+    readoutMtPerM: amplitude,
+    readoutOverGradient: amplitude > scanner.gradientMtPerM * (1 + 1e-9),
+  };
 }
 
 /** Which of the lobes before the readout is the longest, in words. */
@@ -101,7 +115,14 @@ export function echoPlanarLeadMs(p: Parameters, lines: Lines): number {
  * Fastest timing of a series on this scanner, from trapezoids of its gradient strength and slew rate.
  * Flow compensation adds one more prephasing lobe (common practice, no source).
  */
-export function minimumTiming(key: ClassKey, p: Parameters, lines: Lines, geometry: Geometry, pulses: SlotPulses, scanner: Scanner): MinimumTiming {
+export function minimumTiming(
+  key: ClassKey,
+  p: Parameters,
+  lines: Lines,
+  geometry: Geometry,
+  pulses: SlotPulses,
+  scanner: Scanner,
+): MinimumTiming {
   const row = classRow(key);
   const part = elements(key, p, geometry, pulses.excitation, scanner);
   const amplitude = readoutMtPerM(p.pixelBandwidthHz, p.matrixRead, p.fieldOfViewMm);
@@ -137,14 +158,28 @@ export function minimumTiming(key: ClassKey, p: Parameters, lines: Lines, geomet
     const left = halfPulse + Math.max(encodeMs + flowMs, crusher);
     const right = sideMs + half;
     const spacing = pulses.refocusing.durationMs + 2 * sideMs + part.readoutMs;
-    const te = row.train ? Math.max(spacing, pulses.refocusing.durationMs + 2 * left) : pulses.refocusing.durationMs + 2 * Math.max(left, right);
+    const te = row.train
+      ? Math.max(spacing, pulses.refocusing.durationMs + 2 * left)
+      : pulses.refocusing.durationMs + 2 * Math.max(left, right);
     const last = row.train ? p.echoTrainLength * p.echoSpacingMs : Math.max(te, p.secondEchoTimeMs ?? 0);
-    const repetitionTimeMs = halfPulse + last + half + crusher + (p.inversionTimeMs === undefined ? 0 : p.inversionTimeMs + inversionPulseMs / 2);
-    return estimate(te, repetitionTimeMs, row.train ? spacing : null, sideMs > crusher + part.selectRampMs ? 'phase encoding' : 'crushers and refocusing pulse', amplitude, scanner);
+    const repetitionTimeMs =
+      halfPulse + last + half + crusher + (p.inversionTimeMs === undefined ? 0 : p.inversionTimeMs + inversionPulseMs / 2);
+    return estimate(
+      te,
+      repetitionTimeMs,
+      row.train ? spacing : null,
+      sideMs > crusher + part.selectRampMs ? 'phase encoding' : 'crushers and refocusing pulse',
+      amplitude,
+      scanner,
+    );
   }
 
   const te = halfPulse + encodeMs + flowMs + lead;
-  const afterReadout = Math.max(part.phaseEncodeMs, part.partitionMs, row.family === 'balanced-steady-state' ? part.prephaseMs : crusherMs(geometry, scanner));
+  const afterReadout = Math.max(
+    part.phaseEncodeMs,
+    part.partitionMs,
+    row.family === 'balanced-steady-state' ? part.prephaseMs : crusherMs(geometry, scanner),
+  );
   const lastEchoMs = Math.max(te, p.secondEchoTimeMs ?? 0);
   const line = halfPulse + lastEchoMs + half + part.readoutRampMs + afterReadout;
   if (row.family === 'inversion-prepared-gradient-echo') {

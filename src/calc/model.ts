@@ -1,5 +1,5 @@
-import { type ClassKey, classRow } from './classes.js';
 import { displacement } from './chemical-shift.js';
+import { type ClassKey, classRow } from './classes.js';
 import { type Geometry, geometryOf } from './geometry.js';
 import { acquiredLines, type Lines } from './lines.js';
 import { type MinimumTiming, minimumTiming } from './minimum-timing.js';
@@ -68,7 +68,13 @@ function suppressionOf(tissue: string, fatSuppression: Series['parameters']['fat
 }
 
 /** Signal of one tissue in this series, null for a name the table does not have. */
-export function tissueSignal(setting: SignalSetting, series: Series, fieldT: number, name: string, impossible: boolean): TissueSignal | null {
+export function tissueSignal(
+  setting: SignalSetting,
+  series: Series,
+  fieldT: number,
+  name: string,
+  impossible: boolean,
+): TissueSignal | null {
   const tissue: Tissue | null = tissueOf(name, fieldT, series);
   if (tissue === null) return null;
   const p = series.parameters;
@@ -148,7 +154,8 @@ export function modelOf(series: Series, scanner: Scanner, knownSlotFactor: numbe
     setting,
     impossible,
     noiseFactor: g,
-    signalFreeSnr: g === null ? null : signalFreeSnr(geometry.voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
+    signalFreeSnr:
+      g === null ? null : signalFreeSnr(geometry.voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
     target: tissueSignal(setting, series, scanner.fieldT, series.target, impossible !== null),
     comparison: tissueSignal(setting, series, scanner.fieldT, series.comparison, impossible !== null),
     b1PlusRmsUt: seriesB1PlusRmsUt(key, p, lines, pulses, slicesInRepetition),

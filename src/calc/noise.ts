@@ -40,6 +40,12 @@ export function highestB(p: Parameters): number {
  * (Macovski, Magn Reson Med 1996;36:494; Edelstein 1986; values from memory. B0 to the first power up to 3 T:
  * Wang et al., Magn Reson Med 2025, doi 10.1002/mrm.70202).
  */
-export function signalFreeSnr(voxelVolumeMm3: number, averagingLines: number, p: Parameters, fieldT: number, simultaneousG: number): number {
+export function signalFreeSnr(
+  voxelVolumeMm3: number,
+  averagingLines: number,
+  p: Parameters,
+  fieldT: number,
+  simultaneousG: number,
+): number {
   return (voxelVolumeMm3 * Math.sqrt((averagingLines * noiseAverages(p)) / p.pixelBandwidthHz) * fieldT) / simultaneousG;
 }

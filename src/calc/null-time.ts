@@ -7,7 +7,11 @@ import { spinEchoLongitudinal } from './signal/spin-echo.js';
 import { fatTissue, fluidTissue, type Tissue } from './tissues.js';
 
 /** The tissue whose null a series is about: its own choice, else fat with inversion fat suppression, else fluid with an inversion time, else none. */
-export function nullTissueOf(series: Pick<Series, 'nullTissue'>, fatSuppression: FatSuppression, inversionTimeMs: number | undefined): string | null {
+export function nullTissueOf(
+  series: Pick<Series, 'nullTissue'>,
+  fatSuppression: FatSuppression,
+  inversionTimeMs: number | undefined,
+): string | null {
   if (inversionTimeMs === undefined) return null;
   return series.nullTissue ?? (fatSuppression === 'inversion' ? fatTissue : fluidTissue);
 }
@@ -21,17 +25,19 @@ export function simpleNullMs(t1Ms: number, repetitionTimeMs: number): number {
   return t1Ms * Math.log(2 / (1 + Math.exp(-repetitionTimeMs / t1Ms)));
 }
 
-/** Root of a function that rises with TI through zero between two times, or null where it has none. */
-function rootMs(signalAt: (inversionTimeMs: number) => number, lowMs: number, highMs: number): number | null {
-  if (!(highMs > lowMs) || signalAt(lowMs) > 0 || signalAt(highMs) < 0) return null;
-  let low = lowMs;
-  let high = highMs;
-  for (let i = 0; i < 50; i += 1) {
-    const middle = (low + high) / 2;
-    if (signalAt(middle) < 0) low = middle;
-    else high = middle;
-  }
-  return (low + high) / 2;
+/**
+ * Inversion time between two bounds at which a signal is zero, or null where it does not change sign there.
+ * TR being fixed, every class's signed signal is a straight line in e^(-TI/T1): TI enters as the inversion's own recovery, and the
+ * recovery after the readout has what TI leaves of TR, so that their product is constant. Two values give the root.
+ */
+function rootMs(signalAt: (inversionTimeMs: number) => number, lowMs: number, highMs: number, t1Ms: number): number | null {
+  if (!(highMs > lowMs)) return null;
+  const low = signalAt(lowMs);
+  const high = signalAt(highMs);
+  if (low > 0 || high < 0 || low === high) return null;
+  const xLow = Math.exp(-lowMs / t1Ms);
+  const xHigh = Math.exp(-highMs / t1Ms);
+  return -t1Ms * Math.log(xLow - (low * (xHigh - xLow)) / (high - low));
 }
 
 /** Inversion time in ms at which the class's own signal equation gives zero for this tissue, or null where it never does. */
@@ -42,15 +48,17 @@ export function nullTimeMs(setting: SignalSetting, tissue: Tissue): number | nul
     const timing = inversionPreparedTimingOf(setting);
     const lead = timing.centre * timing.echoSpacingMs;
     const longest = timing.repetitionTimeMs - (timing.readouts - timing.centre) * timing.echoSpacingMs;
-    return rootMs((ti) => inversionPreparedSignal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), lead, longest);
+    return rootMs((ti) => inversionPreparedSignal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), lead, longest, tissue.t1Ms);
   }
   if (row.train) {
     const timing = trainTimingOf(setting);
     const end = timing.fromEquilibrium ? { z0: 0, gain: 0 } : trainEnd(timing, tissue.t1Ms, tissue.t2Ms);
     const longest = timing.fromEquilibrium ? 20 * tissue.t1Ms : timing.repetitionTimeMs - timing.echoTrainLength * timing.echoSpacingMs;
-    return rootMs((ti) => trainLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms, end), 0, longest);
+    return rootMs((ti) => trainLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms, end), 0, longest, tissue.t1Ms);
   }
   const timing = spinEchoTimingOf(setting);
-  const longest = timing.fromEquilibrium ? 20 * tissue.t1Ms : timing.repetitionTimeMs - Math.max(timing.echoTimeMs, timing.secondEchoTimeMs ?? 0);
-  return rootMs((ti) => spinEchoLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), 0, longest);
+  const longest = timing.fromEquilibrium
+    ? 20 * tissue.t1Ms
+    : timing.repetitionTimeMs - Math.max(timing.echoTimeMs, timing.secondEchoTimeMs ?? 0);
+  return rootMs((ti) => spinEchoLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), 0, longest, tissue.t1Ms);
 }

@@ -11,6 +11,4 @@ export interface Problem {
 }
 
 /** A value, or the list of reasons why there is none. User data never throws inside the core. */
-export type Outcome<T> =
-  | { readonly ok: true; readonly value: T }
-  | { readonly ok: false; readonly problems: readonly Problem[] };
+export type Outcome<T> = { readonly ok: true; readonly value: T } | { readonly ok: false; readonly problems: readonly Problem[] };

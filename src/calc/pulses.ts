@@ -37,7 +37,8 @@ export function pulseShape(name: PulseName, scanner: Scanner): PulseShape {
 
 function waveform(shape: PulseShape): Waveform {
   if (shape.gaussian === true) return gaussianWaveform();
-  if (shape.timeBandwidth === undefined || shape.timeBandwidth === 0) return shape.powerFactor === undefined ? hardWaveform : { powerFactor: shape.powerFactor, peakFactor: 1 };
+  if (shape.timeBandwidth === undefined || shape.timeBandwidth === 0)
+    return shape.powerFactor === undefined ? hardWaveform : { powerFactor: shape.powerFactor, peakFactor: 1 };
   const sinc = sincWaveform(shape.timeBandwidth);
   return shape.powerFactor === undefined ? sinc : { powerFactor: shape.powerFactor, peakFactor: sinc.peakFactor };
 }

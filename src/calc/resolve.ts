@@ -28,7 +28,11 @@ type Draft = { -readonly [K in keyof Parameters]: Parameters[K] };
  * of the estimate cancels. In gradient echoes TR and TE follow the readout, in echo-planar classes TE. A TE that sets contrast
  * (spin echo, trains, dual echo) stays, is centred on the nearest whole echo, and is raised only where the minimum passes it.
  */
-export function resolveParameters(baseline: Baseline, set: GivenParameters, scanner: Scanner): { readonly parameters: Parameters; readonly carried: readonly Carried[] } {
+export function resolveParameters(
+  baseline: Baseline,
+  set: GivenParameters,
+  scanner: Scanner,
+): { readonly parameters: Parameters; readonly carried: readonly Carried[] } {
   const before = baseline.model.series.parameters;
   const key = baseline.model.key;
   const draft: Draft = { ...before, ...withoutUndefined(set) };
@@ -69,10 +73,25 @@ function carryTrainLength(key: ClassKey, before: Parameters, draft: Draft, carry
 
 /** True when an edit moves the fastest possible timing: bandwidth, read matrix, pulses, or a train of echo-planar lines. */
 function readoutMoved(key: ClassKey, before: Parameters, now: Parameters): boolean {
-  const keys = ['pixelBandwidthHz', 'matrixRead', 'rfPulseStretch', 'flowCompensation', 'partialFourierSlice', 'flipAngleDeg', 'refocusingAngleDeg', 'slabSelective', 'simultaneousSlices'] as const;
+  const keys = [
+    'pixelBandwidthHz',
+    'matrixRead',
+    'rfPulseStretch',
+    'flowCompensation',
+    'partialFourierSlice',
+    'flipAngleDeg',
+    'refocusingAngleDeg',
+    'slabSelective',
+    'simultaneousSlices',
+  ] as const;
   if (keys.some((name) => now[name] !== before[name])) return true;
   if (!classRow(key).echoPlanar) return false;
-  return now.echoTrainLength !== before.echoTrainLength || now.echoSpacingMs !== before.echoSpacingMs || now.partialFourierPhase !== before.partialFourierPhase || now.diffusion !== before.diffusion;
+  return (
+    now.echoTrainLength !== before.echoTrainLength ||
+    now.echoSpacingMs !== before.echoSpacingMs ||
+    now.partialFourierPhase !== before.partialFourierPhase ||
+    now.diffusion !== before.diffusion
+  );
 }
 
 /** Fastest timing with the readout and pulses of the draft, the geometry of the preset: only the readout, pulses and train count as edits. */
@@ -93,7 +112,11 @@ function carrySpacing(key: ClassKey, baseline: Baseline, draft: Draft, scanner: 
   const old = baseline.model.minimum.echoSpacingMs;
   const now = minimumOf(key, draft, baseline, scanner).echoSpacingMs;
   if (old === null || now === null) return;
-  carry('echoSpacingMs', Math.max(0.05, baseline.model.series.parameters.echoSpacingMs + now - old), 'the spacing follows readout and pulses');
+  carry(
+    'echoSpacingMs',
+    Math.max(0.05, baseline.model.series.parameters.echoSpacingMs + now - old),
+    'the spacing follows readout and pulses',
+  );
 }
 
 function carryTimes(key: ClassKey, baseline: Baseline, draft: Draft, scanner: Scanner, carry: Carry): void {
@@ -107,10 +130,16 @@ function carryTimes(key: ClassKey, baseline: Baseline, draft: Draft, scanner: Sc
   } else if (!row.train) {
     const raised = before.echoTimeMs + now.echoTimeMs - old.echoTimeMs;
     // A contrast-setting TE stays while its slack allows: it is raised only when the minimum itself passes it.
-    if (now.echoTimeMs > Math.max(draft.echoTimeMs, old.echoTimeMs) && raised > draft.echoTimeMs) carry('echoTimeMs', raised, 'the shortest TE passes it');
+    if (now.echoTimeMs > Math.max(draft.echoTimeMs, old.echoTimeMs) && raised > draft.echoTimeMs)
+      carry('echoTimeMs', raised, 'the shortest TE passes it');
   }
   const lineByLine = row.gradientEcho && !classRow(key).echoPlanar && key !== 'inversion-prepared-gradient-echo/3D';
-  if (lineByLine) carry('repetitionTimeMs', Math.max(0.5, before.repetitionTimeMs + now.repetitionTimeMs - old.repetitionTimeMs), 'TR follows readout and pulses');
+  if (lineByLine)
+    carry(
+      'repetitionTimeMs',
+      Math.max(0.5, before.repetitionTimeMs + now.repetitionTimeMs - old.repetitionTimeMs),
+      'TR follows readout and pulses',
+    );
 }
 
 /** Trains: TE is centred on the nearest whole echo once spacing or train differ from the preset's. */
@@ -120,7 +149,9 @@ function centreEcho(key: ClassKey, baseline: Baseline, draft: Draft, carry: Carr
   if (same(draft.echoSpacingMs, before.echoSpacingMs) && draft.echoTrainLength === before.echoTrainLength) return;
   const echo = contrastEcho(draft.echoTimeMs, draft.echoSpacingMs, draft.echoTrainLength);
   const centred = echo * draft.echoSpacingMs;
-  const sameEcho = same(draft.echoSpacingMs, before.echoSpacingMs) && echo === contrastEcho(before.echoTimeMs, before.echoSpacingMs, before.echoTrainLength);
+  const sameEcho =
+    same(draft.echoSpacingMs, before.echoSpacingMs) &&
+    echo === contrastEcho(before.echoTimeMs, before.echoSpacingMs, before.echoTrainLength);
   if (!sameEcho) carry('echoTimeMs', centred, 'TE falls on a whole echo of the train');
 }
 

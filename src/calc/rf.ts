@@ -26,7 +26,8 @@ function excitationCount(key: ClassKey, lines: Lines): number {
  */
 export function repetitionEnergyUt2Ms(key: ClassKey, p: Parameters, lines: Lines, pulses: SlotPulses, slices: number): number {
   const slots = guardedCeil(slices / p.simultaneousSlices);
-  const imaging = excitationCount(key, lines) * pulses.excitation.energyUt2Ms + refocusingCount(key, p) * (pulses.refocusing?.energyUt2Ms ?? 0);
+  const imaging =
+    excitationCount(key, lines) * pulses.excitation.energyUt2Ms + refocusingCount(key, p) * (pulses.refocusing?.energyUt2Ms ?? 0);
   const volume = classRow(key).interleaving === 'volume';
   const bands = p.saturationBands * (pulses.band?.energyUt2Ms ?? 0);
   const fat = (pulses.fatSaturation?.energyUt2Ms ?? 0) * fatShare(key, p);

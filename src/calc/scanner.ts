@@ -25,8 +25,16 @@ export interface PulseShape {
 
 /** Names of the pulses a scanner file may override. */
 export const pulseNames = [
-  'excitation', 'refocusing', 'gradientEcho2D', 'gradientEcho3D', 'nonSelective', 'balanced',
-  'echoPlanarExcitation', 'echoPlanarRefocusing', 'fatSaturation', 'saturationBand',
+  'excitation',
+  'refocusing',
+  'gradientEcho2D',
+  'gradientEcho3D',
+  'nonSelective',
+  'balanced',
+  'echoPlanarExcitation',
+  'echoPlanarRefocusing',
+  'fatSaturation',
+  'saturationBand',
 ] as const;
 export type PulseName = (typeof pulseNames)[number];
 

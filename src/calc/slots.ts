@@ -53,7 +53,9 @@ export function capacity(key: ClassKey, p: Parameters, slot: number): number | n
   if (classRow(key).interleaving !== 'interleaved' || isCine(p)) return null;
   const windowMs = acquisitionWindowMs(p);
   const trains =
-    p.inversionTimeMs === undefined ? guardedFloor(windowMs / slot) : inversionCapacity(effectiveRepetitionTimeMs(p), p.inversionTimeMs, slot);
+    p.inversionTimeMs === undefined
+      ? guardedFloor(windowMs / slot)
+      : inversionCapacity(effectiveRepetitionTimeMs(p), p.inversionTimeMs, slot);
   return p.simultaneousSlices * trains;
 }
 

@@ -27,15 +27,7 @@ function waveformOf(shape: (x: number) => number): Waveform {
   return { powerFactor: energy / (area * area), peakFactor: peak / Math.abs(area) };
 }
 
-const kept = new Map<string, Waveform>();
-
-function once(key: string, make: () => Waveform): Waveform {
-  const known = kept.get(key);
-  if (known !== undefined) return known;
-  const made = make();
-  kept.set(key, made);
-  return made;
-}
+const sincs = new Map<number, Waveform>();
 
 /**
  * Hann-windowed sinc of a time-bandwidth product: `sinc(tb x) (1 + cos 2 pi x) / 2` over the pulse (standard windowed sinc, common practice).
@@ -43,12 +35,18 @@ function once(key: string, make: () => Waveform): Waveform {
  * @example sincWaveform(4).powerFactor //=> 3.11
  */
 export function sincWaveform(timeBandwidth: number): Waveform {
-  return once(`sinc${timeBandwidth}`, () => waveformOf((x) => sincAt(timeBandwidth, x)));
+  const known = sincs.get(timeBandwidth);
+  if (known !== undefined) return known;
+  const made = waveformOf((x) => sincAt(timeBandwidth, x));
+  sincs.set(timeBandwidth, made);
+  return made;
 }
+
+const gaussian: Waveform = waveformOf((x) => Math.exp(-8 * x * x));
 
 /** Gaussian cut at two standard deviations (common practice, no source). Power factor 1.23. */
 export function gaussianWaveform(): Waveform {
-  return once('gaussian', () => waveformOf((x) => Math.exp(-8 * x * x)));
+  return gaussian;
 }
 
 /** The time-bandwidth product whose windowed sinc has this power factor: gives a peak to a pulse of which only the power is known. */

@@ -1,4 +1,4 @@
-import type { Caution } from '../caution.js';
+import type { AddCaution } from '../caution.js';
 import { phaseTimesMs } from '../chemical-shift.js';
 import { fatShiftHz } from '../constants.js';
 import type { SeriesModel } from '../model.js';
@@ -16,7 +16,7 @@ function fromWhole(x: number): number {
  * An in/opposed-phase pair judged at the real frequency (Dixon, Radiology 1984;153:189): one echo near a whole number of
  * fat-water cycles, the other near a half. A pair copied from another field is caught here.
  */
-export function echoPairCautions(model: SeriesModel, add: (caution: Caution) => void): void {
+export function echoPairCautions(model: SeriesModel, add: AddCaution): void {
   const p = model.series.parameters;
   if (p.secondEchoTimeMs === undefined || model.series.family !== 'spoiled-gradient-echo') return;
   const cyclesPerMs = fatShiftHz(model.scanner.fieldT) / 1000;
@@ -33,13 +33,14 @@ export function echoPairCautions(model: SeriesModel, add: (caution: Caution) => 
     const bothIn = fromWhole(first) <= tolerance && fromWhole(second) <= tolerance;
     const bothOpposed = fromWhole(first - 0.5) <= tolerance && fromWhole(second - 0.5) <= tolerance;
     const what = bothIn ? 'both echoes are in phase' : bothOpposed ? 'both echoes are opposed' : 'the pair is neither in nor opposed phase';
-    add({
-      code: 'echo-pair-phase',
-      level: 'error',
-      text: `${what} at ${inWords(model.scanner.fieldT, 2)} T (${first.toFixed(2)} and ${second.toFixed(2)} cycles), opposed-phase information lost: ${opposedPhaseMs.toFixed(2)}/${inPhaseMs.toFixed(2)} ms would be opposed and in phase; where the shortest echo forbids it, ${(3 * opposedPhaseMs).toFixed(2)}/${inPhaseMs.toFixed(2)} ms, opposed later and T2* in the way`,
+    add(
+      'echo-pair-phase',
+      'error',
       numbers,
-    });
+      () =>
+        `${what} at ${inWords(model.scanner.fieldT, 2)} T (${first.toFixed(2)} and ${second.toFixed(2)} cycles), opposed-phase information lost: ${opposedPhaseMs.toFixed(2)}/${inPhaseMs.toFixed(2)} ms would be opposed and in phase; where the shortest echo forbids it, ${(3 * opposedPhaseMs).toFixed(2)}/${inPhaseMs.toFixed(2)} ms, opposed later and T2* in the way`,
+    );
   } else if (later) {
-    add({ code: 'echo-pair-phase', level: 'note', text: 'the opposed echo comes later than the in-phase one: T2* decay reads as fat', numbers });
+    add('echo-pair-phase', 'note', numbers, () => 'the opposed echo comes later than the in-phase one: T2* decay reads as fat');
   }
 }

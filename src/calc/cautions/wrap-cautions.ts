@@ -1,6 +1,6 @@
 import type { Baseline } from '../baseline.js';
 import type { Body } from '../body.js';
-import type { Caution } from '../caution.js';
+import type { AddCaution } from '../caution.js';
 import type { SeriesModel } from '../model.js';
 import { atMost, below } from '../rounding.js';
 import { inWords } from './number-words.js';
@@ -22,12 +22,12 @@ function isOblique(plane: string): boolean {
  * (body + kept) / 2; at R > 1 unfolding fails when it is under the body (geometry; common practice).
  * Head-feet a saturation band on that side excuses it.
  */
-export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline, add: (caution: Caution) => void): void {
+export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline, add: AddCaution): void {
   const p = model.series.parameters;
   if (model.key === 'rotating-strip-fast-spin-echo/2D') return;
   if (isOblique(model.series.plane)) {
     if (body.frontBackMm !== null || body.leftRightMm !== null) {
-      add({ code: 'wrap-not-checked', level: 'note', text: `wrap not checked: ${model.series.plane} plane, no body extent lies along phase`, numbers: {} });
+      add('wrap-not-checked', 'note', {}, () => `wrap not checked: ${model.series.plane} plane, no body extent lies along phase`);
     }
     return;
   }
@@ -43,21 +43,27 @@ export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline,
     if (atMost(bodyMm, encoded)) return;
     // Head-feet the visible length is a property of the magnet, not this body: what the preset already does is a caution, an edit that causes it an error.
     const before = baseline.model;
-    const asPreset = headFeet && before.series.parameters.phaseDirection === 'HF' && atMost(before.geometry.encodedPhaseExtentMm, encoded) && before.series.parameters.parallelFactorPhase > 1;
-    add({
-      code: 'wrap-unfoldable',
-      level: asPreset ? 'caution' : 'error',
-      text: `${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded: acceleration cannot unfold the rest (body taken as centred)`,
+    const asPreset =
+      headFeet &&
+      before.series.parameters.phaseDirection === 'HF' &&
+      atMost(before.geometry.encodedPhaseExtentMm, encoded) &&
+      before.series.parameters.parallelFactorPhase > 1;
+    add(
+      'wrap-unfoldable',
+      asPreset ? 'caution' : 'error',
       numbers,
-    });
+      () =>
+        `${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded: acceleration cannot unfold the rest (body taken as centred)`,
+    );
     return;
   }
   if (below(encoded, (bodyMm + kept) / 2)) {
-    add({
-      code: 'wrap',
-      level: 'caution',
-      text: `wrap reaches the picture: ${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded, ${inWords((bodyMm + kept) / 2, 0)} mm needed (body taken as centred)`,
-      numbers: { ...numbers, neededMm: (bodyMm + kept) / 2 },
-    });
+    add(
+      'wrap',
+      'caution',
+      { ...numbers, neededMm: (bodyMm + kept) / 2 },
+      () =>
+        `wrap reaches the picture: ${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded, ${inWords((bodyMm + kept) / 2, 0)} mm needed (body taken as centred)`,
+    );
   }
 }

@@ -92,8 +92,10 @@ const signals: Readonly<Record<Family, SignalOf>> = {
   'single-shot-fast-spin-echo': train,
   'rotating-strip-fast-spin-echo': train,
   'spoiled-gradient-echo': spoiled,
-  'balanced-steady-state': (s, te, tissue) => balancedSignal(signalRepetitionMs(s), te, s.parameters.flipAngleDeg, tissue.t1Ms, tissue.t2Ms),
-  'inversion-prepared-gradient-echo': (s, te, tissue) => inversionPreparedSignal(inversionPreparedTimingOf(s), tissue.t1Ms) * Math.exp(-te / tissue.t2StarMs),
+  'balanced-steady-state': (s, te, tissue) =>
+    balancedSignal(signalRepetitionMs(s), te, s.parameters.flipAngleDeg, tissue.t1Ms, tissue.t2Ms),
+  'inversion-prepared-gradient-echo': (s, te, tissue) =>
+    inversionPreparedSignal(inversionPreparedTimingOf(s), tissue.t1Ms) * Math.exp(-te / tissue.t2StarMs),
   'echo-planar-gradient-echo': spoiled,
   'echo-planar-spin-echo': spinEcho,
 };

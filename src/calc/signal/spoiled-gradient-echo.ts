@@ -4,7 +4,13 @@
  *
  * @example spoiledGradientEchoSignal(8, 3, 10, 1084, 69) //=> 0.054494
  */
-export function spoiledGradientEchoSignal(repetitionTimeMs: number, echoTimeMs: number, flipAngleDeg: number, t1Ms: number, t2StarMs: number): number {
+export function spoiledGradientEchoSignal(
+  repetitionTimeMs: number,
+  echoTimeMs: number,
+  flipAngleDeg: number,
+  t1Ms: number,
+  t2StarMs: number,
+): number {
   const angle = (flipAngleDeg * Math.PI) / 180;
   const e1 = Math.exp(-repetitionTimeMs / t1Ms);
   return ((Math.sin(angle) * (1 - e1)) / (1 - e1 * Math.cos(angle))) * Math.exp(-echoTimeMs / t2StarMs);

@@ -52,13 +52,13 @@ function importsOf(file: string, text: string): Import[] {
   return [...code.matchAll(form)].map(([, type, fixed, late]) => {
     const target = (fixed ?? late) as string;
     const path = target.startsWith('.') ? resolve(dirname(file), target) : null;
-    const isOurs = path !== null && path.startsWith(source);
+    const ours = path?.startsWith(source) === true ? path : null;
     return {
       file: relative(source, file),
       room: roomOf(file),
       target,
       isType: type !== undefined,
-      targetRoom: isOurs ? roomOf(path) : null,
+      targetRoom: ours === null ? null : roomOf(ours),
     };
   });
 }

@@ -1,6 +1,6 @@
 import type { CommandIo } from './command-io.js';
 import { complain } from './complain.js';
-import { type ExitCode, exitCodes } from './exit-codes.js';
+import { exitCodes } from './exit-codes.js';
 import { readCommandLine } from './read-command-line.js';
 
 /**
@@ -8,7 +8,7 @@ import { readCommandLine } from './read-command-line.js';
  *
  * @param args The words after the program's name.
  */
-export async function run(args: readonly string[], io: CommandIo): Promise<ExitCode | number> {
+export async function run(args: readonly string[], io: CommandIo): Promise<number> {
   const line = readCommandLine(args);
   if (!line.ok) return complain(line, io);
   switch (line.value.kind) {

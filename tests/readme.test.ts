@@ -1,4 +1,4 @@
-import { existsSync, readFileSync } from 'node:fs';
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { withFreshExamples } from '../scripts/readme-examples.js';
 import { cautionCodes } from '../src/calc/caution.js';
@@ -29,6 +29,14 @@ describe('README.md', () => {
 describe('DEVELOPERS.md', () => {
   it('lists every caution code', () => {
     expect(cautionCodes.filter((code) => !developers.includes(`| \`${code}\` |`))).toEqual([]);
+  });
+
+  it('lists every problem code of the sources', () => {
+    const sources = readdirSync('src', { recursive: true, encoding: 'utf8' }).filter((name) => /\.tsx?$/.test(name));
+    const form = /(?:\bcode: |\brefused\(|\bstoreProblem\(|\bstop\()\s*'([a-z]+(?:-[a-z]+)+)'/g;
+    const codes = sources.flatMap((name) => [...readFileSync(`src/${name}`, 'utf8').matchAll(form)].map(([, code]) => code as string));
+    expect(codes.length).toBeGreaterThan(30);
+    expect([...new Set(codes)].filter((code) => !developers.includes(`\`${code}\``))).toEqual([]);
   });
 
   it('names every script of the package, and every script that it names is there', () => {

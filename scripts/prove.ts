@@ -1,11 +1,12 @@
 /**
  * `npm run prove`: do the tests notice when the model is wrong? Changes one number, sign, operator or comparison of src/calc at a
- * time in a copy of the project, drawn at random, at least one a file, and runs the tests of the model on it: unit tests first, the
- * slow ones after them, and last, for what nothing else noticed, the golden file, which only says that something moved.
+ * time on the way into a bundle of the tests, drawn at random, at least one a file, and runs the tests of the model on it: unit tests
+ * first, the slow ones after them, and last, for what nothing else noticed, the golden file, which only says that something moved.
  *
  *   --seed N    the draw (printed; another each time)      --count N    changes to draw, 100
  *   --file TEXT only files whose path holds it             --all        every place once, none drawn
  *   --workers N 1 or 2                                     --list       print the draw and stop
+ *   --skip TEXT leaves out test files whose path holds it
  *
  * Ends with 1 when fewer than 95 % are noticed without the golden file, or when an entry of prove-equivalents.json does not stand.
  */
@@ -14,7 +15,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { parseArgs } from 'node:util';
 import { type Mutant, mutantsOf } from './prove-mutants.js';
-import { type Outcome, ProofCopy } from './prove-runner.js';
+import { MutantRunner, type RunResult } from './prove-runner.js';
 
 /** A change that cannot be noticed, and why. */
 interface Equivalent {
@@ -39,6 +40,7 @@ const { values: asked } = parseArgs({
     seed: { type: 'string' },
     count: { type: 'string', default: '100' },
     file: { type: 'string', default: '' },
+    skip: { type: 'string', multiple: true, default: [] },
     workers: { type: 'string', default: '2' },
     all: { type: 'boolean', default: false },
     list: { type: 'boolean', default: false },
@@ -101,11 +103,14 @@ const tests = ['tests/calc', 'tests/presets', 'tests/scenarios']
       return [];
     }
   })
-  .filter((file) => file !== goldenTest);
+  .filter((file) => file !== goldenTest && !asked.skip.some((text) => file.includes(text)));
 
-const copies = Array.from({ length: Math.min(2, Math.max(1, Number(asked.workers)), mutants.length) }, () => new ProofCopy(root));
+const runners = Array.from(
+  { length: Math.min(2, Math.max(1, Number(asked.workers)), mutants.length) },
+  () => new MutantRunner(root, sources),
+);
 const clear = () => {
-  for (const copy of copies) copy.remove();
+  for (const runner of runners) runner.remove();
 };
 process.once('SIGINT', () => {
   clear();
@@ -113,9 +118,9 @@ process.once('SIGINT', () => {
 });
 
 /** Unit tests in one run, what lasts longer in a second: most changes fall in the first. */
-async function stages(copy: ProofCopy): Promise<{ readonly quick: string[]; readonly slow: string[]; readonly timeoutMs: number }> {
+async function stages(runner: MutantRunner): Promise<{ readonly quick: string[]; readonly slow: string[]; readonly timeoutMs: number }> {
   const start = performance.now();
-  const outcome = await copy.run([...tests, goldenTest], 900_000);
+  const outcome = await runner.run([...tests, goldenTest], null, 900_000);
   if (outcome.kind !== 'passed') throw new Error(`the tests do not pass on the unchanged source: ${describe(outcome)}`);
   const msOf = (file: string) => outcome.msByFile.get(file) ?? 0;
   const isQuick = (file: string) => msOf(file) < 700 && !file.includes('/bloch/');
@@ -127,23 +132,22 @@ async function stages(copy: ProofCopy): Promise<{ readonly quick: string[]; read
   };
 }
 
-function describe(outcome: Outcome): string {
+function describe(outcome: RunResult): string {
   return outcome.kind === 'failed' ? outcome.by : outcome.kind === 'timeout' ? 'no end within the time given' : 'passed';
 }
 
-async function judge(copy: ProofCopy, mutant: Mutant, { quick, slow, timeoutMs }: Awaited<ReturnType<typeof stages>>): Promise<Verdict> {
-  copy.change(mutant);
-  try {
-    for (const files of [quick, slow, [goldenTest]]) {
-      if (files.length === 0) continue;
-      const outcome = await copy.run(files, timeoutMs);
-      if (outcome.kind === 'passed') continue;
-      return { mutant, by: describe(outcome), noticed: files[0] === goldenTest ? 'by the golden file only' : 'by tests' };
-    }
-    return { mutant, by: '', noticed: 'not' };
-  } finally {
-    copy.restore(mutant.file, sources.get(mutant.file) as string);
+async function judge(
+  runner: MutantRunner,
+  mutant: Mutant,
+  { quick, slow, timeoutMs }: Awaited<ReturnType<typeof stages>>,
+): Promise<Verdict> {
+  for (const files of [quick, slow, [goldenTest]]) {
+    if (files.length === 0) continue;
+    const outcome = await runner.run(files, mutant, timeoutMs);
+    if (outcome.kind === 'passed') continue;
+    return { mutant, by: describe(outcome), noticed: files[0] === goldenTest ? 'by the golden file only' : 'by tests' };
   }
+  return { mutant, by: '', noticed: 'not' };
 }
 
 function changeLines(mutant: Mutant): string {
@@ -155,13 +159,13 @@ function changeLines(mutant: Mutant): string {
 
 const verdicts: Verdict[] = [];
 try {
-  const plan = await stages(copies[0] as ProofCopy);
+  const plan = await stages(runners[0] as MutantRunner);
   console.log(`${plan.quick.length} quick test files, ${plan.slow.length} slow ones, then the golden file\n`);
   const waiting = [...mutants];
   await Promise.all(
-    copies.map(async (copy) => {
+    runners.map(async (runner) => {
       for (let mutant = waiting.shift(); mutant !== undefined; mutant = waiting.shift()) {
-        const verdict = await judge(copy, mutant, plan);
+        const verdict = await judge(runner, mutant, plan);
         verdicts.push(verdict);
         const { file, line, was, becomes } = mutant;
         console.log(

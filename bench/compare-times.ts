@@ -1,3 +1,4 @@
+import { median } from './median.js';
 import type { Measured } from './row.js';
 
 /** Something to time: it runs once for a running number, and gives a number that is kept so that the work cannot be left out. */
@@ -34,18 +35,12 @@ function batchSize(work: Work, batchMs: number): number {
   }
 }
 
-function median(values: readonly number[]): number {
-  const sorted = [...values].sort((a, b) => a - b);
-  const middle = sorted.length >> 1;
-  return sorted.length % 2 === 1 ? (sorted[middle] as number) : ((sorted[middle - 1] as number) + (sorted[middle] as number)) / 2;
-}
-
 /**
  * Times a subject against a yardstick: batches of both in turns, the order swapped each round. The ratio is the median of the
  * rounds' own ratios, so that a slow stretch of the machine weighs on both sides of it. Times are in microseconds.
  */
 export function compareTimes(subject: Work, yardstick: Work, options: CompareOptions = {}): Measured {
-  const { rounds = 61, batchMs = 4, yardsticksPerSubject = 1 } = options;
+  const { rounds = 201, batchMs = 1, yardsticksPerSubject = 1 } = options;
   const subjects = batchSize(subject, batchMs);
   const yardsticks = batchSize(yardstick, batchMs);
   const subjectNs: number[] = [];

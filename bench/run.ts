@@ -45,11 +45,10 @@ try {
       const measured = await row.measure();
       const kept = keepsBudget(row, measured);
       if (!kept) missed += 1;
+      const ratio = measured.yardstick === null ? '' : `${figure(measured.ratio)} x`;
       const budget = row.budget === null ? 'no budget' : `${kept ? 'within' : 'MISSED,'} ${row.budget}`;
       const yardstick = measured.yardstick === null ? '' : ` against ${figure(measured.yardstick)} ${row.unit}, ${row.against}`;
-      console.log(
-        `${figure(measured.ratio).padStart(8)} x  ${budget.padEnd(12)}  ${row.name}: ${figure(measured.subject)} ${row.unit}${yardstick}`,
-      );
+      console.log(`${ratio.padStart(9)}  ${budget.padEnd(12)}  ${row.name}: ${figure(measured.subject)} ${row.unit}${yardstick}`);
     }
   }
 } finally {

@@ -8,9 +8,12 @@ import { linesInOneTrain } from '../series.js';
 import { contrastEcho } from '../signal/echo-train-signal.js';
 import { inWords } from './number-words.js';
 
+/** Carried times are kept to a millionth of a millisecond: a slack that was carried may differ by that dust. */
+const carriedDustMs = 1e-5;
+
 /** An estimate that the preset already undercuts by as much says more about the estimate than about the edit. */
 function levelOf(short: number, shortBefore: number): 'note' | 'caution' {
-  return atMost(short, shortBefore) ? 'note' : 'caution';
+  return atMost(short, shortBefore + carriedDustMs) ? 'note' : 'caution';
 }
 
 /** Timing that cannot be played, and timing under the estimates of the fastest possible. */

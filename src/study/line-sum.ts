@@ -15,6 +15,9 @@ export function withSum(json: string): string {
   return `${body}${sumKey}:"${hexadecimal(crc32(encoder.encode(body)))}"}`;
 }
 
+/** CRC-32 (IEEE 802.3) of bytes: our own, or a faster one that gives the same. */
+export type Checksum = (bytes: Uint8Array) => number;
+
 /** What the sum of a line says. */
 export type SumVerdict = 'right' | 'missing' | 'different';
 
@@ -23,14 +26,14 @@ export type SumVerdict = 'right' | 'missing' | 'different';
  *
  * @param bytes The line's bytes as they stand in the file, for readers that have them at hand.
  */
-export function sumVerdict(line: string, bytes: Uint8Array = encoder.encode(line)): SumVerdict {
+export function sumVerdict(line: string, bytes: Uint8Array = encoder.encode(line), checksum: Checksum = crc32): SumVerdict {
   const at = line.lastIndexOf(sumKey);
   const tail = at < 0 ? '' : line.slice(at);
   const given = sumTail.exec(tail)?.[1];
   if (given === undefined) return 'missing';
   // The tail is plain ASCII, so it has as many bytes as characters.
   const body = bytes.subarray(0, bytes.length - tail.length);
-  return hexadecimal(crc32(body)) === given ? 'right' : 'different';
+  return hexadecimal(checksum(body)) === given ? 'right' : 'different';
 }
 
 function hexadecimal(sum: number): string {

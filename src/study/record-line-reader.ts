@@ -1,5 +1,5 @@
 import type { Outcome, Problem } from '../calc/problem.js';
-import { sumVerdict } from './line-sum.js';
+import { type Checksum, sumVerdict } from './line-sum.js';
 import { recordVersion, type SessionRecord } from './record.js';
 import { faultOfRecord } from './record-shape.js';
 
@@ -8,9 +8,10 @@ import { faultOfRecord } from './record-shape.js';
  * `code` is one of `record-cut-short`, `record-sum-differs`, `record-not-json`, `record-of-later-version`, `record-shape`.
  *
  * @param bytes The line's bytes as they stand in the file, for readers that have them at hand.
+ * @param checksum A faster CRC-32 where there is one.
  */
-export function readRecordLine(line: string, bytes?: Uint8Array): Outcome<SessionRecord> {
-  const verdict = sumVerdict(line, bytes);
+export function readRecordLine(line: string, bytes?: Uint8Array, checksum?: Checksum): Outcome<SessionRecord> {
+  const verdict = sumVerdict(line, bytes, checksum);
   if (verdict === 'missing') return damaged('record-cut-short', 'sum', 'the line does not end in a sum of eight hexadecimal digits');
   if (verdict === 'different') return damaged('record-sum-differs', 'sum', 'the sum does not belong to what stands before it');
   const value = parsed(line);

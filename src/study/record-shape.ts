@@ -8,55 +8,66 @@ export interface ShapeFault {
   readonly expected: string;
 }
 
-type Check = (value: unknown, path: string) => ShapeFault | null;
+/** What is wrong with a value, its path counted from the value itself; null when nothing is. Paths are only put together on a fault. */
+type Check = (value: unknown) => ShapeFault | null;
 
-const text: Check = (value, path) => (typeof value === 'string' ? null : { path, expected: 'text' });
-const number: Check = (value, path) => (typeof value === 'number' ? null : { path, expected: 'a number' });
-const flag: Check = (value, path) => (typeof value === 'boolean' ? null : { path, expected: 'true or false' });
+const text: Check = (value) => (typeof value === 'string' ? null : { path: '', expected: 'text' });
+const number: Check = (value) => (typeof value === 'number' ? null : { path: '', expected: 'a number' });
+const flag: Check = (value) => (typeof value === 'boolean' ? null : { path: '', expected: 'true or false' });
 
 function exactly(wanted: string | number): Check {
-  return (value, path) => (value === wanted ? null : { path, expected: JSON.stringify(wanted) });
+  return (value) => (value === wanted ? null : { path: '', expected: JSON.stringify(wanted) });
 }
 
 function wordOf(words: readonly string[]): Check {
-  return (value, path) => (typeof value === 'string' && words.includes(value) ? null : { path, expected: `one of ${words.join(', ')}` });
+  return (value) => (typeof value === 'string' && words.includes(value) ? null : { path: '', expected: `one of ${words.join(', ')}` });
 }
 
 function orNull(check: Check): Check {
-  return (value, path) => (value === null ? null : check(value, path));
+  return (value) => (value === null ? null : check(value));
+}
+
+/** A fault inside a value, its path counted from the value that holds it. */
+function within(key: string | number, { path, expected }: ShapeFault): ShapeFault {
+  return { path: path === '' ? String(key) : `${key}.${path}`, expected };
 }
 
 function listOf(check: Check): Check {
-  return (value, path) => {
-    if (!Array.isArray(value)) return { path, expected: 'a list' };
-    return firstFault(value.map((item, index) => check(item, `${path}.${index}`)));
+  return (value) => {
+    if (!Array.isArray(value)) return { path: '', expected: 'a list' };
+    for (let index = 0; index < value.length; index += 1) {
+      const fault = check(value[index]);
+      if (fault !== null) return within(index, fault);
+    }
+    return null;
   };
 }
 
 /** An object with at least these keys; more are left alone, so that a later program may add some. */
 function withKeys(checks: Readonly<Record<string, Check>>, needed: 'all keys' | 'any keys' = 'all keys'): Check {
   const rows = Object.entries(checks);
-  return (value, path) => {
-    if (!isObject(value)) return { path, expected: 'an object' };
+  return (value) => {
+    if (!isObject(value)) return { path: '', expected: 'an object' };
     for (const [key, check] of rows) {
-      if (needed === 'any keys' && !Object.hasOwn(value, key)) continue;
-      const fault = check(value[key], path === '' ? key : `${path}.${key}`);
-      if (fault !== null) return fault;
+      const inner = value[key];
+      if (inner === undefined && needed === 'any keys' && !Object.hasOwn(value, key)) continue;
+      const fault = check(inner);
+      if (fault !== null) return within(key, fault);
     }
     return null;
   };
 }
 
 function both(first: Check, second: Check): Check {
-  return (value, path) => first(value, path) ?? second(value, path);
+  return (value) => first(value) ?? second(value);
 }
 
 function valuesOf(check: Check): Check {
-  return (value, path) => {
-    if (!isObject(value)) return { path, expected: 'an object' };
+  return (value) => {
+    if (!isObject(value)) return { path: '', expected: 'an object' };
     for (const key in value) {
-      const fault = check(value[key], `${path}.${key}`);
-      if (fault !== null) return fault;
+      const fault = check(value[key]);
+      if (fault !== null) return within(key, fault);
     }
     return null;
   };
@@ -64,7 +75,7 @@ function valuesOf(check: Check): Check {
 
 const anything: Check = () => null;
 
-const day: Check = (value, path) => (typeof value === 'string' && isDay(value) ? null : { path, expected: 'a day as YYYY-MM-DD, or null' });
+const day: Check = (value) => (typeof value === 'string' && isDay(value) ? null : { path: '', expected: 'a day as YYYY-MM-DD, or null' });
 
 const listOfNumbers = listOf(number);
 
@@ -140,7 +151,7 @@ const record = withKeys({
 
 /** The first place where a value read from a file is no record, or null when it is one. */
 export function faultOfRecord(value: unknown): ShapeFault | null {
-  return record(value, '');
+  return record(value);
 }
 
 /**
@@ -155,10 +166,6 @@ function isDay(given: string): boolean {
   const leap = year % 4 === 0 && (year % 100 !== 0 || year % 400 === 0);
   const days = [31, leap ? 29 : 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31][month - 1];
   return days !== undefined && date >= 1 && date <= days;
-}
-
-function firstFault(faults: readonly (ShapeFault | null)[]): ShapeFault | null {
-  return faults.find((fault) => fault !== null) ?? null;
 }
 
 function isObject(value: unknown): value is Record<string, unknown> {

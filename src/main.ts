@@ -1,6 +1,6 @@
 /** The program: joins the rooms, and answers with an exit code. Nothing of the interface is loaded before it is asked for. */
 import { homedir } from 'node:os';
-import type { CommandIo } from './commands/command-io.js';
+import type { CommandIo, InterfaceOptions } from './commands/command-io.js';
 import { emphasise } from './commands/emphasis.js';
 import { run } from './commands/run.js';
 import { nodeDisk } from './store/node-disk.js';
@@ -27,8 +27,31 @@ const io: CommandIo = {
   homeFolder: homedir(),
   workingFolder: process.cwd(),
   shippedPresets: () => shippedPresetsFolder(nodeDisk, import.meta.url),
-  openInterface: null,
+  openInterface: openOnTerminal,
 };
+
+/** Opens the interface on files, settings and drafts of this user. */
+async function openOnTerminal(options: InterfaceOptions): Promise<number> {
+  const [{ openInterface }, { openWorld }] = await Promise.all([import('./screens/open-interface.js'), import('./effects/open-world.js')]);
+  const { disk, environment, homeFolder, workingFolder } = io;
+  const { presets, records } = options;
+  const world = await openWorld({
+    disk,
+    environment,
+    homeFolder,
+    workingFolder,
+    shippedPresets: await io.shippedPresets(),
+    presets,
+    records,
+  });
+  return openInterface({
+    ...world,
+    environment,
+    ascii: options.ascii || world.ascii,
+    reader: options.reader || world.reader,
+    color: options.color ?? world.color,
+  });
+}
 
 process.stdout.on('error', leaveQuietlyOnBrokenPipe);
 process.stderr.on('error', leaveQuietlyOnBrokenPipe);

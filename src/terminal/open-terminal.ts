@@ -27,6 +27,8 @@ export interface OpenTerminal {
 const lastAnswerMs = 250;
 /** A stop that does not come (nobody could start the process again) must not leave it without its screen. */
 const stopGraceMs = 200;
+/** What is saved on the way out is waited for, this long at most: a disk that hangs must not keep the process. */
+const savingMs = 2000;
 
 function errorText(error: unknown): string {
   return `${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`;
@@ -70,12 +72,16 @@ export function openTerminal(options: TerminalOptions): OpenTerminal {
 
   const end = async (reason: LeaveReason) => {
     let problem: unknown;
+    let saving: unknown;
     try {
-      options.onLeave?.(reason);
+      saving = options.onLeave?.(reason);
     } catch (error) {
       problem = error;
     }
     leaveScreen();
+    await Promise.race([saving, new Promise((resolve) => setTimeout(resolve, savingMs).unref())]).catch((error: unknown) => {
+      problem = error;
+    });
     if (problem !== undefined) errors.write(errorText(problem));
     await lastAnswer();
     screen.cook();

@@ -5,8 +5,8 @@ import type { LeaveReason } from './leave-reason.js';
 export interface TerminalOptions {
   /** One key at a time, never Ctrl-C, Ctrl-\ and Ctrl-Z: those are dealt with here. */
   readonly onKey: (key: Key) => void;
-  /** Called once, before anything else happens, whichever way out is taken. Save here, synchronously. */
-  readonly onLeave?: (reason: LeaveReason) => void;
+  /** Called once, before anything else happens, whichever way out is taken. Save here; a promise is waited for, two seconds at most. */
+  readonly onLeave?: (reason: LeaveReason) => void | Promise<void>;
   /** Called before Ctrl-Z, or SIGTSTP, stops the process. Save here, synchronously. */
   readonly onSuspend?: () => void;
   /** Shown at once, before anything slow is loaded: lines joined by `\n`. */

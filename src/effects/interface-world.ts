@@ -1,0 +1,23 @@
+import type { ParseExpression } from '../formulas/parsed-node.js';
+import type { Draft } from '../session/draft.js';
+import type { DebouncedSaver } from '../store/debounced-saver.js';
+import type { Disk } from '../store/disk.js';
+import type { DraftFile } from '../store/draft-file.js';
+import type { Folders } from '../store/folders.js';
+import type { PresetFolder } from '../store/preset-folder.js';
+import type { Settings } from '../store/settings.js';
+
+/** Everything outside that the effects of the interface touch. Tests put plain objects in its place. */
+export interface InterfaceWorld {
+  readonly disk: Disk;
+  readonly folders: Folders;
+  readonly presetFolders: readonly PresetFolder[];
+  readonly settings: Settings;
+  readonly drafts: DraftFile;
+  readonly saver: DebouncedSaver<Draft>;
+  /** Loads the parser of expressions once, on first need. */
+  readonly parser: () => Promise<ParseExpression>;
+  /** Today as YYYY-MM-DD. */
+  readonly today: () => string;
+  readonly newId: () => string;
+}

@@ -1,0 +1,19 @@
+import type { Message } from '../session/message.js';
+import { listPresets } from '../store/preset-folder.js';
+import type { InterfaceWorld } from './interface-world.js';
+
+/** Reads the presets that can be chosen, and says what is wrong with the others. */
+export async function loadPresets(world: InterfaceWorld): Promise<Message> {
+  const { presets, problems } = await listPresets(world.disk, world.presetFolders);
+  return {
+    kind: 'presets',
+    presets: presets.map(({ study, hash, origin }) => ({ study, hash, origin })),
+    notes: problems.map(({ message }) => message),
+  };
+}
+
+/** Looks for sessions that were left unfinished. */
+export async function loadDrafts(world: InterfaceWorld): Promise<readonly Message[]> {
+  const { drafts, problems } = await world.drafts.unfinished();
+  return [{ kind: 'drafts', drafts }, ...problems.map(({ message }): Message => ({ kind: 'note', words: message }))];
+}

@@ -1,0 +1,35 @@
+import type { Answer, Effect } from '../session/message.js';
+import { claimDraft } from './claim-draft.js';
+import type { InterfaceWorld } from './interface-world.js';
+import { readSessionRules } from './read-session-rules.js';
+import { readTypedExpression } from './read-typed-expression.js';
+import { savePage } from './save-page.js';
+import { savePreset } from './save-preset.js';
+import { saveRecord } from './save-record.js';
+
+/** Carries an effect out. Those that were asked answer; the others answer nothing. `quit` belongs to whoever holds the screen. */
+export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<Answer | null> {
+  switch (effect.kind) {
+    case 'save-draft':
+      world.saver.change(effect.draft);
+      return null;
+    case 'drop-draft':
+      await world.saver.forget();
+      await world.drafts.discard();
+      return null;
+    case 'save-record':
+      return saveRecord(world, effect);
+    case 'claim-draft':
+      return claimDraft(world, effect);
+    case 'read-expression':
+      return readTypedExpression(world, effect);
+    case 'read-rules':
+      return readSessionRules(world, effect);
+    case 'save-preset':
+      return savePreset(world, effect);
+    case 'save-page':
+      return savePage(world, effect);
+    case 'quit':
+      return null;
+  }
+}

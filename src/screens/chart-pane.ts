@@ -1,0 +1,184 @@
+import type { FigureKey } from '../calc/figures.js';
+import { axisLabel, type RangeChart } from '../session/chart.js';
+import { valueWords } from '../session/next-step.js';
+import { sayFigure } from '../session/say-figure.js';
+import { chartDotBit, chartDots } from '../terminal/chart-dots.js';
+import { fitText } from '../terminal/text-width.js';
+import { type Line, line, type Style, span } from './line.js';
+import type { Look } from './look.js';
+
+const axisColumns = 8;
+
+interface Scale {
+  readonly low: number;
+  readonly high: number;
+}
+
+/** A parameter through its range: two curves, their limits, the cursor that reads both axes. */
+export function chartPane(chart: RangeChart, look: Look, columns: number, rows: number): Line[] {
+  const { points, cursor, now, field, figures } = chart;
+  const width = columns - 2 * axisColumns - 2;
+  const height = Math.max(4, rows - 5);
+  const xs = points.map(({ value }) => value);
+  const first = scaleOf(chart, 0);
+  const second = scaleOf(chart, 1);
+  const plot = new Plot(width, height, look);
+  curve(plot, chart, 0, first, xs);
+  curve(plot, chart, 1, second, xs);
+  plot.upright(columnOf(xs, cursor, width));
+  const limit = chart.limits[0];
+  if (limit !== null && limit >= first.low && limit <= first.high) plot.level(heightOf(limit, first, height * 4), look.glyphs.barTrack);
+  const head: Line = [
+    span(fitText(`1 ${axisLabel(figures[0])}`, Math.floor(columns / 2), look.glyphs.ellipsis), 'first'),
+    span(fitText(`2 ${axisLabel(figures[1])}`, columns - Math.floor(columns / 2), look.glyphs.ellipsis, 'right'), 'second'),
+  ];
+  const body = plot
+    .lines()
+    .map(
+      (cells, row): Line => [
+        span(axisText(figures[0], first, row, height).padStart(axisColumns), 'first'),
+        span('|', 'quiet'),
+        ...cells,
+        span('|', 'quiet'),
+        span(axisText(figures[1], second, row, height), 'second'),
+      ],
+    );
+  const from = valueWords(field, xs[0]);
+  const to = valueWords(field, xs.at(-1));
+  const under = `${' '.repeat(axisColumns + 1)}${from}${to.padStart(Math.max(1, width - from.length))}`;
+  const point = points[cursor];
+  const read =
+    point === undefined
+      ? ''
+      : `${field.label} ${valueWords(field, point.value)}${cursor === now ? ' (as now)' : ''}: ${wordsOf(figures[0], point.figures[figures[0]])}, ${wordsOf(figures[1], point.figures[figures[1]])}${point.over ? '  OVER' : ''}`;
+  return [
+    head,
+    ...body,
+    line(under, 'quiet'),
+    [span(fitText(read, columns, look.glyphs.ellipsis), point?.over ? 'trouble' : 'bold')],
+    limitLine(chart),
+  ];
+}
+
+function limitLine({ limits, figures }: RangeChart): Line {
+  const parts = limits.flatMap((limit, at) =>
+    limit === null ? [] : [`limit of ${axisLabel(figures[at as 0 | 1]).replace(/,.*/, '')}: ${sayFigure(figures[at as 0 | 1], limit)}`],
+  );
+  return line(parts.join('; '), 'quiet');
+}
+
+const wordsOf = (key: FigureKey, value: number | null) => `${axisLabel(key).replace(/,.*/, '')} ${sayFigure(key, value)}`;
+
+function scaleOf({ points, figures, limits }: RangeChart, which: 0 | 1): Scale {
+  const values = points.map((point) => point.figures[figures[which]]).filter((value): value is number => value !== null);
+  const low = Math.min(...values);
+  const high = Math.max(...values);
+  const limit = limits[which];
+  // A limit within reach of the curve is drawn; one far away must not flatten it.
+  const span = Math.max(high - low, Math.abs(high) * 0.02, 1e-9);
+  const near = limit !== null && limit > low - span && limit < high + span;
+  const [bottom, top] = near ? [Math.min(low, limit), Math.max(high, limit)] : [low, high];
+  const air = Math.max((top - bottom) * 0.05, Math.abs(top) * 0.005, 1e-9);
+  return { low: bottom - air, high: top + air };
+}
+
+function heightOf(value: number, { low, high }: Scale, dots: number): number {
+  return Math.round(((value - low) / (high - low)) * (dots - 1));
+}
+
+function columnOf(xs: readonly number[], at: number, width: number): number {
+  const [from, to, x] = [xs[0] ?? 0, xs.at(-1) ?? 0, xs[at] ?? 0];
+  return to === from ? 0 : Math.round(((x - from) / (to - from)) * (width - 1));
+}
+
+function axisText(key: FigureKey, { low, high }: Scale, row: number, height: number): string {
+  const share = height === 1 ? 0 : row / (height - 1);
+  const shown = row === 0 || row === height - 1 || row === Math.floor((height - 1) / 2);
+  return shown
+    ? sayFigure(key, high - share * (high - low))
+        .replace(/ (mm|s|px|uT|ms|mm3)$/, '')
+        .padEnd(1)
+    : '';
+}
+
+/** Draws a curve through the points; the second one is dotted, so that they differ without colour. */
+function curve(plot: Plot, { points, figures }: RangeChart, which: 0 | 1, scale: Scale, xs: readonly number[]): void {
+  const [from, to] = [xs[0] ?? 0, xs.at(-1) ?? 0];
+  const dots = plot.width * 2;
+  let before: { x: number; y: number } | null = null;
+  points.forEach((point) => {
+    const value = point.figures[figures[which]];
+    if (value === null) {
+      before = null;
+      return;
+    }
+    const x = to === from ? 0 : Math.round(((point.value - from) / (to - from)) * (dots - 1));
+    const y = heightOf(value, scale, plot.height * 4);
+    const start = before ?? { x, y };
+    const length = Math.max(Math.abs(x - start.x), Math.abs(y - start.y), 1);
+    for (let i = 0; i <= length; i += 1) {
+      const [px, py] = [Math.round(start.x + ((x - start.x) * i) / length), Math.round(start.y + ((y - start.y) * i) / length)];
+      if (which === 0 || (px + py) % 3 === 0) plot.dot(px, py, which);
+    }
+    before = { x, y };
+  });
+}
+
+/** A field of dots, two by four in a cell, and whose curve a cell belongs to. */
+class Plot {
+  readonly #dots: Uint8Array;
+  readonly #owner: Int8Array;
+  readonly #marks: (string | undefined)[];
+
+  constructor(
+    readonly width: number,
+    readonly height: number,
+    readonly look: Look,
+  ) {
+    this.#dots = new Uint8Array(width * height);
+    this.#owner = new Int8Array(width * height).fill(-1);
+    this.#marks = new Array<string | undefined>(width * height);
+  }
+
+  /** Sets a dot; rows count from the bottom. */
+  dot(x: number, y: number, owner: 0 | 1): void {
+    const cell = (this.height - 1 - (y >> 2)) * this.width + (x >> 1);
+    if (cell < 0 || cell >= this.#dots.length) return;
+    this.#dots[cell] = (this.#dots[cell] ?? 0) | chartDotBit((x & 1) as 0 | 1, (3 - (y & 3)) as 0 | 1 | 2 | 3);
+    if (this.#owner[cell] !== 0) this.#owner[cell] = owner;
+  }
+
+  /** A line across, where no curve is. */
+  level(y: number, sign: string): void {
+    const row = this.height - 1 - (y >> 2);
+    for (let x = 0; x < this.width; x += 1) this.#marks[row * this.width + x] ??= sign;
+  }
+
+  /** The cursor, where no curve is. */
+  upright(x: number): void {
+    for (let row = 0; row < this.height; row += 1) this.#marks[row * this.width + x] = this.look.glyphs.verticalRule;
+  }
+
+  lines(): Line[] {
+    return Array.from({ length: this.height }, (_, row) => {
+      const cells = Array.from({ length: this.width }, (_cell, x): { text: string; style: Style } => {
+        const at = row * this.width + x;
+        const dots = this.#dots[at] ?? 0;
+        if (dots === 0) return { text: this.#marks[at] ?? ' ', style: this.#marks[at] === undefined ? 'plain' : 'quiet' };
+        return { text: chartDots(dots, this.look.set), style: this.#owner[at] === 0 ? 'first' : 'second' };
+      });
+      return joined(cells);
+    });
+  }
+}
+
+/** Neighbours of one style become one stretch. */
+function joined(cells: readonly { text: string; style: Style }[]): Line {
+  const spans: { text: string; style: Style }[] = [];
+  for (const cell of cells) {
+    const last = spans.at(-1);
+    if (last?.style === cell.style) last.text += cell.text;
+    else spans.push({ ...cell });
+  }
+  return spans;
+}

@@ -1,0 +1,95 @@
+import { entryKeys, keyMap } from '../session/key-map.js';
+import { holdClock, runningSeries } from '../session/running.js';
+import { sayClock } from '../session/say-number.js';
+import { sayTime } from '../session/say-time.js';
+import type { State } from '../session/state.js';
+import { type Headline, seriesHeadline, sessionHeadline } from '../session/verdicts.js';
+import { textWidth } from '../terminal/text-width.js';
+import { fitLine, type Line, lineWidth, type Span, type Style, span } from './line.js';
+import type { Look } from './look.js';
+
+const headlineStyle: Readonly<Record<string, Style>> = { OVER: 'trouble', 'TOO CLOSE': 'attention', FITS: 'bold' };
+
+/** The verdict of the present screen: of the series that is looked at, else of the session. */
+export function headlineOf(state: State): Headline {
+  const { screen, seriesId } = state.place;
+  const ofSeries = screen === 'series' || screen === 'why' || screen === 'type-these' || screen === 'chart' || screen === 'readings';
+  return ofSeries && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
+}
+
+/** The first line: the verdict in words, and the clocks that run. */
+export function headlineLine(state: State, look: Look, columns: number): Line {
+  const { word, text } = headlineOf(state);
+  const clocks = clockWords(state);
+  const verdict: Line =
+    word === null
+      ? [span(text, 'bold')]
+      : [span(word, headlineStyle[word] ?? 'bold'), span(text.startsWith(word) ? text.slice(word.length) : `  ${text}`, 'bold')];
+  return withRight(verdict, clocks, columns, look);
+}
+
+/** A line with something at its right end. */
+export function withRight(left: Line, right: string, columns: number, look: Look, style: Style = 'bold'): Line {
+  if (right === '') return fitLine(left, columns, look.glyphs.ellipsis);
+  const room = columns - textWidth(right) - 1;
+  return [...fitLine(left, room, look.glyphs.ellipsis), span(' '), span(right, style)];
+}
+
+/** The clocks that run: the present breath-hold, the contrast, the patient's time. */
+export function clockWords(state: State): string {
+  const running = runningSeries(state);
+  const clock = running === null ? null : holdClock(state, running);
+  const words: string[] = [];
+  if (running !== null && clock !== null) {
+    const which = clock.hold === null ? '' : ` hold ${clock.hold}/${clock.holds}`;
+    words.push(`${running.id}${which} ${clock.counting ? sayTime(clock.leftS) : clock.leftS === 0 ? 'over' : 'waits'}`);
+  }
+  if (state.session?.contrastAtMs != null) words.push(`contrast ${sayClock((state.nowMs - state.session.contrastAtMs) / 1000)}`);
+  return words.join('  ');
+}
+
+/** What was just said; or what is being typed. */
+export function noticeLine(state: State, look: Look, columns: number, idle: Line): Line {
+  const { entry, notice } = state;
+  if (entry !== null) {
+    const problem = notice === null ? [] : [span(`  ${notice.words}`, notice.level === 'trouble' ? 'trouble' : 'quiet')];
+    return fitLine(
+      [
+        span(entry.ask === null ? 'type: ' : 'reading: '),
+        span(entry.text, 'bold'),
+        { text: ' ', style: 'inverse', cursor: true },
+        ...problem,
+      ],
+      columns,
+      look.glyphs.ellipsis,
+    );
+  }
+  if (notice !== null)
+    return fitLine([span(notice.words, notice.level === 'trouble' ? 'trouble' : 'plain')], columns, look.glyphs.ellipsis);
+  return fitLine(idle, columns, look.glyphs.ellipsis);
+}
+
+/** What must not be pushed out of the bottom line by the others; equals keep the order of the map. */
+function rank(brief: string): number {
+  if (brief === 'help') return 0;
+  if (['step', 'type', 'open', 'start', 'done', 'change', 'practice', 'save', 'reasons', 'take'].includes(brief)) return 1;
+  if (brief === 'undo') return 2;
+  if (brief === 'patient') return 3;
+  return ['redo', 'order', 'end', 'quit', 'back'].includes(brief) ? 5 : 4;
+}
+
+/** The keys that work here and now, from the key map; what does not fit is under help. */
+export function keyLine(state: State, look: Look, columns: number): Line {
+  const rows =
+    state.entry === null
+      ? keyMap[state.place.screen].filter(({ brief, when }) => brief !== '' && (when === undefined || when(state)))
+      : entryKeys;
+  const parts: Span[] = [];
+  const shown = [...rows].sort((a, b) => rank(a.brief) - rank(b.brief));
+  for (const { shown: keys, brief } of shown) {
+    const next = [...parts, span(parts.length === 0 ? keys : `  ${keys}`, 'bold'), span(` ${brief}`, 'quiet')];
+    if (lineWidth(next) > columns) break;
+    parts.splice(0, parts.length, ...next);
+  }
+  return fitLine(parts, columns, look.glyphs.ellipsis);
+}

@@ -1,0 +1,16 @@
+import { formRow } from '../session/hands/form-commands.js';
+import type { State } from '../session/state.js';
+import { parameterHint } from './parameter-pane.js';
+
+/** What the line of messages says when there is no message. */
+export function idleWords(state: State): string {
+  const { screen, pane } = state.place;
+  if (screen === 'series')
+    return pane === 'main'
+      ? parameterHint(state)
+      : pane === 'consequences'
+        ? 'w explains the figure under the hand'
+        : 'w explains the caution under the hand';
+  if (screen === 'patient' || screen === 'readings' || screen === 'record') return formRow(state)?.help ?? '';
+  return screen === 'start' ? 'Presets are starting values; review before use.' : '';
+}

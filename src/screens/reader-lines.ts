@@ -1,0 +1,165 @@
+import { figureTable } from '../calc/figures.js';
+import { rangeChart } from '../session/chart.js';
+import { consequences } from '../session/consequences.js';
+import { formRow, formRows } from '../session/hands/form-commands.js';
+import { orderRow } from '../session/hands/order-commands.js';
+import { fieldHere, fieldsHere } from '../session/hands/series-commands.js';
+import { startRow } from '../session/hands/start-commands.js';
+import { nextStep, valueWords } from '../session/next-step.js';
+import { resultNow, studySeries } from '../session/results.js';
+import { sayFigure } from '../session/say-figure.js';
+import { sayTime } from '../session/say-time.js';
+import { fieldValue } from '../session/series-fields.js';
+import { startRows } from '../session/start-list.js';
+import type { State } from '../session/state.js';
+import { minimumSet, timeline } from '../session/timeline.js';
+import { sayJudged, seriesVerdicts } from '../session/verdicts.js';
+import { headlineLine, keyLine, noticeLine } from './common-lines.js';
+import { idleWords } from './idle-words.js';
+import { fill, type Line, line, lineText, span, windowOf, wrap } from './line.js';
+import type { Look } from './look.js';
+import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
+import { titleLine } from './title-line.js';
+
+/** One thing to read aloud; `here` is where the hand is. */
+interface Item {
+  readonly words: string;
+  readonly here?: boolean;
+}
+
+/** The same content as linear text: one thing a line, no columns, no drawings; the cursor stands on the line of the hand. */
+export function readerLines(state: State, look: Look): Line[] {
+  const { columns, rows } = state.size;
+  const items = itemsOf(state, look);
+  const lines: Line[] = [];
+  let here = 0;
+  for (const item of items) {
+    if (item.here) here = lines.length;
+    for (const [at, words] of wrap(item.words, columns - 1).entries())
+      lines.push(item.here && at === 0 ? [{ text: words, style: 'bold', cursor: true }] : [span(words)]);
+  }
+  const bodyRows = rows - 4;
+  return [
+    headlineLine(state, look, columns),
+    titleLine(state, look, columns),
+    ...fill(windowOf(lines, here, bodyRows).items, bodyRows),
+    noticeLine(state, look, columns, line(idleWords(state))),
+    keyLine(state, look, columns),
+  ];
+}
+
+function itemsOf(state: State, look: Look): readonly Item[] {
+  const text = (lines: readonly Line[]): Item[] => lines.map((each) => ({ words: lineText(each) }));
+  switch (state.place.screen) {
+    case 'start':
+      return startItems(state);
+    case 'order':
+      return orderItems(state);
+    case 'series':
+      return seriesItems(state);
+    case 'chart':
+      return chartItems(state);
+    case 'why':
+      return text(whyScreen(state, look, state.size.columns - 1, state.size.rows - 4));
+    case 'type-these':
+      return text(typeTheseScreen(state, look, state.size.columns - 1, state.size.rows - 4));
+    case 'help':
+      return text(helpScreen(state, look, state.size.columns - 1, state.size.rows - 4));
+    default: {
+      const here = formRow(state)?.field;
+      return formRows(state).map((row) => ({
+        words: row.kind === 'heading' ? `${row.label}:` : `${row.label.trim()}: ${row.shown === '-' ? 'blank' : row.shown.trim() || 'no'}`,
+        here: row.field === here,
+      }));
+    }
+  }
+}
+
+function startItems(state: State): Item[] {
+  const here = startRow(state)?.field;
+  return [
+    { words: `Type to narrow: ${state.narrowing || 'nothing typed'}` },
+    ...startRows(state).map((row) => ({
+      words:
+        row.kind === 'draft'
+          ? `Unfinished session: ${row.words}, ${row.changes} changed`
+          : `${row.preset.study.fieldT} T, ${row.preset.study.region}: ${row.preset.study.title}, ${row.preset.study.status}`,
+      here: row.field === here,
+    })),
+  ];
+}
+
+function orderItems(state: State): Item[] {
+  const order = timeline(state);
+  const here = orderRow(state)?.id;
+  return [
+    ...order.rows.map((row) => {
+      const { figures } = resultNow(state, row.series.id).evaluation;
+      const judged = seriesVerdicts(state, row.series.id)[0];
+      const words = [
+        `${row.series.id}, ${studySeries(state, row.series.id).title}: ${row.series.state.replace('-', ' ')}`,
+        `time ${sayTime(figures.scanTimeS ?? 0)}`,
+        ...(figures.holdTimeS === null ? [] : [`${figures.holds} breath-holds of ${sayTime(figures.holdTimeS)}`]),
+        ...(row.takesS > 0 ? [`running total ${sayTime(row.endsS)}`] : []),
+        ...(row.beyond ? ["beyond the patient's time"] : []),
+        ...(judged === undefined ? [] : [sayJudged(judged)]),
+        ...(row.series.placeLocked ? ['keeps its place'] : []),
+      ];
+      return { words: words.join(', '), here: row.series.id === here };
+    }),
+    ...minimumSet(state).map(({ ids, complete }) => ({ words: `Minimum set: ${ids.join(' or ')}, ${complete ? 'complete' : 'not yet'}` })),
+    { words: `Still to do ${sayTime(order.totalS)}${order.leftS === null ? '' : `, time left ${sayTime(Math.max(0, order.leftS))}`}` },
+  ];
+}
+
+function seriesItems(state: State): Item[] {
+  const { seriesId, pane, figure, caution } = state.place;
+  const now = resultNow(state, seriesId);
+  const planned = studySeries(state, seriesId).parameters;
+  const field = fieldHere(state);
+  const next = nextStep(state, seriesId, field);
+  const steps = [next.down, next.up].flatMap((step) =>
+    step === null
+      ? []
+      : [
+          {
+            words: `Step to ${valueWords(field, step.value)}: ${
+              consequences(state, seriesId)
+                .filter(({ key }) => sayFigure(key, step.result.evaluation.figures[key]) !== sayFigure(key, now.evaluation.figures[key]))
+                .map(({ key }) => `${figureTable[key].label} ${sayFigure(key, step.result.evaluation.figures[key])}`)
+                .join(', ') || 'nothing changes'
+            }`,
+          },
+        ],
+  );
+  return [
+    { words: `Here: ${field.label} ${valueWords(field, fieldValue(field, now.parameters))}`, here: pane === 'main' },
+    ...steps,
+    ...next.sentences.map((words) => ({ words })),
+    { words: 'Consequences against the preset:' },
+    ...consequences(state, seriesId).map((row, at) => ({
+      words: `${figureTable[row.key].label} ${row.value}${row.change === '' ? '' : `, ${row.change}`}${row.over ? ', OVER its limit' : ''}${row.fromReading ? ', from the scanner reading' : ''}`,
+      here: pane === 'consequences' && (figure === row.key || (figure === null && at === 0)),
+    })),
+    { words: `Cautions: ${now.cautions.length === 0 ? 'none' : ''}` },
+    ...now.cautions.map(({ level, text }, at) => ({
+      words: `${level}: ${text}`,
+      here: pane === 'cautions' && at === Math.min(caution, now.cautions.length - 1),
+    })),
+    { words: 'Parameters:' },
+    ...fieldsHere(state).map((each) => {
+      const [is, was] = [valueWords(each, fieldValue(each, now.parameters)), valueWords(each, fieldValue(each, planned))];
+      return { words: `${each.label}: ${is}${is === was ? '' : `, preset ${was}`}` };
+    }),
+  ];
+}
+
+function chartItems(state: State): Item[] {
+  const chart = rangeChart(state);
+  if (chart === null) return [{ words: 'No range of numbers here' }];
+  const { points, cursor, now, field, figures } = chart;
+  return points.map((point, at) => ({
+    words: `${field.label} ${valueWords(field, point.value)}${at === now ? ', as now' : ''}: ${figures.map((key) => `${figureTable[key].label} ${sayFigure(key, point.figures[key])}`).join(', ')}${point.over ? ', OVER' : ''}`,
+    here: at === cursor,
+  }));
+}

@@ -1,0 +1,48 @@
+import type { ScreenName, State } from '../session/state.js';
+import { chartScreen } from './chart-screen.js';
+import { headlineLine, keyLine, noticeLine } from './common-lines.js';
+import { patientScreen, readingsScreen, recordScreen } from './form-screen.js';
+import { idleWords } from './idle-words.js';
+import { fill, type Line, line } from './line.js';
+import type { Look } from './look.js';
+import { orderScreen } from './order-screen.js';
+import { readerLines } from './reader-lines.js';
+import { seriesScreen } from './series-screen.js';
+import { startScreen } from './start-screen.js';
+import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
+import { titleLine } from './title-line.js';
+
+/** The smallest screen that is drawn. */
+export const smallestSize = { columns: 80, rows: 24 } as const;
+
+type Body = (state: State, look: Look, columns: number, rows: number) => Line[];
+
+const bodies: Readonly<Record<ScreenName, Body>> = {
+  start: startScreen,
+  patient: patientScreen,
+  order: orderScreen,
+  series: seriesScreen,
+  why: whyScreen,
+  'type-these': typeTheseScreen,
+  chart: chartScreen,
+  readings: readingsScreen,
+  record: recordScreen,
+  help: helpScreen,
+};
+
+/** A whole screen: verdict, title, body, what was just said, the keys that work here and now. */
+export function screenLines(state: State, look: Look): Line[] {
+  const { columns, rows } = state.size;
+  if (columns < smallestSize.columns || rows < smallestSize.rows) {
+    return [line(`This screen is ${columns} by ${rows}: holdfast needs ${smallestSize.columns} by ${smallestSize.rows}. Nothing is lost.`)];
+  }
+  if (look.reader) return readerLines(state, look);
+  const bodyRows = rows - 4;
+  return [
+    headlineLine(state, look, columns),
+    titleLine(state, look, columns),
+    ...fill(bodies[state.place.screen](state, look, columns, bodyRows), bodyRows),
+    noticeLine(state, look, columns, line(idleWords(state), 'quiet')),
+    keyLine(state, look, columns),
+  ];
+}

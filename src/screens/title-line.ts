@@ -1,0 +1,35 @@
+import { classRow } from '../calc/classes.js';
+import { classOf } from '../calc/series.js';
+import { changedKeys } from '../session/changed-keys.js';
+import { fieldHere } from '../session/hands/series-commands.js';
+import { resultNow, studySeries } from '../session/results.js';
+import type { State } from '../session/state.js';
+import { withRight } from './common-lines.js';
+import { type Line, span } from './line.js';
+import type { Look } from './look.js';
+import { screenWords } from './text-screen.js';
+
+/** The second line: which screen of what. */
+export function titleLine(state: State, look: Look, columns: number): Line {
+  const { opened } = state;
+  if (opened === null) return withRight([span('Start', 'bold')], 'holdfast', columns, look, 'quiet');
+  const { study } = opened;
+  const right = `${study.id}, ${opened.scanner.fieldT} T${study.status === 'starter' ? ', starter' : ''}`;
+  return withRight([span(words(state))], right, columns, look, 'quiet');
+}
+
+function words(state: State): string {
+  const { screen, seriesId } = state.place;
+  if (screen === 'series') {
+    const series = studySeries(state, seriesId);
+    const now = resultNow(state, seriesId);
+    const changed = changedKeys(series.parameters, now.parameters).length;
+    const reading = now.evaluation.fromReading.length > 0 ? ', r: from the scanner' : '';
+    return `Series ${seriesId}: ${classRow(classOf(series)).label}, ${changed === 0 ? 'as the preset' : `${changed} changed`}${reading}`;
+  }
+  if (screen === 'chart')
+    return `Range chart: ${fieldHere({ ...state, place: { ...state.place, fields: { ...state.place.fields, series: state.place.chart?.path ?? '' } } }).label} of ${seriesId}`;
+  if (screen === 'readings') return `Scanner readings: ${seriesId}`;
+  const name = screenWords[screen];
+  return name.charAt(0).toUpperCase() + name.slice(1);
+}

@@ -1,0 +1,194 @@
+import type { Command } from './change.js';
+import { moveCursor, openChart, takeValue, turnFigure } from './hands/chart-commands.js';
+import { back, contrastGiven, quit, redo, show, undo } from './hands/common-commands.js';
+import { clearRow, enterRow, moveInForm, turnRow, typeRow } from './hands/form-commands.js';
+import {
+  anotherSession,
+  lockPlace,
+  markDone,
+  moveInOrder,
+  openSeries,
+  reorder,
+  skip,
+  startOrNext,
+  stopEarly,
+  turnSeries,
+} from './hands/order-commands.js';
+import { practice } from './hands/patient-commands.js';
+import { saveAsPreset, savePage, saveRecord, turnRecordPane } from './hands/record-commands.js';
+import { backToPreset, enterField, jump, moveInSeries, openLock, step, turnPane, typeField, why } from './hands/series-commands.js';
+import { choose, clearOrLeave, moveInList, narrow, widen } from './hands/start-commands.js';
+import { scrollText } from './hands/text-commands.js';
+import type { KeyPress } from './message.js';
+import type { ScreenName, State } from './state.js';
+
+/** One line of the key map: keys, what they are called, what they do. Help and the bottom line are made from it. */
+export interface KeyRow {
+  /** Names of keys; characters stand for themselves. `any-text`: every character that no other line has. */
+  readonly keys: readonly string[];
+  /** How the keys are written on screen. */
+  readonly shown: string;
+  /** One or two words for the bottom line; blank keeps the line out of it. */
+  readonly brief: string;
+  readonly help: string;
+  readonly command: Command;
+  /** Where the keys work only here and now. */
+  readonly when?: (state: State) => boolean;
+}
+
+const digits = ['0', '1', '2', '3', '4', '5', '6', '7', '8', '9', '.'];
+
+const row = (
+  keys: string | readonly string[],
+  shown: string,
+  brief: string,
+  help: string,
+  command: Command,
+  when?: KeyRow['when'],
+): KeyRow => ({
+  keys: typeof keys === 'string' ? [keys] : keys,
+  shown,
+  brief,
+  help,
+  command,
+  ...(when === undefined ? {} : { when }),
+});
+
+/** Keys of every screen but the first. */
+const everywhere: readonly KeyRow[] = [
+  row(['h', '?'], 'h', 'help', 'Help for this screen.', show('help')),
+  row('u', 'u', 'undo', 'Takes back the last step, of whatever screen.', undo, ({ past }) => past.length > 0),
+  row('r', 'r', 'redo', 'Does again what was taken back.', redo, ({ future }) => future.length > 0),
+  row('p', 'p', 'patient', 'This patient: breath-hold, time, RF caps, body.', show('patient'), ({ place }) => place.screen !== 'patient'),
+  row('o', 'o', 'order', 'The running order.', show('order'), ({ place }) => place.screen !== 'order'),
+  row('e', 'e', 'end', 'The end: the record of the session.', show('record'), ({ place }) => place.screen !== 'record'),
+  row('g', 'g', '', 'Contrast is given: starts its clock, from every screen.', contrastGiven),
+  row('q', 'q', 'quit', 'Leaves; the session is kept and offered at the next start.', quit),
+  row('escape', 'Esc', 'back', 'One screen back. Nothing is lost.', back, ({ place }) => place.back.length > 0),
+];
+
+const upAndDown = (by: (rows: number) => Command, what: string): readonly KeyRow[] => [
+  row('up', 'up down', '', `Moves through ${what}.`, by(-1)),
+  row('down', '', '', '', by(1)),
+  row('home', 'Home End', '', `First and last of ${what}.`, by(-9999)),
+  row('end', '', '', '', by(9999)),
+];
+
+const inMain = ({ place }: State) => place.pane === 'main';
+
+const series: readonly KeyRow[] = [
+  row(['-', 'left'], '-+', 'step', 'One step down or up; left and right do the same.', step(-1, false), inMain),
+  row(['+', '=', 'right'], '', '', '', step(1, false), inMain),
+  row('page-up', 'PgUp PgDn', '', 'A big step up or down.', step(1, true), inMain),
+  row('page-down', '', '', '', step(-1, true), inMain),
+  row(digits, '0-9', 'type', 'Begins typing a value: 38 cm, 6/8, 1.2 mm * 256.', typeField, inMain),
+  row(['/', '*'], '/ *', '', 'Begins typing from the present value: /2, *1.5. After Enter also +10%.', typeField, inMain),
+  row('enter', 'Enter', '', 'Begins typing; turns a choice to the next word.', enterField, inMain),
+  ...upAndDown(moveInSeries, 'the pane'),
+  row('tab', 'Tab', '', 'Parameters, consequences, cautions.', turnPane(1)),
+  row('shift-tab', '', '', '', turnPane(-1)),
+  row('w', 'w', 'why', 'Explains what the hand is on: sentence, numbers, formula, source, what it ignores.', why),
+  row('c', 'c', 'chart', 'Range chart of this parameter.', openChart),
+  row('j', 'j', 'jump', 'Jumps to the next value at which the time changes.', jump, inMain),
+  row('t', 't', 'scanner', 'The changed values, to type on the scanner.', show('type-these')),
+  row('b', 'b', '', 'This parameter back to the preset.', backToPreset, inMain),
+  row('d', 'd', '', 'What the scanner displays: time, B1+rms, SAR.', show('readings')),
+  row('l', 'l', '', 'Opens a parameter that the preset locks, or locks it again.', openLock, inMain),
+  row('n', 'n', 'next', 'The next series of the running order.', turnSeries(1)),
+];
+
+const form: readonly KeyRow[] = [
+  ...upAndDown(moveInForm, 'the lines'),
+  row(['-', 'left'], 'left right', 'change', 'One step less or more, the word before or after.', turnRow(-1)),
+  row(['+', '=', 'right'], '', '', '', turnRow(1)),
+  row(digits, '0-9', 'type', 'Begins typing a number.', typeRow),
+  row('enter', 'Enter', 'type', 'Begins typing; ticks and unticks.', enterRow),
+  row(['backspace', 'delete'], 'Del', 'clear', 'Makes the line blank.', clearRow),
+];
+
+/** What every key does, screen by screen; the screen's own lines come before those of every screen. */
+export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
+  start: [
+    ...upAndDown(moveInList, 'the list'),
+    row('enter', 'Enter', 'open', 'Opens the preset, or goes on with the session.', choose),
+    row('any-text', 'a-z 0-9', 'narrow', 'Narrows the list: 3 liver.', narrow),
+    row('backspace', 'Backspace', 'widen', 'Takes the last letter back.', widen, ({ narrowing }) => narrowing !== ''),
+    row('escape', 'Esc', 'leave', 'Forgets what was typed; with nothing typed, leaves.', clearOrLeave),
+    row('?', '?', 'help', 'Help for this screen.', show('help')),
+  ],
+  patient: [
+    ...form,
+    row('s', 's', 'practice', 'Starts a practice hold, and stops it: the seconds are filled in.', practice),
+    ...everywhere,
+  ],
+  order: [
+    ...upAndDown(moveInOrder, 'the series'),
+    row('enter', 'Enter', 'open', 'Opens the series.', openSeries),
+    row('s', 's', 'start', 'Starts the series, then each breath-hold; on a done series, once more.', startOrNext),
+    row('d', 'd', 'done', 'The series is done.', markDone),
+    row(
+      'c',
+      'c',
+      '',
+      'Cut short: the running series is stopped early.',
+      stopEarly,
+      (state) => state.session?.series.some(({ run }) => run !== null) === true,
+    ),
+    row('k', 'k', 'skip', 'Skips a series, or takes it back in.', skip),
+    row(['-', 'left'], '- +', 'move', 'Moves the series earlier or later.', reorder(-1)),
+    row(['+', '=', 'right'], '', '', '', reorder(1)),
+    row('l', 'l', '', 'The series keeps its place, or may move.', lockPlace),
+    row('n', 'n', '', 'New session; after the record is saved.', anotherSession),
+    ...everywhere,
+  ],
+  series: [...series, ...everywhere],
+  why: [...upAndDown(scrollText, 'the text'), row('w', 'w', '', 'Back to the series.', back), ...everywhere],
+  'type-these': [...upAndDown(scrollText, 'the text'), row('t', 't', '', 'Back to the series.', back), ...everywhere],
+  chart: [
+    row(['-', 'left'], 'left right', 'move', 'Moves the cursor along the parameter; minus and plus do the same.', moveCursor(-1)),
+    row(['+', '=', 'right'], '', '', '', moveCursor(1)),
+    row('page-down', 'PgUp PgDn', '', 'Five values on.', moveCursor(-5)),
+    row('page-up', '', '', '', moveCursor(5)),
+    row('home', 'Home End', '', 'First and last value.', moveCursor(-9999)),
+    row('end', '', '', '', moveCursor(9999)),
+    row('up', 'up down', '2nd figure', 'Another figure on the second curve.', turnFigure(1, -1)),
+    row('down', '', '', '', turnFigure(1, 1)),
+    row('tab', 'Tab', '1st figure', 'Another figure on the first curve.', turnFigure(0, 1)),
+    row('shift-tab', '', '', '', turnFigure(0, -1)),
+    row('enter', 'Enter', 'take', 'Takes the value under the cursor.', takeValue),
+    ...everywhere,
+  ],
+  readings: [...form, ...everywhere],
+  record: [
+    ...form,
+    row(' ', 'Space', '', 'Ticks and unticks.', enterRow),
+    row(['tab', 'shift-tab'], 'Tab', 'reasons', 'Between the record and its reasons.', turnRecordPane),
+    row('s', 's', 'save', 'Saves the record: one line at the end of the file.', saveRecord),
+    row('d', 'd', '', 'Saves the values as a draft preset.', saveAsPreset),
+    row('t', 't', '', 'Writes one page of plain text to print.', savePage),
+    ...everywhere,
+  ],
+  help: [...upAndDown(scrollText, 'the text'), ...everywhere],
+};
+
+/** Keys while something is typed, for the bottom line. */
+export const entryKeys: readonly Pick<KeyRow, 'shown' | 'brief'>[] = [
+  { shown: 'Enter', brief: 'take it' },
+  { shown: 'Esc', brief: 'leave it' },
+  { shown: 'Backspace', brief: 'last letter' },
+];
+
+/** The name under which the map knows a key. */
+export function keyName(key: KeyPress): string {
+  return key.name === 'text' ? (key.text ?? '') : key.name;
+}
+
+/** The line of the map for a key on the present screen, where it works now. */
+export function keyRowFor(state: State, key: KeyPress): KeyRow | undefined {
+  const name = keyName(key);
+  const rows = keyMap[state.place.screen];
+  const works = ({ when }: KeyRow) => when === undefined || when(state);
+  const exact = rows.find((candidate) => candidate.keys.includes(name) && works(candidate));
+  if (exact !== undefined) return exact;
+  return key.name === 'text' || key.name === 'paste' ? rows.find(({ keys }) => keys.includes('any-text')) : undefined;
+}

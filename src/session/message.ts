@@ -1,0 +1,63 @@
+import type { Problem } from '../calc/problem.js';
+import type { Rules } from '../study/must-keep.js';
+import type { SessionRecord } from '../study/record.js';
+import type { MustKeep, Study } from '../study/study.js';
+import type { Draft } from './draft.js';
+
+/** One key, as the terminal gives it: a name, and the text of what was typed or pasted. */
+export interface KeyPress {
+  readonly name: string;
+  readonly text?: string;
+}
+
+/** A preset that can be chosen. */
+export interface PresetChoice {
+  readonly study: Study;
+  readonly hash: string;
+  readonly origin: 'site' | 'own' | 'shipped' | 'file';
+}
+
+/** A session that was left unfinished, as the start screen offers it. */
+export interface DraftChoice {
+  readonly id: string;
+  readonly session: unknown;
+  readonly ageMs: number;
+}
+
+/** What an effect answers. */
+export type Answer =
+  | { readonly kind: 'done'; readonly words: string }
+  | { readonly kind: 'failed'; readonly problems: readonly Problem[] }
+  | { readonly kind: 'value'; readonly value: number }
+  | { readonly kind: 'rules'; readonly rules: Rules }
+  | { readonly kind: 'draft'; readonly session: unknown };
+
+/** Everything that can happen to the interface. */
+export type Message =
+  | { readonly kind: 'key'; readonly key: KeyPress; readonly atMs: number }
+  | { readonly kind: 'size'; readonly columns: number; readonly rows: number }
+  | { readonly kind: 'tick'; readonly atMs: number }
+  | { readonly kind: 'presets'; readonly presets: readonly PresetChoice[]; readonly notes: readonly string[] }
+  | { readonly kind: 'drafts'; readonly drafts: readonly DraftChoice[] }
+  /** Something outside that a person should know. */
+  | { readonly kind: 'note'; readonly words: string }
+  | { readonly kind: 'answer'; readonly ask: number; readonly answer: Answer };
+
+/** What the interface asks of the world outside. Asks carry a number; only the answer to the newest of its kind counts. */
+export type Effect =
+  | { readonly kind: 'save-record'; readonly ask: number; readonly record: Omit<SessionRecord, 'id' | 'day'>; readonly again: boolean }
+  | { readonly kind: 'save-draft'; readonly draft: Draft }
+  | { readonly kind: 'drop-draft' }
+  | { readonly kind: 'claim-draft'; readonly ask: number; readonly id: string }
+  | { readonly kind: 'read-expression'; readonly ask: number; readonly text: string; readonly own: OwnName }
+  | { readonly kind: 'read-rules'; readonly ask: number; readonly mustKeeps: readonly MustKeep[] }
+  | { readonly kind: 'save-preset'; readonly ask: number; readonly study: Study }
+  | { readonly kind: 'save-page'; readonly ask: number; readonly record: Omit<SessionRecord, 'id' | 'day'> }
+  | { readonly kind: 'quit' };
+
+/** The name, unit and present value that an expression may use. */
+export interface OwnName {
+  readonly name: string;
+  readonly unit: string;
+  readonly value: number | null;
+}

@@ -1,0 +1,86 @@
+import type { RecordedReading } from '../study/record.js';
+import { type FormRow, numberRow, textRow } from './form-row.js';
+import { sessionSeries } from './results.js';
+import { sayNumber } from './say-number.js';
+import { sayTime } from './say-time.js';
+import type { Session } from './session.js';
+import { eachSeries } from './set-field.js';
+import type { State } from './state.js';
+
+type When = 'before' | 'after';
+
+/** What the scanner displayed for one series: for the preset, and after the changes. */
+export function readingsForm(state: State, id: string): readonly FormRow[] {
+  const series = sessionSeries(state, id);
+  return [
+    { field: 'heading before', label: 'Displayed for the preset, before any change', shown: '', help: '', kind: 'heading' },
+    ...readingRows('before', id, series.before),
+    { field: 'heading after', label: 'Displayed after the changes', shown: '', help: '', kind: 'heading' },
+    ...readingRows('after', id, series.after),
+  ];
+}
+
+/** The lines of one reading. */
+export function readingRows(when: When, id: string, reading: RecordedReading | null): FormRow[] {
+  const keep = (session: Session, values: { readonly [K in keyof RecordedReading]: RecordedReading[K] | undefined | null }) =>
+    eachSeries(session, new Set([id]), (series) => ({ ...series, [when]: cleaned({ ...series[when], ...values }) }));
+  const scaled = when === 'before' ? 'Later figures scale from it: same coil, same patient.' : 'Shows how far the prediction was off.';
+  const number = (
+    key: 'timeS' | 'b1rmsUt' | 'sarWkg',
+    label: string,
+    unit: 's' | 'uT' | 'W/kg',
+    max: number,
+    say: (value: number) => string,
+  ): FormRow => {
+    const value = reading?.[key] ?? null;
+    return numberRow({
+      field: `${when} ${key}`,
+      label,
+      help: `As the scanner displays it. ${scaled}`,
+      value,
+      unit,
+      shown: value === null ? '-' : say(value),
+      min: unit === 's' ? 1 : 0.01,
+      max,
+      step: unit === 's' ? 1 : 0.1,
+      first: 1,
+      keep: (session, next) => keep(session, { [key]: next }),
+    });
+  };
+  return [
+    number('timeS', 'scan time', 's', 7200, sayTime),
+    number('b1rmsUt', 'B1+rms', 'uT', 20, (value) => `${sayNumber(value)} uT`),
+    number('sarWkg', 'SAR', 'W/kg', 20, (value) => `${sayNumber(value)} W/kg`),
+    textRow(
+      `${when} operatingMode`,
+      'operating mode',
+      reading?.operatingMode ?? null,
+      'Normal, first level: as displayed.',
+      (session, text) => keep(session, { operatingMode: text === '' ? null : text }),
+    ),
+    ...(when === 'after'
+      ? [
+          textRow(
+            'after changedByScanner',
+            'changed by the scanner',
+            reading?.changedByScanner ?? null,
+            'What the scanner changed by itself.',
+            (session, text) => keep(session, { changedByScanner: text === '' ? null : text }),
+          ),
+          textRow(
+            'after notModelled',
+            'used, not modelled',
+            reading?.notModelled?.join('; ') ?? null,
+            'What was used that the figures do not know of.',
+            (session, text) => keep(session, { notModelled: text === '' ? null : [text] }),
+          ),
+        ]
+      : []),
+  ];
+}
+
+/** A reading without what was taken out; null when nothing is left. */
+function cleaned(reading: Readonly<Record<string, unknown>>): RecordedReading | null {
+  const entries = Object.entries(reading).filter(([, value]) => value !== undefined && value !== null);
+  return entries.length === 0 ? null : (Object.fromEntries(entries) as RecordedReading);
+}

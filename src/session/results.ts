@@ -1,0 +1,95 @@
+import type { Baseline } from '../calc/baseline.js';
+import type { Body } from '../calc/body.js';
+import type { Readings } from '../calc/reading.js';
+import type { GivenParameters } from '../calc/series.js';
+import type { StudySeries } from '../study/study.js';
+import { presetBaseline, type SeriesResult, seriesResult } from './series-result.js';
+import type { SessionSeries } from './session.js';
+import type { State } from './state.js';
+
+/** How many results of one series are kept: the present one, its neighbours, a chart. */
+const mostKept = 160;
+
+interface Kept {
+  readonly baseline: Baseline;
+  /** Results by what they hang on, oldest first. */
+  readonly results: Map<string, SeriesResult>;
+}
+
+/** What was worked out for a series of a study, for as long as the study is open. */
+const kept = new WeakMap<StudySeries, Kept>();
+
+/** The series of the study behind a series of the session. */
+export function studySeries(state: State, id: string): StudySeries {
+  const found = state.opened?.study.series.find((series) => series.id === id);
+  if (found === undefined) throw new Error(`no series ${id} in the study`);
+  return found;
+}
+
+/** The series of the session by its id. */
+export function sessionSeries(state: State, id: string): SessionSeries {
+  const found = state.session?.series.find((series) => series.id === id);
+  if (found === undefined) throw new Error(`no series ${id} in the session`);
+  return found;
+}
+
+function keptOf(state: State, series: StudySeries): Kept {
+  let known = kept.get(series);
+  if (known === undefined) {
+    known = { baseline: presetBaseline(series, state.opened?.study.fieldT ?? series.parameters.repetitionTimeMs), results: new Map() };
+    kept.set(series, known);
+  }
+  return known;
+}
+
+/** The preset of a series, which everything is relative to. */
+export function baselineOfSeries(state: State, id: string): Baseline {
+  return keptOf(state, studySeries(state, id)).baseline;
+}
+
+/** What the scanner displayed for the preset, as the model takes it. */
+export function readingsOf(series: SessionSeries): Readings {
+  const { timeS, b1rmsUt, sarWkg } = series.before ?? {};
+  return {
+    ...(timeS === undefined ? {} : { timeS }),
+    ...(b1rmsUt === undefined ? {} : { b1rmsUt }),
+    ...(sarWkg === undefined ? {} : { sarWkg }),
+  };
+}
+
+/** This patient's extents. */
+export function bodyOf(state: State): Body {
+  return { frontBackMm: state.session?.limits.frontBackMm ?? null, leftRightMm: state.session?.limits.leftRightMm ?? null };
+}
+
+/**
+ * Everything there is to say about a series with some values set. Worked out once for the same values: a key press costs only what
+ * it changed.
+ */
+export function resultWith(state: State, id: string, set: GivenParameters): SeriesResult {
+  const series = studySeries(state, id);
+  const own = keptOf(state, series);
+  const readings = readingsOf(sessionSeries(state, id));
+  const body = bodyOf(state);
+  const key = JSON.stringify([set, readings, body, state.rules.size]);
+  const known = own.results.get(key);
+  if (known !== undefined) return known;
+  const scanner = state.opened?.scanner ?? own.baseline.model.scanner;
+  // The plain scanner of the preset's own field is the baseline's own: nothing is carried.
+  const same = scanner.name === own.baseline.model.scanner.name && scanner.fieldT === own.baseline.model.scanner.fieldT;
+  const circumstances = { scanner: same ? own.baseline.model.scanner : scanner, body, rules: state.rules };
+  const result = seriesResult(series, set, own.baseline, circumstances, { readings });
+  if (own.results.size >= mostKept) own.results.delete(own.results.keys().next().value as string);
+  own.results.set(key, result);
+  return result;
+}
+
+/** A series as it stands now. */
+export function resultNow(state: State, id: string): SeriesResult {
+  return resultWith(state, id, sessionSeries(state, id).set);
+}
+
+/** The preset of a series under the same circumstances. */
+export function resultOfPreset(state: State, id: string): SeriesResult {
+  return resultWith(state, id, {});
+}

@@ -1,0 +1,130 @@
+import type { FigureKey } from '../calc/figures.js';
+import type { Rules } from '../study/must-keep.js';
+import type { DraftChoice, PresetChoice } from './message.js';
+import type { Opened, Session } from './session.js';
+
+export const screenNames = ['start', 'patient', 'order', 'series', 'why', 'type-these', 'chart', 'readings', 'record', 'help'] as const;
+export type ScreenName = (typeof screenNames)[number];
+
+/** One step that can be undone: the session before it, and what was done. */
+export interface Step {
+  readonly session: Session;
+  readonly words: string;
+}
+
+/** Which way to measure along a chart, which figures, and where the hand is. */
+export interface ChartPlace {
+  readonly path: string;
+  readonly figures: readonly [FigureKey, FigureKey];
+  readonly position: number;
+}
+
+/** Where the hands and eyes are. */
+export interface Place {
+  readonly screen: ScreenName;
+  /** Screens that Escape goes back to, the nearest last. */
+  readonly back: readonly ScreenName[];
+  /** The series that is looked at. */
+  readonly seriesId: string;
+  /** Field under the hand, by screen: a parameter's path, a row's name. */
+  readonly fields: Readonly<Partial<Record<ScreenName, string>>>;
+  readonly chart: ChartPlace | null;
+  /** Which pane of the series or record screen keys go to. */
+  readonly pane: Pane;
+  /** What was picked among the consequences, and among the cautions. */
+  readonly figure: FigureKey | null;
+  readonly caution: number;
+  /** Line of the reasons that the hand is on. */
+  readonly reason: string | null;
+}
+
+export const panes = ['main', 'consequences', 'cautions'] as const;
+export type Pane = (typeof panes)[number];
+
+/** What is being typed. */
+export interface Entry {
+  /** Where it goes: the row of the screen it was begun on. */
+  readonly field: string;
+  readonly text: string;
+  /** An expression that is being read: its number; null while it is typed. */
+  readonly ask: number | null;
+  /** Everything typed goes in, also letters; false where a digit began it. */
+  readonly isText: boolean;
+}
+
+/** One line that says what just happened. */
+export interface Notice {
+  readonly words: string;
+  readonly level: 'note' | 'trouble';
+}
+
+export interface State {
+  readonly presets: readonly PresetChoice[];
+  readonly drafts: readonly DraftChoice[];
+  readonly size: { readonly columns: number; readonly rows: number };
+  readonly nowMs: number;
+  /** Defaults of whoever works here. */
+  readonly defaults: Defaults;
+  /** What narrows the list of presets. */
+  readonly narrowing: string;
+  readonly opened: Opened | null;
+  readonly session: Session | null;
+  readonly past: readonly Step[];
+  readonly future: readonly Step[];
+  readonly place: Place;
+  readonly entry: Entry | null;
+  readonly notice: Notice | null;
+  readonly practiceSinceMs: number | null;
+  /** Rules of must-keeps that are read already. */
+  readonly rules: Rules;
+  /** Asks so far; the newest of each kind that is still open. */
+  readonly asks: number;
+  readonly open: Readonly<Partial<Record<'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft', number>>>;
+  /** A saving of this record failed: the next try looks whether it stands there after all. */
+  readonly recordFailed: boolean;
+  /** The session whose record is being saved: what is changed meanwhile is not in it. */
+  readonly saving: Session | null;
+}
+
+export interface Defaults {
+  readonly role: string;
+  readonly scannerName: string;
+  readonly coilName: string;
+}
+
+export const startPlace: Place = {
+  screen: 'start',
+  back: [],
+  seriesId: '',
+  fields: {},
+  chart: null,
+  pane: 'main',
+  figure: null,
+  caution: 0,
+  reason: null,
+};
+
+/** The interface before anything is known. */
+export function initialState(defaults: Defaults, size: State['size']): State {
+  return {
+    presets: [],
+    drafts: [],
+    size,
+    nowMs: 0,
+    defaults,
+    narrowing: '',
+    opened: null,
+    session: null,
+    past: [],
+    future: [],
+    place: startPlace,
+    entry: null,
+    notice: null,
+    practiceSinceMs: null,
+    rules: new Map(),
+    asks: 0,
+    open: {},
+    recordFailed: false,
+    saving: null,
+  };
+}

@@ -1,0 +1,117 @@
+import { type Change, only, say } from './change.js';
+import { type Draft, draftLayout, draftSteps } from './draft.js';
+import { takeExpression, typeKey } from './hands/entry-commands.js';
+import { openDraft } from './hands/start-commands.js';
+import { keyRowFor } from './key-map.js';
+import type { Answer, Effect, Message } from './message.js';
+import type { State } from './state.js';
+
+/**
+ * What a message makes of the interface, and what it asks of the world outside. Pure and synchronous; every message is taken in
+ * every state.
+ *
+ * @example update(state, { kind: 'key', key: { name: 'text', text: '+' }, atMs }) //=> [state, effects]
+ */
+export function update(state: State, message: Message): Change {
+  const [next, effects] = carryOut(state, message);
+  const draft = draftToSave(state, next);
+  return draft === null ? [next, effects] : [next, [...effects, { kind: 'save-draft', draft } satisfies Effect]];
+}
+
+function carryOut(state: State, message: Message): Change {
+  switch (message.kind) {
+    case 'key': {
+      const now = { ...state, nowMs: Math.max(state.nowMs, message.atMs) };
+      if (state.entry !== null) return typeKey(now, state.entry, message.key);
+      const row = keyRowFor(now, message.key);
+      return row === undefined ? only(now) : row.command(now, message.key);
+    }
+    case 'size':
+      return only({ ...state, size: { columns: message.columns, rows: message.rows } });
+    case 'tick':
+      return only({ ...state, nowMs: Math.max(state.nowMs, message.atMs) });
+    case 'presets': {
+      const next = { ...state, presets: message.presets, notice: null };
+      const first = message.notes[0];
+      return only(
+        first === undefined
+          ? next
+          : say(next, message.notes.length > 1 ? `${first} (and ${message.notes.length - 1} more)` : first, 'trouble'),
+      );
+    }
+    case 'drafts':
+      return only({ ...state, drafts: message.drafts });
+    case 'note':
+      return only(say(state, message.words, 'trouble'));
+    case 'answer':
+      return takeAnswer(state, message.ask, message.answer);
+  }
+}
+
+/** An answer counts when its question is the newest of its kind. */
+function takeAnswer(state: State, ask: number, answer: Answer): Change {
+  const kind = (Object.keys(state.open) as (keyof State['open'])[]).find((name) => state.open[name] === ask);
+  if (kind === undefined) return only(state);
+  const { [kind]: _answered, ...open } = state.open;
+  const next = { ...state, open };
+  const failed = answer.kind === 'failed' ? answer.problems.map(({ message, hint }) => `${message} ${hint}`).join(' ') : null;
+  switch (kind) {
+    case 'record':
+      if (answer.kind !== 'done') return only(say({ ...next, recordFailed: true }, failed ?? 'The record was not saved', 'trouble'));
+      return recordSaved(next, answer.words);
+    case 'rules':
+      return only(
+        answer.kind === 'rules'
+          ? { ...next, rules: answer.rules }
+          : say(next, failed ?? 'The rules could not be read: they are not checked', 'trouble'),
+      );
+    case 'draft':
+      return answer.kind === 'draft'
+        ? openDraft(next, answer.session)
+        : only(say(next, failed ?? 'The session could not be opened', 'trouble'));
+    case 'expression': {
+      const { entry } = state;
+      if (entry === null || entry.ask !== ask) return only(next);
+      if (answer.kind === 'value') return only(takeExpression(next, entry, answer.value));
+      return only(say({ ...next, entry: { ...entry, ask: null } }, failed ?? 'The expression could not be read', 'trouble'));
+    }
+    case 'preset':
+    case 'page':
+      return only(answer.kind === 'done' ? say(next, answer.words) : say(next, failed ?? 'Not saved', 'trouble'));
+  }
+}
+
+/** The record stands in the file; only what was changed meanwhile still makes a draft. */
+function recordSaved(state: State, words: string): Change {
+  const isWhole = state.session !== null && state.session === state.saving;
+  const next = say({ ...state, recordFailed: false, saving: null }, isWhole ? words : `${words}; what was changed meanwhile is not in it`);
+  return isWhole
+    ? [{ ...next, session: { ...state.session, saved: true } as NonNullable<State['session']> }, [{ kind: 'drop-draft' }]]
+    : only(next);
+}
+
+/** The draft of a state whose session changed; null where there is nothing new to save. */
+function draftToSave(before: State, after: State): Draft | null {
+  const { session, opened, past, place, practiceSinceMs } = after;
+  if (session === null || opened === null || session.saved) return null;
+  const changed =
+    session !== before.session ||
+    practiceSinceMs !== before.practiceSinceMs ||
+    place.screen !== before.place.screen ||
+    place.seriesId !== before.place.seriesId;
+  // Nothing was done yet: nothing is worth offering.
+  if (!changed || (past.length === 0 && practiceSinceMs === null)) return null;
+  return { layout: draftLayout, opened, session, past: past.slice(-draftSteps), place, practiceSinceMs };
+}
+
+/** The draft of the present state, for leaving in a hurry. */
+export function draftNow(state: State): Draft | null {
+  return draftToSave({ ...state, session: null }, state);
+}
+
+/** How often the screen must be told the time: while a hold or a clock runs; null when nothing runs. */
+export function tickEveryMs(state: State): number | null {
+  if (state.practiceSinceMs !== null) return 100;
+  if (state.session?.series.some(({ run }) => run?.sinceMs != null) === true) return 500;
+  return state.session?.contrastAtMs != null || state.session?.clockFromMs != null ? 1000 : null;
+}

@@ -3,6 +3,8 @@ import { accessSync, constants, existsSync, mkdtempSync, readdirSync, readFileSy
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { keyBytes } from './harness/key-bytes.js';
+import { start } from './harness/start.js';
 
 const bundle = resolve('dist/holdfast.js');
 let folder: string;
@@ -27,10 +29,15 @@ const startsOf = {
   parser: 'Parenthesis ) expected',
 } as const;
 
-/** How often the module that holds a text was started: V8's own count of its outermost function, from a coverage report. */
+/** How often the module was started by a command. */
 function starts(module: keyof typeof startsOf, args: readonly string[]): number {
   const reports = mkdtempSync(join(folder, 'coverage-'));
   holdfast(args, { NODE_V8_COVERAGE: reports });
+  return startsIn(reports, module);
+}
+
+/** How often the module that holds a text was started: V8's own count of its outermost function, from a coverage report. */
+function startsIn(reports: string, module: keyof typeof startsOf): number {
   const scripts = readdirSync(reports).flatMap(
     (name) => (JSON.parse(readFileSync(join(reports, name), 'utf8')) as { result: ScriptCoverage[] }).result,
   );
@@ -157,13 +164,26 @@ describe('what is loaded', () => {
     },
   );
 
-  describe.runIf(existsSync('src/screens/open-interface.tsx'))('of the interface', () => {
-    it.each(commands.map((args) => [args.join(' ') || 'the demo session', args] as const))(
-      '%s starts neither ink nor react',
-      (_name, args) => {
-        expect(starts('react', args)).toBe(0);
-        expect(starts('ink', args)).toBe(0);
-      },
+  it.each(commands.map((args) => [args.join(' ') || 'the demo session', args] as const))(
+    '%s starts neither ink nor react',
+    (_name, args) => {
+      expect(starts('react', args)).toBe(0);
+      expect(starts('ink', args)).toBe(0);
+    },
+  );
+
+  it('the interface starts both, and the parser not yet: the counts can see it', async () => {
+    const reports = mkdtempSync(join(folder, 'coverage-'));
+    const program = start(process.execPath, [bundle], { cwd: folder, env: { HOME: folder, NODE_V8_COVERAGE: reports } });
+    // A word may stand there before anything that draws is loaded: wait for a whole screen.
+    await program.waitFor(
+      ({ text }) =>
+        text()
+          .split('\n')
+          .filter((line) => line.trim() !== '').length > 4,
     );
+    program.press(keyBytes.ctrlC);
+    await program.exited;
+    expect([startsIn(reports, 'react'), startsIn(reports, 'ink'), startsIn(reports, 'parser')]).toEqual([1, 1, 0]);
   });
 });

@@ -74,5 +74,6 @@ export function slotFactor(key: ClassKey, p: Parameters, slot: number): number {
     if (fits(middle)) low = middle;
     else high = middle;
   }
-  return low;
+  // No slot is short enough where TI alone fills TR: nothing can be kept for edits then.
+  return low === 0 ? 1 : low;
 }

@@ -105,6 +105,10 @@ describe('slotFactor', () => {
     expect(capacity('spin-echo/2D', parametersOf('spin-echo/2D', { repetitionTimeMs: 600 }), 25 * factor)).toBe(25);
   });
 
+  it('is 1 where no slot would do: an inversion time beyond TR leaves no room however short a slice is', () => {
+    expect(factorOf({ repetitionTimeMs: 1000, inversionTimeMs: 1200, sliceCount: 3 }, 25)).toBe(1);
+  });
+
   it('is 1 where slices do not share TR', () => {
     expect(
       slotFactor('spoiled-gradient-echo/3D', parametersOf('spoiled-gradient-echo/3D', { sliceCount: 100, repetitionTimeMs: 5 }), 10),

@@ -166,6 +166,17 @@ const series = closed(
   { allOf: classConditions() },
 );
 
+const released = closed(
+  {
+    role: named(presetLimits.title, 'role of whoever released this revision; no name'),
+    secondRole: named(presetLimits.title, 'a second role that agreed'),
+    day: { type: 'string', pattern: '^[0-9]{4}-[0-9]{2}-[0-9]{2}$', description: 'YYYY-MM-DD' },
+    reason: named(presetLimits.source, 'why it was released'),
+  },
+  ['role', 'day', 'reason'],
+  { description: 'who released this revision, when and why; written by the program' },
+);
+
 /** The JSON Schema (draft 7) of a preset file, from the tables of parameters, figures, classes and tissues. */
 export const presetSchema: Schema = {
   $schema: 'http://json-schema.org/draft-07/schema#',
@@ -182,6 +193,7 @@ export const presetSchema: Schema = {
       fieldT: { type: 'number', minimum: presetLimits.fieldT.min, maximum: presetLimits.fieldT.max, description: 'field strength, T' },
       status: { enum: studyStates, default: 'draft' },
       revision: { type: 'integer', minimum: 1, maximum: 1_000_000, default: 1 },
+      released,
       notes: text(presetLimits.notes, 'for the people who use this preset'),
       minimumSet: {
         type: 'array',

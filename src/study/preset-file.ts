@@ -1,7 +1,7 @@
 import type { Acquisition, Family } from '../calc/classes.js';
 import type { ParameterKey } from '../calc/parameters.js';
 import type { GivenParameters, TissueOverride } from '../calc/series.js';
-import type { MustKeep, Range, Study } from './study.js';
+import type { MustKeep, Range, Release, Study } from './study.js';
 
 /** One series as the file gives it, its structure checked. */
 export interface SeriesFile {
@@ -35,6 +35,7 @@ export interface PresetFile {
   readonly fieldT: number;
   readonly status?: Study['status'];
   readonly revision?: number;
+  readonly released?: Release;
   readonly notes?: string;
   readonly minimumSet?: readonly (string | readonly string[])[];
   readonly series: readonly SeriesFile[];

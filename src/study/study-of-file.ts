@@ -3,7 +3,7 @@ import type { ParameterKey } from '../calc/parameters.js';
 import { fillDefaults, type GivenParameters } from '../calc/series.js';
 import { cleanText } from './clean-text.js';
 import type { PresetFile, SeriesFile } from './preset-file.js';
-import type { MustKeep, Study, StudySeries } from './study.js';
+import type { MustKeep, Release, Study, StudySeries } from './study.js';
 
 /** Copies without the bare objects of the JSON reader, so that equal studies are equal in every comparison. */
 function plainCopy<T>(value: T): T {
@@ -40,6 +40,11 @@ function seriesOf(file: SeriesFile, index: number): StudySeries {
   };
 }
 
+function cleanRelease({ role, secondRole, day, reason }: Release): Release {
+  const second = secondRole === undefined ? {} : { secondRole: cleanText(secondRole) };
+  return { role: cleanText(role), ...second, day, reason: cleanText(reason) };
+}
+
 /** Builds the study from a file whose structure was checked: defaults filled in, texts cleaned. */
 export function studyOfFile(file: PresetFile): Study {
   return {
@@ -51,6 +56,7 @@ export function studyOfFile(file: PresetFile): Study {
     fieldT: file.fieldT,
     status: file.status ?? 'draft',
     revision: file.revision ?? 1,
+    ...(file.released === undefined ? {} : { released: cleanRelease(file.released) }),
     notes: cleanText(file.notes ?? ''),
     minimumSet: plainCopy(file.minimumSet ?? []),
     series: file.series.map(seriesOf),

@@ -38,6 +38,16 @@ export interface StudySeries extends Series {
   readonly opened: readonly ParameterKey[];
 }
 
+/** Who made a revision the reviewed one, when and why. Roles, never names. */
+export interface Release {
+  readonly role: string;
+  /** A second role that agreed, where the site asks for one. */
+  readonly secondRole?: string;
+  /** YYYY-MM-DD. */
+  readonly day: string;
+  readonly reason: string;
+}
+
 export const studyStates = ['draft', 'starter', 'reviewed'] as const;
 
 /** One study: what a preset file says, defaults filled in. */
@@ -50,6 +60,8 @@ export interface Study {
   readonly fieldT: number;
   readonly status: (typeof studyStates)[number];
   readonly revision: number;
+  /** Absent where nobody released it through the program. */
+  readonly released?: Release;
   readonly notes: string;
   /** Ids that must be acquired; of a list any one serves. */
   readonly minimumSet: readonly (string | readonly string[])[];

@@ -1,7 +1,7 @@
 import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
 import { classOf, fillDefaults, type GivenParameters, type Parameters } from '../calc/series.js';
 import { requiredParameters } from './required-keys.js';
-import type { MustKeep, Study, StudySeries } from './study.js';
+import type { MustKeep, Release, Study, StudySeries } from './study.js';
 
 /** Equal values of parameters: numbers, words, flags, or small plain objects. */
 function equalValues(a: unknown, b: unknown): boolean {
@@ -39,6 +39,10 @@ const mustKeepOrder = ['figure', 'parameter', 'rule', 'atMost', 'atLeast', 'betw
 
 function mustKeepInOrder(mustKeep: MustKeep): object {
   return Object.fromEntries(mustKeepOrder.flatMap((key) => (mustKeep[key] === undefined ? [] : [[key, mustKeep[key]]])));
+}
+
+function releaseInOrder({ role, secondRole, day, reason }: Release): object {
+  return { role, ...(secondRole === undefined ? {} : { secondRole }), day, reason };
 }
 
 /** Drops empty lists and objects. */
@@ -111,6 +115,7 @@ export function writePreset(study: Study): string {
     fieldT: study.fieldT,
     status: study.status,
     revision: study.revision,
+    ...(study.released === undefined ? {} : { released: releaseInOrder(study.released) }),
     notes: study.notes,
     minimumSet: study.minimumSet,
     series: study.series.map(seriesFile),

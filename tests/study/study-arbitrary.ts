@@ -5,7 +5,7 @@ import { type ParameterKey, parameterKeys, parameterRow } from '../../src/calc/p
 import { fillDefaults, type GivenParameters, pacingKinds } from '../../src/calc/series.js';
 import { tissueNames } from '../../src/calc/tissues.js';
 import { requiredParameters } from '../../src/study/required-keys.js';
-import type { MustKeep, Study, StudySeries } from '../../src/study/study.js';
+import type { MustKeep, Release, Study, StudySeries } from '../../src/study/study.js';
 
 const word = (longest: number) =>
   fc.stringMatching(
@@ -92,6 +92,11 @@ function seriesFor(key: ClassKey): fc.Arbitrary<Omit<StudySeries, 'id' | 'paired
   });
 }
 
+const release: fc.Arbitrary<Release> = fc.oneof(
+  fc.record({ role: word(20), day: fc.constant('2026-03-02'), reason: word(60) }),
+  fc.record({ role: word(20), secondRole: word(20), day: fc.constant('2026-03-02'), reason: word(60) }),
+);
+
 /** Random studies over every class, parameter and kind of must-keep, as `readPreset` would give them. */
 export const arbitraryStudy: fc.Arbitrary<Study> = fc
   .tuple(
@@ -104,13 +109,15 @@ export const arbitraryStudy: fc.Arbitrary<Study> = fc
       revision: fc.integer({ min: 1, max: 99 }),
       notes: fc.oneof(fc.constant(''), word(80)),
     }),
+    fc.option(release, { nil: undefined }),
     fc.uniqueArray(id, { minLength: 1, maxLength: 3 }),
     fc.array(fc.constantFrom(...classKeys).chain(seriesFor), { minLength: 3, maxLength: 3 }),
   )
-  .map(([head, ids, all]) => ({
+  .map(([head, released, ids, all]) => ({
     format: 'holdfast preset' as const,
     version: 1 as const,
     ...head,
+    ...(released === undefined ? {} : { released }),
     minimumSet: ids.length > 1 ? [ids[0] as string, ids] : [],
     series: ids.map(
       (seriesId, i): StudySeries => ({

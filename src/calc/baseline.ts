@@ -41,7 +41,7 @@ export function baselineOf(series: Series, scanner: Scanner): Baseline {
     comparisonSignal,
     contrastRatio: contrastRatioOf(targetSignal, comparisonSignal),
     nullMs: seriesNullMs(model),
-    breathHeld: isBreathHeld(series.parameters),
-    highestB: highestB(series.parameters),
+    breathHeld: isBreathHeld(model.series.parameters),
+    highestB: highestB(model.series.parameters),
   };
 }

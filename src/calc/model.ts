@@ -6,11 +6,12 @@ import { type MinimumTiming, minimumTiming } from './minimum-timing.js';
 import { highestB, noiseAveragingLines, signalFreeSnr } from './noise.js';
 import { effectiveRepetitionTimeMs, isCine } from './pacing.js';
 import { parallelNoiseFactor } from './parallel-noise.js';
+import type { ParameterKey } from './parameters.js';
 import { type SlotPulses, slotPulses } from './pulses.js';
 import { seriesB1PlusRmsUt } from './rf.js';
 import { guardedCeil } from './rounding.js';
 import type { Scanner } from './scanner.js';
-import { classOf, type Series } from './series.js';
+import { classOf, ignoredIn, type Series, withoutIgnored } from './series.js';
 import { classSignal, inversionPreparedTimingOf, type SignalSetting } from './signal/class-signal.js';
 import { inversionPreparedDelaysMs } from './signal/inversion-prepared.js';
 import { capacity, slotFactor, slotMs } from './slots.js';
@@ -20,7 +21,10 @@ import { diffusionFactor, isFat, type Tissue, tissueOf } from './tissues.js';
 /** Everything the model knows of one series on one scanner, before it is compared with a baseline. */
 export interface SeriesModel {
   readonly key: ClassKey;
+  /** The series, without what its class cannot use. */
   readonly series: Series;
+  /** What was given and the class cannot use. */
+  readonly ignored: readonly ParameterKey[];
   readonly scanner: Scanner;
   readonly lines: Lines;
   readonly geometry: Geometry;
@@ -119,8 +123,10 @@ function impossibleBecause(key: ClassKey, setting: SignalSetting, slices: number
 }
 
 /** Computes a series on a scanner. `knownSlotFactor` is the baseline's; without one the series' own split is taken as a fact. */
-export function modelOf(series: Series, scanner: Scanner, knownSlotFactor: number | null): SeriesModel {
-  const key = classOf(series);
+export function modelOf(given: Series, scanner: Scanner, knownSlotFactor: number | null): SeriesModel {
+  const key = classOf(given);
+  const ignored = ignoredIn(key, given.parameters);
+  const series = withoutIgnored(given, key, ignored);
   const p = series.parameters;
   const lines = acquiredLines(key, p);
   const geometry = geometryOf(series.acquisition, p);
@@ -140,6 +146,7 @@ export function modelOf(series: Series, scanner: Scanner, knownSlotFactor: numbe
   return {
     key,
     series,
+    ignored,
     scanner,
     lines,
     geometry,

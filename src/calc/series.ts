@@ -130,11 +130,25 @@ const ignoredByClass = Object.fromEntries(
   ]),
 ) as unknown as Readonly<Record<ClassKey, readonly { readonly name: ParameterKey; readonly neutral: unknown }[]>>;
 
-/** Calls back for each parameter that is set to something this class cannot use. */
-export function forEachIgnored(key: ClassKey, p: Parameters, report: (name: ParameterKey) => void): void {
-  const ignored = ignoredByClass[key];
-  for (let i = 0; i < ignored.length; i += 1) {
-    const entry = ignored[i] as (typeof ignored)[number];
-    if (p[entry.name] !== entry.neutral) report(entry.name);
+const noneIgnored: readonly ParameterKey[] = [];
+
+/** The parameters that are set to something this class cannot use. */
+export function ignoredIn(key: ClassKey, p: Parameters): readonly ParameterKey[] {
+  const candidates = ignoredByClass[key];
+  let found: ParameterKey[] | null = null;
+  for (let i = 0; i < candidates.length; i += 1) {
+    const entry = candidates[i] as (typeof candidates)[number];
+    if (p[entry.name] !== entry.neutral) {
+      found ??= [];
+      found.push(entry.name);
+    }
   }
+  return found ?? noneIgnored;
+}
+
+/** The same series with what its class cannot use set back to its neutral value, so that it has no effect on anything. */
+export function withoutIgnored(series: Series, key: ClassKey, ignored: readonly ParameterKey[]): Series {
+  if (ignored.length === 0) return series;
+  const neutral = ignoredByClass[key].filter((entry) => ignored.includes(entry.name)).map((entry) => [entry.name, entry.neutral]);
+  return { ...series, parameters: { ...series.parameters, ...Object.fromEntries(neutral) } };
 }

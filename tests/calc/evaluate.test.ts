@@ -157,6 +157,50 @@ describe('impossible timing: an error, and what it makes impossible is null', ()
   });
 });
 
+describe('a parameter that the class has not got', () => {
+  const strays: GivenParameters = {
+    inversionTimeMs: 150,
+    secondEchoTimeMs: 80,
+    linesPerBeat: 8,
+    simultaneousSlices: 2,
+    rounds: 2,
+    sliceGapMm: 1,
+    slabs: 2,
+    sliceOversamplingPercent: 50,
+    parallelFactorSlice: 2,
+    partialFourierSlice: 0.75,
+    ellipticalSampling: true,
+    fatSuppressionEveryLines: 20,
+    phaseOversamplingPercent: 50,
+    partialFourierPhase: 0.75,
+    phaseFieldOfViewPercent: 80,
+    referenceLines: 24,
+    diffusion: { bValuesSPerMm2: [0, 800], directions: 3, averages: [1, 2] },
+  };
+
+  it.each(classKeys)('%s: has no effect on any figure, and says so', (key) => {
+    const gated: GivenParameters = {
+      ...playable[key],
+      pacing: { kind: 'cardiac-gate', periodMs: 5000 },
+      fatSuppression: 'spectral',
+      parallelFactorPhase: 2,
+    };
+    const without = edit(seriesOf(key, gated));
+    for (const [name, value] of Object.entries(strays)) {
+      if ((classTable[key].parameters as readonly string[]).includes(name)) continue;
+      const given = edit(seriesOf(key, { ...gated, [name]: value }));
+      expect(given.figures, name).toEqual(without.figures);
+      expect(
+        given.cautions.filter(({ text }) => text.startsWith(`${name} has no effect`)),
+        name,
+      ).toHaveLength(1);
+      const edited = edit(seriesOf(key, { ...gated, [name]: value }), { averages: 2 });
+      expect(edited.figures, name).toEqual(edit(seriesOf(key, gated), { averages: 2 }).figures);
+      expect(edited.codes, name).toContain('not-modelled');
+    }
+  });
+});
+
 describe('lines and shots as figures', () => {
   it('shows lines, partitions, shots and what fits', () => {
     const held = edit(

@@ -4,7 +4,6 @@ import type { Comparison } from '../compare.js';
 import type { SeriesModel } from '../model.js';
 import { type ParameterKey, parameterKeys } from '../parameters.js';
 import { below, same } from '../rounding.js';
-import { forEachIgnored } from '../series.js';
 import { inWords } from './number-words.js';
 
 /** Share by which a null may drift before it is said, and before it is lost (common practice, no source). */
@@ -88,7 +87,15 @@ export function driftCautions(
   ) {
     add('not-modelled', 'note', {}, () => 'how often the fat-suppression pulse is played is not stated: its time and RF are not counted');
   }
-  forEachIgnored(model.key, p, (name) => add('not-modelled', 'caution', {}, () => `${name} has no effect in this class`));
+  // What the preset gives in vain stays said while it is edited.
+  for (const name of ignoredOf(model, baseline)) add('not-modelled', 'caution', {}, () => `${name} has no effect in this class`);
+}
+
+/** What the class cannot use, of the series and of its preset, each once. */
+function ignoredOf(model: SeriesModel, baseline: Baseline): readonly ParameterKey[] {
+  const before = baseline.model.ignored;
+  if (before.length === 0) return model.ignored;
+  return model.ignored.length === 0 ? before : [...new Set([...model.ignored, ...before])];
 }
 
 /** What shows in the picture: everything but how often and when it is taken. */

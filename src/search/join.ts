@@ -1,0 +1,149 @@
+import type { Figures } from '../calc/figures.js';
+import type { Lines } from '../calc/lines.js';
+import type { Parameters } from '../calc/series.js';
+import { seriesTime } from '../calc/time.js';
+import { namedValues } from '../formulas/formula-names.js';
+import type { MustKeep } from '../study/study.js';
+import { addLosses, noiseLoss } from './balanced-loss.js';
+import { type BandLimit, withinBand } from './bands.js';
+import { noiseFigures } from './groups.js';
+import { comparedTimeS } from './judge.js';
+import { limitedValue, limitVerdict, verdictRank } from './limits.js';
+import type { LineBucket } from './line-buckets.js';
+import { isCrossed, isTimeCap } from './must-keep-test.js';
+import type { SearchSetting } from './setting.js';
+import type { SignalState } from './signal-states.js';
+
+/** Time of one count of lines under one timing. */
+export interface JoinedTime {
+  /** The time that ways are compared by, s. */
+  readonly timeS: number;
+  /** Verdict of the time limits: 0 fits, 1 too close, 2 over. */
+  readonly rank: 0 | 1 | 2;
+  /** Largest time over its limit, 0 without one. */
+  readonly excess: number;
+  /** False where a must-keep caps time below this. */
+  readonly kept: boolean;
+}
+
+/** SNR and contrast of a line state and a signal state together. */
+export interface JoinedNoise {
+  readonly snr: number | null;
+  readonly contrast: number | null;
+}
+
+const equalShare = 0.01;
+
+/** Puts line states and signal states together: the same numbers, by the same functions and in the same order as `evaluate`. */
+export class Join {
+  readonly #setting: SearchSetting;
+  readonly #timeCaps: readonly MustKeep[];
+  readonly #noiseBands: readonly BandLimit[];
+  /** |target - comparison| of the preset, null where it is too small to compare with. */
+  readonly #contrastBefore: number | null;
+  readonly #times = new Map<LineBucket, Map<string, Map<number, JoinedTime>>>();
+
+  constructor(setting: SearchSetting) {
+    this.#setting = setting;
+    const { mustKeep } = setting.problem.series;
+    this.#timeCaps = mustKeep.filter((one) => isTimeCap(one, setting.problem.rules));
+    this.#noiseBands = setting.bands.filter(({ figure }) => noiseFigures.includes(figure));
+    const { targetSignal, comparisonSignal } = setting.baseline;
+    const before = targetSignal === null || comparisonSignal === null ? 0 : Math.abs(targetSignal - comparisonSignal);
+    this.#contrastBefore =
+      before > 0 && before >= equalShare * Math.max(targetSignal as number, comparisonSignal as number) ? before : null;
+  }
+
+  /** Forgets times of buckets that are no longer needed. */
+  forget(): void {
+    this.#times.clear();
+  }
+
+  /** Time of a count of lines; it never falls when lines are added. */
+  time(state: SignalState, bucket: LineBucket, lineCount: number): JoinedTime {
+    const byTiming = this.#timesOf(state, bucket);
+    const known = byTiming.get(lineCount);
+    if (known !== undefined) return known;
+    const computed = this.#computeTime(state, bucket, lineCount);
+    byTiming.set(lineCount, computed);
+    return computed;
+  }
+
+  #timesOf(state: SignalState, bucket: LineBucket): Map<number, JoinedTime> {
+    let ofBucket = this.#times.get(bucket);
+    if (ofBucket === undefined) {
+      ofBucket = new Map();
+      this.#times.set(bucket, ofBucket);
+    }
+    let ofTiming = ofBucket.get(state.timeKey);
+    if (ofTiming === undefined) {
+      ofTiming = new Map();
+      ofBucket.set(state.timeKey, ofTiming);
+    }
+    return ofTiming;
+  }
+
+  #computeTime(state: SignalState, bucket: LineBucket, lineCount: number): JoinedTime {
+    const { problem, baseline, margins } = this.#setting;
+    const { averages, ellipticalSampling, matrixPhase, parallelFactorPhase } = bucket.parameters;
+    const p: Parameters = {
+      ...state.parameters,
+      averages,
+      ellipticalSampling,
+      matrixPhase,
+      parallelFactorPhase,
+      sliceCount: bucket.parameters.sliceCount,
+    };
+    const lines = { phase: lineCount, total: lineCount } as Lines;
+    const time = seriesTime(state.model.key, p, lines, state.model.rounds, problem.scanner);
+    const timeRatio = problem.readings.timeS === undefined ? 1 : problem.readings.timeS / baseline.model.time.scanTimeS;
+    const figures = {
+      scanTimeS: time.scanTimeS * timeRatio,
+      holdTimeS: time.holdTimeS === null ? null : time.holdTimeS * timeRatio,
+      b1PlusRmsUt: null,
+      sarTrendHigh: null,
+    };
+    let rank: 0 | 1 | 2 = 0;
+    let excess = 0;
+    for (const key of ['holdS', 'timeS'] as const) {
+      const limit = problem.limits[key];
+      if (limit === undefined) continue;
+      const value = limitedValue(key, figures, problem.readings);
+      const own = verdictRank[limitVerdict(key, value, limit, margins).word];
+      if (own > rank) rank = own;
+      excess = Math.max(excess, (value ?? Number.POSITIVE_INFINITY) / limit);
+    }
+    const valueNamed = namedValues(p, { ...figures, tableTimeS: time.tableTimeS } as unknown as Figures);
+    const kept = !this.#timeCaps.some((cap) => isCrossed(cap, valueNamed, problem.rules));
+    return { timeS: comparedTimeS(this.#setting, figures), rank, excess, kept };
+  }
+
+  /** SNR and contrast together. */
+  noise(state: SignalState, signalFreeSnr: number | null): JoinedNoise {
+    const { baseline } = this.#setting;
+    const before = baseline.model.signalFreeSnr;
+    if (signalFreeSnr === null || before === null) return { snr: null, contrast: null };
+    const ratio = signalFreeSnr / before;
+    const { target, comparison } = state;
+    const { targetSignal, comparisonSignal } = baseline;
+    const snr = target === null || targetSignal === null || targetSignal === 0 ? null : (ratio * target) / targetSignal;
+    const contrast =
+      this.#contrastBefore === null || target === null || comparison === null || targetSignal === null || comparisonSignal === null
+        ? null
+        : (ratio * Math.abs(target - comparison)) / this.#contrastBefore;
+    return {
+      snr: snr !== null && Number.isFinite(snr) ? snr : null,
+      contrast: contrast !== null && Number.isFinite(contrast) ? contrast : null,
+    };
+  }
+
+  /** True when SNR and contrast keep within their bands; more signal without noise never breaks one. */
+  audible({ snr, contrast }: JoinedNoise): boolean {
+    return this.#noiseBands.every((band) => withinBand(band, band.figure === 'relativeSnr' ? snr : contrast));
+  }
+
+  /** Balanced loss of a bucket, a signal state and their noise. */
+  loss(bucket: LineBucket, state: SignalState, { snr, contrast }: JoinedNoise): number {
+    return addLosses(bucket.geometryLoss, state.trainLoss, noiseLoss(snr, contrast));
+  }
+}

@@ -1,0 +1,171 @@
+import { wrapCautions } from '../calc/cautions/wrap-cautions.js';
+import type { Figures } from '../calc/figures.js';
+import type { Geometry } from '../calc/geometry.js';
+import { geometryOf } from '../calc/geometry.js';
+import { acquiredLines, type Lines } from '../calc/lines.js';
+import type { SeriesModel } from '../calc/model.js';
+import { noiseAveragingLines, signalFreeSnr } from '../calc/noise.js';
+import { parallelNoiseFactor } from '../calc/parallel-noise.js';
+import type { Parameters } from '../calc/series.js';
+import { namedValues } from '../formulas/formula-names.js';
+import type { MustKeep } from '../study/study.js';
+import { geometryLoss } from './balanced-loss.js';
+import { type BandLimit, withinBand } from './bands.js';
+import { type Groups, levelOf } from './groups.js';
+import type { LatticeVariable } from './lattice.js';
+import { isCrossed, isTimeCap, namesOfMustKeep } from './must-keep-test.js';
+import type { SearchSetting } from './setting.js';
+
+/** Lines, voxel and averages of one choice of the line variables: all that time and noise ask of them. */
+export interface LineState {
+  /** The count of lines that time follows. */
+  readonly lineCount: number;
+  /** SNR without signal; null where the noise of this acceleration is not known. */
+  readonly signalFreeSnr: number | null;
+  /** States of one bucket share everything but lines and noise: voxel, averages, what signal needs to know of the lines. */
+  readonly bucket: string;
+  /** States of one train share what the signal needs to know of the lines. */
+  readonly train: string;
+  readonly volumeMm3: number;
+  readonly geometryLoss: number;
+}
+
+/** Working copy of parameters that variables are written into. */
+type Scratch = { -readonly [K in keyof Parameters]: Parameters[K] };
+
+/** Computes line states of a setting. The same numbers as `evaluate`, by the same functions. */
+export class LineTable {
+  readonly #setting: SearchSetting;
+  readonly #start: Parameters;
+  readonly #scratch: Scratch;
+  readonly #bands: readonly BandLimit[];
+  readonly #mustKeeps: readonly MustKeep[];
+  readonly #series: { readonly plane: string; readonly parameters: Parameters };
+  readonly #lineSets: readonly number[];
+  readonly #parameterNamed: (name: string) => number | boolean | null;
+  #lines: Lines;
+  #geometry: Geometry;
+  #wraps = false;
+
+  constructor(setting: SearchSetting, groups: Groups, start: Parameters) {
+    const { problem, bands } = setting;
+    const { series, rules } = problem;
+    this.#setting = setting;
+    this.#start = start;
+    this.#scratch = { ...start };
+    this.#parameterNamed = namedValues(this.#scratch, {} as Figures);
+    this.#series = { plane: series.plane, parameters: this.#scratch };
+    this.#lines = setting.baseline.model.lines;
+    this.#geometry = setting.baseline.model.geometry;
+    this.#bands = bands.filter(({ figure }) => levelOf([figure], groups, setting) === 'lines');
+    this.#mustKeeps = series.mustKeep.filter((mustKeep) => {
+      const level = levelOf(namesOfMustKeep(mustKeep, rules), groups, setting);
+      return !isTimeCap(mustKeep, rules) && (level === 'lines' || level === 'either');
+    });
+    this.#lineSets = [...groups.shared, ...groups.lines];
+  }
+
+  /** The parameters the last `stateAt` was computed from: lines and voxel are right, carried timing is not. */
+  get parameters(): Parameters {
+    return this.#scratch;
+  }
+
+  #write(point: ArrayLike<number>): void {
+    const scratch = this.#scratch as unknown as Record<string, unknown>;
+    const start = this.#start as unknown as Record<string, unknown>;
+    for (const at of this.#lineSets) {
+      const { key, values, sliceCounts } = this.#setting.variables[at] as LatticeVariable;
+      const i = point[at] as number;
+      scratch[key] = i === 0 ? start[key] : values[i];
+      if (sliceCounts !== null) scratch['sliceCount'] = i === 0 ? start['sliceCount'] : sliceCounts[i];
+    }
+  }
+
+  /** The state of a point, or null where a band or a must-keep of voxel and lines is broken, or the body wraps into the picture. */
+  stateAt(point: ArrayLike<number>): LineState | null {
+    const { problem, baseline } = this.#setting;
+    this.#write(point);
+    const p = this.#scratch;
+    const { key } = baseline.model;
+    this.#geometry = geometryOf(problem.series.acquisition, p);
+    this.#lines = acquiredLines(key, p);
+    if (!this.#keeps()) return null;
+    const lines = this.#lines;
+    const geometry = this.#geometry;
+    const g = parallelNoiseFactor(
+      problem.scanner.coil,
+      p.parallelFactorPhase,
+      problem.series.acquisition === '3D' ? p.parallelFactorSlice : 1,
+    );
+    const simultaneousG = p.simultaneousSlices === 1 ? 1 : (problem.scanner.simultaneousSliceG[p.simultaneousSlices] ?? 1);
+    const train = this.#train();
+    const { coverageMm, voxelVolumeMm3 } = geometry;
+    return {
+      lineCount: problem.series.acquisition === '3D' && key !== 'inversion-prepared-gradient-echo/3D' ? lines.total : lines.phase,
+      signalFreeSnr:
+        g === null ? null : signalFreeSnr(voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, problem.scanner.fieldT, simultaneousG),
+      train,
+      bucket: `${train}|${p.averages}|${p.ellipticalSampling}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.sliceThicknessMm}|${p.sliceCount}|${coverageMm}`,
+      volumeMm3: voxelVolumeMm3,
+      geometryLoss: geometryLoss(geometry, baseline.model.geometry),
+    };
+  }
+
+  /** What trains that read all their lines in one go need to know of them. */
+  #train(): string {
+    const p = this.#scratch;
+    const lines = this.#lines;
+    switch (this.#setting.problem.series.family) {
+      case 'single-shot-fast-spin-echo':
+        return `${lines.phase}`;
+      case 'rotating-strip-fast-spin-echo':
+        // Blades, and so time, follow acceleration by more than their lines.
+        return `${p.parallelFactorPhase}`;
+      case 'inversion-prepared-gradient-echo':
+        return `${lines.slice}/${lines.fullSlice}/${p.parallelFactorSlice}/${p.partialFourierSlice}`;
+      case 'echo-planar-gradient-echo':
+      case 'echo-planar-spin-echo':
+        return `${lines.fullPhase}/${lines.phase}/${p.matrixPhase}/${p.partialFourierPhase}/${p.parallelFactorPhase}`;
+      default:
+        return '';
+    }
+  }
+
+  /** Value of a name that follows lines and voxel. */
+  readonly #valueNamed = (name: string): number | boolean | null => {
+    switch (name) {
+      case 'linesPhase':
+        return this.#lines.phase;
+      case 'linesSlice':
+        return this.#setting.problem.series.acquisition === '3D' ? this.#lines.slice : null;
+      case 'voxelReadMm':
+      case 'voxelPhaseMm':
+      case 'voxelSliceMm':
+      case 'voxelVolumeMm3':
+      case 'displayedVoxelReadMm':
+      case 'displayedVoxelPhaseMm':
+      case 'coverageMm':
+        return this.#geometry[name];
+      default:
+        return this.#parameterNamed(name);
+    }
+  };
+
+  #keeps(): boolean {
+    for (const band of this.#bands) if (!withinBand(band, this.#valueNamed(band.figure) as number | null)) return false;
+    const { problem, baseline, startWraps } = this.#setting;
+    for (const mustKeep of this.#mustKeeps) if (isCrossed(mustKeep, this.#valueNamed, problem.rules)) return false;
+    this.#wraps = false;
+    // Wrap needs geometry, phase direction, acceleration and bands only: the rest of a model is not formed for it.
+    const model = {
+      key: baseline.model.key,
+      series: this.#series,
+      scanner: problem.scanner,
+      geometry: this.#geometry,
+    } as unknown as SeriesModel;
+    wrapCautions(model, problem.body, baseline, (code, level) => {
+      if (level === 'error' || (code === 'wrap' && level === 'caution' && !startWraps)) this.#wraps = true;
+    });
+    return !this.#wraps;
+  }
+}

@@ -1,0 +1,125 @@
+import { resolveParameters } from '../calc/resolve.js';
+import { Bests, bestsWithin, type SearchTables } from './bests.js';
+import { type Candidate, comparePoints, outdoes, type WayKind, wayKinds } from './candidate.js';
+import { Pulse, type SearchControl, SearchStopped } from './control.js';
+import type { Front, FrontPoint } from './front.js';
+import { groupsOf } from './groups.js';
+import { Join } from './join.js';
+import { latticeSize } from './lattice.js';
+import { LineTable } from './line-states.js';
+import type { SearchProblem } from './problem-to-solve.js';
+import { type SearchSetting, settingOf } from './setting.js';
+import { SignalTable } from './signal-states.js';
+import { type Way, wayOf } from './way.js';
+import { WholeLatticeSearch } from './whole-lattice.js';
+
+/** What a search answers. */
+export interface SearchResult {
+  /** Best of each kind: first those that fit, then those that are too close and better on their own question. */
+  readonly ways: readonly Way[];
+  readonly lattice: number;
+  readonly formed: number;
+  readonly fitting: number | null;
+  /** False when the search was stopped before it was through. */
+  readonly proven: boolean;
+  readonly fronts: { readonly timeSnr: readonly FrontPoint[]; readonly timeLoss: readonly FrontPoint[] };
+  /** Where nothing fits: the way that is over its limits by the smallest ratio. */
+  readonly nearest: Way | null;
+}
+
+/** Settings that a way changes at most, unless nothing smaller fits. */
+export const mostChanges = 3;
+
+/** Tables that all parts of a search share. */
+export function tablesOf(setting: SearchSetting): SearchTables {
+  const { problem, baseline } = setting;
+  const groups = groupsOf(setting);
+  const start = resolveParameters(baseline, problem.set, problem.scanner).parameters;
+  return {
+    setting,
+    groups,
+    lines: new LineTable(setting, groups, start),
+    signals: new SignalTable(setting, groups),
+    join: new Join(setting),
+  };
+}
+
+/**
+ * Finds the exact best ways of a series within what a technologist may touch.
+ *
+ * @example search(problem).ways.map(({ kind }) => kind) //=> ['closest', 'best-signal', ...]
+ */
+export function search(problem: SearchProblem, control: SearchControl = {}): SearchResult {
+  const setting = settingOf(problem);
+  const tables = tablesOf(setting);
+  const pulse = new Pulse(control);
+  const bests = new Bests();
+  const whole = new WholeLatticeSearch(tables, pulse);
+  let proven = true;
+  try {
+    const smallest = Math.min(mostChanges, setting.variables.length);
+    bestsWithin(tables, smallest, bests, pulse);
+    whole.run();
+    for (let most = smallest + 1; !bests.any && canFit(whole, setting) && most <= setting.variables.length; most += 1)
+      bestsWithin(tables, most, bests, pulse);
+  } catch (error) {
+    if (!(error instanceof SearchStopped)) throw error;
+    proven = false;
+  }
+  const { timeSnr, timeLoss, fitting, nearest } = whole.result();
+  return {
+    ways: waysOf(setting, bests),
+    lattice: latticeSize(setting.variables),
+    formed: pulse.formed,
+    fitting: proven ? fitting : null,
+    proven,
+    fronts: { timeSnr: pointsOf(timeSnr), timeLoss: pointsOf(timeLoss) },
+    nearest: bests.any || nearest === null ? null : wayOf(setting, 'closest', nearest.point),
+  };
+}
+
+/** True when some point of the whole lattice is within its limits. */
+function canFit(whole: WholeLatticeSearch, setting: SearchSetting): boolean {
+  const { nearest } = whole.result();
+  return nearest !== null && wayOf(setting, 'closest', nearest.point).verdict !== 'OVER';
+}
+
+function pointsOf(front: Front): readonly FrontPoint[] {
+  return front.points;
+}
+
+/** Further ways that change as few settings as any does, one for each set of settings: at most so many of each verdict. */
+const mostRoutes = 6;
+
+/**
+ * Ways of all kinds: what fits, then what is too close where it answers its own question better. After each the other routes of fewest changes,
+ * so that lowering an angle and lengthening TR stand side by side.
+ */
+function waysOf(setting: SearchSetting, bests: Bests): Way[] {
+  const chosen: { kind: WayKind; candidate: Candidate }[] = [];
+  for (const rank of [0, 1] as const) {
+    for (const kind of kindsOf(setting)) {
+      const candidate = bests.best(kind, rank);
+      const better = rank === 0 ? null : bests.best(kind, 0);
+      if (candidate !== null && (better === null || outdoes(kind, candidate, better))) chosen.push({ kind, candidate });
+    }
+    if (rank === 1 && !outdoesInChanges(bests)) continue;
+    const routes = bests
+      .routes(rank)
+      .filter(({ changes, point }) => changes > 0 && !chosen.some(({ candidate }) => comparePoints(candidate.point, point) === 0));
+    chosen.push(...routes.slice(0, mostRoutes).map((candidate) => ({ kind: 'fewest-changes' as const, candidate })));
+  }
+  return chosen.map(({ kind, candidate }) => wayOf(setting, kind, candidate.point));
+}
+
+/** True when what is too close changes fewer settings than anything that fits. */
+function outdoesInChanges(bests: Bests): boolean {
+  const fits = bests.best('fewest-changes', 0);
+  const close = bests.best('fewest-changes', 1);
+  return close !== null && (fits === null || close.changes <= fits.changes);
+}
+
+/** Least RF is a question only where RF is capped. */
+export function kindsOf(setting: SearchSetting): readonly WayKind[] {
+  return wayKinds.filter((kind) => kind !== 'least-rf' || setting.rfCapped);
+}

@@ -1,24 +1,14 @@
 import { classKeys, classRow, families } from '../src/calc/classes.js';
-import { figureKeys } from '../src/calc/figures.js';
 import { type ParameterKey, parameterKeys, parameterRow } from '../src/calc/parameters.js';
 import { tissueNames } from '../src/calc/tissues.js';
 import { type InnerRow, innerKeys, mostBValues } from '../src/study/inner-keys.js';
 import { idForm, presetLimits } from '../src/study/limits.js';
 import { requiredParameters } from '../src/study/required-keys.js';
 import { studyStates } from '../src/study/study.js';
-
-type Schema = { readonly [key: string]: unknown };
+import { mustKeepSchema } from './must-keep-schema.js';
+import { closed, named, type Schema, text } from './schema-parts.js';
 
 const id: Schema = { type: 'string', pattern: idForm, maxLength: presetLimits.id };
-const text = (longest: number, description: string): Schema => ({ type: 'string', maxLength: longest, description });
-const named = (longest: number, description: string): Schema => ({ type: 'string', minLength: 1, maxLength: longest, description });
-const closed = (properties: Schema, required: readonly string[], more: Schema = {}): Schema => ({
-  type: 'object',
-  additionalProperties: false,
-  properties,
-  ...(required.length > 0 ? { required } : {}),
-  ...more,
-});
 
 function innerSchema(row: InnerRow): Schema {
   if (row.kind === 'flag') return { type: 'boolean', description: row.help };
@@ -52,32 +42,9 @@ function parameterSchema(key: ParameterKey): Schema {
   return { type: row.whole ? 'integer' : 'number', ...low, maximum: row.max, ...otherwise, description };
 }
 
-const measurable = parameterKeys.filter((key) => parameterRow(key).kind === 'number' || key === 'diffusion');
 const steppable = parameterKeys.filter((key) => parameterRow(key).kind !== 'object');
 
 const limit: Schema = { type: 'number' };
-const someLimit: Schema = { anyOf: [{ required: ['atMost'] }, { required: ['atLeast'] }, { required: ['between'] }] };
-
-const mustKeep = closed(
-  {
-    figure: { enum: figureKeys },
-    parameter: { enum: measurable, description: 'diffusion stands for its highest b-value, s/mm2' },
-    atMost: limit,
-    atLeast: limit,
-    between: { type: 'array', items: limit, minItems: 2, maxItems: 2 },
-    rule: named(presetLimits.formula, 'formula over parameter and figure keys'),
-    when: named(presetLimits.formula, 'formula that says when this applies'),
-    source: named(presetLimits.source, 'where this is asked for'),
-  },
-  ['source'],
-  {
-    oneOf: [
-      { required: ['figure'], ...someLimit },
-      { required: ['parameter'], ...someLimit },
-      { required: ['rule'], not: someLimit },
-    ],
-  },
-);
 
 const range: Schema = {
   type: ['object', 'array'],
@@ -157,7 +124,7 @@ const series = closed(
       parameterKeys.filter((key) => parameterRow(key).otherwise === 'required'),
     ),
     ranges: { type: 'object', propertyNames: { enum: steppable }, additionalProperties: range },
-    mustKeep: { type: 'array', items: mustKeep, maxItems: presetLimits.mustKeeps },
+    mustKeep: { type: 'array', items: mustKeepSchema, maxItems: presetLimits.mustKeeps },
     pairedWith: { ...idList, description: 'series that change together with this one' },
     locked: { ...keyList, description: 'parameters that a search may not touch' },
     opened: { ...keyList, description: 'parameters that a search may touch beyond the defaults of the class' },

@@ -1,12 +1,14 @@
 /**
- * Writes `schema/preset.schema.json` from the tables and compiles it to `build/validate-preset.js`. Run before build and test.
- * With `--code-only` the committed schema is left alone, so that a test can tell that it no longer follows the tables.
+ * Writes `schema/*.schema.json` from the tables and compiles each to `build/validate-*.js`. Run before build and test.
+ * With `--code-only` the committed schemas are left alone, so that a test can tell that one no longer follows the tables.
  */
 import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { Ajv } from 'ajv';
 import standalone from 'ajv/dist/standalone/index.js';
 import { build } from 'esbuild';
 import { presetSchema } from './preset-schema.js';
+import { rulesSchema } from './rules-schema.js';
+import { scannerSchema } from './scanner-schema.js';
 import { schemaText } from './schema-text.js';
 
 const root = new URL('../', import.meta.url);
@@ -18,7 +20,7 @@ async function writeIfChanged(path: string, text: string): Promise<void> {
   if (before !== text) await writeFile(file, text);
 }
 
-const ajv = new Ajv({
+const options = {
   allErrors: true,
   verbose: true,
   messages: false,
@@ -27,29 +29,13 @@ const ajv = new Ajv({
   strictRequired: false,
   strictTypes: false,
   code: { source: true, esm: true },
-});
+} as const;
 // Node gives the CommonJS module of ajv as the default import.
 const toCode = ((standalone as unknown as { default?: unknown }).default ?? standalone) as (ajv: Ajv, validate: unknown) => string;
 
-await mkdir(new URL('schema/', root), { recursive: true });
-await mkdir(new URL('build/', root), { recursive: true });
-// The build compiles only: the test that compares the committed schema with the tables must be able to fail.
-if (!process.argv.includes('--code-only')) await writeIfChanged('schema/preset.schema.json', schemaText(presetSchema));
+const schemas = { preset: presetSchema, rules: rulesSchema, scanner: scannerSchema };
 
-// The ESM output of ajv still calls `require` for its run-time parts: one pass through esbuild makes it stand alone.
-const bundled = await build({
-  stdin: { contents: toCode(ajv, ajv.compile(presetSchema)), resolveDir: new URL('.', root).pathname, loader: 'js' },
-  bundle: true,
-  format: 'esm',
-  platform: 'neutral',
-  mainFields: ['module', 'main'],
-  minify: true,
-  write: false,
-});
-await writeIfChanged('build/validate-preset.js', bundled.outputFiles[0]?.text ?? '');
-await writeIfChanged(
-  'build/validate-preset.d.ts',
-  `export interface SchemaError {
+const types = `export interface SchemaError {
   instancePath: string;
   schemaPath: string;
   keyword: string;
@@ -61,5 +47,24 @@ await writeIfChanged(
 }
 export declare const validate: { (data: unknown): boolean; errors?: SchemaError[] | null };
 export default validate;
-`,
-);
+`;
+
+await mkdir(new URL('schema/', root), { recursive: true });
+await mkdir(new URL('build/', root), { recursive: true });
+for (const [name, schema] of Object.entries(schemas)) {
+  // The build compiles only: the test that compares the committed schema with the tables must be able to fail.
+  if (!process.argv.includes('--code-only')) await writeIfChanged(`schema/${name}.schema.json`, schemaText(schema));
+  const ajv = new Ajv(options);
+  // The ESM output of ajv still calls `require` for its run-time parts: one pass through esbuild makes it stand alone.
+  const bundled = await build({
+    stdin: { contents: toCode(ajv, ajv.compile(schema)), resolveDir: new URL('.', root).pathname, loader: 'js' },
+    bundle: true,
+    format: 'esm',
+    platform: 'neutral',
+    mainFields: ['module', 'main'],
+    minify: true,
+    write: false,
+  });
+  await writeIfChanged(`build/validate-${name}.js`, bundled.outputFiles[0]?.text ?? '');
+  await writeIfChanged(`build/validate-${name}.d.ts`, types);
+}

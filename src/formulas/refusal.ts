@@ -3,7 +3,7 @@ import type { ParsedNode } from './parsed-node.js';
 
 /** Why a part of a formula is not allowed. */
 export interface Refusal {
-  readonly code: 'formula-part' | 'formula-name' | 'formula-kind' | 'formula-depth';
+  readonly code: 'formula-part' | 'formula-name' | 'formula-kind' | 'formula-depth' | 'formula-unit';
   /** The part, as text. */
   readonly part: string;
   readonly because: string;
@@ -33,7 +33,8 @@ const kindsInWords: ReadonlyMap<string, string> = new Map([
 ]);
 
 /** Everything a formula may hold, in words. */
-export const allowed = 'names of parameters and figures, numbers, comparisons, and, or, not, + - * / ^, parentheses, min, max, abs, sqrt';
+export const allowed =
+  'names of parameters and figures, numbers, comparisons, and, or, not, + - * / ^, parentheses, min, max, abs, sqrt, units after numbers';
 
 function partOf(node: ParsedNode): string {
   try {
@@ -56,7 +57,10 @@ export function refuse(
 
 /** Refuses a node whose kind is on no list. */
 export function refuseKind(node: ParsedNode): never {
-  const operator = node.type === 'OperatorNode' ? `the operator "${String(node.op)}"` : (kindsInWords.get(node.type) ?? 'something');
+  const operator =
+    node.type === 'OperatorNode'
+      ? `the operator "${typeof node.op === 'string' ? node.op : ''}"`
+      : (kindsInWords.get(node.type) ?? 'something');
   const hint = node.type === 'AssignmentNode' ? 'Compare with == instead of =.' : 'Write the rule with what is allowed.';
   return refuse(node, 'formula-part', `${operator} is not allowed`, allowed, hint);
 }

@@ -35,7 +35,13 @@ function expectedValue(schema: Record<string, unknown>): string {
   return types.map((type) => words[String(type)] ?? String(type)).join(' or ');
 }
 
-function unknownKey(key: string, known: readonly string[]): Finding {
+/** What a kind of file says of its schema and of keys it does not know. */
+interface Words {
+  readonly schema: string;
+  readonly hintFor?: (key: string) => string | null;
+}
+
+function unknownKey(key: string, known: readonly string[], { schema, hintFor }: Words): Finding {
   const near = known.includes('matrixRead') ? suggestParameter(key) : nearestWord(key, known);
   const elsewhere = near === null && parameterKeys.some((name) => name === key);
   return {
@@ -47,7 +53,7 @@ function unknownKey(key: string, known: readonly string[]): Finding {
         ? `Did you mean "${near}"?`
         : elsewhere
           ? 'It belongs inside "parameters".'
-          : 'Take the key out, or look it up in schema/preset.schema.json.',
+          : (hintFor?.(key) ?? `Take the key out, or look it up in ${schema}.`),
   };
 }
 
@@ -90,10 +96,10 @@ function lengthFinding(error: SchemaError): Finding {
 }
 
 /** One finding for one complaint of the compiled schema; null for the umbrella complaints that others explain better. */
-function findingOf(error: SchemaError): Finding | null {
+function findingOf(error: SchemaError, words: Words): Finding | null {
   switch (error.keyword) {
     case 'additionalProperties':
-      return unknownKey(String(error.params.additionalProperty), Object.keys((error.parentSchema.properties ?? {}) as object));
+      return unknownKey(String(error.params.additionalProperty), Object.keys((error.parentSchema.properties ?? {}) as object), words);
     case 'required':
       return {
         code: 'missing-key',
@@ -105,7 +111,7 @@ function findingOf(error: SchemaError): Finding | null {
       if (error.instancePath.endsWith('/acquisition') && (error.schema as unknown[]).length === 1) return noSuchClass(error);
       return error.propertyName === undefined
         ? wrongWord(error.data, error.schema as unknown[], expectedValue(error.parentSchema))
-        : unknownKey(error.propertyName, error.schema as string[]);
+        : unknownKey(error.propertyName, error.schema as string[], words);
     case 'const':
       return {
         code: 'unknown-word',
@@ -150,11 +156,11 @@ function placeOf(error: SchemaError): { path: JsonPath; at: 'key' | 'value' } {
 }
 
 /** What the compiled schema found, as problems with file, line and key. Alternatives (`oneOf`) are left to the checks that can name them. */
-export function schemaProblems(errors: readonly SchemaError[], file: LocatedFile): PlacedProblem[] {
+export function schemaProblems(errors: readonly SchemaError[], file: LocatedFile, words: Words): PlacedProblem[] {
   const problems: PlacedProblem[] = [];
   for (const error of errors) {
     if (error.schemaPath.includes('/oneOf/')) continue;
-    const finding = findingOf(error);
+    const finding = findingOf(error, words);
     if (finding === null) continue;
     const { path, at } = placeOf(error);
     problems.push(file.problem(path, finding, at));

@@ -8,7 +8,7 @@ import type { Parameters } from './series.js';
 
 /** Preparation of a series, instruction and rest of one breath-hold, s (common practice, no source). */
 export const preparationS = 20;
-export const instructionS = 10;
+const instructionS = 10;
 export const restS = 20;
 
 /** Times of one series. Seconds come from whole microseconds times whole or half counts, divided once at the end. */

@@ -1,7 +1,7 @@
 import { cleanText } from './clean-text.js';
 
 /** Free text in a record is no longer than this, in characters. */
-export const maximumFreeTextLength = 80;
+const maximumFreeTextLength = 80;
 
 /** Stands beside every field of free text. */
 export const freeTextReminder = 'No name, number, birth date or time of a patient. 80 characters.';

@@ -152,7 +152,7 @@ export function openTerminal(options: TerminalOptions): OpenTerminal {
   };
   const onExit = () => {
     try {
-      if (leaving === null) options.onLeave?.({ kind: 'closed' });
+      if (leaving === null) void options.onLeave?.({ kind: 'closed' });
     } finally {
       leaveScreen();
       screen.cook();

@@ -30,7 +30,7 @@ function startsAtEquilibrium({ key, parameters: p }: SignalSetting): boolean {
 }
 
 /** From one excitation of a slice to the next, ms: single-shot series come back to a slice after all slices of the round. */
-export function signalRepetitionMs({ key, parameters: p, slicesOfRound }: SignalSetting): number {
+function signalRepetitionMs({ key, parameters: p, slicesOfRound }: SignalSetting): number {
   const tr = effectiveRepetitionTimeMs(p);
   return key === 'single-shot-fast-spin-echo/2D' ? tr * guardedCeil(slicesOfRound / p.simultaneousSlices) : tr;
 }

@@ -112,7 +112,7 @@ export function draftFile(options: DraftFileOptions): DraftFile {
 
   return {
     save: (session) => inTurn(() => save(session)),
-    unfinished: () => inTurn(() => unfinishedDrafts(disk, folder, id, programs, nowMs())),
+    unfinished: () => inTurn(() => unfinishedDrafts(disk, folder, programs, nowMs())),
     claim: (wanted) => inTurn(() => claim(wanted)),
     discard: () => inTurn(() => removed(disk, draftPath(folder, id))),
     beat: () =>

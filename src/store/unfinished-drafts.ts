@@ -23,13 +23,7 @@ export interface UnfinishedDrafts {
 const draftName = /^draft-([0-9a-z]+)\.(json|json\.tmp|owner)$/;
 
 /** Drafts of programs that are gone; what such programs left half-written is cleared away. */
-export async function unfinishedDrafts(
-  disk: Disk,
-  folder: string,
-  ownId: string,
-  programs: RunningPrograms,
-  nowMs: number,
-): Promise<UnfinishedDrafts> {
+export async function unfinishedDrafts(disk: Disk, folder: string, programs: RunningPrograms, nowMs: number): Promise<UnfinishedDrafts> {
   const names = await disk.names(folder).catch((error: unknown) => problemOfError(error, 'read', 'the folder of drafts', folder));
   if (!Array.isArray(names)) return { drafts: [], problems: names.code === 'not-there' ? [] : [names] };
 
@@ -37,7 +31,7 @@ export async function unfinishedDrafts(
   const problems: StoreProblem[] = [];
   const ids = new Set(names.flatMap((name) => draftName.exec(name)?.[1] ?? []));
   for (const id of ids) {
-    if (id === ownId || !(await isForsaken(disk, folder, id, programs, nowMs))) continue;
+    if (!(await isForsaken(disk, folder, id, programs, nowMs))) continue;
     const path = draftPath(folder, id);
     const ageMs = nowMs - (await disk.facts(path).catch(() => ({ modifiedMs: nowMs }))).modifiedMs;
     const session = await readDraft(disk, path);

@@ -25,7 +25,7 @@ export function parameterWords(key: ParameterKey, value: unknown): string {
   if (key === 'diffusion') return diffusionWords(value as Diffusion);
   if (typeof value === 'boolean') return value ? 'yes' : 'no';
   if (row.kind !== 'number' || typeof value !== 'number') return typeof value === 'string' ? value : JSON.stringify(value);
-  return withUnit(trimmed(value, row.digits), row.unit);
+  return withUnit(plainNumber(value), row.unit);
 }
 
 /**
@@ -45,8 +45,8 @@ export function figureWords(key: FigureKey, value: number | null): string {
 
 function pacingWords({ kind, periodMs, windowMs, breathHold }: Pacing): string {
   const parts = [kind.replace('-', ' ')];
-  if (periodMs !== undefined) parts.push(`${trimmed(periodMs, 0)} ms`);
-  if (windowMs !== undefined) parts.push(`window ${trimmed(windowMs, 0)} ms`);
+  if (periodMs !== undefined) parts.push(`${plainNumber(periodMs)} ms`);
+  if (windowMs !== undefined) parts.push(`window ${plainNumber(windowMs)} ms`);
   if (breathHold === true) parts.push('in breath-holds');
   return parts.join(' ');
 }
@@ -55,10 +55,9 @@ function diffusionWords({ bValuesSPerMm2, directions, averages }: Diffusion): st
   return `b ${bValuesSPerMm2.join('/')}, ${directions} directions, averages ${averages.join('/')}`;
 }
 
-/** At least the digits a person expects, more where the value has them: a change must never look like none. */
-function trimmed(value: number, digits: number): string {
-  const exact = Number(value.toPrecision(6));
-  return Number(exact.toFixed(digits)) === exact ? exact.toFixed(digits) : String(exact);
+/** As many digits as the value has, the last binary ones left out: a change must never look like none. */
+function plainNumber(value: number): string {
+  return String(Number(value.toPrecision(6)));
 }
 
 function withUnit(number: string, unit: string): string {

@@ -149,6 +149,20 @@ describe('readRecordLine', () => {
   });
 
   it.each([
+    ['2024-02-29', true],
+    ['2000-02-29', true],
+    ['2100-02-29', false],
+    ['2026-02-29', false],
+    ['2026-04-31', false],
+    ['2026-13-01', false],
+    ['2026-00-10', false],
+    ['2026-12-31', true],
+    ['2026-1-1', false],
+  ])('takes the day %s for one of the calendar: %s', (day, expected) => {
+    expect(readRecordLine(recordLine({ ...inventedRecord, day })).ok).toBe(expected);
+  });
+
+  it.each([
     ['day', (json: string) => json.replace('2026-03-02', '2026-02-30')],
     ['day', (json: string) => json.replace('2026-03-02', '2026-03-02T10:11:12')],
     ['series.0.outcome', (json: string) => json.replace('"done"', '"finished"')],

@@ -8,7 +8,7 @@ import { plainScanner, type Scanner } from '../../src/calc/scanner.js';
 import { fillDefaults, type GivenParameters, type Parameters, type Series } from '../../src/calc/series.js';
 
 /** Parameters every class must be given; invented, so that a test names only what it is about. */
-export const plainParameters = {
+const plainParameters = {
   repetitionTimeMs: 1000,
   echoTimeMs: 10,
   fieldOfViewMm: 256,

@@ -7,8 +7,6 @@ import { expm, lusolve, matrix } from 'mathjs';
 export type Propagator = readonly (readonly number[])[];
 export type Magnetisation = readonly number[];
 
-export const atRest: Magnetisation = [0, 0, 1, 1];
-
 function propagatorOf(generator: number[][]): Propagator {
   return expm(matrix(generator)).toArray() as number[][];
 }

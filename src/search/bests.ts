@@ -1,13 +1,9 @@
 import { answers, type Candidate, compareCandidates, compareMeasures, type WayKind, wayKinds } from './candidate.js';
 import type { Pulse } from './control.js';
-import type { Groups } from './groups.js';
-import type { Join } from './join.js';
 import { lineBuckets } from './line-buckets.js';
-import type { LineTable } from './line-states.js';
 import { walkPoints } from './point-walk.js';
-import type { SearchSetting } from './setting.js';
+import type { SearchTables } from './search-tables.js';
 import { joinedPoint, SignalLists } from './signal-lists.js';
-import type { SignalTable } from './signal-states.js';
 
 type Measures = Omit<Candidate, 'point' | 'rank'>;
 
@@ -67,14 +63,6 @@ function maskOf(which: readonly number[], point: readonly number[]): number {
   let mask = 0;
   for (const at of which) if (point[at] !== 0) mask += 2 ** at;
   return mask;
-}
-
-export interface SearchTables {
-  readonly setting: SearchSetting;
-  readonly groups: Groups;
-  readonly lines: LineTable;
-  readonly signals: SignalTable;
-  readonly join: Join;
 }
 
 /** Goes through every point that changes at most so many settings and is within bands and limits, and keeps the best of each kind. */

@@ -1,15 +1,12 @@
-import { resolveParameters } from '../calc/resolve.js';
-import { Bests, bestsWithin, type SearchTables } from './bests.js';
+import { Bests, bestsWithin } from './bests.js';
 import { type Candidate, comparePoints, outdoes, type WayKind, wayKinds } from './candidate.js';
 import { Pulse, type SearchControl, SearchStopped } from './control.js';
+import { fewerSlices } from './fewer-slices.js';
 import type { Front, FrontPoint } from './front.js';
-import { groupsOf } from './groups.js';
-import { Join } from './join.js';
 import { latticeSize } from './lattice.js';
-import { LineTable } from './line-states.js';
 import type { SearchProblem } from './problem-to-solve.js';
+import { tablesOf } from './search-tables.js';
 import { type SearchSetting, settingOf } from './setting.js';
-import { SignalTable } from './signal-states.js';
 import { type Way, wayOf } from './way.js';
 import { WholeLatticeSearch } from './whole-lattice.js';
 
@@ -30,20 +27,6 @@ export interface SearchResult {
 /** Settings that a way changes at most, unless nothing smaller fits. */
 export const mostChanges = 3;
 
-/** Tables that all parts of a search share. */
-export function tablesOf(setting: SearchSetting): SearchTables {
-  const { problem, baseline } = setting;
-  const groups = groupsOf(setting);
-  const start = resolveParameters(baseline, problem.set, problem.scanner).parameters;
-  return {
-    setting,
-    groups,
-    lines: new LineTable(setting, groups, start),
-    signals: new SignalTable(setting, groups),
-    join: new Join(setting),
-  };
-}
-
 /**
  * Finds the exact best ways of a series within what a technologist may touch.
  *
@@ -56,7 +39,9 @@ export function search(problem: SearchProblem, control: SearchControl = {}): Sea
   const bests = new Bests();
   const whole = new WholeLatticeSearch(tables, pulse);
   let proven = true;
+  let apart: Way[] = [];
   try {
+    apart = fewerSlices(problem, pulse);
     const smallest = Math.min(mostChanges, setting.variables.length);
     bestsWithin(tables, smallest, bests, pulse);
     whole.run();
@@ -68,13 +53,13 @@ export function search(problem: SearchProblem, control: SearchControl = {}): Sea
   }
   const { timeSnr, timeLoss, fitting, nearest } = whole.result();
   return {
-    ways: waysOf(setting, bests),
+    ways: [...waysOf(setting, bests), ...apart],
     lattice: latticeSize(setting.variables),
     formed: pulse.formed,
     fitting: proven ? fitting : null,
     proven,
     fronts: { timeSnr: pointsOf(timeSnr), timeLoss: pointsOf(timeLoss) },
-    nearest: bests.any || nearest === null ? null : wayOf(setting, 'closest', nearest.point),
+    nearest: bests.any || apart.length > 0 || nearest === null ? null : wayOf(setting, 'closest', nearest.point),
   };
 }
 

@@ -1,8 +1,8 @@
-import type { SearchTables } from './bests.js';
 import type { Pulse } from './control.js';
 import { Front } from './front.js';
 import { type LineBucket, type LineEntry, lineBuckets } from './line-buckets.js';
 import { countPoints, walkPoints } from './point-walk.js';
+import type { SearchTables } from './search-tables.js';
 import { joinedPoint, type SignalEntry, SignalLists, undominated } from './signal-lists.js';
 
 /** What is known of all points of a lattice together. */
@@ -31,6 +31,7 @@ export class WholeLatticeSearch {
   constructor(
     private readonly tables: SearchTables,
     private readonly pulse: Pulse,
+    private readonly parts: 'all' | 'nearest alone' | 'fronts alone' = 'all',
   ) {}
 
   result(): WholeLattice {
@@ -59,6 +60,10 @@ export class WholeLatticeSearch {
     const reduced = new Map<string, SignalEntry[]>();
     for (const bucket of buckets) {
       const entries = lists.of(bucket);
+      if (this.parts === 'nearest alone') {
+        for (const signal of entries) this.#seekNearest(bucket, signal, skyline(bucket));
+        continue;
+      }
       let best = reduced.get(bucket.train);
       if (best === undefined) {
         best = undominated(entries);
@@ -69,6 +74,7 @@ export class WholeLatticeSearch {
         this.pulse.beat();
         if (signals.playable(signal.state, bucket.train, bucket.parameters)) this.#branch(bucket, signal, line, 0, line.length);
       }
+      if (this.parts === 'fronts alone') continue;
       for (const signal of entries) this.#seekNearest(bucket, signal, line);
       this.#count(bucket, entries);
     }

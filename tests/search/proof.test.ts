@@ -5,7 +5,8 @@ import { grain, wayKinds } from '../../src/search/candidate.js';
 import { Pulse } from '../../src/search/control.js';
 import { judgePoint } from '../../src/search/judge.js';
 import { latticeSize } from '../../src/search/lattice.js';
-import { mostChanges, tablesOf } from '../../src/search/search.js';
+import { mostChanges } from '../../src/search/search.js';
+import { tablesOf } from '../../src/search/search-tables.js';
 import { settingOf } from '../../src/search/setting.js';
 import { WholeLatticeSearch } from '../../src/search/whole-lattice.js';
 import { enumerate, nameOf } from './plain-enumeration.js';
@@ -37,7 +38,10 @@ function proveOne(key: ClassKey, seed: number): void {
   const bests = new Bests();
   let most = Math.min(mostChanges, setting.variables.length);
   bestsWithin(tables, most, bests, pulse);
-  while (!bests.any && most < setting.variables.length) bestsWithin(tables, (most += 1), bests, pulse);
+  while (!bests.any && most < setting.variables.length) {
+    most += 1;
+    bestsWithin(tables, most, bests, pulse);
+  }
   for (const kind of wayKinds) {
     for (const rank of [0, 1] as const) {
       const best = bests.best(kind, rank);

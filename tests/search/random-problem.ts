@@ -119,7 +119,12 @@ function candidates(key: ClassKey, p: GivenParameters, random: Random): [Paramet
       ['ellipticalSampling', [false, true]],
     );
   else all.push(['rounds', [1, 2, 3]], ['sliceGapMm', [0, 0.5, 1]]);
-  return random.shuffled(all.filter(([name]) => (row.parameters as readonly string[]).includes(name)));
+  const own = p as Readonly<Record<string, unknown>>;
+  return random.shuffled(
+    all
+      .filter(([name]) => (row.parameters as readonly string[]).includes(name))
+      .map(([name, values]): [ParameterKey, readonly (number | boolean)[]] => [name, values.filter((value) => value !== own[name] && (typeof value === 'boolean' || value >= 0))]),
+  );
 }
 
 function mustKeeps(random: Random, series: StudySeries): MustKeep[] {
@@ -181,7 +186,7 @@ export function randomProblem(key: ClassKey, random: Random, wantedSize: number)
   const tissues = tissuesWithValueAt(fieldT);
   const [target, comparison] = random.shuffled(tissues) as [string, string];
   const parameters = fillDefaults(key, given);
-  const open = candidates(key, { ...given, echoTrainLength: parameters.echoTrainLength }, random);
+  const open = candidates(key, parameters, random);
   const base: StudySeries = {
     id: 'random',
     title: 'Random',
@@ -229,7 +234,7 @@ export function randomProblem(key: ClassKey, random: Random, wantedSize: number)
     };
     return { series, presetFieldT: fieldT, scanner, body, rules, limits, bands, readings: {}, set: {}, opened: [], frozen: false };
   };
-  for (let values = 1; values <= 7; values += 1) {
+  for (let values = 1; values <= 8; values += 1) {
     for (const [name, list] of chosen) {
       const before = ranges[name];
       ranges[name] = random.shuffled(list as readonly number[]).slice(0, values);

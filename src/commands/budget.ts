@@ -1,0 +1,85 @@
+import { unknownBody } from '../calc/body.js';
+import { plainScanner } from '../calc/scanner.js';
+import { readQuantity } from '../formulas/read-quantity.js';
+import { usualBands } from '../search/bands.js';
+import { type BudgetProblem, planBudget } from '../search/budget.js';
+import { cleanText } from '../study/clean-text.js';
+import { nearestWord } from '../study/nearest-word.js';
+import { type Attempt, refuse, wrongUse } from './attempt.js';
+import { budgetJson, budgetPage } from './budget-page.js';
+import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
+import { complain } from './complain.js';
+import { type ExitCode, exitCodes } from './exit-codes.js';
+import { foldersOfPresets, type LoadedPreset, loadPreset } from './load-preset.js';
+import { pageOf } from './page.js';
+import { readAboveZero } from './ways-request.js';
+
+/** Overhead of a planned series when none is given, s (common practice, no source). */
+const usualOverheadS = 20;
+
+/** `holdfast budget`: the session in so many minutes. Exit code 1 where not even the minimum set fits. */
+export async function runBudget(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
+  const loaded = await loadPreset(request.arguments[0] ?? '', await foldersOfPresets(request, io), io);
+  if (!loaded.ok) return complain(loaded, io);
+  const read = readBudget(loaded.value, request);
+  if (!read.ok) return complain(read, io);
+  const budget = planBudget(read.value);
+  if (request.has('json')) io.write(budgetJson(read.value, budget));
+  else {
+    const page = pageOf(request, io);
+    io.write(page.plain(budgetPage(read.value, budget, page)));
+  }
+  const nothing = budget.plan.length > 0 && budget.plan.every(({ choice }) => choice === 'skipped');
+  return budget.missing.length > 0 || nothing ? exitCodes.failed : exitCodes.done;
+}
+
+function readBudget({ study, rules }: LoadedPreset, request: CommandRequest): Attempt<BudgetProblem> {
+  const text = request.value('minutes');
+  if (text === undefined) return wrongUse('--minutes', '--minutes is missing: how long may the session take?', 'Write --minutes 25.');
+  const minutes = readAboveZero('--minutes', text, 'min', 600);
+  if (!minutes.ok) return minutes;
+  let longestS: number | null = null;
+  const longest = request.value('longest');
+  if (longest !== undefined) {
+    const seconds = readAboveZero('--longest', longest, 's', 36_000);
+    if (!seconds.ok) return seconds;
+    longestS = seconds.value;
+  }
+  const overheadText = request.value('overhead');
+  const overhead = overheadText === undefined ? { ok: true as const, value: usualOverheadS } : readQuantity(overheadText, 's');
+  if (!overhead.ok || overhead.value < 0 || overhead.value > 3600) {
+    return wrongUse(
+      '--overhead',
+      `--overhead takes seconds from 0 to 3600; "${cleanText(overheadText ?? '', 40)}" was given.`,
+      'Write --overhead 20.',
+    );
+  }
+  const ids = study.series.map(({ id }) => id);
+  for (const done of request.values('done')) {
+    if (ids.includes(done)) continue;
+    const near = nearestWord(done, ids);
+    const message = `There is no series "${cleanText(done, 60)}" in preset ${study.id}.`;
+    return refuse(exitCodes.noInput, {
+      code: 'series-not-there',
+      path: done,
+      message,
+      hint: near === null ? `Its series: ${ids.join(', ')}.` : `Did you mean ${near}?`,
+    });
+  }
+  return {
+    ok: true,
+    value: {
+      study,
+      scanner: plainScanner(study.fieldT),
+      body: unknownBody,
+      rules,
+      minutes: minutes.value,
+      longestS,
+      overheadS: overhead.value,
+      done: request.values('done'),
+      bands: usualBands,
+      readings: {},
+    },
+  };
+}

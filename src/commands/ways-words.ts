@@ -1,0 +1,87 @@
+import { type FigureKey, figureTable } from '../calc/figures.js';
+import { type ParameterKey, parameterRow } from '../calc/parameters.js';
+import type { LimitKey } from '../search/limits.js';
+import type { Trade, Way } from '../search/way.js';
+import { sayFigure } from '../session/say-figure.js';
+import { sayParameter } from '../session/say-parameter.js';
+import { sayTime } from '../session/say-time.js';
+
+/** What each kind of way is, in words. */
+export const kindWords: Readonly<Record<Way['kind'], string>> = {
+  closest: 'closest to the preset',
+  'best-signal': 'best signal',
+  sharpest: 'sharpest',
+  shortest: 'shortest',
+  'best-contrast': 'best contrast',
+  'fewest-changes': 'fewest changes',
+  'least-rf': 'least RF',
+};
+
+/** Figures a person weighs a way by, in the order they are said. */
+const weighed: readonly FigureKey[] = [
+  'relativeSnr',
+  'relativeContrast',
+  'voxelReadMm',
+  'voxelPhaseMm',
+  'voxelSliceMm',
+  'coverageMm',
+  'blurFwhmPx',
+  'scanTimeS',
+  'holds',
+  'rfPowerTrend',
+  'chemicalShiftPx',
+  'distortionPxPer100Hz',
+  'temporalResolutionMs',
+  'cardiacPhases',
+];
+
+/** The changes of a way in one line: `slice thickness 3 mm to 4 mm (72 to 54 slices)`. */
+export function changesInWords({ changes }: Way): string {
+  const parts: string[] = [];
+  for (const [key, change] of Object.entries(changes) as [ParameterKey, { from: unknown; to: unknown }][]) {
+    parts.push(`${parameterRow(key).label} ${sayParameter(key, change.from)} to ${sayParameter(key, change.to)}`);
+  }
+  return parts.length === 0 ? 'nothing is changed' : parts.join('; ');
+}
+
+function tradeInWords({ figure, from, to, ratio }: Trade): string {
+  const { label } = figureTable[figure];
+  if (ratio === null || figure === 'scanTimeS' || figure === 'holds')
+    return `${label} ${sayFigure(figure, from)} to ${sayFigure(figure, to)}`;
+  const percent = Math.round((ratio - 1) * 100);
+  return `${label} ${percent > 0 ? '+' : ''}${percent} %`;
+}
+
+/** Gains or losses in one line, only what a person weighs and what shows in whole percent. */
+export function tradesInWords(trades: readonly Trade[]): string {
+  const shown = weighed
+    .flatMap((figure) => trades.filter((trade) => trade.figure === figure))
+    .filter(({ ratio }) => ratio === null || Math.round((ratio - 1) * 100) !== 0);
+  return shown.length === 0 ? 'nothing' : shown.map(tradeInWords).join(', ');
+}
+
+const limitWords: Readonly<Record<LimitKey, string>> = {
+  holdS: 'a hold',
+  timeS: 'the series',
+  b1rmsUt: 'uT',
+  sarWkg: 'W/kg',
+  rfRatio: "of the preset's RF power",
+};
+
+/** What is to spare of each limit: `0.7 s of a hold`. */
+export function spareInWords({ spare, verdict }: Way): string {
+  const parts = (Object.keys(limitWords) as LimitKey[]).flatMap((key) => {
+    const value = spare[key];
+    if (value === null) return [];
+    const amount = Math.abs(value);
+    return [
+      key === 'holdS' || key === 'timeS'
+        ? `${sayTime(amount)} of ${limitWords[key]}`
+        : key === 'rfRatio'
+          ? `${Math.round(amount * 100)} % ${limitWords[key]}`
+          : `${amount.toFixed(2)} ${limitWords[key]}`,
+    ];
+  });
+  if (parts.length === 0) return verdict;
+  return verdict === 'OVER' ? `OVER` : `${verdict}, to spare: ${parts.join(', ')}`;
+}

@@ -1,0 +1,29 @@
+import { resolveParameters } from '../calc/resolve.js';
+import { type Groups, groupsOf } from './groups.js';
+import { Join } from './join.js';
+import { LineTable } from './line-states.js';
+import type { SearchSetting } from './setting.js';
+import { SignalTable } from './signal-states.js';
+
+/** Tables that all parts of a search share. */
+export interface SearchTables {
+  readonly setting: SearchSetting;
+  readonly groups: Groups;
+  readonly lines: LineTable;
+  readonly signals: SignalTable;
+  readonly join: Join;
+}
+
+/** Forms the tables of a setting. */
+export function tablesOf(setting: SearchSetting): SearchTables {
+  const { problem, baseline } = setting;
+  const groups = groupsOf(setting);
+  const start = resolveParameters(baseline, problem.set, problem.scanner).parameters;
+  return {
+    setting,
+    groups,
+    lines: new LineTable(setting, groups, start),
+    signals: new SignalTable(setting, groups),
+    join: new Join(setting),
+  };
+}

@@ -1,4 +1,4 @@
-import { resultNow } from '../session/results.js';
+import { sessionCautions } from '../session/session-cautions.js';
 import type { State } from '../session/state.js';
 import { fitText } from '../terminal/text-width.js';
 import { fill, type Line, line, span, windowOf } from './line.js';
@@ -7,7 +7,7 @@ import type { Look } from './look.js';
 /** The cautions of a series, worst first, one line each. */
 export function cautionPane(state: State, { glyphs }: Look, columns: number, rows: number): Line[] {
   const { seriesId, pane, caution } = state.place;
-  const { cautions } = resultNow(state, seriesId);
+  const cautions = sessionCautions(state, seriesId);
   if (cautions.length === 0) return fill([line('No cautions', 'quiet')], rows);
   const focused = pane === 'cautions';
   const chosen = Math.min(caution, cautions.length - 1);

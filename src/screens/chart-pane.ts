@@ -1,6 +1,6 @@
 import type { FigureKey } from '../calc/figures.js';
 import { axisLabel, type RangeChart } from '../session/chart.js';
-import { valueWords } from '../session/next-step.js';
+import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
 import { chartDotBit, chartDots } from '../terminal/chart-dots.js';
 import { fitText } from '../terminal/text-width.js';
@@ -43,14 +43,14 @@ export function chartPane(chart: RangeChart, look: Look, columns: number, rows: 
         span(axisText(figures[1], second, row, height), 'second'),
       ],
     );
-  const from = valueWords(field, xs[0]);
-  const to = valueWords(field, xs.at(-1));
+  const from = sayField(field, xs[0]);
+  const to = sayField(field, xs.at(-1));
   const under = `${' '.repeat(axisColumns + 1)}${from}${to.padStart(Math.max(1, width - from.length))}`;
   const point = points[cursor];
   const read =
     point === undefined
       ? ''
-      : `${field.label} ${valueWords(field, point.value)}${cursor === now ? ' (as now)' : ''}: ${wordsOf(figures[0], point.figures[figures[0]])}, ${wordsOf(figures[1], point.figures[figures[1]])}${point.over ? '  OVER' : ''}`;
+      : `${field.label} ${sayField(field, point.value)}${cursor === now ? ' (as now)' : ''}: ${wordsOf(figures[0], point.figures[figures[0]])}, ${wordsOf(figures[1], point.figures[figures[1]])}${point.over ? '  OVER' : ''}`;
   return [
     head,
     ...body,
@@ -79,7 +79,8 @@ function scaleOf({ points, figures, limits }: RangeChart, which: 0 | 1): Scale {
   const near = limit !== null && limit > low - span && limit < high + span;
   const [bottom, top] = near ? [Math.min(low, limit), Math.max(high, limit)] : [low, high];
   const air = Math.max((top - bottom) * 0.05, Math.abs(top) * 0.005, 1e-9);
-  return { low: bottom - air, high: top + air };
+  // Figures are never below zero: neither is their axis.
+  return { low: bottom >= 0 ? Math.max(0, bottom - air) : bottom - air, high: top + air };
 }
 
 function heightOf(value: number, { low, high }: Scale, dots: number): number {
@@ -118,7 +119,7 @@ function curve(plot: Plot, { points, figures }: RangeChart, which: 0 | 1, scale:
     const length = Math.max(Math.abs(x - start.x), Math.abs(y - start.y), 1);
     for (let i = 0; i <= length; i += 1) {
       const [px, py] = [Math.round(start.x + ((x - start.x) * i) / length), Math.round(start.y + ((y - start.y) * i) / length)];
-      if (which === 0 || (px + py) % 3 === 0) plot.dot(px, py, which);
+      if (which === 0 || (px + py) % 4 < 2) plot.dot(px, py, which);
     }
     before = { x, y };
   });

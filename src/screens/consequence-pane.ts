@@ -1,7 +1,8 @@
 import { consequences, figureLabel, scaleFigures } from '../session/consequences.js';
 import { fieldHere } from '../session/hands/series-commands.js';
-import { movedFigures, nextStep, type StepPreview, valueWords } from '../session/next-step.js';
+import { movedFigures, nextStep, type StepPreview } from '../session/next-step.js';
 import { resultNow } from '../session/results.js';
+import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayVerdict } from '../session/say-verdict.js';
 import type { State } from '../session/state.js';
@@ -64,7 +65,8 @@ export function nextStepPane(state: State, look: Look, columns: number, rows: nu
   if (next.down === null && next.up === null)
     return [head, line(field.kind === 'numbers' || field.kind === 'number' ? 'Enter or a digit begins typing' : 'Enter turns it', 'quiet')];
   const now = resultNow(state, seriesId).evaluation.figures;
-  const moved = scaleFigures.filter((key) =>
+  const shownKeys = rows < 14 ? scaleFigures.filter((key) => key !== 'tableTimeS' && key !== 'voxelVolumeMm3') : scaleFigures;
+  const moved = shownKeys.filter((key) =>
     [next.down, next.up].some((step) => step !== null && movedFigures(now, step.result.evaluation.figures, [key]).length > 0),
   );
   const verdicts = [next.down, next.up].map((step) => (step === null ? '' : verdictWords(state, step)));
@@ -83,7 +85,7 @@ export function nextStepPane(state: State, look: Look, columns: number, rows: nu
 }
 
 function headOf(sign: string, field: ReturnType<typeof fieldHere>, step: StepPreview | null): string {
-  return step === null ? `${sign} -` : `${sign} ${valueWords(field, step.value)}`;
+  return step === null ? `${sign} -` : `${sign} ${sayField(field, step.value)}`;
 }
 
 function figureOf(step: StepPreview | null, key: (typeof scaleFigures)[number]): string {

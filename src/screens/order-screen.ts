@@ -10,6 +10,7 @@ import { seriesVerdicts } from '../session/verdicts.js';
 import { fitText } from '../terminal/text-width.js';
 import { blank, fill, type Line, line, span, windowOf } from './line.js';
 import type { Look } from './look.js';
+import { timeLine } from './time-line.js';
 
 const stateWords: Readonly<Record<SeriesState, string>> = {
   'to-do': 'to do',
@@ -102,6 +103,8 @@ function footLines(state: State, order: Timeline, look: Look, columns: number): 
   const about =
     here === undefined ? blank : line(fitText(`${here.id}: ${studySeries(state, here.id).title}`, columns, look.glyphs.ellipsis));
   return [
+    blank,
+    ...timeLine(state, look, columns),
     blank,
     about,
     ...(minimum.length === 0 ? [] : [line(`Minimum set${complete ? ', complete' : ''}:  ${items}`, complete ? 'bold' : 'plain')]),

@@ -2,6 +2,7 @@ import type { ParameterGroup } from '../calc/parameters.js';
 import type { Parameters } from '../calc/series.js';
 import { fieldHere, fieldsHere } from '../session/hands/series-commands.js';
 import { resultNow, studySeries } from '../session/results.js';
+import { isEighths, sayFieldNumber, sayFieldWords } from '../session/say-field.js';
 import { fieldValue, type SeriesField } from '../session/series-fields.js';
 import { isLocked } from '../session/set-field.js';
 import type { State } from '../session/state.js';
@@ -82,10 +83,10 @@ function fieldLine(
   const entry = here && state.entry !== null && state.place.screen === 'series';
   const pointer = here ? glyphs.pointer : ' ';
   const style = here && state.place.pane === 'main' ? 'inverse' : changed ? 'bold' : 'plain';
-  const words = wordsOf(field, value);
+  const words = sayFieldWords(field, value);
   const room = beforePoint + fromPoint + 1 + unitColumns;
   if (words !== null) {
-    const was = locked ? 'locked' : changed ? (wordsOf(field, before) ?? '') : '';
+    const was = locked ? 'locked' : changed ? (sayFieldWords(field, before) ?? '') : '';
     const both = presetColumns + 1 + room;
     // Words take the room of both columns; the preset's stands before them where it fits.
     const text = was !== '' && was.length + words.length + 4 <= both ? `${was} to ${words}` : words;
@@ -108,40 +109,8 @@ function cursorSpan(text: string, style: 'inverse' | 'bold' | 'plain', here: boo
   return here ? { text, style, cursor: true } : span(text, style);
 }
 
-/** Eighths are written as the trade writes partial Fourier. */
-function isEighths(field: SeriesField, value: unknown): boolean {
-  return (
-    (field.key === 'partialFourierPhase' || field.key === 'partialFourierSlice') &&
-    typeof value === 'number' &&
-    value < 1 &&
-    Number.isInteger(value * 8)
-  );
-}
-
 function numberOf(field: SeriesField, value: unknown): string {
-  if (typeof value !== 'number') return '-';
-  if (isEighths(field, value)) return `${value * 8}/8`;
-  const digits = field.inner === null ? field.digits : 0;
-  const exact = Number(value.toFixed(Math.max(2, digits)));
-  if (exact >= 1000 && field.unit === 'ms') return String(Number(exact.toFixed(1)));
-  // No more digits than are needed for a whole number, but at least those that the trade writes.
-  const least = field.unit === 'mm' ? Math.min(digits, 1) : field.unit === 'ms' && exact < 100 ? Math.min(digits, 2) : 0;
-  const text = exact.toFixed(Math.min(2, Math.max(least, decimalsOf(exact))));
-  return text;
-}
-
-function decimalsOf(value: number): number {
-  const text = String(Number(value.toFixed(2)));
-  const point = text.indexOf('.');
-  return point === -1 ? 0 : text.length - point - 1;
-}
-
-/** A value that is words: a choice, yes or no, a list. */
-function wordsOf(field: SeriesField, value: unknown): string | null {
-  if (field.kind === 'number') return value === undefined ? '-' : null;
-  if (field.kind === 'flag') return value === true ? 'yes' : 'no';
-  if (Array.isArray(value)) return value.join(', ');
-  return value === undefined ? '-' : String(value).replaceAll('-', ' ');
+  return typeof value === 'number' ? sayFieldNumber(field, value) : '-';
 }
 
 /** What the parameter under the hand is, its range and its steps: one line. */

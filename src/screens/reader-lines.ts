@@ -5,11 +5,13 @@ import { formRow, formRows } from '../session/hands/form-commands.js';
 import { orderRow } from '../session/hands/order-commands.js';
 import { fieldHere, fieldsHere } from '../session/hands/series-commands.js';
 import { startRow } from '../session/hands/start-commands.js';
-import { nextStep, valueWords } from '../session/next-step.js';
+import { nextStep } from '../session/next-step.js';
 import { resultNow, studySeries } from '../session/results.js';
+import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayTime } from '../session/say-time.js';
 import { fieldValue } from '../session/series-fields.js';
+import { sessionCautions } from '../session/session-cautions.js';
 import { startRows } from '../session/start-list.js';
 import type { State } from '../session/state.js';
 import { minimumSet, timeline } from '../session/timeline.js';
@@ -116,6 +118,7 @@ function seriesItems(state: State): Item[] {
   const { seriesId, pane, figure, caution } = state.place;
   const now = resultNow(state, seriesId);
   const planned = studySeries(state, seriesId).parameters;
+  const cautions = sessionCautions(state, seriesId);
   const field = fieldHere(state);
   const next = nextStep(state, seriesId, field);
   const steps = [next.down, next.up].flatMap((step) =>
@@ -123,7 +126,7 @@ function seriesItems(state: State): Item[] {
       ? []
       : [
           {
-            words: `Step to ${valueWords(field, step.value)}: ${
+            words: `Step to ${sayField(field, step.value)}: ${
               consequences(state, seriesId)
                 .filter(({ key }) => sayFigure(key, step.result.evaluation.figures[key]) !== sayFigure(key, now.evaluation.figures[key]))
                 .map(({ key }) => `${figureTable[key].label} ${sayFigure(key, step.result.evaluation.figures[key])}`)
@@ -133,7 +136,7 @@ function seriesItems(state: State): Item[] {
         ],
   );
   return [
-    { words: `Here: ${field.label} ${valueWords(field, fieldValue(field, now.parameters))}`, here: pane === 'main' },
+    { words: `Here: ${field.label} ${sayField(field, fieldValue(field, now.parameters))}`, here: pane === 'main' },
     ...steps,
     ...next.sentences.map((words) => ({ words })),
     { words: 'Consequences against the preset:' },
@@ -141,14 +144,14 @@ function seriesItems(state: State): Item[] {
       words: `${figureTable[row.key].label} ${row.value}${row.change === '' ? '' : `, ${row.change}`}${row.over ? ', OVER its limit' : ''}${row.fromReading ? ', from the scanner reading' : ''}`,
       here: pane === 'consequences' && (figure === row.key || (figure === null && at === 0)),
     })),
-    { words: `Cautions: ${now.cautions.length === 0 ? 'none' : ''}` },
-    ...now.cautions.map(({ level, text }, at) => ({
+    { words: `Cautions: ${cautions.length === 0 ? 'none' : ''}` },
+    ...cautions.map(({ level, text }, at) => ({
       words: `${level}: ${text}`,
-      here: pane === 'cautions' && at === Math.min(caution, now.cautions.length - 1),
+      here: pane === 'cautions' && at === Math.min(caution, cautions.length - 1),
     })),
     { words: 'Parameters:' },
     ...fieldsHere(state).map((each) => {
-      const [is, was] = [valueWords(each, fieldValue(each, now.parameters)), valueWords(each, fieldValue(each, planned))];
+      const [is, was] = [sayField(each, fieldValue(each, now.parameters)), sayField(each, fieldValue(each, planned))];
       return { words: `${each.label}: ${is}${is === was ? '' : `, preset ${was}`}` };
     }),
   ];
@@ -159,7 +162,7 @@ function chartItems(state: State): Item[] {
   if (chart === null) return [{ words: 'No range of numbers here' }];
   const { points, cursor, now, field, figures } = chart;
   return points.map((point, at) => ({
-    words: `${field.label} ${valueWords(field, point.value)}${at === now ? ', as now' : ''}: ${figures.map((key) => `${figureTable[key].label} ${sayFigure(key, point.figures[key])}`).join(', ')}${point.over ? ', OVER' : ''}`,
+    words: `${field.label} ${sayField(field, point.value)}${at === now ? ', as now' : ''}: ${figures.map((key) => `${figureTable[key].label} ${sayFigure(key, point.figures[key])}`).join(', ')}${point.over ? ', OVER' : ''}`,
     here: at === cursor,
   }));
 }

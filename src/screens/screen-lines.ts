@@ -3,7 +3,7 @@ import { chartScreen } from './chart-screen.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { patientScreen, readingsScreen, recordScreen } from './form-screen.js';
 import { idleWords } from './idle-words.js';
-import { fill, type Line, line } from './line.js';
+import { fill, fitLine, type Line, line, lineWidth } from './line.js';
 import type { Look } from './look.js';
 import { orderScreen } from './order-screen.js';
 import { readerLines } from './reader-lines.js';
@@ -41,7 +41,9 @@ export function screenLines(state: State, look: Look): Line[] {
   return [
     headlineLine(state, look, columns),
     titleLine(state, look, columns),
-    ...fill(bodies[state.place.screen](state, look, columns, bodyRows), bodyRows),
+    ...fill(bodies[state.place.screen](state, look, columns, bodyRows), bodyRows).map((each) =>
+      lineWidth(each) > columns ? fitLine(each, columns, look.glyphs.ellipsis) : each,
+    ),
     noticeLine(state, look, columns, line(idleWords(state), 'quiet')),
     keyLine(state, look, columns),
   ];

@@ -5,33 +5,38 @@ import type { State } from '../session/state.js';
 import { cautionPane } from './caution-pane.js';
 import { chartPane } from './chart-pane.js';
 import { consequencePane, nextStepPane } from './consequence-pane.js';
-import { beside, blank, fill, type Line } from './line.js';
+import { beside, blank, fill, type Line, line } from './line.js';
 import type { Look } from './look.js';
 import { parameterPane } from './parameter-pane.js';
+import { typeTheseScreen } from './text-screen.js';
 
-/** One series is adjusted: parameters, consequences, the next step, cautions; wide screens show the range chart too. */
+/** One series is adjusted: parameters, consequences, the next step, cautions; wide screens show the range chart and what to type too. */
 export function seriesScreen(state: State, look: Look, columns: number, rows: number): Line[] {
-  const wide = columns >= 150 && rows >= 40;
+  const wide = columns >= 150 && rows >= 36;
   const roomy = columns >= 98;
-  const cautionRows = wide ? 8 : rows >= 26 ? 5 : 3;
+  const cautionRows = wide ? 0 : rows >= 26 ? 5 : 3;
   const upper = rows - cautionRows;
   const leftColumns = roomy ? 47 : 39;
-  const left = parameterPane(state, look, { columns: leftColumns, labelColumns: roomy ? 23 : 16, headings: rows >= 40 }, upper);
+  const rule = look.glyphs.verticalRule;
+  const { ellipsis } = look.glyphs;
+  const left = parameterPane(state, look, { columns: leftColumns, labelColumns: roomy ? 23 : 16, headings: rows >= 36 }, upper);
   const middleColumns = wide ? 54 : columns - leftColumns - 1;
   const scaleRows = Math.min(consequences(state, state.place.seriesId).length + 1, wide ? 18 : roomy ? 12 : 9);
   const middle = [...consequencePane(state, look, middleColumns, scaleRows), ...(upper - scaleRows > 8 ? [blank] : [])];
-  const below = nextStepPane(state, look, middleColumns, upper - middle.length);
-  const two = beside(left, [...middle, ...below], leftColumns, look.glyphs.verticalRule, look.glyphs.ellipsis);
-  const body = wide
-    ? beside(
-        two,
-        sideChart(state, look, columns - leftColumns - middleColumns - 2, upper),
-        leftColumns + 1 + middleColumns,
-        look.glyphs.verticalRule,
-        look.glyphs.ellipsis,
-      )
-    : two;
-  return [...fill(body, upper), ...cautionPane(state, look, columns, cautionRows)];
+  const stepRows = wide ? 14 : upper - middle.length;
+  const below = fill(nextStepPane(state, look, middleColumns, stepRows), stepRows);
+  const typed = wide ? [blank, ...typeTheseScreen(state, look, middleColumns - 1, upper - middle.length - stepRows - 1)] : [];
+  const two = beside(left, [...middle, ...below, ...typed], leftColumns, rule, ellipsis);
+  if (!wide) return [...fill(two, upper), ...cautionPane(state, look, columns, cautionRows)];
+  const rightColumns = columns - leftColumns - middleColumns - 2;
+  const chartRows = Math.min(upper - 12, 24);
+  const right = [
+    ...fill(sideChart(state, look, rightColumns, chartRows), chartRows),
+    blank,
+    line('Cautions, worst first', 'quiet'),
+    ...cautionPane(state, look, rightColumns, upper - chartRows - 2),
+  ];
+  return fill(beside(two, right, leftColumns + 1 + middleColumns, rule, ellipsis), rows);
 }
 
 /** The range chart of the parameter under the hand, beside the rest. */
@@ -39,5 +44,5 @@ function sideChart(state: State, look: Look, columns: number, rows: number): Lin
   const field = fieldHere(state);
   const figures = state.place.chart?.figures ?? usualFigures(state, state.place.seriesId);
   const chart = rangeChart({ ...state, place: { ...state.place, chart: { path: field.path, figures, position: 0 } } });
-  return chart === null ? [] : chartPane(chart, look, columns, Math.min(rows, 24));
+  return chart === null ? [line('No range of numbers to chart here', 'quiet')] : chartPane(chart, look, columns, rows);
 }

@@ -13,8 +13,8 @@ export interface FormRow {
   /** What stands there now; a dash where nothing does. */
   readonly shown: string;
   readonly help: string;
-  /** `number`: digits begin typing. `text`: Enter does, and every letter goes in. `info`: nothing can be done here. */
-  readonly kind: 'number' | 'text' | 'choice' | 'flag' | 'action' | 'info' | 'heading';
+  /** `number`: digits begin typing. `text`: Enter does, and every letter goes in. `info`: nothing can be done here. `note`: the hand passes over it. */
+  readonly kind: 'number' | 'text' | 'choice' | 'flag' | 'action' | 'info' | 'note' | 'heading';
   readonly write?: (state: State, text: string) => Written;
   /** Left and right, minus and plus. */
   readonly turn?: (session: Session, direction: -1 | 1) => Session;
@@ -38,6 +38,8 @@ export interface NumberRow {
   /** Where stepping up begins when nothing is there. */
   readonly first: number;
   readonly keep: (session: Session, value: number | null) => Session;
+  /** A word that may be typed after the number and means nothing more. */
+  readonly also?: RegExp;
 }
 
 /** A line with a number. */
@@ -53,7 +55,7 @@ export function numberRow(row: NumberRow): FormRow {
     write: (state, text) => {
       const { session } = state;
       if (session === null) return { problem: 'no session' };
-      const read = readQuantity(text, unit);
+      const read = readQuantity(row.also === undefined ? text : text.replace(row.also, ''), unit);
       if (!read.ok) return { problem: `${row.label}: "${freeText(text, 30)}" was given, expected ${read.expected}, ${range}` };
       const value = row.whole ? Math.round(read.value) : read.value;
       if (value < min || value > max) return { problem: `${row.label}: ${freeText(text, 30)} was given, expected ${range}` };

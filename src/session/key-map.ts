@@ -16,7 +16,18 @@ import {
 } from './hands/order-commands.js';
 import { practice } from './hands/patient-commands.js';
 import { saveAsPreset, savePage, saveRecord, turnRecordPane } from './hands/record-commands.js';
-import { backToPreset, enterField, jump, moveInSeries, openLock, step, turnPane, typeField, why } from './hands/series-commands.js';
+import {
+  backToPreset,
+  enterField,
+  jump,
+  moveInSeries,
+  openLock,
+  openReadings,
+  step,
+  turnPane,
+  typeField,
+  why,
+} from './hands/series-commands.js';
 import { choose, clearOrLeave, moveInList, narrow, widen } from './hands/start-commands.js';
 import { scrollText } from './hands/text-commands.js';
 import type { KeyPress } from './message.js';
@@ -54,14 +65,19 @@ const row = (
   ...(when === undefined ? {} : { when }),
 });
 
+const canGoTo =
+  (screen: ScreenName) =>
+  ({ place, session }: State) =>
+    session !== null && place.screen !== screen;
+
 /** Keys of every screen but the first. */
 const everywhere: readonly KeyRow[] = [
   row(['h', '?'], 'h', 'help', 'Help for this screen.', show('help')),
   row('u', 'u', 'undo', 'Takes back the last step, of whatever screen.', undo, ({ past }) => past.length > 0),
   row('r', 'r', 'redo', 'Does again what was taken back.', redo, ({ future }) => future.length > 0),
-  row('p', 'p', 'patient', 'This patient: breath-hold, time, RF caps, body.', show('patient'), ({ place }) => place.screen !== 'patient'),
-  row('o', 'o', 'order', 'The running order.', show('order'), ({ place }) => place.screen !== 'order'),
-  row('e', 'e', 'end', 'The end: the record of the session.', show('record'), ({ place }) => place.screen !== 'record'),
+  row('p', 'p', 'patient', 'This patient: breath-hold, time, RF caps, body.', show('patient'), canGoTo('patient')),
+  row('o', 'o', 'order', 'The running order.', show('order'), canGoTo('order')),
+  row('e', 'e', 'end', 'The end: the record of the session.', show('record'), canGoTo('record')),
   row('g', 'g', '', 'Contrast is given: starts its clock, from every screen.', contrastGiven),
   row('q', 'q', 'quit', 'Leaves; the session is kept and offered at the next start.', quit),
   row('escape', 'Esc', 'back', 'One screen back. Nothing is lost.', back, ({ place }) => place.back.length > 0),
@@ -92,7 +108,7 @@ const series: readonly KeyRow[] = [
   row('j', 'j', 'jump', 'Jumps to the next value at which the time changes.', jump, inMain),
   row('t', 't', 'scanner', 'The changed values, to type on the scanner.', show('type-these')),
   row('b', 'b', '', 'This parameter back to the preset.', backToPreset, inMain),
-  row('d', 'd', '', 'What the scanner displays: time, B1+rms, SAR.', show('readings')),
+  row('d', 'd', '', 'What the scanner displays: time, B1+rms, SAR.', openReadings),
   row('l', 'l', '', 'Opens a parameter that the preset locks, or locks it again.', openLock, inMain),
   row('n', 'n', 'next', 'The next series of the running order.', turnSeries(1)),
 ];

@@ -1,7 +1,7 @@
 import type { FigureKey, Figures } from '../calc/figures.js';
 import type { GivenParameters } from '../calc/series.js';
-import { parameterWords } from '../study/record-changes.js';
 import { resultNow, resultWith, sessionSeries, studySeries } from './results.js';
+import { sayField } from './say-field.js';
 import { sayFigure } from './say-figure.js';
 import { fieldValue, type SeriesField, withField } from './series-fields.js';
 import type { SeriesResult } from './series-result.js';
@@ -61,7 +61,7 @@ export function nextStep(state: State, id: string, field: SeriesField): NextStep
     else {
       jump = shown.value;
       sentences.push(
-        `no change in time${sayTrains(now)}; next change at ${trimmed(shown.value)} (j): ${sayFigure('scanTimeS', timeOf(shown.result))}`,
+        `no change in time${sayTrains(now)}; next change at ${sayField(field, shown.value)} (j): ${sayFigure('scanTimeS', timeOf(shown.result))}`,
       );
     }
   }
@@ -75,8 +75,6 @@ function sayTrains({ evaluation: { figures } }: SeriesResult): string {
   return figures.shots === null ? '' : `, ${figures.shots} shots either way`;
 }
 
-const trimmed = (value: number) => String(Number(value.toFixed(3)));
-
 /** A split that a step forces or spares. */
 function sayRounds(now: SeriesResult, step: StepPreview, field: SeriesField): string[] {
   const before = now.parameters.rounds;
@@ -85,17 +83,8 @@ function sayRounds(now: SeriesResult, step: StepPreview, field: SeriesField): st
   const { slicesPerRepetition, scanTimeS } = step.result.evaluation.figures;
   const fits = slicesPerRepetition === null ? '' : `only ${slicesPerRepetition} of ${step.result.parameters.sliceCount} slices fit, `;
   const times = `${sayFigure('scanTimeS', timeOf(now))} becomes ${sayFigure('scanTimeS', scanTimeS)}`;
-  const words = valueWords(field, step.value);
+  const words = sayField(field, step.value);
   return [after > before ? `${words}: ${fits}split into ${after}, ${times}` : `${words}: split into ${after} is enough, ${times}`];
-}
-
-/** A value of a field in words, unit and all. */
-export function valueWords(field: SeriesField, value: unknown): string {
-  if (field.inner === null) return parameterWords(field.key, value);
-  if (value === undefined || value === null) return 'none';
-  if (Array.isArray(value)) return value.join(', ');
-  if (typeof value === 'boolean') return value ? 'yes' : 'no';
-  return field.unit === '' ? String(value) : `${String(value)} ${field.unit}`;
 }
 
 function plateauEnd(

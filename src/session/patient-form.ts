@@ -59,6 +59,7 @@ export function patientForm(state: State): readonly FormRow[] {
     number('minutesLeft', {
       label: 'time left',
       unit: '',
+      also: /\s*min(utes)?\s*$/i,
       min: 1,
       max: 600,
       step: 1,
@@ -157,7 +158,7 @@ function practiceRow(state: State): FormRow {
     label: 'practice hold',
     shown,
     help: 'Ask for the breath, press s; press s again when it is let go.',
-    kind: 'info',
+    kind: 'note',
   };
 }
 

@@ -3,11 +3,11 @@ import type { ParameterKey } from '../calc/parameters.js';
 import type { GivenParameters, Parameters } from '../calc/series.js';
 import { classOf } from '../calc/series.js';
 import { parameterClashes } from '../study/parameter-checks.js';
-import { parameterWords } from '../study/record-changes.js';
 import type { StudySeries } from '../study/study.js';
 import { carriedKeys } from './carried-keys.js';
 import { edit, say } from './change.js';
 import { resultNow, resultWith, sessionSeries, studySeries } from './results.js';
+import { sayField } from './say-field.js';
 import { fieldValue, type SeriesField, withField } from './series-fields.js';
 import type { Session, SessionSeries } from './session.js';
 import type { State } from './state.js';
@@ -35,8 +35,8 @@ export function setField(state: State, id: string, field: SeriesField, value: un
   const pairs = pairedSeries(state, id).filter(
     (other) => classRow(classOf(other)).parameters.includes(field.key) && !isLocked(state, other.id, field.key),
   );
-  const from = valueText(field, fieldValue(field, before));
-  const to = valueText(field, value);
+  const from = sayField(field, fieldValue(field, before));
+  const to = sayField(field, value);
   if (from === to && JSON.stringify(fieldValue(field, before)) === JSON.stringify(value))
     return say(state, `${field.label} is ${to} already`);
   const words = `${field.label} ${from} to ${to}${pairs.length === 0 ? '' : `, also in ${pairs.map((pair) => pair.id).join(', ')}`}`;
@@ -77,10 +77,4 @@ function withMatchingAverages(given: Readonly<Record<string, unknown>>, before: 
   if (diffusion.averages.length === count || diffusion.averages !== before.diffusion.averages) return given as GivenParameters;
   const averages = Array.from({ length: count }, (_, i) => diffusion.averages[i] ?? diffusion.averages.at(-1) ?? 1);
   return { ...given, diffusion: { ...diffusion, averages } } as GivenParameters;
-}
-
-function valueText(field: SeriesField, value: unknown): string {
-  if (field.inner === null) return parameterWords(field.key, value);
-  if (value === undefined) return 'none';
-  return `${Array.isArray(value) ? value.join('/') : String(value)}${field.unit === '' ? '' : ` ${field.unit}`}`;
 }

@@ -122,14 +122,16 @@ export function seriesHeadline(state: State, id: string): Headline {
   const missing = missingReadings(state, sessionSeries(state, id));
   const worst = judged[0];
   const bad = judged.filter(({ verdict }) => verdict.word !== 'FITS').length;
-  const more = bad > 1 ? ` (and ${bad - 1} more)` : '';
+  const crossed = resultNow(state, id).mustKeeps.filter(({ status }) => status === 'crossed').length;
+  const broken = crossed === 0 ? '' : `; ${crossed} must-keep${crossed > 1 ? 's' : ''} crossed`;
+  const more = `${bad > 1 ? ` (and ${bad - 1} more)` : ''}${broken}`;
   const unjudged = missing.length === 0 ? '' : `${missing[0]} not judged: type the scanner's number (d)`;
   if (worst !== undefined && (worst.verdict.word === 'OVER' || unjudged === ''))
     return { word: worst.verdict.word, text: `${sayJudged(worst)}${more}` };
   if (unjudged !== '') return { word: null, text: `NOT JUDGED: ${unjudged}` };
   const { figures } = resultNow(state, id).evaluation;
   const takes = figures.holdTimeS === null ? `scan time ${sayTime(figures.scanTimeS ?? 0)}` : `breath-hold ${sayTime(figures.holdTimeS)}`;
-  return { word: null, text: `NO LIMIT SET: ${takes}; p says what this patient can do` };
+  return { word: null, text: `NO LIMIT SET: ${takes}${broken === '' ? '; p says what this patient can do' : broken}` };
 }
 
 /** The headline of the whole session: the worst of the clock and of every series still to do. */

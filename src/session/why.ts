@@ -6,11 +6,13 @@ import { changedKeys } from './changed-keys.js';
 import { consequences } from './consequences.js';
 import { figureReasons } from './figure-reasons.js';
 import { fieldHere } from './hands/series-commands.js';
-import { nextStep, valueWords } from './next-step.js';
+import { nextStep } from './next-step.js';
 import { resultNow, resultOfPreset, studySeries } from './results.js';
+import { sayField } from './say-field.js';
 import { sayFigure } from './say-figure.js';
 import { sayParameter } from './say-parameter.js';
 import { fieldValue } from './series-fields.js';
+import { sessionCautions } from './session-cautions.js';
 import { isLocked } from './set-field.js';
 import type { State } from './state.js';
 import type { Paragraph } from './type-these.js';
@@ -74,7 +76,7 @@ function signalWords(state: State, both: boolean): Paragraph[] {
 
 function whyCaution(state: State): readonly Paragraph[] {
   const { seriesId, caution } = state.place;
-  const { cautions } = resultNow(state, seriesId);
+  const cautions = sessionCautions(state, seriesId);
   const row = cautions[Math.min(caution, cautions.length - 1)];
   if (row === undefined) return [{ words: 'No cautions for this series.' }];
   const numbers = Object.entries(row.numbers).map(([name, value]) => `${name} ${Number(value.toPrecision(4))}`);
@@ -109,7 +111,7 @@ function whyParameter(state: State): readonly Paragraph[] {
   const empty = classRow(classOf(series)).figures.filter((key) => figures[key] === null && figureNeeds[key] !== undefined);
   return [
     {
-      words: `${field.label}: ${valueWords(field, value)}${valueWords(field, planned) === valueWords(field, value) ? ', as in the preset' : ` (preset ${valueWords(field, planned)})`}`,
+      words: `${field.label}: ${sayField(field, value)}${sayField(field, planned) === sayField(field, value) ? ', as in the preset' : ` (preset ${sayField(field, planned)})`}`,
       style: 'bold',
     },
     { words: '' },

@@ -35,6 +35,7 @@ function kept(session: NonNullable<State['session']>, state: State): NonNullable
 
 /** Contrast is given now: one key from every screen. */
 export const contrastGiven: Command = (state) => {
+  if (state.session === null) return only(state);
   if (state.session?.contrastAtMs != null)
     return only(say(state, 'Contrast was given already; this patient (p) can take it back', 'trouble'));
   return only(edit(state, 'Contrast given: nothing may ask to repeat what came before', (session) => withContrast(session, state.nowMs)));

@@ -3,7 +3,7 @@ import type { Change } from '../change.js';
 import { only, say } from '../change.js';
 import type { KeyPress } from '../message.js';
 import { resultNow } from '../results.js';
-import { sayParameter } from '../say-parameter.js';
+import { sayField } from '../say-field.js';
 import { fieldValue, type SeriesField, withField } from '../series-fields.js';
 import { setField } from '../set-field.js';
 import type { Entry, State } from '../state.js';
@@ -78,6 +78,6 @@ function takeTyped(state: State, field: SeriesField, values: Readonly<Record<str
   const next = setField({ ...state, entry: null }, state.place.seriesId, field, value);
   if (typeof typed !== 'number' || typeof value !== 'number' || Math.abs(typed - value) < 1e-9 || next.notice?.level === 'trouble')
     return next;
-  const shown = field.inner === null ? sayParameter(field.key, value) : String(value);
+  const shown = sayField(field, value);
   return say(next, `${next.notice?.words ?? ''} (${Number(typed.toPrecision(6))} is taken as ${shown}: the nearest that is accepted)`);
 }

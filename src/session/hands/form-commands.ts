@@ -14,7 +14,7 @@ export function formRows(state: State): readonly FormRow[] {
   return [];
 }
 
-const canStand = ({ kind }: FormRow) => kind !== 'heading';
+const canStand = ({ kind }: FormRow) => kind !== 'heading' && kind !== 'note';
 
 /** The line that the hand is on. */
 export function formRow(state: State): FormRow | undefined {

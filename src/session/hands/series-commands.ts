@@ -3,6 +3,7 @@ import { consequences } from '../consequences.js';
 import { nextStep } from '../next-step.js';
 import { resultNow, studySeries } from '../results.js';
 import { fieldValue, type SeriesField, seriesFields } from '../series-fields.js';
+import { sessionCautions } from '../session-cautions.js';
 import { eachSeries, isLocked, setField, unsetField } from '../set-field.js';
 import { panes, type State } from '../state.js';
 import { stepValue } from '../step-value.js';
@@ -32,7 +33,7 @@ export const moveInSeries =
       const here = figure ?? rows[0]?.key;
       return only(move(quiet, { figure: neighbour(rows, ({ key }) => key === here, by)?.key ?? null }));
     }
-    const last = Math.max(0, resultNow(state, seriesId).cautions.length - 1);
+    const last = Math.max(0, sessionCautions(state, seriesId).length - 1);
     return only(move(quiet, { caution: Math.min(last, Math.max(0, caution + by)) }));
   };
 
@@ -116,3 +117,10 @@ export const jump: Command = (state) => {
 
 /** Explains what the hand is on. */
 export const why: Command = (state) => only(open(state, 'why'));
+
+/** Opens the scanner readings; a cap that waits for one has the hand on it. */
+export const openReadings: Command = (state) => {
+  const { b1rmsCapUt = null, sarCapWkg = null } = state.session?.limits ?? {};
+  const field = b1rmsCapUt !== null ? 'before b1rmsUt' : sarCapWkg !== null ? 'before sarWkg' : 'before timeS';
+  return only(pointAt(open(state, 'readings'), field));
+};

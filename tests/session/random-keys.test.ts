@@ -1,0 +1,109 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { headlineOf } from '../../src/screens/common-lines.js';
+import { lineText } from '../../src/screens/line.js';
+import { screenLines } from '../../src/screens/screen-lines.js';
+import { draftOf } from '../../src/session/draft.js';
+import type { Effect, Message } from '../../src/session/message.js';
+import type { State } from '../../src/session/state.js';
+import { draftNow, update } from '../../src/session/update.js';
+import { asciiGlyphs } from '../../src/terminal/glyphs.js';
+import { keyOf, startState } from './invented-state.js';
+
+const keys = [
+  ...['up', 'down', 'left', 'right', 'home', 'end', 'page-up', 'page-down', 'tab', 'shift-tab', 'enter', 'escape', 'backspace', 'delete'],
+  ...'abcdefghijklmnopqrstuvwxyz0123456789.-+=/*^()% ?:,'.split(''),
+  'paste',
+];
+
+const look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader: false } as const;
+
+/** A step of somebody at the keys, of the clock, of the window; by name, so that a failure can be read. */
+const step = fc.oneof(
+  { weight: 40, arbitrary: fc.constantFrom(...keys) },
+  { weight: 20, arbitrary: fc.constantFrom('down', '+', '-', 'down', 'up', 'enter', 'u', 'r') },
+  { weight: 2, arbitrary: fc.constantFrom('wait 500', 'wait 20000') },
+  { weight: 1, arbitrary: fc.constantFrom('size 80 24', 'size 160 50', 'size 60 15', 'size 100 30') },
+);
+
+function messageOf(name: string, { nowMs }: State): Message {
+  const [word, first, second] = name.length > 1 ? name.split(' ') : [name];
+  if (word === 'wait') return { kind: 'tick', atMs: nowMs + Number(first) };
+  if (word === 'size') return { kind: 'size', columns: Number(first), rows: Number(second) };
+  return { kind: 'key', key: name === 'paste' ? { name, text: '38 cm\n' } : keyOf(name), atMs: nowMs + 137 };
+}
+
+/** Answers what was asked, as the world might: well or badly. */
+function answerTo(effect: Effect, well: boolean): Message | null {
+  if (!('ask' in effect)) return null;
+  const { ask } = effect;
+  if (!well)
+    return {
+      kind: 'answer',
+      ask,
+      answer: { kind: 'failed', problems: [{ code: 'x', path: '', message: 'It failed.', hint: 'Try again.' }] },
+    };
+  if (effect.kind === 'read-expression') return { kind: 'answer', ask, answer: { kind: 'value', value: 12.345 } };
+  if (effect.kind === 'read-rules') return { kind: 'answer', ask, answer: { kind: 'rules', rules: new Map() } };
+  return { kind: 'answer', ask, answer: { kind: 'done', words: 'Saved' } };
+}
+
+/** What must hold of every state: the session can explain itself. */
+function explain(state: State): void {
+  const { session, opened } = state;
+  expect((session === null) === (opened === null)).toBe(true);
+  if (session !== null && opened !== null) {
+    expect(new Set(session.series.map(({ id }) => id))).toEqual(new Set(opened.study.series.map(({ id }) => id)));
+    expect(session.series.filter(({ run }) => run !== null).length).toBeLessThanOrEqual(1);
+    for (const series of session.series) expect((series.state === 'running') === (series.run !== null)).toBe(true);
+    expect(session.series.some(({ id }) => id === state.place.seriesId)).toBe(true);
+    const { limits } = session;
+    for (const limit of [limits.holdS, limits.minutesLeft, limits.longestSeriesS, limits.b1rmsCapUt, limits.sarCapWkg])
+      expect(limit === null || limit > 0).toBe(true);
+    expect((session.contrastAtMs !== null) === (limits.contrastGiven === true)).toBe(true);
+  } else expect(['start', 'help']).toContain(state.place.screen);
+  expect(state.place.back).not.toContain(state.place.screen);
+  expect(headlineOf(state).text.length).toBeGreaterThan(0);
+  expect(headlineOf(state).text).not.toMatch(/NaN|undefined|Infinity|null/);
+}
+
+describe('update under random keys', () => {
+  it('takes 100,000 keys without an exception and without a state the session cannot explain', () => {
+    let count = 0;
+    fc.assert(
+      fc.property(
+        fc.array(step, { minLength: 500, maxLength: 500 }),
+        fc.boolean(),
+        fc.constantFrom(['liver-3t'], ['lumbar-spine-1.5t'], ['brain-3t', 'heart-cine-3t']),
+        (messages, well, presets) => {
+          let state = startState(presets);
+          const send = (next: Message) => {
+            const [changed, effects] = update(state, next);
+            state = changed;
+            for (const effect of effects) {
+              const answer = answerTo(effect, well);
+              if (answer !== null) state = update(state, answer)[0];
+            }
+          };
+          send({ kind: 'key', key: keyOf('enter'), atMs: 1 });
+          for (const next of messages) {
+            send(messageOf(next, state));
+            count += 1;
+            explain(state);
+            if (count % 50 !== 0) continue;
+            const draft = draftNow(state);
+            if (draft !== null) expect(draftOf(JSON.parse(JSON.stringify(draft)))).not.toBeNull();
+            const lines = screenLines(state, look);
+            for (const each of lines) expect(lineText(each)).not.toMatch(/NaN|undefined|Infinity/);
+            if (state.size.columns >= 80 && state.size.rows >= 24) {
+              expect(lines).toHaveLength(state.size.rows);
+              for (const each of lines) expect(lineText(each).trimEnd().length, lineText(each)).toBeLessThanOrEqual(state.size.columns);
+            }
+          }
+        },
+      ),
+      { numRuns: 200, endOnFailure: true },
+    );
+    expect(count).toBeGreaterThanOrEqual(100_000);
+  });
+});

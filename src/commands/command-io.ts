@@ -14,6 +14,10 @@ export interface CommandIo {
   readonly canDraw: boolean;
   /** Marks text for the terminal, by the value of `--color` (undefined where it was not given). */
   readonly emphasis: (choice: string | undefined) => (kind: Emphasis, text: string) => string;
+  /** Says how far a long work is, on one line that is written anew; absent where nobody looks. Empty text clears it. */
+  readonly progress?: (text: string) => void;
+  /** Today as YYYY-MM-DD; the clock of this machine where it is absent. */
+  readonly today?: () => string;
   readonly disk: Disk;
   readonly homeFolder: string;
   readonly workingFolder: string;

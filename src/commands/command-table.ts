@@ -1,4 +1,5 @@
 import type { CommandRow, OptionRow } from './command-row.js';
+import { filterOptions } from './record-filter-options.js';
 
 /** Options that every command takes. */
 export const everywhere: readonly OptionRow[] = [
@@ -14,6 +15,13 @@ export const everywhere: readonly OptionRow[] = [
 export const bareOptions: readonly OptionRow[] = [
   ...everywhere,
   { name: 'version', value: null, help: 'version of the program and of its model' },
+];
+
+const jsonOption: OptionRow = { name: 'json', value: null, help: 'one JSON document on standard output, nothing else there' };
+const fieldOption: OptionRow = { name: 'field', value: 'T', help: 'exact field of the magnet, in tesla' };
+const recordDetails = [
+  'FILE is a record file, or a folder of them (one a scanner); several read as one. Without FILE: that of --records.',
+  'Damaged lines are named, counted and skipped.',
 ];
 
 /** The table of commands. */
@@ -89,10 +97,13 @@ export const commandTable: readonly CommandRow[] = [
   {
     words: ['presets', 'list'],
     summary: 'the presets that can be named',
-    details: ['Presets of the folder given by --presets come before those that ship with the program.'],
+    details: [
+      'Presets of the folder given by --presets come before those that ship with the program.',
+      'Of each the current revision is listed.',
+    ],
     arguments: [],
-    options: [],
-    examples: ['holdfast presets list'],
+    options: [{ name: 'revisions', value: null, help: 'every revision, with who released it, when and why' }],
+    examples: ['holdfast presets list', 'holdfast presets list --revisions'],
     load: async () => (await import('./presets-list.js')).runPresetsList,
   },
   {
@@ -107,11 +118,102 @@ export const commandTable: readonly CommandRow[] = [
   {
     words: ['presets', 'check'],
     summary: 'are these preset files right? Exit code 1 when one is not',
-    details: ['Without FILE all presets are checked: those of --presets and those that ship with the program.'],
+    details: [
+      'Checked are the form of the file and its rules; that the timing is possible and every figure has a value; in/opposed pairs and nulls at the exact field; that must-keeps are kept and name a source.',
+      'Without FILE all presets are checked: those of --presets and those that ship with the program.',
+    ],
     arguments: [{ name: 'FILE', required: false, repeats: true }],
-    options: [],
-    examples: ['holdfast presets check ./my-knee.json'],
+    options: [fieldOption, jsonOption],
+    examples: ['holdfast presets check ./my-knee.json', 'holdfast presets check liver-3t --field 2.89'],
     load: async () => (await import('./presets-check.js')).runPresetsCheck,
+  },
+  {
+    words: ['presets', 'diff'],
+    summary: 'two presets or revisions side by side: parameters, and what they do to the figures',
+    details: [
+      'A and B are ids, revisions (liver-3t@2) or paths. A alone is compared with the revision before it.',
+      'With --record, what that session planned is compared with what it used; A and B are then record files.',
+    ],
+    arguments: [
+      { name: 'A', required: false },
+      { name: 'B', required: false },
+    ],
+    options: [{ name: 'record', value: 'ID', help: 'planned against used of this record' }, jsonOption],
+    examples: ['holdfast presets diff liver-3t@2 liver-3t@3', 'holdfast presets diff liver-3t liver-1.5t'],
+    load: async () => (await import('./presets-diff.js')).runPresetsDiff,
+  },
+  {
+    words: ['presets', 'release'],
+    summary: "check a preset and make it the next revision in the site's folder",
+    details: [
+      'The folder is that of --presets. A revision never changes afterwards, and says by which role, when and why it was released.',
+      'Whoever comes second is told whose revision is there and what differs, and may take the own changes over on top of it.',
+    ],
+    arguments: [{ name: 'PRESET', required: true }],
+    options: [
+      { name: 'role', value: 'ROLE', help: 'role of whoever releases; no name' },
+      { name: 'reason', value: 'TEXT', help: 'why, in at most 80 characters' },
+      { name: 'second-role', value: 'ROLE', help: 'a second role that agrees; some sites ask for it' },
+      { name: 'as', value: 'ID', help: 'id to release a draft under' },
+      { name: 'based-on', value: 'REVISION', help: 'revision that the preset was made from' },
+      { name: 'on-top', value: null, help: 'take the changes over on top of a newer revision' },
+      fieldOption,
+    ],
+    examples: ['holdfast presets release liver-3t-draft --as liver-3t --based-on 2 --role physicist --reason "short holds" --presets DIR'],
+    load: async () => (await import('./presets-release.js')).runPresetsRelease,
+  },
+  {
+    words: ['records', 'list'],
+    summary: 'the sessions that were recorded, one a line',
+    details: recordDetails,
+    arguments: [{ name: 'FILE', required: false, repeats: true }],
+    options: [...filterOptions, jsonOption],
+    examples: ['holdfast records list --from 2026-03-01 --preset liver-3t'],
+    load: async () => (await import('./records-list.js')).runRecordsList,
+  },
+  {
+    words: ['records', 'show'],
+    summary: 'one session: what was planned, what was used, and why',
+    details: ['RECORD is the id of a record or its beginning.', ...recordDetails],
+    arguments: [
+      { name: 'RECORD', required: true },
+      { name: 'FILE', required: false, repeats: true },
+    ],
+    options: [jsonOption],
+    examples: ['holdfast records show 8f3c0a5b'],
+    load: async () => (await import('./records-show.js')).runRecordsShow,
+  },
+  {
+    words: ['records', 'report'],
+    summary: 'which presets are rewritten, in which direction, for which reason',
+    details: [
+      'Per preset and series: how often run, rewritten, repeated and given up; what was changed and by how much; reasons; quality; must-keeps crossed; revisions mixed; readings against predictions.',
+      ...recordDetails,
+    ],
+    arguments: [{ name: 'FILE', required: false, repeats: true }],
+    options: [
+      ...filterOptions,
+      { name: 'html', value: 'FILE', help: 'write the report as one page with plots as well' },
+      { name: 'save-drafts', value: null, help: 'save suggested variants as draft presets, for review' },
+      jsonOption,
+    ],
+    examples: ['holdfast records report --from 2026-01-01', 'holdfast records report scanner-a.jsonl scanner-b.jsonl --html report.html'],
+    load: async () => (await import('./records-report.js')).runRecordsReport,
+  },
+  {
+    words: ['records', 'export'],
+    summary: 'records as a table or as lines, or a change request for a committee',
+    details: recordDetails,
+    arguments: [{ name: 'FILE', required: false, repeats: true }],
+    options: [
+      ...filterOptions,
+      { name: 'csv', value: null, help: 'a table, one row a series' },
+      { name: 'lines', value: null, help: 'JSON lines, as they are recorded' },
+      { name: 'change-request', value: null, help: 'one page: what, why, how often, figures before and after' },
+      { name: 'series', value: 'SERIES', help: 'series of the change request' },
+    ],
+    examples: ['holdfast records export --csv > records.csv', 'holdfast records export --change-request --preset liver-3t'],
+    load: async () => (await import('./records-export.js')).runRecordsExport,
   },
 ];
 

@@ -6,6 +6,7 @@ import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { foldersOfPresets, refusedByStore } from './load-preset.js';
 import { pageOf } from './page.js';
+import { releaseWords } from './presets-diff-page.js';
 import { textTable } from './text-table.js';
 
 const originWords: Readonly<Record<StoredPreset['origin'], string>> = { site: 'site', own: 'saved here', shipped: 'shipped', file: 'file' };
@@ -13,7 +14,9 @@ const originWords: Readonly<Record<StoredPreset['origin'], string>> = { site: 's
 /** `holdfast presets list`: what can be named. Files that are wrong are told on standard error and do not stop the others. */
 export async function runPresetsList(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
   const folders = await foldersOfPresets(request, io);
-  const { presets, problems } = await listPresets(io.disk, folders);
+  const listing = await listPresets(io.disk, folders);
+  const { problems } = listing;
+  const presets = request.has('revisions') ? listing.presets : currentRevisions(listing.presets);
   const folderIsMissing = problems.find(({ exitCode }) => exitCode === exitCodes.noInput);
   if (folderIsMissing !== undefined && request.has('presets')) return complain(refusedByStore([folderIsMissing]), io);
   if (problems.length > 0) complain(refusedByStore(problems), io);
@@ -25,6 +28,7 @@ export async function runPresetsList(request: CommandRequest, io: CommandIo): Pr
     { title: 'revision', align: 'right' },
     { title: 'from', align: 'left' },
     { title: 'title', align: 'left' },
+    ...(request.has('revisions') ? ([{ title: 'released', align: 'left' }] as const) : []),
   ] as const;
   const rows = presets.map(({ study, origin }) => [
     study.id,
@@ -33,7 +37,13 @@ export async function runPresetsList(request: CommandRequest, io: CommandIo): Pr
     String(study.revision),
     originWords[origin],
     cleanText(study.title),
+    ...(request.has('revisions') ? [cleanText(releaseWords(study).replace(/^; /, ''))] : []),
   ]);
   io.write(page.plain(`${textTable(columns, rows, page.reader).join('\n')}\n`));
   return exitCodes.done;
+}
+
+/** Of each preset of a folder the highest revision: they come sorted so. */
+function currentRevisions(presets: readonly StoredPreset[]): readonly StoredPreset[] {
+  return presets.filter(({ study, origin }, i) => presets[i - 1]?.study.id !== study.id || presets[i - 1]?.origin !== origin);
 }

@@ -12,6 +12,7 @@ import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { foldersOfPresets, loadPreset } from './load-preset.js';
 import { type Page, pageOf } from './page.js';
+import { releaseWords } from './presets-diff-page.js';
 import { textTable } from './text-table.js';
 import { wrapText } from './wrap-text.js';
 
@@ -28,7 +29,12 @@ function presetPage(study: Study, page: Page): string {
   const minimum = study.minimumSet.map((item) => (typeof item === 'string' ? item : `one of ${item.join(' or ')}`));
   const lines = [
     page.emphasis('heading', cleanText(study.title)),
-    `preset ${study.id}, ${study.status}, revision ${study.revision}, ${cleanText(study.region)}, ${study.fieldT} T`,
+    ...wrapText(
+      cleanText(
+        `preset ${study.id}, ${study.status}, revision ${study.revision}, ${study.region}, ${study.fieldT} T${releaseWords(study)}`,
+      ),
+      page.width,
+    ),
     ...(study.notes === '' ? [] : wrapText(cleanText(study.notes), page.width)),
     ...(minimum.length === 0 ? [] : wrapText(`Minimum set: ${minimum.join(', ')}.`, page.width)),
     ...runningOrder(study.series).flatMap((series) => ['', ...seriesLines(series, page)]),

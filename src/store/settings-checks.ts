@@ -44,6 +44,7 @@ const checks: Readonly<Record<keyof Settings, SettingCheck>> = {
     holds: (value) => typeof value === 'string' && /^0?6[0246][0246]$/.test(value),
   },
   keepDay: flag,
+  secondRoleToRelease: flag,
   presetsFolder: place,
   recordsFile: place,
 };

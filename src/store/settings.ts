@@ -24,6 +24,8 @@ export interface Settings {
   readonly fileMode: string;
   /** Whether records name the day. */
   readonly keepDay: boolean;
+  /** Whether releasing a preset takes a second role. */
+  readonly secondRoleToRelease: boolean;
   /** Presets of the site; null when there are none. */
   readonly presetsFolder: string | null;
   /** Where records go; null for the user's own folder. */
@@ -42,6 +44,7 @@ export const defaultSettings: Settings = {
   readerMode: false,
   fileMode: '0600',
   keepDay: true,
+  secondRoleToRelease: false,
   presetsFolder: null,
   recordsFile: null,
 };

@@ -1,14 +1,11 @@
 import { type FigureKey, figureTable } from '../calc/figures.js';
 import { parameterRow } from '../calc/parameters.js';
+import { pageLines, pageRow as row } from './page-row.js';
 import type { RecordedLimits, RecordedReading, RecordedSeries, SessionRecord } from './record.js';
 import { changedFigures, changedParameters, figureWords, parameterWords } from './record-changes.js';
 import { type PredictionError, predictionError } from './record-prediction.js';
 import { reasonWords } from './record-reasons.js';
 import { noReasonGiven, outcomeWords, qualityWords, recommendationWords } from './record-words.js';
-
-/** One page of paper in a fixed-width type. */
-const pageLines = 60;
-const pageColumns = 80;
 
 /** What a change costs or gains; lines, shots and shortest times are left to the record itself. */
 const pageFigures: readonly FigureKey[] = [
@@ -156,20 +153,4 @@ function errorWords({ time, b1rms, sar }: PredictionError): string[] {
     error === null ? [] : [`${name} ${error < 0 ? '-' : '+'}${Math.abs(error * 100).toFixed(0)} %`],
   );
   return words.length === 0 ? [] : [`against the prediction: ${words.join(', ')}`];
-}
-
-/** A label and its items, wrapped within the page; nothing for no items. */
-function row(label: string, items: readonly string[]): string[] {
-  if (items.length === 0) return [];
-  const indent = ' '.repeat(12);
-  const lines: string[] = [];
-  let line = label.length < indent.length ? label.padEnd(indent.length) : `${label}  `;
-  for (const word of items.join('; ').split(' ')) {
-    if (line.trimEnd().length + word.length + 1 > pageColumns && line.trim() !== '') {
-      lines.push(line.trimEnd());
-      line = indent;
-    }
-    line += `${word} `;
-  }
-  return [...lines, line.trimEnd()];
 }

@@ -94,10 +94,10 @@ function pickSeries(study: Study, seriesId: string | undefined, request: Command
   return refuse(exitCodes.noInput, { code: 'series-not-there', path: seriesId, message, hint });
 }
 
-/** Refuses a set value that this class has no use for: it would change nothing, silently. */
+/** Refuses a set value that this class has no use for: it would change nothing. A split goes on to the model, which says why it cannot be. */
 function parameterOfOtherClass(series: StudySeries, set: GivenParameters): Attempt<never> | null {
   const { parameters: has, label } = classRow(classOf(series));
-  const foreign = (Object.keys(set) as ParameterKey[]).find((key) => !has.includes(key) && set[key] !== series.parameters[key]);
+  const foreign = (Object.keys(set) as ParameterKey[]).find((key) => key !== 'rounds' && !has.includes(key) && set[key] !== series.parameters[key]);
   if (foreign === undefined) return null;
   const near = nearestWord(
     foreign,

@@ -91,7 +91,9 @@ export function splitCautions(model: SeriesModel, baseline: Baseline, breathHeld
       () => `the preset's slices fit only if one takes ${inWords(model.slotFactor, 3)} of the modelled time: that factor is kept for edits`,
     );
   }
-  if (model.series.purpose === 'dynamic' && model.rounds > 1) {
+  // A volume has no split of its own; asking for one in a timed phase is refused all the same, with the reason.
+  const splitAsked = model.rounds > 1 || model.ignored.includes('rounds');
+  if (model.series.purpose === 'dynamic' && splitAsked) {
     add(
       'timed-phase-not-split',
       'error',

@@ -101,6 +101,13 @@ describe('slices, slots and rounds', () => {
     expect(edit({ ...dynamic, purpose: null }, { rounds: 2 }).codes).not.toContain('timed-phase-not-split');
   });
 
+  it('a split asked of a timed volume is refused with the same reason, though a volume has none', () => {
+    const volume = { ...gradientEcho(), purpose: 'dynamic' };
+    expect(edit(volume).codes).not.toContain('timed-phase-not-split');
+    expect(cautionOf(edit(volume, { rounds: 2 }), 'timed-phase-not-split')?.level).toBe('error');
+    expect(edit(gradientEcho(), { rounds: 2 }).codes).not.toContain('timed-phase-not-split');
+  });
+
   it('several holds of one volume may shift; one hold for each volume does not', () => {
     const held = (given: GivenParameters) =>
       edit(

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { ClassKey } from '../../../src/calc/classes.js';
 import { geometryOf } from '../../../src/calc/geometry.js';
 import { acquiredLines } from '../../../src/calc/lines.js';
-import { minimumTiming } from '../../../src/calc/minimum-timing.js';
+import { diffusionLobeMs, minimumTiming } from '../../../src/calc/minimum-timing.js';
 import { slotPulses } from '../../../src/calc/pulses.js';
 import { plainScanner } from '../../../src/calc/scanner.js';
 import type { GivenParameters } from '../../../src/calc/series.js';
@@ -50,5 +50,18 @@ describe('flow compensation adds one more prephasing lobe (common practice, no s
       fastest('echo-planar-spin-echo/2D', given).echoTimeMs;
     expect(difference(early)).toBeCloseTo(2 * prephaseMs, 5);
     expect(difference(planar)).toBeCloseTo(0, 9);
+  });
+});
+
+describe('diffusion weighting in an echo-planar spin echo', () => {
+  it('puts a lobe on either side of the refocusing pulse: TE grows by two, whichever half is the longer one', () => {
+    // 4 ms is the refocusing pulse of this class; the lobe itself is held by Stejskal & Tanner, J Chem Phys 1965;42:288.
+    const lobe = diffusionLobeMs(1000, 4, scanner);
+    const diffusion = { bValuesSPerMm2: [0, 1000], directions: 3, averages: [1, 1] };
+    for (const lines of [planar, { ...planar, partialFourierPhase: 0.51, parallelFactorPhase: 2 }]) {
+      const more =
+        fastest('echo-planar-spin-echo/2D', { ...lines, diffusion }).echoTimeMs - fastest('echo-planar-spin-echo/2D', lines).echoTimeMs;
+      expect(more).toBeCloseTo(2 * lobe, 9);
+    }
   });
 });

@@ -71,6 +71,8 @@ const wordsOf = (key: FigureKey, value: number | null) => `${axisLabel(key).repl
 
 function scaleOf({ points, figures, limits }: RangeChart, which: 0 | 1): Scale {
   const values = points.map((point) => point.figures[figures[which]]).filter((value): value is number => value !== null);
+  // A figure without a value anywhere has no axis.
+  if (values.length === 0) return { low: Number.NaN, high: Number.NaN };
   const low = Math.min(...values);
   const high = Math.max(...values);
   const limit = limits[which];
@@ -94,6 +96,7 @@ function columnOf(xs: readonly number[], at: number, width: number): number {
 
 function axisText(key: FigureKey, { low, high }: Scale, row: number, height: number): string {
   const share = height === 1 ? 0 : row / (height - 1);
+  if (Number.isNaN(low)) return row === 0 ? 'no value' : '';
   const shown = row === 0 || row === height - 1 || row === Math.floor((height - 1) / 2);
   return shown
     ? sayFigure(key, high - share * (high - low))

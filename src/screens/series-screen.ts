@@ -2,7 +2,7 @@ import { rangeChart, usualFigures } from '../session/chart.js';
 import { consequences } from '../session/consequences.js';
 import { fieldHere } from '../session/hands/series-commands.js';
 import type { State } from '../session/state.js';
-import { cautionPane } from './caution-pane.js';
+import { cautionPane, wholeCautions } from './caution-pane.js';
 import { chartPane } from './chart-pane.js';
 import { consequencePane, nextStepPane } from './consequence-pane.js';
 import { beside, blank, fill, type Line, line } from './line.js';
@@ -34,7 +34,7 @@ export function seriesScreen(state: State, look: Look, columns: number, rows: nu
     ...fill(sideChart(state, look, rightColumns, chartRows), chartRows),
     blank,
     line('Cautions, worst first', 'quiet'),
-    ...cautionPane(state, look, rightColumns, upper - chartRows - 2),
+    ...wholeCautions(state, look, rightColumns, upper - chartRows - 2),
   ];
   return fill(beside(two, right, leftColumns + 1 + middleColumns, rule, ellipsis), rows);
 }

@@ -10,7 +10,9 @@ function textScreen(state: State, paragraphs: readonly Paragraph[], columns: num
   const lines = paragraphs.flatMap(({ words, style }) =>
     words === '' ? [line('')] : wrap(words, width).map((each) => line(each, style ?? 'plain')),
   );
-  const at = Math.min(Number(state.place.fields[state.place.screen] ?? 0), Math.max(0, lines.length - rows));
+  const scrolled = Number(state.place.fields[state.place.screen] ?? 0);
+  // Beside other panes the place of the screen is no number: the text is not scrolled there.
+  const at = Number.isFinite(scrolled) ? Math.min(scrolled, Math.max(0, lines.length - rows)) : 0;
   const shown = lines.slice(at, at + rows);
   if (at + rows < lines.length) shown[rows - 1] = line(`${lines.length - at - rows + 1} more lines: down`, 'quiet');
   return fill(shown, rows);

@@ -79,7 +79,7 @@ export const clearRow: Command = (state) => {
   if (row?.clear === undefined || state.session === null) return only(say(state, 'Nothing to clear on this line'));
   const session = row.clear(state.session);
   return only(
-    session === state.session ? say(state, 'This line is blank already') : edit(state, `${row.label.trim()} cleared`, () => session),
+    session === state.session ? say(state, 'This line is blank already') : edit(state, `${row.label.trim()} emptied`, () => session),
   );
 };
 

@@ -2,6 +2,7 @@ import type { ParseExpression } from '../formulas/parsed-node.js';
 import { foldersOf } from '../store/folders.js';
 import { findPreset, type PresetFolder, presetFolders, readPresetFile, type StoredPreset } from '../store/preset-folder.js';
 import type { StoreProblem } from '../store/problem-of-error.js';
+import { cleanText } from '../study/clean-text.js';
 import type { Rules } from '../study/must-keep.js';
 import { readRules } from '../study/read-rules.js';
 import type { Study } from '../study/study.js';
@@ -50,6 +51,11 @@ export async function loadPreset(wanted: string, folders: readonly PresetFolder[
 async function parserFor(study: Study): Promise<ParseExpression | null> {
   const hasRules = study.series.some(({ mustKeep }) => mustKeep.some(({ rule, when }) => rule !== undefined || when !== undefined));
   return hasRules ? (await import('../formulas/load-parser.js')).loadParser() : null;
+}
+
+/** The problem that a folder itself is not there; what is wrong with a file in it is another matter. */
+export function missingFolder(problems: readonly StoreProblem[], folders: readonly PresetFolder[]): StoreProblem | undefined {
+  return problems.find(({ exitCode, path }) => exitCode === exitCodes.noInput && folders.some(({ folder }) => cleanText(folder) === path));
 }
 
 /** Problems of the store as a refusal: its own exit code. */

@@ -12,7 +12,7 @@ import type { CommandRequest } from './command-request.js';
 import { commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
-import { refusedByStore } from './load-preset.js';
+import { missingFolder, refusedByStore } from './load-preset.js';
 import { pageOf } from './page.js';
 import { findingLine } from './presets-findings.js';
 import { readField } from './read-named-numbers.js';
@@ -63,9 +63,10 @@ export async function runPresetsCheck(request: CommandRequest, io: CommandIo): P
     }
     complain(refusedByStore(general), io);
   }
-  const problems = [...general, ...checked.flatMap((one) => one.problems)];
-  const wasNamed = request.arguments.length > 0 || request.has('presets');
-  if (wasNamed && problems.some(({ exitCode }) => exitCode === exitCodes.noInput)) return exitCodes.noInput;
+  const namedIsMissing =
+    request.arguments.length > 0 && checked.some(({ problems }) => problems.some(({ exitCode }) => exitCode === exitCodes.noInput));
+  const folderIsMissing = request.has('presets') && missingFolder(general, presetFolders) !== undefined;
+  if (namedIsMissing || folderIsMissing) return exitCodes.noInput;
   return general.length === 0 && checked.every(isRight) ? exitCodes.done : exitCodes.failed;
 }
 

@@ -4,7 +4,7 @@ import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
-import { foldersOfPresets, refusedByStore } from './load-preset.js';
+import { foldersOfPresets, missingFolder, refusedByStore } from './load-preset.js';
 import { pageOf } from './page.js';
 import { releaseWords } from './presets-diff-page.js';
 import { textTable } from './text-table.js';
@@ -17,7 +17,7 @@ export async function runPresetsList(request: CommandRequest, io: CommandIo): Pr
   const listing = await listPresets(io.disk, folders);
   const { problems } = listing;
   const presets = request.has('revisions') ? listing.presets : currentRevisions(listing.presets);
-  const folderIsMissing = problems.find(({ exitCode }) => exitCode === exitCodes.noInput);
+  const folderIsMissing = missingFolder(problems, folders);
   if (folderIsMissing !== undefined && request.has('presets')) return complain(refusedByStore([folderIsMissing]), io);
   if (problems.length > 0) complain(refusedByStore(problems), io);
   const page = pageOf(request, io);

@@ -1,94 +1,111 @@
 import { readFileSync } from 'node:fs';
 import { spawn } from '@lydell/node-pty';
-
-/** What a program in a pseudo-terminal did. */
-export interface Driven {
-  /** From the start of the process to the first output that holds the text waited for, ms. */
-  readonly firstFrameMs: number;
-  /** Resident memory then, MB; null where the system does not say. */
-  readonly memoryMb: number | null;
-  /** From each key to the first output after it, ms. */
-  readonly keyMs: readonly number[];
-  /** Bytes written after each key, until the program was silent. */
-  readonly keyBytes: readonly number[];
-}
+import { createVirtualScreen } from '../tests/e2e/harness/virtual-screen.js';
 
 export interface DriveOptions {
   readonly columns: number;
   readonly rows: number;
-  /** Text of the first whole frame. */
-  readonly ready: string;
-  /** Typed one by one, each when the program has been silent after the one before. */
-  readonly keys: readonly string[];
-  readonly quit: string;
   readonly env?: Readonly<Record<string, string>>;
+  /** Options of Node before the program. */
+  readonly node?: readonly string[];
 }
 
-const silenceMs = 12;
-const givenUpMs = 20_000;
+/** What one key did. */
+export interface KeyAnswer {
+  /** From the key to the first output after it, ms; null where nothing came. */
+  readonly ms: number | null;
+  /** Bytes written until the program was silent. */
+  readonly bytes: number;
+}
 
-/** Starts a bundled program with Node in a pseudo-terminal that answers status queries, types keys, and measures. */
-export async function driveProgram(file: string, args: readonly string[], options: DriveOptions): Promise<Driven> {
-  const { columns, rows, ready, keys, quit, env = {} } = options;
+/** A bundled program run by Node in a pseudo-terminal, measured from outside. */
+export interface DrivenProgram {
+  readonly pid: number;
+  press(keys: string): void;
+  /** Waits for a text on the screen; the time since the process was started, ms. */
+  shows(text: string): Promise<number>;
+  /** Types one key, waits for its frame and then for silence. */
+  key(key: string): Promise<KeyAnswer>;
+  silence(): Promise<void>;
+  /** Resident memory now, MB; null where the system does not say. */
+  memoryMb(): number | null;
+  close(): void;
+}
+
+/** Longer than the 33 ms of a frame at 30 a second: the next key is drawn at once, and not held back by the one before. */
+const silenceMs = 45;
+const noAnswerMs = 400;
+const givenUpMs = 30_000;
+
+/** Starts a program in a pseudo-terminal that answers what terminals answer. */
+export function drive(file: string, args: readonly string[], { columns, rows, env = {}, node = [] }: DriveOptions): DrivenProgram {
+  const screen = createVirtualScreen(columns, rows);
   const started = performance.now();
-  const pty = spawn(process.execPath, [file, ...args], {
+  const pty = spawn(process.execPath, [...node, file, ...args], {
     name: 'xterm-256color',
     cols: columns,
     rows,
     env: { PATH: process.env.PATH ?? '', HOME: process.env.HOME ?? '', TERM: 'xterm-256color', LANG: 'C.UTF-8', ...env },
   });
-  let written = '';
   let bytes = 0;
-  let lastMs = 0;
+  let lastMs = started;
   let wake: () => void = () => {};
   pty.onData((data) => {
     lastMs = performance.now();
     bytes += Buffer.byteLength(data);
-    if (written.length < 1e6) written += data;
-    // A status query is answered at once, as terminals do.
-    for (const query of data.split('\u001b[5n').slice(1)) if (query !== undefined) pty.write('\u001b[0n');
+    void screen.write(data).then(() => wake());
     wake();
   });
-  const ended = new Promise<void>((resolve) => pty.onExit(() => resolve()));
+  screen.terminal.onData((answer) => pty.write(answer));
 
-  const until = async (holds: () => boolean): Promise<void> => {
+  const until = async (holds: () => boolean, longestMs: number): Promise<boolean> => {
     const since = performance.now();
     while (!holds()) {
-      if (performance.now() - since > givenUpMs) throw new Error(`${file} did not answer within ${givenUpMs / 1000} s`);
+      if (performance.now() - since > longestMs) return false;
       await new Promise<void>((resolve) => {
-        wake = resolve;
-        setTimeout(resolve, 4);
+        const timer = setTimeout(resolve, 5);
+        wake = () => {
+          clearTimeout(timer);
+          resolve();
+        };
       });
     }
+    return true;
+  };
+  const silence = async () => {
+    await until(() => performance.now() - lastMs >= silenceMs, givenUpMs);
   };
 
-  try {
-    await until(() => written.includes(ready));
-    const firstFrameMs = lastMs - started;
-    const memoryMb = residentMb(pty.pid);
-    const silent = () => performance.now() - lastMs >= silenceMs;
-    const keyMs: number[] = [];
-    const keyBytes: number[] = [];
-    await until(silent);
-    for (const key of keys) {
+  return {
+    pid: pty.pid,
+    press: (keys) => pty.write(keys),
+    shows: async (text) => {
+      const came = await until(() => screen.text().includes(text), givenUpMs);
+      if (!came) throw new Error(`waited in vain for "${text}"; the screen shows:\n${screen.text()}`);
+      return lastMs - started;
+    },
+    key: async (key) => {
       const before = bytes;
       const pressed = performance.now();
+      let firstMs = 0;
       pty.write(key);
-      await until(() => bytes > before);
-      keyMs.push(lastMs - pressed);
-      await until(silent);
-      keyBytes.push(bytes - before);
-    }
-    pty.write(quit);
-    await Promise.race([ended, new Promise((resolve) => setTimeout(resolve, 3000))]);
-    return { firstFrameMs, memoryMb, keyMs, keyBytes };
-  } finally {
-    try {
-      pty.kill('SIGKILL');
-    } catch {
-      // It ended by itself.
-    }
-  }
+      const answered = await until(() => {
+        if (bytes > before && firstMs === 0) firstMs = lastMs;
+        return firstMs !== 0;
+      }, noAnswerMs);
+      await silence();
+      return { ms: answered ? firstMs - pressed : null, bytes: bytes - before };
+    },
+    silence,
+    memoryMb: () => residentMb(pty.pid),
+    close: () => {
+      try {
+        pty.kill('SIGKILL');
+      } catch {
+        // It ended by itself.
+      }
+    },
+  };
 }
 
 function residentMb(pid: number): number | null {

@@ -1,72 +1,238 @@
-import { mkdtemp, rm } from 'node:fs/promises';
+import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { join } from 'node:path';
-import { build, type Plugin } from 'esbuild';
-import { type Driven, driveProgram } from '../drive-program.js';
+import { join, resolve } from 'node:path';
+import { pathToFileURL } from 'node:url';
+import { bundleBareInk } from '../bare/bundle-bare-ink.js';
+import { type DrivenProgram, type DriveOptions, drive, type KeyAnswer } from '../drive-program.js';
 import { median, percentile } from '../median.js';
 import type { Measured, Row } from '../row.js';
 
-/** Ink's connection to development tools asks for a package that is not there. */
-const withoutDevelopmentTools: Plugin = {
-  name: 'without-development-tools',
-  setup: (building) => {
-    building.onResolve({ filter: /^\.\/devtools\.js$/ }, ({ path }) => ({ path, namespace: 'nothing' }));
-    building.onLoad({ filter: /.*/, namespace: 'nothing' }, () => ({ contents: 'export {};' }));
-  },
-};
+const size = { columns: 100, rows: 30 } as const;
+const enter = '\r';
+const up = '\u001b[A';
+const down = '\u001b[B';
 
-/** The bare ink program, bundled as the program is, driven a few times: the yardstick of every row of the interface. */
-async function bareInk(): Promise<readonly Driven[]> {
-  const folder = await mkdtemp(join(tmpdir(), 'holdfast-bench-'));
+/** A program that was started, and when a frame was there that this is about. */
+interface Started {
+  readonly program: DrivenProgram;
+  readonly firstFrameMs: number;
+  /** Of the first screen, where the one meant is another. */
+  readonly startScreenMs?: number;
+}
+
+const folder = mkdtempSync(join(tmpdir(), 'holdfast-bench-'));
+process.once('exit', () => rmSync(folder, { recursive: true, force: true }));
+
+let bundled: Promise<void> | null = null;
+
+/** The bare ink program, its first frame drawn. */
+async function bare(): Promise<Started> {
+  const file = join(folder, 'bare-ink.mjs');
+  bundled ??= bundleBareInk(file);
+  await bundled;
+  const program = drive(file, [], size);
+  return { program, firstFrameMs: await program.shows('ready') };
+}
+
+let homes = 0;
+
+/** The program in a home of its own, on the series screen of a liver series. */
+async function seriesScreen(options: Partial<DriveOptions> = {}): Promise<Started> {
+  if (!existsSync('dist/holdfast.js')) throw new Error('dist/holdfast.js is not there: npm run build makes it');
+  homes += 1;
+  const env = { HOME: join(folder, `home-${homes}`), COLORTERM: 'truecolor', ...options.env };
+  const program = drive('dist/holdfast.js', [], { ...size, ...options, env });
+  // The first screen narrows by typing; whoever knows the way types ahead.
+  const startScreenMs = await program.shows('0.55 T');
+  program.press('3 liver');
+  await program.shows('3 liver');
+  program.press(enter);
+  await program.shows('Running order');
+  program.press(enter);
+  const firstFrameMs = await program.shows('Series t1-3d');
+  await program.silence();
+  return { program, firstFrameMs, startScreenMs };
+}
+
+async function closing<T>({ program }: Started, work: () => Promise<T>): Promise<T> {
   try {
-    const outfile = join(folder, 'bare-ink.mjs');
-    await build({
-      entryPoints: ['bench/bare/bare-ink.tsx'],
-      outfile,
-      bundle: true,
-      format: 'esm',
-      platform: 'node',
-      target: 'node20',
-      minify: true,
-      jsx: 'automatic',
-      define: { 'process.env.NODE_ENV': '"production"', 'process.env.DEV': '"false"' },
-      plugins: [withoutDevelopmentTools],
-      banner: { js: "import { createRequire as __createRequire } from 'node:module';\nconst require = __createRequire(import.meta.url);" },
-      logLevel: 'warning',
-    });
-    const runs: Driven[] = [];
-    for (let i = 0; i < 5; i += 1) {
-      runs.push(
-        await driveProgram(outfile, [], { columns: 100, rows: 30, ready: 'ready', keys: Array.from({ length: 40 }, () => 'x'), quit: 'q' }),
-      );
-    }
-    return runs;
+    return await work();
   } finally {
-    await rm(folder, { recursive: true, force: true });
+    program.close();
   }
 }
 
-let runs: Promise<readonly Driven[]> | null = null;
-
-/** Of the bare program alone, without a budget: what there is to compare with. */
-function bareRow(name: string, unit: Row['unit'], value: (run: Driven) => number | null): Row {
-  return {
-    name: `bare ink program, ${name}`,
-    against: '',
-    unit,
-    budget: null,
-    measure: async (): Promise<Measured> => {
-      runs ??= bareInk();
-      const values = (await runs).map(value).filter((one): one is number => one !== null);
-      const middle = median(values);
-      return { subject: middle, yardstick: null, ratio: middle };
-    },
-  };
+function ratioOf(subject: readonly number[], yardstick: readonly number[]): Measured {
+  return { subject: median(subject), yardstick: median(yardstick), ratio: median(subject) / median(yardstick) };
 }
 
+/** Starts both several times in turns. */
+async function starts(figureOf: (started: Started) => number): Promise<Measured> {
+  const ours: number[] = [];
+  const theirs: number[] = [];
+  for (let round = 0; round < 7; round += 1) {
+    const a = await seriesScreen();
+    ours.push(await closing(a, async () => figureOf(a)));
+    const b = await bare();
+    theirs.push(await closing(b, async () => figureOf(b)));
+  }
+  return ratioOf(ours, theirs);
+}
+
+/** Keys of a person who works on the series screen: over the lines, steps both ways, undo, redo, panes, the chart and back. */
+function mixedKeys(count: number): readonly string[] {
+  const cycle = [
+    down,
+    '+',
+    '-',
+    down,
+    '+',
+    '+',
+    'u',
+    'r',
+    down,
+    down,
+    '-',
+    '+',
+    up,
+    '\t',
+    down,
+    '\t',
+    '\t',
+    'c',
+    '+',
+    '+',
+    '-',
+    '\u001b',
+    up,
+    '-',
+    'u',
+    'w',
+    '\u001b',
+  ];
+  return Array.from({ length: count }, (_, i) => cycle[i % cycle.length] as string);
+}
+
+async function answers(program: DrivenProgram, keys: readonly string[]): Promise<readonly KeyAnswer[]> {
+  const all: KeyAnswer[] = [];
+  for (const key of keys) all.push(await program.key(key));
+  return all;
+}
+
+const msOf = (all: readonly KeyAnswer[]) => all.flatMap(({ ms }) => (ms === null ? [] : [ms]));
+
+async function keypress(count: number): Promise<Measured> {
+  const a = await seriesScreen();
+  const b = await bare();
+  return closing(a, () =>
+    closing(b, async () => {
+      const keys = mixedKeys(count);
+      const ours: number[] = [];
+      const theirs: number[] = [];
+      // In turns of a hundred, so that a slow stretch of the machine weighs on both.
+      for (let from = 0; from < count; from += 100) {
+        ours.push(...msOf(await answers(a.program, keys.slice(from, from + 100))));
+        theirs.push(
+          ...msOf(
+            await answers(
+              b.program,
+              Array.from({ length: 50 }, () => 'x'),
+            ),
+          ),
+        );
+      }
+      const subject = percentile(ours, 0.95);
+      const yardstick = percentile(theirs, 0.95);
+      return { subject, yardstick, ratio: subject / yardstick };
+    }),
+  );
+}
+
+/** Most bytes that one of these keys had written, after others that led there. */
+async function mostBytes(before: readonly string[], keys: readonly string[]): Promise<Measured> {
+  const a = await seriesScreen();
+  return closing(a, async () => {
+    await answers(a.program, before);
+    const bytes = (await answers(a.program, keys)).map((answer) => answer.bytes);
+    const most = Math.max(...bytes);
+    return { subject: most, yardstick: null, ratio: most };
+  });
+}
+
+function bytesRow(name: string, budget: number, before: readonly string[], keys: readonly string[]): Row {
+  return { name: `bytes of a key at 100x30: ${name}`, against: '', unit: 'bytes', budget, measure: () => mostBytes(before, keys) };
+}
+
+/** Heap after garbage collection, with `keys` more keys pressed in bursts. */
+async function heapMb(program: DrivenProgram, file: string): Promise<number> {
+  rmSync(file, { force: true });
+  process.kill(program.pid, 'SIGUSR2');
+  for (let i = 0; i < 400; i += 1) {
+    await new Promise((resolve) => setTimeout(resolve, 25));
+    if (existsSync(file) && readFileSync(file, 'utf8').endsWith('\n')) return Number(readFileSync(file, 'utf8')) / 2 ** 20;
+  }
+  throw new Error('the program did not say how large its heap is');
+}
+
+async function heapGrowth(few: number, many: number): Promise<Measured> {
+  const file = join(folder, 'heap');
+  const probe = pathToFileURL(resolve('bench/bare/heap-probe.mjs'));
+  const a = await seriesScreen({ node: ['--expose-gc', '--import', probe.href], env: { HEAP_FILE: file } });
+  return closing(a, async () => {
+    const burst = mixedKeys(54).join('');
+    const press = async (keys: number) => {
+      for (let pressed = 0; pressed < keys; pressed += 54) {
+        a.program.press(burst);
+        await a.program.silence();
+      }
+    };
+    await press(few);
+    const after = await heapMb(a.program, file);
+    await press(many - few);
+    const late = await heapMb(a.program, file);
+    return { subject: late, yardstick: after, ratio: late / after };
+  });
+}
+
+/** What a person waits for, and what a slow line carries. */
 export const rows: readonly Row[] = [
-  bareRow('first frame', 'ms', (run) => run.firstFrameMs),
-  bareRow('memory at the first frame', 'MB', (run) => run.memoryMb),
-  bareRow('key to frame, 95 of 100', 'ms', (run) => percentile(run.keyMs, 0.95)),
-  bareRow('bytes a key', 'bytes', (run) => median(run.keyBytes)),
+  {
+    name: 'first frame of the first screen',
+    against: 'of a bare ink program',
+    unit: 'ms',
+    budget: 1.25,
+    measure: () => starts(({ firstFrameMs, startScreenMs }) => startScreenMs ?? firstFrameMs),
+  },
+  {
+    name: 'first frame of the series screen, from the start of the program, the way there typed',
+    against: 'first frame of a bare ink program',
+    unit: 'ms',
+    budget: 1.25,
+    measure: () => starts(({ firstFrameMs }) => firstFrameMs),
+  },
+  {
+    name: 'memory on the series screen',
+    against: 'of a bare ink program',
+    unit: 'MB',
+    budget: 1.3,
+    measure: () => starts(({ program }) => program.memoryMb() ?? Number.NaN),
+  },
+  {
+    name: 'key to frame written, 95 of 100, 2,000 mixed keys at 100x30',
+    against: 'a bare ink program that changes one number',
+    unit: 'ms',
+    budget: 2,
+    measure: () => keypress(2000),
+  },
+  bytesRow('one number', 60, ['1'], ['2', '3', '4']),
+  bytesRow('a step', 300, [down, down], ['+', '+', '-', '-']),
+  bytesRow('a range chart that shifts', 1000, ['c'], ['+', '+', '-', '+']),
+  bytesRow('a new screen', 4500, [], ['p', 'o', 'e', 'h']),
+  {
+    name: 'heap after 40,000 keys',
+    against: 'after 4,000',
+    unit: 'MB',
+    budget: 1.2,
+    measure: () => heapGrowth(4000, 40000),
+  },
 ];

@@ -1,6 +1,6 @@
-import { ernstAngleDeg } from '../calc/signal/spoiled-gradient-echo.js';
-import { effectiveRepetitionTimeMs } from '../calc/pacing.js';
 import type { SeriesModel } from '../calc/model.js';
+import { effectiveRepetitionTimeMs } from '../calc/pacing.js';
+import { ernstAngleDeg } from '../calc/signal/spoiled-gradient-echo.js';
 import type { CarrySetting, Settled } from './carry-setting.js';
 
 /**
@@ -22,5 +22,5 @@ export function optimumAngleDeg({ baseline, series }: CarrySetting, settled: Set
   const before = mostSignalAngleDeg(baseline.model);
   const after = mostSignalAngleDeg(settled.model);
   if (before === null || after === null || before === 0) return null;
-  return Math.max(0.5, Math.min(90, Math.round(((2 * series.parameters.flipAngleDeg * after) / before)) / 2));
+  return Math.max(0.5, Math.min(90, Math.round((2 * series.parameters.flipAngleDeg * after) / before) / 2));
 }

@@ -1,6 +1,5 @@
 import { phaseTimesMs } from '../calc/chemical-shift.js';
 import { fatShiftHz } from '../calc/constants.js';
-import { rampMs } from '../calc/gradients.js';
 import type { CarrySetting, Settled } from './carry-setting.js';
 
 /** An in-phase and an opposed-phase echo at the exact field, ms. */
@@ -11,8 +10,13 @@ export interface EchoPair {
   readonly inMs: number;
   /** True when the opposed echo comes later than the in-phase one: T2* decay then reads as fat. */
   readonly opposedLater: boolean;
-  /** The pair that was wished for, where another had to be taken. */
-  readonly insteadOf: readonly [number, number] | null;
+  /** What to take where the scanner refuses this pair, since the estimated shortest TE lies above its first echo. */
+  readonly otherwise: {
+    readonly firstMs: number;
+    readonly secondMs: number;
+    readonly opposedLater: boolean;
+    readonly shortestMs: number;
+  } | null;
 }
 
 /** Distance from a whole number of cycles within which an echo counts as in phase, and as opposed (common practice, no source). */
@@ -38,49 +42,43 @@ export function isEchoPair(setting: CarrySetting): boolean {
   return cyclesOfPreset(setting) !== null;
 }
 
-/** Shortest distance of two echoes, ms: a readout and its ramps there and back (geometry of trapezoids). */
-function spacingMs(settled: Settled, { to }: CarrySetting): number {
-  return 1000 / settled.parameters.pixelBandwidthHz + 2 * rampMs(Math.min(settled.model.minimum.readoutMtPerM, to.gradientMtPerM), to);
+interface Cycles {
+  readonly opposed: number;
+  readonly inPhase: number;
 }
+
+/** Every pair under six cycles, the earliest first by its later echo; at equal times the opposed echo first. */
+const candidates: readonly Cycles[] = [0.5, 1.5, 2.5, 3.5, 4.5, 5.5]
+  .flatMap((opposed) => [1, 2, 3, 4, 5, 6].map((inPhase) => ({ opposed, inPhase })))
+  .sort((a, b) => Math.max(a.opposed, a.inPhase) - Math.max(b.opposed, b.inPhase) || a.opposed - b.opposed || b.inPhase - a.inPhase);
 
 /**
  * In-phase and opposed echoes at the exact field, `TE = n / (3.4 ppm gamma-bar B0)` with n whole or a half (Dixon, Radiology 1984;153:189):
- * the preset's own cycles where the shortest TE and the readout allow them, else the earliest pair that they allow. An estimate that the preset
- * itself undercuts may be undercut by as much. Null where nothing under six cycles is possible.
+ * the preset's own cycles, unless the readout is longer than the two echoes lie apart; then the earliest pair that leaves it room.
+ * The shortest TE is an estimate and refuses nothing: where it lies above the first echo, the pair to fall back on is named.
+ * Null where nothing under six cycles is possible.
  */
 export function carriedEchoPair(setting: CarrySetting, settled: Settled): EchoPair | null {
   const wanted = cyclesOfPreset(setting);
   if (wanted === null) return null;
   const { inPhaseMs } = phaseTimesMs(setting.to.fieldT);
   const before = setting.series.parameters;
-  const own = setting.baseline.model;
-  const shortFirst = Math.max(0, own.minimum.echoTimeMs - Math.min(before.echoTimeMs, before.secondEchoTimeMs as number));
-  const ownSpacing = Math.abs((before.secondEchoTimeMs as number) - before.echoTimeMs);
-  const ownShortest =
-    1000 / before.pixelBandwidthHz + 2 * rampMs(Math.min(own.minimum.readoutMtPerM, own.scanner.gradientMtPerM), own.scanner);
-  const shortSpacing = Math.max(0, ownShortest - ownSpacing);
-  const possible = (opposed: number, inPhase: number) => {
-    const first = Math.min(opposed, inPhase) * inPhaseMs;
-    const gap = Math.abs(opposed - inPhase) * inPhaseMs;
-    return first >= settled.model.minimum.echoTimeMs - shortFirst - 1e-9 && gap >= spacingMs(settled, setting) - shortSpacing - 1e-9;
+  const own = setting.baseline.model.minimum.echoTimeMs - Math.min(before.echoTimeMs, before.secondEchoTimeMs as number);
+  // An estimate that the preset itself undercuts may be undercut by as much.
+  const shortestMs = settled.model.minimum.echoTimeMs - Math.max(0, own);
+  const firstMs = ({ opposed, inPhase }: Cycles) => Math.min(opposed, inPhase) * inPhaseMs;
+  const hasRoom = ({ opposed, inPhase }: Cycles) => {
+    return Math.abs(opposed - inPhase) * inPhaseMs >= 1000 / settled.parameters.pixelBandwidthHz - 1e-9;
   };
-  const pairOf = (opposed: number, inPhase: number, insteadOf: EchoPair['insteadOf']): EchoPair => {
+  const taken = hasRoom(wanted) ? wanted : candidates.find(hasRoom);
+  if (taken === undefined) return null;
+  const times = ({ opposed, inPhase }: Cycles) => {
     const [opposedMs, inMs] = [hundredth(opposed * inPhaseMs), hundredth(inPhase * inPhaseMs)];
-    const [firstMs, secondMs] = [Math.min(opposedMs, inMs), Math.max(opposedMs, inMs)];
-    return { firstMs, secondMs, opposedMs, inMs, opposedLater: opposed > inPhase, insteadOf };
+    return { firstMs: Math.min(opposedMs, inMs), secondMs: Math.max(opposedMs, inMs), opposedMs, inMs, opposedLater: opposed > inPhase };
   };
-  if (possible(wanted.opposed, wanted.inPhase)) return pairOf(wanted.opposed, wanted.inPhase, null);
-  const wish = pairOf(wanted.opposed, wanted.inPhase, null);
-  const candidates: { opposed: number; inPhase: number }[] = [];
-  for (let opposed = 0.5; opposed < 6; opposed += 1) {
-    for (let inPhase = 1; inPhase <= 6; inPhase += 1) candidates.push({ opposed, inPhase });
-  }
-  // The earliest pair, by its later echo; at equal times the opposed echo first.
-  candidates.sort(
-    (a, b) => Math.max(a.opposed, a.inPhase) - Math.max(b.opposed, b.inPhase) || a.opposed - b.opposed || b.inPhase - a.inPhase,
-  );
-  const found = candidates.find(({ opposed, inPhase }) => possible(opposed, inPhase));
-  return found === undefined ? null : pairOf(found.opposed, found.inPhase, [wish.firstMs, wish.secondMs]);
+  const later =
+    firstMs(taken) >= shortestMs - 1e-9 ? undefined : candidates.find((pair) => hasRoom(pair) && firstMs(pair) >= shortestMs - 1e-9);
+  return { ...times(taken), otherwise: later === undefined ? null : { ...times(later), shortestMs } };
 }
 
 function hundredth(ms: number): number {

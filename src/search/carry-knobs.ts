@@ -1,16 +1,24 @@
 import { classRow } from '../calc/classes.js';
 import { isCine, pacingPeriodMs } from '../calc/pacing.js';
+import type { GivenParameters } from '../calc/series.js';
 import { contrastEcho } from '../calc/signal/echo-train-signal.js';
 import { type CarrySetting, nullsByInversion, type Settled } from './carry-setting.js';
 
 /** A parameter that contrast is brought back with, and how far it may go. */
 export interface Knob {
-  readonly key: 'repetitionTimeMs' | 'flipAngleDeg' | 'inversionTimeMs';
+  readonly key: 'repetitionTimeMs' | 'flipAngleDeg' | 'inversionTimeMs' | 'echoTimeMs';
   readonly start: number;
   readonly low: number;
   readonly high: number;
   /** To what a scanner accepts. */
   readonly round: (value: number) => number;
+  /** What is set for a value. */
+  readonly set: (value: number) => GivenParameters;
+}
+
+/** A knob that sets its own parameter and nothing else. */
+function plainKnob(key: Knob['key'], start: number, low: number, high: number, round: (value: number) => number): Knob {
+  return { key, start, low, high, round, set: (value) => ({ [key]: value }) };
 }
 
 /** TR may halve or double, an inversion time too; within a half more or less it stands before any change of TE. */
@@ -36,42 +44,66 @@ export function firstKnob(setting: CarrySetting, settled: Settled): Knob | null 
   const p = settled.parameters;
   if (row.family === 'inversion-prepared-gradient-echo' && !nullsByInversion(setting)) {
     const start = p.inversionTimeMs as number;
-    return { key: 'inversionTimeMs', start, low: start / widest, high: start * widest, round: Math.round };
+    return plainKnob('inversionTimeMs', start, start / widest, start * widest, Math.round);
   }
   if (row.gradientEcho && row.family !== 'inversion-prepared-gradient-echo') {
-    return { key: 'flipAngleDeg', start: p.flipAngleDeg, low: Math.min(1, p.flipAngleDeg), high: Math.max(90, p.flipAngleDeg), round: roundedTo(p.flipAngleDeg < 30 ? 0.1 : 0.5) };
+    const start = p.flipAngleDeg;
+    return plainKnob('flipAngleDeg', start, Math.min(1, start), Math.max(90, start), roundedTo(start < 30 ? 0.1 : 0.5));
   }
   if (aim === 'time' || isCine(p) || pacingPeriodMs(p) !== null || settled.model.setting.slicesOfRound === 0) return null;
   if (row.family === 'single-shot-fast-spin-echo') return null;
   const start = p.repetitionTimeMs;
-  return { key: 'repetitionTimeMs', start, low: start / widest, high: start * widest, round: roundedTo(timeStep(start)) };
+  return plainKnob('repetitionTimeMs', start, start / widest, start * widest, roundedTo(timeStep(start)));
 }
+
+/** An echo time to start from, and what may be turned from there. */
+export interface EchoTry {
+  /** What is set; nothing for the echo time as it was carried. */
+  readonly set: GivenParameters;
+  readonly echoTimeMs: number;
+  /** TE by itself; null where it follows the readout or belongs to a pair. */
+  readonly knob: Knob | null;
+}
+
+/** How far the spacing of a train may be stretched so that an echo falls where TE is wanted. */
+const mostStretch = 1.25;
 
 /**
- * Echo times that may be tried besides the carried one, nearest first: whole echoes of a train, steps of 4 % elsewhere, none under the shortest
- * TE. TE stays within two thirds and one and a half of what it was.
+ * Echo times that may be tried, the carried one first, then nearest first, within two thirds and one and a half of it.
+ * In a train TE is a whole echo: any of its echoes, and the spacing may be stretched by up to a quarter so that the echo falls where TE is wanted.
+ * In a single shot the lines fix the echo that is the centre, and only the spacing can be stretched. Elsewhere TE moves freely above the shortest.
  */
-export function otherEchoTimes({ baseline, series }: CarrySetting, { parameters: p, model }: Settled): readonly number[] {
+export function echoTries({ baseline, series }: CarrySetting, { parameters: p, model }: Settled): readonly EchoTry[] {
   const row = classRow(baseline.model.key);
-  if (p.secondEchoTimeMs !== undefined || row.family === 'balanced-steady-state' || row.family === 'inversion-prepared-gradient-echo') return [];
-  const [low, high] = [p.echoTimeMs / usual, p.echoTimeMs * usual];
-  const times: number[] = [];
-  if (row.train) {
-    const echo = contrastEcho(p.echoTimeMs, p.echoSpacingMs, p.echoTrainLength);
-    for (let n = 1; n <= p.echoTrainLength; n += 1) {
-      const ms = n * p.echoSpacingMs;
-      if (n !== echo && ms >= low && ms <= high) times.push(Number(ms.toFixed(6)));
-    }
-  } else {
-    // The estimate may be undercut by as much as the preset undercuts its own.
-    const slack = Math.max(0, baseline.model.minimum.echoTimeMs - series.parameters.echoTimeMs);
-    for (let i = 1; i <= 10; i += 1) {
-      for (const ms of [p.echoTimeMs * 1.04 ** i, p.echoTimeMs / 1.04 ** i]) {
-        if (ms <= high && ms >= low && ms >= model.minimum.echoTimeMs - slack) times.push(Number(ms.toFixed(2)));
-      }
-    }
+  const follows =
+    row.gradientEcho && !row.echoPlanar && p.echoTimeMs < followingShare * (model.target?.t2StarMs ?? Number.POSITIVE_INFINITY);
+  if (
+    p.secondEchoTimeMs !== undefined ||
+    row.family === 'balanced-steady-state' ||
+    row.family === 'inversion-prepared-gradient-echo' ||
+    follows
+  ) {
+    return [{ set: {}, echoTimeMs: p.echoTimeMs, knob: null }];
   }
-  const far = (ms: number) => Math.abs(Math.log(ms / p.echoTimeMs));
-  return times.sort((a, b) => far(a) - far(b)).slice(0, 12);
+  if (!row.train) {
+    // The estimate may be undercut by as much as the preset undercuts its own.
+    const shortest = model.minimum.echoTimeMs - Math.max(0, baseline.model.minimum.echoTimeMs - series.parameters.echoTimeMs);
+    const low = Math.max(p.echoTimeMs / usual, Math.min(p.echoTimeMs, shortest));
+    return [{ set: {}, echoTimeMs: p.echoTimeMs, knob: plainKnob('echoTimeMs', p.echoTimeMs, low, p.echoTimeMs * usual, roundedTo(0.01)) }];
+  }
+  const spacing = p.echoSpacingMs;
+  const own = contrastEcho(p.echoTimeMs, spacing, p.echoTrainLength);
+  const singleShot = row.family === 'single-shot-fast-spin-echo';
+  const echoes = Array.from({ length: p.echoTrainLength }, (_, i) => i + 1)
+    .filter((echo) => echo === own || (!singleShot && echo * spacing >= p.echoTimeMs / usual && echo * spacing <= p.echoTimeMs * usual))
+    .sort((a, b) => Math.abs(Math.log(a / own)) - Math.abs(Math.log(b / own)));
+  return echoes.slice(0, 12).map((echo): EchoTry => {
+    const echoTimeMs = Number((echo * spacing).toFixed(6));
+    const stretch = (ms: number) => ({ echoTimeMs: ms, echoSpacingMs: Number((ms / echo).toFixed(6)) });
+    const knob: Knob = { ...plainKnob('echoTimeMs', echoTimeMs, echoTimeMs, echoTimeMs * mostStretch, roundedTo(0.01)), set: stretch };
+    return { set: echo === own ? {} : { echoTimeMs }, echoTimeMs, knob };
+  });
 }
 
+/** A gradient echo whose TE is under this share of T2* takes TE from its readout; above it TE sets contrast (common practice, no source). */
+const followingShare = 0.2;

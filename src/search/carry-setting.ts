@@ -5,6 +5,7 @@ import { nullTissueOf } from '../calc/null-time.js';
 import { type Carried, resolveParameters } from '../calc/resolve.js';
 import type { Scanner } from '../calc/scanner.js';
 import type { GivenParameters, Parameters } from '../calc/series.js';
+import { contrastEcho } from '../calc/signal/echo-train-signal.js';
 import type { StudySeries } from '../study/study.js';
 import type { CarryAim } from './carry.js';
 
@@ -50,7 +51,16 @@ export function settle(setting: CarrySetting, set: GivenParameters): Settled {
 }
 
 function resolved({ series, baseline, to }: CarrySetting, set: GivenParameters): Settled {
-  const { parameters, carried } = resolveParameters(baseline, set, to);
+  const { parameters, carried } = resolveParameters(baseline, withFixedEcho({ series, baseline, to }, set), to);
   const model = modelOf({ ...series, parameters }, to, baseline.model.slotFactor);
   return { parameters, carried, model, ratio: contrastRatioOf(weightedSignal(model.target), weightedSignal(model.comparison)) };
+}
+
+/** A single shot reads its lines in one go: the echo that is the centre stays the same one, and TE follows the spacing. */
+function withFixedEcho({ series, baseline, to }: Pick<CarrySetting, 'series' | 'baseline' | 'to'>, set: GivenParameters): GivenParameters {
+  if (series.family !== 'single-shot-fast-spin-echo' || set.echoTimeMs !== undefined) return set;
+  const before = series.parameters;
+  const echo = contrastEcho(before.echoTimeMs, before.echoSpacingMs, before.echoTrainLength);
+  const { parameters } = resolveParameters(baseline, set, to);
+  return { ...set, echoTimeMs: Number((echo * parameters.echoSpacingMs).toFixed(6)) };
 }

@@ -106,11 +106,13 @@ function amountOf(node: ParsedNode, subject: ExpressionSubject, depth: number): 
   if (node.type === 'AccessorNode' && nameOfAccessor(node) === subject.name) return symbolOf(subject.name, subject);
   if (node.type !== 'OperatorNode') throw new NotAllowed('this is not allowed here');
   const [left, right] = argsOf(node);
+  // The parser writes ten percent as a division by a hundred that is marked.
+  if (node.isPercentage === true) return { number: inner(left).number, of: {}, percent: true };
   switch (String(node.fn)) {
     case 'add':
-      return sum(inner(left), inner(right), 1);
+      return sum(inner(left), inner(shareOf(left, right)), 1);
     case 'subtract':
-      return sum(inner(left), inner(right), -1);
+      return sum(inner(left), inner(shareOf(left, right)), -1);
     case 'multiply':
       return product(inner(left), inner(right), 1);
     case 'divide':
@@ -123,12 +125,16 @@ function amountOf(node: ParsedNode, subject: ExpressionSubject, depth: number): 
     }
     case 'unaryPlus':
       return inner(left);
-    case 'unaryPercentage':
-    case 'percentage':
-      return { number: inner(left).number, of: {}, percent: true };
     default:
       throw new NotAllowed(`the operator ${String(node.op)} is not allowed`);
   }
+}
+
+/** `a + 10%` is parsed as `a + a * 10%`: gives back the percentage that was typed. */
+function shareOf(left: ParsedNode | undefined, right: ParsedNode | undefined): ParsedNode | undefined {
+  if (right?.type !== 'OperatorNode' || String(right.fn) !== 'multiply') return right;
+  const [of, share] = argsOf(right);
+  return of === left && share?.isPercentage === true ? share : right;
 }
 
 function nameOfAccessor(node: ParsedNode): string {

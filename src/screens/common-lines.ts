@@ -17,15 +17,14 @@ export function headlineOf(state: State): Headline {
   return ofSeries && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
 }
 
-/** The first line: the verdict in words, and the clocks that run. */
+/** The first line: the verdict in words. */
 export function headlineLine(state: State, look: Look, columns: number): Line {
   const { word, text } = headlineOf(state);
-  const clocks = clockWords(state);
   const verdict: Line =
     word === null
       ? [span(text, 'bold')]
       : [span(word, headlineStyle[word] ?? 'bold'), span(text.startsWith(word) ? text.slice(word.length) : `  ${text}`, 'bold')];
-  return withRight(verdict, clocks, columns, look);
+  return fitLine(verdict, columns, look.glyphs.ellipsis);
 }
 
 /** A line with something at its right end. */
@@ -72,7 +71,7 @@ export function noticeLine(state: State, look: Look, columns: number, idle: Line
 /** What must not be pushed out of the bottom line by the others; equals keep the order of the map. */
 function rank(brief: string): number {
   if (brief === 'help') return 0;
-  if (['step', 'type', 'open', 'start', 'done', 'change', 'practice', 'save', 'reasons', 'take'].includes(brief)) return 1;
+  if (['step', 'type', 'open', 'start', 'done', 'change', 'practice', 'cut short', 'save', 'reasons', 'take'].includes(brief)) return 1;
   if (brief === 'undo') return 2;
   if (brief === 'patient') return 3;
   return ['redo', 'order', 'end', 'quit', 'back'].includes(brief) ? 5 : 4;

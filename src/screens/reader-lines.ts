@@ -37,7 +37,8 @@ export function readerLines(state: State, look: Look): Line[] {
   let here = 0;
   for (const item of items) {
     if (item.here) here = lines.length;
-    for (const [at, words] of wrap(item.words, columns - 1).entries())
+    const said = item.here && !item.words.startsWith('Here') ? `Here: ${item.words}` : item.words;
+    for (const [at, words] of wrap(said, columns - 1).entries())
       lines.push(item.here && at === 0 ? [{ text: words, style: 'bold', cursor: true }] : [span(words)]);
   }
   const bodyRows = rows - 4;

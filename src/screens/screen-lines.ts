@@ -3,7 +3,7 @@ import { chartScreen } from './chart-screen.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { patientScreen, readingsScreen, recordScreen } from './form-screen.js';
 import { idleWords } from './idle-words.js';
-import { fill, fitLine, type Line, line, lineWidth } from './line.js';
+import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
 import { orderScreen } from './order-screen.js';
 import { readerLines } from './reader-lines.js';
@@ -34,7 +34,8 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
 export function screenLines(state: State, look: Look): Line[] {
   const { columns, rows } = state.size;
   if (columns < smallestSize.columns || rows < smallestSize.rows) {
-    return [line(`This screen is ${columns} by ${rows}: holdfast needs ${smallestSize.columns} by ${smallestSize.rows}. Nothing is lost.`)];
+    const words = `Nothing is lost: this screen is ${columns} by ${rows}, holdfast needs ${smallestSize.columns} by ${smallestSize.rows}.`;
+    return wrap(words, Math.max(1, columns)).map((each) => line(each));
   }
   if (look.reader) return readerLines(state, look);
   const bodyRows = rows - 4;

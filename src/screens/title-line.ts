@@ -4,7 +4,7 @@ import { changedKeys } from '../session/changed-keys.js';
 import { fieldHere } from '../session/hands/series-commands.js';
 import { resultNow, studySeries } from '../session/results.js';
 import type { State } from '../session/state.js';
-import { withRight } from './common-lines.js';
+import { clockWords, withRight } from './common-lines.js';
 import { type Line, span } from './line.js';
 import type { Look } from './look.js';
 import { screenWords } from './text-screen.js';
@@ -15,7 +15,10 @@ export function titleLine(state: State, look: Look, columns: number): Line {
   if (opened === null) return withRight([span('Start', 'bold')], 'holdfast', columns, look, 'quiet');
   const { study } = opened;
   const right = `${study.id}, ${opened.scanner.fieldT} T${study.status === 'starter' ? ', starter' : ''}`;
-  return withRight([span(words(state))], right, columns, look, 'quiet');
+  const clocks = clockWords(state);
+  return clocks === ''
+    ? withRight([span(words(state))], right, columns, look, 'quiet')
+    : withRight([span(words(state))], clocks, columns, look);
 }
 
 function words(state: State): string {

@@ -145,7 +145,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row(
       'c',
       'c',
-      '',
+      'cut short',
       'Cut short: the running series is stopped early.',
       stopEarly,
       (state) => state.session?.series.some(({ run }) => run !== null) === true,

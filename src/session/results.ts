@@ -14,6 +14,17 @@ interface Kept {
   readonly baseline: Baseline;
   /** Results by what they hang on, oldest first. */
   readonly results: Map<string, SeriesResult>;
+  /** The result last asked for with these very values: most questions come with the same object. */
+  readonly latest: WeakMap<
+    GivenParameters,
+    {
+      readonly series: SessionSeries['before'];
+      readonly frontBackMm: number | null;
+      readonly leftRightMm: number | null;
+      readonly rules: State['rules'];
+      readonly result: SeriesResult;
+    }
+  >;
 }
 
 /** What was worked out for a series of a study, for as long as the study is open. */
@@ -36,7 +47,11 @@ export function sessionSeries(state: State, id: string): SessionSeries {
 function keptOf(state: State, series: StudySeries): Kept {
   let known = kept.get(series);
   if (known === undefined) {
-    known = { baseline: presetBaseline(series, state.opened?.study.fieldT ?? series.parameters.repetitionTimeMs), results: new Map() };
+    known = {
+      baseline: presetBaseline(series, state.opened?.study.fieldT ?? series.parameters.repetitionTimeMs),
+      results: new Map(),
+      latest: new WeakMap(),
+    };
     kept.set(series, known);
   }
   return known;
@@ -69,8 +84,24 @@ export function bodyOf(state: State): Body {
 export function resultWith(state: State, id: string, set: GivenParameters): SeriesResult {
   const series = studySeries(state, id);
   const own = keptOf(state, series);
-  const readings = readingsOf(sessionSeries(state, id));
+  const { before } = sessionSeries(state, id);
   const body = bodyOf(state);
+  const last = own.latest.get(set);
+  if (
+    last !== undefined &&
+    last.series === before &&
+    last.frontBackMm === body.frontBackMm &&
+    last.leftRightMm === body.leftRightMm &&
+    last.rules === state.rules
+  )
+    return last.result;
+  const result = keptResult(state, series, own, set, body, readingsOf(sessionSeries(state, id)));
+  own.latest.set(set, { series: before, ...body, rules: state.rules, result });
+  return result;
+}
+
+/** The same by what the values say, not by which object holds them. */
+function keptResult(state: State, series: StudySeries, own: Kept, set: GivenParameters, body: Body, readings: Readings): SeriesResult {
   const key = JSON.stringify([set, readings, body, state.rules.size]);
   const known = own.results.get(key);
   if (known !== undefined) return known;
@@ -89,7 +120,9 @@ export function resultNow(state: State, id: string): SeriesResult {
   return resultWith(state, id, sessionSeries(state, id).set);
 }
 
+const nothingSet: GivenParameters = {};
+
 /** The preset of a series under the same circumstances. */
 export function resultOfPreset(state: State, id: string): SeriesResult {
-  return resultWith(state, id, {});
+  return resultWith(state, id, nothingSet);
 }

@@ -72,7 +72,7 @@ export function bestsWithin(tables: SearchTables, mostChanges: number, bests: Be
   const signalAndShared = [...groups.shared, ...groups.signal];
   walkPoints(setting.variables, groups.shared, mostChanges, point, (sharedChanges) => {
     const left = mostChanges - sharedChanges;
-    const buckets = lineBuckets(setting, groups, lines, point, left, 'every point', pulse);
+    const buckets = lineBuckets(setting, groups, lines, point, left, pulse);
     const lists = new SignalLists(setting, groups, signals, left, pulse);
     for (const bucket of buckets) {
       for (const signal of lists.of(bucket)) {

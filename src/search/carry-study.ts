@@ -78,8 +78,10 @@ function carriedTitle(title: string, fromT: number, toT: number): string {
 export function carriedDraft({ series, from, to, aim }: StudyCarry, filed: Study): Study {
   const where = `${filed.id} revision ${filed.revision}, ${digits(from.fieldT, 3)} T, to ${digits(to.fieldT, 3)} T`;
   const notes = `proposal, review before use: carried from ${where}, equal ${aim === 'snr' ? 'SNR' : aim}. ${filed.notes}`.trim();
+  // Who released the preset said nothing about its proposal.
+  const { released: _, ...plain } = filed;
   return {
-    ...filed,
+    ...plain,
     id: carriedId(filed.id, to.fieldT),
     title: carriedTitle(filed.title, from.fieldT, to.fieldT),
     fieldT: to.fieldT,

@@ -32,6 +32,12 @@ export interface JoinedNoise {
   readonly contrast: number | null;
 }
 
+/** What plays its lines in the same time: parameters that time asks, and times by lines. */
+interface TimeFamily {
+  readonly parameters: Parameters;
+  readonly times: Map<number, JoinedTime>;
+}
+
 const equalShare = 0.01;
 
 /** Puts line states and signal states together: the same numbers, by the same functions and in the same order as `evaluate`. */
@@ -41,7 +47,8 @@ export class Join {
   readonly #noiseBands: readonly BandLimit[];
   /** |target - comparison| of the preset, null where it is too small to compare with. */
   readonly #contrastBefore: number | null;
-  readonly #times = new Map<LineBucket, Map<string, Map<number, JoinedTime>>>();
+  readonly #byBucket = new Map<LineBucket, Map<string, TimeFamily>>();
+  readonly #families = new Map<string, TimeFamily>();
 
   constructor(setting: SearchSetting) {
     this.#setting = setting;
@@ -56,44 +63,45 @@ export class Join {
 
   /** Forgets times of buckets that are no longer needed. */
   forget(): void {
-    this.#times.clear();
+    this.#byBucket.clear();
+    this.#families.clear();
   }
 
   /** Time of a count of lines; it never falls when lines are added. */
   time(state: SignalState, bucket: LineBucket, lineCount: number): JoinedTime {
-    const byTiming = this.#timesOf(state, bucket);
-    const known = byTiming.get(lineCount);
-    if (known !== undefined) return known;
-    const computed = this.#computeTime(state, bucket, lineCount);
-    byTiming.set(lineCount, computed);
-    return computed;
+    const family = this.#familyOf(state, bucket);
+    let time = family.times.get(lineCount);
+    if (time === undefined) {
+      time = this.#computeTime(state, family.parameters, lineCount);
+      family.times.set(lineCount, time);
+    }
+    return time;
   }
 
-  #timesOf(state: SignalState, bucket: LineBucket): Map<number, JoinedTime> {
-    let ofBucket = this.#times.get(bucket);
+  #familyOf(state: SignalState, bucket: LineBucket): TimeFamily {
+    let ofBucket = this.#byBucket.get(bucket);
     if (ofBucket === undefined) {
       ofBucket = new Map();
-      this.#times.set(bucket, ofBucket);
+      this.#byBucket.set(bucket, ofBucket);
     }
-    let ofTiming = ofBucket.get(state.timeKey);
-    if (ofTiming === undefined) {
-      ofTiming = new Map();
-      ofBucket.set(state.timeKey, ofTiming);
+    let family = ofBucket.get(state.timeKey);
+    if (family === undefined) {
+      const { averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount } = bucket.parameters;
+      // Blades follow matrix and acceleration besides their lines; elsewhere lines say all.
+      const blades = this.#setting.problem.series.family === 'rotating-strip-fast-spin-echo';
+      const key = `${state.timeKey}|${averages}|${ellipticalSampling}${blades ? `|${matrixPhase}|${parallelFactorPhase}` : ''}`;
+      family = this.#families.get(key);
+      if (family === undefined) {
+        family = { parameters: { ...state.parameters, averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount }, times: new Map() };
+        this.#families.set(key, family);
+      }
+      ofBucket.set(state.timeKey, family);
     }
-    return ofTiming;
+    return family;
   }
 
-  #computeTime(state: SignalState, bucket: LineBucket, lineCount: number): JoinedTime {
+  #computeTime(state: SignalState, p: Parameters, lineCount: number): JoinedTime {
     const { problem, baseline, margins } = this.#setting;
-    const { averages, ellipticalSampling, matrixPhase, parallelFactorPhase } = bucket.parameters;
-    const p: Parameters = {
-      ...state.parameters,
-      averages,
-      ellipticalSampling,
-      matrixPhase,
-      parallelFactorPhase,
-      sliceCount: bucket.parameters.sliceCount,
-    };
     const lines = { phase: lineCount, total: lineCount } as Lines;
     const time = seriesTime(state.model.key, p, lines, state.model.rounds, problem.scanner);
     const timeRatio = problem.readings.timeS === undefined ? 1 : problem.readings.timeS / baseline.model.time.scanTimeS;

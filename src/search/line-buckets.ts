@@ -12,60 +12,47 @@ export interface LineEntry {
   /** Changed settings of the first such choice. */
   readonly changes: number;
   /** Choices that are the same to time and noise. */
-  multiplicity: number;
-  /** The first such choice, a whole point. */
+  readonly multiplicity: number;
+  /** The first such choice, a whole point whose shared variables are right. */
   readonly point: readonly number[];
+}
+
+/** What is known of a bucket before its entries are formed: never too narrow. */
+export interface BucketBound {
+  readonly fewestLines: number;
+  readonly mostLines: number;
+  /** Most SNR without signal that so many lines can give. */
+  readonly noiseAt: (lines: number) => number;
 }
 
 /** Line states that share voxel, averages and train: they differ in lines and noise alone. */
 export interface LineBucket {
   readonly train: string;
-  /** Parameters of the first state: lines and voxel are right, carried timing is not. */
+  /** A point of the bucket, for what its train does to the signal. */
+  readonly point: readonly number[];
+  /** Parameters of one state: voxel and averages are right for all, carried timing is not. */
   readonly parameters: Parameters;
   readonly volumeMm3: number;
   readonly geometryLoss: number;
   /** By lines upwards, then by SNR downwards. */
-  readonly entries: LineEntry[];
+  readonly entries: readonly LineEntry[];
+  readonly entryCount: number;
+  /** Null where the entries are formed already. */
+  readonly bound: BucketBound | null;
 }
 
-/** How entries of a bucket are kept apart. */
-export type Sameness = 'every point' | 'lines and noise';
+/** Order of entries in a bucket. */
+export function compareEntries(a: LineEntry, b: LineEntry): number {
+  return a.lineCount - b.lineCount || (b.signalFreeSnr ?? -1) - (a.signalFreeSnr ?? -1);
+}
 
-/** Collects line states into buckets. */
-class Collector {
-  readonly buckets = new Map<string, LineBucket & { readonly byKey: Map<string, LineEntry> }>();
-
-  add(state: LineState, point: readonly number[], parameters: Parameters, changes: number, sameness: Sameness, multiplicity = 1): void {
-    let bucket = this.buckets.get(state.bucket);
-    if (bucket === undefined) {
-      const { train, volumeMm3, geometryLoss } = state;
-      bucket = { train, volumeMm3, geometryLoss, parameters: { ...parameters }, entries: [], byKey: new Map() };
-      this.buckets.set(state.bucket, bucket);
-    }
-    const { lineCount, signalFreeSnr } = state;
-    if (sameness === 'lines and noise') {
-      const key = `${lineCount}|${signalFreeSnr}`;
-      const known = bucket.byKey.get(key);
-      if (known !== undefined) {
-        known.multiplicity += multiplicity;
-        return;
-      }
-      const entry = { lineCount, signalFreeSnr, changes, multiplicity, point: [...point] };
-      bucket.byKey.set(key, entry);
-      bucket.entries.push(entry);
-    } else bucket.entries.push({ lineCount, signalFreeSnr, changes, multiplicity, point: [...point] });
-  }
-
-  sorted(): LineBucket[] {
-    const buckets = [...this.buckets.values()];
-    for (const { entries } of buckets)
-      entries.sort((a, b) => a.lineCount - b.lineCount || (b.signalFreeSnr ?? -1) - (a.signalFreeSnr ?? -1));
-    return buckets;
-  }
+interface Growing extends LineBucket {
+  readonly entries: LineEntry[];
+  entryCount: number;
 }
 
 /**
- * The line states of one choice of the shared variables (which `point` holds), changing at most so many line variables.
+ * The line states of one choice of the shared variables (which `point` holds), changing at most so many line variables, one entry each.
  * States that break a band or a must-keep are left out.
  */
 export function lineBuckets(
@@ -74,14 +61,26 @@ export function lineBuckets(
   table: LineTable,
   point: number[],
   mostChanges: number,
-  sameness: Sameness,
   pulse: Pulse,
 ): LineBucket[] {
-  const collector = new Collector();
+  const buckets = new Map<string, Growing>();
   walkPoints(setting.variables, groups.lines, mostChanges, point, (changes) => {
     pulse.beat();
     const state = table.stateAt(point);
-    if (state !== null) collector.add(state, point, table.parameters, changes, sameness);
+    if (state === null) return;
+    const bucket = bucketOf(buckets, state, point, table.parameters);
+    bucket.entries.push({ lineCount: state.lineCount, signalFreeSnr: state.signalFreeSnr, changes, multiplicity: 1, point: [...point] });
+    bucket.entryCount += 1;
   });
-  return collector.sorted();
+  for (const { entries } of buckets.values()) entries.sort(compareEntries);
+  return [...buckets.values()];
+}
+
+function bucketOf(buckets: Map<string, Growing>, state: LineState, point: readonly number[], parameters: Parameters): Growing {
+  const known = buckets.get(state.bucket);
+  if (known !== undefined) return known;
+  const { train, volumeMm3, geometryLoss } = state;
+  const bucket = { train, volumeMm3, geometryLoss, point: [...point], parameters: { ...parameters }, entries: [], entryCount: 0, bound: null };
+  buckets.set(state.bucket, bucket);
+  return bucket;
 }

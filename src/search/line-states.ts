@@ -1,5 +1,5 @@
 import { wrapCautions } from '../calc/cautions/wrap-cautions.js';
-import type { Figures } from '../calc/figures.js';
+import { type Figures, figureTable } from '../calc/figures.js';
 import type { Geometry } from '../calc/geometry.js';
 import { geometryOf } from '../calc/geometry.js';
 import { acquiredLines, type Lines } from '../calc/lines.js';
@@ -30,6 +30,21 @@ export interface LineState {
   readonly geometryLoss: number;
 }
 
+/** Some of the bands and must-keeps. */
+interface Keeping {
+  readonly bands: readonly BandLimit[];
+  readonly mustKeeps: readonly MustKeep[];
+}
+
+/** Names that follow the lines of one direction, and those that follow the voxel, which a bucket shares. */
+const phaseNames: readonly string[] = [
+  'linesPhase', 'phaseFieldOfViewPercent', 'phaseOversamplingPercent', 'partialFourierPhase', 'parallelFactorPhase', 'referenceLines', 'phaseDirection',
+];
+const phaseVoxelNames: readonly string[] = ['fieldOfViewMm', 'matrixPhase', 'displayMatrix', 'voxelReadMm', 'voxelPhaseMm', 'displayedVoxelReadMm', 'displayedVoxelPhaseMm'];
+const sliceNames: readonly string[] = ['linesSlice', 'sliceOversamplingPercent', 'partialFourierSlice', 'parallelFactorSlice'];
+const sliceVoxelNames: readonly string[] = ['sliceThicknessMm', 'sliceCount', 'sliceGapMm', 'averages', 'ellipticalSampling', 'voxelSliceMm', 'coverageMm'];
+const bothVoxelNames: readonly string[] = ['voxelVolumeMm3'];
+
 /** Working copy of parameters that variables are written into. */
 type Scratch = { -readonly [K in keyof Parameters]: Parameters[K] };
 
@@ -42,6 +57,10 @@ export class LineTable {
   readonly #mustKeeps: readonly MustKeep[];
   readonly #series: { readonly plane: string; readonly parameters: Parameters };
   readonly #lineSets: readonly number[];
+  /** Bands and must-keeps by what they look at: lines along phase, along slices, or the voxel and averages that a bucket shares. */
+  readonly #apart: { readonly phase: Keeping; readonly slice: Keeping };
+  /** False where a must-keep looks at lines of both directions together: then they are gone through together. */
+  readonly factors: boolean;
   readonly #parameterNamed: (name: string) => number | boolean | null;
   #lines: Lines;
   #geometry: Geometry;
@@ -63,6 +82,73 @@ export class LineTable {
       return !isTimeCap(mustKeep, rules) && (level === 'lines' || level === 'either');
     });
     this.#lineSets = [...groups.shared, ...groups.lines];
+    const only = (known: readonly string[]): Keeping => ({
+      bands: this.#bands.filter(({ figure }) => known.includes(figure)),
+      mustKeeps: this.#mustKeeps.filter((one) => this.#variableNames(one).every((name) => known.includes(name))),
+    });
+    this.#apart = { phase: only([...phaseNames, ...phaseVoxelNames]), slice: only([...sliceNames, ...sliceVoxelNames]) };
+    this.factors = this.#mustKeeps.every((one) => {
+      const names = this.#variableNames(one);
+      const alongPhase = names.some((name) => phaseNames.includes(name));
+      const alongSlice = names.some((name) => sliceNames.includes(name));
+      const voxel = (phase: boolean) => names.some((name) => (phase ? phaseVoxelNames : sliceVoxelNames).includes(name) || bothVoxelNames.includes(name));
+      return !(alongPhase && (alongSlice || voxel(false))) && !(alongSlice && voxel(true));
+    });
+  }
+
+  /** Names of a must-keep that line variables move; values that stay are no tie. */
+  #variableNames(mustKeep: MustKeep): string[] {
+    const { variables, problem } = this.#setting;
+    const moves = (name: string) => Object.hasOwn(figureTable, name) || variables.some(({ key, sliceCounts }) => key === name || (name === 'sliceCount' && sliceCounts !== null));
+    return namesOfMustKeep(mustKeep, problem.rules).filter(moves);
+  }
+
+  /**
+   * One direction of a point by itself, the other where `point` has it: what tells it apart for time and noise, and what its bucket follows.
+   * Null where a band or a must-keep of this direction alone is broken, or the body wraps into the picture.
+   */
+  partAt(point: ArrayLike<number>, direction: 'phase' | 'slice'): { key: string; group: string; least: number; most: number } | null {
+    const { problem, baseline } = this.#setting;
+    this.#write(point);
+    const p = this.#scratch;
+    this.#geometry = geometryOf(problem.series.acquisition, p);
+    const lines = acquiredLines(baseline.model.key, p);
+    this.#lines = lines;
+    if (!this.#keeps(this.#apart[direction], direction === 'phase')) return null;
+    const train = this.#train(direction);
+    if (direction === 'phase') {
+      const group = `${train}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.displayMatrix}`;
+      const key = `${group}|${lines.encodedPhase}|${lines.phase}|${p.parallelFactorPhase}|${p.referenceLines}`;
+      return { key, group, least: Math.min(lines.phase, lines.encodedPhase / p.parallelFactorPhase), most: lines.phase };
+    }
+    const group = `${train}|${p.averages}|${p.ellipticalSampling}|${p.sliceThicknessMm}|${p.sliceCount}|${p.sliceGapMm}`;
+    const key = `${group}|${lines.encodedSlice}|${lines.slice}|${p.parallelFactorSlice}`;
+    return { key, group, least: Math.min(lines.slice, lines.encodedSlice / p.parallelFactorSlice), most: lines.slice };
+  }
+
+  /** Lines and noise of a point that is known to keep within its bands. */
+  noiseAt(point: ArrayLike<number>): Pick<LineState, 'lineCount' | 'signalFreeSnr'> {
+    const { problem, baseline } = this.#setting;
+    this.#write(point);
+    this.#lines = acquiredLines(baseline.model.key, this.#scratch);
+    const { voxelVolumeMm3 } = this.#bucketGeometry();
+    return this.#noise(this.#lines, voxelVolumeMm3, problem.series.acquisition === '3D');
+  }
+
+  #bucketGeometry(): Geometry {
+    return geometryOf(this.#setting.problem.series.acquisition, this.#scratch);
+  }
+
+  #noise(lines: Lines, voxelVolumeMm3: number, volume: boolean): Pick<LineState, 'lineCount' | 'signalFreeSnr'> {
+    const { scanner } = this.#setting.problem;
+    const { key } = this.#setting.baseline.model;
+    const p = this.#scratch;
+    const g = parallelNoiseFactor(scanner.coil, p.parallelFactorPhase, volume ? p.parallelFactorSlice : 1);
+    const simultaneousG = p.simultaneousSlices === 1 ? 1 : (scanner.simultaneousSliceG[p.simultaneousSlices] ?? 1);
+    return {
+      lineCount: volume && key !== 'inversion-prepared-gradient-echo/3D' ? lines.total : lines.phase,
+      signalFreeSnr: g === null ? null : signalFreeSnr(voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
+    };
   }
 
   /** The parameters the last `stateAt` was computed from: lines and voxel are right, carried timing is not. */
@@ -90,20 +176,11 @@ export class LineTable {
     this.#geometry = geometryOf(problem.series.acquisition, p);
     this.#lines = acquiredLines(key, p);
     if (!this.#keeps()) return null;
-    const lines = this.#lines;
     const geometry = this.#geometry;
-    const g = parallelNoiseFactor(
-      problem.scanner.coil,
-      p.parallelFactorPhase,
-      problem.series.acquisition === '3D' ? p.parallelFactorSlice : 1,
-    );
-    const simultaneousG = p.simultaneousSlices === 1 ? 1 : (problem.scanner.simultaneousSliceG[p.simultaneousSlices] ?? 1);
     const train = this.#train();
     const { coverageMm, voxelVolumeMm3 } = geometry;
     return {
-      lineCount: problem.series.acquisition === '3D' && key !== 'inversion-prepared-gradient-echo/3D' ? lines.total : lines.phase,
-      signalFreeSnr:
-        g === null ? null : signalFreeSnr(voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, problem.scanner.fieldT, simultaneousG),
+      ...this.#noise(this.#lines, voxelVolumeMm3, problem.series.acquisition === '3D'),
       train,
       bucket: `${train}|${p.averages}|${p.ellipticalSampling}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.sliceThicknessMm}|${p.sliceCount}|${coverageMm}`,
       volumeMm3: voxelVolumeMm3,
@@ -112,7 +189,9 @@ export class LineTable {
   }
 
   /** What trains that read all their lines in one go need to know of them. */
-  #train(): string {
+  #train(direction: 'phase' | 'slice' | 'both' = 'both'): string {
+    const alongSlices = this.#setting.problem.series.family === 'inversion-prepared-gradient-echo';
+    if (direction !== 'both' && alongSlices === (direction === 'phase')) return '';
     const p = this.#scratch;
     const lines = this.#lines;
     switch (this.#setting.problem.series.family) {
@@ -151,10 +230,11 @@ export class LineTable {
     }
   };
 
-  #keeps(): boolean {
-    for (const band of this.#bands) if (!withinBand(band, this.#valueNamed(band.figure) as number | null)) return false;
+  #keeps({ bands, mustKeeps }: Keeping = { bands: this.#bands, mustKeeps: this.#mustKeeps }, withWrap = true): boolean {
+    for (const band of bands) if (!withinBand(band, this.#valueNamed(band.figure) as number | null)) return false;
     const { problem, baseline, startWraps } = this.#setting;
-    for (const mustKeep of this.#mustKeeps) if (isCrossed(mustKeep, this.#valueNamed, problem.rules)) return false;
+    for (const mustKeep of mustKeeps) if (isCrossed(mustKeep, this.#valueNamed, problem.rules)) return false;
+    if (!withWrap) return true;
     this.#wraps = false;
     // Wrap needs geometry, phase direction, acceleration and bands only: the rest of a model is not formed for it.
     const model = {

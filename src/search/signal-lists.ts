@@ -29,7 +29,7 @@ export class SignalLists {
     const known = this.#lists.get(bucket.train);
     if (known !== undefined) return known;
     const entries: SignalEntry[] = [];
-    const point = [...(bucket.entries[0]?.point ?? [])];
+    const point = [...bucket.point];
     walkPoints(this.setting.variables, this.groups.signal, this.mostChanges, point, (changes) => {
       this.pulse.beat();
       const state = this.table.stateAt(point);

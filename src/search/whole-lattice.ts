@@ -1,8 +1,10 @@
 import type { Pulse } from './control.js';
 import { Front } from './front.js';
-import { type LineBucket, type LineEntry, lineBuckets } from './line-buckets.js';
+import type { BucketBound, LineBucket, LineEntry } from './line-buckets.js';
 import { countPoints, walkPoints } from './point-walk.js';
 import type { SearchTables } from './search-tables.js';
+import type { SignalState } from './signal-states.js';
+import { WholeLines } from './whole-lines.js';
 import { joinedPoint, type SignalEntry, SignalLists, undominated } from './signal-lists.js';
 
 /** What is known of all points of a lattice together. */
@@ -16,8 +18,12 @@ export interface WholeLattice {
   readonly nearest: { readonly point: readonly number[]; readonly excess: number; readonly loss: number } | null;
 }
 
-/** Pairs of a bucket and a signal state beyond which fitting points are not counted. */
-const mostPairs = 3e7;
+/** Pairs of a bucket and a signal state, and entries of buckets, beyond which fitting points are not counted. */
+const mostPairs = 1e7;
+const mostEntries = 2e6;
+
+/** Stretches of lines narrower than this are formed rather than bounded. */
+const narrowest = 1.03;
 
 /** Goes over the whole lattice: fronts by branch and bound over lines within each pair of bucket and signal state, the count by sorting. */
 export class WholeLatticeSearch {
@@ -26,13 +32,17 @@ export class WholeLatticeSearch {
   #fitting = 0;
   #counted = true;
   #pairs = 0;
+  #entries = 0;
+  readonly #lines: WholeLines;
   #nearest: { point: readonly number[]; excess: number; loss: number } | null = null;
 
   constructor(
     private readonly tables: SearchTables,
     private readonly pulse: Pulse,
     private readonly parts: 'all' | 'nearest alone' | 'fronts alone' = 'all',
-  ) {}
+  ) {
+    this.#lines = new WholeLines(tables.setting, tables.groups, tables.lines, pulse);
+  }
 
   result(): WholeLattice {
     return { timeSnr: this.timeSnr, timeLoss: this.timeLoss, fitting: this.#counted ? this.#fitting : null, nearest: this.#nearest };
@@ -46,39 +56,58 @@ export class WholeLatticeSearch {
     const rounds = countPoints(setting.variables, groups.shared, all);
     let done = 0;
     walkPoints(setting.variables, groups.shared, all, point, () => {
-      this.#sharedPoint(point);
+      this.#sharedPoint(point, (share) => {
+        this.pulse.report((done + share) / rounds);
+      });
       done += 1;
       this.pulse.report(done / rounds);
     });
   }
 
-  #sharedPoint(point: number[]): void {
-    const { setting, groups, lines, signals, join } = this.tables;
-    const all = setting.variables.length;
-    const buckets = lineBuckets(setting, groups, lines, point, all, 'lines and noise', this.pulse);
-    const lists = new SignalLists(setting, groups, signals, all, this.pulse);
+  #sharedPoint(point: number[], report: (share: number) => void): void {
+    const { setting, groups, signals, join } = this.tables;
+    const lists = new SignalLists(setting, groups, signals, setting.variables.length, this.pulse);
     const reduced = new Map<string, SignalEntry[]>();
-    for (const bucket of buckets) {
+    const buckets = bothEndsFirst(this.#lines.buckets(point));
+    for (const [i, bucket] of buckets.entries()) {
+      if (i > 0 && i % 16 === 0) report(i / buckets.length);
       const entries = lists.of(bucket);
-      if (this.parts === 'nearest alone') {
-        for (const signal of entries) this.#seekNearest(bucket, signal, skyline(bucket));
-        continue;
-      }
       let best = reduced.get(bucket.train);
       if (best === undefined) {
         best = undominated(entries);
         reduced.set(bucket.train, best);
       }
-      const line = skyline(bucket);
-      for (const signal of best) {
-        this.pulse.beat();
-        if (signals.playable(signal.state, bucket.train, bucket.parameters)) this.#branch(bucket, signal, line, 0, line.length);
-      }
-      if (this.parts === 'fronts alone') continue;
-      for (const signal of entries) this.#seekNearest(bucket, signal, line);
-      this.#count(bucket, entries);
+      if (this.parts !== 'nearest alone') this.#fronts(bucket, best);
+      if (this.parts !== 'fronts alone') this.#seekNearest(bucket, entries);
+      if (this.parts === 'all') this.#count(bucket, entries);
     }
     join.forget();
+  }
+
+  #fronts(bucket: LineBucket, signals: readonly SignalEntry[]): void {
+    let line: readonly LineEntry[] | null = null;
+    for (const signal of signals) {
+      this.pulse.beat();
+      const { state } = signal;
+      if (bucket.bound !== null && line === null && this.#beaten(bucket, bucket.bound, state, bucket.bound.fewestLines, bucket.bound.mostLines)) continue;
+      if (!this.tables.signals.playable(state, bucket.train, bucket.parameters)) continue;
+      line ??= skyline(bucket);
+      if (line.length > 0) this.#branch(bucket, signal, line, 0, line.length);
+    }
+  }
+
+  /** True when both fronts already beat whatever from..to lines of a bucket can give: then its entries need not be formed. */
+  #beaten(bucket: LineBucket, bound: BucketBound, state: SignalState, from: number, to: number): boolean {
+    const { join } = this.tables;
+    const time = join.time(state, bucket, Math.floor(from));
+    if (!time.kept) return true;
+    const noise = join.noise(state, bound.noiseAt(to));
+    if (!join.audible(noise)) return true;
+    const loss = join.loss(bucket, state, noise);
+    if ((noise.snr === null || this.timeSnr.beats(time.timeS, noise.snr)) && this.timeLoss.beats(time.timeS, loss)) return true;
+    if (to / from < narrowest) return false;
+    const middle = Math.sqrt(from * to);
+    return this.#beaten(bucket, bound, state, middle, to) && this.#beaten(bucket, bound, state, from, middle);
   }
 
   /** Offers the ways of lines from..to of a bucket to both fronts; leaves out stretches that both fronts already beat. */
@@ -107,28 +136,33 @@ export class WholeLatticeSearch {
   }
 
   /** The fewest lines that keep within the noise bands are nearest to every time limit. */
-  #seekNearest(bucket: LineBucket, signal: SignalEntry, line: readonly LineEntry[]): void {
+  #seekNearest(bucket: LineBucket, entries: readonly SignalEntry[]): void {
     const { join, groups, signals } = this.tables;
-    const { state } = signal;
-    if (this.#nearest !== null && state.rfExcess > this.#nearest.excess) return;
-    const at = firstAudible(line, (entry) => join.audible(join.noise(state, entry.signalFreeSnr)));
-    const entry = line[at];
-    if (entry === undefined) return;
-    const time = join.time(state, bucket, entry.lineCount);
-    if (!time.kept) return;
-    const excess = Math.max(time.excess, state.rfExcess);
-    if (this.#nearest !== null && excess > this.#nearest.excess) return;
-    const loss = join.loss(bucket, state, join.noise(state, entry.signalFreeSnr));
-    if (this.#nearest !== null && excess === this.#nearest.excess && loss >= this.#nearest.loss) return;
-    if (!signals.playable(state, bucket.train, bucket.parameters)) return;
-    this.#nearest = { excess, loss, point: joinedPoint(groups, entry.point, signal.point) };
+    let line: readonly LineEntry[] | null = null;
+    for (const signal of entries) {
+      const { state } = signal;
+      const held = this.#nearest;
+      if (held !== null && state.rfExcess > held.excess) continue;
+      if (bucket.bound !== null && line === null && held !== null && join.time(state, bucket, Math.floor(bucket.bound.fewestLines)).excess > held.excess) continue;
+      line ??= skyline(bucket);
+      const entry = line[firstAudible(line, ({ signalFreeSnr }) => join.audible(join.noise(state, signalFreeSnr)))];
+      if (entry === undefined) continue;
+      const time = join.time(state, bucket, entry.lineCount);
+      if (!time.kept) continue;
+      const excess = Math.max(time.excess, state.rfExcess);
+      if (held !== null && excess > held.excess) continue;
+      const loss = join.loss(bucket, state, join.noise(state, entry.signalFreeSnr));
+      if (held !== null && excess === held.excess && loss >= held.loss) continue;
+      if (signals.playable(state, bucket.train, bucket.parameters)) this.#nearest = { excess, loss, point: joinedPoint(groups, entry.point, signal.point) };
+    }
   }
 
   /** Counts the points of a bucket that fit: under each timing the first so many lines, and of those the ones with enough signal. */
   #count(bucket: LineBucket, signals: readonly SignalEntry[]): void {
     if (!this.#counted) return;
     this.#pairs += signals.length;
-    if (this.#pairs > mostPairs) {
+    this.#entries += bucket.entryCount;
+    if (this.#pairs > mostPairs || this.#entries > mostEntries) {
       this.#counted = false;
       return;
     }
@@ -187,4 +221,11 @@ function firstAudible(entries: readonly LineEntry[], test: (entry: LineEntry) =>
     else low = middle + 1;
   }
   return low;
+}
+
+/** Buckets in an order that builds good fronts early: least loss of geometry and most signal in turns. */
+function bothEndsFirst(buckets: readonly LineBucket[]): LineBucket[] {
+  const byLoss = [...buckets].sort((a, b) => a.geometryLoss - b.geometryLoss);
+  const bySignal = [...buckets].sort((a, b) => b.volumeMm3 - a.volumeMm3);
+  return [...new Set(byLoss.flatMap((bucket, i) => [bucket, bySignal[i] as LineBucket]))];
 }

@@ -15,7 +15,7 @@ import { randomProblem } from './random-problem.js';
 
 // HOLDFAST_PROOF=long: a thousand lattices in all, up to 2 x 10^5 points.
 const long = process.env['HOLDFAST_PROOF'] === 'long';
-const latticesPerClass = long ? Math.ceil(1000 / classKeys.length) : 40;
+const latticesPerClass = long ? Math.ceil(1000 / classKeys.length) : Number(process.env['HOLDFAST_PROOF_LATTICES'] ?? 40);
 const largest = long ? 2e5 : 5e3;
 const sizes: number[] = [];
 let within = 0;

@@ -1,0 +1,22 @@
+import type { SearchProblem } from '../search/problem-to-solve.js';
+import type { NothingFits } from '../search/nothing-fits.js';
+import type { SearchResult } from '../search/search.js';
+
+/** What a search gives to whoever asked: the ways, and where nothing fits what binds. */
+export interface SearchAnswer {
+  readonly result: SearchResult;
+  readonly nothing: NothingFits | null;
+}
+
+/** A numbered ask. `stop` is shared memory, since a busy worker reads no messages: anything but 0 ends the search with what it has. */
+export interface SearchAsk {
+  readonly number: number;
+  readonly problem: SearchProblem;
+  readonly stop: SharedArrayBuffer;
+}
+
+/** What comes back, with the number of its ask: only the newest counts. */
+export type SearchReply =
+  | { readonly number: number; readonly kind: 'progress'; readonly share: number }
+  | { readonly number: number; readonly kind: 'answer'; readonly answer: SearchAnswer }
+  | { readonly number: number; readonly kind: 'fault'; readonly message: string };

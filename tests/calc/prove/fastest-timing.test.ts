@@ -65,3 +65,17 @@ describe('diffusion weighting in an echo-planar spin echo', () => {
     }
   });
 });
+
+describe('the shortest cycle of an inversion-prepared gradient echo', () => {
+  const cycle = (given: GivenParameters) =>
+    fastest('inversion-prepared-gradient-echo/3D', { sliceCount: 160, sliceThicknessMm: 1, ...given }).repetitionTimeMs;
+
+  it('is TI and the readouts after the centre: 80 of 160 at 7 ms', () => {
+    expect(cycle({ inversionTimeMs: 900 })).toBeCloseTo(900 + 80 * 7, 9);
+    expect(cycle({ inversionTimeMs: undefined })).toBeCloseTo(80 * 7, 9);
+  });
+
+  it('is never shorter than TI, even where a file says fewer readouts than lie before the centre', () => {
+    expect(cycle({ inversionTimeMs: 900, echoTrainLength: 10 })).toBeCloseTo(900, 9);
+  });
+});

@@ -1,0 +1,149 @@
+import { describe, expect, it } from 'vitest';
+import { headlineOf } from '../../src/screens/common-lines.js';
+import { lineText } from '../../src/screens/line.js';
+import type { Look } from '../../src/screens/look.js';
+import { screenLines } from '../../src/screens/screen-lines.js';
+import { keyMap } from '../../src/session/key-map.js';
+import { type State, screenNames } from '../../src/session/state.js';
+import { asciiGlyphs, unicodeGlyphs } from '../../src/terminal/glyphs.js';
+import { textWidth } from '../../src/terminal/text-width.js';
+import { onField, press, sessionOn, startState } from '../session/invented-state.js';
+
+const unicode: Look = { glyphs: unicodeGlyphs, set: 'unicode', colourLevel: 0, reader: false };
+const ascii: Look = { ...unicode, glyphs: asciiGlyphs, set: 'ascii' };
+const reader: Look = { ...unicode, reader: true };
+
+const at = (state: State, columns: number, rows: number): State => ({ ...state, size: { columns, rows } });
+const textOf = (state: State, look: Look = unicode) => screenLines(state, look).map(lineText);
+
+/** Every screen, in the middle of some work. */
+function everyScreen(id: string): readonly (readonly [string, State])[] {
+  const order = press(sessionOn(id), 'p', '11', 'enter', 'escape');
+  const series = press(onField(press(order, 'enter'), 'sliceThicknessMm'), '+');
+  return [
+    ['start', startState()],
+    ['order', order],
+    ['patient', press(order, 'p')],
+    ['series', series],
+    ['series, consequences', press(series, 'tab')],
+    ['series, cautions', press(series, 'tab', 'tab')],
+    ['series, typing', press(series, '4')],
+    ['why', press(series, 'tab', 'w')],
+    ['why of a parameter', press(series, 'w')],
+    ['type these', press(series, 't')],
+    ['chart', press(series, 'c')],
+    ['readings', press(series, 'd')],
+    ['record', press(series, 'e')],
+    ['record, reasons', press(series, 'e', 'tab')],
+    ['help', press(series, 'h')],
+  ];
+}
+
+const sizes = [
+  [80, 24],
+  [100, 30],
+  [160, 50],
+] as const;
+
+describe.each(['liver-3t', 'lumbar-spine-1.5t', 'heart-cine-3t', 'brain-child-fast-3t'])('the screens of %s', (id) => {
+  describe.each(everyScreen(id))('%s', (_name, state) => {
+    it.each(sizes)('fills %i by %i: verdict first, nothing wider than the screen', (columns, rows) => {
+      for (const look of [unicode, ascii, reader]) {
+        const sized = at(state, columns, rows);
+        const lines = textOf(sized, look);
+        expect(lines).toHaveLength(rows);
+        for (const each of lines) expect(textWidth(each.trimEnd()), each).toBeLessThanOrEqual(columns);
+        expect(lines[0]?.startsWith(headlineOf(sized).text.slice(0, 40))).toBe(true);
+      }
+    });
+
+    it('is plain ASCII with the plain set', () => {
+      for (const each of textOf(at(state, 160, 50), ascii)) expect(each).toMatch(/^[\x20-\x7e]*$/);
+    });
+  });
+});
+
+describe('the series screen', () => {
+  const state = press(
+    onField(press(sessionOn('liver-3t'), 'p', '11', 'enter', 'escape', 'enter'), 'sliceCount'),
+    ...Array<string>(9).fill('-'),
+  );
+
+  it('shows both values of what differs from the preset, and what is over in words', () => {
+    const text = textOf(state).join('\n');
+    expect(text).toMatch(/slices\s+72\s+54/);
+    expect(text).toMatch(/breath-hold .*12\.8\s+s\s+over/);
+  });
+
+  it('lines its numbers up on the point, and nothing moves when a digit is added', () => {
+    const points = (of: State) =>
+      textOf(of)
+        .filter((each) => / (breath-hold|voxel read|voxel phase|voxel slice) +[+\u25ca\u2800-\u28ff]{9} /.test(each))
+        .map((each) => each.slice(40).indexOf('.', 24));
+    const before = points(onField(state, 'sliceGapMm'));
+    expect(before).toHaveLength(4);
+    expect(new Set(before).size).toBe(1);
+    expect(points(press(onField(state, 'sliceThicknessMm'), '12', 'enter'))).toEqual(before);
+  });
+
+  it('the price of the next step stands there in words of the same figures', () => {
+    const text = textOf(onField(state, 'matrixPhase')).join('\n');
+    expect(text).toMatch(/Next step\s+- 192\s+\+ 208/);
+    expect(text).toMatch(/verdict\s+OVER 1\.3 s\s+OVER 2\.3 s/);
+  });
+
+  it('shows parameters, consequences, next step, cautions and the range chart together at 160 by 50', () => {
+    const text = textOf(at(state, 160, 50)).join('\n');
+    for (const words of ['Parameters', 'Consequences', 'Next step', 'Cautions', '1 breath-hold, s', 'Type these on the scanner'])
+      expect(text).toContain(words);
+  });
+
+  it('the reader says the same figures in sentences, one thing a line', () => {
+    const said = textOf(at(state, 80, 60), reader).join('\n');
+    expect(said).toContain('breath-hold 12.8 s, -25 %, OVER its limit');
+    expect(said).toContain('slices: 54, preset 72');
+    expect(said).not.toMatch(/[\u2800-\u28ff]/);
+  });
+
+  it('a locked parameter shows as locked, with why', () => {
+    const series =
+      state.opened?.study.series.map((each) => (each.id === 't1-3d' ? { ...each, locked: ['averages' as const] } : each)) ?? [];
+    const locked = onField(
+      { ...state, notice: null, opened: state.opened === null ? null : { ...state.opened, study: { ...state.opened.study, series } } },
+      'averages',
+    );
+    const text = textOf(locked).join('\n');
+    expect(text).toMatch(/averages\s+locked\s+1/);
+    expect(text).toContain('locked in the preset');
+  });
+});
+
+describe('a screen that is too small', () => {
+  it.each([
+    [79, 24],
+    [80, 23],
+    [60, 15],
+    [20, 5],
+  ])('%i by %i says so in one sentence and loses nothing', (columns, rows) => {
+    const state = press(sessionOn('liver-3t'), 'enter');
+    const small = at(state, columns, rows);
+    expect(textOf(small).join(' ')).toContain('Nothing');
+    expect(textOf(at(small, 80, 24))).toEqual(textOf(state));
+  });
+});
+
+describe('help', () => {
+  it('is made from the key map: every key of every screen is said once', () => {
+    for (const screen of screenNames) {
+      const rows = keyMap[screen];
+      const keys = rows.filter(({ when }) => when === undefined).flatMap((row) => row.keys);
+      expect(new Set(keys).size, screen).toBe(keys.length);
+      for (const { shown, help } of rows) expect(shown === '' ? help === '' : help.length > 5).toBe(true);
+    }
+  });
+
+  it('needs no Shift for anything in a hurry', () => {
+    const letters = Object.values(keyMap).flatMap((rows) => rows.flatMap(({ keys }) => keys.filter((key) => key.length === 1)));
+    for (const key of letters) expect(key).toMatch(/[a-z0-9 .\-+=/*?]/);
+  });
+});

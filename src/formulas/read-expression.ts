@@ -189,9 +189,6 @@ function power(a: Amount, b: Amount): Amount {
 }
 
 function dimensions({ of }: Amount): string {
-  return JSON.stringify(
-    Object.entries(of)
-      .filter(([, power]) => power !== 0)
-      .sort(),
-  );
+  const kinds: readonly Dimension[] = ['length', 'time', 'angle', 'frequency', 'share'];
+  return kinds.map((kind) => of[kind] ?? 0).join(' ');
 }

@@ -141,7 +141,7 @@ class Plot {
   ) {
     this.#dots = new Uint8Array(width * height);
     this.#owner = new Int8Array(width * height).fill(-1);
-    this.#marks = new Array<string | undefined>(width * height);
+    this.#marks = Array.from({ length: width * height }, () => undefined);
   }
 
   /** Sets a dot; rows count from the bottom. */

@@ -66,7 +66,7 @@ function reasonPane(state: State, here: FormRow | undefined, { glyphs }: Look, c
 }
 
 /** Lines of a form: label, value, one of them under the hand. */
-export function formPane(
+function formPane(
   state: State,
   all: readonly FormRow[],
   here: FormRow | undefined,

@@ -13,7 +13,7 @@ import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
 import { titleLine } from './title-line.js';
 
 /** The smallest screen that is drawn. */
-export const smallestSize = { columns: 80, rows: 24 } as const;
+const smallestSize = { columns: 80, rows: 24 } as const;
 
 type Body = (state: State, look: Look, columns: number, rows: number) => Line[];
 

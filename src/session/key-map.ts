@@ -195,7 +195,7 @@ export const entryKeys: readonly Pick<KeyRow, 'shown' | 'brief'>[] = [
 ];
 
 /** The name under which the map knows a key. */
-export function keyName(key: KeyPress): string {
+function keyName(key: KeyPress): string {
   return key.name === 'text' ? (key.text ?? '') : key.name;
 }
 

@@ -22,7 +22,7 @@ export function outcomeOf(series: SessionSeries): SeriesOutcome | 'left-out' {
 }
 
 /** The must-keeps that a series crosses, in words. */
-export function crossedRules(state: State, id: string): readonly string[] {
+function crossedRules(state: State, id: string): readonly string[] {
   return resultNow(state, id)
     .mustKeeps.filter(({ status }) => status === 'crossed')
     .map(({ text }) => text);

@@ -57,11 +57,6 @@ function keptOf(state: State, series: StudySeries): Kept {
   return known;
 }
 
-/** The preset of a series, which everything is relative to. */
-export function baselineOfSeries(state: State, id: string): Baseline {
-  return keptOf(state, studySeries(state, id)).baseline;
-}
-
 /** What the scanner displayed for the preset, as the model takes it. */
 export function readingsOf(series: SessionSeries): Readings {
   const { timeS, b1rmsUt, sarWkg } = series.before ?? {};
@@ -73,7 +68,7 @@ export function readingsOf(series: SessionSeries): Readings {
 }
 
 /** This patient's extents. */
-export function bodyOf(state: State): Body {
+function bodyOf(state: State): Body {
   return { frontBackMm: state.session?.limits.frontBackMm ?? null, leftRightMm: state.session?.limits.leftRightMm ?? null };
 }
 

@@ -25,7 +25,7 @@ export function sayFieldWords(field: SeriesField, value: unknown): string | null
   if (value === undefined || value === null) return '-';
   if (field.kind === 'flag') return value === true ? 'yes' : 'no';
   if (Array.isArray(value)) return value.join(', ');
-  return typeof value === 'number' ? null : String(value).replaceAll('-', ' ');
+  return typeof value === 'string' ? value.replaceAll('-', ' ') : null;
 }
 
 /** A value of a field with its unit: `4.0 mm`, `6/8`, `breath hold`. */

@@ -8,7 +8,7 @@ export type StartRow =
   | { readonly kind: 'preset'; readonly field: string; readonly preset: PresetChoice };
 
 /** Whether a preset is meant by what was typed: a number narrows the field strength, a word the region, the id and the title. */
-export function isMeant({ study }: PresetChoice, narrowing: string): boolean {
+function isMeant({ study }: PresetChoice, narrowing: string): boolean {
   const text = `${study.region} ${study.id} ${study.title}`.toLowerCase();
   return narrowing
     .toLowerCase()

@@ -22,7 +22,7 @@ export interface Timeline {
 }
 
 /** What is left of the patient's time, s; it runs from the first series that is started. */
-export function timeLeftS(state: State): number | null {
+function timeLeftS(state: State): number | null {
   const { session } = state;
   if (session === null || session.limits.minutesLeft === null) return null;
   const goneS = session.clockFromMs === null ? 0 : Math.max(0, state.nowMs - session.clockFromMs) / 1000;

@@ -79,7 +79,7 @@ export function seriesVerdicts(state: State, id: string, result: SeriesResult = 
 }
 
 /** Caps that cannot be judged for want of the scanner's own number: SAR and B1+rms are only ever scaled from it. */
-export function missingReadings(state: State, series: SessionSeries): readonly string[] {
+function missingReadings(state: State, series: SessionSeries): readonly string[] {
   const { b1rmsCapUt = null, sarCapWkg = null } = state.session?.limits ?? {};
   const readings = readingsOf(series);
   return [
@@ -89,7 +89,7 @@ export function missingReadings(state: State, series: SessionSeries): readonly s
 }
 
 /** The verdict of the clock: everything that is still to do against the patient's minutes. */
-export function sessionVerdict(state: State): Judged | null {
+function sessionVerdict(state: State): Judged | null {
   const { totalS, leftS } = timeline(state);
   if (leftS === null) return null;
   const verdict = verdictOf('session', totalS, Math.max(0, leftS), { modelErrorPercent: 5, hasTimeReading: false });
@@ -112,7 +112,7 @@ export function sayJudged({ verdict, against, of }: Judged): string {
 }
 
 /** The same of one series among others: `OVER by 1.8 s: t1-3d, breath-hold 12.8 s, this patient 11 s`. */
-export function sayJudgedOf(id: string, judged: Judged): string {
+function sayJudgedOf(id: string, judged: Judged): string {
   return sayJudged({ ...judged, against: `${id}, ${judged.against}` });
 }
 

@@ -10,11 +10,24 @@ import { draftNow, update } from '../../src/session/update.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
 import { keyOf, startState } from './invented-state.js';
 
-const keys = [
-  ...['up', 'down', 'left', 'right', 'home', 'end', 'page-up', 'page-down', 'tab', 'shift-tab', 'enter', 'escape', 'backspace', 'delete'],
-  ...'abcdefghijklmnopqrstuvwxyz0123456789.-+=/*^()% ?:,'.split(''),
+const named = [
+  'up',
+  'down',
+  'left',
+  'right',
+  'home',
+  'end',
+  'page-up',
+  'page-down',
+  'tab',
+  'shift-tab',
+  'enter',
+  'escape',
+  'backspace',
+  'delete',
   'paste',
 ];
+const keys = named.concat([...'abcdefghijklmnopqrstuvwxyz0123456789.-+=/*^()% ?:,']);
 
 const look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader: false } as const;
 

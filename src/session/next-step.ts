@@ -28,10 +28,29 @@ export interface NextStep {
 /** Steps that are looked through for the end of a plateau. */
 const farthest = 80;
 
+/** Neighbours of a result that were asked for already: the same object every time, so that nothing is worked out twice. */
+const neighbours = new WeakMap<SeriesResult, Map<string, GivenParameters>>();
+const steps = new WeakMap<SeriesResult, Map<string, NextStep>>();
+
+function keptIn<K extends object, V>(kept: WeakMap<K, Map<string, V>>, owner: K, key: string, make: () => V): V {
+  let map = kept.get(owner);
+  if (map === undefined) {
+    map = new Map();
+    kept.set(owner, map);
+  }
+  let value = map.get(key);
+  if (value === undefined) {
+    value = make();
+    map.set(key, value);
+  }
+  return value;
+}
+
 /** The set values of a series with one field at another value. */
 export function setWith(state: State, id: string, field: SeriesField, value: unknown): GivenParameters {
-  const parameters = resultNow(state, id).parameters;
-  return { ...sessionSeries(state, id).set, ...(withField(field, value, parameters) as GivenParameters) };
+  const now = resultNow(state, id);
+  const make = () => ({ ...sessionSeries(state, id).set, ...(withField(field, value, now.parameters) as GivenParameters) });
+  return keptIn(neighbours, now, `${field.path}=${String(value)}`, make);
 }
 
 function preview(state: State, id: string, field: SeriesField, value: unknown, direction: -1 | 1): StepPreview | null {
@@ -46,6 +65,10 @@ const changesTime = (a: SeriesResult, b: SeriesResult) => Math.abs(timeOf(a) - t
 /** What one step down and one step up would do to a field of a series. */
 export function nextStep(state: State, id: string, field: SeriesField): NextStep {
   const now = resultNow(state, id);
+  return keptIn(steps, now, field.path, () => workedOut(state, id, field, now));
+}
+
+function workedOut(state: State, id: string, field: SeriesField, now: SeriesResult): NextStep {
   const value = fieldValue(field, now.parameters);
   const down = preview(state, id, field, value, -1);
   const up = preview(state, id, field, value, 1);

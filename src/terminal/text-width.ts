@@ -1,13 +1,16 @@
 import { eastAsianWidthType } from 'get-east-asian-width';
 import stringWidth from 'string-width';
 
+/** Printable ASCII, braille and the signs of `glyphs.ts`: one column each. Nearly all that is drawn, and counted without a look at every character. */
+const plainText = /^[\x20-\x7e\u00b5\u2212\u22ef\u25b4\u25b8\u25be\u25ca\u2713\u2717\u2800-\u28ff]*$/;
+
 /**
  * Columns that a text takes on the screen; escape sequences take none, East Asian wide characters and emoji two.
  *
  * @example textWidth('\u6f22a') //=> 3
  */
 export function textWidth(text: string): number {
-  return stringWidth(text);
+  return plainText.test(text) ? text.length : stringWidth(text);
 }
 
 /**
@@ -47,6 +50,7 @@ export function fitText(text: string, columns: number, ellipsis: string, align: 
   const width = textWidth(text);
   if (width <= columns) return align === 'left' ? text + ' '.repeat(columns - width) : ' '.repeat(columns - width) + text;
   if (columns <= 0) return '';
+  if (plainText.test(text)) return text.slice(0, columns - 1) + ellipsis;
   let kept = '';
   let keptWidth = 0;
   for (const grapheme of graphemesOf(text)) {

@@ -77,28 +77,45 @@ function wayLines(ways: readonly Way[], page: Page): string[] {
     const key = JSON.stringify(way.changes);
     groups.set(key, [...(groups.get(key) ?? []), way]);
   }
-  return [...groups.values()].flatMap((same, i) =>
-    oneWay(same[0] as Way, `${i + 1}. ${[...new Set(same.map(({ kind }) => kindWords[kind]))].join(', ')}`, page),
-  );
+  const common = commonCautions(ways);
+  return [
+    ...[...groups.values()].flatMap((same, i) =>
+      oneWay(same[0] as Way, `${i + 1}. ${[...new Set(same.map(({ kind }) => kindWords[kind]))].join(', ')}`, page, common),
+    ),
+    ...(common.length === 0 ? [] : [page.emphasis('heading', 'Of all these ways'), ...common.flatMap((text) => indented(text, page)), '']),
+  ];
 }
 
-function oneWay(way: Way, title: string, page: Page): string[] {
+function cautionsInWords({ cautions }: Way): string[] {
+  return cautions.filter(({ level }) => level !== 'note').map(({ level, text, code }) => `${level}: ${text} [${code}]`);
+}
+
+/** What every way says: it is said once, where there are several. */
+function commonCautions(ways: readonly Way[]): string[] {
+  const [first, ...others] = ways.map(cautionsInWords);
+  return first === undefined || others.length === 0 ? [] : first.filter((text) => others.every((texts) => texts.includes(text)));
+}
+
+function indented(text: string, page: Page): string[] {
+  return wrapText(cleanText(text), page.width - 5).map((line, i) => `   ${i === 0 ? '' : '  '}${line}`);
+}
+
+function oneWay(way: Way, title: string, page: Page, saidOnce: readonly string[] = []): string[] {
   const { figures } = way;
   const hold = figures.holdTimeS === null ? '' : `, a hold ${sayTime(figures.holdTimeS)}`;
   const time = `${sayTime(figures.scanTimeS ?? 0)}${hold}, SNR ${figures.relativeSnr === null ? 'not known' : sayRatio(figures.relativeSnr)}`;
-  const worth = way.cautions.filter(({ level }) => level !== 'note');
   const body = [
     `change: ${changesInWords(way)}`,
     `in ${time}`,
     `gives up: ${tradesInWords(way.gives)}`,
     `gains: ${tradesInWords(way.gains)}`,
     ...way.cautions.filter(({ code }) => code === 'timing-carried').map(({ text }) => `follows: ${text}`),
-    ...worth.map(({ level, text, code }) => `${level}: ${text} [${code}]`),
+    ...cautionsInWords(way).filter((text) => !saidOnce.includes(text)),
   ];
   return [
     ...wrapText(title, page.width).map((line) => page.emphasis('heading', line)),
     ...wrapText(spareInWords(way), page.width - 3).map((line) => `   ${page.emphasis(emphasisOf[way.verdict], line)}`),
-    ...body.flatMap((text) => wrapText(cleanText(text), page.width - 5).map((line, i) => `   ${i === 0 ? '' : '  '}${line}`)),
+    ...body.flatMap((text) => indented(text, page)),
     '',
   ];
 }

@@ -68,20 +68,18 @@ const limitWords: Readonly<Record<LimitKey, string>> = {
   rfRatio: "of the preset's RF power",
 };
 
-/** What is to spare of each limit: `0.7 s of a hold`. */
+/** One amount of a limit: `0.7 s of a hold`. */
+function amountInWords(key: LimitKey, amount: number): string {
+  if (key === 'holdS' || key === 'timeS') return `${sayTime(amount)} of ${limitWords[key]}`;
+  return key === 'rfRatio' ? `${Math.round(amount * 100)} % ${limitWords[key]}` : `${amount.toFixed(2)} ${limitWords[key]}`;
+}
+
+/** The verdict with what is to spare of each limit, or by how much it is over. */
 export function spareInWords({ spare, verdict }: Way): string {
-  const parts = (Object.keys(limitWords) as LimitKey[]).flatMap((key) => {
-    const value = spare[key];
-    if (value === null) return [];
-    const amount = Math.abs(value);
-    return [
-      key === 'holdS' || key === 'timeS'
-        ? `${sayTime(amount)} of ${limitWords[key]}`
-        : key === 'rfRatio'
-          ? `${Math.round(amount * 100)} % ${limitWords[key]}`
-          : `${amount.toFixed(2)} ${limitWords[key]}`,
-    ];
-  });
-  if (parts.length === 0) return verdict;
-  return verdict === 'OVER' ? `OVER` : `${verdict}, to spare: ${parts.join(', ')}`;
+  const keys = (Object.keys(limitWords) as LimitKey[]).filter(
+    (key) => spare[key] !== null && (verdict !== 'OVER' || (spare[key] as number) < 0),
+  );
+  if (keys.length === 0) return verdict;
+  const amounts = keys.map((key) => amountInWords(key, Math.abs(spare[key] as number))).join(', ');
+  return verdict === 'OVER' ? `OVER by ${amounts}` : `${verdict}, to spare: ${amounts}`;
 }

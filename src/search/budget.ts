@@ -237,7 +237,7 @@ export function planBudget(budget: BudgetProblem, control: SearchControl = {}): 
     return totalOf(chosen.map((at, i) => (usable[i] as PlanItem).options[at] as GroupOption));
   };
   const dropped = dropOne(choices, budget, limitUs);
-  const free = dropped !== null && dropped.options.every(({ kept }) => kept) ? dropped : solve(items);
+  const free = dropped?.options.every(({ kept }) => kept) ? dropped : solve(items);
   const plan = dropped ?? free;
   const other = dropped !== null && dropped !== free ? free : null;
   const close = other !== null && Math.abs(other.value - plan.value) <= closeShare * plan.value ? other : null;

@@ -92,7 +92,10 @@ export class Join {
       const key = `${state.timeKey}|${averages}|${ellipticalSampling}${blades ? `|${matrixPhase}|${parallelFactorPhase}` : ''}`;
       family = this.#families.get(key);
       if (family === undefined) {
-        family = { parameters: { ...state.parameters, averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount }, times: new Map() };
+        family = {
+          parameters: { ...state.parameters, averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount },
+          times: new Map(),
+        };
         this.#families.set(key, family);
       }
       ofBucket.set(state.timeKey, family);
@@ -121,8 +124,11 @@ export class Join {
       if (own > rank) rank = own;
       excess = Math.max(excess, (value ?? Number.POSITIVE_INFINITY) / limit);
     }
-    const valueNamed = namedValues(p, { ...figures, tableTimeS: time.tableTimeS } as unknown as Figures);
-    const kept = !this.#timeCaps.some((cap) => isCrossed(cap, valueNamed, problem.rules));
+    let kept = true;
+    if (this.#timeCaps.length > 0) {
+      const valueNamed = namedValues(p, { ...figures, tableTimeS: time.tableTimeS } as unknown as Figures);
+      kept = !this.#timeCaps.some((cap) => isCrossed(cap, valueNamed, problem.rules));
+    }
     return { timeS: comparedTimeS(this.#setting, figures), rank, excess, kept };
   }
 
@@ -143,6 +149,28 @@ export class Join {
       snr: snr !== null && Number.isFinite(snr) ? snr : null,
       contrast: contrast !== null && Number.isFinite(contrast) ? contrast : null,
     };
+  }
+
+  /** `audible` of `noise`, without forming it. */
+  audibleAt(state: SignalState, signalFreeSnr: number | null): boolean {
+    if (this.#noiseBands.length === 0) return true;
+    const { baseline } = this.#setting;
+    const before = baseline.model.signalFreeSnr;
+    const { targetSignal } = baseline;
+    const { target, comparison } = state;
+    if (signalFreeSnr === null || before === null || target === null || targetSignal === null) return false;
+    const ratio = signalFreeSnr / before;
+    for (const band of this.#noiseBands) {
+      if (band.figure === 'relativeSnr') {
+        if (!withinBand(band, (ratio * target) / targetSignal)) return false;
+      } else if (
+        comparison === null ||
+        this.#contrastBefore === null ||
+        !withinBand(band, (ratio * Math.abs(target - comparison)) / this.#contrastBefore)
+      )
+        return false;
+    }
+    return true;
   }
 
   /** True when SNR and contrast keep within their bands; more signal without noise never breaks one. */

@@ -80,7 +80,16 @@ function bucketOf(buckets: Map<string, Growing>, state: LineState, point: readon
   const known = buckets.get(state.bucket);
   if (known !== undefined) return known;
   const { train, volumeMm3, geometryLoss } = state;
-  const bucket = { train, volumeMm3, geometryLoss, point: [...point], parameters: { ...parameters }, entries: [], entryCount: 0, bound: null };
+  const bucket = {
+    train,
+    volumeMm3,
+    geometryLoss,
+    point: [...point],
+    parameters: { ...parameters },
+    entries: [],
+    entryCount: 0,
+    bound: null,
+  };
   buckets.set(state.bucket, bucket);
   return bucket;
 }

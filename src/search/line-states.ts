@@ -38,11 +38,33 @@ interface Keeping {
 
 /** Names that follow the lines of one direction, and those that follow the voxel, which a bucket shares. */
 const phaseNames: readonly string[] = [
-  'linesPhase', 'phaseFieldOfViewPercent', 'phaseOversamplingPercent', 'partialFourierPhase', 'parallelFactorPhase', 'referenceLines', 'phaseDirection',
+  'linesPhase',
+  'phaseFieldOfViewPercent',
+  'phaseOversamplingPercent',
+  'partialFourierPhase',
+  'parallelFactorPhase',
+  'referenceLines',
+  'phaseDirection',
 ];
-const phaseVoxelNames: readonly string[] = ['fieldOfViewMm', 'matrixPhase', 'displayMatrix', 'voxelReadMm', 'voxelPhaseMm', 'displayedVoxelReadMm', 'displayedVoxelPhaseMm'];
+const phaseVoxelNames: readonly string[] = [
+  'fieldOfViewMm',
+  'matrixPhase',
+  'displayMatrix',
+  'voxelReadMm',
+  'voxelPhaseMm',
+  'displayedVoxelReadMm',
+  'displayedVoxelPhaseMm',
+];
 const sliceNames: readonly string[] = ['linesSlice', 'sliceOversamplingPercent', 'partialFourierSlice', 'parallelFactorSlice'];
-const sliceVoxelNames: readonly string[] = ['sliceThicknessMm', 'sliceCount', 'sliceGapMm', 'averages', 'ellipticalSampling', 'voxelSliceMm', 'coverageMm'];
+const sliceVoxelNames: readonly string[] = [
+  'sliceThicknessMm',
+  'sliceCount',
+  'sliceGapMm',
+  'averages',
+  'ellipticalSampling',
+  'voxelSliceMm',
+  'coverageMm',
+];
 const bothVoxelNames: readonly string[] = ['voxelVolumeMm3'];
 
 /** Working copy of parameters that variables are written into. */
@@ -91,7 +113,8 @@ export class LineTable {
       const names = this.#variableNames(one);
       const alongPhase = names.some((name) => phaseNames.includes(name));
       const alongSlice = names.some((name) => sliceNames.includes(name));
-      const voxel = (phase: boolean) => names.some((name) => (phase ? phaseVoxelNames : sliceVoxelNames).includes(name) || bothVoxelNames.includes(name));
+      const voxel = (phase: boolean) =>
+        names.some((name) => (phase ? phaseVoxelNames : sliceVoxelNames).includes(name) || bothVoxelNames.includes(name));
       return !(alongPhase && (alongSlice || voxel(false))) && !(alongSlice && voxel(true));
     });
   }
@@ -99,7 +122,9 @@ export class LineTable {
   /** Names of a must-keep that line variables move; values that stay are no tie. */
   #variableNames(mustKeep: MustKeep): string[] {
     const { variables, problem } = this.#setting;
-    const moves = (name: string) => Object.hasOwn(figureTable, name) || variables.some(({ key, sliceCounts }) => key === name || (name === 'sliceCount' && sliceCounts !== null));
+    const moves = (name: string) =>
+      Object.hasOwn(figureTable, name) ||
+      variables.some(({ key, sliceCounts }) => key === name || (name === 'sliceCount' && sliceCounts !== null));
     return namesOfMustKeep(mustKeep, problem.rules).filter(moves);
   }
 
@@ -147,7 +172,8 @@ export class LineTable {
     const simultaneousG = p.simultaneousSlices === 1 ? 1 : (scanner.simultaneousSliceG[p.simultaneousSlices] ?? 1);
     return {
       lineCount: volume && key !== 'inversion-prepared-gradient-echo/3D' ? lines.total : lines.phase,
-      signalFreeSnr: g === null ? null : signalFreeSnr(voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
+      signalFreeSnr:
+        g === null ? null : signalFreeSnr(voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
     };
   }
 

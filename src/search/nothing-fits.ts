@@ -102,7 +102,7 @@ function questionFor(binder: Binder): WayKind {
   return binder.kind === 'band' && binder.figure === 'relativeContrast' ? 'best-contrast' : 'closest';
 }
 
-function wayWithout(setting: SearchSetting, binders: readonly Binder[], control: SearchControl): Way | null {
+function wayWithout(setting: SearchSetting, original: SearchSetting, binders: readonly Binder[], control: SearchControl): Way | null {
   const tables = tablesOf(setting);
   const pulse = new Pulse(stopOnly(control));
   const bests = new Bests();
@@ -110,7 +110,8 @@ function wayWithout(setting: SearchSetting, binders: readonly Binder[], control:
     bestsWithin(tables, most, bests, pulse);
   const kind = questionFor(binders[0] as Binder);
   const best = bests.best(kind, 0) ?? bests.best(kind, 1) ?? bests.best('closest', 0) ?? bests.best('closest', 1);
-  return best === null ? null : wayOf(setting, kind, best.point);
+  // What is to spare, and by how much it is over, is said of the limits as they were given.
+  return best === null ? null : wayOf(original, kind, best.point);
 }
 
 /** What the way needs of each removed limit. */
@@ -134,6 +135,7 @@ function needsOf(way: Way, binders: readonly Binder[], setting: SearchSetting): 
 export function nothingFits(problem: SearchProblem, control: SearchControl = {}): NothingFits {
   const binders = bindersOf(problem);
   const bindings: Binding[] = [];
+  const original = settingOf(problem);
   try {
     for (let size = 1; size <= Math.min(largestSet, binders.length) && bindings.length === 0; size += 1) {
       const sets = setsOf(binders, size);
@@ -141,7 +143,7 @@ export function nothingFits(problem: SearchProblem, control: SearchControl = {})
         control.progress?.(i / sets.length);
         const setting = settingOf(without(problem, set));
         if (!hasWay(setting, control)) return;
-        const way = wayWithout(setting, set, control);
+        const way = wayWithout(setting, original, set, control);
         if (way !== null) bindings.push({ binders: set, way, needs: needsOf(way, set, setting) });
       });
     }

@@ -9,7 +9,7 @@ export function walkPoints(
   which: readonly number[],
   mostChanges: number,
   point: number[],
-  visit: (changes: number) => boolean | void,
+  visit: (changes: number) => boolean | undefined,
 ): boolean {
   const step = (depth: number, changes: number): boolean => {
     if (depth === which.length) return visit(changes) !== false;

@@ -1,3 +1,4 @@
+import { modelOf } from '../calc/model.js';
 import { resolveParameters } from '../calc/resolve.js';
 import { type Groups, groupsOf } from './groups.js';
 import { Join } from './join.js';
@@ -18,7 +19,9 @@ export interface SearchTables {
 export function tablesOf(setting: SearchSetting): SearchTables {
   const { problem, baseline } = setting;
   const groups = groupsOf(setting);
-  const start = resolveParameters(baseline, problem.set, problem.scanner).parameters;
+  const { parameters } = resolveParameters(baseline, problem.set, problem.scanner);
+  // What the class cannot use has no effect: the model says what is left.
+  const start = modelOf({ ...problem.series, parameters }, problem.scanner, baseline.model.slotFactor).series.parameters;
   return {
     setting,
     groups,

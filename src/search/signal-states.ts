@@ -1,10 +1,10 @@
-import { seriesNullMs } from '../calc/baseline.js';
+import { contrastRatioOf, seriesNullMs } from '../calc/baseline.js';
 import { blurFwhmPx } from '../calc/blur.js';
 import type { AddCaution } from '../calc/caution.js';
 import { driftCautions } from '../calc/cautions/drift-cautions.js';
 import { echoPairCautions } from '../calc/cautions/echo-pair-cautions.js';
 import { classRow } from '../calc/classes.js';
-import { type Comparison, compareWith } from '../calc/compare.js';
+import { compareWith } from '../calc/compare.js';
 import { evaluate } from '../calc/evaluate.js';
 import { type FigureKey, type Figures, figureTable } from '../calc/figures.js';
 import { geometryOf } from '../calc/geometry.js';
@@ -12,6 +12,7 @@ import { type MinimumTiming, minimumTiming } from '../calc/minimum-timing.js';
 import { modelOf, type SeriesModel, weightedSignal } from '../calc/model.js';
 import type { ParameterKey } from '../calc/parameters.js';
 import { resolveParameters } from '../calc/resolve.js';
+import { sarTrend } from '../calc/rf.js';
 import type { Parameters } from '../calc/series.js';
 import { contrastEcho } from '../calc/signal/echo-train-signal.js';
 import { namedValues } from '../formulas/formula-names.js';
@@ -20,14 +21,15 @@ import { trainLoss } from './balanced-loss.js';
 import { type BandLimit, withinBand } from './bands.js';
 import { type Groups, levelOf, noiseFigures } from './groups.js';
 import { pointParameters } from './lattice.js';
-import { limitedValue, limitKeys, limitVerdict, verdictRank } from './limits.js';
+import { limitedValue, limitVerdict, verdictRank } from './limits.js';
 import { isCrossed, isTimeCap, namesOfMustKeep } from './must-keep-test.js';
 import { noFurtherBelow, type SearchSetting, shortfallOf } from './setting.js';
+import { SignalShortcut, type StateModel } from './signal-shortcut.js';
 
 /** Timing, signal and RF of one choice of the signal variables, for one train and one choice of the shared ones. */
 export interface SignalState {
   readonly parameters: Parameters;
-  readonly model: SeriesModel;
+  readonly model: StateModel;
   readonly target: number | null;
   readonly comparison: number | null;
   readonly blurPx: number | null;
@@ -56,6 +58,8 @@ const timedKeys: readonly ParameterKey[] = [
   'fatSuppressionEveryLines',
   'rfPulseStretch',
 ];
+/** Pulses take time of their own only where the distance of fat-suppression blocks is stated. */
+const blockKeys: readonly ParameterKey[] = ['fatSuppression', 'fatSuppressionEveryLines', 'rfPulseStretch'];
 /** What the estimates of the shortest timing follow besides the pulses. */
 const minimumKeys: readonly ParameterKey[] = [
   'echoTimeMs',
@@ -69,11 +73,41 @@ const minimumKeys: readonly ParameterKey[] = [
   'matrixRead',
 ];
 
+/** Values of some parameters as one word. */
+function idOf(keys: readonly ParameterKey[], p: Parameters): string {
+  let id = '';
+  for (const key of keys) id += `${p[key]}|`;
+  return id;
+}
+
+const rfLimitKeys = ['b1rmsUt', 'sarWkg', 'rfRatio'] as const;
+
+type QuickFigures = Pick<
+  Figures,
+  | 'scanTimeS'
+  | 'holdTimeS'
+  | 'contrastRatio'
+  | 'contrastRatioChange'
+  | 'b1PlusRmsUt'
+  | 'rfPowerTrend'
+  | 'sarTrendLow'
+  | 'sarTrendHigh'
+  | 'blurFwhmPx'
+>;
+
 /** Computes signal states of a setting: resolve and model once for each, then only what a way asks. */
 export class SignalTable {
   readonly #setting: SearchSetting;
   readonly #bands: readonly BandLimit[];
   readonly #mustKeeps: readonly MustKeep[];
+  /** Null where each state needs its whole model. */
+  readonly #shortcut: SignalShortcut | null;
+  /** Variables that move a signal state. */
+  readonly #moving: readonly number[];
+  /** Of the parameters that time and shortest timing follow, those that a variable or carried timing can move. */
+  readonly #timed: readonly ParameterKey[];
+  readonly #minimal: readonly ParameterKey[];
+  readonly #blurs = { linear: new Map<number, number | null>(), centric: new Map<number, number | null>() };
   /** Estimates of the shortest timing, by `minimumKey`, train and voxel. */
   readonly #minima = new Map<string, MinimumTiming>();
 
@@ -81,6 +115,20 @@ export class SignalTable {
     const { problem, bands } = setting;
     const { series, rules } = problem;
     this.#setting = setting;
+    this.#shortcut = SignalShortcut.serves(setting) ? new SignalShortcut(setting) : null;
+    this.#moving = [...groups.shared, ...groups.signal];
+    const moved: readonly ParameterKey[] = [
+      ...setting.variables.map(({ key }) => key),
+      'repetitionTimeMs',
+      'echoTimeMs',
+      'echoSpacingMs',
+      'echoTrainLength',
+    ];
+    const blocks =
+      problem.series.parameters.fatSuppressionEveryLines !== undefined ||
+      setting.variables.some(({ key }) => key === 'fatSuppressionEveryLines');
+    this.#timed = timedKeys.filter((key) => moved.includes(key) && (blocks || !blockKeys.includes(key)));
+    this.#minimal = minimumKeys.filter((key) => moved.includes(key));
     const here = (level: string) => level === 'signal' || (groups.tied && level === 'both');
     this.#bands = bands.filter(({ figure }) => here(levelOf([figure], groups, setting)) && !noiseFigures.includes(figure));
     this.#mustKeeps = series.mustKeep.filter(
@@ -91,88 +139,120 @@ export class SignalTable {
   /** The state of a point, whose line variables stand for its train; null where it is an error or breaks a band or a must-keep of the signal. */
   stateAt(point: ArrayLike<number>): SignalState | null {
     const setting = this.#setting;
-    const { problem, baseline, presetFigures } = setting;
-    const { series, scanner, readings, limits } = problem;
-    const { parameters } = resolveParameters(baseline, pointParameters(setting.variables, point, problem.set), scanner);
-    const model = modelOf({ ...series, parameters }, scanner, baseline.model.slotFactor);
-    if (model.impossible !== null || (series.purpose === 'dynamic' && model.rounds > 1)) return null;
-    const comparison = compareWith(model, baseline);
-    if (this.#hasError(model, comparison)) return null;
+    const { problem, presetFigures } = setting;
+    const { readings, limits } = problem;
+    const model = this.#shortcut === null ? this.#wholeModel(point) : this.#shortcut.modelAt(point, this.#moving);
+    if (model === null) return null;
+    const { parameters } = model;
     const blurPx = this.#blurPx(model);
-    const figures = this.#quickFigures(model, comparison, blurPx);
+    const figures = this.#quickFigures(model, blurPx);
     if (!this.#keeps(model, figures)) return null;
     let rfRank: 0 | 1 | 2 = 0;
     let rfExcess = 0;
-    for (const key of limitKeys) {
+    for (const key of rfLimitKeys) {
       const limit = limits[key];
-      if (limit === undefined || key === 'holdS' || key === 'timeS') continue;
-      const value = limitedValue(key, { ...presetFigures, ...figures }, readings);
+      if (limit === undefined) continue;
+      const value = limitedValue(key, figures, readings);
       const rank = verdictRank[limitVerdict(key, value, limit, setting.margins).word];
       if (rank > rfRank) rfRank = rank;
       rfExcess = Math.max(rfExcess, (value ?? Number.POSITIVE_INFINITY) / limit);
     }
-    const power = figures.rfPowerTrend as number | null;
+    const power = figures.rfPowerTrend;
+    const { excitation, refocusing } = model.pulses;
     return {
       parameters,
       model,
-      target: weightedSignal(model.target),
-      comparison: weightedSignal(model.comparison),
+      target: model.target,
+      comparison: model.comparison,
       blurPx,
       power,
       trainLoss: trainLoss(blurPx, presetFigures.blurFwhmPx, power, setting.rfCapped),
       rfRank,
       rfExcess,
-      timeKey: `${timedKeys.map((key) => parameters[key]).join('|')}|${model.rounds}`,
-      minimumKey: `${minimumKeys.map((key) => parameters[key]).join('|')}|${model.pulses.excitation.durationMs}|${model.pulses.refocusing?.durationMs}`,
+      timeKey: `${idOf(this.#timed, parameters)}${model.rounds}`,
+      minimumKey: `${idOf(this.#minimal, parameters)}${excitation.durationMs}|${refocusing?.durationMs}`,
     };
   }
 
-  #hasError(model: SeriesModel, comparison: Comparison): boolean {
+  /** The model of a point by resolving and modelling it whole; null where it is an error. */
+  #wholeModel(point: ArrayLike<number>): StateModel | null {
+    const { problem, baseline, variables } = this.#setting;
+    const { series, scanner } = problem;
+    const { parameters } = resolveParameters(baseline, pointParameters(variables, point, problem.set), scanner);
+    const model = modelOf({ ...series, parameters }, scanner, baseline.model.slotFactor);
+    if (model.impossible !== null || (series.purpose === 'dynamic' && model.rounds > 1) || this.#hasError(model)) return null;
+    const { key, rounds, lines, pulses, b1PlusRmsUt } = model;
+    return {
+      parameters: model.series.parameters,
+      key,
+      rounds,
+      lines,
+      pulses,
+      target: weightedSignal(model.target),
+      comparison: weightedSignal(model.comparison),
+      targetT2Ms: model.target?.t2Ms ?? null,
+      b1PlusRmsUt,
+    };
+  }
+
+  #hasError(model: SeriesModel): boolean {
     const { baseline } = this.#setting;
     const p = model.series.parameters;
     let error = false;
     const add: AddCaution = (_code, level) => {
       if (level === 'error') error = true;
     };
-    if (p.inversionTimeMs !== undefined || p.diffusion !== undefined) driftCautions(model, seriesNullMs(model), comparison, baseline, add);
+    if (p.inversionTimeMs !== undefined || p.diffusion !== undefined)
+      driftCautions(model, seriesNullMs(model), compareWith(model, baseline), baseline, add);
     if (p.secondEchoTimeMs !== undefined) echoPairCautions(model, add);
     return error;
   }
 
-  #blurPx(model: SeriesModel): number | null {
-    const p = model.series.parameters;
-    if (!classRow(model.key).train || model.target === null) return null;
+  #blurPx({ key, parameters: p, targetT2Ms }: StateModel): number | null {
+    if (targetT2Ms === null || !classRow(key).train) return null;
+    const id = (p.echoTrainLength * p.echoSpacingMs) / targetT2Ms;
     const echo = contrastEcho(p.echoTimeMs, p.echoSpacingMs, p.echoTrainLength);
-    const blur = blurFwhmPx((p.echoTrainLength * p.echoSpacingMs) / model.target.t2Ms, echo <= 2 ? 'centric' : 'linear');
-    return Number.isFinite(blur) ? blur : null;
+    const order = echo <= 2 ? 'centric' : 'linear';
+    const known = this.#blurs[order].get(id);
+    if (known !== undefined) return known;
+    const blur = blurFwhmPx(id, order);
+    const value = Number.isFinite(blur) ? blur : null;
+    this.#blurs[order].set(id, value);
+    return value;
   }
 
-  #quickFigures(model: SeriesModel, comparison: Comparison, blurPx: number | null): Partial<Record<FigureKey, number | null>> {
-    const { readings } = this.#setting.problem;
-    const b1Ratio = readings.b1rmsUt === undefined ? 1 : readings.b1rmsUt / this.#setting.baseline.model.b1PlusRmsUt;
+  /** Figures that follow the signal alone, as `compareWith` and `evaluate` give them. */
+  #quickFigures({ target, comparison, b1PlusRmsUt }: StateModel, blurPx: number | null): QuickFigures {
+    const { problem, baseline } = this.#setting;
+    const b1Ratio = problem.readings.b1rmsUt === undefined ? 1 : problem.readings.b1rmsUt / baseline.model.b1PlusRmsUt;
     const finite = (value: number | null) => (value !== null && Number.isFinite(value) ? value : null);
+    const contrastRatio = contrastRatioOf(target, comparison);
+    const before = baseline.contrastRatio;
+    const power = (b1PlusRmsUt / baseline.model.b1PlusRmsUt) ** 2;
+    const sar = sarTrend(power, problem.scanner.fieldT / baseline.model.scanner.fieldT);
     return {
-      contrastRatio: finite(comparison.contrastRatio),
-      contrastRatioChange: finite(comparison.contrastRatioChange),
-      b1PlusRmsUt: finite(model.b1PlusRmsUt * b1Ratio),
-      rfPowerTrend: finite(comparison.rfPowerTrend),
-      sarTrendLow: finite(comparison.sarTrendLow),
-      sarTrendHigh: finite(comparison.sarTrendHigh),
+      scanTimeS: null,
+      holdTimeS: null,
+      contrastRatio: finite(contrastRatio),
+      contrastRatioChange: finite(contrastRatio === null || before === null || before === 0 ? null : contrastRatio / before - 1),
+      b1PlusRmsUt: finite(b1PlusRmsUt * b1Ratio),
+      rfPowerTrend: finite(power),
+      sarTrendLow: finite(sar.low),
+      sarTrendHigh: finite(sar.high),
       blurFwhmPx: blurPx,
     };
   }
 
-  #keeps(model: SeriesModel, quick: Partial<Record<FigureKey, number | null>>): boolean {
+  #keeps({ parameters }: StateModel, quick: QuickFigures): boolean {
     if (this.#bands.length === 0 && this.#mustKeeps.length === 0) return true;
     const { problem, baseline } = this.#setting;
     let all: Figures | null = null;
     const figure = (name: FigureKey): number | null => {
-      const known = quick[name];
-      if (known !== undefined) return known;
-      all ??= evaluate(model.series, problem.scanner, problem.body, baseline, { readings: problem.readings }).figures;
+      if (name !== 'scanTimeS' && name !== 'holdTimeS' && Object.hasOwn(quick, name)) return quick[name as keyof QuickFigures];
+      all ??= evaluate({ ...problem.series, parameters }, problem.scanner, problem.body, baseline, { readings: problem.readings }).figures;
       return all[name];
     };
-    const parameterNamed = namedValues(model.series.parameters, {} as Figures);
+    const parameterNamed = namedValues(parameters, {} as Figures);
     const valueNamed = (name: string) => (Object.hasOwn(figureTable, name) ? figure(name as FigureKey) : parameterNamed(name));
     return (
       this.#bands.every((band) => withinBand(band, figure(band.figure))) &&

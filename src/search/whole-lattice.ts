@@ -3,9 +3,9 @@ import { Front } from './front.js';
 import type { BucketBound, LineBucket, LineEntry } from './line-buckets.js';
 import { countPoints, walkPoints } from './point-walk.js';
 import type { SearchTables } from './search-tables.js';
+import { joinedPoint, type SignalEntry, SignalLists, undominated } from './signal-lists.js';
 import type { SignalState } from './signal-states.js';
 import { WholeLines } from './whole-lines.js';
-import { joinedPoint, type SignalEntry, SignalLists, undominated } from './signal-lists.js';
 
 /** What is known of all points of a lattice together. */
 export interface WholeLattice {
@@ -89,7 +89,12 @@ export class WholeLatticeSearch {
     for (const signal of signals) {
       this.pulse.beat();
       const { state } = signal;
-      if (bucket.bound !== null && line === null && this.#beaten(bucket, bucket.bound, state, bucket.bound.fewestLines, bucket.bound.mostLines)) continue;
+      if (
+        bucket.bound !== null &&
+        line === null &&
+        this.#beaten(bucket, bucket.bound, state, bucket.bound.fewestLines, bucket.bound.mostLines)
+      )
+        continue;
       if (!this.tables.signals.playable(state, bucket.train, bucket.parameters)) continue;
       line ??= skyline(bucket);
       if (line.length > 0) this.#branch(bucket, signal, line, 0, line.length);
@@ -143,9 +148,15 @@ export class WholeLatticeSearch {
       const { state } = signal;
       const held = this.#nearest;
       if (held !== null && state.rfExcess > held.excess) continue;
-      if (bucket.bound !== null && line === null && held !== null && join.time(state, bucket, Math.floor(bucket.bound.fewestLines)).excess > held.excess) continue;
+      if (
+        bucket.bound !== null &&
+        line === null &&
+        held !== null &&
+        join.time(state, bucket, Math.floor(bucket.bound.fewestLines)).excess > held.excess
+      )
+        continue;
       line ??= skyline(bucket);
-      const entry = line[firstAudible(line, ({ signalFreeSnr }) => join.audible(join.noise(state, signalFreeSnr)))];
+      const entry = line[firstAudible(line, ({ signalFreeSnr }) => join.audibleAt(state, signalFreeSnr))];
       if (entry === undefined) continue;
       const time = join.time(state, bucket, entry.lineCount);
       if (!time.kept) continue;
@@ -153,7 +164,8 @@ export class WholeLatticeSearch {
       if (held !== null && excess > held.excess) continue;
       const loss = join.loss(bucket, state, join.noise(state, entry.signalFreeSnr));
       if (held !== null && excess === held.excess && loss >= held.loss) continue;
-      if (signals.playable(state, bucket.train, bucket.parameters)) this.#nearest = { excess, loss, point: joinedPoint(groups, entry.point, signal.point) };
+      if (signals.playable(state, bucket.train, bucket.parameters))
+        this.#nearest = { excess, loss, point: joinedPoint(groups, entry.point, signal.point) };
     }
   }
 
@@ -191,7 +203,7 @@ export class WholeLatticeSearch {
         sums.set(state.timeKey, sum);
       }
       if (sum[0] === 0) continue;
-      const from = firstAudible(ordered, (entry) => join.audible(join.noise(state, entry.signalFreeSnr)));
+      const from = firstAudible(ordered, (entry) => join.audibleAt(state, entry.signalFreeSnr));
       const points = sum[from] as number;
       if (points > 0 && table.playable(state, bucket.train, bucket.parameters)) this.#fitting += points;
     }

@@ -10,11 +10,25 @@ import type { SearchSetting } from './setting.js';
 
 /** Parameters along the phase direction: with those of the slices they make lines, and nothing else joins the two. */
 const planeKeys: readonly ParameterKey[] = [
-  'fieldOfViewMm', 'matrixPhase', 'phaseFieldOfViewPercent', 'phaseOversamplingPercent', 'partialFourierPhase', 'parallelFactorPhase', 'referenceLines',
-  'phaseDirection', 'displayMatrix',
+  'fieldOfViewMm',
+  'matrixPhase',
+  'phaseFieldOfViewPercent',
+  'phaseOversamplingPercent',
+  'partialFourierPhase',
+  'parallelFactorPhase',
+  'referenceLines',
+  'phaseDirection',
+  'displayMatrix',
 ];
 /** Shared parameters that lines along phase do not follow. */
-const apartFromPlane: readonly ParameterKey[] = ['sliceThicknessMm', 'sliceCount', 'rounds', 'pixelBandwidthHz', 'simultaneousSlices', 'averages'];
+const apartFromPlane: readonly ParameterKey[] = [
+  'sliceThicknessMm',
+  'sliceCount',
+  'rounds',
+  'pixelBandwidthHz',
+  'simultaneousSlices',
+  'averages',
+];
 
 /** Entries of a bucket that are formed without asking for bounds first. */
 const fewEntries = 500;
@@ -158,7 +172,11 @@ export class WholeLines {
    * Bounds of a bucket: lines are never fewer than those encoded over acceleration, and lines that average noise never more than those acquired
    * (Cauchy-Schwarz on `S^2 / (C + g^2 R (S - C))` and `C + (S - C) / R` with g >= 1).
    */
-  #boundOf(plane: readonly Part[], slice: readonly Part[], { parameters, volumeMm3 }: Pick<LineBucket, 'parameters' | 'volumeMm3'>): BucketBound | null {
+  #boundOf(
+    plane: readonly Part[],
+    slice: readonly Part[],
+    { parameters, volumeMm3 }: Pick<LineBucket, 'parameters' | 'volumeMm3'>,
+  ): BucketBound | null {
     // Readouts of a cycle take no time of their own, and few entries are formed as quickly as bounded.
     if (this.#setting.problem.series.family === 'inversion-prepared-gradient-echo' || plane.length * slice.length < fewEntries) return null;
     const smallest = (parts: readonly Part[]) => Math.min(...parts.map(({ least }) => least));

@@ -8,8 +8,17 @@ import { inventedSeries, problemOf } from './problems.js';
 const dwi = inventedSeries(
   'echo-planar-spin-echo/2D',
   {
-    repetitionTimeMs: 4800, echoTimeMs: 90, echoSpacingMs: 0.6, sliceCount: 20, sliceThicknessMm: 6, fieldOfViewMm: 380, matrixRead: 128, matrixPhase: 128, pixelBandwidthHz: 2000,
-    parallelFactorPhase: 2, diffusion: { bValuesSPerMm2: [50, 800], directions: 3, averages: [1, 4] },
+    repetitionTimeMs: 4800,
+    echoTimeMs: 90,
+    echoSpacingMs: 0.6,
+    sliceCount: 20,
+    sliceThicknessMm: 6,
+    fieldOfViewMm: 380,
+    matrixRead: 128,
+    matrixPhase: 128,
+    pixelBandwidthHz: 2000,
+    parallelFactorPhase: 2,
+    diffusion: { bValuesSPerMm2: [50, 800], directions: 3, averages: [1, 4] },
   },
   { tissueOverrides: { liver: { t2Ms: 80 } }, locked: ['sliceThicknessMm'] },
 );
@@ -25,8 +34,17 @@ describe('3 T liver diffusion, distorted: distortion at most 0.7 of the preset',
   });
 
   it('a coil with too few elements along phase does not accelerate further', () => {
-    const coil = { name: 'flat', elements: { AP: 2, RL: 8, HF: 4 }, g: [{ phase: 2, slice: 1, g: 1.1 }, { phase: 3, slice: 1, g: 1.3 }] };
-    const { ways } = search(problemOf(dwi, 3, {}, { bands: { ...straight, relativeContrast: 0.5 }, scanner: { ...plainScanner(3), coil } }));
+    const coil = {
+      name: 'flat',
+      elements: { AP: 2, RL: 8, HF: 4 },
+      g: [
+        { phase: 2, slice: 1, g: 1.1 },
+        { phase: 3, slice: 1, g: 1.3 },
+      ],
+    };
+    const { ways } = search(
+      problemOf(dwi, 3, {}, { bands: { ...straight, relativeContrast: 0.5 }, scanner: { ...plainScanner(3), coil } }),
+    );
     expect(ways.every(({ changes }) => changes.parallelFactorPhase === undefined)).toBe(true);
   });
 });

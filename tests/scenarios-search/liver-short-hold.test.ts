@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { GivenParameters } from '../../src/calc/series.js';
 import { same } from '../../src/calc/rounding.js';
+import type { GivenParameters } from '../../src/calc/series.js';
 import { judgePoint } from '../../src/search/judge.js';
 import { search } from '../../src/search/search.js';
 import { type SearchSetting, settingOf } from '../../src/search/setting.js';
@@ -12,7 +12,9 @@ const result = search(problem);
 
 /** The point of the lattice that sets these values, or null where one of them is no step of it. */
 function pointOf({ variables }: SearchSetting, given: GivenParameters): number[] | null {
-  const point = variables.map(({ key, values }) => (given[key] === undefined ? 0 : values.findIndex((value) => same(value as number, given[key] as number))));
+  const point = variables.map(({ key, values }) =>
+    given[key] === undefined ? 0 : values.findIndex((value) => same(value as number, given[key] as number)),
+  );
   return point.includes(-1) ? null : point;
 }
 
@@ -24,7 +26,9 @@ function matched(timeS: number, snr: number): boolean {
 describe('3 T liver, arterial phase of 17 s, a patient who holds 11 s: ways', () => {
   it('finds ways of every kind, each within the hold, and proves them', () => {
     expect(result.proven).toBe(true);
-    expect(new Set(result.ways.map(({ kind }) => kind))).toEqual(new Set(['closest', 'best-signal', 'sharpest', 'shortest', 'best-contrast', 'fewest-changes']));
+    expect(new Set(result.ways.map(({ kind }) => kind))).toEqual(
+      new Set(['closest', 'best-signal', 'sharpest', 'shortest', 'best-contrast', 'fewest-changes']),
+    );
     for (const { figures, verdict, changed } of result.ways) {
       expect(figures.holdTimeS).toBeLessThanOrEqual(11);
       expect(verdict).toBe((figures.holdTimeS as number) <= 11 * 0.95 ? 'FITS' : 'TOO CLOSE');
@@ -65,7 +69,12 @@ describe('3 T liver, arterial phase of 17 s, a patient who holds 11 s: ways', ()
       expect(isWay && candidate.rank < 2).toBe(false);
     }
     const keys = Object.keys(given);
-    const offered = result.ways.some(({ changes }) => Object.keys(changes).filter((key) => key !== 'sliceCount').join() === keys.join() && keys.every((key) => changes[key as 'sliceThicknessMm']?.to === given[key as 'sliceThicknessMm']));
+    const offered = result.ways.some(
+      ({ changes }) =>
+        Object.keys(changes)
+          .filter((key) => key !== 'sliceCount')
+          .join() === keys.join() && keys.every((key) => changes[key as 'sliceThicknessMm']?.to === given[key as 'sliceThicknessMm']),
+    );
     expect(offered).toBe(false);
   });
 

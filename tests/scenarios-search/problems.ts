@@ -11,15 +11,42 @@ import type { StudySeries } from '../../src/study/study.js';
 export function inventedSeries(key: ClassKey, given: GivenParameters, more: Partial<StudySeries>): StudySeries {
   const [family, acquisition] = key.split('/') as [StudySeries['family'], StudySeries['acquisition']];
   return {
-    id: 'invented', title: 'Invented', priority: 1, mustKeep: [], ranges: {}, pairedWith: [], locked: [], opened: [], family, acquisition, plane: 'axial', purpose: null,
-    target: 'liver', comparison: 'spleen', contrastAgent: false, nullTissue: null, tissueOverrides: {}, parameters: fillDefaults(key, given), ...more,
+    id: 'invented',
+    title: 'Invented',
+    priority: 1,
+    mustKeep: [],
+    ranges: {},
+    pairedWith: [],
+    locked: [],
+    opened: [],
+    family,
+    acquisition,
+    plane: 'axial',
+    purpose: null,
+    target: 'liver',
+    comparison: 'spleen',
+    contrastAgent: false,
+    nullTissue: null,
+    tissueOverrides: {},
+    parameters: fillDefaults(key, given),
+    ...more,
   };
 }
 
 export function problemOf(series: StudySeries, fieldT: number, limits: Limits, more: Partial<SearchProblem> = {}): SearchProblem {
   return {
-    series, presetFieldT: fieldT, scanner: plainScanner(fieldT), body: unknownBody, rules: new Map(), limits, readings: {}, bands: usualBands, set: {}, opened: [],
-    frozen: false, ...more,
+    series,
+    presetFieldT: fieldT,
+    scanner: plainScanner(fieldT),
+    body: unknownBody,
+    rules: new Map(),
+    limits,
+    readings: {},
+    bands: usualBands,
+    set: {},
+    opened: [],
+    frozen: false,
+    ...more,
   };
 }
 
@@ -27,10 +54,28 @@ export function problemOf(series: StudySeries, fieldT: number, limits: Limits, m
 export const liverSeries = inventedSeries(
   'spoiled-gradient-echo/3D',
   {
-    repetitionTimeMs: 3.55, echoTimeMs: 1.2, flipAngleDeg: 10, pixelBandwidthHz: 635, fieldOfViewMm: 380, phaseFieldOfViewPercent: 80, matrixRead: 320, matrixPhase: 200,
-    sliceCount: 72, sliceThicknessMm: 3, sliceOversamplingPercent: 11, partialFourierSlice: 0.75, parallelFactorPhase: 2, fatSuppression: 'spectral', pacing: { kind: 'breath-hold' },
+    repetitionTimeMs: 3.55,
+    echoTimeMs: 1.2,
+    flipAngleDeg: 10,
+    pixelBandwidthHz: 635,
+    fieldOfViewMm: 380,
+    phaseFieldOfViewPercent: 80,
+    matrixRead: 320,
+    matrixPhase: 200,
+    sliceCount: 72,
+    sliceThicknessMm: 3,
+    sliceOversamplingPercent: 11,
+    partialFourierSlice: 0.75,
+    parallelFactorPhase: 2,
+    fatSuppression: 'spectral',
+    pacing: { kind: 'breath-hold' },
   },
-  { purpose: 'dynamic', mustKeep: [{ figure: 'voxelSliceMm', atMost: 5, source: 'LI-RADS v2018 technical table as given by Santillan, Hepatoma Res 2020;6:63, table 3' }] },
+  {
+    purpose: 'dynamic',
+    mustKeep: [
+      { figure: 'voxelSliceMm', atMost: 5, source: 'LI-RADS v2018 technical table as given by Santillan, Hepatoma Res 2020;6:63, table 3' },
+    ],
+  },
 );
 
 export function liverProblem(limits: Limits, more: Partial<SearchProblem> = {}): SearchProblem {

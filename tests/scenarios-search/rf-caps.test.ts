@@ -1,13 +1,15 @@
 import { describe, expect, it } from 'vitest';
-import type { GivenParameters } from '../../src/calc/series.js';
 import { same } from '../../src/calc/rounding.js';
+import type { GivenParameters } from '../../src/calc/series.js';
 import { judgePoint } from '../../src/search/judge.js';
 import { search } from '../../src/search/search.js';
 import { type SearchSetting, settingOf } from '../../src/search/setting.js';
 import { inventedSeries, problemOf } from './problems.js';
 
 function pointOf({ variables }: SearchSetting, given: GivenParameters): number[] | null {
-  const point = variables.map(({ key, values }) => (given[key] === undefined ? 0 : values.findIndex((value) => same(value as number, given[key] as number))));
+  const point = variables.map(({ key, values }) =>
+    given[key] === undefined ? 0 : values.findIndex((value) => same(value as number, given[key] as number)),
+  );
   return point.includes(-1) ? null : point;
 }
 
@@ -15,10 +17,22 @@ function pointOf({ variables }: SearchSetting, given: GivenParameters): number[]
 const lumbar = inventedSeries(
   'fast-spin-echo/2D',
   {
-    repetitionTimeMs: 3500, echoTimeMs: 100, echoTrainLength: 20, echoSpacingMs: 10, sliceCount: 15, sliceThicknessMm: 4, sliceGapMm: 0.4, fieldOfViewMm: 280, matrixRead: 320,
-    matrixPhase: 320, averages: 2, dummyShots: 1, pixelBandwidthHz: 200, refocusingAngleDeg: 180,
+    repetitionTimeMs: 3500,
+    echoTimeMs: 100,
+    echoTrainLength: 20,
+    echoSpacingMs: 10,
+    sliceCount: 15,
+    sliceThicknessMm: 4,
+    sliceGapMm: 0.4,
+    fieldOfViewMm: 280,
+    matrixRead: 320,
+    matrixPhase: 320,
+    averages: 2,
+    dummyShots: 1,
+    pixelBandwidthHz: 200,
+    refocusingAngleDeg: 180,
   },
-  { plane: 'sagittal', target: 'CSF', comparison: 'intervertebral disc (nucleus)' },
+  { plane: 'sagittal', target: 'intervertebral disc (nucleus)', comparison: 'spinal cord (white matter)' },
 );
 
 describe('lumbar T2 at 1.5 T, B1+rms at most 2.0 uT, 2.8 displayed', () => {
@@ -48,7 +62,9 @@ describe('lumbar T2 at 1.5 T, B1+rms at most 2.0 uT, 2.8 displayed', () => {
     expect(judge(given)).toBe(2);
   });
 
-  it('offers the angle alone, scaled from the scanner, to be read again, and never calls it more than a trend', { timeout: 600_000 }, () => {
+  it('offers the angle alone, scaled from the scanner, to be read again, and never calls it more than a trend', {
+    timeout: 600_000,
+  }, () => {
     const { ways } = search(problem);
     const angle = ways.filter(({ changes }) => Object.keys(changes).join() === 'refocusingAngleDeg');
     expect(angle.map(({ changes, verdict }) => [changes.refocusingAngleDeg?.to, verdict])).toEqual([
@@ -67,11 +83,23 @@ describe('lumbar T2 at 1.5 T, B1+rms at most 2.0 uT, 2.8 displayed', () => {
 const cervical = inventedSeries(
   'fast-spin-echo/2D',
   {
-    repetitionTimeMs: 600, echoTimeMs: 10, echoTrainLength: 3, echoSpacingMs: 10, refocusingAngleDeg: 150, sliceCount: 15, sliceThicknessMm: 3, sliceGapMm: 0.3, fieldOfViewMm: 240,
-    matrixRead: 320, matrixPhase: 256, pixelBandwidthHz: 250,
+    repetitionTimeMs: 600,
+    echoTimeMs: 10,
+    echoTrainLength: 3,
+    echoSpacingMs: 10,
+    refocusingAngleDeg: 150,
+    sliceCount: 15,
+    sliceThicknessMm: 3,
+    sliceGapMm: 0.3,
+    fieldOfViewMm: 240,
+    matrixRead: 320,
+    matrixPhase: 256,
+    pixelBandwidthHz: 250,
   },
   {
-    plane: 'sagittal', target: 'spinal cord (white matter)', comparison: 'skeletal muscle',
+    plane: 'sagittal',
+    target: 'spinal cord (white matter)',
+    comparison: 'skeletal muscle',
     mustKeep: [{ figure: 'voxelSliceMm', atMost: 3, source: 'ACR spine accreditation, 2022 support article' }],
   },
 );

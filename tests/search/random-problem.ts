@@ -123,7 +123,10 @@ function candidates(key: ClassKey, p: GivenParameters, random: Random): [Paramet
   return random.shuffled(
     all
       .filter(([name]) => (row.parameters as readonly string[]).includes(name))
-      .map(([name, values]): [ParameterKey, readonly (number | boolean)[]] => [name, values.filter((value) => value !== own[name] && (typeof value === 'boolean' || value >= 0))]),
+      .map(([name, values]): [ParameterKey, readonly (number | boolean)[]] => [
+        name,
+        values.filter((value) => value !== own[name] && (typeof value === 'boolean' || value >= 0)),
+      ]),
   );
 }
 

@@ -1,5 +1,5 @@
 import { unknownBody } from '../calc/body.js';
-import { plainScanner } from '../calc/scanner.js';
+import type { Scanner } from '../calc/scanner.js';
 import { readQuantity } from '../formulas/read-quantity.js';
 import { usualBands } from '../search/bands.js';
 import { type BudgetProblem, planBudget } from '../search/budget.js';
@@ -7,11 +7,13 @@ import { cleanText } from '../study/clean-text.js';
 import { nearestWord } from '../study/nearest-word.js';
 import { type Attempt, refuse, wrongUse } from './attempt.js';
 import { budgetJson, budgetPage } from './budget-page.js';
+import { chooseScanner } from './choose-scanner.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
-import { foldersOfPresets, type LoadedPreset, loadPreset } from './load-preset.js';
+import { loadJudgedPreset } from './load-judged-preset.js';
+import type { LoadedPreset } from './load-preset.js';
 import { pageOf } from './page.js';
 import { readAboveZero } from './ways-request.js';
 
@@ -20,9 +22,11 @@ const usualOverheadS = 20;
 
 /** `holdfast budget`: the session in so many minutes. Exit code 1 where not even the minimum set fits. */
 export async function runBudget(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
-  const loaded = await loadPreset(request.arguments[0] ?? '', await foldersOfPresets(request, io), io);
+  const loaded = await loadJudgedPreset(request.arguments[0] ?? '', request, io);
   if (!loaded.ok) return complain(loaded, io);
-  const read = readBudget(loaded.value, request);
+  const chosen = await chooseScanner(request, io, loaded.value.study, loaded.value.study.fieldT);
+  if (!chosen.ok) return complain(chosen, io);
+  const read = readBudget(loaded.value, chosen.value.scanner, request);
   if (!read.ok) return complain(read, io);
   const budget = planBudget(read.value);
   if (request.has('json')) io.write(budgetJson(read.value, budget));
@@ -34,7 +38,7 @@ export async function runBudget(request: CommandRequest, io: CommandIo): Promise
   return budget.missing.length > 0 || nothing ? exitCodes.failed : exitCodes.done;
 }
 
-function readBudget({ study, rules }: LoadedPreset, request: CommandRequest): Attempt<BudgetProblem> {
+function readBudget({ study, rules }: LoadedPreset, scanner: Scanner, request: CommandRequest): Attempt<BudgetProblem> {
   const text = request.value('minutes');
   if (text === undefined) return wrongUse('--minutes', '--minutes is missing: how long may the session take?', 'Write --minutes 25.');
   const minutes = readAboveZero('--minutes', text, 'min', 600);
@@ -71,7 +75,7 @@ function readBudget({ study, rules }: LoadedPreset, request: CommandRequest): At
     ok: true,
     value: {
       study,
-      scanner: plainScanner(study.fieldT),
+      scanner,
       body: unknownBody,
       rules,
       minutes: minutes.value,

@@ -19,6 +19,10 @@ export const bareOptions: readonly OptionRow[] = [
 
 const jsonOption: OptionRow = { name: 'json', value: null, help: 'one JSON document on standard output, nothing else there' };
 const fieldOption: OptionRow = { name: 'field', value: 'T', help: 'exact field of the magnet, in tesla' };
+const scannerOptions: readonly OptionRow[] = [
+  { name: 'scanner', value: 'NAME', help: 'scanner file: its exact field, gradients, pulses and coils' },
+  { name: 'coil', value: 'NAME', help: 'coil of the scanner file; the first unless given' },
+];
 const recordDetails = [
   'FILE is a record file, or a folder of them (one a scanner); several read as one. Without FILE: that of --records.',
   'Damaged lines are named, counted and skipped.',
@@ -41,6 +45,7 @@ export const commandTable: readonly CommandRow[] = [
     options: [
       { name: 'set', value: 'KEY=VALUE', repeats: true, help: 'a parameter with its unit: "fieldOfViewMm=38 cm", pacing.periodMs=4000' },
       { name: 'field', value: 'T', help: 'field strength to evaluate at, in tesla' },
+      ...scannerOptions,
       { name: 'body', value: 'AP=MM,RL=MM', help: 'widest extents of the patient at this level, arms included' },
       { name: 'reading', value: 'KEY=VALUE', repeats: true, help: 'what the scanner displays for the preset: timeS, b1rmsUt, sarWkg' },
       { name: 'json', value: null, help: 'one JSON document on standard output, nothing else there' },
@@ -74,6 +79,7 @@ export const commandTable: readonly CommandRow[] = [
       { name: 'keep', value: 'FIGURE=RATIO', repeats: true, help: 'how far a figure may move: relativeSnr=0.8, voxelPhaseMm=1.2' },
       { name: 'set', value: 'KEY=VALUE', repeats: true, help: 'a parameter that every way has' },
       { name: 'open', value: 'KEY', repeats: true, help: 'a parameter that may change although its class locks it' },
+      ...scannerOptions,
       { name: 'json', value: null, help: 'one JSON document on standard output, nothing else there' },
     ],
     examples: ['holdfast ways liver-3t t1-3d --hold 11', 'holdfast ways lumbar-spine-1.5t t2-sag --b1rms 2.0 --reading b1rmsUt=2.8'],
@@ -89,6 +95,7 @@ export const commandTable: readonly CommandRow[] = [
       { name: 'longest', value: 'S', help: 'no series longer than this, in seconds' },
       { name: 'overhead', value: 'S', help: 'seconds between series, counted once for each planned one; 20 unless given' },
       { name: 'done', value: 'SERIES', repeats: true, help: 'a series that is done already' },
+      ...scannerOptions,
       { name: 'json', value: null, help: 'one JSON document on standard output, nothing else there' },
     ],
     examples: ['holdfast budget brain-child-fast-3t --minutes 5 --overhead 10'],
@@ -143,6 +150,30 @@ export const commandTable: readonly CommandRow[] = [
     load: async () => (await import('./presets-diff.js')).runPresetsDiff,
   },
   {
+    words: ['presets', 'carry'],
+    summary: 'a preset at another field or on another scanner: what each parameter becomes, and why',
+    details: [
+      'PRESET is the id of a preset or the path of a preset file. Fields from 0.5 to 3 T. What comes out is a proposal: nothing is released by it.',
+      'Equal contrast (unless another is asked for): bandwidth for equal chemical shift, TI by null, in and opposed echoes at the exact field, TR, angle or TE solved for the contrast ratio of the named pair.',
+      'Equal snr spends what SNR is gained on averages and bandwidth as well; shift solves nothing else; time lets no series take longer.',
+    ],
+    arguments: [{ name: 'PRESET', required: true }],
+    options: [
+      { name: 'to', value: 'T', help: 'field to carry to, in tesla' },
+      ...scannerOptions,
+      {
+        name: 'equal',
+        value: 'contrast|snr|shift|time',
+        choices: ['contrast', 'snr', 'shift', 'time'],
+        help: 'what is held equal; contrast unless given',
+      },
+      { name: 'out', value: 'FILE', help: 'write the proposal as a draft preset; never overwrites' },
+      jsonOption,
+    ],
+    examples: ['holdfast presets carry shoulder-1.5t --to 3', 'holdfast presets carry liver-3t --scanner demo-1.5t --out draft.json'],
+    load: async () => (await import('./presets-carry.js')).runPresetsCarry,
+  },
+  {
     words: ['presets', 'release'],
     summary: "check a preset and make it the next revision in the site's folder",
     details: [
@@ -161,6 +192,42 @@ export const commandTable: readonly CommandRow[] = [
     ],
     examples: ['holdfast presets release liver-3t-draft --as liver-3t --based-on 2 --role physicist --reason "short holds" --presets DIR'],
     load: async () => (await import('./presets-release.js')).runPresetsRelease,
+  },
+  {
+    words: ['scanner', 'list'],
+    summary: 'the scanners that can be named',
+    details: [
+      'Scanner files are looked for in the folder of HOLDFAST_SCANNERS, in "scanners" beside the settings, and among those that ship with the program (two invented ones).',
+    ],
+    arguments: [],
+    options: [jsonOption],
+    examples: ['holdfast scanner list'],
+    load: async () => (await import('./scanner-list.js')).runScannerList,
+  },
+  {
+    words: ['scanner', 'show'],
+    summary: 'one scanner: its numbers, and what changes in a preset on it',
+    details: [
+      'NAME is the name of a scanner or the path of a scanner file.',
+      'With --preset: frequencies at the exact field, noise factor, shortest TE and TR and slices per TR of each series, beside those without a scanner file.',
+    ],
+    arguments: [{ name: 'NAME', required: true }],
+    options: [
+      { name: 'preset', value: 'PRESET', help: 'show what changes in this preset' },
+      { name: 'coil', value: 'NAME', help: 'coil of the scanner file; the first unless given' },
+      jsonOption,
+    ],
+    examples: ['holdfast scanner show demo-3t', 'holdfast scanner show demo-3t --coil head --preset brain-3t'],
+    load: async () => (await import('./scanner-show.js')).runScannerShow,
+  },
+  {
+    words: ['scanner', 'check'],
+    summary: 'are these scanner files right? Exit code 1 when one is not',
+    details: ['Without FILE all scanner files are checked.'],
+    arguments: [{ name: 'FILE', required: false, repeats: true }],
+    options: [],
+    examples: ['holdfast scanner check ./room-2.json'],
+    load: async () => (await import('./scanner-check.js')).runScannerCheck,
   },
   {
     words: ['records', 'list'],

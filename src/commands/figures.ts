@@ -10,12 +10,14 @@ import { runningOrder } from '../study/running-order.js';
 import { readSetValues } from '../study/set-values.js';
 import type { Study, StudySeries } from '../study/study.js';
 import { type Attempt, refuse, wrongUse } from './attempt.js';
+import { type ChosenScanner, chooseScanner, scannerLine } from './choose-scanner.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { figuresJson } from './figures-json.js';
-import { foldersOfPresets, type LoadedPreset, loadPreset } from './load-preset.js';
+import { loadJudgedPreset } from './load-judged-preset.js';
+import type { LoadedPreset } from './load-preset.js';
 import { pageOf } from './page.js';
 import { readBody, readField, readReadings } from './read-named-numbers.js';
 import { seriesPage } from './series-page.js';
@@ -24,28 +26,37 @@ import { studyPage } from './study-page.js';
 /** `holdfast figures`: evaluates a study or one series, with values set, at a field, for a body, from readings. */
 export async function runFigures(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
   const [wanted = '', seriesId] = request.arguments;
-  const loaded = await loadPreset(wanted, await foldersOfPresets(request, io), io);
+  const loaded = await loadJudgedPreset(wanted, request, io);
   if (!loaded.ok) return complain(loaded, io);
-  const text = figuresOf(loaded.value, seriesId, request, io);
+  const field = readField(request.value('field'));
+  if (!field.ok) return complain(field, io);
+  const { study } = loaded.value;
+  const chosen = await chooseScanner(request, io, study, field.value ?? study.fieldT);
+  if (!chosen.ok) return complain(chosen, io);
+  const text = figuresOf(loaded.value, seriesId, chosen.value, request, io);
   if (!text.ok) return complain(text, io);
   io.write(text.value);
   return exitCodes.done;
 }
 
 /** The whole output, formed before a byte of it is written. */
-function figuresOf(preset: LoadedPreset, seriesId: string | undefined, request: CommandRequest, io: CommandIo): Attempt<string> {
+function figuresOf(
+  preset: LoadedPreset,
+  seriesId: string | undefined,
+  chosen: ChosenScanner,
+  request: CommandRequest,
+  io: CommandIo,
+): Attempt<string> {
   const { study, rules } = preset;
   const picked = pickSeries(study, seriesId, request);
   if (!picked.ok) return picked;
-  const field = readField(request.value('field'));
-  if (!field.ok) return field;
   const body = readBody(request.value('body'));
   if (!body.ok) return body;
   const readings = readReadings(request.values('reading'));
   if (!readings.ok) return readings;
 
-  const fieldT = field.value ?? study.fieldT;
-  const scanner = plainScanner(fieldT);
+  const { scanner } = chosen;
+  const { fieldT } = scanner;
   const results: SeriesResult[] = [];
   for (const series of picked.value) {
     const set = readSetValues(request.values('set'), series);
@@ -59,8 +70,9 @@ function figuresOf(preset: LoadedPreset, seriesId: string | undefined, request: 
   if (request.has('json')) return { ok: true, value: figuresJson(study.id, fieldT, results) };
 
   const page = pageOf(request, io);
+  const head = chosen.file === null ? '' : `${scannerLine(chosen, request)}\n`;
   const single = picked.value.length === 1 ? results[0] : undefined;
-  if (single === undefined) return { ok: true, value: page.plain(studyPage(study, fieldT, results, page)) };
+  if (single === undefined) return { ok: true, value: page.plain(head + studyPage(study, fieldT, results, page)) };
   // Readings are of the preset: its own figures scale with them too.
   const asPreset = seriesResult(
     single.series,
@@ -69,7 +81,7 @@ function figuresOf(preset: LoadedPreset, seriesId: string | undefined, request: 
     { scanner: plainScanner(study.fieldT), body: unknownBody, rules },
     { readings: readings.value },
   );
-  return { ok: true, value: page.plain(seriesPage(study, fieldT, single, asPreset, page)) };
+  return { ok: true, value: page.plain(head + seriesPage(study, fieldT, single, asPreset, page)) };
 }
 
 /** The series asked for, or all: JSON keeps the order of the file, a page has the running order. */
@@ -97,7 +109,9 @@ function pickSeries(study: Study, seriesId: string | undefined, request: Command
 /** Refuses a set value that this class has no use for: it would change nothing. A split goes on to the model, which says why it cannot be. */
 function parameterOfOtherClass(series: StudySeries, set: GivenParameters): Attempt<never> | null {
   const { parameters: has, label } = classRow(classOf(series));
-  const foreign = (Object.keys(set) as ParameterKey[]).find((key) => key !== 'rounds' && !has.includes(key) && set[key] !== series.parameters[key]);
+  const foreign = (Object.keys(set) as ParameterKey[]).find(
+    (key) => key !== 'rounds' && !has.includes(key) && set[key] !== series.parameters[key],
+  );
   if (foreign === undefined) return null;
   const near = nearestWord(
     foreign,

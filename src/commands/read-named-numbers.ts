@@ -68,15 +68,15 @@ export function readReadings(texts: readonly string[]): Attempt<Readings> {
 }
 
 /** Reads a field strength in tesla; null when none was given. */
-export function readField(text: string | undefined): Attempt<number | null> {
+export function readField(text: string | undefined, option = '--field'): Attempt<number | null> {
   if (text === undefined) return { ok: true, value: null };
   const read = readQuantity(text, 'T');
   const { min, max } = presetLimits.fieldT;
   if (!read.ok || read.value < min || read.value > max) {
     return wrongUse(
-      '--field',
-      `--field takes a field strength from ${min} to ${max} T; ${shownValue(text)} was given.`,
-      'Write --field 1.5.',
+      option,
+      `${option} takes a field strength from ${min} to ${max} T; ${shownValue(text)} was given.`,
+      `Write ${option} 1.5.`,
     );
   }
   return { ok: true, value: read.value };

@@ -1,7 +1,7 @@
 import { classRow } from '../calc/classes.js';
 import { type FigureKey, figureKeys, figureTable } from '../calc/figures.js';
 import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
-import { plainScanner } from '../calc/scanner.js';
+import type { Scanner } from '../calc/scanner.js';
 import { classOf } from '../calc/series.js';
 import { readQuantity } from '../formulas/read-quantity.js';
 import { type Bands, usualBands } from '../search/bands.js';
@@ -128,7 +128,7 @@ function readOpened(texts: readonly string[], series: StudySeries): Attempt<Para
 }
 
 /** Reads everything that `holdfast ways` is asked with. */
-export function readWaysRequest(preset: LoadedPreset, request: CommandRequest): Attempt<SearchProblem> {
+export function readWaysRequest(preset: LoadedPreset, scanner: Scanner, request: CommandRequest): Attempt<SearchProblem> {
   const { study, rules } = preset;
   const series = seriesNamed(preset, request.arguments[1] ?? '');
   if (!series.ok) return series;
@@ -173,7 +173,7 @@ export function readWaysRequest(preset: LoadedPreset, request: CommandRequest): 
     value: {
       series: series.value,
       presetFieldT: study.fieldT,
-      scanner: plainScanner(study.fieldT),
+      scanner,
       body: body.value,
       rules,
       limits: limits.value,

@@ -82,7 +82,7 @@ function plainNumber(value: number): NumberTree {
 /** Puts numbers with units into the unit of the first part beside them that has one. */
 function sideBySide(parts: readonly Part[]): { readonly trees: readonly NumberTree[]; readonly unit: string | null } {
   const plain = parts.filter(({ literal }) => literal === null);
-  const unit = plain.find((part) => part.unit !== '')?.unit ?? (plain.length === 0 || plain.every((part) => part.unit === '') ? '' : null);
+  const unit = plain.find((part) => part.unit !== '')?.unit ?? (plain.every((part) => part.unit === '') ? '' : null);
   const trees = parts.map((part): NumberTree => {
     if (part.literal === null) return part.tree;
     const value = unit === null ? null : inUnit(part.literal, unit);

@@ -19,7 +19,20 @@ const more: Readonly<Record<string, Readonly<Record<string, number>>>> = {
 
 /** Units that a rule may name after a number. */
 export const ruleUnits: ReadonlySet<string> = new Set([
-  ...['ms', 's', 'us', 'min', 'mm', 'cm', 'm', 'um', 'deg', 'rad', 'percent', 'Hz', 'kHz', 'uT'],
+  'ms',
+  's',
+  'us',
+  'min',
+  'mm',
+  'cm',
+  'm',
+  'um',
+  'deg',
+  'rad',
+  'percent',
+  'Hz',
+  'kHz',
+  'uT',
   ...Object.values(more).flatMap((units) => Object.keys(units)),
 ]);
 

@@ -55,7 +55,7 @@ export async function saveDraftPreset(
 }
 
 /** Creates a file whole, or not at all when its name is taken. */
-async function createWhole(disk: Disk, path: string, text: string, fileMode: number): Promise<'created' | 'taken' | StoreProblem> {
+export async function createWhole(disk: Disk, path: string, text: string, fileMode: number): Promise<'created' | 'taken' | StoreProblem> {
   const temporary = join(dirname(path), `.${randomId()}.tmp`);
   const written = await writeTemporary(disk, temporary, text, fileMode, 'the preset');
   if (!written.ok) return written.problems[0]!;

@@ -43,12 +43,26 @@ describe('readScannerFile', () => {
     const pulses = { refocusing: { durationMs: 2.4, timeBandwidth: 2.6 }, fatSaturation: { durationMs: 9, gaussian: true } };
     const file = {
       ...least,
-      ...{ gradientMtPerM: 33, slewTPerMPerS: 120, visibleLengthMm: 450, maximumB1Ut: 18, modelErrorPercent: 4 },
-      ...{ coils: [coil], simultaneousSliceG: { '2': 1.08 }, pulses },
+      gradientMtPerM: 33,
+      slewTPerMPerS: 120,
+      visibleLengthMm: 450,
+      maximumB1Ut: 18,
+      modelErrorPercent: 4,
+      coils: [coil],
+      simultaneousSliceG: { '2': 1.08 },
+      pulses,
     };
     expect(scannerOf(scannerIn(file))).toEqual({
-      ...{ name: 'one', fieldT: 2.89, gradientMtPerM: 33, slewTPerMPerS: 120, visibleLengthMm: 450, maximumB1Ut: 18 },
-      ...{ modelErrorPercent: 4, coil, simultaneousSliceG: { 2: 1.08 }, pulses },
+      name: 'one',
+      fieldT: 2.89,
+      gradientMtPerM: 33,
+      slewTPerMPerS: 120,
+      visibleLengthMm: 450,
+      maximumB1Ut: 18,
+      modelErrorPercent: 4,
+      coil,
+      simultaneousSliceG: { 2: 1.08 },
+      pulses,
     });
   });
 

@@ -1,0 +1,36 @@
+import { resolve } from 'node:path';
+import { loadParser } from '../formulas/load-parser.js';
+import { foldersOf } from '../store/folders.js';
+import { readSiteRulesFile } from '../store/site-rules-file.js';
+import { readRules } from '../study/read-rules.js';
+import { withSiteRules } from '../study/site-rules.js';
+import type { Study } from '../study/study.js';
+import type { Attempt } from './attempt.js';
+import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
+import { foldersOfPresets, type LoadedPreset, loadPreset, refusedByStore } from './load-preset.js';
+
+/** A preset that is judged by the rules of its site too. */
+export interface JudgedPreset extends LoadedPreset {
+  /** The study as its file has it, without the rules of the site. */
+  readonly filed: Study;
+}
+
+/** Finds a preset and adds what the site keeps in all its presets (`HOLDFAST_RULES`, or `rules.json` beside the settings) to its must-keeps. */
+export async function loadJudgedPreset(wanted: string, request: CommandRequest, io: CommandIo): Promise<Attempt<JudgedPreset>> {
+  const loaded = await loadPreset(wanted, await foldersOfPresets(request, io), io);
+  if (!loaded.ok) return loaded;
+  const { settingsFolder } = foldersOf({ environment: io.environment, homeFolder: io.homeFolder, workingFolder: io.workingFolder });
+  const named = io.environment.HOLDFAST_RULES;
+  const path = named === undefined || named === '' ? null : resolve(io.workingFolder, named);
+  const site = await readSiteRulesFile(io.disk, path, settingsFolder, loadParser);
+  if (!site.ok) return refusedByStore(site.problems);
+  const filed = loaded.value.study;
+  const study = withSiteRules(filed, site.value);
+  if (study === filed) return { ok: true, value: { ...loaded.value, filed } };
+  const rules = readRules(
+    study.series.flatMap(({ mustKeep }) => mustKeep),
+    await loadParser(),
+  );
+  return { ok: true, value: { ...loaded.value, study, rules, filed } };
+}

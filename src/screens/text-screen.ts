@@ -7,8 +7,8 @@ import type { Look } from './look.js';
 
 function textScreen(state: State, paragraphs: readonly Paragraph[], columns: number, rows: number): Line[] {
   const width = Math.min(columns, 100);
-  const lines = paragraphs.flatMap(({ words, style }) =>
-    words === '' ? [line('')] : wrap(words, width).map((each) => line(each, style ?? 'plain')),
+  const lines = paragraphs.flatMap(({ words, style, hanging = 0 }) =>
+    wrap(words, width - hanging).map((each, at) => line(at === 0 ? each : `${' '.repeat(hanging)}${each}`, style ?? 'plain')),
   );
   const scrolled = Number(state.place.fields[state.place.screen] ?? 0);
   // Beside other panes the place of the screen is no number: the text is not scrolled there.
@@ -36,7 +36,7 @@ export function helpScreen(state: State, _look: Look, columns: number, rows: num
     state,
     [
       { words: `Keys of this screen: ${screenWords[screen]}`, style: 'bold' },
-      ...keys.map(({ shown, help }) => ({ words: `${shown.padEnd(12)}${help}` })),
+      ...keys.map(({ shown, help }) => ({ words: `${shown.padEnd(12)}${help}`, hanging: 12 })),
       { words: '' },
       {
         words:

@@ -8,6 +8,8 @@ import type { State } from './state.js';
 export interface Paragraph {
   readonly words: string;
   readonly style?: 'bold' | 'quiet' | 'plain';
+  /** Columns by which every line but the first stands in. */
+  readonly hanging?: number;
 }
 
 /** The changed values of a series, in the order they are typed on a scanner. */

@@ -72,5 +72,5 @@ export function verdictsOf(
 
 /** The worst rank of some verdicts: 0 fits, 1 too close, 2 over. */
 export function worstRank(verdicts: readonly Verdict[]): 0 | 1 | 2 {
-  return verdicts.reduce<0 | 1 | 2>((worst, { word }) => Math.max(verdictRank[word], worst), 0);
+  return Math.max(0, ...verdicts.map(({ word }) => verdictRank[word])) as 0 | 1 | 2;
 }

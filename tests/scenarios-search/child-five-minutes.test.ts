@@ -115,7 +115,7 @@ describe('a child, awake, five minutes', () => {
   it('everything as it is takes 4:51 with 10 s of overhead each, and that is too close', () => {
     const { plan, totalS, verdict } = planBudget(problem(5));
     expect(plan.map(({ series: { id }, choice }) => [id, choice])).toEqual(series.map(({ id }) => [id, 'as it is']));
-    expect(totalS).toBeCloseTo(291, 6);
+    expect(Math.abs(totalS - 291)).toBeLessThan(1);
     expect(verdict.word).toBe('TOO CLOSE');
   });
 

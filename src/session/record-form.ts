@@ -1,7 +1,7 @@
 import { figureTable } from '../calc/figures.js';
 import { parameterRow } from '../calc/parameters.js';
 import type { RecordedSeries } from '../study/record.js';
-import { changedFigures, changedParameters, figureWords, parameterWords } from '../study/record-changes.js';
+import { changedFigures, changedParameters, parameterWords } from '../study/record-changes.js';
 import { reasonCodes, reasonWords, recordReasons } from '../study/record-reasons.js';
 import { initialsText } from '../study/record-text.js';
 import { outcomeWords, qualityWords, recommendationWords } from '../study/record-words.js';
@@ -9,6 +9,7 @@ import { scaleFigures } from './consequences.js';
 import { choiceRow, type FormRow, textRow } from './form-row.js';
 import { readingRows } from './readings-form.js';
 import { outcomeOf, recordedSeries } from './record-of-session.js';
+import { sayFigure } from './say-figure.js';
 import type { Session, SessionSeries } from './session.js';
 import { eachSeries } from './set-field.js';
 import type { State } from './state.js';
@@ -111,7 +112,7 @@ function comparisonRows(id: string, recorded: RecordedSeries): FormRow[] {
     ...changedFigures(recorded)
       .filter((key) => scaleFigures.includes(key))
       .map((key) =>
-        row(key, figureTable[key].label, figureWords(key, planned.figures[key] ?? null), figureWords(key, used.figures[key] ?? null)),
+        row(key, figureTable[key].label, sayFigure(key, planned.figures[key] ?? null), sayFigure(key, used.figures[key] ?? null)),
       ),
   ];
 }

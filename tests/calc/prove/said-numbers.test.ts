@@ -77,7 +77,9 @@ describe('numbers that cautions say', () => {
 
   it('times under the shortest to a hundredth of a ms', () => {
     const short = (code: CautionCode, edited: Edited) => Number((cautionOf(code, edited).numbers['minimumMs'] as number).toFixed(2));
-    const gradient = edit(seriesOf('spoiled-gradient-echo/3D', { repetitionTimeMs: 4.55, echoTimeMs: 1.15, sliceCount: 20, pixelBandwidthHz: 215 }));
+    const gradient = edit(
+      seriesOf('spoiled-gradient-echo/3D', { repetitionTimeMs: 4.55, echoTimeMs: 1.15, sliceCount: 20, pixelBandwidthHz: 215 }),
+    );
     expect(textOf('below-minimum-te', gradient)).toContain(
       `TE 1.15 ms is under the estimated minimum of ${short('below-minimum-te', gradient)} ms`,
     );
@@ -125,5 +127,12 @@ describe('numbers that cautions say', () => {
     expect(textOf('wrap', edit(series, {}, { body }))).toContain('body 430 mm, 340 mm encoded, 385 mm needed');
     const fast = seriesOf('spin-echo/2D', { fieldOfViewMm: 340.4, parallelFactorPhase: 2 });
     expect(textOf('wrap-unfoldable', edit(fast, {}, { body }))).toContain('body 430 mm, 340 mm encoded');
+  });
+
+  it('readings as they were typed, no third digit of B1+rms and SAR, no second of time', () => {
+    const edited = edit(seriesOf('spin-echo/2D'), {}, { readings: { timeS: 61.54, b1rmsUt: 2.754, sarWkg: 1.104 } });
+    expect(textOf('reading-used', edited)).toContain('time 61.5 s, B1+rms 2.75 uT, SAR 1.1 W/kg of');
+    const finer = edit(seriesOf('spin-echo/2D'), {}, { readings: { timeS: 60.25, b1rmsUt: 2.5, sarWkg: 1.126 } });
+    expect(textOf('reading-used', finer)).toMatch(/time 60\.[23] s, B1\+rms 2\.5 uT, SAR 1\.13 W\/kg of/);
   });
 });

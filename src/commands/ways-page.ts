@@ -1,6 +1,6 @@
 import type { FrontPoint } from '../search/front.js';
 import { limitKeys, verdictsOf } from '../search/limits.js';
-import type { Binding, NothingFits } from '../search/nothing-fits.js';
+import type { NothingFits } from '../search/nothing-fits.js';
 import { otherMoves } from '../search/other-moves.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { SearchResult } from '../search/search.js';
@@ -8,6 +8,7 @@ import type { Way } from '../search/way.js';
 import { sayRatio } from '../session/say-ratio.js';
 import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
+import { bindingInWords, changesInWords, kindWords, searchInWords, spareInWords, tradesInWords } from '../session/say-way.js';
 import type { SeriesResult } from '../session/series-result.js';
 import { cleanText } from '../study/clean-text.js';
 import type { Study } from '../study/study.js';
@@ -16,7 +17,6 @@ import type { Emphasis } from './command-io.js';
 import type { Page } from './page.js';
 import { seriesHeading, studyHeading } from './study-page.js';
 import { textTable } from './text-table.js';
-import { changesInWords, kindWords, spareInWords, tradesInWords } from './ways-words.js';
 import { wrapText } from './wrap-text.js';
 
 const emphasisOf: Readonly<Record<Way['verdict'], Emphasis>> = { FITS: 'fits', 'TOO CLOSE': 'close', OVER: 'over' };
@@ -39,7 +39,7 @@ export function waysPage(
     '',
     ...(ways.length === 0 ? nothingLines(result, nothing, problem, page) : wayLines(ways, page)),
     ...pairLines(problem, ways, page),
-    ...wrapText(countInWords(result), page.width),
+    ...wrapText(searchInWords(result), page.width),
     ...(fronts.timeSnr.length === 0 ? [] : ['', ...frontLines(fronts.timeSnr, page)]),
     '',
     ...(ways.length === 0 || otherMoves(problem).length === 0
@@ -134,33 +134,12 @@ function nothingLines({ nearest }: SearchResult, nothing: NothingFits | null, pr
   ];
 }
 
-function bindingInWords({ binders, needs }: Binding, { limits }: SearchProblem): string {
-  const parts = binders.map((binder) => {
-    const need = needs[binder.name] ?? null;
-    const given = binder.kind === 'limit' ? limits[binder.key] : undefined;
-    const isTime = binder.kind === 'limit' && (binder.key === 'holdS' || binder.key === 'timeS');
-    const say = (value: number) => (isTime ? sayTime(value) : String(Number(value.toFixed(2))));
-    const what =
-      binder.kind === 'limit'
-        ? { holdS: 'breath-hold', timeS: 'time of the series', b1rmsUt: 'B1+rms', sarWkg: 'SAR', rfRatio: 'RF power' }[binder.key]
-        : `${binder.kind} ${binder.name}`;
-    return `${what}${need === null ? '' : `: needs ${say(need)}`}${given === undefined ? '' : `; the limit is ${say(given)}`}`;
-  });
-  return `What binds: ${parts.join(', and ')}.`;
-}
-
 function pairLines({ series }: SearchProblem, ways: readonly Way[], page: Page): string[] {
   if (series.pairedWith.length === 0 || ways.length === 0) return [];
   return [
     ...wrapText(`What changes here changes in ${series.pairedWith.join(', ')} too: they are compared with each other.`, page.width),
     '',
   ];
-}
-
-function countInWords({ lattice, formed, fitting, proven }: SearchResult): string {
-  const grouped = (count: number) => (count >= 1e15 ? count.toExponential(1) : String(count).replace(/\B(?=(\d{3})+$)/g, ' '));
-  const fit = fitting === null ? 'how many fit was not counted' : `${grouped(fitting)} of them fit`;
-  return `The steps allow ${grouped(lattice)} ways, ${fit}; ${grouped(formed)} were formed. ${proven ? 'None is better than those shown.' : 'The search was stopped: a better one may exist.'}`;
 }
 
 /** Some points of the front of time against SNR: at most nine, evenly spread, both ends kept. */

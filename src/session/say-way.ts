@@ -1,10 +1,13 @@
 import { type FigureKey, figureTable } from '../calc/figures.js';
 import { type ParameterKey, parameterRow } from '../calc/parameters.js';
 import type { LimitKey } from '../search/limits.js';
+import type { Binding } from '../search/nothing-fits.js';
+import type { SearchProblem } from '../search/problem-to-solve.js';
+import type { SearchResult } from '../search/search.js';
 import type { Trade, Way } from '../search/way.js';
-import { sayFigure } from '../session/say-figure.js';
-import { sayParameter } from '../session/say-parameter.js';
-import { sayTime } from '../session/say-time.js';
+import { sayFigure } from './say-figure.js';
+import { sayParameter } from './say-parameter.js';
+import { sayTime } from './say-time.js';
 
 /** What each kind of way is, in words. */
 export const kindWords: Readonly<Record<Way['kind'], string>> = {
@@ -82,4 +85,37 @@ export function spareInWords({ spare, verdict }: Way): string {
   if (keys.length === 0) return verdict;
   const amounts = keys.map((key) => amountInWords(key, Math.abs(spare[key] as number))).join(', ');
   return verdict === 'OVER' ? `OVER by ${amounts}` : `${verdict}, to spare: ${amounts}`;
+}
+
+const boundWords: Readonly<Record<LimitKey, string>> = {
+  holdS: 'breath-hold',
+  timeS: 'time of the series',
+  b1rmsUt: 'B1+rms',
+  sarWkg: 'SAR',
+  rfRatio: 'RF power',
+};
+
+/** What binds where nothing fits, and what it would need: `What binds: breath-hold: needs 12.4 s; the limit is 11.0 s.` */
+export function bindingInWords({ binders, needs }: Pick<Binding, 'binders' | 'needs'>, { limits }: Pick<SearchProblem, 'limits'>): string {
+  const parts = binders.map((binder) => {
+    const need = needs[binder.name] ?? null;
+    const given = binder.kind === 'limit' ? limits[binder.key] : undefined;
+    const isTime = binder.kind === 'limit' && (binder.key === 'holdS' || binder.key === 'timeS');
+    const say = (value: number) => (isTime ? sayTime(value) : String(Number(value.toFixed(2))));
+    const what = binder.kind === 'limit' ? boundWords[binder.key] : `${binder.kind} ${binder.name}`;
+    return `${what}${need === null ? '' : `: needs ${say(need)}`}${given === undefined ? '' : `; the limit is ${say(given)}`}`;
+  });
+  return `What binds: ${parts.join(', and ')}.`;
+}
+
+/** How large the search was, and whether something better may exist. */
+export function searchInWords({
+  lattice,
+  formed,
+  fitting,
+  proven,
+}: Pick<SearchResult, 'lattice' | 'formed' | 'fitting' | 'proven'>): string {
+  const grouped = (count: number) => (count >= 1e15 ? count.toExponential(1) : String(count).replace(/\B(?=(\d{3})+$)/g, ' '));
+  const fit = fitting === null ? 'how many fit was not counted' : `${grouped(fitting)} of them fit`;
+  return `The steps allow ${grouped(lattice)} ways, ${fit}; ${grouped(formed)} were formed. ${proven ? 'None is better than those shown.' : 'The search was stopped: a better one may exist.'}`;
 }

@@ -129,7 +129,7 @@ describe('numbers that cautions say', () => {
     expect(textOf('wrap-unfoldable', edit(fast, {}, { body }))).toContain('body 430 mm, 340 mm encoded');
   });
 
-  it('readings as they were typed, no third digit of B1+rms and SAR, no second of time', () => {
+  it('readings as they were typed, time to a tenth, B1+rms and SAR to a hundredth', () => {
     const edited = edit(seriesOf('spin-echo/2D'), {}, { readings: { timeS: 61.54, b1rmsUt: 2.754, sarWkg: 1.104 } });
     expect(textOf('reading-used', edited)).toContain('time 61.5 s, B1+rms 2.75 uT, SAR 1.1 W/kg of');
     const finer = edit(seriesOf('spin-echo/2D'), {}, { readings: { timeS: 60.25, b1rmsUt: 2.5, sarWkg: 1.126 } });

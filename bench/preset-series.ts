@@ -1,9 +1,10 @@
 import { readFileSync } from 'node:fs';
 import type { Series } from '../src/calc/series.js';
 import { readPreset } from '../src/study/read-preset.js';
+import type { StudySeries } from '../src/study/study.js';
 
 /** A series of a shipped preset and the nominal field of its study. */
-export function presetSeries(preset: string, id: string): { readonly series: Series; readonly fieldT: number } {
+export function presetSeries(preset: string, id: string): { readonly series: StudySeries; readonly fieldT: number } {
   const study = readPreset(readFileSync(`presets/${preset}.json`, 'utf8'), preset);
   if (!study.ok) throw new Error(`${preset}: ${study.problems[0]?.message}`);
   const series = study.value.series.find((one) => one.id === id);

@@ -8,7 +8,7 @@ import { type CarrySetting, type Settled, settle } from './carry-setting.js';
 import { digits } from './carry-words.js';
 
 /** Change of the contrast ratio under which nothing needs to be changed. */
-export const contrastTolerance = 0.01;
+const contrastTolerance = 0.01;
 
 /** One way to give the ratio back. */
 interface Solution {

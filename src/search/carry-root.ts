@@ -11,7 +11,7 @@ interface End {
 
 /** Intervals on either side of the start; the residual at which a root counts as found. */
 const steps = 12;
-export const rootTolerance = 1e-4;
+const rootTolerance = 1e-4;
 
 /**
  * The root of a function nearest to a start, between two bounds above zero: steps of equal ratio go outwards from the start until the sign

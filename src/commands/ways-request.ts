@@ -38,7 +38,7 @@ export function readAboveZero(option: string, text: string, unit: string, max: n
 }
 
 /** Finds a series of a preset by its id. */
-export function seriesNamed(preset: LoadedPreset, wanted: string): Attempt<StudySeries> {
+function seriesNamed(preset: LoadedPreset, wanted: string): Attempt<StudySeries> {
   const { study } = preset;
   const found = study.series.find(({ id }) => id === wanted);
   if (found !== undefined) return { ok: true, value: found };
@@ -71,7 +71,7 @@ function readLimits(request: CommandRequest): Attempt<Limits> {
 }
 
 /** Reads the bands of `--keep FIGURE=RATIO` on top of the usual ones. */
-export function readKeep(texts: readonly string[], known: (figure: FigureKey) => boolean): Attempt<Bands> {
+function readKeep(texts: readonly string[], known: (figure: FigureKey) => boolean): Attempt<Bands> {
   const kept: Partial<Record<FigureKey, number>> = {};
   for (const text of texts) {
     const [name = '', value, ...more] = text.split('=').map((part) => part.trim());

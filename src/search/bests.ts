@@ -77,7 +77,7 @@ export function bestsWithin(tables: SearchTables, mostChanges: number, bests: Be
     for (const bucket of buckets) {
       for (const signal of lists.of(bucket)) {
         const { state } = signal;
-        if (state.rfRank === 2 || !signals.playable(state, bucket.train, bucket.parameters)) continue;
+        if (state.rfRank === 2 || !signals.playable(state, bucket)) continue;
         for (const line of bucket.entries) {
           const time = join.time(state, bucket, line.lineCount);
           // More lines never take less time: the rest of the bucket is over as well.

@@ -35,6 +35,8 @@ export interface BudgetProblem {
   readonly done: readonly string[];
   readonly bands: Bands;
   readonly readings: Readings;
+  /** Values set by hand, and the scanner's numbers, of single series; from these the plan starts. */
+  readonly asSet?: Readonly<Record<string, { readonly set: GivenParameters; readonly readings: Readings }>>;
 }
 
 export type Choice = 'as it is' | 'shortened' | 'skipped';
@@ -66,7 +68,7 @@ export interface Budget {
 const closeShare = 0.05;
 
 /** What is kept of a series: 1 as it is, falling with the root of its balanced loss. */
-export function keptQuality(loss: number): number {
+function keptQuality(loss: number): number {
   return Math.exp(-Math.sqrt(loss));
 }
 
@@ -79,7 +81,20 @@ interface GroupOption extends PlanOption {
 
 function problemFor(budget: BudgetProblem, series: StudySeries): SearchProblem {
   const { scanner, body, rules, bands, readings, study } = budget;
-  return { series, presetFieldT: study.fieldT, scanner, body, rules, limits: {}, readings, bands, set: {}, opened: [], frozen: false };
+  const own = budget.asSet?.[series.id];
+  return {
+    series,
+    presetFieldT: study.fieldT,
+    scanner,
+    body,
+    rules,
+    limits: {},
+    readings: own?.readings ?? readings,
+    bands,
+    set: own?.set ?? {},
+    opened: [],
+    frozen: false,
+  };
 }
 
 function planned(setting: SearchSetting, choice: 'as it is' | 'shortened', point: readonly number[]): PlannedSeries | null {
@@ -94,9 +109,9 @@ function planned(setting: SearchSetting, choice: 'as it is' | 'shortened', point
     series: setting.problem.series,
     choice,
     changes,
-    given: pointParameters(setting.variables, point, {}),
+    given: pointParameters(setting.variables, point, setting.problem.set),
     timeS,
-    loss: choice === 'as it is' ? 0 : loss,
+    loss: choice === 'as it is' && Object.keys(setting.problem.set).length === 0 ? 0 : loss,
   };
 }
 
@@ -127,13 +142,14 @@ function optionsOf(
       ),
     ),
   );
-  const whole = new WholeLatticeSearch(
-    tablesOf(first),
-    new Pulse(control.stopped === undefined ? {} : { stopped: control.stopped }),
-    'fronts alone',
-  );
+  const whole = new WholeLatticeSearch(tablesOf(first), new Pulse(control.stopped === undefined ? {} : { stopped: control.stopped }), {
+    fronts: true,
+    nearest: false,
+    count: false,
+  });
   whole.run();
-  const asItIsS = first.presetFigures.scanTimeS ?? Number.POSITIVE_INFINITY;
+  const start = first.variables.map(() => 0);
+  const asItIsS = judgePoint(first, start).figures.scanTimeS ?? Number.POSITIVE_INFINITY;
   for (const { point, timeS } of whole.result().timeLoss.points) {
     if (timeS >= asItIsS) continue;
     add(settings.map((setting) => planned(setting, 'shortened', sameChanges(first, point, setting))));

@@ -47,7 +47,9 @@ export class Join {
   readonly #noiseBands: readonly BandLimit[];
   /** |target - comparison| of the preset, null where it is too small to compare with. */
   readonly #contrastBefore: number | null;
-  readonly #byBucket = new Map<LineBucket, Map<string, TimeFamily>>();
+  readonly #byBucket = new Map<LineBucket, (TimeFamily | undefined)[]>();
+  #lastBucket: LineBucket | null = null;
+  #lastRow: (TimeFamily | undefined)[] = [];
   readonly #families = new Map<string, TimeFamily>();
 
   constructor(setting: SearchSetting) {
@@ -64,6 +66,7 @@ export class Join {
   /** Forgets times of buckets that are no longer needed. */
   forget(): void {
     this.#byBucket.clear();
+    this.#lastBucket = null;
     this.#families.clear();
   }
 
@@ -79,27 +82,26 @@ export class Join {
   }
 
   #familyOf(state: SignalState, bucket: LineBucket): TimeFamily {
-    let ofBucket = this.#byBucket.get(bucket);
-    if (ofBucket === undefined) {
-      ofBucket = new Map();
-      this.#byBucket.set(bucket, ofBucket);
+    if (this.#lastBucket !== bucket) {
+      this.#lastBucket = bucket;
+      this.#lastRow = this.#byBucket.get(bucket) ?? [];
+      this.#byBucket.set(bucket, this.#lastRow);
     }
-    let family = ofBucket.get(state.timeKey);
+    const known = this.#lastRow[state.timeId];
+    if (known !== undefined) return known;
+    const { averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount } = bucket.parameters;
+    // Blades follow matrix and acceleration besides their lines; elsewhere lines say all.
+    const blades = this.#setting.problem.series.family === 'rotating-strip-fast-spin-echo';
+    const key = `${state.timeId}|${averages}|${ellipticalSampling}${blades ? `|${matrixPhase}|${parallelFactorPhase}` : ''}`;
+    let family = this.#families.get(key);
     if (family === undefined) {
-      const { averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount } = bucket.parameters;
-      // Blades follow matrix and acceleration besides their lines; elsewhere lines say all.
-      const blades = this.#setting.problem.series.family === 'rotating-strip-fast-spin-echo';
-      const key = `${state.timeKey}|${averages}|${ellipticalSampling}${blades ? `|${matrixPhase}|${parallelFactorPhase}` : ''}`;
-      family = this.#families.get(key);
-      if (family === undefined) {
-        family = {
-          parameters: { ...state.parameters, averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount },
-          times: new Map(),
-        };
-        this.#families.set(key, family);
-      }
-      ofBucket.set(state.timeKey, family);
+      family = {
+        parameters: { ...state.parameters, averages, ellipticalSampling, matrixPhase, parallelFactorPhase, sliceCount },
+        times: new Map(),
+      };
+      this.#families.set(key, family);
     }
+    this.#lastRow[state.timeId] = family;
     return family;
   }
 

@@ -25,14 +25,14 @@ export interface StepCircumstances {
 const tidy = (value: number) => Math.round(value * 1e6) / 1e6;
 
 /** All multiples of a step from low to high, both included. */
-export function multiples(low: number, high: number, step: number): number[] {
+function multiples(low: number, high: number, step: number): number[] {
   const values: number[] = [];
   for (let i = guardedCeil(low / step); i <= guardedFloor(high / step); i += 1) values.push(tidy(i * step));
   return values;
 }
 
 /** Extent of this body along a phase direction, mm, where it was typed and the plane lies along it; null otherwise. */
-export function typedExtentMm(series: StudySeries, direction: Parameters['phaseDirection'], body: Body): number | null {
+function typedExtentMm(series: StudySeries, direction: Parameters['phaseDirection'], body: Body): number | null {
   if (series.plane.includes('oblique') || series.plane.includes('axis')) return null;
   if (direction === 'AP') return body.frontBackMm;
   return direction === 'RL' ? body.leftRightMm : null;

@@ -44,7 +44,7 @@ function allowedByTable(key: ParameterKey, value: StepValue): boolean {
  *
  * @example slicesThatCover({ ...72 partitions of 3 mm }, 5) //=> 44
  */
-export function slicesThatCover(series: Pick<StudySeries, 'acquisition' | 'parameters'>, thicknessMm: number): number {
+function slicesThatCover(series: Pick<StudySeries, 'acquisition' | 'parameters'>, thicknessMm: number): number {
   const p = series.parameters;
   const { coverageMm } = geometryOf(series.acquisition, p);
   if (series.acquisition === '3D') return 2 * guardedCeil(coverageMm / thicknessMm / 2);
@@ -112,7 +112,7 @@ export function latticeSize(variables: readonly LatticeVariable[]): number {
 }
 
 /** Writes the values of one point of the lattice into a set of parameters; index 0 leaves a parameter as it is. */
-export function writePoint(variables: readonly LatticeVariable[], point: ArrayLike<number>, into: Record<string, unknown>): void {
+function writePoint(variables: readonly LatticeVariable[], point: ArrayLike<number>, into: Record<string, unknown>): void {
   variables.forEach(({ key, values, sliceCounts }, i) => {
     const at = point[i] as number;
     if (at === 0) return;

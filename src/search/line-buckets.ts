@@ -39,6 +39,8 @@ export interface LineBucket {
   readonly entryCount: number;
   /** Null where the entries are formed already. */
   readonly bound: BucketBound | null;
+  /** Lets go of the entries: they are formed anew if asked for. */
+  readonly release: () => void;
 }
 
 /** Order of entries in a bucket. */
@@ -89,6 +91,7 @@ function bucketOf(buckets: Map<string, Growing>, state: LineState, point: readon
     entries: [],
     entryCount: 0,
     bound: null,
+    release: () => {},
   };
   buckets.set(state.bucket, bucket);
   return bucket;

@@ -51,7 +51,7 @@ function mustKeepName({ figure, parameter, rule, atMost, atLeast, between }: Mus
 }
 
 /** Everything that may stand in the way of a problem, limits of the patient first. */
-export function bindersOf(problem: SearchProblem): Binder[] {
+function bindersOf(problem: SearchProblem): Binder[] {
   return [
     ...limitKeys.filter((key) => problem.limits[key] !== undefined).map((key): Binder => ({ kind: 'limit', key, name: key })),
     ...(Object.keys(problem.bands) as FigureKey[]).map((figure): Binder => ({ kind: 'band', figure, name: figure })),
@@ -85,7 +85,7 @@ function setsOf<T>(items: readonly T[], size: number): T[][] {
 
 /** True when some point of the whole lattice is within all limits. */
 function hasWay(setting: SearchSetting, control: SearchControl): boolean {
-  const whole = new WholeLatticeSearch(tablesOf(setting), new Pulse(stopOnly(control)), 'nearest alone');
+  const whole = new WholeLatticeSearch(tablesOf(setting), new Pulse(stopOnly(control)), { fronts: false, nearest: true, count: false });
   whole.run();
   const { nearest } = whole.result();
   return nearest !== null && judgePoint(setting, nearest.point).candidate.rank < 2;

@@ -37,13 +37,15 @@ export function search(problem: SearchProblem, control: SearchControl = {}): Sea
   const tables = tablesOf(setting);
   const pulse = new Pulse(control);
   const bests = new Bests();
-  const whole = new WholeLatticeSearch(tables, pulse);
+  let whole = new WholeLatticeSearch(tables, pulse);
   let proven = true;
   let apart: Way[] = [];
   try {
     apart = fewerSlices(problem, pulse);
     const smallest = Math.min(mostChanges, setting.variables.length);
     bestsWithin(tables, smallest, bests, pulse);
+    // The nearest way is asked for only where few changes do not do.
+    whole = new WholeLatticeSearch(tables, pulse, { fronts: true, nearest: !bests.any, count: true });
     whole.run();
     for (let most = smallest + 1; !bests.any && canFit(whole, setting) && most <= setting.variables.length; most += 1)
       bestsWithin(tables, most, bests, pulse);
@@ -105,6 +107,6 @@ function outdoesInChanges(bests: Bests): boolean {
 }
 
 /** Least RF is a question only where RF is capped. */
-export function kindsOf(setting: SearchSetting): readonly WayKind[] {
+function kindsOf(setting: SearchSetting): readonly WayKind[] {
   return wayKinds.filter((kind) => kind !== 'least-rf' || setting.rfCapped);
 }

@@ -37,7 +37,7 @@ export interface Shortfall {
 type Minimum = { readonly echoTimeMs: number; readonly repetitionTimeMs: number; readonly echoSpacingMs: number | null };
 
 /** Repetition time that the estimate of the shortest one is compared with, ms. */
-export function comparedRepetitionMs(p: Parameters): number {
+function comparedRepetitionMs(p: Parameters): number {
   return isCine(p) ? p.repetitionTimeMs : effectiveRepetitionTimeMs(p);
 }
 
@@ -59,6 +59,15 @@ export function noFurtherBelow(now: Shortfall, allowed: Shortfall): boolean {
     atMost(now.echoTimeMs, allowed.echoTimeMs + carriedDustMs) &&
     atMost(now.repetitionTimeMs, allowed.repetitionTimeMs + carriedDustMs) &&
     atMost(now.echoSpacingMs, allowed.echoSpacingMs + carriedDustMs)
+  );
+}
+
+/** `noFurtherBelow` of `shortfallOf`, without forming it: a search asks this millions of times. */
+export function keepsShortfall(p: Parameters, minimum: Minimum, allowed: Shortfall): boolean {
+  return (
+    atMost(minimum.echoTimeMs - p.echoTimeMs, allowed.echoTimeMs + carriedDustMs) &&
+    atMost(minimum.repetitionTimeMs - comparedRepetitionMs(p), allowed.repetitionTimeMs + carriedDustMs) &&
+    (minimum.echoSpacingMs === null || atMost(minimum.echoSpacingMs - p.echoSpacingMs, allowed.echoSpacingMs + carriedDustMs))
   );
 }
 

@@ -52,10 +52,10 @@ export function joinedPoint(groups: Groups, line: readonly number[], signal: rea
  * the signal, the contrast and the train. What neither time nor playability tells apart is only compared in these three.
  */
 export function undominated(entries: readonly SignalEntry[]): SignalEntry[] {
-  const groups = new Map<string, SignalEntry[]>();
+  const groups = new Map<number, SignalEntry[]>();
   for (const entry of entries) {
     if (entry.state.rfRank === 2) continue;
-    const key = `${entry.state.timeKey}|${entry.state.minimumKey}`;
+    const key = entry.state.timeId * 2 ** 24 + entry.state.minimumId;
     const group = groups.get(key);
     if (group === undefined) groups.set(key, [entry]);
     else if (!group.some((other) => dominates(other.state, entry.state))) {

@@ -27,6 +27,14 @@ export interface StateModel {
   readonly comparison: number | null;
   readonly targetT2Ms: number | null;
   readonly b1PlusRmsUt: number;
+  /** Small numbers for timing and shortest timing where they are known already. */
+  readonly ids: { readonly timeId: number; readonly minimumId: number } | null;
+}
+
+/** Gives small numbers to what time and shortest timing follow. */
+export interface StateWords {
+  readonly timeId: (p: Parameters, rounds: number) => number;
+  readonly minimumId: (p: Parameters, pulses: SlotPulses) => number;
 }
 
 /** Parameters that move no other timing: TR, and what only slots, splits and counts of shots follow. */
@@ -52,6 +60,9 @@ interface Base {
   readonly target: TissuePart | null;
   readonly comparison: TissuePart | null;
   readonly pulses: Map<number, SlotPulses>;
+  /** What time and shortest timing follow of the parameters that are not free. */
+  readonly timeBase: number;
+  readonly minimumId: number;
 }
 
 interface TissuePart {
@@ -68,9 +79,15 @@ export class SignalShortcut {
   readonly #setting: SearchSetting;
   readonly #bases = new Map<string, Base>();
   readonly #bound: readonly number[];
+  readonly #words: StateWords;
+  readonly #timeIds = new Map<number, number>();
+  /** Where a state over an RF cap is of no use, its signal is not computed. */
+  readonly #isOver: (b1PlusRmsUt: number) => boolean;
 
-  constructor(setting: SearchSetting) {
+  constructor(setting: SearchSetting, words: StateWords, isOver: (b1PlusRmsUt: number) => boolean) {
     this.#setting = setting;
+    this.#words = words;
+    this.#isOver = isOver;
     this.#bound = setting.variables.flatMap(({ key }, at) => (freeKeys.includes(key) ? [] : [at]));
   }
 
@@ -89,11 +106,14 @@ export class SignalShortcut {
     const { problem, baseline, variables } = this.#setting;
     const base = this.#baseAt(point, signalKeys);
     const { key, lines } = base.model;
+    let free = 0;
     const p = { ...base.model.series.parameters } as { -readonly [K in keyof Parameters]: Parameters[K] };
     for (const at of signalKeys) {
       const { key: name, values, sliceCounts } = variables[at] as (typeof variables)[number];
       const i = point[at] as number;
-      if (i === 0 || !freeKeys.includes(name)) continue;
+      if (!freeKeys.includes(name)) continue;
+      free = free * values.length + i;
+      if (i === 0) continue;
       (p as unknown as Record<string, unknown>)[name] = values[i];
       if (sliceCounts !== null) p.sliceCount = sliceCounts[i] as number;
     }
@@ -107,19 +127,31 @@ export class SignalShortcut {
     if (p.echoTimeMs >= tr || lastMs > tr + 1e-9 || slices === 0) return null;
     p.rounds = rounds;
     const slicesOfRound = guardedCeil(p.sliceCount / rounds);
-    const setting: SignalSetting = { key, parameters: p, lines, slicesOfRound };
     const slicesInRepetition = slices === null ? p.simultaneousSlices : Math.max(1, Math.min(slices, slicesOfRound));
+    const b1PlusRmsUt = seriesB1PlusRmsUt(key, p, lines, pulses, slicesInRepetition);
+    if (this.#isOver(b1PlusRmsUt)) return null;
+    const setting: SignalSetting = { key, parameters: p, lines, slicesOfRound };
     return {
       parameters: p,
       key,
       rounds,
       lines,
       pulses,
+      ids: { timeId: this.#timeId(base, free, rounds, p), minimumId: base.minimumId },
       target: signalOf(base.target, setting),
       comparison: signalOf(base.comparison, setting),
       targetT2Ms: base.model.target?.t2Ms ?? null,
-      b1PlusRmsUt: seriesB1PlusRmsUt(key, p, lines, pulses, slicesInRepetition),
+      b1PlusRmsUt,
     };
+  }
+
+  #timeId(base: Base, free: number, rounds: number, p: Parameters): number {
+    const key = (base.timeBase * 512 + rounds) * 2 ** 22 + free;
+    const known = this.#timeIds.get(key);
+    if (known !== undefined) return known;
+    const id = this.#words.timeId(p, rounds);
+    this.#timeIds.set(key, id);
+    return id;
   }
 
   #pulses(base: Base, p: Parameters): SlotPulses {
@@ -151,7 +183,14 @@ export class SignalShortcut {
         ? null
         : { signal, tissue, train: classRow(model.key).train ? trainOf(setting, tissue) : null };
     };
-    const base = { model, target: part(model.target), comparison: part(model.comparison), pulses: new Map<number, SlotPulses>() };
+    const base = {
+      model,
+      target: part(model.target),
+      comparison: part(model.comparison),
+      pulses: new Map<number, SlotPulses>(),
+      timeBase: this.#words.timeId(model.series.parameters, 0),
+      minimumId: this.#words.minimumId(model.series.parameters, model.pulses),
+    };
     this.#bases.set(id, base);
     return base;
   }

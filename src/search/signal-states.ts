@@ -22,9 +22,10 @@ import { type BandLimit, withinBand } from './bands.js';
 import { type Groups, levelOf, noiseFigures } from './groups.js';
 import { pointParameters } from './lattice.js';
 import { limitedValue, limitVerdict, verdictRank } from './limits.js';
+import type { LineBucket } from './line-buckets.js';
 import { isCrossed, isTimeCap, namesOfMustKeep } from './must-keep-test.js';
-import { noFurtherBelow, type SearchSetting, shortfallOf } from './setting.js';
-import { SignalShortcut, type StateModel } from './signal-shortcut.js';
+import { keepsShortfall, type SearchSetting } from './setting.js';
+import { SignalShortcut, type StateModel, type StateWords } from './signal-shortcut.js';
 
 /** Timing, signal and RF of one choice of the signal variables, for one train and one choice of the shared ones. */
 export interface SignalState {
@@ -40,9 +41,11 @@ export interface SignalState {
   /** Largest RF value over its limit, 0 without one. */
   readonly rfExcess: number;
   /** States with one of these play their lines in the same time. */
-  readonly timeKey: string;
+  readonly timeId: number;
   /** States with one of these have the same estimates of the shortest timing. */
-  readonly minimumKey: string;
+  readonly minimumId: number;
+  /** SNR without signal, over the preset's, from which on the noise bands may be kept: within a billionth. */
+  readonly quietFrom: number;
 }
 
 const timedKeys: readonly ParameterKey[] = [
@@ -82,6 +85,12 @@ function idOf(keys: readonly ParameterKey[], p: Parameters): string {
 
 const rfLimitKeys = ['b1rmsUt', 'sarWkg', 'rfRatio'] as const;
 
+type RfFigures = Pick<Figures, 'scanTimeS' | 'holdTimeS' | 'b1PlusRmsUt' | 'rfPowerTrend' | 'sarTrendLow' | 'sarTrendHigh'>;
+
+function finite(value: number | null): number | null {
+  return value !== null && Number.isFinite(value) ? value : null;
+}
+
 type QuickFigures = Pick<
   Figures,
   | 'scanTimeS'
@@ -100,6 +109,13 @@ export class SignalTable {
   readonly #setting: SearchSetting;
   readonly #bands: readonly BandLimit[];
   readonly #mustKeeps: readonly MustKeep[];
+  /** States over an RF cap are formed too: only where the nearest way is asked for. */
+  keepsOver = false;
+  readonly #words: StateWords = {
+    timeId: (p, rounds) => this.#idFor(`time ${idOf(this.#timed, p)}${rounds}`),
+    minimumId: (p, { excitation, refocusing }) =>
+      this.#idFor(`minimum ${idOf(this.#minimal, p)}${excitation.durationMs}|${refocusing?.durationMs}`),
+  };
   /** Null where each state needs its whole model. */
   readonly #shortcut: SignalShortcut | null;
   /** Variables that move a signal state. */
@@ -108,14 +124,19 @@ export class SignalTable {
   readonly #timed: readonly ParameterKey[];
   readonly #minimal: readonly ParameterKey[];
   readonly #blurs = { linear: new Map<number, number | null>(), centric: new Map<number, number | null>() };
-  /** Estimates of the shortest timing, by `minimumKey`, train and voxel. */
-  readonly #minima = new Map<string, MinimumTiming>();
+  /** Estimates of the shortest timing: by train and voxel, then by `minimumId`. */
+  readonly #minima = new Map<string, (MinimumTiming | undefined)[]>();
+  readonly #minimaByBucket = new WeakMap<LineBucket, (MinimumTiming | undefined)[]>();
+  /** Small numbers for what is told apart. */
+  readonly #ids = new Map<string, number>();
 
   constructor(setting: SearchSetting, groups: Groups) {
     const { problem, bands } = setting;
     const { series, rules } = problem;
     this.#setting = setting;
-    this.#shortcut = SignalShortcut.serves(setting) ? new SignalShortcut(setting) : null;
+    this.#shortcut = SignalShortcut.serves(setting)
+      ? new SignalShortcut(setting, this.#words, (b1) => !this.keepsOver && this.#isOver(b1))
+      : null;
     this.#moving = [...groups.shared, ...groups.signal];
     const moved: readonly ParameterKey[] = [
       ...setting.variables.map(({ key }) => key),
@@ -134,6 +155,16 @@ export class SignalTable {
     this.#mustKeeps = series.mustKeep.filter(
       (mustKeep) => !isTimeCap(mustKeep, rules) && here(levelOf(namesOfMustKeep(mustKeep, rules), groups, setting)),
     );
+  }
+
+  /** True when B1+rms alone puts a state over an RF limit. */
+  #isOver(b1PlusRmsUt: number): boolean {
+    const { problem, margins } = this.#setting;
+    const figures = this.#rfFigures(b1PlusRmsUt);
+    return rfLimitKeys.some((key) => {
+      const limit = problem.limits[key];
+      return limit !== undefined && limitVerdict(key, limitedValue(key, figures, problem.readings), limit, margins).word === 'OVER';
+    });
   }
 
   /** The state of a point, whose line variables stand for its train; null where it is an error or breaks a band or a must-keep of the signal. */
@@ -158,7 +189,6 @@ export class SignalTable {
       rfExcess = Math.max(rfExcess, (value ?? Number.POSITIVE_INFINITY) / limit);
     }
     const power = figures.rfPowerTrend;
-    const { excitation, refocusing } = model.pulses;
     return {
       parameters,
       model,
@@ -169,8 +199,9 @@ export class SignalTable {
       trainLoss: trainLoss(blurPx, presetFigures.blurFwhmPx, power, setting.rfCapped),
       rfRank,
       rfExcess,
-      timeKey: `${idOf(this.#timed, parameters)}${model.rounds}`,
-      minimumKey: `${idOf(this.#minimal, parameters)}${excitation.durationMs}|${refocusing?.durationMs}`,
+      quietFrom: this.#quietFrom(model),
+      timeId: model.ids?.timeId ?? this.#words.timeId(parameters, model.rounds),
+      minimumId: model.ids?.minimumId ?? this.#words.minimumId(parameters, model.pulses),
     };
   }
 
@@ -188,6 +219,7 @@ export class SignalTable {
       rounds,
       lines,
       pulses,
+      ids: null,
       target: weightedSignal(model.target),
       comparison: weightedSignal(model.comparison),
       targetT2Ms: model.target?.t2Ms ?? null,
@@ -223,23 +255,35 @@ export class SignalTable {
 
   /** Figures that follow the signal alone, as `compareWith` and `evaluate` give them. */
   #quickFigures({ target, comparison, b1PlusRmsUt }: StateModel, blurPx: number | null): QuickFigures {
-    const { problem, baseline } = this.#setting;
-    const b1Ratio = problem.readings.b1rmsUt === undefined ? 1 : problem.readings.b1rmsUt / baseline.model.b1PlusRmsUt;
-    const finite = (value: number | null) => (value !== null && Number.isFinite(value) ? value : null);
+    const { baseline } = this.#setting;
+    const rf = this.#rfFigures(b1PlusRmsUt);
     const contrastRatio = contrastRatioOf(target, comparison);
     const before = baseline.contrastRatio;
-    const power = (b1PlusRmsUt / baseline.model.b1PlusRmsUt) ** 2;
-    const sar = sarTrend(power, problem.scanner.fieldT / baseline.model.scanner.fieldT);
     return {
       scanTimeS: null,
       holdTimeS: null,
       contrastRatio: finite(contrastRatio),
       contrastRatioChange: finite(contrastRatio === null || before === null || before === 0 ? null : contrastRatio / before - 1),
+      b1PlusRmsUt: rf.b1PlusRmsUt,
+      rfPowerTrend: rf.rfPowerTrend,
+      sarTrendLow: rf.sarTrendLow,
+      sarTrendHigh: rf.sarTrendHigh,
+      blurFwhmPx: blurPx,
+    };
+  }
+
+  #rfFigures(b1PlusRmsUt: number): RfFigures {
+    const { problem, baseline } = this.#setting;
+    const b1Ratio = problem.readings.b1rmsUt === undefined ? 1 : problem.readings.b1rmsUt / baseline.model.b1PlusRmsUt;
+    const power = (b1PlusRmsUt / baseline.model.b1PlusRmsUt) ** 2;
+    const sar = sarTrend(power, problem.scanner.fieldT / baseline.model.scanner.fieldT);
+    return {
+      scanTimeS: null,
+      holdTimeS: null,
       b1PlusRmsUt: finite(b1PlusRmsUt * b1Ratio),
       rfPowerTrend: finite(power),
       sarTrendLow: finite(sar.low),
       sarTrendHigh: finite(sar.high),
-      blurFwhmPx: blurPx,
     };
   }
 
@@ -260,23 +304,52 @@ export class SignalTable {
     );
   }
 
-  /** True when a state, with the voxel of these parameters, is no further under the estimates of the shortest timing than the preset. */
-  playable(state: SignalState, train: string, line: Parameters): boolean {
-    const { scanner } = this.#setting.problem;
-    const key = `${state.minimumKey}|${train}|${line.fieldOfViewMm}|${line.matrixPhase}|${line.sliceThicknessMm}|${line.sliceCount}`;
-    let minimum = this.#minima.get(key);
+  /** True when a state, with the voxel of a bucket, is no further under the estimates of the shortest timing than the preset. */
+  playable(state: SignalState, bucket: LineBucket): boolean {
+    const row = this.#minimaOf(bucket);
+    let minimum = row[state.minimumId];
     if (minimum === undefined) {
-      const p = {
-        ...state.parameters,
-        fieldOfViewMm: line.fieldOfViewMm,
-        matrixPhase: line.matrixPhase,
-        sliceThicknessMm: line.sliceThicknessMm,
-        sliceCount: line.sliceCount,
-      };
-      const acquisition = classRow(state.model.key).acquisition;
-      minimum = minimumTiming(state.model.key, p, state.model.lines, geometryOf(acquisition, p), state.model.pulses, scanner);
-      this.#minima.set(key, minimum);
+      const { fieldOfViewMm, matrixPhase, sliceThicknessMm, sliceCount } = bucket.parameters;
+      const p = { ...state.parameters, fieldOfViewMm, matrixPhase, sliceThicknessMm, sliceCount };
+      const { key, lines, pulses } = state.model;
+      minimum = minimumTiming(key, p, lines, geometryOf(classRow(key).acquisition, p), pulses, this.#setting.problem.scanner);
+      row[state.minimumId] = minimum;
     }
-    return noFurtherBelow(shortfallOf(state.parameters, minimum), this.#setting.shortfall);
+    return keepsShortfall(state.parameters, minimum, this.#setting.shortfall);
+  }
+
+  #minimaOf(bucket: LineBucket): (MinimumTiming | undefined)[] {
+    const known = this.#minimaByBucket.get(bucket);
+    if (known !== undefined) return known;
+    const { fieldOfViewMm, matrixPhase, sliceThicknessMm, sliceCount } = bucket.parameters;
+    const key = `${bucket.train}|${fieldOfViewMm}|${matrixPhase}|${sliceThicknessMm}|${sliceCount}`;
+    const row = this.#minima.get(key) ?? [];
+    this.#minima.set(key, row);
+    this.#minimaByBucket.set(bucket, row);
+    return row;
+  }
+
+  /** The ratio of SNR without signal that the bands of SNR and contrast ask of this signal. */
+  #quietFrom({ target, comparison }: StateModel): number {
+    const { bands, baseline } = this.#setting;
+    const { targetSignal, comparisonSignal } = baseline;
+    let ratio = 0;
+    for (const { figure, atLeast } of bands) {
+      if (atLeast === null || !noiseFigures.includes(figure)) continue;
+      if (target === null || targetSignal === null) return Number.POSITIVE_INFINITY;
+      if (figure === 'relativeSnr') ratio = Math.max(ratio, (atLeast * targetSignal) / target);
+      else if (comparison === null || comparisonSignal === null) return Number.POSITIVE_INFINITY;
+      else ratio = Math.max(ratio, (atLeast * Math.abs(targetSignal - comparisonSignal)) / Math.abs(target - comparison));
+    }
+    return Number.isNaN(ratio) ? 0 : ratio;
+  }
+
+  #idFor(word: string): number {
+    let id = this.#ids.get(word);
+    if (id === undefined) {
+      id = this.#ids.size;
+      this.#ids.set(word, id);
+    }
+    return id;
   }
 }

@@ -19,11 +19,18 @@ export interface WholeLattice {
 }
 
 /** Pairs of a bucket and a signal state, and entries of buckets, beyond which fitting points are not counted. */
-const mostPairs = 1e7;
+const mostPairs = 2e6;
 const mostEntries = 2e6;
 
 /** Stretches of lines narrower than this are formed rather than bounded. */
 const narrowest = 1.03;
+
+/** What is asked of a whole lattice. */
+export interface WholeParts {
+  readonly fronts: boolean;
+  readonly nearest: boolean;
+  readonly count: boolean;
+}
 
 /** Goes over the whole lattice: fronts by branch and bound over lines within each pair of bucket and signal state, the count by sorting. */
 export class WholeLatticeSearch {
@@ -31,32 +38,36 @@ export class WholeLatticeSearch {
   readonly timeLoss = new Front(-1);
   #fitting = 0;
   #counted = true;
-  #pairs = 0;
-  #entries = 0;
   readonly #lines: WholeLines;
   #nearest: { point: readonly number[]; excess: number; loss: number } | null = null;
 
   constructor(
     private readonly tables: SearchTables,
     private readonly pulse: Pulse,
-    private readonly parts: 'all' | 'nearest alone' | 'fronts alone' = 'all',
+    private readonly parts: WholeParts = { fronts: true, nearest: true, count: true },
   ) {
     this.#lines = new WholeLines(tables.setting, tables.groups, tables.lines, pulse);
   }
 
   result(): WholeLattice {
-    return { timeSnr: this.timeSnr, timeLoss: this.timeLoss, fitting: this.#counted ? this.#fitting : null, nearest: this.#nearest };
+    return {
+      timeSnr: this.timeSnr,
+      timeLoss: this.timeLoss,
+      fitting: this.parts.count && this.#counted ? this.#fitting : null,
+      nearest: this.#nearest,
+    };
   }
 
   /** Runs to the end, or throws `SearchStopped`; what was found until then stays. */
   run(): void {
+    this.tables.signals.keepsOver = this.parts.nearest;
     const { setting, groups } = this.tables;
     const point = setting.variables.map(() => 0);
     const all = setting.variables.length;
     const rounds = countPoints(setting.variables, groups.shared, all);
     let done = 0;
     walkPoints(setting.variables, groups.shared, all, point, () => {
-      this.#sharedPoint(point, (share) => {
+      this.#sharedPoint(point, rounds, (share) => {
         this.pulse.report((done + share) / rounds);
       });
       done += 1;
@@ -64,24 +75,34 @@ export class WholeLatticeSearch {
     });
   }
 
-  #sharedPoint(point: number[], report: (share: number) => void): void {
+  #sharedPoint(point: number[], rounds: number, report: (share: number) => void): void {
     const { setting, groups, signals, join } = this.tables;
     const lists = new SignalLists(setting, groups, signals, setting.variables.length, this.pulse);
-    const reduced = new Map<string, SignalEntry[]>();
+    const trains = new Map<string, { readonly best: readonly SignalEntry[]; readonly timed: readonly (readonly SignalEntry[])[] }>();
     const buckets = bothEndsFirst(this.#lines.buckets(point));
+    if (this.parts.count && this.#counted) this.#counted = this.#canCount(buckets, lists, rounds);
     for (const [i, bucket] of buckets.entries()) {
       if (i > 0 && i % 16 === 0) report(i / buckets.length);
       const entries = lists.of(bucket);
-      let best = reduced.get(bucket.train);
-      if (best === undefined) {
-        best = undominated(entries);
-        reduced.set(bucket.train, best);
+      let train = trains.get(bucket.train);
+      if (train === undefined) {
+        train = { best: undominated(entries), timed: byTiming(entries) };
+        trains.set(bucket.train, train);
       }
-      if (this.parts !== 'nearest alone') this.#fronts(bucket, best);
-      if (this.parts !== 'fronts alone') this.#seekNearest(bucket, entries);
-      if (this.parts === 'all') this.#count(bucket, entries);
+      if (this.parts.fronts) this.#fronts(bucket, train.best);
+      if (this.parts.nearest) this.#seekNearest(bucket, entries);
+      if (this.parts.count && this.#counted) this.#count(bucket, train.timed);
+      bucket.release();
     }
     join.forget();
+  }
+
+  /** Whether counting stays within bounds, judged by the first choice of the shared variables. */
+  #canCount(buckets: readonly LineBucket[], lists: SignalLists, rounds: number): boolean {
+    const first = buckets[0];
+    if (first === undefined) return true;
+    const entries = buckets.reduce((sum, { entryCount }) => sum + entryCount, 0);
+    return buckets.length * lists.of(first).length * rounds <= mostPairs && entries * rounds <= mostEntries;
   }
 
   #fronts(bucket: LineBucket, signals: readonly SignalEntry[]): void {
@@ -95,7 +116,7 @@ export class WholeLatticeSearch {
         this.#beaten(bucket, bucket.bound, state, bucket.bound.fewestLines, bucket.bound.mostLines)
       )
         continue;
-      if (!this.tables.signals.playable(state, bucket.train, bucket.parameters)) continue;
+      if (!this.tables.signals.playable(state, bucket)) continue;
       line ??= skyline(bucket);
       if (line.length > 0) this.#branch(bucket, signal, line, 0, line.length);
     }
@@ -164,50 +185,68 @@ export class WholeLatticeSearch {
       if (held !== null && excess > held.excess) continue;
       const loss = join.loss(bucket, state, join.noise(state, entry.signalFreeSnr));
       if (held !== null && excess === held.excess && loss >= held.loss) continue;
-      if (signals.playable(state, bucket.train, bucket.parameters))
-        this.#nearest = { excess, loss, point: joinedPoint(groups, entry.point, signal.point) };
+      if (signals.playable(state, bucket)) this.#nearest = { excess, loss, point: joinedPoint(groups, entry.point, signal.point) };
     }
   }
 
   /** Counts the points of a bucket that fit: under each timing the first so many lines, and of those the ones with enough signal. */
-  #count(bucket: LineBucket, signals: readonly SignalEntry[]): void {
-    if (!this.#counted) return;
-    this.#pairs += signals.length;
-    this.#entries += bucket.entryCount;
-    if (this.#pairs > mostPairs || this.#entries > mostEntries) {
-      this.#counted = false;
-      return;
-    }
-    const { join, signals: table } = this.tables;
+  #count(bucket: LineBucket, byTime: readonly (readonly SignalEntry[])[]): void {
+    const { join, signals, setting } = this.tables;
     const { entries } = bucket;
-    const byNoise = entries
-      .map((_, i) => i)
-      .sort((a, b) => ((entries[a] as LineEntry).signalFreeSnr ?? -1) - ((entries[b] as LineEntry).signalFreeSnr ?? -1));
-    const ordered = byNoise.map((i) => entries[i] as LineEntry);
-    const sums = new Map<string, Float64Array>();
-    for (const { state } of signals) {
+    const before = setting.baseline.model.signalFreeSnr ?? 1;
+    const byNoise = entries.map((_, i) => i).sort((a, b) => noiseOf(entries[a]) - noiseOf(entries[b]));
+    const noises = Float64Array.from(byNoise, (i) => noiseOf(entries[i]));
+    const sum = new Float64Array(entries.length + 1);
+    for (const states of byTime) {
       this.pulse.beat();
-      if (state.rfRank === 2) continue;
-      let sum = sums.get(state.timeKey);
-      if (sum === undefined) {
-        const within = firstAudible(entries, ({ lineCount }) => {
-          const time = join.time(state, bucket, lineCount);
-          return time.rank === 2 || !time.kept;
-        });
-        // sum[i]: points of the lines from the i-th weakest on that are in time.
-        sum = new Float64Array(entries.length + 1);
-        for (let i = entries.length - 1; i >= 0; i -= 1) {
-          const at = byNoise[i] as number;
-          sum[i] = (sum[i + 1] as number) + (at < within ? (entries[at] as LineEntry).multiplicity : 0);
-        }
-        sums.set(state.timeKey, sum);
+      const first = (states[0] as SignalEntry).state;
+      const within = firstAudible(entries, ({ lineCount }) => {
+        const time = join.time(first, bucket, lineCount);
+        return time.rank === 2 || !time.kept;
+      });
+      if (within === 0) continue;
+      // sum[i]: points of the lines from the i-th weakest on that are in time.
+      for (let i = entries.length - 1; i >= 0; i -= 1) {
+        const at = byNoise[i] as number;
+        sum[i] = (sum[i + 1] as number) + (at < within ? (entries[at] as LineEntry).multiplicity : 0);
       }
-      if (sum[0] === 0) continue;
-      const from = firstAudible(ordered, (entry) => join.audibleAt(state, entry.signalFreeSnr));
-      const points = sum[from] as number;
-      if (points > 0 && table.playable(state, bucket.train, bucket.parameters)) this.#fitting += points;
+      for (const { state } of states) {
+        let from = firstFrom(noises, state.quietFrom * before * (1 - 1e-9));
+        // The threshold is right within a billionth: the bands themselves decide what lies that close.
+        while (from < entries.length && !join.audibleAt(state, (entries[byNoise[from] as number] as LineEntry).signalFreeSnr)) from += 1;
+        const points = sum[from] as number;
+        if (points > 0 && signals.playable(state, bucket)) this.#fitting += points;
+      }
     }
   }
+}
+
+function noiseOf(entry: LineEntry | undefined): number {
+  return entry?.signalFreeSnr ?? -1;
+}
+
+/** Index of the first of ascending numbers that is at least `least`. */
+function firstFrom(numbers: Float64Array, least: number): number {
+  let low = 0;
+  let high = numbers.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if ((numbers[middle] as number) >= least) high = middle;
+    else low = middle + 1;
+  }
+  return low;
+}
+
+/** States that RF allows, those of one timing together. */
+function byTiming(entries: readonly SignalEntry[]): SignalEntry[][] {
+  const groups = new Map<number, SignalEntry[]>();
+  for (const entry of entries) {
+    if (entry.state.rfRank === 2) continue;
+    const group = groups.get(entry.state.timeId);
+    if (group === undefined) groups.set(entry.state.timeId, [entry]);
+    else group.push(entry);
+  }
+  return [...groups.values()];
 }
 
 /** Entries that no other of the bucket beats in lines and noise, fewest lines first, so least SNR first. */

@@ -138,6 +138,9 @@ export class WholeLines {
     into.push({
       ...common,
       bound: this.#boundOf(plane, slice, common),
+      release: () => {
+        formed = null;
+      },
       get entries() {
         formed ??= form();
         return formed;

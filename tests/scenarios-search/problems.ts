@@ -51,7 +51,7 @@ export function problemOf(series: StudySeries, fieldT: number, limits: Limits, m
 }
 
 /** 3 T liver, arterial phase of 17 s: 80 x 60 lines, 1.2 x 1.9 x 3 mm; slices of at most 5 mm must be kept. */
-export const liverSeries = inventedSeries(
+const liverSeries = inventedSeries(
   'spoiled-gradient-echo/3D',
   {
     repetitionTimeMs: 3.55,

@@ -53,6 +53,8 @@ export interface Scanner {
   /** g of simultaneous slices by their number; what is missing is not known. */
   readonly simultaneousSliceG: Readonly<Record<number, number>>;
   readonly pulses: Readonly<Partial<Record<PulseName, PulseShape>>>;
+  /** Pauses that a site set, s; absent: common practice. */
+  readonly pauses?: { readonly preparationS: number; readonly restS: number };
 }
 
 /** A scanner without a file: 40 mT/m, 150 T/m/s, 500 mm, 20 uT, 5 % (common practice, no source). */

@@ -11,6 +11,26 @@ export const preparationS = 20;
 const instructionS = 10;
 export const restS = 20;
 
+/** Pauses as a site has them, s. */
+export interface Pauses {
+  /** Preparation of a series. */
+  readonly preparationS: number;
+  /** Rest between two breath-holds. */
+  readonly restS: number;
+}
+
+const usualPauses: Pauses = { preparationS, restS };
+
+/** Pauses of those who work at this scanner. */
+export function pausesOf(scanner: Scanner): Pauses {
+  return scanner.pauses ?? usualPauses;
+}
+
+/** Instruction and rest that come with each breath-hold, s. */
+export function restOfHoldS(scanner: Scanner): number {
+  return instructionS + pausesOf(scanner).restS;
+}
+
 /** Times of one series. Seconds come from whole microseconds times whole or half counts, divided once at the end. */
 export interface SeriesTime {
   readonly scanTimeS: number;
@@ -101,7 +121,8 @@ export function seriesTime(key: ClassKey, p: Parameters, lines: Lines, rounds: n
   const volumes = repeatsVolumes(key) ? p.volumes : 1;
   const passUs = shots * shotUs + extraUs;
   const scanTimeS = ((passUs * passes + leadUs) * volumes) / 1e6 + p.referenceScanS;
-  if (!isBreathHeld(p)) return { scanTimeS, holdTimeS: null, holds: null, tableTimeS: preparationS + scanTimeS, shots };
+  const prepared = pausesOf(scanner).preparationS;
+  if (!isBreathHeld(p)) return { scanTimeS, holdTimeS: null, holds: null, tableTimeS: prepared + scanTimeS, shots };
   const bySlice = classRow(key).interleaving === 'slice-by-slice' || isCine(p);
   const volume = classRow(key).interleaving === 'volume';
   const units = bySlice ? p.sliceCount : volume ? 1 : rounds;
@@ -111,5 +132,5 @@ export function seriesTime(key: ClassKey, p: Parameters, lines: Lines, rounds: n
   // Whole passes go into a hold; the fullest one is the longest. A volume is one hold with all its slabs.
   const passesPerHold = volume ? passes : Math.min(passes, guardedCeil((Math.min(perHold, units) * passes) / units));
   const holdTimeS = (passUs * passesPerHold + leadUs) / 1e6;
-  return { scanTimeS, holdTimeS, holds, tableTimeS: preparationS + scanTimeS + holds * (instructionS + restS), shots };
+  return { scanTimeS, holdTimeS, holds, tableTimeS: prepared + scanTimeS + holds * restOfHoldS(scanner), shots };
 }

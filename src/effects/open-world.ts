@@ -76,7 +76,12 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   const beat = setInterval(() => void drafts.beat(), heartbeatMs);
   beat.unref();
   return {
-    defaults: { role: settings.role, scannerName: settings.scannerName, coilName: settings.coilName },
+    defaults: {
+      role: settings.role,
+      scannerName: settings.scannerName,
+      coilName: settings.coilName,
+      pauses: { preparationS: settings.preparationS, restS: settings.restS },
+    },
     ascii: settings.glyphs === 'ascii',
     reader: settings.readerMode,
     color: settings.colour === 'auto' ? undefined : settings.colour,

@@ -80,7 +80,8 @@ function scaleOf({ points, figures, limits }: RangeChart, which: 0 | 1): Scale {
   const span = Math.max(high - low, Math.abs(high) * 0.02, 1e-9);
   const near = limit !== null && limit > low - span && limit < high + span;
   const [bottom, top] = near ? [Math.min(low, limit), Math.max(high, limit)] : [low, high];
-  const air = Math.max((top - bottom) * 0.05, Math.abs(top) * 0.005, 1e-9);
+  // A flat curve lies in the middle of an axis that is wide enough for its marks to differ.
+  const air = Math.max((top - bottom) * 0.05, top === bottom ? Math.abs(top) * 0.1 : Math.abs(top) * 0.005, 1e-9);
   // Figures are never below zero: neither is their axis.
   return { low: bottom >= 0 ? Math.max(0, bottom - air) : bottom - air, high: top + air };
 }

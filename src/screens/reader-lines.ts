@@ -81,6 +81,7 @@ function itemsOf(state: State, look: Look): readonly Item[] {
 function startItems(state: State): Item[] {
   const here = startRow(state)?.field;
   return [
+    ...state.fileNotes.map((words) => ({ words })),
     { words: `Type to narrow: ${state.narrowing || 'nothing typed'}` },
     ...startRows(state).map((row) => ({
       words:

@@ -1,7 +1,7 @@
 import { fieldStrengths, type StartRow, startRows } from '../session/start-list.js';
 import type { State } from '../session/state.js';
 import { fitText } from '../terminal/text-width.js';
-import { blank, fill, type Line, line, span, windowOf } from './line.js';
+import { blank, fill, type Line, line, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
 
 /** Chooses a field strength, a region and a preset; unfinished sessions are offered first. */
@@ -25,11 +25,22 @@ export function startScreen(state: State, look: Look, columns: number, rows: num
     blank,
     line(`  ${'field'.padStart(6)}   ${'region'.padEnd(16)}preset`, 'quiet'),
   ];
-  const shown = windowOf(list, chosen, rows - head.length);
+  const notes = noteLines(state, look, columns);
+  const listRows = rows - head.length - notes.length;
+  const shown = windowOf(list, chosen, listRows);
   const body = shown.items.map((row, at) => rowLine(row, shown.from + at === chosen, look, columns));
   if (list.length === 0)
     body.push(line(state.presets.length === 0 ? '  Reading the presets' : '  Nothing matches; Backspace takes a letter back'));
-  return fill([...head, ...body], rows);
+  return [...fill([...head, ...body], rows - notes.length), ...notes];
+}
+
+/** What is wrong with files that were read, under the list: two things, and how many more. */
+function noteLines({ fileNotes }: State, { glyphs }: Look, columns: number): Line[] {
+  const shown = fileNotes.slice(0, 2).flatMap((words) => wrap(words, columns).slice(0, 3));
+  const more = fileNotes.length - 2;
+  return [...shown, ...(more > 0 ? [`and ${more} more files: holdfast presets check`] : [])].map((words) =>
+    line(fitText(words, columns, glyphs.ellipsis), 'trouble'),
+  );
 }
 
 function rowLine(row: StartRow, here: boolean, { glyphs }: Look, columns: number): Line {

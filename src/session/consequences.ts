@@ -1,5 +1,5 @@
 import { classRow } from '../calc/classes.js';
-import { type FigureKey, figureTable } from '../calc/figures.js';
+import { type FigureKey, figureKeys, figureRow } from '../calc/figures.js';
 import { classOf } from '../calc/series.js';
 import type { MustKeep } from '../study/study.js';
 import { readingsOf, resultNow, resultOfPreset, sessionSeries, studySeries } from './results.js';
@@ -24,45 +24,17 @@ export interface Consequence {
   readonly fromReading: boolean;
 }
 
+const place = (key: FigureKey) => figureRow(key).scale?.place ?? Number.POSITIVE_INFINITY;
+
 /** The figures of the scale, in the order they are asked for; wider screens show more of them. */
-export const scaleFigures: readonly FigureKey[] = [
-  'holdTimeS',
-  'scanTimeS',
-  'voxelReadMm',
-  'voxelPhaseMm',
-  'voxelSliceMm',
-  'relativeSnr',
-  'relativeContrast',
-  'rfPowerTrend',
-  'coverageMm',
-  'blurFwhmPx',
-  'chemicalShiftPx',
-  'b1PlusRmsUt',
-  'distortionPxPer100Hz',
-  'tableTimeS',
-  'holds',
-  'temporalResolutionMs',
-  'voxelVolumeMm3',
-];
-
-const shortLabels: Readonly<Partial<Record<FigureKey, string>>> = {
-  voxelReadMm: 'voxel read',
-  voxelPhaseMm: 'voxel phase',
-  voxelSliceMm: 'voxel slice',
-  voxelVolumeMm3: 'voxel',
-  tableTimeS: 'on table',
-  chemicalShiftPx: 'fat shift',
-  distortionPxPer100Hz: 'distortion',
-  temporalResolutionMs: 'beat phase',
-  holds: 'holds',
-};
-
-/** Ratios whose value is already the comparison. */
-const isRatio: readonly FigureKey[] = ['relativeSnr', 'relativeContrast', 'rfPowerTrend'];
+export const scaleFigures: readonly FigureKey[] = figureKeys
+  .filter((key) => figureRow(key).scale !== undefined)
+  .sort((a, b) => place(a) - place(b));
 
 /** A figure's name in the narrow column. */
 export function figureLabel(key: FigureKey): string {
-  return shortLabels[key] ?? figureTable[key].label;
+  const { scale, label } = figureRow(key);
+  return scale?.label ?? label;
 }
 
 /** The consequences of the present values of a series, those that its class has. */
@@ -76,7 +48,7 @@ export function consequences(state: State, id: string): readonly Consequence[] {
     .filter((key) => has.includes(key) && now.figures[key] !== null)
     .map((key) => {
       const value = now.figures[key];
-      const base = isRatio.includes(key) ? 1 : before[key];
+      const base = figureRow(key).ratio === true ? 1 : before[key];
       const ratio = value !== null && base !== null && base > 0 ? value / base : null;
       const limits = [
         ...judged.filter(({ of }) => of === key).map(({ verdict }) => verdict.limit),

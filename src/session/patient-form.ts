@@ -36,7 +36,7 @@ export function patientForm(state: State): readonly FormRow[] {
       max: 120,
       step: 1,
       first: 15,
-      help: 'Longest hold of this patient. s starts and stops a practice hold, which fills it in.',
+      help: 'Longest hold. s starts and stops a practice hold, which fills it in.',
     }),
     practiceRow(state),
     number('holdsAvailable', {
@@ -85,7 +85,7 @@ export function patientForm(state: State): readonly FormRow[] {
       max: 20,
       step: 0.1,
       first: 2,
-      help: 'Cap of the label. Judged from the number that the scanner displays, never without it.',
+      help: 'Cap of the label. Judged from the number the scanner displays, never without.',
     }),
     textRow('b1rmsReadFrom', '  read where', limits.b1rmsReadFrom, 'Card, letter or label where the cap was read.', (before, text) =>
       withLimits(before, { b1rmsReadFrom: blankIsNull(text) }),
@@ -97,7 +97,7 @@ export function patientForm(state: State): readonly FormRow[] {
       max: 20,
       step: 0.1,
       first: 2,
-      help: 'Cap of the label or the site. Judged from the number that the scanner displays.',
+      help: 'Cap of the label or the site. Judged from the number the scanner displays.',
     }),
     textRow('sarReadFrom', '  read where', limits.sarReadFrom, 'Card, letter or label where the cap was read.', (before, text) =>
       withLimits(before, { sarReadFrom: blankIsNull(text) }),

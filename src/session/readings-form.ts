@@ -24,7 +24,7 @@ export function readingsForm(state: State, id: string): readonly FormRow[] {
 export function readingRows(when: When, id: string, reading: RecordedReading | null): FormRow[] {
   const keep = (session: Session, values: { readonly [K in keyof RecordedReading]: RecordedReading[K] | undefined | null }) =>
     eachSeries(session, new Set([id]), (series) => ({ ...series, [when]: cleaned({ ...series[when], ...values }) }));
-  const scaled = when === 'before' ? 'Later figures scale from it: same coil, same patient.' : 'Shows how far the prediction was off.';
+  const scaled = when === 'before' ? 'Later figures scale from it: same coil and patient.' : 'Shows how far the prediction was off.';
   const number = (
     key: 'timeS' | 'b1rmsUt' | 'sarWkg',
     label: string,

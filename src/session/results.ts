@@ -48,7 +48,7 @@ function keptOf(state: State, series: StudySeries): Kept {
   let known = kept.get(series);
   if (known === undefined) {
     known = {
-      baseline: presetBaseline(series, state.opened?.study.fieldT ?? series.parameters.repetitionTimeMs),
+      baseline: presetBaseline(series, state.opened?.study.fieldT ?? series.parameters.repetitionTimeMs, state.opened?.scanner.pauses),
       results: new Map(),
       latest: new WeakMap(),
     };

@@ -1,3 +1,4 @@
+import { restOfHoldS } from '../calc/time.js';
 import { resultNow } from './results.js';
 import type { SessionSeries } from './session.js';
 import type { State } from './state.js';
@@ -11,7 +12,7 @@ export interface HoldClock {
   readonly leftS: number;
   /** A hold or the scan is under way; false between two holds. */
   readonly counting: boolean;
-  /** All that is still to come of this series, without rests. */
+  /** All that is still to come of this series, with the rests between its holds. */
   readonly seriesLeftS: number;
 }
 
@@ -27,7 +28,8 @@ export function holdClock(state: State, series: SessionSeries): HoldClock | null
   const counting = run.sinceMs !== null && leftS > 0;
   if (!held) return { hold: null, holds: null, leftS, counting, seriesLeftS: leftS };
   const hold = Math.min(holds, run.holdsDone + 1);
-  return { hold, holds, leftS, counting, seriesLeftS: leftS + Math.max(0, holds - hold) * lengthS };
+  const restS = state.opened === null ? 0 : restOfHoldS(state.opened.scanner);
+  return { hold, holds, leftS, counting, seriesLeftS: leftS + Math.max(0, holds - hold) * (lengthS + restS) };
 }
 
 /** The series that runs, if one does. */

@@ -1,9 +1,7 @@
-import { type FigureKey, figureTable } from '../calc/figures.js';
+import { type FigureKey, figureRow } from '../calc/figures.js';
 import { sayRatio } from './say-ratio.js';
 import { sayTime } from './say-time.js';
 
-/** Figures that are ratios to the baseline. */
-const ratios: readonly FigureKey[] = ['relativeSnr', 'relativeContrast', 'rfPowerTrend', 'sarTrendLow', 'sarTrendHigh'];
 /** Lengths of a voxel: two digits below a millimetre, one above. */
 const voxelLengths: readonly FigureKey[] = ['voxelReadMm', 'voxelPhaseMm', 'voxelSliceMm', 'displayedVoxelReadMm', 'displayedVoxelPhaseMm'];
 
@@ -15,9 +13,9 @@ const voxelLengths: readonly FigureKey[] = ['voxelReadMm', 'voxelPhaseMm', 'voxe
  */
 export function sayFigure(key: FigureKey, value: number | null): string {
   if (value === null) return '-';
-  const { unit, digits } = figureTable[key];
+  const { unit, digits, ratio } = figureRow(key);
   if (unit === 's') return sayTime(value);
-  if (ratios.includes(key)) return sayRatio(value);
+  if (ratio === true) return sayRatio(value);
   if (key === 'contrastRatioChange') return sayChange(value);
   const shown = voxelLengths.includes(key) && value >= 1 ? value.toFixed(1) : value.toFixed(digits);
   return unit === '' ? shown : `${shown} ${unit}`;

@@ -23,8 +23,9 @@ export interface SeriesResult {
 }
 
 /** The preset of a series as it stands at the field of its file: what everything is relative to. */
-export function presetBaseline(series: StudySeries, fieldT: number): Baseline {
-  return baselineOf(series, plainScanner(fieldT));
+export function presetBaseline(series: StudySeries, fieldT: number, pauses?: Scanner['pauses']): Baseline {
+  const scanner = plainScanner(fieldT);
+  return baselineOf(series, pauses === undefined ? scanner : { ...scanner, pauses });
 }
 
 /** Sets values on a series, carries what follows, evaluates it and judges its must-keeps. */

@@ -25,6 +25,11 @@ function pairedSeries(state: State, id: string): readonly StudySeries[] {
   );
 }
 
+/** Whether a series was acquired: what it was acquired with changes no more by itself. */
+function isAcquired(state: State, id: string): boolean {
+  return ['done', 'repeated', 'stopped-early'].includes(sessionSeries(state, id).state);
+}
+
 /** Gives a field of a series another value, in its pairs too, as one step; says what it did or why not. */
 export function setField(state: State, id: string, field: SeriesField, value: unknown): State {
   if (isLocked(state, id, field.key)) return say(state, `${field.label} is locked in the preset: l opens it`, 'trouble');
@@ -32,14 +37,16 @@ export function setField(state: State, id: string, field: SeriesField, value: un
   const given = withMatchingAverages(withField(field, value, before), before);
   const clash = parameterClashes({ ...before, ...given } as GivenParameters)[0];
   if (clash !== undefined) return say(state, `${clash.given}; expected ${clash.expected}`, 'trouble');
-  const pairs = pairedSeries(state, id).filter(
+  const all = pairedSeries(state, id).filter(
     (other) => classRow(classOf(other)).parameters.includes(field.key) && !isLocked(state, other.id, field.key),
   );
+  const pairs = all.filter((other) => !isAcquired(state, other.id));
+  const unmatched = all.filter((other) => isAcquired(state, other.id)).map((other) => other.id);
   const from = sayField(field, fieldValue(field, before));
   const to = sayField(field, value);
   if (from === to && JSON.stringify(fieldValue(field, before)) === JSON.stringify(value))
     return say(state, `${field.label} is ${to} already`);
-  const words = `${field.label} ${from} to ${to}${pairs.length === 0 ? '' : `, also in ${pairs.map((pair) => pair.id).join(', ')}`}`;
+  const words = `${field.label} ${from} to ${to}${pairs.length === 0 ? '' : `, also in ${pairs.map((pair) => pair.id).join(', ')}`}${unmatched.length === 0 ? '' : `; no longer matches ${unmatched.join(', ')}, acquired already`}`;
   const touched = new Set([id, ...pairs.map((pair) => pair.id)]);
   return edit(state, words, (session) =>
     eachSeries(session, touched, (series) => ({ ...series, set: tidySet(state, series.id, { ...series.set, ...given }, field.key) })),

@@ -65,6 +65,8 @@ export interface State {
   readonly nowMs: number;
   /** Defaults of whoever works here. */
   readonly defaults: Defaults;
+  /** What is wrong with files that were read at the start: it stays on the start screen. */
+  readonly fileNotes: readonly string[];
   /** What narrows the list of presets. */
   readonly narrowing: string;
   readonly opened: Opened | null;
@@ -90,6 +92,8 @@ export interface Defaults {
   readonly role: string;
   readonly scannerName: string;
   readonly coilName: string;
+  /** Preparation of a series and rest between breath-holds, as the settings have them; absent: common practice. */
+  readonly pauses?: { readonly preparationS: number; readonly restS: number };
 }
 
 export const startPlace: Place = {
@@ -112,6 +116,7 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     size,
     nowMs: 0,
     defaults,
+    fileNotes: [],
     narrowing: '',
     opened: null,
     session: null,

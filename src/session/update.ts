@@ -31,21 +31,23 @@ function carryOut(state: State, message: Message): Change {
     case 'tick':
       return only({ ...state, nowMs: Math.max(state.nowMs, message.atMs) });
     case 'presets': {
-      const next = { ...state, presets: message.presets, notice: null };
-      const first = message.notes[0];
-      return only(
-        first === undefined
-          ? next
-          : say(next, message.notes.length > 1 ? `${first} (and ${message.notes.length - 1} more)` : first, 'trouble'),
-      );
+      return only({ ...state, presets: message.presets, fileNotes: withNotes(state, message.notes) });
     }
     case 'drafts':
       return only({ ...state, drafts: message.drafts });
     case 'note':
-      return only(say(state, message.words, 'trouble'));
+      // Before a session is open only files are read: what is wrong with them stays in sight.
+      return only(
+        state.session === null ? { ...state, fileNotes: withNotes(state, [message.words]) } : say(state, message.words, 'trouble'),
+      );
     case 'answer':
       return takeAnswer(state, message.ask, message.answer);
   }
+}
+
+/** What is wrong with files, each thing once. */
+function withNotes(state: State, notes: readonly string[]): readonly string[] {
+  return [...new Set([...state.fileNotes, ...notes])];
 }
 
 /** An answer counts when its question is the newest of its kind. */

@@ -3,8 +3,10 @@ import { headlineOf } from '../../src/screens/common-lines.js';
 import { lineText } from '../../src/screens/line.js';
 import type { Look } from '../../src/screens/look.js';
 import { screenLines } from '../../src/screens/screen-lines.js';
+import { formRows } from '../../src/session/hands/form-commands.js';
 import { keyMap } from '../../src/session/key-map.js';
 import { type State, screenNames } from '../../src/session/state.js';
+import { update } from '../../src/session/update.js';
 import { asciiGlyphs, unicodeGlyphs } from '../../src/terminal/glyphs.js';
 import { textWidth } from '../../src/terminal/text-width.js';
 import { onField, press, sessionOn, startState } from '../session/invented-state.js';
@@ -145,5 +147,30 @@ describe('help', () => {
   it('needs no Shift for anything in a hurry', () => {
     const letters = Object.values(keyMap).flatMap((rows) => rows.flatMap(({ keys }) => keys.filter((key) => key.length === 1)));
     for (const key of letters) expect(key).toMatch(/[a-z0-9 .\-+=/*?]/);
+  });
+});
+
+describe('the words under a form', () => {
+  const order = press(sessionOn('lumbar-spine-1.5t'), 'p');
+  it.each([
+    ['patient', order],
+    ['readings', press(order, 'escape', 'enter', 'd')],
+    ['record', press(order, 'e')],
+  ] as const)('of %s fit on the smallest screen', (_name, state) => {
+    expect(formRows(state).filter(({ help }) => help.length > 80)).toEqual([]);
+  });
+});
+
+describe('what is wrong with files', () => {
+  const noted = update(startState(), { kind: 'note', words: 'the settings: restS is "20", expected seconds from 0 to 600.' })[0];
+
+  it('stays on the start screen while something is typed, also when the presets come later', () => {
+    const late = update(noted, { kind: 'presets', presets: noted.presets, notes: ['broken.json, line 3: no closing brace.'] })[0];
+    for (const look of [unicode, reader]) {
+      const text = textOf(press(late, 'l', 'i', 'v'), look).join('\n');
+      expect(text).toContain('restS is "20"');
+      expect(text).toContain('broken.json, line 3');
+      expect(text).toContain('Liver');
+    }
   });
 });

@@ -50,9 +50,10 @@ export const choose: Command = (state) => {
 
 /** Begins a session on a preset, and asks for its rules to be read. */
 export function openPreset(state: State, { study, hash }: PresetChoice): Change {
-  const { role, scannerName, coilName } = state.defaults;
+  const { role, scannerName, coilName, pauses } = state.defaults;
   const session = newSession(study, role);
-  const opened = { study, hash, scanner: plainScanner(study.fieldT), scannerName, coilName };
+  const plain = plainScanner(study.fieldT);
+  const opened = { study, hash, scanner: pauses === undefined ? plain : { ...plain, pauses }, scannerName, coilName };
   const place = { ...startPlace, screen: 'order', seriesId: session.series[0]?.id ?? '' } as const;
   return withRules({
     ...state,

@@ -44,6 +44,7 @@ async function openOnTerminal(options: InterfaceOptions): Promise<number> {
     shippedPresets: await io.shippedPresets(),
     presets,
     records,
+    programUrl: import.meta.url,
   });
   return openInterface({
     ...world,

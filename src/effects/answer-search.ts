@@ -1,3 +1,4 @@
+import { planBudget } from '../search/budget.js';
 import type { SearchControl } from '../search/control.js';
 import { nothingFits } from '../search/nothing-fits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
@@ -14,14 +15,16 @@ export function answerSearch(problem: SearchProblem, control: SearchControl): Se
 /** Answers one ask by replies, the last of which is its answer. */
 export function replyToAsk({ number, problem, stop }: SearchAsk, reply: (message: SearchReply) => void): void {
   const flag = new Int32Array(stop);
+  const stopped = () => Atomics.load(flag, 0) !== 0;
+  const progress = (share: number) => {
+    reply({ number, kind: 'progress', share });
+  };
   try {
-    const answer = answerSearch(problem, {
-      stopped: () => Atomics.load(flag, 0) !== 0,
-      progress: (share) => {
-        reply({ number, kind: 'progress', share });
-      },
-    });
-    reply({ number, kind: 'answer', answer });
+    if ('study' in problem) {
+      reply({ number, kind: 'plan', plan: planBudget(problem, { stopped }) });
+      return;
+    }
+    reply({ number, kind: 'answer', answer: answerSearch(problem, { stopped, progress }) });
   } catch (error) {
     reply({ number, kind: 'fault', message: error instanceof Error ? error.message : String(error) });
   }

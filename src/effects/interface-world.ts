@@ -1,11 +1,13 @@
 import type { ParseExpression } from '../formulas/parsed-node.js';
 import type { Draft } from '../session/draft.js';
+import type { Message } from '../session/message.js';
 import type { DebouncedSaver } from '../store/debounced-saver.js';
 import type { Disk } from '../store/disk.js';
 import type { DraftFile } from '../store/draft-file.js';
 import type { Folders } from '../store/folders.js';
 import type { PresetFolder } from '../store/preset-folder.js';
 import type { Settings } from '../store/settings.js';
+import type { SearchRunner } from './run-search.js';
 
 /** Everything outside that the effects of the interface touch. Tests put plain objects in its place. */
 export interface InterfaceWorld {
@@ -17,6 +19,9 @@ export interface InterfaceWorld {
   readonly saver: DebouncedSaver<Draft>;
   /** Loads the parser of expressions once, on first need. */
   readonly parser: () => Promise<ParseExpression>;
+  readonly searches: SearchRunner;
+  /** Says something to the interface without being asked. */
+  readonly tell: (message: Message) => void;
   /** Today as YYYY-MM-DD. */
   readonly today: () => string;
   readonly newId: () => string;

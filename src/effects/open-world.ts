@@ -15,6 +15,7 @@ import { toolVersion } from '../study/tool-version.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { loadDrafts, loadPresets } from './load-presets.js';
 import { runEffect } from './run-effect.js';
+import { openSearchWorker, searchRunner } from './run-search.js';
 
 /** Where the interface finds its files, and what the command line said. */
 export interface WorldChoices {
@@ -25,6 +26,8 @@ export interface WorldChoices {
   readonly shippedPresets: string | null;
   readonly presets: string | undefined;
   readonly records: string | undefined;
+  /** Of the program's own file: the bundle of the search lies beside it. */
+  readonly programUrl: string;
 }
 
 /** The world outside as the interface reaches it. */
@@ -36,6 +39,8 @@ export interface OpenWorld {
   readonly color: string | undefined;
   readonly runEffect: (effect: Effect) => Promise<Answer | null>;
   readonly firstMessages: readonly Promise<readonly Message[]>[];
+  /** Tells the interface what happens outside, from when it listens. */
+  readonly listen: (send: (message: Message) => void) => void;
   readonly leave: (draft: Draft | null) => Promise<void>;
 }
 
@@ -59,6 +64,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
       }),
   });
   const parser: { loading: Promise<ParseExpression> | null } = { loading: null };
+  const searches = searchRunner(() => openSearchWorker(choices.programUrl));
   const world: InterfaceWorld = {
     disk,
     folders,
@@ -70,6 +76,8 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
       parser.loading ??= import('../formulas/load-parser.js').then(({ loadParser }) => loadParser());
       return parser.loading;
     },
+    searches,
+    tell: (message) => late.note(message),
     today,
     newId: randomId,
   };
@@ -91,7 +99,11 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
       loadDrafts(world),
       Promise.resolve(notes.map(({ message }): Message => ({ kind: 'note', words: message }))),
     ],
+    listen: (send) => {
+      late.note = send;
+    },
     leave: async (draft) => {
+      searches.close();
       clearInterval(beat);
       if (draft !== null) saver.change(draft);
       await saver.flush();

@@ -6,6 +6,7 @@ import { readTypedExpression } from './read-typed-expression.js';
 import { savePage } from './save-page.js';
 import { savePreset } from './save-preset.js';
 import { saveRecord } from './save-record.js';
+import { planSession, searchWays } from './search-ways.js';
 
 /** Carries an effect out. Those that were asked answer; the others answer nothing. `quit` belongs to whoever holds the screen. */
 export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<Answer | null> {
@@ -29,6 +30,13 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return savePreset(world, effect);
     case 'save-page':
       return savePage(world, effect);
+    case 'search':
+      return searchWays(world, effect);
+    case 'plan':
+      return planSession(world, effect);
+    case 'stop-search':
+      world.searches.stop();
+      return null;
     case 'quit':
       return null;
   }

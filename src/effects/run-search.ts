@@ -1,12 +1,19 @@
 import { Worker } from 'node:worker_threads';
+import type { Budget, BudgetProblem } from '../search/budget.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
-import { answerSearch } from './answer-search.js';
-import type { SearchAnswer, SearchAsk, SearchReply } from './search-protocol.js';
+import { replyToAsk } from './answer-search.js';
+import type { Job, SearchAnswer, SearchAsk, SearchReply } from './search-protocol.js';
 
 /** What a running search tells. None is called after `stop`, or after a newer search began, save `answered` with `proven: false`. */
 export interface SearchListener {
   readonly progress: (share: number) => void;
   readonly answered: (answer: SearchAnswer) => void;
+  readonly failed: (message: string) => void;
+}
+
+/** What a plan that is worked out tells. A plan that was stopped fails. */
+export interface PlanListener {
+  readonly planned: (plan: Budget) => void;
   readonly failed: (message: string) => void;
 }
 
@@ -22,6 +29,8 @@ export interface SearchPort {
 export interface SearchRunner {
   /** Starts a search and answers its number. */
   readonly start: (problem: SearchProblem, listener: SearchListener) => number;
+  /** Starts to plan a session, in the place of what runs, and answers its number. */
+  readonly plan: (problem: BudgetProblem, listener: PlanListener) => number;
   /** Ends the running search at once; it answers with what it has. */
   readonly stop: () => void;
   /** Ends everything: no search can be started any more. */
@@ -30,8 +39,8 @@ export interface SearchRunner {
 
 interface Running {
   readonly number: number;
-  readonly problem: SearchProblem;
-  readonly listener: SearchListener;
+  readonly ask: SearchAsk;
+  readonly hear: (reply: SearchReply) => void;
   readonly flag: Int32Array;
 }
 
@@ -68,29 +77,27 @@ export function searchRunner(open: () => SearchPort | null): SearchRunner {
   let running: Running | null = null;
   let number = 0;
 
-  const finish = (of: number, tell: (listener: SearchListener) => void) => {
-    if (running?.number !== of) return;
-    const { listener } = running;
-    running = null;
-    tell(listener);
-  };
   const hear = (reply: SearchReply) => {
     if (running?.number !== reply.number) return;
-    if (reply.kind === 'progress') running.listener.progress(reply.share);
-    else if (reply.kind === 'answer') finish(reply.number, ({ answered }) => answered(reply.answer));
-    else finish(reply.number, ({ failed }) => failed(reply.message));
+    const { hear: told } = running;
+    if (reply.kind !== 'progress') running = null;
+    told(reply);
   };
   /** Here, in the program: stoppable only before it begins. */
-  const runHere = ({ number: own, problem, flag }: Running) => {
+  const runHere = ({ number: own, ask }: Running) => {
     setImmediate(() => {
-      if (running?.number !== own) return;
-      try {
-        const answer = answerSearch(problem, { stopped: () => Atomics.load(flag, 0) !== 0 });
-        finish(own, ({ answered }) => answered(answer));
-      } catch (error) {
-        finish(own, ({ failed }) => failed(error instanceof Error ? error.message : String(error)));
-      }
+      if (running?.number === own) replyToAsk(ask, hear);
     });
+  };
+  const begin = (problem: Job, told: Running['hear']): number => {
+    if (running !== null) Atomics.store(running.flag, 0, 1);
+    number += 1;
+    const stop = new SharedArrayBuffer(4);
+    running = { number, ask: { number, problem, stop }, hear: told, flag: new Int32Array(stop) };
+    port ??= port === null ? null : openPort();
+    if (port === null || port === undefined) runHere(running);
+    else port.post(running.ask);
+    return number;
   };
   const openPort = (): SearchPort | null => {
     const opened = open();
@@ -104,16 +111,17 @@ export function searchRunner(open: () => SearchPort | null): SearchRunner {
   };
 
   return {
-    start: (problem, listener) => {
-      if (running !== null) Atomics.store(running.flag, 0, 1);
-      number += 1;
-      const stop = new SharedArrayBuffer(4);
-      running = { number, problem, listener, flag: new Int32Array(stop) };
-      port ??= port === null ? null : openPort();
-      if (port === null || port === undefined) runHere(running);
-      else port.post({ number, problem, stop });
-      return number;
-    },
+    start: (problem, listener) =>
+      begin(problem, (reply) => {
+        if (reply.kind === 'progress') listener.progress(reply.share);
+        else if (reply.kind === 'answer') listener.answered(reply.answer);
+        else if (reply.kind === 'fault') listener.failed(reply.message);
+      }),
+    plan: (problem, listener) =>
+      begin(problem, (reply) => {
+        if (reply.kind === 'plan') listener.planned(reply.plan);
+        else if (reply.kind === 'fault') listener.failed(reply.message);
+      }),
     stop: () => {
       if (running !== null) Atomics.store(running.flag, 0, 1);
     },

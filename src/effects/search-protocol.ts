@@ -1,5 +1,6 @@
-import type { SearchProblem } from '../search/problem-to-solve.js';
+import type { Budget, BudgetProblem } from '../search/budget.js';
 import type { NothingFits } from '../search/nothing-fits.js';
+import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { SearchResult } from '../search/search.js';
 
 /** What a search gives to whoever asked: the ways, and where nothing fits what binds. */
@@ -8,10 +9,13 @@ export interface SearchAnswer {
   readonly nothing: NothingFits | null;
 }
 
+/** What may be asked: ways of one series, or a plan of the whole session. */
+export type Job = SearchProblem | BudgetProblem;
+
 /** A numbered ask. `stop` is shared memory, since a busy worker reads no messages: anything but 0 ends the search with what it has. */
 export interface SearchAsk {
   readonly number: number;
-  readonly problem: SearchProblem;
+  readonly problem: Job;
   readonly stop: SharedArrayBuffer;
 }
 
@@ -19,4 +23,5 @@ export interface SearchAsk {
 export type SearchReply =
   | { readonly number: number; readonly kind: 'progress'; readonly share: number }
   | { readonly number: number; readonly kind: 'answer'; readonly answer: SearchAnswer }
+  | { readonly number: number; readonly kind: 'plan'; readonly plan: Budget }
   | { readonly number: number; readonly kind: 'fault'; readonly message: string };

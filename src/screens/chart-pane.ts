@@ -2,14 +2,14 @@ import type { FigureKey } from '../calc/figures.js';
 import { axisLabel, type RangeChart } from '../session/chart.js';
 import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
-import { chartDotBit, chartDots } from '../terminal/chart-dots.js';
 import { fitText } from '../terminal/text-width.js';
-import { type Line, line, type Style, span } from './line.js';
+import { type Line, line, span } from './line.js';
 import type { Look } from './look.js';
+import { Plot } from './plot.js';
 
-const axisColumns = 8;
+export const axisColumns = 8;
 
-interface Scale {
+export interface Scale {
   readonly low: number;
   readonly high: number;
 }
@@ -86,7 +86,7 @@ function scaleOf({ points, figures, limits }: RangeChart, which: 0 | 1): Scale {
   return { low: bottom >= 0 ? Math.max(0, bottom - air) : bottom - air, high: top + air };
 }
 
-function heightOf(value: number, { low, high }: Scale, dots: number): number {
+export function heightOf(value: number, { low, high }: Scale, dots: number): number {
   return Math.round(((value - low) / (high - low)) * (dots - 1));
 }
 
@@ -95,7 +95,7 @@ function columnOf(xs: readonly number[], at: number, width: number): number {
   return to === from ? 0 : Math.round(((x - from) / (to - from)) * (width - 1));
 }
 
-function axisText(key: FigureKey, { low, high }: Scale, row: number, height: number): string {
+export function axisText(key: FigureKey, { low, high }: Scale, row: number, height: number): string {
   const share = height === 1 ? 0 : row / (height - 1);
   if (Number.isNaN(low)) return row === 0 ? 'no value' : '';
   const shown = row === 0 || row === height - 1 || row === Math.floor((height - 1) / 2);
@@ -127,63 +127,4 @@ function curve(plot: Plot, { points, figures }: RangeChart, which: 0 | 1, scale:
     }
     before = { x, y };
   });
-}
-
-/** A field of dots, two by four in a cell, and whose curve a cell belongs to. */
-class Plot {
-  readonly #dots: Uint8Array;
-  readonly #owner: Int8Array;
-  readonly #marks: (string | undefined)[];
-
-  constructor(
-    readonly width: number,
-    readonly height: number,
-    readonly look: Look,
-  ) {
-    this.#dots = new Uint8Array(width * height);
-    this.#owner = new Int8Array(width * height).fill(-1);
-    this.#marks = Array.from({ length: width * height }, () => undefined);
-  }
-
-  /** Sets a dot; rows count from the bottom. */
-  dot(x: number, y: number, owner: 0 | 1): void {
-    const cell = (this.height - 1 - (y >> 2)) * this.width + (x >> 1);
-    if (cell < 0 || cell >= this.#dots.length) return;
-    this.#dots[cell] = (this.#dots[cell] ?? 0) | chartDotBit((x & 1) as 0 | 1, (3 - (y & 3)) as 0 | 1 | 2 | 3);
-    if (this.#owner[cell] !== 0) this.#owner[cell] = owner;
-  }
-
-  /** A line across, where no curve is. */
-  level(y: number, sign: string): void {
-    const row = this.height - 1 - (y >> 2);
-    for (let x = 0; x < this.width; x += 1) this.#marks[row * this.width + x] ??= sign;
-  }
-
-  /** The cursor, where no curve is. */
-  upright(x: number): void {
-    for (let row = 0; row < this.height; row += 1) this.#marks[row * this.width + x] = this.look.glyphs.verticalRule;
-  }
-
-  lines(): Line[] {
-    return Array.from({ length: this.height }, (_, row) => {
-      const cells = Array.from({ length: this.width }, (_cell, x): { text: string; style: Style } => {
-        const at = row * this.width + x;
-        const dots = this.#dots[at] ?? 0;
-        if (dots === 0) return { text: this.#marks[at] ?? ' ', style: this.#marks[at] === undefined ? 'plain' : 'quiet' };
-        return { text: chartDots(dots, this.look.set), style: this.#owner[at] === 0 ? 'first' : 'second' };
-      });
-      return joined(cells);
-    });
-  }
-}
-
-/** Neighbours of one style become one stretch. */
-function joined(cells: readonly { text: string; style: Style }[]): Line {
-  const spans: { text: string; style: Style }[] = [];
-  for (const cell of cells) {
-    const last = spans.at(-1);
-    if (last?.style === cell.style) last.text += cell.text;
-    else spans.push({ ...cell });
-  }
-  return spans;
 }

@@ -2,7 +2,7 @@ import { entryKeys, keyMap } from '../session/key-map.js';
 import { holdClock, runningSeries } from '../session/running.js';
 import { sayClock } from '../session/say-number.js';
 import { sayTime } from '../session/say-time.js';
-import type { State } from '../session/state.js';
+import type { ScreenName, State } from '../session/state.js';
 import { type Headline, seriesHeadline, sessionHeadline } from '../session/verdicts.js';
 import { textWidth } from '../terminal/text-width.js';
 import { fitLine, type Line, lineWidth, type Span, type Style, span } from './line.js';
@@ -10,11 +10,12 @@ import type { Look } from './look.js';
 
 const headlineStyle: Readonly<Record<string, Style>> = { OVER: 'trouble', 'TOO CLOSE': 'attention', FITS: 'bold' };
 
+const ofSeries: readonly ScreenName[] = ['series', 'why', 'type-these', 'chart', 'ways', 'front', 'keep', 'readings'];
+
 /** The verdict of the present screen: of the series that is looked at, else of the session. */
 export function headlineOf(state: State): Headline {
   const { screen, seriesId } = state.place;
-  const ofSeries = screen === 'series' || screen === 'why' || screen === 'type-these' || screen === 'chart' || screen === 'readings';
-  return ofSeries && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
+  return ofSeries.includes(screen) && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
 }
 
 /** The first line: the verdict in words. */
@@ -71,7 +72,10 @@ export function noticeLine(state: State, look: Look, columns: number, idle: Line
 /** What must not be pushed out of the bottom line by the others; equals keep the order of the map. */
 function rank(brief: string): number {
   if (brief === 'help') return 0;
-  if (['step', 'type', 'open', 'start', 'done', 'change', 'practice', 'cut short', 'save', 'reasons', 'take'].includes(brief)) return 1;
+  if (
+    ['step', 'type', 'open', 'start', 'done', 'change', 'practice', 'cut short', 'save', 'reasons', 'take', 'fit', 'more'].includes(brief)
+  )
+    return 1;
   if (brief === 'undo') return 2;
   if (brief === 'patient') return 3;
   return ['redo', 'order', 'end', 'quit', 'back'].includes(brief) ? 5 : 4;

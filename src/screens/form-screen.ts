@@ -29,6 +29,12 @@ export function readingsScreen(state: State, look: Look, columns: number, rows: 
   return [...formPane(state, formRows(state), formRow(state), look, columns, rows - note.length), ...note];
 }
 
+/** How much of each figure every way keeps. */
+export function keepScreen(state: State, look: Look, columns: number, rows: number): Line[] {
+  const note = [blank, line('Wider than usual is a decision: what was widened stands with the session.', 'quiet')];
+  return [...formPane(state, formRows(state), formRow(state), look, columns, rows - note.length), ...note];
+}
+
 /** Planned and used, reasons, what should become of the preset. */
 export function recordScreen(state: State, look: Look, columns: number, rows: number): Line[] {
   const inMain = state.place.pane === 'main';

@@ -11,6 +11,8 @@ export function idleWords(state: State): string {
       : pane === 'consequences'
         ? 'w explains the figure under the hand'
         : 'w explains the caution under the hand';
-  if (screen === 'patient' || screen === 'readings' || screen === 'record') return formRow(state)?.help ?? '';
+  if (screen === 'patient' || screen === 'readings' || screen === 'record' || screen === 'keep') return formRow(state)?.help ?? '';
+  if (screen === 'ways' || screen === 'front') return 'It proposes, people decide: Enter takes what the hand is on, u takes it back';
+  if (screen === 'budget') return 'Enter takes the whole plan as one step, u takes it back';
   return screen === 'start' ? 'Presets are starting values; review before use.' : '';
 }

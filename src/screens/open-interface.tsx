@@ -20,6 +20,8 @@ export interface InterfaceSetup {
   readonly runEffect: (effect: Effect) => Promise<Answer | null>;
   /** What is known at the start, in pieces, as it becomes known. */
   readonly firstMessages: readonly Promise<readonly Message[]>[];
+  /** Hands over where things that happen outside are told. */
+  readonly listen: (send: (message: Message) => void) => void;
   /** Saves what is not saved yet; called on every way out. */
   readonly leave: (draft: Draft | null) => Promise<void>;
 }
@@ -74,6 +76,7 @@ export async function openInterface(setup: InterfaceSetup): Promise<number> {
     ticking = everyMs === null ? null : { everyMs, timer: setInterval(() => send({ kind: 'tick', atMs: Date.now() }), everyMs) };
   }
 
+  setup.listen(send);
   for (const messages of setup.firstMessages) {
     messages.then((each) => {
       for (const message of each) send(message);

@@ -1,11 +1,14 @@
 import { figureTable } from '../calc/figures.js';
 import { rangeChart } from '../session/chart.js';
 import { consequences } from '../session/consequences.js';
+import { plannedHere } from '../session/hands/budget-commands.js';
 import { formRow, formRows } from '../session/hands/form-commands.js';
 import { orderRow } from '../session/hands/order-commands.js';
 import { fieldHere, fieldsHere } from '../session/hands/series-commands.js';
 import { startRow } from '../session/hands/start-commands.js';
+import { keepInWords } from '../session/keep-form.js';
 import { nextStep } from '../session/next-step.js';
+import { planInWords, plannedInWords, planRows } from '../session/plan-words.js';
 import { resultNow, studySeries } from '../session/results.js';
 import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
@@ -16,7 +19,10 @@ import { startRows } from '../session/start-list.js';
 import type { State } from '../session/state.js';
 import { minimumSet, timeline } from '../session/timeline.js';
 import { sayJudged, seriesVerdicts } from '../session/verdicts.js';
+import { shownWays, wayHere } from '../session/ways.js';
+import { otherMovesInWords, searchNotes, searchStatus, verdictWith, wayParagraphs, wayTitle } from '../session/ways-words.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
+import { frontPoint } from './front-screen.js';
 import { idleWords } from './idle-words.js';
 import { fill, type Line, line, lineText, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
@@ -62,6 +68,12 @@ function itemsOf(state: State, look: Look): readonly Item[] {
       return seriesItems(state);
     case 'chart':
       return chartItems(state);
+    case 'ways':
+      return waysItems(state);
+    case 'front':
+      return frontItems(state);
+    case 'budget':
+      return budgetItems(state);
     case 'why':
       return text(whyScreen(state, look, state.size.columns - 1, state.size.rows - 4));
     case 'type-these':
@@ -156,6 +168,50 @@ function seriesItems(state: State): Item[] {
       const [is, was] = [sayField(each, fieldValue(each, now.parameters)), sayField(each, fieldValue(each, planned))];
       return { words: `${each.label}: ${is}${is === was ? '' : `, preset ${was}`}` };
     }),
+  ];
+}
+
+function waysItems(state: State): Item[] {
+  const { seriesId } = state.place;
+  const here = wayHere(state);
+  const moves = otherMovesInWords(state);
+  return [
+    { words: searchStatus(state).words, here: here === null },
+    ...searchNotes(state).map((words) => ({ words })),
+    ...shownWays(state).flatMap((listed, at): Item[] => {
+      const isHere = here?.number === at + 1;
+      const title = `Way ${at + 1}, ${wayTitle(state, listed)}: ${verdictWith(state, seriesId, listed.way.given).text}`;
+      return [{ words: title, here: isHere }, ...(isHere ? wayParagraphs(listed).map(({ words }) => ({ words })) : [])];
+    }),
+    ...(here !== null && here.number === null
+      ? [
+          { words: `The way looked at last: ${verdictWith(state, seriesId, here.listed.way.given).text}`, here: true },
+          ...wayParagraphs(here.listed).map(({ words }) => ({ words })),
+        ]
+      : []),
+    ...(moves === null ? [] : [{ words: moves }]),
+    { words: `k keeps ${keepInWords(state)}` },
+  ];
+}
+
+function frontItems(state: State): Item[] {
+  const point = frontPoint(state);
+  if (point === null) return [{ words: 'No front is known' }];
+  return [
+    { words: `Point ${point.at + 1} of ${point.count}: ${point.words}, ${point.verdict.text}`, here: true },
+    { words: `Change: ${point.changes}` },
+    { words: `Against the preset: ${point.moved}` },
+  ];
+}
+
+function budgetItems(state: State): Item[] {
+  const here = plannedHere(state)?.series.id;
+  return [
+    ...planInWords(state).map(({ words }) => ({ words })),
+    ...planRows(state).map(({ planned, totalS }) => ({
+      words: `${planned.choice}: ${plannedInWords(planned)}${totalS === null ? '' : `, time ${sayTime(planned.timeS)}, running total ${sayTime(totalS)}`}`,
+      here: planned.series.id === here,
+    })),
   ];
 }
 

@@ -1,7 +1,9 @@
 import type { ScreenName, State } from '../session/state.js';
+import { budgetScreen } from './budget-screen.js';
 import { chartScreen } from './chart-screen.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
-import { patientScreen, readingsScreen, recordScreen } from './form-screen.js';
+import { keepScreen, patientScreen, readingsScreen, recordScreen } from './form-screen.js';
+import { frontScreen } from './front-screen.js';
 import { idleWords } from './idle-words.js';
 import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
@@ -11,6 +13,7 @@ import { seriesScreen } from './series-screen.js';
 import { startScreen } from './start-screen.js';
 import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
 import { titleLine } from './title-line.js';
+import { waysScreen } from './ways-screen.js';
 
 /** The smallest screen that is drawn. */
 const smallestSize = { columns: 80, rows: 24 } as const;
@@ -25,6 +28,10 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
   why: whyScreen,
   'type-these': typeTheseScreen,
   chart: chartScreen,
+  ways: waysScreen,
+  front: frontScreen,
+  keep: keepScreen,
+  budget: budgetScreen,
   readings: readingsScreen,
   record: recordScreen,
   help: helpScreen,

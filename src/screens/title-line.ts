@@ -4,7 +4,8 @@ import { changedKeys } from '../session/changed-keys.js';
 import { fieldHere } from '../session/hands/series-commands.js';
 import { resultNow, studySeries } from '../session/results.js';
 import type { State } from '../session/state.js';
-import { clockWords, withRight } from './common-lines.js';
+import { listedWays } from '../session/ways.js';
+import { clockWords, headlineOf, withRight } from './common-lines.js';
 import { type Line, span } from './line.js';
 import type { Look } from './look.js';
 import { screenWords } from './text-screen.js';
@@ -14,11 +15,21 @@ export function titleLine(state: State, look: Look, columns: number): Line {
   const { opened } = state;
   if (opened === null) return withRight([span('Start', 'bold')], 'holdfast', columns, look, 'quiet');
   const { study } = opened;
-  const right = `${study.id}, ${opened.scanner.fieldT} T${study.status === 'starter' ? ', starter' : ''}`;
+  const right = found(state) ?? `${study.id}, ${opened.scanner.fieldT} T${study.status === 'starter' ? ', starter' : ''}`;
   const clocks = clockWords(state);
   return clocks === ''
     ? withRight([span(words(state))], right, columns, look, 'quiet')
     : withRight([span(words(state))], clocks, columns, look);
+}
+
+/** While a series is over its limits: what the search has found. */
+function found(state: State): string | null {
+  const { search, place } = state;
+  if (place.screen !== 'series' || search === null || search.seriesId !== place.seriesId || headlineOf(state).word !== 'OVER') return null;
+  if (search.answer === null) return search.share === null ? null : `f: searching ${Math.round(search.share * 100)} %`;
+  const { ways, proven } = search.answer.result;
+  const count = ways.length === 0 ? 0 : listedWays(search.answer).length;
+  return count > 0 ? `f: ${count} way${count > 1 ? 's' : ''} to fit` : proven ? 'f: nothing fits' : null;
 }
 
 function words(state: State): string {
@@ -32,6 +43,10 @@ function words(state: State): string {
   }
   if (screen === 'chart')
     return `Range chart: ${fieldHere({ ...state, place: { ...state.place, fields: { ...state.place.fields, series: state.place.chart?.path ?? '' } } }).label} of ${seriesId}`;
+  if (screen === 'ways') return `Ways to fit: ${seriesId}`;
+  if (screen === 'front') return `Front of ${seriesId}: what is reached in each time`;
+  if (screen === 'keep') return 'What is kept';
+  if (screen === 'budget') return 'Budget: the session in the minutes left';
   if (screen === 'readings') return `Scanner readings: ${seriesId}`;
   const name = screenWords[screen];
   return name.charAt(0).toUpperCase() + name.slice(1);

@@ -1,4 +1,5 @@
 import type { Command } from './change.js';
+import { leaveBudget, moveInBudget, otherPlan, showBudget, takePlan } from './hands/budget-commands.js';
 import { moveCursor, openChart, takeValue, turnFigure } from './hands/chart-commands.js';
 import { back, contrastGiven, quit, redo, show, undo } from './hands/common-commands.js';
 import { clearRow, enterRow, moveInForm, turnRow, typeRow } from './hands/form-commands.js';
@@ -30,6 +31,19 @@ import {
 } from './hands/series-commands.js';
 import { choose, clearOrLeave, moveInList, narrow, widen } from './hands/start-commands.js';
 import { scrollText } from './hands/text-commands.js';
+import {
+  moreWays,
+  moveInWays,
+  moveOnFront,
+  recallWay,
+  showFront,
+  showWays,
+  stopOrBack,
+  takeFront,
+  takeNumbered,
+  takeWay,
+  turnFront,
+} from './hands/ways-commands.js';
 import type { KeyPress } from './message.js';
 import type { ScreenName, State } from './state.js';
 
@@ -90,6 +104,12 @@ const upAndDown = (by: (rows: number) => Command, what: string): readonly KeyRow
   row('end', '', '', '', by(9999)),
 ];
 
+/** The ways of a series, from wherever it is looked at. */
+const toWays: readonly KeyRow[] = [
+  row('f', 'f', 'fit', 'Finds ways to fit: what to change, what each gains and gives up.', showWays),
+  row('a', 'a', '', 'Again: the way looked at last.', recallWay, ({ lastWay }) => lastWay !== null),
+];
+
 const inMain = ({ place }: State) => place.pane === 'main';
 
 const series: readonly KeyRow[] = [
@@ -110,6 +130,7 @@ const series: readonly KeyRow[] = [
   row('b', 'b', '', 'This parameter back to the preset.', backToPreset, inMain),
   row('d', 'd', '', 'What the scanner displays: time, B1+rms, SAR.', openReadings),
   row('l', 'l', '', 'Opens a parameter that the preset locks, or locks it again.', openLock, inMain),
+  ...toWays,
   row('n', 'n', 'next', 'The next series of the running order.', turnSeries(1)),
 ];
 
@@ -154,6 +175,8 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row(['-', 'left'], '- +', 'move', 'Moves the series earlier or later.', reorder(-1)),
     row(['+', '=', 'right'], '', '', '', reorder(1)),
     row('l', 'l', '', 'The series keeps its place, or may move.', lockPlace),
+    row('b', 'b', 'budget', 'Plans the session into the minutes left: as it is, shortened, skipped.', showBudget),
+    ...toWays,
     row('n', 'n', '', 'New session; after the record is saved.', anotherSession),
     ...everywhere,
   ],
@@ -173,6 +196,46 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('shift-tab', '', '', '', turnFigure(0, -1)),
     row('enter', 'Enter', 'take', 'Takes the value under the cursor.', takeValue),
     ...everywhere,
+  ],
+  ways: [
+    ...upAndDown(moveInWays, 'the ways'),
+    row('enter', 'Enter', 'take', 'Takes the way under the hand; undo takes it back.', takeWay),
+    row(digits.slice(1, 10), '1-9', 'take it', 'Takes the way with this number.', takeNumbered),
+    row('m', 'm', 'more', 'Shows every way, or the first three alone.', moreWays),
+    row('c', 'c', 'chart', 'The front: the most SNR, or the least loss, in every time.', showFront),
+    row('k', 'k', 'keep', 'How much of each figure every way keeps; can be changed.', show('keep')),
+    row('a', 'a', '', 'Again: the way looked at last.', recallWay, ({ lastWay }) => lastWay !== null),
+    row('d', 'd', '', 'What the scanner displays: a cap needs its number.', openReadings),
+    row('f', 'f', '', 'Back to the series.', back),
+    row('escape', 'Esc', 'back', 'One screen back; a running search is ended first and gives what it has.', stopOrBack),
+    ...everywhere.filter(({ keys }) => !keys.includes('escape')),
+  ],
+  front: [
+    row(['-', 'left'], 'left right', 'move', 'Moves along the front; minus and plus do the same.', moveOnFront(-1)),
+    row(['+', '=', 'right'], '', '', '', moveOnFront(1)),
+    row('page-down', 'PgUp PgDn', '', 'Ten points on.', moveOnFront(-10)),
+    row('page-up', '', '', '', moveOnFront(10)),
+    row('home', 'Home End', '', 'First and last point.', moveOnFront(-99999)),
+    row('end', '', '', '', moveOnFront(99999)),
+    row(['tab', 'shift-tab'], 'Tab', 'SNR or loss', 'The most SNR, or the least loss of everything together.', turnFront),
+    row('enter', 'Enter', 'take', 'Takes this point with all its changes; undo takes it back.', takeFront),
+    row('c', 'c', '', 'Back to the ways.', back),
+    ...everywhere,
+  ],
+  keep: [...form, row('k', 'k', '', 'Back to the ways.', back), ...everywhere],
+  budget: [
+    ...upAndDown(moveInBudget, 'the series'),
+    row('enter', 'Enter', 'take', 'Takes the plan: one step, which undo takes back.', takePlan),
+    row(
+      'n',
+      'n',
+      'other plan',
+      'The other plan, where one keeps nearly as much.',
+      otherPlan,
+      ({ plan }) => plan?.answer?.alternative != null,
+    ),
+    row(['escape', 'b'], 'Esc', 'back', 'Back to the running order; a plan that is worked out is ended.', leaveBudget),
+    ...everywhere.filter(({ keys }) => !keys.includes('escape')),
   ],
   readings: [...form, ...everywhere],
   record: [

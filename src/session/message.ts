@@ -1,8 +1,11 @@
 import type { Problem } from '../calc/problem.js';
+import type { Budget, BudgetProblem } from '../search/budget.js';
+import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { Rules } from '../study/must-keep.js';
 import type { SessionRecord } from '../study/record.js';
 import type { MustKeep, Study } from '../study/study.js';
 import type { Draft } from './draft.js';
+import type { WaysAnswer } from './ways.js';
 
 /** One key, as the terminal gives it: a name, and the text of what was typed or pasted. */
 export interface KeyPress {
@@ -30,7 +33,9 @@ export type Answer =
   | { readonly kind: 'failed'; readonly problems: readonly Problem[] }
   | { readonly kind: 'value'; readonly value: number }
   | { readonly kind: 'rules'; readonly rules: Rules }
-  | { readonly kind: 'draft'; readonly session: unknown };
+  | { readonly kind: 'draft'; readonly session: unknown }
+  | { readonly kind: 'ways'; readonly ways: WaysAnswer }
+  | { readonly kind: 'plan'; readonly plan: Budget };
 
 /** Everything that can happen to the interface. */
 export type Message =
@@ -41,6 +46,8 @@ export type Message =
   | { readonly kind: 'drafts'; readonly drafts: readonly DraftChoice[] }
   /** Something outside that a person should know. */
   | { readonly kind: 'note'; readonly words: string }
+  /** How far a search is, 0 to 1. */
+  | { readonly kind: 'progress'; readonly ask: number; readonly share: number }
   | { readonly kind: 'answer'; readonly ask: number; readonly answer: Answer };
 
 /** What the interface asks of the world outside. Asks carry a number; only the answer to the newest of its kind counts. */
@@ -53,6 +60,10 @@ export type Effect =
   | { readonly kind: 'read-rules'; readonly ask: number; readonly mustKeeps: readonly MustKeep[] }
   | { readonly kind: 'save-preset'; readonly ask: number; readonly study: Study }
   | { readonly kind: 'save-page'; readonly ask: number; readonly record: Omit<SessionRecord, 'id' | 'day'> }
+  | { readonly kind: 'search'; readonly ask: number; readonly problem: SearchProblem }
+  | { readonly kind: 'plan'; readonly ask: number; readonly problem: BudgetProblem }
+  /** Ends the search or plan that runs; a search answers with what it has. */
+  | { readonly kind: 'stop-search' }
   | { readonly kind: 'quit' };
 
 /** The name, unit and present value that an expression may use. */

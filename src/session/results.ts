@@ -68,7 +68,7 @@ export function readingsOf(series: SessionSeries): Readings {
 }
 
 /** This patient's extents. */
-function bodyOf(state: State): Body {
+export function bodyOf(state: State): Body {
   return { frontBackMm: state.session?.limits.frontBackMm ?? null, leftRightMm: state.session?.limits.leftRightMm ?? null };
 }
 

@@ -39,7 +39,7 @@ const weighed: readonly FigureKey[] = [
 ];
 
 /** The changes of a way in one line: `slice thickness 3 mm to 4 mm (72 to 54 slices)`. */
-export function changesInWords({ changes }: Way): string {
+export function changesInWords({ changes }: Pick<Way, 'changes'>): string {
   const parts: string[] = [];
   for (const [key, change] of Object.entries(changes) as [ParameterKey, { from: unknown; to: unknown }][]) {
     parts.push(`${parameterRow(key).label} ${sayParameter(key, change.from)} to ${sayParameter(key, change.to)}`);

@@ -1,6 +1,7 @@
 import type { ParameterKey } from '../calc/parameters.js';
 import type { Scanner } from '../calc/scanner.js';
 import type { GivenParameters } from '../calc/series.js';
+import type { Bands } from '../search/bands.js';
 import { noRecordedLimits, type RecordedLimits, type RecordedReading } from '../study/record.js';
 import type { Quality, Recommendation, SeriesOutcome } from '../study/record-words.js';
 import { runningOrder } from '../study/running-order.js';
@@ -55,6 +56,8 @@ export interface Session {
   readonly role: string;
   readonly initials: string;
   readonly recommendation: Recommendation | null;
+  /** How much of each figure every way keeps; left out: the usual bands. */
+  readonly keep?: Bands;
   /** True once this very session stands in the file of records. */
   readonly saved: boolean;
 }

@@ -18,7 +18,7 @@ export function isLocked(state: State, id: string, key: ParameterKey): boolean {
 }
 
 /** Series that are edited together with one: those it names, and those that name it. */
-function pairedSeries(state: State, id: string): readonly StudySeries[] {
+export function pairedSeries(state: State, id: string): readonly StudySeries[] {
   const own = studySeries(state, id);
   return (state.opened?.study.series ?? []).filter(
     (other) => other.id !== id && (own.pairedWith.includes(other.id) || other.pairedWith.includes(id)),

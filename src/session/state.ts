@@ -1,9 +1,26 @@
 import type { FigureKey } from '../calc/figures.js';
+import type { GivenParameters } from '../calc/series.js';
 import type { Rules } from '../study/must-keep.js';
 import type { DraftChoice, PresetChoice } from './message.js';
 import type { Opened, Session } from './session.js';
+import type { ListedWay, SessionPlan, WaysSearch } from './ways.js';
 
-export const screenNames = ['start', 'patient', 'order', 'series', 'why', 'type-these', 'chart', 'readings', 'record', 'help'] as const;
+export const screenNames = [
+  'start',
+  'patient',
+  'order',
+  'series',
+  'why',
+  'type-these',
+  'chart',
+  'ways',
+  'front',
+  'keep',
+  'budget',
+  'readings',
+  'record',
+  'help',
+] as const;
 export type ScreenName = (typeof screenNames)[number];
 
 /** One step that can be undone: the session before it, and what was done. */
@@ -81,11 +98,21 @@ export interface State {
   readonly rules: Rules;
   /** Asks so far; the newest of each kind that is still open. */
   readonly asks: number;
-  readonly open: Readonly<Partial<Record<'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft', number>>>;
+  readonly open: Readonly<Partial<Record<'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'search' | 'plan', number>>>;
   /** A saving of this record failed: the next try looks whether it stands there after all. */
   readonly recordFailed: boolean;
   /** The session whose record is being saved: what is changed meanwhile is not in it. */
   readonly saving: Session | null;
+  readonly search: WaysSearch | null;
+  /** Every way is shown, not the first ones alone. */
+  readonly allWays: boolean;
+  /** Which front is looked at, and which of its points. */
+  readonly front: { readonly which: 'timeSnr' | 'timeLoss'; readonly at: number };
+  /** The way looked at last. */
+  readonly lastWay: { readonly seriesId: string; readonly listed: ListedWay } | null;
+  /** The way taken last: what was set before it and with it. */
+  readonly taken: { readonly seriesId: string; readonly base: GivenParameters; readonly given: GivenParameters } | null;
+  readonly plan: SessionPlan | null;
 }
 
 export interface Defaults {
@@ -131,5 +158,11 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     open: {},
     recordFailed: false,
     saving: null,
+    search: null,
+    allWays: false,
+    front: { which: 'timeSnr', at: 0 },
+    lastWay: null,
+    taken: null,
+    plan: null,
   };
 }

@@ -2,6 +2,7 @@ import { type Change, only, say } from './change.js';
 import { type Draft, draftLayout, draftSteps } from './draft.js';
 import { takeExpression, typeKey } from './hands/entry-commands.js';
 import { openDraft } from './hands/start-commands.js';
+import { keepSearching } from './keep-searching.js';
 import { keyRowFor } from './key-map.js';
 import type { Answer, Effect, Message } from './message.js';
 import type { State } from './state.js';
@@ -13,7 +14,9 @@ import type { State } from './state.js';
  * @example update(state, { kind: 'key', key: { name: 'text', text: '+' }, atMs }) //=> [state, effects]
  */
 export function update(state: State, message: Message): Change {
-  const [next, effects] = carryOut(state, message);
+  const [moved, asked] = carryOut(state, message);
+  const [next, searched] = keepSearching(state, moved);
+  const effects = searched.length === 0 ? asked : [...asked, ...searched];
   const draft = draftToSave(state, next);
   return draft === null ? [next, effects] : [next, [...effects, { kind: 'save-draft', draft } satisfies Effect]];
 }
@@ -40,6 +43,8 @@ function carryOut(state: State, message: Message): Change {
       return only(
         state.session === null ? { ...state, fileNotes: withNotes(state, [message.words]) } : say(state, message.words, 'trouble'),
       );
+    case 'progress':
+      return only(withShare(state, message.ask, message.share));
     case 'answer':
       return takeAnswer(state, message.ask, message.answer);
   }
@@ -77,10 +82,29 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
       if (answer.kind === 'value') return only(takeExpression(next, entry, answer.value));
       return only(say({ ...next, entry: { ...entry, ask: null } }, failed ?? 'The expression could not be read', 'trouble'));
     }
+    case 'search': {
+      const { search } = state;
+      if (search === null || search.ask !== ask) return only(next);
+      const said =
+        answer.kind === 'ways' ? { answer: answer.ways, trouble: null } : { answer: null, trouble: failed ?? 'The search failed' };
+      return only({ ...next, search: { ...search, ...said } });
+    }
+    case 'plan': {
+      const { plan } = state;
+      if (plan === null || plan.ask !== ask) return only(next);
+      const said = answer.kind === 'plan' ? { answer: answer.plan, trouble: null } : { answer: null, trouble: failed ?? 'The plan failed' };
+      return only({ ...next, plan: { ...plan, ...said } });
+    }
     case 'preset':
     case 'page':
       return only(answer.kind === 'done' ? say(next, answer.words) : say(next, failed ?? 'Not saved', 'trouble'));
   }
+}
+
+/** How far the newest search is; of an older one nothing counts. */
+function withShare(state: State, ask: number, share: number): State {
+  const { search } = state;
+  return search === null || search.ask !== ask || state.open.search !== ask ? state : { ...state, search: { ...search, share } };
 }
 
 /** The record stands in the file; only what was changed meanwhile still makes a draft. */

@@ -79,7 +79,7 @@ export function seriesVerdicts(state: State, id: string, result: SeriesResult = 
 }
 
 /** Caps that cannot be judged for want of the scanner's own number: SAR and B1+rms are only ever scaled from it. */
-function missingReadings(state: State, series: SessionSeries): readonly string[] {
+export function missingReadings(state: State, series: SessionSeries): readonly string[] {
   const { b1rmsCapUt = null, sarCapWkg = null } = state.session?.limits ?? {};
   const readings = readingsOf(series);
   return [

@@ -20,6 +20,7 @@ function worldIn(homeFolder: string) {
     shippedPresets: presets,
     presets: undefined,
     records: undefined,
+    programUrl: import.meta.url,
   });
 }
 

@@ -1,5 +1,6 @@
 import { type Command, edit, move, neighbour, only, pointAt, say } from '../change.js';
 import type { FormRow } from '../form-row.js';
+import { keepForm } from '../keep-form.js';
 import { patientForm } from '../patient-form.js';
 import { readingsForm } from '../readings-form.js';
 import { reasonRows, recordForm } from '../record-form.js';
@@ -9,6 +10,7 @@ import type { State } from '../state.js';
 export function formRows(state: State): readonly FormRow[] {
   const { screen, seriesId, pane } = state.place;
   if (screen === 'patient') return patientForm(state);
+  if (screen === 'keep') return keepForm(state);
   if (screen === 'readings') return readingsForm(state, seriesId);
   if (screen === 'record') return pane === 'main' ? recordForm(state) : reasonRows(state);
   return [];

@@ -1,0 +1,85 @@
+import { preparationS } from '../calc/time.js';
+import type { BudgetProblem } from '../search/budget.js';
+import type { Limits } from '../search/limits.js';
+import type { SearchProblem } from '../search/problem-to-solve.js';
+import { runningOrder } from '../study/running-order.js';
+import { bodyOf, readingsOf, resultOfPreset, sessionSeries, studySeries } from './results.js';
+import { holdClock } from './running.js';
+import type { State } from './state.js';
+import { timeline } from './timeline.js';
+import { bandsOf, baseSet } from './ways.js';
+
+/** What limits a series: the hold where it has one, the longest series, and the caps that can be judged. */
+function limitsOf(state: State, id: string): Limits {
+  const { session } = state;
+  if (session === null) return {};
+  const { holdS, longestSeriesS, b1rmsCapUt, sarCapWkg } = session.limits;
+  const readings = readingsOf(sessionSeries(state, id));
+  const held = resultOfPreset(state, id).evaluation.figures.holdTimeS !== null;
+  return {
+    ...(holdS !== null && held ? { holdS } : {}),
+    ...(longestSeriesS !== null ? { timeS: longestSeriesS } : {}),
+    ...(b1rmsCapUt !== null && readings.b1rmsUt !== undefined ? { b1rmsUt: b1rmsCapUt } : {}),
+    ...(sarCapWkg !== null && readings.sarWkg !== undefined ? { sarWkg: sarCapWkg } : {}),
+  };
+}
+
+/** Everything that the search of a series is asked with: its values set by hand, this patient, what is kept. */
+export function searchProblemOf(state: State, id: string): SearchProblem | null {
+  const { opened, session } = state;
+  if (opened === null || session === null) return null;
+  const series = studySeries(state, id);
+  const own = sessionSeries(state, id);
+  return {
+    // What was opened by hand is no longer locked.
+    series: { ...series, locked: series.locked.filter((key) => !own.opened.includes(key)) },
+    presetFieldT: opened.study.fieldT,
+    scanner: opened.scanner,
+    body: bodyOf(state),
+    rules: state.rules,
+    limits: limitsOf(state, id),
+    readings: readingsOf(own),
+    bands: bandsOf(session),
+    set: baseSet(state, id),
+    opened: [],
+    frozen: session.contrastAtMs !== null && series.purpose === 'dynamic',
+  };
+}
+
+/** Two problems with the same key have the same answer, within one opened study. */
+export function searchKey({ series, body, rules, limits, readings, bands, set, frozen }: SearchProblem): string {
+  return JSON.stringify([series.id, series.locked, body, rules.size, limits, readings, bands, set, frozen]);
+}
+
+/** Everything that a plan into the minutes left is asked with; null where no minutes were said. Series skipped by hand stay out. */
+export function budgetProblemOf(state: State): BudgetProblem | null {
+  const { opened, session } = state;
+  const { leftS } = timeline(state);
+  if (opened === null || session === null || leftS === null) return null;
+  const { study, scanner } = opened;
+  const runsS = session.series.reduce((sum, series) => sum + (holdClock(state, series)?.seriesLeftS ?? 0), 0);
+  const stays = session.series.filter((series) => series.state !== 'not-done');
+  const planned = stays.map(({ id }) => studySeries(state, id));
+  // The order by hand is the order of importance, where it differs from the preset's.
+  const same = runningOrder(study.series).every((series, at) => series.id === session.series[at]?.id);
+  const series = same ? planned : planned.map((each, at) => ({ ...each, priority: at + 1 }));
+  return {
+    study: { ...study, series },
+    scanner,
+    body: bodyOf(state),
+    rules: state.rules,
+    minutes: Math.max(0, leftS - runsS) / 60,
+    longestS: session.limits.longestSeriesS,
+    overheadS: preparationS,
+    done: stays.filter((each) => each.state !== 'to-do').map(({ id }) => id),
+    bands: bandsOf(session),
+    readings: {},
+    asSet: Object.fromEntries(stays.map((each) => [each.id, { set: each.set, readings: readingsOf(each) }])),
+  };
+}
+
+/** Two plans with the same key have the same answer; minutes are compared to the tenth. */
+export function budgetKey({ study, body, rules, minutes, longestS, done, bands, asSet }: BudgetProblem): string {
+  const order = study.series.map(({ id, priority }) => [id, priority]);
+  return JSON.stringify([order, body, rules.size, Math.floor(minutes * 10), longestS, done, bands, asSet]);
+}

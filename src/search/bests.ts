@@ -1,6 +1,6 @@
 import { answers, type Candidate, compareCandidates, compareMeasures, type WayKind, wayKinds } from './candidate.js';
 import type { Pulse } from './control.js';
-import { lineBuckets } from './line-buckets.js';
+import { type LineEntry, lineBuckets } from './line-buckets.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchTables } from './search-tables.js';
 import { joinedPoint, SignalLists } from './signal-lists.js';
@@ -75,14 +75,16 @@ export function bestsWithin(tables: SearchTables, mostChanges: number, bests: Be
     const buckets = lineBuckets(setting, groups, lines, point, left, pulse);
     const lists = new SignalLists(setting, groups, signals, left, pulse);
     for (const bucket of buckets) {
+      // Lines that leave room for so many changes of the signal.
+      const room = Array.from({ length: left + 1 }, (_, changes) => bucket.entries.filter((line) => line.changes <= left - changes));
       for (const signal of lists.of(bucket)) {
         const { state } = signal;
-        if (state.rfRank === 2 || !signals.playable(state, bucket)) continue;
-        for (const line of bucket.entries) {
+        const entries = room[signal.changes] as readonly LineEntry[];
+        if (entries.length === 0 || state.rfRank === 2 || !signals.playable(state, bucket)) continue;
+        for (const line of entries) {
           const time = join.time(state, bucket, line.lineCount);
           // More lines never take less time: the rest of the bucket is over as well.
           if (time.rank === 2 || !time.kept) break;
-          if (line.changes + signal.changes > left) continue;
           pulse.beat();
           pulse.formed += 1;
           const noise = join.noise(state, line.signalFreeSnr);

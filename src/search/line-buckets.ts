@@ -21,8 +21,8 @@ export interface LineEntry {
 export interface BucketBound {
   readonly fewestLines: number;
   readonly mostLines: number;
-  /** Most SNR without signal that so many lines can give. */
-  readonly noiseAt: (lines: number) => number;
+  /** Most SNR without signal that any count of lines from..to can give. */
+  readonly noiseWithin: (from: number, to: number) => number;
 }
 
 /** Line states that share voxel, averages and train: they differ in lines and noise alone. */

@@ -30,6 +30,19 @@ export interface LineState {
   readonly geometryLoss: number;
 }
 
+/** One direction of a line state. */
+export interface LinePart {
+  /** What tells it apart for time and noise. */
+  readonly key: string;
+  /** What voxel and train follow. */
+  readonly group: string;
+  /** Lines over acceleration: no fewer are acquired; and no more than `most`. */
+  readonly least: number;
+  readonly most: number;
+  /** Acceleration along this direction. */
+  readonly factor: number;
+}
+
 /** Some of the bands and must-keeps. */
 interface Keeping {
   readonly bands: readonly BandLimit[];
@@ -132,7 +145,7 @@ export class LineTable {
    * One direction of a point by itself, the other where `point` has it: what tells it apart for time and noise, and what its bucket follows.
    * Null where a band or a must-keep of this direction alone is broken, or the body wraps into the picture.
    */
-  partAt(point: ArrayLike<number>, direction: 'phase' | 'slice'): { key: string; group: string; least: number; most: number } | null {
+  partAt(point: ArrayLike<number>, direction: 'phase' | 'slice'): LinePart | null {
     const { problem, baseline } = this.#setting;
     this.#write(point);
     const p = this.#scratch;
@@ -144,11 +157,23 @@ export class LineTable {
     if (direction === 'phase') {
       const group = `${train}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.displayMatrix}`;
       const key = `${group}|${lines.encodedPhase}|${lines.phase}|${p.parallelFactorPhase}|${p.referenceLines}`;
-      return { key, group, least: Math.min(lines.phase, lines.encodedPhase / p.parallelFactorPhase), most: lines.phase };
+      return {
+        key,
+        group,
+        least: Math.min(lines.phase, lines.encodedPhase / p.parallelFactorPhase),
+        most: lines.phase,
+        factor: p.parallelFactorPhase,
+      };
     }
     const group = `${train}|${p.averages}|${p.ellipticalSampling}|${p.sliceThicknessMm}|${p.sliceCount}|${p.sliceGapMm}`;
     const key = `${group}|${lines.encodedSlice}|${lines.slice}|${p.parallelFactorSlice}`;
-    return { key, group, least: Math.min(lines.slice, lines.encodedSlice / p.parallelFactorSlice), most: lines.slice };
+    return {
+      key,
+      group,
+      least: Math.min(lines.slice, lines.encodedSlice / p.parallelFactorSlice),
+      most: lines.slice,
+      factor: p.parallelFactorSlice,
+    };
   }
 
   /** Lines and noise of a point that is known to keep within its bands. */

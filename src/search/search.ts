@@ -5,10 +5,37 @@ import { fewerSlices } from './fewer-slices.js';
 import type { Front, FrontPoint } from './front.js';
 import { latticeSize } from './lattice.js';
 import type { SearchProblem } from './problem-to-solve.js';
+import { withBoundRules } from './rules-bound.js';
 import { tablesOf } from './search-tables.js';
 import { type SearchSetting, settingOf } from './setting.js';
 import { type Way, wayOf } from './way.js';
 import { WholeLatticeSearch } from './whole-lattice.js';
+
+/*
+ * How a search works.
+ *
+ * A lattice is the product of the values that a series' parameters may take (`lattice`, `lattice-values`). What makes one of its points a way is
+ * stated once, by `resolveParameters` and `evaluate` (`judge`). Everything else here is a quicker path to the same numbers, held to it by a proof:
+ * on random lattices of every class, equal to going through all points, to the last bit.
+ *
+ * Variables fall into three groups (`groups`). Lines (voxel, lines along phase and slice, averages) give a count of lines, which time follows, and an
+ * SNR without signal. Signal (TR, angles, trains, pulses) gives the signals, contrast, blur, RF and the time of one shot. Shared variables touch both
+ * (slices in 2D, bandwidth, read matrix) and are gone through one by one. A must-keep or band that ties lines to signal in a way no bound knows makes
+ * all line variables shared: slower, and still exact. Trains that read all their lines in one go (single-shot, echo-planar, inversion-prepared) tell the
+ * signal what it needs to know of the lines by the `train` of a bucket.
+ *
+ * `line-states` and `signal-states` compute each part once; `join` puts two parts together by the functions and in the order of `evaluate`.
+ * A bucket holds line states with one voxel, one number of averages and one train: they differ in lines and noise alone. Time never falls and noise
+ * never rises with them, so a bucket needs its skyline only, and stretches of it are bounded by their ends.
+ *
+ * Bests (`bests`) go through all points that change at most three settings; where none of those fits, four, five... Fronts, the nearest way and the
+ * count (`whole-lattice`) go over everything: phase and slice directions apart (`whole-lines`), buckets that both fronts already beat not formed, points
+ * counted by sorting. The count is null where that would take too long.
+ *
+ * Order among equals: what fits before what is too close; the kind's own number, to a billionth; fewer changes; less balanced loss; then the first
+ * variable, in the order of the table of parameters, on which two points differ: its earlier value. On a front, of ways with equal time and value the
+ * one formed first stands.
+ */
 
 /** What a search answers. */
 export interface SearchResult {
@@ -33,7 +60,8 @@ export const mostChanges = 3;
  * @example search(problem).ways.map(({ kind }) => kind) //=> ['closest', 'best-signal', ...]
  */
 export function search(problem: SearchProblem, control: SearchControl = {}): SearchResult {
-  const setting = settingOf(problem);
+  // Rules that no step can cross are not asked at every point.
+  const setting = settingOf(withBoundRules(problem));
   const tables = tablesOf(setting);
   const pulse = new Pulse(control);
   const bests = new Bests();

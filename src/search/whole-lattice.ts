@@ -45,8 +45,9 @@ export class WholeLatticeSearch {
     private readonly tables: SearchTables,
     private readonly pulse: Pulse,
     private readonly parts: WholeParts = { fronts: true, nearest: true, count: true },
+    boundedFrom?: number,
   ) {
-    this.#lines = new WholeLines(tables.setting, tables.groups, tables.lines, pulse);
+    this.#lines = new WholeLines(tables.setting, tables.groups, tables.lines, pulse, boundedFrom);
   }
 
   result(): WholeLattice {
@@ -127,7 +128,7 @@ export class WholeLatticeSearch {
     const { join } = this.tables;
     const time = join.time(state, bucket, Math.floor(from));
     if (!time.kept) return true;
-    const noise = join.noise(state, bound.noiseAt(to));
+    const noise = join.noise(state, bound.noiseWithin(from, to));
     if (!join.audible(noise)) return true;
     const loss = join.loss(bucket, state, noise);
     if ((noise.snr === null || this.timeSnr.beats(time.timeS, noise.snr)) && this.timeLoss.beats(time.timeS, loss)) return true;

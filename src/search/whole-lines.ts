@@ -1,5 +1,6 @@
 import { ellipticalShare } from '../calc/lines.js';
 import { signalFreeSnr } from '../calc/noise.js';
+import { parallelNoiseFactor } from '../calc/parallel-noise.js';
 import type { ParameterKey } from '../calc/parameters.js';
 import type { Pulse } from './control.js';
 import type { Groups } from './groups.js';
@@ -43,6 +44,9 @@ interface Part {
   /** Lines over acceleration: no fewer are acquired. */
   readonly least: number;
   readonly most: number;
+  readonly factor: number;
+  /** Some lines are fully sampled. */
+  readonly referenced: boolean;
 }
 
 /** An entry whose point is put together when it is asked for: few ever are. */
@@ -75,14 +79,16 @@ export class WholeLines {
   readonly #plane: readonly number[];
   readonly #others: readonly number[];
   readonly #planeShared: readonly number[];
+  readonly #boundedFrom: number;
   readonly #planes = new Map<string, Map<string, Part[]>>();
 
-  constructor(setting: SearchSetting, groups: Groups, table: LineTable, pulse: Pulse) {
+  constructor(setting: SearchSetting, groups: Groups, table: LineTable, pulse: Pulse, boundedFrom: number = fewEntries) {
     const keyOf = (at: number) => setting.variables[at]?.key as ParameterKey;
     this.#setting = setting;
     this.#groups = groups;
     this.#table = table;
     this.#pulse = pulse;
+    this.#boundedFrom = boundedFrom;
     this.#plane = groups.lines.filter((at) => planeKeys.includes(keyOf(at)));
     this.#others = groups.lines.filter((at) => !planeKeys.includes(keyOf(at)));
     this.#planeShared = groups.shared.filter((at) => !apartFromPlane.includes(keyOf(at)));
@@ -116,7 +122,18 @@ export class WholeLines {
       if (part === null) return;
       const known = byKey.get(part.key);
       if (known !== undefined) known.multiplicity += 1;
-      else byKey.set(part.key, { point: [...point], multiplicity: 1, group: part.group, least: part.least, most: part.most });
+      else {
+        const { group, least, most, factor } = part;
+        byKey.set(part.key, {
+          point: [...point],
+          multiplicity: 1,
+          group,
+          least,
+          most,
+          factor,
+          referenced: this.#table.parameters.referenceLines > 0,
+        });
+      }
     });
     const groups = new Map<string, Part[]>();
     for (const part of byKey.values()) groups.set(part.group, [...(groups.get(part.group) ?? []), part]);
@@ -173,23 +190,46 @@ export class WholeLines {
 
   /**
    * Bounds of a bucket: lines are never fewer than those encoded over acceleration, and lines that average noise never more than those acquired
-   * (Cauchy-Schwarz on `S^2 / (C + g^2 R (S - C))` and `C + (S - C) / R` with g >= 1).
+   * over g^2 (with reference lines g acts on a part only: then g is taken as 1; Cauchy-Schwarz on `S^2 / (C + g^2 R (S - C))` and `C + (S - C) / R`).
    */
   #boundOf(
     plane: readonly Part[],
     slice: readonly Part[],
     { parameters, volumeMm3 }: Pick<LineBucket, 'parameters' | 'volumeMm3'>,
   ): BucketBound | null {
+    const { series, scanner } = this.#setting.problem;
     // Readouts of a cycle take no time of their own, and few entries are formed as quickly as bounded.
-    if (this.#setting.problem.series.family === 'inversion-prepared-gradient-echo' || plane.length * slice.length < fewEntries) return null;
-    const smallest = (parts: readonly Part[]) => Math.min(...parts.map(({ least }) => least));
-    const largest = (parts: readonly Part[]) => Math.max(...parts.map(({ most }) => most));
-    const { scanner } = this.#setting.problem;
+    if (series.family === 'inversion-prepared-gradient-echo' || plane.length * slice.length < this.#boundedFrom) return null;
     const share = ellipticalShare(parameters);
+    const referenced = plane.some(({ referenced: lines }) => lines);
+    const stretches = byFactor(plane).flatMap((a) =>
+      byFactor(slice).flatMap((b) => {
+        const g = parallelNoiseFactor(scanner.coil, a.factor, series.acquisition === '3D' ? b.factor : 1);
+        return g === null ? [] : [{ least: a.least * b.least - 1e-6, most: a.most * b.most + 1, g: referenced ? 1 : Math.max(1, g) }];
+      }),
+    );
     return {
-      fewestLines: Math.max(1, smallest(plane) * smallest(slice) - 1e-6),
-      mostLines: largest(plane) * largest(slice) + 1,
-      noiseAt: (lines) => signalFreeSnr(volumeMm3, lines * share, parameters, scanner.fieldT, 1) * (1 + 1e-9),
+      fewestLines: Math.max(1, Math.min(...stretches.map(({ least }) => least))),
+      mostLines: Math.max(1, ...stretches.map(({ most }) => most)),
+      noiseWithin: (from, to) => {
+        let best = 0;
+        for (const { least, most, g } of stretches) if (least <= to && most >= from) best = Math.max(best, Math.min(to, most) / (g * g));
+        return signalFreeSnr(volumeMm3, best * share, parameters, scanner.fieldT, 1) * (1 + 1e-9);
+      },
     };
   }
+}
+
+/** Parts by acceleration: the fewest and the most lines of each. */
+function byFactor(parts: readonly Part[]): { factor: number; least: number; most: number }[] {
+  const byFactors = new Map<number, { factor: number; least: number; most: number }>();
+  for (const { factor, least, most } of parts) {
+    const known = byFactors.get(factor);
+    if (known === undefined) byFactors.set(factor, { factor, least, most });
+    else {
+      known.least = Math.min(known.least, least);
+      known.most = Math.max(known.most, most);
+    }
+  }
+  return [...byFactors.values()];
 }

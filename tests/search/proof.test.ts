@@ -51,7 +51,8 @@ function proveOne(key: ClassKey, seed: number): void {
     }
   }
 
-  const whole = new WholeLatticeSearch(tables, pulse);
+  // Buckets of a whole lattice are bounded before they are formed only where they are large: every second lattice bounds them all.
+  const whole = new WholeLatticeSearch(tables, pulse, { fronts: true, nearest: true, count: true }, seed % 2 === 0 ? 1 : undefined);
   whole.run();
   const result = whole.result();
   expect(result.fitting, `${said}; fitting`).toBe(plain.fitting);

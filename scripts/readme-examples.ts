@@ -2,9 +2,13 @@ import type { CommandIo } from '../src/commands/command-io.js';
 import { run } from '../src/commands/run.js';
 import { nodeDisk } from '../src/store/node-disk.js';
 import { shippedPresetsFolder } from '../src/store/shipped-presets.js';
+import { screenAfter } from './readme-screen.js';
 
 /** A block of the README: a command line after `$`, and what it prints. */
 const example = /```console\n\$ (.*)\n([\s\S]*?)```/g;
+
+/** A block that shows a screen: its size, the preset, the keys that lead there. */
+const screen = /```text screen (\d+)x(\d+) ([\w.-]+): (.*)\n([\s\S]*?)```/g;
 
 /** The output of `holdfast ...`, `| head -N`, `| tail -N` included; standard output alone, without colour and without a terminal. */
 async function outputOf(commandLine: string): Promise<string> {
@@ -44,6 +48,10 @@ export async function withFreshExamples(text: string): Promise<string> {
   for (const [block, commandLine = ''] of text.matchAll(example)) {
     const output = await outputOf(commandLine);
     fresh = fresh.replace(block, () => `\`\`\`console\n$ ${commandLine}\n${output}\`\`\``);
+  }
+  for (const [block, columns, rows, presetId = '', keys = ''] of text.matchAll(screen)) {
+    const shown = screenAfter(Number(columns), Number(rows), presetId, keys);
+    fresh = fresh.replace(block, () => `\`\`\`text screen ${columns}x${rows} ${presetId}: ${keys}\n${shown}\`\`\``);
   }
   return fresh;
 }

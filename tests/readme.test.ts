@@ -11,8 +11,9 @@ const developers = readFileSync('DEVELOPERS.md', 'utf8');
 describe('README.md', () => {
   it('shows what the program prints (npm run readme writes it anew)', async () => {
     expect(readme.match(/```console/g)?.length ?? 0).toBeGreaterThan(2);
+    expect(readme).toContain('```text screen ');
     expect(await withFreshExamples(readme)).toBe(readme);
-  });
+  }, 180_000);
 
   it('names every command and every exit code', () => {
     expect(commandTable.map(({ words }) => `holdfast ${words.join(' ')}`).filter((words) => !readme.includes(words))).toEqual([]);

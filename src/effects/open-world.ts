@@ -51,7 +51,9 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   const base = { environment, homeFolder, workingFolder, flags };
   const read = await readSettings(disk, foldersOf(base).settingsFolder);
   const settings = read.ok ? read.value.settings : defaultSettings;
-  const notes = read.ok ? read.value.notes : read.problems;
+  const notes = read.ok
+    ? read.value.notes
+    : read.problems.map((problem) => ({ ...problem, message: `${problem.message} The defaults hold.` }));
   const folders: Folders = foldersOf({ ...base, settings });
   const drafts = draftFile({ disk, tool: toolVersion, folder: folders.draftsFolder, fileMode: fileModeOf(settings) });
   const late: { note: (message: Message) => void } = { note: () => {} };

@@ -43,5 +43,5 @@ export function budgetScreen(state: State, look: Look, columns: number, rows: nu
 function limitLine({ session }: State): string {
   const limits = session?.limits;
   const longest = limits?.longestSeriesS == null ? '' : `, no series longer than ${sayTime(limits.longestSeriesS)}`;
-  return `Minimum set first${longest}; preparation of each series and rests between holds count`;
+  return `Minimum set first${longest}; preparation and rests count`;
 }

@@ -73,7 +73,22 @@ export function noticeLine(state: State, look: Look, columns: number, idle: Line
 function rank(brief: string): number {
   if (brief === 'help') return 0;
   if (
-    ['step', 'type', 'open', 'start', 'done', 'change', 'practice', 'cut short', 'save', 'reasons', 'take', 'fit', 'more'].includes(brief)
+    [
+      'step',
+      'type',
+      'open',
+      'start',
+      'done',
+      'change',
+      'practice',
+      'cut short',
+      'save',
+      'reasons',
+      'take',
+      'fit',
+      'budget',
+      'more',
+    ].includes(brief)
   )
     return 1;
   if (brief === 'undo') return 2;

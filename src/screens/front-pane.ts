@@ -1,7 +1,7 @@
 import { sayRatio } from '../session/say-ratio.js';
 import { sayTime } from '../session/say-time.js';
 import type { State } from '../session/state.js';
-import { frontHere } from '../session/ways.js';
+import { frontHere, frontLimitS } from '../session/ways.js';
 import { fitText } from '../terminal/text-width.js';
 import { axisColumns } from './chart-pane.js';
 import { type Line, line, span } from './line.js';
@@ -52,6 +52,8 @@ export function frontPane(state: State, look: Look, { columns, rows, cursor }: R
     for (let along = x; along <= toX; along += 1) plot.dot(along, y, 0);
     for (let up = Math.min(y, toY); up <= Math.max(y, toY); up += 1) plot.dot(toX, up, 0);
   });
+  const limitS = frontLimitS(state);
+  if (limitS !== null && limitS >= fromS && limitS <= toS) plot.upright(column(limitS, width), look.glyphs.marker);
   if (cursor) plot.upright(column(points[at]?.timeS ?? fromS, width));
   const lines = plot.lines();
   const body = lines.map((cells, row): Line => {
@@ -61,7 +63,14 @@ export function frontPane(state: State, look: Look, { columns, rows, cursor }: R
   });
   const [from, to] = [sayTime(fromS), sayTime(toS)];
   return [
-    line(fitText(`Front: ${words.title} (${frontTime(state)})`, columns, look.glyphs.ellipsis), 'first'),
+    line(
+      fitText(
+        `Front: ${words.title} (${frontTime(state)})${limitS === null ? '' : `, ${look.glyphs.marker} ${sayTime(limitS)} is the limit`}`,
+        columns,
+        look.glyphs.ellipsis,
+      ),
+      'first',
+    ),
     ...body,
     line(`${' '.repeat(axisColumns + 1)}${from}${to.padStart(Math.max(1, width - from.length))}`, 'quiet'),
   ];

@@ -22,7 +22,8 @@ export function frontScreen(state: State, look: Look, columns: number, rows: num
     span(`  ${said.verdict.text}`, said.verdict.word === 'OVER' ? 'trouble' : said.verdict.word === 'TOO CLOSE' ? 'attention' : 'bold'),
     span(`  point ${said.at + 1} of ${said.count}`, 'quiet'),
   ];
-  const below = [read, ...words];
+  // The chart keeps its height, however much there is to say.
+  const below = [read, ...fill(words, Math.max(roomy ? 3 : 6, words.length))];
   const chartRows = Math.max(6, Math.min(rows - below.length - 1, 34));
   if (!roomy) return fill([...frontPane(state, look, { columns, rows: chartRows, cursor: true }), blank, ...below], rows);
   const right = consequencePane(asIf(state, seriesId, said.set), look, 50, Math.min(chartRows, 19));

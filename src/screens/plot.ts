@@ -32,9 +32,9 @@ export class Plot {
     for (let x = 0; x < this.width; x += 1) this.#marks[row * this.width + x] ??= sign;
   }
 
-  /** The cursor, where no curve is. */
-  upright(x: number): void {
-    for (let row = 0; row < this.height; row += 1) this.#marks[row * this.width + x] = this.look.glyphs.verticalRule;
+  /** A line upwards, where no curve is: the cursor, or a limit with a sign of its own. */
+  upright(x: number, sign: string = this.look.glyphs.verticalRule): void {
+    for (let row = 0; row < this.height; row += 1) this.#marks[row * this.width + x] = sign;
   }
 
   lines(): Line[] {

@@ -1,7 +1,7 @@
 import { keepInWords } from '../session/keep-form.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayTime } from '../session/say-time.js';
-import { searchInWords } from '../session/say-way.js';
+import { changesInWords, searchInWords } from '../session/say-way.js';
 import type { State } from '../session/state.js';
 import { figuresWith, frontHere, type ListedWay, shownWays, stateWith, wayHere } from '../session/ways.js';
 import { otherMovesInWords, searchNotes, searchStatus, verdictWith, wayParagraphs, wayTitle } from '../session/ways-words.js';
@@ -58,7 +58,9 @@ function wayLine(state: State, listed: ListedWay, number: string, here: boolean,
   const figures = figuresWith(state, seriesId, given);
   const verdict = verdictWith(state, seriesId, given);
   const time = sayTime(figures.holdTimeS ?? figures.scanTimeS ?? 0);
-  const titleColumns = columns - 53;
+  const titleColumns = Math.min(columns - 53, 34);
+  const rest = columns - titleColumns - 55;
+  const changes = rest > 20 ? `  ${fitText(changesInWords(listed.way), rest, glyphs.ellipsis)}` : '';
   return [
     span(
       `${here ? glyphs.pointer : ' '}${number.padStart(2)} ${fitText(wayTitle(state, listed), titleColumns, glyphs.ellipsis)} `,
@@ -66,6 +68,7 @@ function wayLine(state: State, listed: ListedWay, number: string, here: boolean,
     ),
     span(fitText(verdict.text, 27, glyphs.ellipsis), verdictStyles[verdict.word ?? ''] ?? 'plain'),
     span(`${time.padStart(8)}  SNR ${sayFigure('relativeSnr', figures.relativeSnr).padStart(5)}`),
+    span(changes),
   ];
 }
 
@@ -77,9 +80,13 @@ function paragraphLines(listed: ListedWay, columns: number): Line[] {
   );
 }
 
-function cut(lines: readonly Line[], rows: number): Line[] {
+/** As many of the lines as there is room for, from where they are scrolled to. */
+function cut(lines: readonly Line[], scroll: number, rows: number): Line[] {
   if (lines.length <= rows) return [...lines];
-  return [...lines.slice(0, rows - 1), line(`${lines.length - rows + 1} more lines: a larger screen shows them`, 'quiet')];
+  const from = Math.min(scroll, lines.length - rows);
+  const shown = lines.slice(from, from + rows);
+  const rest = lines.length - from - rows;
+  return rest === 0 ? shown : [...shown.slice(0, -1), line(`${rest + 1} more lines: PgDn`, 'quiet')];
 }
 
 function narrowDetail(state: State, { listed }: Here, look: Look, columns: number, rows: number): Line[] {
@@ -89,7 +96,7 @@ function narrowDetail(state: State, { listed }: Here, look: Look, columns: numbe
   const words = paragraphLines(listed, rightColumns);
   return beside(
     fill(consequencePane(copy, look, leftColumns, rows), rows),
-    cut(words, rows).map((each) => [span(' '), ...each]),
+    cut(words, state.wayScroll, rows).map((each) => [span(' '), ...each]),
     leftColumns,
     look.glyphs.verticalRule,
     look.glyphs.ellipsis,
@@ -109,7 +116,7 @@ function wideDetail(state: State, { listed }: Here, look: Look, columns: number,
       : frontPane(state, look, { columns: rightColumns, rows: Math.min(rows, 26), cursor: false });
   const two = beside(
     fill(consequencePane(copy, look, leftColumns, Math.min(rows, 19)), rows),
-    cut(paragraphLines(listed, middleColumns - 1), rows).map((each) => [span(' '), ...each]),
+    cut(paragraphLines(listed, middleColumns - 1), state.wayScroll, rows).map((each) => [span(' '), ...each]),
     leftColumns,
     look.glyphs.verticalRule,
     look.glyphs.ellipsis,

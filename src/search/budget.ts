@@ -36,7 +36,7 @@ export interface BudgetProblem {
   readonly bands: Bands;
   readonly readings: Readings;
   /** Values set by hand, and the scanner's numbers, of single series; from these the plan starts. */
-  readonly asSet?: Readonly<Record<string, { readonly set: GivenParameters; readonly readings: Readings }>>;
+  readonly asSet?: Readonly<Record<string, { readonly set: GivenParameters; readonly readings: Readings; readonly frozen: boolean }>>;
 }
 
 export type Choice = 'as it is' | 'shortened' | 'skipped';
@@ -93,7 +93,7 @@ function problemFor(budget: BudgetProblem, series: StudySeries): SearchProblem {
     bands,
     set: own?.set ?? {},
     opened: [],
-    frozen: false,
+    frozen: own?.frozen ?? false,
   };
 }
 

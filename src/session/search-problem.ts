@@ -3,11 +3,18 @@ import type { BudgetProblem } from '../search/budget.js';
 import type { Limits } from '../search/limits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import { runningOrder } from '../study/running-order.js';
+import type { StudySeries } from '../study/study.js';
 import { bodyOf, readingsOf, resultOfPreset, sessionSeries, studySeries } from './results.js';
 import { holdClock } from './running.js';
+import type { Session } from './session.js';
 import type { State } from './state.js';
 import { timeline } from './timeline.js';
 import { bandsOf, baseSet } from './ways.js';
+
+/** Once contrast is given a timed phase is never changed: the volumes before it cannot be acquired again. */
+function isFrozen({ contrastAtMs }: Session, { purpose }: StudySeries): boolean {
+  return contrastAtMs !== null && purpose === 'dynamic';
+}
 
 /** What limits a series: the hold where it has one, the longest series, and the caps that can be judged. */
 function limitsOf(state: State, id: string): Limits {
@@ -42,7 +49,7 @@ export function searchProblemOf(state: State, id: string): SearchProblem | null 
     bands: bandsOf(session),
     set: baseSet(state, id),
     opened: [],
-    frozen: session.contrastAtMs !== null && series.purpose === 'dynamic',
+    frozen: isFrozen(session, series),
   };
 }
 
@@ -51,14 +58,14 @@ export function searchKey({ series, body, rules, limits, readings, bands, set, f
   return JSON.stringify([series.id, series.locked, body, rules.size, limits, readings, bands, set, frozen]);
 }
 
-/** Everything that a plan into the minutes left is asked with; null where no minutes were said. Series skipped by hand stay out. */
+/** Everything that a plan into the minutes left is asked with; null where no minutes were said. Series skipped by hand or stopped early stay out. */
 export function budgetProblemOf(state: State): BudgetProblem | null {
   const { opened, session } = state;
   const { leftS } = timeline(state);
   if (opened === null || session === null || leftS === null) return null;
   const { study, scanner } = opened;
   const runsS = session.series.reduce((sum, series) => sum + (holdClock(state, series)?.seriesLeftS ?? 0), 0);
-  const stays = session.series.filter((series) => series.state !== 'not-done');
+  const stays = session.series.filter(({ state: word }) => word !== 'not-done' && word !== 'stopped-early');
   const planned = stays.map(({ id }) => studySeries(state, id));
   // The order by hand is the order of importance, where it differs from the preset's.
   const same = runningOrder(study.series).every((series, at) => series.id === session.series[at]?.id);
@@ -74,7 +81,9 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
     done: stays.filter((each) => each.state !== 'to-do').map(({ id }) => id),
     bands: bandsOf(session),
     readings: {},
-    asSet: Object.fromEntries(stays.map((each) => [each.id, { set: each.set, readings: readingsOf(each) }])),
+    asSet: Object.fromEntries(
+      stays.map((each) => [each.id, { set: each.set, readings: readingsOf(each), frozen: isFrozen(session, studySeries(state, each.id)) }]),
+    ),
   };
 }
 

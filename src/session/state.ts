@@ -106,6 +106,8 @@ export interface State {
   readonly search: WaysSearch | null;
   /** Every way is shown, not the first ones alone. */
   readonly allWays: boolean;
+  /** Lines by which what is said of a way is scrolled. */
+  readonly wayScroll: number;
   /** Which front is looked at, and which of its points. */
   readonly front: { readonly which: 'timeSnr' | 'timeLoss'; readonly at: number };
   /** The way looked at last. */
@@ -160,6 +162,7 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     saving: null,
     search: null,
     allWays: false,
+    wayScroll: 0,
     front: { which: 'timeSnr', at: 0 },
     lastWay: null,
     taken: null,

@@ -123,6 +123,11 @@ export function frontHere(state: State): {
   return { points, at: Math.min(points.length - 1, Math.max(0, front.at)), which: front.which };
 }
 
+/** The limit of the time that a front runs along, s; null where there is none. */
+export function frontLimitS({ search }: State): number | null {
+  return search?.problem.limits.holdS ?? search?.problem.limits.timeS ?? null;
+}
+
 /** What the point of the front under the hand sets. */
 export function frontSet(state: State): SearchProblem['set'] | null {
   const here = frontHere(state);

@@ -2,6 +2,7 @@ import { existsSync, mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterEach, describe, expect, it } from 'vitest';
 import { keyBytes } from './harness/key-bytes.js';
+import { implantPreset } from './implant-preset.js';
 import { type Interface, newHome, openInterface } from './interface-driver.js';
 
 const opened: Interface[] = [];
@@ -26,44 +27,6 @@ async function liverWithElevenSeconds(screen: Interface): Promise<void> {
   await screen.escape('Running order');
   await screen.keys(keyBytes.enter, 'Series t1-3d');
 }
-
-/** The lumbar series of an implant: 180 degrees, train 20, TR 3500, 15 slices, 320 lines, two averages, a dummy. Invented. */
-const implantPreset = {
-  format: 'holdfast preset',
-  version: 1,
-  id: 'implant-lumbar',
-  title: 'Lumbar spine, implant',
-  region: 'lumbar spine',
-  fieldT: 1.5,
-  series: [
-    {
-      id: 't2-sag',
-      title: 'T2 sagittal',
-      plane: 'sagittal',
-      family: 'fast-spin-echo',
-      acquisition: '2D',
-      target: 'CSF',
-      comparison: 'spinal cord (white matter)',
-      parameters: {
-        repetitionTimeMs: 3500,
-        echoTimeMs: 100,
-        echoTrainLength: 20,
-        echoSpacingMs: 10,
-        refocusingAngleDeg: 180,
-        fieldOfViewMm: 320,
-        matrixRead: 320,
-        matrixPhase: 320,
-        sliceCount: 15,
-        sliceThicknessMm: 4,
-        sliceGapMm: 0.4,
-        pixelBandwidthHz: 200,
-        averages: 2,
-        dummyShots: 1,
-        phaseDirection: 'HF',
-      },
-    },
-  ],
-};
 
 describe('moments at the console', () => {
   it('an arterial phase of 17.0 s is made to fit 11 s, each price read before it is paid, and recorded', async () => {

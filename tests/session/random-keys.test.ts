@@ -1,8 +1,12 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { parameterKeys } from '../../src/calc/parameters.js';
+import { answerSearch } from '../../src/effects/answer-search.js';
 import { headlineOf } from '../../src/screens/common-lines.js';
 import { lineText } from '../../src/screens/line.js';
 import { screenLines } from '../../src/screens/screen-lines.js';
+import { type BudgetProblem, planBudget } from '../../src/search/budget.js';
+import type { SearchProblem } from '../../src/search/problem-to-solve.js';
 import { draftOf } from '../../src/session/draft.js';
 import type { Effect, Message } from '../../src/session/message.js';
 import type { State } from '../../src/session/state.js';
@@ -35,6 +39,7 @@ const look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader: false 
 const step = fc.oneof(
   { weight: 40, arbitrary: fc.constantFrom(...keys) },
   { weight: 20, arbitrary: fc.constantFrom('down', '+', '-', 'down', 'up', 'enter', 'u', 'r') },
+  { weight: 4, arbitrary: fc.constantFrom('f', 'a', 'b', 'm', 'c', 'k', '1', '2', '9') },
   { weight: 2, arbitrary: fc.constantFrom('wait 500', 'wait 20000') },
   { weight: 1, arbitrary: fc.constantFrom('size 80 24', 'size 160 50', 'size 60 15', 'size 100 30') },
 );
@@ -44,6 +49,43 @@ function messageOf(name: string, { nowMs }: State): Message {
   if (word === 'wait') return { kind: 'tick', atMs: nowMs + Number(first) };
   if (word === 'size') return { kind: 'size', columns: Number(first), rows: Number(second) };
   return { kind: 'key', key: name === 'paste' ? { name, text: '38 cm\n' } : keyOf(name), atMs: nowMs + 137 };
+}
+
+/** What a search answers and what a plan is, once for each question: the keys are tried here, not the search. */
+const knownWays = new Map<string, ReturnType<typeof answerSearch>>();
+const knownPlans = new Map<string, ReturnType<typeof planBudget>>();
+
+/** The search of the preset as it stands stands in for that of every set value: what it sets is still taken and undone. */
+function waysFor(whole: SearchProblem): ReturnType<typeof answerSearch> {
+  const { series, limits, presetFieldT } = whole;
+  const tight = limits.holdS === undefined ? 'free' : limits.holdS < 6 ? 'nothing' : 'some';
+  const name = `${series.id} ${presetFieldT} ${tight}`;
+  let known = knownWays.get(name);
+  if (known === undefined) {
+    const holdS = tight === 'nothing' ? 1 : 11;
+    let asked = 0;
+    const stopped = () => {
+      asked += 1;
+      return asked > 40;
+    };
+    // Stopped after a while: the order of a few thousand questions, so that one search costs little.
+    known = answerSearch({ ...whole, set: {}, series: { ...series }, limits: tight === 'free' ? {} : { holdS } }, { stopped });
+    knownWays.set(name, known);
+  }
+  return known;
+}
+
+function planFor(problem: BudgetProblem): ReturnType<typeof planBudget> {
+  const first = problem.study.series.find(({ id }) => !problem.done.includes(id));
+  const name = `${problem.study.id} ${problem.study.series.map(({ id }) => id).join()} ${problem.done.join()}`;
+  let known = knownPlans.get(name);
+  if (known === undefined) {
+    // As it is and skipped alone: every lattice is one point.
+    const series = problem.study.series.map((each) => ({ ...each, ranges: {}, locked: parameterKeys.filter((key) => key !== 'pacing') }));
+    known = planBudget({ ...problem, study: { ...problem.study, series }, asSet: {}, minutes: first === undefined ? 1 : 10 });
+    knownPlans.set(name, known);
+  }
+  return known;
 }
 
 /** Answers what was asked, as the world might: well or badly. */
@@ -58,6 +100,8 @@ function answerTo(effect: Effect, well: boolean): Message | null {
     };
   if (effect.kind === 'read-expression') return { kind: 'answer', ask, answer: { kind: 'value', value: 12.345 } };
   if (effect.kind === 'read-rules') return { kind: 'answer', ask, answer: { kind: 'rules', rules: new Map() } };
+  if (effect.kind === 'search') return { kind: 'answer', ask, answer: { kind: 'ways', ways: waysFor(effect.problem) } };
+  if (effect.kind === 'plan') return { kind: 'answer', ask, answer: { kind: 'plan', plan: planFor(effect.problem) } };
   return { kind: 'answer', ask, answer: { kind: 'done', words: 'Saved' } };
 }
 
@@ -93,6 +137,14 @@ function faults(state: State): string[] {
     );
     must((session.contrastAtMs !== null) === (limits.contrastGiven === true), 'contrast and its clock agree');
   } else must(['start', 'help'].includes(place.screen), `no session on ${place.screen}`);
+  const { search, plan, open } = state;
+  must(
+    search === null || session === null || session.series.some(({ id }) => id === search.seriesId),
+    'the search is of a series of the session',
+  );
+  must(open.search === undefined || search?.ask === open.search, 'only the newest search is waited for');
+  must(open.plan === undefined || plan?.ask === open.plan, 'only the newest plan is waited for');
+  must(open.search === undefined || open.plan === undefined, 'one worker does one thing');
   must(!place.back.includes(place.screen), 'back leads elsewhere');
   const { text } = headlineOf(state);
   must(text !== '' && !/NaN|undefined|Infinity|null/.test(text), `the verdict is words: ${text}`);

@@ -2,7 +2,7 @@ import { type Command, goBack, move, only, open, pointAt, say } from '../change.
 import { changesInWords } from '../say-way.js';
 import type { State } from '../state.js';
 import { takeSet } from '../take-way.js';
-import { firstWays, frontHere, frontSet, type ListedWay, listedWays, shownWays, wayHere } from '../ways.js';
+import { firstWays, frontHere, frontLimitS, frontSet, type ListedWay, listedWays, shownWays, wayHere } from '../ways.js';
 import { orderRow } from './order-commands.js';
 
 /** Opens the ways of the series that is looked at; in the running order of the one under the hand. */
@@ -15,7 +15,7 @@ export const showWays: Command = (state) => {
 /** The way under the hand is the one looked at last. */
 function seen(state: State): State {
   const here = wayHere(state);
-  return here === null ? state : { ...state, lastWay: { seriesId: state.place.seriesId, listed: here.listed } };
+  return here === null ? state : { ...state, wayScroll: 0, lastWay: { seriesId: state.place.seriesId, listed: here.listed } };
 }
 
 export const moveInWays =
@@ -26,6 +26,12 @@ export const moveInWays =
     const at = fields.ways === 'last' ? (by > 0 ? -1 : 1) : Number(fields.ways ?? 0) || 0;
     return only(seen(pointAt({ ...state, notice: null }, String(Math.min(Math.max(0, last), Math.max(0, at + by))))));
   };
+
+/** Scrolls what is said of the way under the hand. */
+export const scrollWay =
+  (by: number): Command =>
+  (state) =>
+    only({ ...state, notice: null, wayScroll: Math.min(40, Math.max(0, state.wayScroll + by)) });
 
 /** Shows the rest, or the first ones alone. */
 export const moreWays: Command = (state) => {
@@ -88,7 +94,12 @@ export const stopOrBack: Command = (state) => {
 export const showFront: Command = (state) => {
   if (state.search?.answer == null) return only(say(state, 'The front is drawn when the search is through'));
   if (frontHere(state) === null) return only(say(state, 'There is no front: no way keeps what must be kept'));
-  return only(open(state, 'front'));
+  const limitS = frontLimitS(state);
+  const points = state.search.answer.result.fronts[state.front.which];
+  // The hand begins where it is wanted: at the most that the limit allows.
+  const last = limitS === null ? 0 : points.findLastIndex(({ timeS }) => timeS <= limitS);
+  const at = state.front.at > 0 ? state.front.at : Math.max(0, last);
+  return only({ ...open(state, 'front'), front: { ...state.front, at } });
 };
 
 export const moveOnFront =

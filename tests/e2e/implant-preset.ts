@@ -1,0 +1,37 @@
+/** The lumbar series of an implant: 180 degrees, train 20, TR 3500, 15 slices, 320 lines, two averages, a dummy. Invented. */
+export const implantPreset = {
+  format: 'holdfast preset',
+  version: 1,
+  id: 'implant-lumbar',
+  title: 'Lumbar spine, implant',
+  region: 'lumbar spine',
+  fieldT: 1.5,
+  series: [
+    {
+      id: 't2-sag',
+      title: 'T2 sagittal',
+      plane: 'sagittal',
+      family: 'fast-spin-echo',
+      acquisition: '2D',
+      target: 'CSF',
+      comparison: 'spinal cord (white matter)',
+      parameters: {
+        repetitionTimeMs: 3500,
+        echoTimeMs: 100,
+        echoTrainLength: 20,
+        echoSpacingMs: 10,
+        refocusingAngleDeg: 180,
+        fieldOfViewMm: 320,
+        matrixRead: 320,
+        matrixPhase: 320,
+        sliceCount: 15,
+        sliceThicknessMm: 4,
+        sliceGapMm: 0.4,
+        pixelBandwidthHz: 200,
+        averages: 2,
+        dummyShots: 1,
+        phaseDirection: 'HF',
+      },
+    },
+  ],
+};

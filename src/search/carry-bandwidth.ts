@@ -46,11 +46,14 @@ export function carriedBandwidth(setting: CarrySetting): BandwidthChoice {
   return { equalShiftHz, mostHz, proposedHz: high, because: 'train' };
 }
 
-/** True where the slower readout neither splits the slices further nor moves a TE that sets contrast. */
+/** True where the slower readout leaves the timing possible, and neither splits the slices further nor moves a TE that sets contrast. */
 function fits(setting: CarrySetting, pixelBandwidthHz: number): boolean {
   const before = setting.series.parameters;
-  const { parameters } = settle(setting, { pixelBandwidthHz });
-  if (parameters.rounds > before.rounds) return false;
-  if (classRow(setting.baseline.model.key).gradientEcho) return true;
+  const { parameters, model } = settle(setting, { pixelBandwidthHz });
+  if (parameters.rounds > before.rounds || model.impossible !== null) return false;
+  const row = classRow(setting.baseline.model.key);
+  // A longer train of readouts moves what the inversion time means.
+  if (row.family === 'inversion-prepared-gradient-echo') return parameters.echoSpacingMs <= before.echoSpacingMs * (1 + echoShare) + 1e-9;
+  if (row.gradientEcho) return true;
   return Math.abs(parameters.echoTimeMs / before.echoTimeMs - 1) <= echoShare + 1e-9;
 }

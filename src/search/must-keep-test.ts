@@ -1,4 +1,5 @@
 import { atLeast, atMost } from '../calc/rounding.js';
+import { breaksFormula } from '../formulas/breaks-formula.js';
 import { evaluateFormula, namesIn, type ValueOfName } from '../formulas/evaluate-formula.js';
 import type { NumberTree } from '../formulas/formula.js';
 import type { Rules } from '../study/must-keep.js';
@@ -16,7 +17,7 @@ export function isCrossed(mustKeep: MustKeep, valueNamed: ValueOfName, rules: Ru
   const name = mustKeep.figure ?? mustKeep.parameter;
   if (name === undefined) {
     const rule = rules.get(mustKeep.rule ?? '');
-    return rule !== undefined && evaluateFormula(rule, valueNamed).truth === false;
+    return rule !== undefined && breaksFormula(rule, valueNamed);
   }
   const value = valueNamed(name);
   if (typeof value !== 'number' || !Number.isFinite(value)) return false;

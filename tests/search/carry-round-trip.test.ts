@@ -26,7 +26,9 @@ const trips = studies.flatMap((study) => {
     const back = carry({ ...series, parameters: there.parameters }, away, study.fieldT);
     const [before, after] = [there.contrast.from, back.contrast.to];
     const drift = before === null || after === null ? null : after / before - 1;
-    return { name: `${study.id} ${series.id}`, drift, reasons: [there.contrast, back.contrast] };
+    // A way there that no scanner could play is no way back.
+    const played = there.evaluation.cautions.every(({ code }) => code !== 'timing-impossible');
+    return { name: `${study.id} ${series.id}`, drift: played ? drift : null, reasons: [there.contrast, back.contrast] };
   });
 });
 

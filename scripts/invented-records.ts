@@ -31,9 +31,9 @@ function chance(seed: number): (below: number) => number {
   };
 }
 
-/** A shipped preset by its id. */
+/** A shipped preset by its id; looked for from the project's folder, where scripts, tests and bench are run. */
 export function shippedStudy(id: string): Study {
-  const read = readPreset(readFileSync(fileURLToPath(new URL(`../presets/${id}.json`, import.meta.url)), 'utf8'), id);
+  const read = readPreset(readFileSync(`presets/${id}.json`, 'utf8'), id);
   if (!read.ok) throw new Error(read.problems[0]?.message);
   return read.value;
 }

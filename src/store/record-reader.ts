@@ -35,31 +35,35 @@ export async function* readRecords(disk: Disk, paths: readonly string[], options
   let before = 0;
   for (const [index, path] of paths.entries()) {
     const startedAt = before;
-    yield* readOne(disk, path, (bytes) => options.onProgress?.(startedAt + bytes, totalBytes));
+    // One generator and not one inside another: each record is handed on once.
+    let file: OpenFile | null = null;
+    try {
+      const problem = await notReadable(disk, path);
+      if (problem !== null) yield { kind: 'unread', file: path, problem };
+      else {
+        file = await disk.open(path, 'read');
+        for await (const { number, bytes } of linesOfFile(file, maximumRecordBytes, (read) =>
+          options.onProgress?.(startedAt + read, totalBytes),
+        )) {
+          const entry = entryOf(path, number, bytes);
+          if (entry !== null) yield entry;
+        }
+      }
+    } catch (error) {
+      yield { kind: 'unread', file: path, problem: problemOfError(error, 'read', 'the record file', path) };
+    } finally {
+      await file?.close().catch(() => {});
+    }
     before += sizes[index] ?? 0;
   }
 }
 
-async function* readOne(disk: Disk, path: string, onRead: (bytes: number) => void): AsyncGenerator<RecordEntry> {
-  let file: OpenFile | null = null;
-  try {
-    const { kind } = await disk.facts(path);
-    if (kind === 'folder') throw Object.assign(new Error('is a folder'), { code: 'EISDIR' });
-    if (kind === 'other') {
-      const message = `the record file ${cleanText(path)} is no ordinary file.`;
-      yield { kind: 'unread', file: path, problem: storeProblem('not-a-file', 74, path, message, 'Name a file on a disk.') };
-      return;
-    }
-    file = await disk.open(path, 'read');
-    for await (const { number, bytes } of linesOfFile(file, maximumRecordBytes, onRead)) {
-      const entry = entryOf(path, number, bytes);
-      if (entry !== null) yield entry;
-    }
-  } catch (error) {
-    yield { kind: 'unread', file: path, problem: problemOfError(error, 'read', 'the record file', path) };
-  } finally {
-    await file?.close().catch(() => {});
-  }
+/** A folder has no records, and a pipe or a device might never end. */
+async function notReadable(disk: Disk, path: string): Promise<StoreProblem | null> {
+  const { kind } = await disk.facts(path);
+  if (kind === 'folder') return problemOfError({ code: 'EISDIR' }, 'read', 'the record file', path);
+  if (kind === 'file') return null;
+  return storeProblem('not-a-file', 74, path, `the record file ${cleanText(path)} is no ordinary file.`, 'Name a file on a disk.');
 }
 
 function entryOf(file: string, line: number, bytes: Buffer | null): RecordEntry | null {

@@ -1,4 +1,5 @@
 import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
+import type { GivenParameters } from '../calc/series.js';
 import type { RecordedSeries } from './record.js';
 import { parameterWords } from './record-changes.js';
 import { type CountedValue, type Spread, StepCounts } from './record-report-counts.js';
@@ -59,18 +60,14 @@ export class ChangeCounts {
 
   /** Counts what differs between planned and used, and gives the keys; none where nothing differs. */
   add({ planned, used }: RecordedSeries): readonly ParameterKey[] {
-    const changed: ParameterKey[] = [];
-    for (const key of parameterKeys) {
-      const before = planned.parameters[key];
-      const after = used.parameters[key];
-      if (before === after || (typeof before === 'object' && JSON.stringify(before) === JSON.stringify(after))) continue;
-      changed.push(key);
+    const changed = differingKeys(planned.parameters, used.parameters);
+    for (const key of changed) {
       let counts = this.parameters.get(key);
       if (counts === undefined) {
         counts = new ParameterCounts(key);
         this.parameters.set(key, counts);
       }
-      counts.add(before, after);
+      counts.add(planned.parameters[key], used.parameters[key]);
     }
     return changed;
   }
@@ -79,4 +76,48 @@ export class ChangeCounts {
   report(): ParameterChanges[] {
     return parameterKeys.flatMap((key) => this.parameters.get(key)?.report() ?? []);
   }
+}
+
+const knownKeys: ReadonlySet<string> = new Set(parameterKeys);
+const noKeys: readonly ParameterKey[] = [];
+
+/** Known keys whose values differ, in the order of the record. */
+function differingKeys(planned: GivenParameters, used: GivenParameters): readonly ParameterKey[] {
+  const keys = Object.keys(planned);
+  // Nearly always both have the same keys in the same order. A hundred thousand records ask this a million times, and lists are
+  // walked several times as fast as keys are looked for.
+  if (!sameWords(keys, Object.keys(used)))
+    return known([...new Set([...keys, ...Object.keys(used)])].filter((key) => differ(planned, used, key)));
+  const [before, after] = [Object.values(planned), Object.values(used)];
+  let differing: string[] | null = null;
+  for (let i = 0; i < keys.length; i += 1) {
+    if (equal(before[i], after[i])) continue;
+    differing ??= [];
+    differing.push(keys[i] as string);
+  }
+  return differing === null ? noKeys : known(differing);
+}
+
+function differ(planned: object, used: object, key: string): boolean {
+  return !equal((planned as Record<string, unknown>)[key], (used as Record<string, unknown>)[key]);
+}
+
+/** Equal as JSON: numbers, words, flags, and the small objects and lists of pacing and diffusion. */
+function equal(a: unknown, b: unknown): boolean {
+  if (a === b) return true;
+  if (typeof a !== 'object' || typeof b !== 'object' || a === null || b === null) return false;
+  if (!sameWords(Object.keys(a), Object.keys(b))) return false;
+  const [left, right] = [Object.values(a), Object.values(b)];
+  for (let i = 0; i < left.length; i += 1) if (!equal(left[i], right[i])) return false;
+  return Array.isArray(a) === Array.isArray(b);
+}
+
+function sameWords(a: readonly string[], b: readonly string[]): boolean {
+  if (a.length !== b.length) return false;
+  for (let i = 0; i < a.length; i += 1) if (a[i] !== b[i]) return false;
+  return true;
+}
+
+function known(keys: readonly string[]): readonly ParameterKey[] {
+  return keys.filter((key) => knownKeys.has(key)) as ParameterKey[];
 }

@@ -30,13 +30,18 @@ export class RewriteCounts {
   private readonly rewrites = new Map<string, Counted>();
 
   add(series: RecordedSeries, changed: readonly ParameterKey[], reasons: readonly string[]): void {
-    const set = Object.fromEntries(changed.map((key) => [key, tidy(key, series.used.parameters[key])]));
-    const name = JSON.stringify(set);
+    const used = series.used.parameters;
+    let name = '';
+    for (const key of changed) {
+      const value = tidy(key, used[key]);
+      name += `${key} ${typeof value === 'object' ? JSON.stringify(value) : value};`;
+    }
     let counted = this.rewrites.get(name);
     if (counted === undefined) {
       if (this.rewrites.size >= mostFollowed) this.giveUpRare();
       if (this.rewrites.size >= mostFollowed) return;
-      counted = { set: set as GivenParameters, times: 0, good: 0, reasons: new Tally() };
+      const set = Object.fromEntries(changed.map((key) => [key, tidy(key, used[key])])) as GivenParameters;
+      counted = { set, times: 0, good: 0, reasons: new Tally() };
       this.rewrites.set(name, counted);
     }
     counted.times += 1;
@@ -58,5 +63,7 @@ export class RewriteCounts {
 /** Carried timing has endless digits: values that nobody can tell apart are one. What was taken away stays absent. */
 function tidy(key: ParameterKey, value: unknown): unknown {
   const row = parameterRow(key);
-  return typeof value === 'number' && row.kind === 'number' ? Number(value.toFixed(Math.max(2, row.digits))) : value;
+  if (typeof value !== 'number' || row.kind !== 'number') return value;
+  const perUnit = row.digits > 2 ? 1000 : 100;
+  return Math.round(value * perUnit) / perUnit;
 }

@@ -58,14 +58,15 @@ export class SeriesCounts {
     const changed = this.changes.add(series);
     const isRewritten = changed.length > 0;
     this.quality[isRewritten ? 'rewritten' : 'asPlanned'][series.quality ?? 'notSaid'] += 1;
+    this.prediction.add(series, record.day);
+    if (!isRewritten && series.outcome === 'done' && series.crossed.length === 0) return;
     const reasons = reasonsOf(record, series);
     if (isRewritten) {
       this.rewritten += 1;
       this.rewrites.add(series, changed, reasons);
     }
-    if (isRewritten || series.outcome !== 'done') for (const reason of reasons) this.reasons.add(reason.trim() === '' ? '' : reason);
+    if (isRewritten || series.outcome !== 'done') for (const reason of reasons) this.reasons.add(reason);
     if (series.crossed.length > 0) this.crossed.add(record, series, reasons[0] ?? '');
-    this.prediction.add(series, record.day);
   }
 
   report(): SeriesReport {

@@ -8,8 +8,8 @@ import { recordLine } from '../../src/study/record-line.js';
 import type { PresetReport } from '../../src/study/record-report.js';
 import type { SeriesReport } from '../../src/study/record-report-series.js';
 import { runCommand } from '../commands/run-command.js';
-import { inventedRecord, inventedSeries } from '../study/records.js';
 import { temporaryFolder } from '../store/temporary-folder.js';
+import { inventedRecord, inventedSeries } from '../study/records.js';
 
 /** The documented query, asked of files by DuckDB. */
 async function asked(files: readonly string[]): Promise<Record<string, unknown>[]> {
@@ -18,7 +18,9 @@ async function asked(files: readonly string[]): Promise<Record<string, unknown>[
   const reader = await connection.runAndReadAll(readFileSync('scripts/records-by-series.sql', 'utf8'), { files: listValue([...files]) });
   const rows = reader.getRowObjectsJson().map((row) =>
     // Whole numbers of 64 bits come as text.
-    Object.fromEntries(Object.entries(row).map(([key, value]) => [key, typeof value === 'string' && /^-?\d+$/.test(value) ? Number(value) : value])),
+    Object.fromEntries(
+      Object.entries(row).map(([key, value]) => [key, typeof value === 'string' && /^-?\d+$/.test(value) ? Number(value) : value]),
+    ),
   );
   connection.closeSync();
   return rows;
@@ -71,7 +73,16 @@ describe('the documented query', () => {
   it('gives those of forty liver sessions, and of a file counted by hand', async () => {
     const audit = fileOf('audit.jsonl', auditRecords());
     const [row] = await asked([audit]);
-    expect(row).toMatchObject({ recorded: 40, run: 40, rewritten: 16, without_reason: 1, crossed: 1, thicker: 16, thicker_median_mm: 1, thicker_high_quartile_mm: 1.25 });
+    expect(row).toMatchObject({
+      recorded: 40,
+      run: 40,
+      rewritten: 16,
+      without_reason: 1,
+      crossed: 1,
+      thicker: 16,
+      thicker_median_mm: 1,
+      thicker_high_quartile_mm: 1.25,
+    });
     expect([row]).toEqual(await reported([audit]));
 
     const plain = { ...inventedSeries, used: inventedSeries.planned, reason: '', crossed: [] };

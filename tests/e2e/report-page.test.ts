@@ -88,7 +88,9 @@ describe('the HTML page of the report, in a browser', () => {
     expect(at800.smallest).toBeGreaterThanOrEqual(11);
     expect([at800.outside, at800.cut, at800.wide <= 800]).toEqual([0, [], true]);
 
-    const complaints = page.events.filter(({ method }) => ['Log.entryAdded', 'Runtime.exceptionThrown', 'Runtime.consoleAPICalled'].includes(method));
+    const complaints = page.events.filter(({ method }) =>
+      ['Log.entryAdded', 'Runtime.exceptionThrown', 'Runtime.consoleAPICalled'].includes(method),
+    );
     expect(complaints).toEqual([]);
     const asked = page.events
       .filter(({ method }) => method === 'Network.requestWillBeSent')
@@ -106,7 +108,10 @@ describe('the HTML page of the report, in a browser', () => {
     const { data } = await page.call<{ data: string }>('Page.printToPDF', { preferCSSPageSize: true, printBackground: false });
     const pdf = Buffer.from(data, 'base64').toString('latin1');
     expect(pdf.startsWith('%PDF-')).toBe(true);
-    const boxes = [...pdf.matchAll(/\/MediaBox \[\s*0 0 ([\d.]+) ([\d.]+)\s*\]/g)].map(([, width, height]) => [Number(width), Number(height)]);
+    const boxes = [...pdf.matchAll(/\/MediaBox \[\s*0 0 ([\d.]+) ([\d.]+)\s*\]/g)].map(([, width, height]) => [
+      Number(width),
+      Number(height),
+    ]);
     expect(boxes.length).toBeGreaterThan(0);
     // 210 by 297 mm in points of 1/72 inch.
     for (const [width, height] of boxes) {

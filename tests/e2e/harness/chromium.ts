@@ -23,7 +23,13 @@ function chromiumPath(): string {
   throw new Error('Chromium is needed to look at the HTML page, and none is on the path: apt-get install chromium (.ci/run does it).');
 }
 
-type Message = { readonly id?: number; readonly method?: string; readonly params?: unknown; readonly result?: unknown; readonly error?: { message: string } };
+type Message = {
+  readonly id?: number;
+  readonly method?: string;
+  readonly params?: unknown;
+  readonly result?: unknown;
+  readonly error?: { message: string };
+};
 
 /** One page in a headless browser, driven through the DevTools protocol over pipes: no port, no package. */
 export interface BrowserPage {
@@ -40,7 +46,14 @@ export interface BrowserPage {
 /** Starts the browser with one blank page; it is gone when the test is. */
 export async function openBrowser(): Promise<BrowserPage> {
   const profile = temporaryFolder();
-  const options = ['--headless', '--no-sandbox', '--disable-gpu', '--disable-dev-shm-usage', '--no-first-run', `--user-data-dir=${profile}`];
+  const options = [
+    '--headless',
+    '--no-sandbox',
+    '--disable-gpu',
+    '--disable-dev-shm-usage',
+    '--no-first-run',
+    `--user-data-dir=${profile}`,
+  ];
   const child: ChildProcess = spawn(chromiumPath(), [...options, '--remote-debugging-pipe', 'about:blank'], {
     stdio: ['ignore', 'ignore', 'ignore', 'pipe', 'pipe'],
   });

@@ -50,7 +50,8 @@ export function chartPane(chart: RangeChart, look: Look, columns: number, rows: 
   const read =
     point === undefined
       ? ''
-      : `${field.label} ${sayField(field, point.value)}${cursor === now ? ' (as now)' : ''}: ${wordsOf(figures[0], point.figures[figures[0]])}, ${wordsOf(figures[1], point.figures[figures[1]])}${point.over ? '  OVER' : ''}`;
+      : // What must not be cut where the pane is narrow comes first.
+        `${point.over ? 'OVER  ' : ''}${field.label} ${sayField(field, point.value)}: ${wordsOf(figures[0], point.figures[figures[0]])}, ${wordsOf(figures[1], point.figures[figures[1]])}${cursor === now ? ' (as now)' : ''}`;
   return [
     head,
     ...body,

@@ -54,12 +54,7 @@ export function noticeLine(state: State, look: Look, columns: number, idle: Line
   if (entry !== null) {
     const problem = notice === null ? [] : [span(`  ${notice.words}`, notice.level === 'trouble' ? 'trouble' : 'quiet')];
     return fitLine(
-      [
-        span(entry.ask === null ? 'type: ' : 'reading: '),
-        span(entry.text, 'bold'),
-        { text: ' ', style: 'inverse', cursor: true },
-        ...problem,
-      ],
+      [span(entry.ask === null ? 'type: ' : 'reading: '), span(entry.text), { text: ' ', style: 'plain', cursor: true }, ...problem],
       columns,
       look.glyphs.ellipsis,
     );

@@ -94,7 +94,8 @@ function formPane(
     const text = fitText(typed, Math.max(4, columns - labelColumns - 3), glyphs.ellipsis);
     return [
       span(`${isHere ? glyphs.pointer : ' '} ${fitText(row.label, labelColumns, glyphs.ellipsis)} `, isHere ? 'inverse' : 'plain'),
-      isHere ? { text, style, cursor: true } : span(text, style),
+      // While something is typed the cursor stands where it is typed.
+      isHere && state.entry === null ? { text, style, cursor: true } : span(text, style),
     ];
   });
   return fill(lines, rows);

@@ -100,7 +100,8 @@ function fieldLine(
     span(`${pointer}${label} `, style),
     span(fitText(was, presetColumns, glyphs.ellipsis, 'right'), here && state.place.pane === 'main' ? 'inverse' : 'quiet'),
     span(' ', style === 'inverse' ? 'inverse' : 'plain'),
-    cursorSpan(shown, style, here),
+    // While something is typed the cursor stands where it is typed.
+    cursorSpan(shown, style, here && !entry),
     span(` ${unit.padEnd(unitColumns)}`, style === 'inverse' ? 'inverse' : 'plain'),
   ];
 }

@@ -9,7 +9,7 @@ import { Plot } from './plot.js';
 
 export const axisColumns = 8;
 
-export interface Scale {
+interface Scale {
   readonly low: number;
   readonly high: number;
 }
@@ -87,7 +87,7 @@ function scaleOf({ points, figures, limits }: RangeChart, which: 0 | 1): Scale {
   return { low: bottom >= 0 ? Math.max(0, bottom - air) : bottom - air, high: top + air };
 }
 
-export function heightOf(value: number, { low, high }: Scale, dots: number): number {
+function heightOf(value: number, { low, high }: Scale, dots: number): number {
   return Math.round(((value - low) / (high - low)) * (dots - 1));
 }
 
@@ -96,7 +96,7 @@ function columnOf(xs: readonly number[], at: number, width: number): number {
   return to === from ? 0 : Math.round(((x - from) / (to - from)) * (width - 1));
 }
 
-export function axisText(key: FigureKey, { low, high }: Scale, row: number, height: number): string {
+function axisText(key: FigureKey, { low, high }: Scale, row: number, height: number): string {
   const share = height === 1 ? 0 : row / (height - 1);
   if (Number.isNaN(low)) return row === 0 ? 'no value' : '';
   const shown = row === 0 || row === height - 1 || row === Math.floor((height - 1) / 2);

@@ -10,9 +10,9 @@ import { Plot } from './plot.js';
 
 /** What a front shows, and its value in words. */
 export const frontWords = {
-  timeSnr: { title: 'most SNR in each time', say: (value: number) => `SNR ${sayRatio(value)}`, axis: (value: number) => sayRatio(value) },
+  timeSnr: { title: 'most SNR', say: (value: number) => `SNR ${sayRatio(value)}`, axis: (value: number) => sayRatio(value) },
   timeLoss: {
-    title: 'least loss of everything together in each time',
+    title: 'least loss of everything',
     say: (value: number) => `loss ${value.toFixed(3)}`,
     axis: (value: number) => value.toFixed(2),
   },
@@ -65,7 +65,7 @@ export function frontPane(state: State, look: Look, { columns, rows, cursor }: R
   return [
     line(
       fitText(
-        `Front: ${words.title} (${frontTime(state)})${limitS === null ? '' : `, ${look.glyphs.marker} ${sayTime(limitS)} is the limit`}`,
+        `Front: ${words.title} in each ${frontTime(state)}${limitS === null ? '' : `; ${look.glyphs.marker} limit ${sayTime(limitS)}`}`,
         columns,
         look.glyphs.ellipsis,
       ),

@@ -20,7 +20,7 @@ import type { State } from '../session/state.js';
 import { minimumSet, timeline } from '../session/timeline.js';
 import { sayJudged, seriesVerdicts } from '../session/verdicts.js';
 import { shownWays, wayHere } from '../session/ways.js';
-import { otherMovesInWords, searchNotes, searchStatus, verdictWith, wayParagraphs, wayTitle } from '../session/ways-words.js';
+import { otherMovesInWords, searchNotes, searchStatus, verdictWith, wayParagraphs, wayTitle, wayVerdict } from '../session/ways-words.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { frontPoint } from './front-screen.js';
 import { idleWords } from './idle-words.js';
@@ -180,13 +180,16 @@ function waysItems(state: State): Item[] {
     ...searchNotes(state).map((words) => ({ words })),
     ...shownWays(state).flatMap((listed, at): Item[] => {
       const isHere = here?.number === at + 1;
-      const title = `Way ${at + 1}, ${wayTitle(state, listed)}: ${verdictWith(state, seriesId, listed.way.given).text}`;
-      return [{ words: title, here: isHere }, ...(isHere ? wayParagraphs(listed).map(({ words }) => ({ words })) : [])];
+      const title = `Way ${at + 1}, ${wayTitle(state, listed)}: ${wayVerdict(state, listed).text}`;
+      return [
+        { words: title, here: isHere },
+        ...(isHere ? wayParagraphs(listed, state.search?.problem ?? null).map(({ words }) => ({ words })) : []),
+      ];
     }),
     ...(here !== null && here.number === null
       ? [
           { words: `The way looked at last: ${verdictWith(state, seriesId, here.listed.way.given).text}`, here: true },
-          ...wayParagraphs(here.listed).map(({ words }) => ({ words })),
+          ...wayParagraphs(here.listed, null).map(({ words }) => ({ words })),
         ]
       : []),
     ...(moves === null ? [] : [{ words: moves }]),

@@ -4,7 +4,7 @@ import { sayTime } from '../session/say-time.js';
 import { changesInWords, searchInWords } from '../session/say-way.js';
 import type { State } from '../session/state.js';
 import { figuresWith, frontHere, type ListedWay, shownWays, stateWith, wayHere } from '../session/ways.js';
-import { otherMovesInWords, searchNotes, searchStatus, verdictWith, wayParagraphs, wayTitle } from '../session/ways-words.js';
+import { otherMovesInWords, searchNotes, searchStatus, wayParagraphs, wayTitle, wayVerdict } from '../session/ways-words.js';
 import { fitText } from '../terminal/text-width.js';
 import { consequencePane } from './consequence-pane.js';
 import { frontPane } from './front-pane.js';
@@ -56,7 +56,12 @@ function wayLine(state: State, listed: ListedWay, number: string, here: boolean,
   const { seriesId } = state.place;
   const { given } = listed.way;
   const figures = figuresWith(state, seriesId, given);
-  const verdict = verdictWith(state, seriesId, given);
+  const verdict = wayVerdict(state, listed);
+  const style = verdictStyles[verdict.word ?? ''] ?? 'plain';
+  if (listed.binding !== null) {
+    const text = `${here ? glyphs.pointer : ' '}${number.padStart(2)} ${fitText(wayTitle(state, listed), columns - 32, glyphs.ellipsis)} `;
+    return [span(text, here ? 'inverse' : 'plain'), span(fitText(verdict.text, 27, glyphs.ellipsis), style)];
+  }
   const time = sayTime(figures.holdTimeS ?? figures.scanTimeS ?? 0);
   const titleColumns = Math.min(columns - 53, 34);
   const rest = columns - titleColumns - 55;
@@ -66,14 +71,14 @@ function wayLine(state: State, listed: ListedWay, number: string, here: boolean,
       `${here ? glyphs.pointer : ' '}${number.padStart(2)} ${fitText(wayTitle(state, listed), titleColumns, glyphs.ellipsis)} `,
       here ? 'inverse' : 'plain',
     ),
-    span(fitText(verdict.text, 27, glyphs.ellipsis), verdictStyles[verdict.word ?? ''] ?? 'plain'),
+    span(fitText(verdict.text, 27, glyphs.ellipsis), style),
     span(`${time.padStart(8)}  SNR ${sayFigure('relativeSnr', figures.relativeSnr).padStart(5)}`),
     span(changes),
   ];
 }
 
-function paragraphLines(listed: ListedWay, columns: number): Line[] {
-  return wayParagraphs(listed).flatMap(({ words, level }) =>
+function paragraphLines({ search }: State, listed: ListedWay, columns: number): Line[] {
+  return wayParagraphs(listed, search?.problem ?? null).flatMap(({ words, level }) =>
     wrap(words, columns - 2).map((each, at) =>
       line(`${at === 0 ? '' : '  '}${each}`, level === 'error' ? 'trouble' : level === 'caution' ? 'attention' : 'plain'),
     ),
@@ -90,10 +95,10 @@ function cut(lines: readonly Line[], scroll: number, rows: number): Line[] {
 }
 
 function narrowDetail(state: State, { listed }: Here, look: Look, columns: number, rows: number): Line[] {
-  const leftColumns = columns >= 98 ? 46 : 37;
+  const leftColumns = columns >= 98 ? 46 : 40;
   const rightColumns = columns - leftColumns - 2;
   const copy = asIf(state, listed);
-  const words = paragraphLines(listed, rightColumns);
+  const words = paragraphLines(state, listed, rightColumns);
   return beside(
     fill(consequencePane(copy, look, leftColumns, rows), rows),
     cut(words, state.wayScroll, rows).map((each) => [span(' '), ...each]),
@@ -116,7 +121,7 @@ function wideDetail(state: State, { listed }: Here, look: Look, columns: number,
       : frontPane(state, look, { columns: rightColumns, rows: Math.min(rows, 26), cursor: false });
   const two = beside(
     fill(consequencePane(copy, look, leftColumns, Math.min(rows, 19)), rows),
-    cut(paragraphLines(listed, middleColumns - 1), state.wayScroll, rows).map((each) => [span(' '), ...each]),
+    cut(paragraphLines(state, listed, middleColumns - 1), state.wayScroll, rows).map((each) => [span(' '), ...each]),
     leftColumns,
     look.glyphs.verticalRule,
     look.glyphs.ellipsis,

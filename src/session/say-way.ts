@@ -101,8 +101,14 @@ export function bindingInWords({ binders, needs }: Pick<Binding, 'binders' | 'ne
     const need = needs[binder.name] ?? null;
     const given = binder.kind === 'limit' ? limits[binder.key] : undefined;
     const isTime = binder.kind === 'limit' && (binder.key === 'holdS' || binder.key === 'timeS');
-    const say = (value: number) => (isTime ? sayTime(value) : String(Number(value.toFixed(2))));
-    const what = binder.kind === 'limit' ? boundWords[binder.key] : `${binder.kind} ${binder.name}`;
+    const say = (value: number) =>
+      isTime ? sayTime(value) : binder.kind === 'band' ? sayFigure(binder.figure, value) : String(Number(value.toFixed(2)));
+    const what =
+      binder.kind === 'limit'
+        ? boundWords[binder.key]
+        : binder.kind === 'band'
+          ? `what is kept of ${figureTable[binder.figure].label}`
+          : `${binder.kind} ${binder.name}`;
     return `${what}${need === null ? '' : `: needs ${say(need)}`}${given === undefined ? '' : `; the limit is ${say(given)}`}`;
   });
   return `What binds: ${parts.join(', and ')}.`;

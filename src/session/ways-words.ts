@@ -1,5 +1,6 @@
 import type { GivenParameters } from '../calc/series.js';
 import { otherMoves } from '../search/other-moves.js';
+import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { Change } from '../search/way.js';
 import { changedKeys } from './changed-keys.js';
 import { consequences } from './consequences.js';
@@ -74,10 +75,22 @@ export function verdictWith(state: State, id: string, set: GivenParameters): { r
   return judged === undefined ? { word: null, text: 'no limit' } : { word: judged.verdict.word, text: sayVerdict(judged.verdict) };
 }
 
+/** The verdict of a way of the list; one that needs more than what is kept says so. */
+export function wayVerdict(state: State, { way, binding }: ListedWay): { readonly word: string | null; readonly text: string } {
+  const verdict = verdictWith(state, state.place.seriesId, way.given);
+  if (binding === null || verdict.word === 'OVER') return verdict;
+  const crosses = binding.binders.some(({ kind }) => kind === 'must keep') ? 'crosses a must-keep' : 'beyond what is kept';
+  return { word: 'TOO CLOSE', text: `${verdict.word ?? 'FITS'}, ${crosses}` };
+}
+
 /** Everything that there is to say about a way, a paragraph each. */
-export function wayParagraphs({ way }: ListedWay): readonly { readonly words: string; readonly level: 'plain' | 'caution' | 'error' }[] {
+export function wayParagraphs(
+  { way, binding }: ListedWay,
+  problem: SearchProblem | null,
+): readonly { readonly words: string; readonly level: 'plain' | 'caution' | 'error' }[] {
   const plain = (words: string) => ({ words, level: 'plain' as const });
   return [
+    ...(binding === null || problem === null ? [] : [plain(bindingInWords(binding, problem))]),
     plain(`Change: ${changesInWords(way)}`),
     plain(`Gives up: ${tradesInWords(way.gives)}`),
     plain(`Gains: ${tradesInWords(way.gains)}`),

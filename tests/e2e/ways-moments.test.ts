@@ -39,7 +39,7 @@ describe('moments at the console, by the ways to fit', () => {
 
     await screen.keys('f', 'Ways to fit');
     await screen.keys('m', /4 shortest/);
-    await screen.keys('c', 'Front: most SNR in each time');
+    await screen.keys('c', 'Front: most SNR in each breath-hold');
     expect(screen.verdict()).toContain('OVER by 6.0 s');
     await screen.escape('Ways to fit');
     await screen.keys('2', 'Way 2 taken');

@@ -1,10 +1,13 @@
 import { describe, expect, it } from 'vitest';
+import { answerSearch } from '../../src/effects/answer-search.js';
 import { headlineOf } from '../../src/screens/common-lines.js';
 import { lineText } from '../../src/screens/line.js';
 import type { Look } from '../../src/screens/look.js';
 import { screenLines } from '../../src/screens/screen-lines.js';
+import { planBudget } from '../../src/search/budget.js';
 import { formRows } from '../../src/session/hands/form-commands.js';
 import { keyMap } from '../../src/session/key-map.js';
+import { budgetProblemOf } from '../../src/session/search-problem.js';
 import { type State, screenNames } from '../../src/session/state.js';
 import { update } from '../../src/session/update.js';
 import { asciiGlyphs, unicodeGlyphs } from '../../src/terminal/glyphs.js';
@@ -17,6 +20,44 @@ const reader: Look = { ...unicode, reader: true };
 
 const at = (state: State, columns: number, rows: number): State => ({ ...state, size: { columns, rows } });
 const textOf = (state: State, look: Look = unicode) => screenLines(state, look).map(lineText);
+
+const answers = new Map<string, ReturnType<typeof answerSearch>>();
+
+/** Answers the search that is open, or the plan: stopped after a while, so that every screen is soon there. */
+function told(state: State): State {
+  const { search, open, plan } = state;
+  if (search !== null && open.search === search.ask) {
+    let asked = 0;
+    const stopped = () => {
+      asked += 1;
+      return asked > 200;
+    };
+    const name = search.key;
+    const ways = answers.get(name) ?? answerSearch(search.problem, { stopped });
+    answers.set(name, ways);
+    return update(state, { kind: 'answer', ask: search.ask, answer: { kind: 'ways', ways } })[0];
+  }
+  const problem = budgetProblemOf(state);
+  if (plan === null || problem === null) return state;
+  return update(state, { kind: 'answer', ask: plan.ask, answer: { kind: 'plan', plan: planBudget(problem) } })[0];
+}
+
+/** The ways and the budget, while they are worked out and when they are there. */
+function waysScreens(id: string): readonly (readonly [string, State])[] {
+  const order = press(sessionOn(id), 'p', '11', 'enter', 'escape');
+  const searching = press(order, 'enter', 'f');
+  const share = update(searching, { kind: 'progress', ask: searching.search?.ask ?? -1, share: 0.4 })[0];
+  const ways = told(searching);
+  return [
+    ['ways, searching', share],
+    ['ways', ways],
+    ['ways, all of them', press(ways, 'm', 'down', 'down', 'down')],
+    ['front', press(ways, 'c')],
+    ['front of loss', press(ways, 'c', 'tab', 'right')],
+    ['keep', press(ways, 'k')],
+    ['ways help', press(ways, 'h')],
+  ];
+}
 
 /** Every screen, in the middle of some work. */
 function everyScreen(id: string): readonly (readonly [string, State])[] {
@@ -38,6 +79,7 @@ function everyScreen(id: string): readonly (readonly [string, State])[] {
     ['record', press(series, 'e')],
     ['record, reasons', press(series, 'e', 'tab')],
     ['help', press(series, 'h')],
+    ...waysScreens(id),
   ];
 }
 
@@ -117,6 +159,58 @@ describe('the series screen', () => {
     const text = textOf(locked).join('\n');
     expect(text).toMatch(/averages\s+locked\s+1/);
     expect(text).toContain('locked in the preset');
+  });
+});
+
+describe('the ways to fit', () => {
+  const ways = told(press(sessionOn('liver-3t'), 'p', '11', 'enter', 'escape', 'enter', 'f'));
+
+  it('numbers three first, each with its verdict, and shows what the one under the hand does on the strips', () => {
+    const text = textOf(ways).join('\n');
+    expect(text).toMatch(/1 closest to the preset +FITS, \d\.\d s to spare/);
+    expect(text).not.toMatch(/^ +4 /m);
+    expect(text).toMatch(/breath-hold .*-\d\d%/);
+    expect(text).toContain('Gives up: ');
+    expect(lineText(screenLines(ways, unicode)[0] ?? [])).toContain('OVER by 6.0 s');
+  });
+
+  it('a wide screen has list, strips, words and front together', () => {
+    const text = textOf(at(ways, 160, 50)).join('\n');
+    for (const words of ['Consequences', 'Gives up: ', 'Front: most SNR in each breath-hold', 'Before rewriting: ', 'limit 11.0 s'])
+      expect(text).toContain(words);
+  });
+
+  it('the reader says the ways in sentences', () => {
+    const said = textOf(at(ways, 100, 60), reader).join('\n');
+    expect(said).toMatch(/Here: Way 1, closest to the preset: FITS/);
+    expect(said).toMatch(/Way 3, /);
+    expect(said).not.toMatch(/[\u2800-\u28ff]/);
+  });
+
+  it('where nothing fits it says what binds and what else is done, as words', () => {
+    const none = press(sessionOn('liver-3t'), 'p', '2', 'enter', 'escape', 'enter', 'f');
+    const whole = answerSearch(none.search!.problem, {});
+    const text = textOf(update(none, { kind: 'answer', ask: none.search!.ask, answer: { kind: 'ways', ways: whole } })[0]).join('\n');
+    expect(text).toContain('Nothing fits.');
+    expect(text).toMatch(/breath-hold: needs \d\.\d s; the limit is 2\.0 s +OVER by/);
+    expect(text).toContain('What else is done: coach');
+  });
+});
+
+describe('the budget', () => {
+  const order = press(sessionOn('lumbar-spine-1.5t'), 'p', 'down', 'down', 'down', '8', 'enter', 'escape');
+  const plan = told(press(order, 'b'));
+
+  it.each(sizes)('fills %i by %i with every series, its choice, times and the total', (columns, rows) => {
+    for (const look of [unicode, ascii, reader]) {
+      const lines = textOf(at(plan, columns, rows), look);
+      expect(lines).toHaveLength(rows);
+      for (const each of lines) expect(textWidth(each.trimEnd()), each).toBeLessThanOrEqual(columns);
+      const text = lines.join('\n');
+      for (const { id } of plan.session?.series ?? []) expect(text).toContain(id);
+      expect(text).toMatch(/Together \d+:\d\d of 8:00: /);
+      expect(text).toMatch(/shortened|skipped/);
+    }
   });
 });
 

@@ -43,7 +43,8 @@ describe('numbers as the trade writes them', () => {
   ] as const)('%s of %d is %s', (key, value, words) => expect(sayFigure(key, value)).toBe(words));
 
   it('a parameter has no more digits than a person types', () => {
-    expect(sayParameter('repetitionTimeMs', 3.19526)).toBe('3.20 ms');
+    expect(sayParameter('repetitionTimeMs', 3.19526)).toBe('3.2 ms');
+    expect(sayParameter('repetitionTimeMs', 3.5549)).toBe('3.55 ms');
     expect(sayParameter('partialFourierSlice', 0.625)).toBe('0.625');
     expect(sayParameter('displayMatrix', undefined)).toBe('none');
   });

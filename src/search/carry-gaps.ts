@@ -38,7 +38,7 @@ export function carryGaps(
   if (bandwidth.because === 'train')
     add(
       'equal chemical shift',
-      `${bandwidth.equalShiftHz} Hz/px would move TE by more than 5 % or split the slices further: fat moves less than in the preset`,
+      `${bandwidth.equalShiftHz} Hz/px would move TE or the train by more than 5 % or split the slices further: fat moves less than in the preset`,
     );
   if (classRow(model.key).echoPlanar && to.fieldT > baseline.model.scanner.fieldT)
     add(
@@ -70,7 +70,8 @@ export function carryGaps(
       'tissue values of the series',
       `those of ${Object.keys(series.tissueOverrides).join(', ')} were given for ${digits(baseline.model.scanner.fieldT, 3)} T and stand unchanged`,
     );
-  const beyond = to.fieldT < sourced.min || to.fieldT > sourced.max;
+  // A magnet a few percent off its name is still one of that field.
+  const beyond = to.fieldT < 0.95 * sourced.min || to.fieldT > 1.05 * sourced.max;
   if (series.contrastAgent && beyond)
     add(
       'contrast agent',

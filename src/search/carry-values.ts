@@ -60,7 +60,7 @@ function bandwidthReason({ setting, settled, bandwidth }: CarryFacts): Reason {
       return with_(`not lowered, so that no series takes longer; equal shift would allow ${bandwidth.equalShiftHz} Hz/px: ${shift}`);
     case 'train':
       return with_(
-        `lowered towards the ${bandwidth.equalShiftHz} Hz/px of equal shift, as far as TE stays within 5 % and the slices need no further split: ${shift}`,
+        `lowered towards the ${bandwidth.equalShiftHz} Hz/px of equal shift, as far as TE and train stay within 5 % and the slices need no further split: ${shift}`,
       );
     case null:
       return with_(`equal chemical shift: ${shift}`);

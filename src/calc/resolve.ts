@@ -100,7 +100,8 @@ function minimumOf(key: ClassKey, draft: Parameters, baseline: Baseline, scanner
   const acquisition = classRow(key).acquisition;
   const p: Parameters = {
     ...draft,
-    fieldOfViewMm: before.fieldOfViewMm,
+    // A larger field with as many more samples is the same readout: the two count together.
+    fieldOfViewMm: draft.matrixRead === before.matrixRead ? before.fieldOfViewMm : draft.fieldOfViewMm,
     matrixPhase: classRow(key).echoPlanar ? draft.matrixPhase : before.matrixPhase,
     sliceThicknessMm: before.sliceThicknessMm,
     sliceCount: before.sliceCount,

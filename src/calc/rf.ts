@@ -29,10 +29,17 @@ export function repetitionEnergyUt2Ms(key: ClassKey, p: Parameters, lines: Lines
   const imaging =
     excitationCount(key, lines) * pulses.excitation.energyUt2Ms + refocusingCount(key, p) * (pulses.refocusing?.energyUt2Ms ?? 0);
   const volume = classRow(key).interleaving === 'volume';
-  const bands = p.saturationBands * (pulses.band?.energyUt2Ms ?? 0);
+  const bands = p.saturationBands * (pulses.band?.energyUt2Ms ?? 0) * bandShare(key, p);
   const fat = (pulses.fatSaturation?.energyUt2Ms ?? 0) * fatShare(key, p);
-  const inversions = p.inversionTimeMs === undefined ? 0 : inversionEnergyUt2Ms * (volume ? 1 : slices);
+  // All pulses of a stretched series last longer, the inversion among them: its energy falls alike.
+  const inversions = p.inversionTimeMs === undefined ? 0 : (inversionEnergyUt2Ms / p.rfPulseStretch) * (volume ? 1 : slices);
   return slots * (p.simultaneousSlices * imaging + bands + fat) + inversions;
+}
+
+/** True where each slot has time for its own fat saturation and bands: everything but gradient echoes that repeat within milliseconds. */
+export function preparesEverySlot(key: ClassKey): boolean {
+  const row = classRow(key);
+  return !row.gradientEcho || row.interleaving === 'interleaved' || row.family === 'inversion-prepared-gradient-echo';
 }
 
 /**
@@ -40,10 +47,14 @@ export function repetitionEnergyUt2Ms(key: ClassKey, p: Parameters, lines: Lines
  * it plays one every `fatSuppressionEveryLines`, and none is counted where that is not stated.
  */
 function fatShare(key: ClassKey, p: Parameters): number {
-  const row = classRow(key);
-  const everyLine = !row.gradientEcho || row.interleaving === 'interleaved' || row.family === 'inversion-prepared-gradient-echo';
-  if (everyLine) return 1;
+  if (preparesEverySlot(key)) return 1;
   return p.fatSuppressionEveryLines === undefined ? 0 : 1 / p.fatSuppressionEveryLines;
+}
+
+/** Bands per slot: as often as the fat suppression where that is stated, else before every line, an upper bound that a caution names. */
+function bandShare(key: ClassKey, p: Parameters): number {
+  if (preparesEverySlot(key) || p.fatSuppressionEveryLines === undefined) return 1;
+  return 1 / p.fatSuppressionEveryLines;
 }
 
 /** Root mean square of B1+ in uT of an energy in uT^2 ms repeated every TR: over min(TR, 10 s), an upper bound beyond 10 s. */

@@ -55,6 +55,36 @@ describe('repetitionEnergyUt2Ms', () => {
     expect(energy('spin-echo/2D', { simultaneousSlices: 2 }, 9)).toBeCloseTo(energy('spin-echo/2D', {}, 10), 9);
   });
 
+  it('bands of a 3D gradient echo count before every line, an upper bound, unless it is stated how often they are played', () => {
+    const series = (given: GivenParameters) =>
+      edit(seriesOf('spoiled-gradient-echo/3D', { repetitionTimeMs: 5, echoTimeMs: 2, sliceCount: 60 }), given).figures
+        .b1PlusRmsUt as number;
+    const plain = series({}) ** 2;
+    const everyLine = series({ saturationBands: 1 }) ** 2 - plain;
+    const every40 = series({ saturationBands: 1, fatSuppressionEveryLines: 40 }) ** 2 - plain;
+    expect(everyLine / every40).toBeCloseTo(40, 6);
+  });
+
+  it('an inversion pulse stretched with the series loses energy alike', () => {
+    const series = (given: GivenParameters) =>
+      edit(
+        seriesOf('fast-spin-echo/2D', {
+          repetitionTimeMs: 4000,
+          inversionTimeMs: 200,
+          sliceCount: 1,
+          echoTrainLength: 8,
+          echoSpacingMs: 14,
+          echoTimeMs: 56,
+        }),
+        {
+          echoSpacingMs: 14,
+          echoTimeMs: 56,
+          ...given,
+        },
+      ).figures.b1PlusRmsUt as number;
+    expect(series({ rfPulseStretch: 2 }) / series({})).toBeCloseTo(Math.SQRT1_2, 9);
+  });
+
   it('bands and fat saturation once a slot: half as many with two simultaneous slices', () => {
     const extra = (given: GivenParameters, slices: number) =>
       energy('spin-echo/2D', { saturationBands: 2, fatSuppression: 'spectral', ...given }, slices) - energy('spin-echo/2D', given, slices);

@@ -3,6 +3,7 @@ import type { AddCaution } from '../caution.js';
 import type { Comparison } from '../compare.js';
 import type { SeriesModel } from '../model.js';
 import { type ParameterKey, parameterKeys } from '../parameters.js';
+import { preparesEverySlot } from '../rf.js';
 import { below, same } from '../rounding.js';
 import { inWords } from './number-words.js';
 
@@ -79,13 +80,23 @@ export function driftCautions(
       () => 'a diffusion series counts its averages by b-value: its own averages must be 1',
     );
   }
-  if (
-    model.key === 'spoiled-gradient-echo/3D' &&
-    p.fatSuppression === 'spectral' &&
-    p.fatSuppressionEveryLines === undefined &&
-    before.fatSuppression !== 'spectral'
-  ) {
-    add('not-modelled', 'note', {}, () => 'how often the fat-suppression pulse is played is not stated: its time and RF are not counted');
+  if (p.fatSuppressionEveryLines === undefined && !preparesEverySlot(model.key)) {
+    if (p.fatSuppression === 'spectral') {
+      add(
+        'not-modelled',
+        'note',
+        {},
+        () => 'how often fat saturation is played between the lines is not stated: its time and RF are not counted',
+      );
+    }
+    if (p.saturationBands > 0) {
+      add(
+        'not-modelled',
+        'note',
+        {},
+        () => 'how often bands are played between the lines is not stated: their RF is counted before every line, an upper bound',
+      );
+    }
   }
   // What the preset gives in vain stays said while it is edited.
   for (const name of ignoredOf(model, baseline)) add('not-modelled', 'caution', {}, () => `${name} has no effect in this class`);

@@ -295,7 +295,7 @@ describe('readPreset names file, line, key, what was given and what was expected
       'a hostile rule',
       changed('"figure": "voxelSliceMm", "atMost": 5', '"rule": "x.constructor > 1"'),
       [
-        `${series} 29, series.t1-3d.mustKeep.1.rule: a property is not allowed in "x.constructor" at character 1; expected names of parameters and figures, numbers, comparisons, and, or, not, + - * / ^, parentheses, min, max, abs, sqrt. | Write the rule with what is allowed.`,
+        `${series} 29, series.t1-3d.mustKeep.1.rule: a property is not allowed in "x.constructor" at character 1; expected names of parameters and figures, numbers, comparisons, and, or, not, + - * / ^, parentheses, min, max, abs, sqrt, units after numbers. | Write the rule with what is allowed.`,
       ],
     ],
     [

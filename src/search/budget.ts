@@ -49,7 +49,7 @@ export interface PlannedSeries {
   readonly given: GivenParameters;
   /** Time of the series with the rests between its breath-holds, without overhead, s; 0 when skipped. */
   readonly timeS: number;
-  /** Balanced loss against its preset, 0 as it is. */
+  /** Balanced loss against its preset; 0 as it is, what was set by hand included: that was decided already. */
   readonly loss: number;
 }
 
@@ -111,7 +111,7 @@ function planned(setting: SearchSetting, choice: 'as it is' | 'shortened', point
     changes,
     given: pointParameters(setting.variables, point, setting.problem.set),
     timeS,
-    loss: choice === 'as it is' && Object.keys(setting.problem.set).length === 0 ? 0 : loss,
+    loss: choice === 'as it is' ? 0 : loss,
   };
 }
 

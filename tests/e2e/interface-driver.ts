@@ -28,10 +28,19 @@ export interface Interface {
   readonly records: () => readonly SessionRecord[];
 }
 
+/** The screen without its second line, which also tells how far a search is: that changes without any key. */
+function byKeys(program: RunningProgram): string {
+  return program
+    .text()
+    .split('\n')
+    .filter((_line, row) => row !== 1)
+    .join('\n');
+}
+
 /** Waits until the screen has not changed for a while. */
 async function quiet(program: RunningProgram): Promise<void> {
-  for (let before = ''; before !== program.text(); ) {
-    before = program.text();
+  for (let before = ''; before !== byKeys(program); ) {
+    before = byKeys(program);
     await new Promise((resolve) => setTimeout(resolve, 80));
   }
 }
@@ -65,11 +74,11 @@ export function openInterface(home: string, args: readonly string[] = [], option
       program.press(keyBytes.home);
       await quiet(program);
       for (let rows = 0; rows < 80; rows += 1) {
-        const before = program.text();
+        const before = byKeys(program);
         if (here.test(before)) return;
         // One key at a time, each drawn before the next: the hand is on one line of the screen.
         program.press(keyBytes.down);
-        await program.waitFor((running) => running.text() !== before, 10_000);
+        await program.waitFor((running) => byKeys(running) !== before, 10_000);
         await quiet(program);
       }
       throw new Error(`no line ${label}; the screen shows:\n${program.text()}`);

@@ -77,11 +77,6 @@ export class SaidCaution implements Caution {
   }
 }
 
-/** Cautions as plain data, sentences put together: for what leaves the thread or is kept. */
-export function plainCautions(cautions: readonly Caution[]): readonly Caution[] {
-  return cautions.map(({ code, level, text, numbers }) => ({ code, level, text, numbers }));
-}
-
 const levels: readonly CautionLevel[] = ['error', 'caution', 'note'];
 
 /** Cautions ordered worst first; equals keep their order. */

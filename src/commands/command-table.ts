@@ -190,7 +190,7 @@ export const commandTable: readonly CommandRow[] = [
       { name: 'on-top', value: null, help: 'take the changes over on top of a newer revision' },
       fieldOption,
     ],
-    examples: ['holdfast presets release liver-3t-draft --as liver-3t --based-on 2 --role physicist --reason "short holds" --presets DIR'],
+    examples: ['holdfast presets release ./liver.json --role physicist --reason "short holds"'],
     load: async () => (await import('./presets-release.js')).runPresetsRelease,
   },
   {

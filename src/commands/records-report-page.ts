@@ -32,7 +32,7 @@ export function recordsReportPage({ report, read, filter, now }: CountedRecords,
     ...report.presets.flatMap((preset) => ['', ...presetLines(preset, now.get(preset.preset), page)]),
     '',
     ...wrapText(
-      `No rates from fewer than ${fewestForRate}. Quality is as seen at the console. A suggestion is a variant to review, never a preset.`,
+      `No rates from fewer than ${fewestForRate}. Quality is as seen at the console, no diagnosis. A suggestion is a variant to review, never a preset.`,
       page.width,
     ),
   ];

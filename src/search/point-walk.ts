@@ -27,7 +27,7 @@ export function walkPoints(
 
 /** Sum over k up to `most` of the ways to change exactly k of these variables: what a walk visits. */
 export function countPoints(variables: readonly LatticeVariable[], which: readonly number[], mostChanges: number): number {
-  const sums = [1, ...new Array<number>(which.length).fill(0)];
+  const sums = [1, ...which.map(() => 0)];
   for (const at of which) {
     const others = (variables[at] as LatticeVariable).values.length - 1;
     for (let k = which.length; k > 0; k -= 1) sums[k] = (sums[k] as number) + (sums[k - 1] as number) * others;

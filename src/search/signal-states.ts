@@ -76,10 +76,15 @@ const minimumKeys: readonly ParameterKey[] = [
   'matrixRead',
 ];
 
+/** A value as part of a name: objects by what they hold. */
+function nameOf(value: unknown): string {
+  return typeof value === 'object' ? JSON.stringify(value) : String(value as number | string | boolean | undefined);
+}
+
 /** Values of some parameters as one word. */
 function idOf(keys: readonly ParameterKey[], p: Parameters): string {
   let id = '';
-  for (const key of keys) id += `${p[key]}|`;
+  for (const key of keys) id += `${nameOf(p[key])}|`;
   return id;
 }
 

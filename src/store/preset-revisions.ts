@@ -21,7 +21,7 @@ export function revisionName(id: string, revision: number): string {
  * The files of a preset in a folder, by their names alone: `ID@REV.json` from the highest down, then `ID.json`. No pointer is stored:
  * which revision is the current one follows from the files.
  */
-export async function revisionFiles(disk: Disk, folder: string, id: string): Promise<Stored<RevisionFile[]>> {
+async function revisionFiles(disk: Disk, folder: string, id: string): Promise<Stored<RevisionFile[]>> {
   let names: readonly string[];
   try {
     names = await disk.names(folder);

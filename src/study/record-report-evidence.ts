@@ -33,7 +33,7 @@ export function changeWords({ changed, rewrite }: Pick<Parts, 'changed' | 'rewri
 }
 
 /** Figures that differ in the digits shown, in words: `breath-hold 17.0 s to 12.8 s`. */
-export function figureChangeWords({ before, after }: Pick<Parts, 'before' | 'after'>): string[] {
+function figureChangeWords({ before, after }: Pick<Parts, 'before' | 'after'>): string[] {
   return committeeFigures.flatMap((key) => {
     const [from, to] = [figureWords(key, before[key]), figureWords(key, after[key])];
     return from === to ? [] : [`${figureTable[key].label} ${from} to ${to}`];

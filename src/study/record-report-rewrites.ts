@@ -34,7 +34,7 @@ export class RewriteCounts {
     let name = '';
     for (const key of changed) {
       const value = tidy(key, used[key]);
-      name += `${key} ${typeof value === 'object' ? JSON.stringify(value) : value};`;
+      name += `${key} ${typeof value === 'number' ? value : JSON.stringify(value)};`;
     }
     let counted = this.rewrites.get(name);
     if (counted === undefined) {

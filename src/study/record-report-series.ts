@@ -34,7 +34,7 @@ export interface SeriesReport {
 }
 
 /** The reasons of one series: its own, else those of the whole session; one blank where there is none. */
-export function reasonsOf(record: SessionRecord, series: RecordedSeries): readonly string[] {
+function reasonsOf(record: SessionRecord, series: RecordedSeries): readonly string[] {
   if (series.reason.trim() !== '') return [series.reason];
   const given = record.reasons.filter((reason) => reason.trim() !== '');
   return given.length > 0 ? given : [''];

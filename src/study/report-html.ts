@@ -35,7 +35,7 @@ export function reportHtml(report: RecordReport, surroundings: ReportSurrounding
     `${report.sessions} sessions recorded, ${period}`,
     `${files} ${files === 1 ? 'file' : 'files'}, ${damaged} damaged ${damaged === 1 ? 'line' : 'lines'} skipped`,
     ...(chosen === '' ? [] : [`Chosen: ${chosen}`]),
-    `No rates from fewer than ${fewestForRate}. Quality is as seen at the console. A suggestion is a variant to review, never a preset.`,
+    `No rates from fewer than ${fewestForRate}. Quality is as seen at the console, no diagnosis. A suggestion is a variant to review, never a preset.`,
     'RF figures are trends. Figures come from published population values, not from one patient. People decide.',
   ];
   return [

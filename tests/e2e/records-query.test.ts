@@ -52,7 +52,8 @@ async function reported(files: readonly string[]): Promise<Record<string, unknow
   expect(exit).toBe(0);
   const { presets } = JSON.parse(out) as { presets: PresetReport[] };
   const rows = presets.flatMap((preset) => preset.series.map((series) => countedBy(preset, series)));
-  return rows.sort((a, b) => (`${a.preset} ${a.series}` < `${b.preset} ${b.series}` ? -1 : 1));
+  const name = ({ preset, series }: Record<string, unknown>) => `${String(preset)} ${String(series)}`;
+  return rows.sort((a, b) => (name(a) < name(b) ? -1 : 1));
 }
 
 function fileOf(name: string, records: Iterable<SessionRecord>, after = ''): string {

@@ -10,9 +10,9 @@ const plain: Look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader:
 describe('a frame as ink draws it', () => {
   it('has its lines one under the other, blank ones too, and nothing between stretches of one line', () => {
     const { lastFrame, unmount } = render(
-      <Frame lines={[line('OVER by 6.0 s'), line(''), [span('slices '), span('72', 'bold')]]} look={plain} />,
+      <Frame lines={[line('OVER by 6.0 s'), line(''), [span('slices '), span('72')]]} look={plain} />,
     );
-    expect(lastFrame()?.replaceAll(/\u001b\[[0-9;]*m/g, '')).toBe('OVER by 6.0 s\n\nslices 72');
+    expect(lastFrame()).toBe('OVER by 6.0 s\n\nslices 72');
     unmount();
   });
 

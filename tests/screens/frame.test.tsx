@@ -9,9 +9,7 @@ const plain: Look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader:
 
 describe('a frame as ink draws it', () => {
   it('has its lines one under the other, blank ones too, and nothing between stretches of one line', () => {
-    const { lastFrame, unmount } = render(
-      <Frame lines={[line('OVER by 6.0 s'), line(''), [span('slices '), span('72')]]} look={plain} />,
-    );
+    const { lastFrame, unmount } = render(<Frame lines={[line('OVER by 6.0 s'), line(''), [span('slices '), span('72')]]} look={plain} />);
     expect(lastFrame()).toBe('OVER by 6.0 s\n\nslices 72');
     unmount();
   });

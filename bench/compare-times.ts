@@ -24,14 +24,22 @@ function timeOf(work: Work, count: number): number {
   return nanoseconds / count;
 }
 
-/** Repeats until one batch lasts as long as asked, which also warms the code up. */
+/** Processor time of this process, which a busy machine does not stretch, ms. */
+function spentMs(): number {
+  const { user, system } = process.cpuUsage();
+  return (user + system) / 1000;
+}
+
+const warmMs = 1500;
+
+/** Runs until the code is compiled as far as it gets, then counts how often it runs in one batch. */
 function batchSize(work: Work, batchMs: number): number {
-  const warmUntil = process.hrtime.bigint() + 150_000_000n;
+  const warmAt = spentMs() + warmMs;
   let count = 16;
   for (;;) {
     const ms = (timeOf(work, count) * count) / 1e6;
-    if (ms >= batchMs && process.hrtime.bigint() > warmUntil) return Math.max(1, Math.round((count * batchMs) / ms));
-    if (ms < batchMs) count *= 2;
+    if (spentMs() >= warmAt && ms >= batchMs) return Math.max(1, Math.round((count * batchMs) / ms));
+    if (ms < 4 * batchMs) count *= 2;
   }
 }
 

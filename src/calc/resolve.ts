@@ -100,8 +100,7 @@ function minimumOf(key: ClassKey, draft: Parameters, baseline: Baseline, scanner
   const acquisition = classRow(key).acquisition;
   const p: Parameters = {
     ...draft,
-    // A larger field with as many more samples is the same readout: the two count together.
-    fieldOfViewMm: draft.matrixRead === before.matrixRead ? before.fieldOfViewMm : draft.fieldOfViewMm,
+    fieldOfViewMm: before.fieldOfViewMm,
     matrixPhase: classRow(key).echoPlanar ? draft.matrixPhase : before.matrixPhase,
     sliceThicknessMm: before.sliceThicknessMm,
     sliceCount: before.sliceCount,

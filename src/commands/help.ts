@@ -46,7 +46,7 @@ export function commandHelp(command: CommandRow): string {
     ...command.examples.map((example) => `  ${example}`),
     '',
     'Usage',
-    ...wrapText(usageOf(command), width - 2).map((line, i) => (i === 0 ? `  ${line}` : `    ${line}`)),
+    ...wrapText(usageOf(command), width - 4).map((line, i) => (i === 0 ? `  ${line}` : `    ${line}`)),
     '',
     ...command.details.flatMap((detail) => wrapText(detail, width)),
     '',

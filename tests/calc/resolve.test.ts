@@ -234,13 +234,3 @@ describe('rounds', () => {
     expect(edit(train({ sliceCount: 14 }), { repetitionTimeMs: 195 }).parameters.rounds).toBe(1);
   });
 });
-
-describe('a larger field with as many more samples', () => {
-  it('is the same readout and carries nothing to speak of', () => {
-    // Same voxel, same bandwidth: the readout gradient, and with it the fastest timing, stays (geometry of the readout).
-    const series = gradientEcho({ fieldOfViewMm: 340, matrixRead: 256, matrixPhase: 200 });
-    const result = edit(series, { fieldOfViewMm: 425, matrixRead: 320, matrixPhase: 250 });
-    expect(result.parameters.repetitionTimeMs).toBeCloseTo(20, 6);
-    expect(result.parameters.echoTimeMs).toBeCloseTo(8, 6);
-  });
-});

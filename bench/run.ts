@@ -1,9 +1,4 @@
 import { keepsBudget, type Row } from './row.js';
-import { rows as evaluation } from './rows/evaluation.js';
-import { rows as interfaceRows } from './rows/interface.js';
-
-/** Every row, group by group: a new group is a file in `rows` and a name here. */
-const groups: readonly (readonly Row[])[] = [evaluation, interfaceRows];
 
 function figure(value: number): string {
   return value >= 100 ? value.toFixed(0) : value >= 10 ? value.toFixed(1) : value.toFixed(2);
@@ -13,10 +8,10 @@ function figure(value: number): string {
  * `npm run bench`: every row, ratios in one run with the absolute times beside them; the exit code.
  * `npm run bench -- --check` ends with 1 when a budget is missed; words or phrases pick the rows whose name holds one of them.
  */
-export async function run(asked: readonly string[]): Promise<number> {
+export async function runRows(rows: readonly Row[], asked: readonly string[]): Promise<number> {
   const words = asked.filter((word) => !word.startsWith('--'));
   let missed = 0;
-  for (const row of groups.flat()) {
+  for (const row of rows) {
     if (words.length > 0 && !words.some((word) => row.name.includes(word))) continue;
     const measured = await row.measure();
     const kept = keepsBudget(row, measured);

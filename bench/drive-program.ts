@@ -20,7 +20,6 @@ export interface KeyAnswer {
 
 /** A bundled program run by Node in a pseudo-terminal, measured from outside. */
 export interface DrivenProgram {
-  readonly pid: number;
   press(keys: string): void;
   /** Waits for a text on the screen; the time since the process was started, ms. */
   shows(text: string): Promise<number>;
@@ -77,7 +76,6 @@ export function drive(file: string, args: readonly string[], { columns, rows, en
   };
 
   return {
-    pid: pty.pid,
     press: (keys) => pty.write(keys),
     shows: async (text) => {
       const came = await until(() => screen.text().includes(text), givenUpMs);

@@ -1,4 +1,4 @@
-import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { pathToFileURL } from 'node:url';
@@ -163,10 +163,10 @@ function bytesRow(name: string, budget: number, before: readonly string[], keys:
   return { name: `bytes of a key at 100x30: ${name}`, against: '', unit: 'bytes', budget, measure: () => mostBytes(before, keys) };
 }
 
-/** Heap after garbage collection, with `keys` more keys pressed in bursts. */
-async function heapMb(program: DrivenProgram, file: string): Promise<number> {
+/** Heap after garbage collection. */
+async function heapMb(file: string): Promise<number> {
   rmSync(file, { force: true });
-  process.kill(program.pid, 'SIGUSR2');
+  writeFileSync(`${file}-ask`, '');
   for (let i = 0; i < 400; i += 1) {
     await new Promise((resolve) => setTimeout(resolve, 25));
     if (existsSync(file) && readFileSync(file, 'utf8').endsWith('\n')) return Number(readFileSync(file, 'utf8')) / 2 ** 20;
@@ -177,22 +177,26 @@ async function heapMb(program: DrivenProgram, file: string): Promise<number> {
 async function heapGrowth(few: number, many: number): Promise<Measured> {
   const file = join(folder, 'heap');
   const probe = pathToFileURL(resolve('bench/bare/heap-probe.mjs'));
-  const a = await seriesScreen({ node: ['--expose-gc', '--import', probe.href], env: { HEAP_FILE: file } });
+  const a = await seriesScreen({ node: ['--expose-gc', '--import', probe.href], env: { HEAP_FILE: file, HEAP_ASK: `${file}-ask` } });
   return closing(a, async () => {
-    // In bursts, as under key repeat; Escape alone, since a terminal sends other keys that begin with it.
+    // In bursts, as under key repeat; Escape alone, since a terminal sends other keys that begin with it. Help and back after each
+    // burst, seen on the screen, says that all of it has been worked through.
     const burst = [down, '+', '-', down, '+', 'u', 'r', up, '\t', down, '\t', '\t', '-', '+', down, 'n'].join('').repeat(4);
     const press = async (keys: number) => {
-      for (let pressed = 0; pressed < keys; pressed += 68) {
+      for (let pressed = 0; pressed < keys; pressed += 64) {
         a.program.press(burst);
         await a.program.silence();
-        for (const key of ['c', '+', '\u001b', 'o']) await a.program.key(key);
-        await a.program.key(enter);
+        a.program.press('h');
+        await a.program.shows('Help');
+        await a.program.silence();
+        a.program.press('\u001b');
+        await a.program.shows('Series ');
       }
     };
     await press(few);
-    const after = await heapMb(a.program, file);
+    const after = await heapMb(file);
     await press(many - few);
-    const late = await heapMb(a.program, file);
+    const late = await heapMb(file);
     return { subject: late, yardstick: after, ratio: late / after };
   });
 }

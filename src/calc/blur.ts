@@ -6,7 +6,7 @@ function linearSpread(x: number, a: number): number {
   const w = 2 * Math.PI * x;
   const decay = Math.exp(-a);
   const top = 1 - 2 * decay * Math.cos(w) + decay * decay;
-  const peak = a < 1e-6 ? 1 : ((1 - decay) / a) ** 2;
+  const peak = ((1 - decay) / a) ** 2;
   return top / (a * a + w * w) / peak;
 }
 
@@ -16,7 +16,7 @@ function centricSpread(x: number, a: number): number {
   const w = 2 * Math.PI * x;
   const at = (k: number) => (Math.exp(-b * k) * (w * Math.sin(w * k) - b * Math.cos(w * k))) / (b * b + w * w);
   const value = 2 * (at(0.5) - at(0));
-  const peak = a < 1e-6 ? 1 : (1 - Math.exp(-a)) / a;
+  const peak = (1 - Math.exp(-a)) / a;
   return (value / peak) ** 2;
 }
 
@@ -27,6 +27,7 @@ function centricSpread(x: number, a: number): number {
  * @example blurFwhmPx(1, 'linear') //=> 1.254
  */
 export function blurFwhmPx(trainOverT2: number, order: LineOrder): number {
+  // The closed forms divide by a: no decay is taken as next to none.
   const a = Math.max(trainOverT2, 1e-4);
   const spread = order === 'linear' ? linearSpread : centricSpread;
   // The half maximum of magnitude is a quarter of the square; it lies before the first zero, which decay only moves outwards.

@@ -4,7 +4,7 @@ import { geometryOf } from './geometry.js';
 import { acquiredLines } from './lines.js';
 import { type MinimumTiming, minimumTiming } from './minimum-timing.js';
 import { slotPulses } from './pulses.js';
-import { guardedCeil, roundHalfUp, same } from './rounding.js';
+import { guardedCeil, same } from './rounding.js';
 import type { Scanner } from './scanner.js';
 import { type GivenParameters, linesInOneTrain, type Parameters } from './series.js';
 import { contrastEcho } from './signal/echo-train-signal.js';
@@ -97,11 +97,11 @@ function readoutMoved(key: ClassKey, before: Parameters, now: Parameters): boole
 /** Fastest timing with the readout and pulses of the draft, the geometry of the preset: only the readout, pulses and train count as edits. */
 function minimumOf(key: ClassKey, draft: Parameters, baseline: Baseline, scanner: Scanner): MinimumTiming {
   const before = baseline.model.series.parameters;
-  const acquisition = classRow(key).acquisition;
+  const { acquisition, echoPlanar } = classRow(key);
   const p: Parameters = {
     ...draft,
     fieldOfViewMm: before.fieldOfViewMm,
-    matrixPhase: classRow(key).echoPlanar ? draft.matrixPhase : before.matrixPhase,
+    matrixPhase: echoPlanar ? draft.matrixPhase : before.matrixPhase,
     sliceThicknessMm: before.sliceThicknessMm,
     sliceCount: before.sliceCount,
   };
@@ -124,7 +124,7 @@ function carryTimes(key: ClassKey, baseline: Baseline, draft: Draft, scanner: Sc
   const old = baseline.model.minimum;
   const now = minimumOf(key, draft, baseline, scanner);
   const row = classRow(key);
-  const follows = (row.gradientEcho || classRow(key).echoPlanar) && before.secondEchoTimeMs === undefined;
+  const follows = (row.gradientEcho || row.echoPlanar) && before.secondEchoTimeMs === undefined;
   if (follows) {
     carry('echoTimeMs', Math.max(0.01, before.echoTimeMs + now.echoTimeMs - old.echoTimeMs), 'TE follows readout, pulses and train');
   } else if (!row.train) {
@@ -133,7 +133,7 @@ function carryTimes(key: ClassKey, baseline: Baseline, draft: Draft, scanner: Sc
     if (now.echoTimeMs > Math.max(draft.echoTimeMs, old.echoTimeMs) && raised > draft.echoTimeMs)
       carry('echoTimeMs', raised, 'the shortest TE passes it');
   }
-  const lineByLine = row.gradientEcho && !classRow(key).echoPlanar && key !== 'inversion-prepared-gradient-echo/3D';
+  const lineByLine = row.gradientEcho && !row.echoPlanar && key !== 'inversion-prepared-gradient-echo/3D';
   if (lineByLine)
     carry(
       'repetitionTimeMs',
@@ -163,5 +163,5 @@ function carryRounds(key: ClassKey, baseline: Baseline, draft: Draft, scanner: S
   const fits = capacity(key, p, slot);
   if (fits === null || fits === 0) return;
   const needed = guardedCeil(p.sliceCount / fits);
-  if (needed > draft.rounds) carry('rounds', roundHalfUp(needed), 'the slices no longer fit in one TR');
+  if (needed > draft.rounds) carry('rounds', needed, 'the slices no longer fit in one TR');
 }

@@ -4,8 +4,7 @@ import { readQuantity } from '../formulas/read-quantity.js';
 import { usualBands } from '../search/bands.js';
 import { type BudgetProblem, planBudget } from '../search/budget.js';
 import { cleanText } from '../study/clean-text.js';
-import { nearestWord } from '../study/nearest-word.js';
-import { type Attempt, refuse, wrongUse } from './attempt.js';
+import { type Attempt, wrongUse } from './attempt.js';
 import { budgetJson, budgetPage } from './budget-page.js';
 import { chooseScanner } from './choose-scanner.js';
 import type { CommandIo } from './command-io.js';
@@ -15,6 +14,7 @@ import { type ExitCode, exitCodes } from './exit-codes.js';
 import { loadJudgedPreset } from './load-judged-preset.js';
 import type { LoadedPreset } from './load-preset.js';
 import { pageOf } from './page.js';
+import { seriesNamed } from './series-named.js';
 import { readAboveZero } from './ways-request.js';
 
 /** Overhead of a planned series when none is given, s (common practice, no source). */
@@ -59,17 +59,9 @@ function readBudget({ study, rules }: LoadedPreset, scanner: Scanner, request: C
       'Write --overhead 20.',
     );
   }
-  const ids = study.series.map(({ id }) => id);
   for (const done of request.values('done')) {
-    if (ids.includes(done)) continue;
-    const near = nearestWord(done, ids);
-    const message = `There is no series "${cleanText(done, 60)}" in preset ${study.id}.`;
-    return refuse(exitCodes.noInput, {
-      code: 'series-not-there',
-      path: done,
-      message,
-      hint: near === null ? `Its series: ${ids.join(', ')}.` : `Did you mean ${near}?`,
-    });
+    const series = seriesNamed(study, done);
+    if (!series.ok) return series;
   }
   return {
     ok: true,

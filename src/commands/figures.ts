@@ -4,12 +4,11 @@ import { type ParameterKey, parameterKeys, parameterRow } from '../calc/paramete
 import { plainScanner } from '../calc/scanner.js';
 import { classOf, type GivenParameters } from '../calc/series.js';
 import { presetBaseline, type SeriesResult, seriesResult } from '../session/series-result.js';
-import { cleanText } from '../study/clean-text.js';
 import { nearestWord } from '../study/nearest-word.js';
 import { runningOrder } from '../study/running-order.js';
 import { readSetValues } from '../study/set-values.js';
 import type { Study, StudySeries } from '../study/study.js';
-import { type Attempt, refuse, wrongUse } from './attempt.js';
+import { type Attempt, wrongUse } from './attempt.js';
 import { type ChosenScanner, chooseScanner, scannerLine } from './choose-scanner.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
@@ -20,6 +19,7 @@ import { loadJudgedPreset } from './load-judged-preset.js';
 import type { LoadedPreset } from './load-preset.js';
 import { pageOf } from './page.js';
 import { readBody, readField, readReadings } from './read-named-numbers.js';
+import { seriesNamed } from './series-named.js';
 import { seriesPage } from './series-page.js';
 import { studyPage } from './study-page.js';
 
@@ -98,12 +98,8 @@ function pickSeries(study: Study, seriesId: string | undefined, request: Command
     }
     return { ok: true, value: request.has('json') ? study.series : runningOrder(study.series) };
   }
-  const found = study.series.find(({ id }) => id === seriesId);
-  if (found !== undefined) return { ok: true, value: [found] };
-  const near = nearestWord(seriesId, ids);
-  const message = `There is no series "${cleanText(seriesId, 60)}" in preset ${study.id}.`;
-  const hint = near === null ? `Its series: ${ids.join(', ')}.` : `Did you mean ${near}?`;
-  return refuse(exitCodes.noInput, { code: 'series-not-there', path: seriesId, message, hint });
+  const found = seriesNamed(study, seriesId);
+  return found.ok ? { ok: true, value: [found.value] } : found;
 }
 
 /** Refuses a set value that this class has no use for: it would change nothing. A split goes on to the model, which says why it cannot be. */

@@ -8,15 +8,16 @@ import { type Bands, usualBands } from '../search/bands.js';
 import type { Limits } from '../search/limits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import { presetBaseline } from '../session/series-result.js';
-import { cleanText, shownValue } from '../study/clean-text.js';
+import { shownValue } from '../study/clean-text.js';
 import { nearestWord } from '../study/nearest-word.js';
 import { readSetValues } from '../study/set-values.js';
 import type { StudySeries } from '../study/study.js';
-import { type Attempt, refuse, wrongUse } from './attempt.js';
+import { type Attempt, wrongUse } from './attempt.js';
 import type { CommandRequest } from './command-request.js';
 import { exitCodes } from './exit-codes.js';
 import type { LoadedPreset } from './load-preset.js';
 import { readBody, readReadings } from './read-named-numbers.js';
+import { seriesNamed } from './series-named.js';
 
 /** Options that limit a search: unit, and the largest number that is still no slip of the keyboard. */
 const limitOptions = [
@@ -35,22 +36,6 @@ export function readAboveZero(option: string, text: string, unit: string, max: n
   if (read.value <= 0 || read.value > max)
     return wrongUse(option, `${option} takes ${range}; ${shownValue(text)} was given.`, 'Check the number.');
   return { ok: true, value: read.value };
-}
-
-/** Finds a series of a preset by its id. */
-function seriesNamed(preset: LoadedPreset, wanted: string): Attempt<StudySeries> {
-  const { study } = preset;
-  const found = study.series.find(({ id }) => id === wanted);
-  if (found !== undefined) return { ok: true, value: found };
-  const ids = study.series.map(({ id }) => id);
-  const near = nearestWord(wanted, ids);
-  const message = `There is no series "${cleanText(wanted, 60)}" in preset ${study.id}.`;
-  return refuse(exitCodes.noInput, {
-    code: 'series-not-there',
-    path: wanted,
-    message,
-    hint: near === null ? `Its series: ${ids.join(', ')}.` : `Did you mean ${near}?`,
-  });
 }
 
 function readLimits(request: CommandRequest): Attempt<Limits> {
@@ -130,7 +115,7 @@ function readOpened(texts: readonly string[], series: StudySeries): Attempt<Para
 /** Reads everything that `holdfast ways` is asked with. */
 export function readWaysRequest(preset: LoadedPreset, scanner: Scanner, request: CommandRequest): Attempt<SearchProblem> {
   const { study, rules } = preset;
-  const series = seriesNamed(preset, request.arguments[1] ?? '');
+  const series = seriesNamed(preset.study, request.arguments[1] ?? '');
   if (!series.ok) return series;
   const limits = readLimits(request);
   if (!limits.ok) return limits;

@@ -1,6 +1,6 @@
-import { atMost, below, same } from '../calc/rounding.js';
 import type { ValueOfName } from './evaluate-formula.js';
-import type { Comparison, Formula, NumberTree } from './formula.js';
+import type { Formula, NumberTree } from './formula.js';
+import { compareNumbers, joinNumbers } from './operators.js';
 
 /** A number, or NaN where a name has no value or the result is none. */
 function number(tree: NumberTree, valueNamed: ValueOfName): number {
@@ -14,7 +14,7 @@ function number(tree: NumberTree, valueNamed: ValueOfName): number {
     case 'negate':
       return -number(tree.of, valueNamed);
     case 'arithmetic':
-      return finite(combined(tree.operator, number(tree.left, valueNamed), number(tree.right, valueNamed)));
+      return finite(joinNumbers(tree.operator, number(tree.left, valueNamed), number(tree.right, valueNamed)));
     case 'call':
       return finite(called(tree, valueNamed));
   }
@@ -22,22 +22,6 @@ function number(tree: NumberTree, valueNamed: ValueOfName): number {
 
 function finite(value: number): number {
   return Number.isFinite(value) ? value : Number.NaN;
-}
-
-function combined(operator: '+' | '-' | '*' | '/' | '^', a: number, b: number): number {
-  switch (operator) {
-    case '+':
-      return a + b;
-    case '-':
-      return a - b;
-    case '*':
-      return a * b;
-    case '/':
-      return a / b;
-    case '^':
-      // JavaScript gives 1 for NaN ^ 0: what has no value stays without one.
-      return Number.isNaN(a) ? Number.NaN : a ** b;
-  }
 }
 
 function called({ name, of }: NumberTree & { kind: 'call' }, valueNamed: ValueOfName): number {
@@ -49,23 +33,6 @@ function called({ name, of }: NumberTree & { kind: 'call' }, valueNamed: ValueOf
     result = name === 'min' ? Math.min(result, next) : Math.max(result, next);
   }
   return result;
-}
-
-function compared(operator: Comparison, a: number, b: number): boolean {
-  switch (operator) {
-    case '<':
-      return below(a, b);
-    case '<=':
-      return atMost(a, b);
-    case '>':
-      return below(b, a);
-    case '>=':
-      return atMost(b, a);
-    case '==':
-      return same(a, b);
-    case '!=':
-      return !same(a, b);
-  }
 }
 
 /** True, false, or null where values are missing that could decide. */
@@ -82,7 +49,7 @@ function truth(tree: Formula, valueNamed: ValueOfName): boolean | null {
     case 'compare': {
       const a = number(tree.left, valueNamed);
       const b = number(tree.right, valueNamed);
-      return Number.isNaN(a) || Number.isNaN(b) ? null : compared(tree.operator, a, b);
+      return Number.isNaN(a) || Number.isNaN(b) ? null : compareNumbers(tree.operator, a, b);
     }
     case 'and':
     case 'or': {

@@ -1,5 +1,5 @@
-import { atLeast, atMost, below, same } from '../calc/rounding.js';
-import type { Comparison, Formula, NumberTree } from './formula.js';
+import type { Formula, NumberTree } from './formula.js';
+import { compareNumbers, joinNumbers } from './operators.js';
 import { printNumber } from './print-formula.js';
 
 /** What a rule says of one series. `null`: not checked. */
@@ -11,31 +11,9 @@ export interface FormulaVerdict {
 
 export type ValueOfName = (name: string) => number | boolean | null | undefined;
 
-const compare: Readonly<Record<Comparison, (a: number, b: number) => boolean>> = {
-  '<': below,
-  '<=': atMost,
-  '>': (a, b) => below(b, a),
-  '>=': atLeast,
-  '==': same,
-  '!=': (a, b) => !same(a, b),
-};
-
 function computed(tree: NumberTree & { kind: 'arithmetic' | 'call' }, values: readonly number[]): number {
   const [a, b] = values as readonly [number, number];
-  if (tree.kind === 'arithmetic') {
-    switch (tree.operator) {
-      case '+':
-        return a + b;
-      case '-':
-        return a - b;
-      case '*':
-        return a * b;
-      case '/':
-        return a / b;
-      case '^':
-        return a ** b;
-    }
-  }
+  if (tree.kind === 'arithmetic') return joinNumbers(tree.operator, a, b);
   switch (tree.name) {
     case 'min':
       return Math.min(...values);
@@ -84,7 +62,7 @@ function truthOf(tree: Formula, valueNamed: ValueOfName, missing: Set<string>): 
     case 'compare': {
       const left = numberOf(tree.left, valueNamed, missing);
       const right = numberOf(tree.right, valueNamed, missing);
-      return left === null || right === null ? null : compare[tree.operator](left, right);
+      return left === null || right === null ? null : compareNumbers(tree.operator, left, right);
     }
     case 'and':
     case 'or': {

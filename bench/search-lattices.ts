@@ -8,6 +8,7 @@ import { latticeOf, latticeSize } from '../src/search/lattice.js';
 import type { Limits } from '../src/search/limits.js';
 import type { SearchProblem } from '../src/search/problem-to-solve.js';
 import type { Range, StudySeries } from '../src/study/study.js';
+import { liverArterialPhase, lumbarTrain } from '../tests/scenarios/invented-parameters.js';
 
 /** An invented series with everything opened that a physicist might open, and the steps each parameter takes, finest first. */
 interface Case {
@@ -28,23 +29,7 @@ const cases: readonly Case[] = [
     fieldT: 3,
     target: 'liver',
     comparison: 'spleen',
-    given: {
-      repetitionTimeMs: 3.55,
-      echoTimeMs: 1.2,
-      flipAngleDeg: 10,
-      pixelBandwidthHz: 635,
-      fieldOfViewMm: 380,
-      phaseFieldOfViewPercent: 80,
-      matrixRead: 320,
-      matrixPhase: 200,
-      sliceCount: 72,
-      sliceThicknessMm: 3,
-      sliceOversamplingPercent: 11,
-      partialFourierSlice: 0.75,
-      parallelFactorPhase: 2,
-      fatSuppression: 'spectral',
-      pacing: { kind: 'breath-hold' },
-    },
+    given: liverArterialPhase,
     limits: { holdS: 11 },
     steps: {
       phaseFieldOfViewPercent: [70, 100, 5],
@@ -69,23 +54,7 @@ const cases: readonly Case[] = [
     fieldT: 1.5,
     target: 'CSF',
     comparison: 'intervertebral disc (nucleus)',
-    given: {
-      repetitionTimeMs: 3500,
-      echoTimeMs: 100,
-      echoTrainLength: 20,
-      echoSpacingMs: 10,
-      sliceCount: 15,
-      sliceThicknessMm: 4,
-      sliceGapMm: 0.4,
-      fieldOfViewMm: 280,
-      matrixRead: 320,
-      matrixPhase: 320,
-      averages: 2,
-      dummyShots: 1,
-      pixelBandwidthHz: 200,
-      refocusingAngleDeg: 180,
-      saturationBands: 1,
-    },
+    given: { ...lumbarTrain, saturationBands: 1 },
     limits: { timeS: 110, rfRatio: 0.6 },
     steps: {
       phaseOversamplingPercent: [0, 50, 10],

@@ -1,32 +1,13 @@
-import { existsSync, mkdirSync, writeFileSync } from 'node:fs';
+import { existsSync } from 'node:fs';
 import { join } from 'node:path';
-import { afterEach, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { keyBytes } from './harness/key-bytes.js';
-import { implantPreset } from './implant-preset.js';
-import { type Interface, newHome, openInterface } from './interface-driver.js';
+import { newHome } from './interface-driver.js';
+import { interfacesClosedAfterEach, liverWithElevenSeconds, lumbarUnderImplantCap } from './moment-beginnings.js';
 
-const opened: Interface[] = [];
-
-function open(home: string, args: readonly string[] = []): Interface {
-  const screen = openInterface(home, args);
-  opened.push(screen);
-  return screen;
-}
-
-afterEach(async () => {
-  for (const screen of opened.splice(0)) await screen.program.close();
-});
+const open = interfacesClosedAfterEach();
 
 const times = (count: number, key: string) => key.repeat(count);
-
-/** Opens the liver at 3 T for a patient who holds 11 s, on the dynamic series. */
-async function liverWithElevenSeconds(screen: Interface): Promise<void> {
-  await screen.openPreset('3 liver');
-  await screen.keys('p', 'This patient');
-  await screen.keys(`11${keyBytes.enter}`, 'OVER by 6.0 s');
-  await screen.escape('Running order');
-  await screen.keys(keyBytes.enter, 'Series t1-3d');
-}
 
 describe('moments at the console', () => {
   it('an arterial phase of 17.0 s is made to fit 11 s, each price read before it is paid, and recorded', async () => {
@@ -70,16 +51,7 @@ describe('moments at the console', () => {
   });
 
   it('a cap on B1+rms is judged from the number the scanner displays: 130 degrees OVER, 125 TOO CLOSE, 120 FITS', async () => {
-    const home = newHome();
-    const presets = join(home, 'presets');
-    mkdirSync(presets);
-    writeFileSync(join(presets, 'implant-lumbar.json'), JSON.stringify(implantPreset));
-    const screen = open(home, ['--presets', presets]);
-    await screen.openPreset('1.5 implant');
-    await screen.keys('p', 'This patient');
-    await screen.goTo('B1+rms at most');
-    await screen.keys(`2.0${keyBytes.enter}`, 'B1+rms at most 2.0');
-    await screen.escape('Running order');
+    const screen = await lumbarUnderImplantCap(open);
     await screen.keys(keyBytes.enter, 'Series t2-sag');
     expect(screen.verdict()).toContain('NOT JUDGED: B1+rms cap 2 uT');
     await screen.keys('d', 'Scanner readings');

@@ -1,30 +1,14 @@
-import { mkdirSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
-import { afterEach, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { keyBytes } from './harness/key-bytes.js';
-import { implantPreset } from './implant-preset.js';
-import { type Interface, newHome, openInterface } from './interface-driver.js';
+import { newHome } from './interface-driver.js';
+import { interfacesClosedAfterEach, liverWithElevenSeconds, lumbarUnderImplantCap } from './moment-beginnings.js';
 
-const opened: Interface[] = [];
-
-function open(home: string, args: readonly string[] = []): Interface {
-  const screen = openInterface(home, args);
-  opened.push(screen);
-  return screen;
-}
-
-afterEach(async () => {
-  for (const screen of opened.splice(0)) await screen.program.close();
-});
+const open = interfacesClosedAfterEach();
 
 describe('moments at the console, by the ways to fit', () => {
   it('an arterial phase of 17.0 s for a patient of 11 s: the search ran by itself, one key takes a way, one takes it back', async () => {
     const screen = open(newHome());
-    await screen.openPreset('3 liver');
-    await screen.keys('p', 'This patient');
-    await screen.keys(`11${keyBytes.enter}`, 'OVER by 6.0 s');
-    await screen.escape('Running order');
-    await screen.keys(keyBytes.enter, /f: \d+ ways to fit/);
+    await liverWithElevenSeconds(screen, /f: \d+ ways to fit/);
     await screen.keys('f', 'Proven: none is better');
     const text = screen.program.text();
     expect(screen.verdict()).toContain('OVER by 6.0 s: breath-hold 17.0 s, this patient 11 s');
@@ -50,16 +34,7 @@ describe('moments at the console, by the ways to fit', () => {
   });
 
   it('a cap on B1+rms: not searched for without its reading; with it one key takes a way that fits', async () => {
-    const home = newHome();
-    const presets = join(home, 'presets');
-    mkdirSync(presets);
-    writeFileSync(join(presets, 'implant-lumbar.json'), JSON.stringify(implantPreset));
-    const screen = open(home, ['--presets', presets]);
-    await screen.openPreset('1.5 implant');
-    await screen.keys('p', 'This patient');
-    await screen.goTo('B1+rms at most');
-    await screen.keys(`2.0${keyBytes.enter}`, 'B1+rms at most 2.0');
-    await screen.escape('Running order');
+    const screen = await lumbarUnderImplantCap(open);
     await screen.keys('f', "is not searched for: type the scanner's number (d)");
     await screen.keys('d', 'Scanner readings');
     await screen.keys(`2.8${keyBytes.enter}`, 'B1+rms 2.8');

@@ -6,6 +6,7 @@ import { usualBands } from '../../src/search/bands.js';
 import type { Limits } from '../../src/search/limits.js';
 import type { SearchProblem } from '../../src/search/problem-to-solve.js';
 import type { StudySeries } from '../../src/study/study.js';
+import { liverArterialPhase } from '../scenarios/invented-parameters.js';
 
 /** An invented series. */
 export function inventedSeries(key: ClassKey, given: GivenParameters, more: Partial<StudySeries>): StudySeries {
@@ -51,32 +52,12 @@ export function problemOf(series: StudySeries, fieldT: number, limits: Limits, m
 }
 
 /** 3 T liver, arterial phase of 17 s: 80 x 60 lines, 1.2 x 1.9 x 3 mm; slices of at most 5 mm must be kept. */
-const liverSeries = inventedSeries(
-  'spoiled-gradient-echo/3D',
-  {
-    repetitionTimeMs: 3.55,
-    echoTimeMs: 1.2,
-    flipAngleDeg: 10,
-    pixelBandwidthHz: 635,
-    fieldOfViewMm: 380,
-    phaseFieldOfViewPercent: 80,
-    matrixRead: 320,
-    matrixPhase: 200,
-    sliceCount: 72,
-    sliceThicknessMm: 3,
-    sliceOversamplingPercent: 11,
-    partialFourierSlice: 0.75,
-    parallelFactorPhase: 2,
-    fatSuppression: 'spectral',
-    pacing: { kind: 'breath-hold' },
-  },
-  {
-    purpose: 'dynamic',
-    mustKeep: [
-      { figure: 'voxelSliceMm', atMost: 5, source: 'LI-RADS v2018 technical table as given by Santillan, Hepatoma Res 2020;6:63, table 3' },
-    ],
-  },
-);
+const liverSeries = inventedSeries('spoiled-gradient-echo/3D', liverArterialPhase, {
+  purpose: 'dynamic',
+  mustKeep: [
+    { figure: 'voxelSliceMm', atMost: 5, source: 'LI-RADS v2018 technical table as given by Santillan, Hepatoma Res 2020;6:63, table 3' },
+  ],
+});
 
 export function liverProblem(limits: Limits, more: Partial<SearchProblem> = {}): SearchProblem {
   return problemOf(liverSeries, 3, limits, more);

@@ -4,6 +4,7 @@ import type { GivenParameters } from '../../src/calc/series.js';
 import { judgePoint } from '../../src/search/judge.js';
 import { search } from '../../src/search/search.js';
 import { type SearchSetting, settingOf } from '../../src/search/setting.js';
+import { lumbarTrain } from '../scenarios/invented-parameters.js';
 import { inventedSeries, problemOf } from './problems.js';
 
 function pointOf({ variables }: SearchSetting, given: GivenParameters): number[] | null {
@@ -14,26 +15,11 @@ function pointOf({ variables }: SearchSetting, given: GivenParameters): number[]
 }
 
 /** Lumbar T2 at 1.5 T: 15 slices, train 20, 180 degrees. The implant allows 2.0 uT, the scanner shows 2.8 for the preset. */
-const lumbar = inventedSeries(
-  'fast-spin-echo/2D',
-  {
-    repetitionTimeMs: 3500,
-    echoTimeMs: 100,
-    echoTrainLength: 20,
-    echoSpacingMs: 10,
-    sliceCount: 15,
-    sliceThicknessMm: 4,
-    sliceGapMm: 0.4,
-    fieldOfViewMm: 280,
-    matrixRead: 320,
-    matrixPhase: 320,
-    averages: 2,
-    dummyShots: 1,
-    pixelBandwidthHz: 200,
-    refocusingAngleDeg: 180,
-  },
-  { plane: 'sagittal', target: 'intervertebral disc (nucleus)', comparison: 'spinal cord (white matter)' },
-);
+const lumbar = inventedSeries('fast-spin-echo/2D', lumbarTrain, {
+  plane: 'sagittal',
+  target: 'intervertebral disc (nucleus)',
+  comparison: 'spinal cord (white matter)',
+});
 
 describe('lumbar T2 at 1.5 T, B1+rms at most 2.0 uT, 2.8 displayed', () => {
   const problem = problemOf(lumbar, 1.5, { b1rmsUt: 2 }, { readings: { b1rmsUt: 2.8 } });

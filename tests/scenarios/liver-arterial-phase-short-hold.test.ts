@@ -2,30 +2,11 @@ import { describe, expect, it } from 'vitest';
 import type { GivenParameters } from '../../src/calc/series.js';
 import type { VerdictWord } from '../../src/calc/verdict.js';
 import { edit, seriesOf } from '../calc/series-of.js';
+import { liverArterialPhase } from './invented-parameters.js';
 import { expectNoClearance, expectRatio, expectTime, wordFor } from './judge.js';
 
 /** An invented preset: 17 s at 3 T, 1.2 x 1.9 x 3 mm, 80 x 60 lines. The patient holds 11 s. */
-const preset = seriesOf(
-  'spoiled-gradient-echo/3D',
-  {
-    repetitionTimeMs: 3.55,
-    echoTimeMs: 1.2,
-    flipAngleDeg: 10,
-    pixelBandwidthHz: 635,
-    fieldOfViewMm: 380,
-    phaseFieldOfViewPercent: 80,
-    matrixRead: 320,
-    matrixPhase: 200,
-    sliceCount: 72,
-    sliceThicknessMm: 3,
-    sliceOversamplingPercent: 11,
-    partialFourierSlice: 0.75,
-    parallelFactorPhase: 2,
-    fatSuppression: 'spectral',
-    pacing: { kind: 'breath-hold' },
-  },
-  { purpose: 'dynamic' },
-);
+const preset = seriesOf('spoiled-gradient-echo/3D', liverArterialPhase, { purpose: 'dynamic' });
 const holdS = 11;
 const tried = (set: GivenParameters = {}) => edit(preset, set, { fieldT: 3 });
 

@@ -2,28 +2,15 @@ import { describe, expect, it } from 'vitest';
 import type { GivenParameters } from '../../src/calc/series.js';
 import type { VerdictWord } from '../../src/calc/verdict.js';
 import { edit, seriesOf } from '../calc/series-of.js';
+import { lumbarTrain } from './invented-parameters.js';
 import { expectNoClearance, expectRatio, expectRf, expectTime, wordFor } from './judge.js';
 
 /** An invented preset: sagittal lumbar T2 at 1.5 T; the scanner shows 2.8 uT, the implant's label says 2.0. */
-const preset = seriesOf(
-  'fast-spin-echo/2D',
-  {
-    repetitionTimeMs: 3500,
-    echoTimeMs: 100,
-    echoTrainLength: 20,
-    echoSpacingMs: 10,
-    sliceCount: 15,
-    sliceThicknessMm: 4,
-    sliceGapMm: 0.4,
-    fieldOfViewMm: 280,
-    matrixRead: 320,
-    matrixPhase: 320,
-    averages: 2,
-    dummyShots: 1,
-    pixelBandwidthHz: 200,
-  },
-  { plane: 'sagittal', target: 'CSF', comparison: 'intervertebral disc (nucleus)' },
-);
+const preset = seriesOf('fast-spin-echo/2D', lumbarTrain, {
+  plane: 'sagittal',
+  target: 'CSF',
+  comparison: 'intervertebral disc (nucleus)',
+});
 const cap = 2;
 const readings = { b1rmsUt: 2.8 };
 const tried = (set: GivenParameters = {}, target = 'CSF') => edit({ ...preset, target }, set, { readings });

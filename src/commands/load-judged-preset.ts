@@ -1,6 +1,5 @@
 import { resolve } from 'node:path';
 import { loadParser } from '../formulas/load-parser.js';
-import { foldersOf } from '../store/folders.js';
 import { readSiteRulesFile } from '../store/site-rules-file.js';
 import { readRules } from '../study/read-rules.js';
 import { withSiteRules } from '../study/site-rules.js';
@@ -8,7 +7,8 @@ import type { Study } from '../study/study.js';
 import type { Attempt } from './attempt.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
-import { foldersOfPresets, type LoadedPreset, loadPreset, refusedByStore } from './load-preset.js';
+import { commandSettings } from './command-settings.js';
+import { type LoadedPreset, loadPreset, refusedByStore } from './load-preset.js';
 
 /** A preset that is judged by the rules of its site too. */
 export interface JudgedPreset extends LoadedPreset {
@@ -18,12 +18,14 @@ export interface JudgedPreset extends LoadedPreset {
 
 /** Finds a preset and adds what the site keeps in all its presets (`HOLDFAST_RULES`, or `rules.json` beside the settings) to its must-keeps. */
 export async function loadJudgedPreset(wanted: string, request: CommandRequest, io: CommandIo): Promise<Attempt<JudgedPreset>> {
-  const loaded = await loadPreset(wanted, await foldersOfPresets(request, io), io);
+  const settings = await commandSettings(request, io);
+  if (!settings.ok) return settings;
+  const { presetFolders, folders } = settings.value;
+  const loaded = await loadPreset(wanted, presetFolders, io);
   if (!loaded.ok) return loaded;
-  const { settingsFolder } = foldersOf({ environment: io.environment, homeFolder: io.homeFolder, workingFolder: io.workingFolder });
   const named = io.environment.HOLDFAST_RULES;
   const path = named === undefined || named === '' ? null : resolve(io.workingFolder, named);
-  const site = await readSiteRulesFile(io.disk, path, settingsFolder, loadParser);
+  const site = await readSiteRulesFile(io.disk, path, folders.settingsFolder, loadParser);
   if (!site.ok) return refusedByStore(site.problems);
   const filed = loaded.value.study;
   const study = withSiteRules(filed, site.value);

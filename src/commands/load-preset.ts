@@ -1,6 +1,5 @@
 import type { ParseExpression } from '../formulas/parsed-node.js';
-import { foldersOf } from '../store/folders.js';
-import { findPreset, type PresetFolder, presetFolders, readPresetFile, type StoredPreset } from '../store/preset-folder.js';
+import { findPreset, type PresetFolder, readPresetFile, type StoredPreset } from '../store/preset-folder.js';
 import type { StoreProblem } from '../store/problem-of-error.js';
 import { cleanText } from '../study/clean-text.js';
 import type { Rules } from '../study/must-keep.js';
@@ -8,23 +7,11 @@ import { readRules } from '../study/read-rules.js';
 import type { Study } from '../study/study.js';
 import type { Attempt, Refusal } from './attempt.js';
 import type { CommandIo } from './command-io.js';
-import type { CommandRequest } from './command-request.js';
 import { exitCodes } from './exit-codes.js';
 
 /** A preset with its rules read. */
 export interface LoadedPreset extends StoredPreset {
   readonly rules: Rules;
-}
-
-/** The folders that presets are looked for in, in their order. */
-export async function foldersOfPresets(request: CommandRequest, io: CommandIo): Promise<PresetFolder[]> {
-  const { sitePresetsFolder, ownPresetsFolder } = foldersOf({
-    environment: io.environment,
-    homeFolder: io.homeFolder,
-    workingFolder: io.workingFolder,
-    flags: { presets: request.value('presets') },
-  });
-  return presetFolders(sitePresetsFolder, ownPresetsFolder, await io.shippedPresets());
 }
 
 /** Finds a preset by id or path. Its rules are parsed and checked too; the parser is loaded only where there are rules. */

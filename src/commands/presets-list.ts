@@ -2,9 +2,10 @@ import { listPresets, type StoredPreset } from '../store/preset-folder.js';
 import { cleanText } from '../study/clean-text.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
+import { commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
-import { foldersOfPresets, missingFolder, refusedByStore } from './load-preset.js';
+import { missingFolder, refusedByStore } from './load-preset.js';
 import { pageOf } from './page.js';
 import { releaseWords } from './presets-diff-page.js';
 import { textTable } from './text-table.js';
@@ -13,7 +14,9 @@ const originWords: Readonly<Record<StoredPreset['origin'], string>> = { site: 's
 
 /** `holdfast presets list`: what can be named. Files that are wrong are told on standard error and do not stop the others. */
 export async function runPresetsList(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
-  const folders = await foldersOfPresets(request, io);
+  const settings = await commandSettings(request, io);
+  if (!settings.ok) return complain(settings, io);
+  const folders = settings.value.presetFolders;
   const listing = await listPresets(io.disk, folders);
   const { problems } = listing;
   const presets = request.has('revisions') ? listing.presets : currentRevisions(listing.presets);

@@ -8,9 +8,10 @@ import { runningOrder } from '../study/running-order.js';
 import type { MustKeep, Study, StudySeries } from '../study/study.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
+import { commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
-import { foldersOfPresets, loadPreset } from './load-preset.js';
+import { loadPreset } from './load-preset.js';
 import { type Page, pageOf } from './page.js';
 import { releaseWords } from './presets-diff-page.js';
 import { textTable } from './text-table.js';
@@ -18,7 +19,9 @@ import { wrapText } from './wrap-text.js';
 
 /** `holdfast presets show`: one preset, its series in running order with parameters and must-keeps. */
 export async function runPresetsShow(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
-  const loaded = await loadPreset(request.arguments[0] ?? '', await foldersOfPresets(request, io), io);
+  const settings = await commandSettings(request, io);
+  if (!settings.ok) return complain(settings, io);
+  const loaded = await loadPreset(request.arguments[0] ?? '', settings.value.presetFolders, io);
   if (!loaded.ok) return complain(loaded, io);
   const page = pageOf(request, io);
   io.write(page.plain(presetPage(loaded.value.study, page)));

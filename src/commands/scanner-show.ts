@@ -7,9 +7,10 @@ import type { Study } from '../study/study.js';
 import { foldersOfScanners, readCoil } from './choose-scanner.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
+import { commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
-import { foldersOfPresets, loadPreset, refusedByStore } from './load-preset.js';
+import { loadPreset, refusedByStore } from './load-preset.js';
 import { type Page, pageOf } from './page.js';
 import { type Both, type SeriesChanges, scannerChanges } from './scanner-changes.js';
 import { textTable } from './text-table.js';
@@ -25,7 +26,9 @@ export async function runScannerShow(request: CommandRequest, io: CommandIo): Pr
   const wanted = request.value('preset');
   let study: Study | null = null;
   if (wanted !== undefined) {
-    const loaded = await loadPreset(wanted, await foldersOfPresets(request, io), io);
+    const settings = await commandSettings(request, io);
+    if (!settings.ok) return complain(settings, io);
+    const loaded = await loadPreset(wanted, settings.value.presetFolders, io);
     if (!loaded.ok) return complain(loaded, io);
     study = loaded.value.study;
   }

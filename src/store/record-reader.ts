@@ -1,6 +1,7 @@
 import * as zlib from 'node:zlib';
 import type { Problem } from '../calc/problem.js';
 import { cleanText } from '../study/clean-text.js';
+import { KnownValues } from '../study/known-values.js';
 import type { Checksum } from '../study/line-sum.js';
 import type { SessionRecord } from '../study/record.js';
 import { readRecordLine } from '../study/record-line-reader.js';
@@ -32,6 +33,7 @@ export interface ReadRecordsOptions {
 export async function* readRecords(disk: Disk, paths: readonly string[], options: ReadRecordsOptions = {}): AsyncGenerator<RecordEntry> {
   const sizes = options.onProgress === undefined ? [] : await Promise.all(paths.map((path) => sizeOf(disk, path)));
   const totalBytes = sizes.reduce((sum, size) => sum + size, 0);
+  const known = new KnownValues();
   let before = 0;
   for (const [index, path] of paths.entries()) {
     const startedAt = before;
@@ -45,7 +47,7 @@ export async function* readRecords(disk: Disk, paths: readonly string[], options
         for await (const { number, bytes } of linesOfFile(file, maximumRecordBytes, (read) =>
           options.onProgress?.(startedAt + read, totalBytes),
         )) {
-          const entry = entryOf(path, number, bytes);
+          const entry = entryOf(path, number, bytes, known);
           if (entry !== null) yield entry;
         }
       }
@@ -66,7 +68,7 @@ async function notReadable(disk: Disk, path: string): Promise<StoreProblem | nul
   return storeProblem('not-a-file', 74, path, `the record file ${cleanText(path)} is no ordinary file.`, 'Name a file on a disk.');
 }
 
-function entryOf(file: string, line: number, bytes: Buffer | null): RecordEntry | null {
+function entryOf(file: string, line: number, bytes: Buffer | null, known: KnownValues): RecordEntry | null {
   if (bytes === null)
     return damagedEntry(file, line, {
       code: 'record-too-long',
@@ -76,7 +78,7 @@ function entryOf(file: string, line: number, bytes: Buffer | null): RecordEntry 
     });
   const text = bytes.toString('utf8');
   if (text.trim() === '') return null;
-  const outcome = readRecordLine(text, bytes, checksum);
+  const outcome = readRecordLine(text, bytes, checksum, known);
   if (outcome.ok) return { kind: 'record', file, line, record: outcome.value };
   return damagedEntry(file, line, outcome.problems[0]!);
 }

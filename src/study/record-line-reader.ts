@@ -1,4 +1,5 @@
 import type { Outcome, Problem } from '../calc/problem.js';
+import { KnownValues } from './known-values.js';
 import { type Checksum, sumVerdict } from './line-sum.js';
 import { recordVersion, type SessionRecord } from './record.js';
 import { faultOfRecord } from './record-shape.js';
@@ -9,12 +10,13 @@ import { faultOfRecord } from './record-shape.js';
  *
  * @param bytes The line's bytes as they stand in the file, for readers that have them at hand.
  * @param checksum A faster CRC-32 where there is one.
+ * @param known Remembers planned values from line to line, for readers of many.
  */
-export function readRecordLine(line: string, bytes?: Uint8Array, checksum?: Checksum): Outcome<SessionRecord> {
+export function readRecordLine(line: string, bytes?: Uint8Array, checksum?: Checksum, known = new KnownValues()): Outcome<SessionRecord> {
   const verdict = sumVerdict(line, bytes, checksum);
   if (verdict === 'missing') return damaged('record-cut-short', 'sum', 'the line does not end in a sum of eight hexadecimal digits');
   if (verdict === 'different') return damaged('record-sum-differs', 'sum', 'the sum does not belong to what stands before it');
-  const value = parsed(line);
+  const value = parsed(line, known);
   if (value === undefined) return damaged('record-not-json', '', 'the line is no JSON object');
   if (isLaterVersion(value)) {
     return damaged(
@@ -30,9 +32,9 @@ export function readRecordLine(line: string, bytes?: Uint8Array, checksum?: Chec
   return { ok: true, value: record };
 }
 
-function parsed(line: string): unknown {
+function parsed(line: string, known: KnownValues): unknown {
   try {
-    return JSON.parse(line);
+    return known.parse(line);
   } catch {
     return undefined;
   }

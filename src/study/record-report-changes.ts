@@ -83,6 +83,7 @@ const noKeys: readonly ParameterKey[] = [];
 
 /** Known keys whose values differ, in the order of the record. */
 function differingKeys(planned: GivenParameters, used: GivenParameters): readonly ParameterKey[] {
+  if (planned === used) return noKeys;
   const keys = Object.keys(planned);
   // Nearly always both have the same keys in the same order. A hundred thousand records ask this a million times, and lists are
   // walked several times as fast as keys are looked for.

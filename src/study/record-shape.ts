@@ -119,6 +119,18 @@ function parameterCheck(key: ParameterKey): Check {
 
 const values = withKeys({ parameters: withSomeKeys(parameterChecks), figures: numbersOrNull });
 
+/** Planned values found right before: a reader of many records meets the same objects again and again. */
+const rightPlans = new WeakSet<object>();
+
+const plannedValues: Check = (value) => {
+  if (isObject(value) && rightPlans.has(value)) return null;
+  const fault = values(value);
+  if (fault === null) rightPlans.add(value as object);
+  return fault;
+};
+
+const usedValues: Check = (value) => (isObject(value) && rightPlans.has(value) ? null : values(value));
+
 const reading = withSomeKeys({
   timeS: number,
   b1rmsUt: number,
@@ -166,8 +178,8 @@ const record = withKeys({
       outcome: wordOf(Object.keys(outcomeWords)),
       reason: text,
       quality: orNull(wordOf(Object.keys(qualityWords))),
-      planned: values,
-      used: values,
+      planned: plannedValues,
+      used: usedValues,
       crossed: listOf(withKeys({ rule: text, role: orNull(text) })),
       readings: withKeys({ before: orNull(reading), after: orNull(reading) }),
     }),

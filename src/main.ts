@@ -23,6 +23,7 @@ const io: CommandIo = {
     const known = choice !== undefined && choice in colourChoices ? (choice as keyof typeof colourChoices) : undefined;
     return emphasise(colourLevel({ choice: known, environment: process.env, isTerminal: process.stdout.isTTY === true }) > 0);
   },
+  outputIsSeen: process.stdout.isTTY === true,
   ...(process.stderr.isTTY ? { progress: (text: string) => void process.stderr.write(`\r\u001b[K${text}`) } : {}),
   disk: nodeDisk,
   homeFolder: homedir(),

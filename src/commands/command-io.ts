@@ -16,6 +16,8 @@ export interface CommandIo {
   readonly emphasis: (choice: string | undefined) => (kind: Emphasis, text: string) => string;
   /** Says how far a long work is, on one line that is written anew; absent where nobody looks. Empty text clears it. */
   readonly progress?: (text: string) => void;
+  /** Standard output goes to somebody's eyes or ears, not into a file or another program. */
+  readonly outputIsSeen?: boolean;
   /** Today as YYYY-MM-DD; the clock of this machine where it is absent. */
   readonly today?: () => string;
   readonly disk: Disk;

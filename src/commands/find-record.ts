@@ -15,12 +15,13 @@ export async function findRecord(
   wanted: string,
   named: readonly string[],
   { folders }: CommandSettings,
+  reader: boolean,
   io: CommandIo,
 ): Promise<Attempt<SessionRecord>> {
   const files = await recordFiles(named, folders.recordsFile, io);
   if (!files.ok) return files;
   const found: SessionRecord[] = [];
-  await forEachRecord(files.value, allRecords, io, (record) => {
+  await forEachRecord(files.value, allRecords, io, { reader }, (record) => {
     if (record.id.startsWith(wanted) && found.length < mostFound) found.push(record);
     return record.id !== wanted;
   });

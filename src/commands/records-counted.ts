@@ -38,7 +38,7 @@ export async function countRecords(request: CommandRequest, io: CommandIo): Prom
   const files = await recordFiles(request.arguments, settings.value.folders.recordsFile, io);
   if (!files.ok) return files;
   const counts = new RecordCounts();
-  const read = await forEachRecord(files.value, filter.value, io, (record) => counts.add(record));
+  const read = await forEachRecord(files.value, filter.value, io, { reader: request.has('reader') }, (record) => counts.add(record));
   const report = counts.report();
   const now = new Map<string, PresetNow>();
   for (const preset of report.presets) now.set(preset.preset, await presetNow(preset, settings.value, io));

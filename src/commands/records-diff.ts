@@ -15,7 +15,7 @@ export async function recordDifferenceText(
   settings: CommandSettings,
   io: CommandIo,
 ): Promise<Attempt<string>> {
-  const found = await findRecord(wanted, request.arguments, settings, io);
+  const found = await findRecord(wanted, request.arguments, settings, request.has('reader'), io);
   if (!found.ok) return found;
   const { id, day, preset, series } = found.value;
   const differences = series.map(recordedDifference);

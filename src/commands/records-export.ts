@@ -30,7 +30,7 @@ export async function runRecordsExport(request: CommandRequest, io: CommandIo): 
   const files = await recordFiles(request.arguments, settings.value.folders.recordsFile, io);
   if (!files.ok) return complain(files, io);
   if (form === 'csv') io.write(recordsCsvHead);
-  const read = await forEachRecord(files.value, filter.value, io, (record) => {
+  const read = await forEachRecord(files.value, filter.value, io, { reader: request.has('reader'), rows: true }, (record) => {
     io.write(form === 'csv' ? recordsCsvRows(record) : `${recordLine(record)}\n`);
   });
   return read.exit;

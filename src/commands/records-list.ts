@@ -24,7 +24,7 @@ export async function runRecordsList(request: CommandRequest, io: CommandIo): Pr
   let count = 0;
   if (asJson) io.write('[');
   else if (!page.reader) io.write(`${line(['record', 'day', 'preset', 'rev', 'rewritten', 'reasons'])}\n`);
-  const read = await forEachRecord(files.value, filter.value, io, (record) => {
+  const read = await forEachRecord(files.value, filter.value, io, { reader: page.reader, rows: true }, (record) => {
     const row = rowOf(record);
     if (asJson) io.write(`${count === 0 ? '' : ','}\n  ${JSON.stringify(row)}`);
     else io.write(page.plain(`${page.reader ? sentence(row) : line(cells(row))}\n`));

@@ -12,7 +12,7 @@ export async function runRecordsShow(request: CommandRequest, io: CommandIo): Pr
   const settings = await commandSettings(request, io);
   if (!settings.ok) return complain(settings, io);
   const [wanted = '', ...named] = request.arguments;
-  const found = await findRecord(wanted, named, settings.value, io);
+  const found = await findRecord(wanted, named, settings.value, request.has('reader'), io);
   if (!found.ok) return complain(found, io);
   io.write(request.has('json') ? `${JSON.stringify(found.value, null, 2)}\n` : pageOf(request, io).plain(recordPage(found.value)));
   return exitCodes.done;

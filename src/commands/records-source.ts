@@ -8,11 +8,10 @@ import type { Attempt } from './attempt.js';
 import type { CommandIo } from './command-io.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { refusedByStore } from './load-preset.js';
+import { type ReadingWords, readingProgress } from './reading-progress.js';
 
 /** Damaged lines that are named one by one; more are only counted. */
 const mostNamed = 20;
-/** Files smaller than this are read before anybody looks. */
-const progressFromBytes = 8_000_000;
 
 /** What was met while reading. */
 export interface RecordsRead {
@@ -53,17 +52,13 @@ export async function forEachRecord(
   files: readonly string[],
   filter: RecordFilter,
   io: CommandIo,
+  words: ReadingWords,
   onRecord: (record: SessionRecord) => unknown,
 ): Promise<RecordsRead> {
-  let [records, wanted, damaged, percent] = [0, 0, 0, -1];
+  let [records, wanted, damaged] = [0, 0, 0];
   let exit: ExitCode = exitCodes.done;
-  const onProgress = (readBytes: number, totalBytes: number) => {
-    const now = Math.floor((100 * readBytes) / Math.max(1, totalBytes));
-    if (totalBytes < progressFromBytes || now === percent) return;
-    percent = now;
-    io.progress?.(`reading records: ${percent} %`);
-  };
-  for await (const entry of readRecords(io.disk, files, { onProgress })) {
+  const progress = readingProgress(words, io);
+  for await (const entry of readRecords(io.disk, files, { onProgress: progress.tell })) {
     if (entry.kind === 'record') {
       records += 1;
       if (!isWanted(entry.record, filter)) continue;
@@ -77,7 +72,7 @@ export async function forEachRecord(
       io.complain(`holdfast: ${entry.problem.message} ${entry.problem.hint}\n`);
     }
   }
-  io.progress?.('');
+  progress.done();
   if (damaged > mostNamed) io.complain(`holdfast: and ${damaged - mostNamed} more damaged lines, skipped as well.\n`);
   return { records, wanted, damaged, files, exit };
 }

@@ -130,6 +130,33 @@ describe('records report', () => {
     expect(exit).toBe(0);
     expect(said.length).toBeGreaterThan(10);
     expect(said.slice(-2)).toEqual(['reading records: 100 %', '']);
+    expect(new Set(said).size).toBe(said.length);
+  });
+
+  it('tells a screen reader each quarter once, a line each, and writes nothing anew', async () => {
+    const folder = temporaryFolder();
+    writeFileSync(join(folder, 'a.jsonl'), text([...inventedRecords(600)]));
+    const said: string[] = [];
+    const { err } = await runCommand(['records', 'report', join(folder, 'a.jsonl'), '--reader'], {
+      homeFolder: folder,
+      progress: (words) => said.push(words),
+    });
+    expect(said).toEqual([]);
+    expect(err.trim().split('\n')).toEqual([0, 25, 50, 75, 100].map((share) => `reading records: ${share} %`));
+  });
+
+  it('says nothing between rows that are seen as they are read; where they go into a file it does', async () => {
+    const folder = temporaryFolder();
+    writeFileSync(join(folder, 'a.jsonl'), text([...inventedRecords(600)]));
+    for (const outputIsSeen of [true, false]) {
+      const said: string[] = [];
+      await runCommand(['records', 'list', join(folder, 'a.jsonl')], {
+        homeFolder: folder,
+        outputIsSeen,
+        progress: (words) => said.push(words),
+      });
+      expect(said.length > 10, `seen ${outputIsSeen}`).toBe(!outputIsSeen);
+    }
   });
 });
 

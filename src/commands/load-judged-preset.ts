@@ -1,6 +1,4 @@
-import { resolve } from 'node:path';
 import { loadParser } from '../formulas/load-parser.js';
-import { readSiteRulesFile } from '../store/site-rules-file.js';
 import { readRules } from '../study/read-rules.js';
 import { withSiteRules } from '../study/site-rules.js';
 import type { Study } from '../study/study.js';
@@ -8,7 +6,8 @@ import type { Attempt } from './attempt.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
 import { commandSettings } from './command-settings.js';
-import { type LoadedPreset, loadPreset, refusedByStore } from './load-preset.js';
+import { type LoadedPreset, loadPreset } from './load-preset.js';
+import { loadSiteRules } from './load-site-rules.js';
 
 /** A preset that is judged by the rules of its site too. */
 export interface JudgedPreset extends LoadedPreset {
@@ -23,10 +22,8 @@ export async function loadJudgedPreset(wanted: string, request: CommandRequest, 
   const { presetFolders, folders } = settings.value;
   const loaded = await loadPreset(wanted, presetFolders, io);
   if (!loaded.ok) return loaded;
-  const named = io.environment.HOLDFAST_RULES;
-  const path = named === undefined || named === '' ? null : resolve(io.workingFolder, named);
-  const site = await readSiteRulesFile(io.disk, path, folders.settingsFolder, loadParser);
-  if (!site.ok) return refusedByStore(site.problems);
+  const site = await loadSiteRules(folders.settingsFolder, io);
+  if (!site.ok) return site;
   const filed = loaded.value.study;
   const study = withSiteRules(filed, site.value);
   if (study === filed) return { ok: true, value: { ...loaded.value, filed } };

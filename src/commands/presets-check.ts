@@ -7,12 +7,14 @@ import type { Stored, StoreProblem } from '../store/problem-of-error.js';
 import { cleanText } from '../study/clean-text.js';
 import { readRules } from '../study/read-rules.js';
 import { checkStudy, type Finding, isReleasable } from '../study/release-checks.js';
+import { type SiteRules, withSiteRules } from '../study/site-rules.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
 import { commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { missingFolder, refusedByStore } from './load-preset.js';
+import { loadSiteRules } from './load-site-rules.js';
 import { pageOf } from './page.js';
 import { findingLine } from './presets-findings.js';
 import { readField } from './read-named-numbers.js';
@@ -28,7 +30,7 @@ interface CheckedFile {
 
 /**
  * `holdfast presets check`: is the file a preset, is its timing possible, are its figures there, are pairs and nulls right at the
- * exact field, are its must-keeps kept and sourced? One line for each file that is right on standard output, everything else on
+ * exact field, are its must-keeps and the rules of the site kept and sourced? One line for each file that is right on standard output, everything else on
  * standard error. Exit code 1 when a file is wrong, 66 when a named file is not there.
  */
 export async function runPresetsCheck(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
@@ -36,13 +38,17 @@ export async function runPresetsCheck(request: CommandRequest, io: CommandIo): P
   if (!settings.ok) return complain(settings, io);
   const field = readField(request.value('field'));
   if (!field.ok) return complain(field, io);
+  const site = await loadSiteRules(settings.value.folders.settingsFolder, io);
+  if (!site.ok) return complain(site, io);
   const parse = await loadParser();
   const { presetFolders } = settings.value;
   const { files, general } =
     request.arguments.length === 0 ? await everyFile(presetFolders, io, parse) : await namedFiles(request, presetFolders, io, parse);
   const checked: CheckedFile[] = [];
   for (const { file, read } of files)
-    checked.push(read.ok ? await checkedFile(file, read.value, field.value, io, parse) : wrongFile(file, read.problems));
+    checked.push(
+      read.ok ? await checkedFile(file, read.value, { fieldT: field.value, site: site.value }, io, parse) : wrongFile(file, read.problems),
+    );
 
   const isRight = ({ preset, problems, findings }: CheckedFile) => preset !== null && problems.length === 0 && isReleasable(findings);
   const page = pageOf(request, io);
@@ -107,11 +113,12 @@ function wrongFile(file: string, problems: readonly StoreProblem[]): CheckedFile
 async function checkedFile(
   file: string,
   preset: StoredPreset,
-  fieldT: number | null,
+  { fieldT, site }: { readonly fieldT: number | null; readonly site: SiteRules },
   io: CommandIo,
   parse: ParseExpression,
 ): Promise<CheckedFile> {
-  const { study, path, origin } = preset;
+  const { path, origin } = preset;
+  const study = withSiteRules(preset.study, site);
   const rules = readRules(
     study.series.flatMap(({ mustKeep }) => mustKeep),
     parse,

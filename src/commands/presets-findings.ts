@@ -3,6 +3,7 @@ import { cleanText } from '../study/clean-text.js';
 import { readPreset } from '../study/read-preset.js';
 import { readRules } from '../study/read-rules.js';
 import { type CheckCircumstances, checkStudy, type Finding } from '../study/release-checks.js';
+import { type SiteRules, withSiteRules } from '../study/site-rules.js';
 import type { Study } from '../study/study.js';
 import { writePreset } from '../study/write-preset.js';
 import type { Attempt } from './attempt.js';
@@ -10,17 +11,22 @@ import { exitCodes } from './exit-codes.js';
 
 /**
  * What the checks find in a study that is about to be written. It is written and read again first: nothing may be released that the
- * program would then refuse to read.
+ * program would then refuse to read. The rules of the site are checked with its own.
  */
-export async function checkedStudy(study: Study, circumstances: Omit<CheckCircumstances, 'rules'>): Promise<Attempt<Finding[]>> {
+export async function checkedStudy(
+  study: Study,
+  site: SiteRules,
+  circumstances: Omit<CheckCircumstances, 'rules'>,
+): Promise<Attempt<Finding[]>> {
   const parse = await loadParser();
   const read = readPreset(writePreset(study), `${study.id}@${study.revision}.json`, parse);
   if (!read.ok) return { ok: false, exit: exitCodes.failed, problems: read.problems };
+  const judged = withSiteRules(read.value, site);
   const rules = readRules(
-    study.series.flatMap(({ mustKeep }) => mustKeep),
+    judged.series.flatMap(({ mustKeep }) => mustKeep),
     parse,
   );
-  return { ok: true, value: checkStudy(read.value, { ...circumstances, rules }) };
+  return { ok: true, value: checkStudy(judged, { ...circumstances, rules }) };
 }
 
 /** One finding in one line. */

@@ -1,4 +1,4 @@
-import { listPresets, type StoredPreset } from '../store/preset-folder.js';
+import { currentRevisions, listPresets, type StoredPreset } from '../store/preset-folder.js';
 import { cleanText } from '../study/clean-text.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
@@ -44,9 +44,4 @@ export async function runPresetsList(request: CommandRequest, io: CommandIo): Pr
   ]);
   io.write(page.plain(`${textTable(columns, rows, page.reader).join('\n')}\n`));
   return exitCodes.done;
-}
-
-/** Of each preset of a folder the highest revision: they come sorted so. */
-function currentRevisions(presets: readonly StoredPreset[]): readonly StoredPreset[] {
-  return presets.filter(({ study, origin }, i) => presets[i - 1]?.study.id !== study.id || presets[i - 1]?.origin !== origin);
 }

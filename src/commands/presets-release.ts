@@ -10,6 +10,7 @@ import { type CommandSettings, commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { loadPreset, refusedByStore } from './load-preset.js';
+import { loadSiteRules } from './load-site-rules.js';
 import { pageOf } from './page.js';
 import { differencePage, releaseText } from './presets-diff.js';
 import { checkedStudy, findingLine } from './presets-findings.js';
@@ -62,7 +63,9 @@ async function release(
   const study = { ...onTop.value.study, status: 'reviewed', revision: basedOn + 1, released: released.value } as const;
 
   const previous = newest.value?.study ?? (base?.ok === true ? base.value.study : null);
-  const checked = await checkedStudy(study, { fieldT: field.value, previous });
+  const site = await loadSiteRules(folders.settingsFolder, io);
+  if (!site.ok) return site;
+  const checked = await checkedStudy(study, site.value, { fieldT: field.value, previous });
   if (!checked.ok) return checked;
   for (const finding of checked.value) io.complain(`holdfast: ${findingLine(finding)}\n`);
   if (!isReleasable(checked.value)) {

@@ -1,13 +1,13 @@
 import type { Message } from '../session/message.js';
-import { listPresets } from '../store/preset-folder.js';
+import { currentRevisions, listPresets } from '../store/preset-folder.js';
 import type { InterfaceWorld } from './interface-world.js';
 
-/** Reads the presets that can be chosen, and says what is wrong with the others. */
+/** Reads the presets that can be chosen, of each folder's the current revisions, and says what is wrong with the others. */
 export async function loadPresets(world: InterfaceWorld): Promise<Message> {
   const { presets, problems } = await listPresets(world.disk, world.presetFolders);
   return {
     kind: 'presets',
-    presets: presets.map(({ study, hash, origin }) => ({ study, hash, origin })),
+    presets: currentRevisions(presets).map(({ study, hash, origin }) => ({ study, hash, origin })),
     notes: problems.map(({ message }) => message),
   };
 }

@@ -32,9 +32,10 @@ export function startRows(state: State): readonly StartRow[] {
   });
   const seen = new Set<string>();
   const presets = state.presets.filter((preset) => {
-    if (seen.has(preset.study.id) || !isMeant(preset, state.narrowing)) return false;
+    // The first of an id is the one that is taken: one that it hides is not offered, however it is called.
+    if (seen.has(preset.study.id)) return false;
     seen.add(preset.study.id);
-    return true;
+    return isMeant(preset, state.narrowing);
   });
   presets.sort((a, b) => compare(a.study.region, b.study.region) || a.study.fieldT - b.study.fieldT || compare(a.study.id, b.study.id));
   return [

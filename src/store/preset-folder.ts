@@ -65,6 +65,11 @@ export async function listPresets(disk: Disk, folders: readonly PresetFolder[], 
   return { presets, problems };
 }
 
+/** Of each preset of a folder the highest revision, of presets as `listPresets` sorts them. */
+export function currentRevisions(presets: readonly StoredPreset[]): readonly StoredPreset[] {
+  return presets.filter(({ study, origin }, i) => presets[i - 1]?.study.id !== study.id || presets[i - 1]?.origin !== origin);
+}
+
 /**
  * Finds a preset by its id (`liver-3t`), its id and revision (`liver-3t@2`), or the path of its file. An id is looked for in the
  * folders in their order; the highest revision is taken. Exit code 66 when there is none, 65 when its file is wrong.

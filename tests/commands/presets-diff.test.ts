@@ -110,6 +110,21 @@ describe('presets check', () => {
     expect([ok, files[0].ok, files[1].ok, files[1].problems[0].code]).toEqual([false, true, false, 'revision-name-differs']);
   });
 
+  it('judges by the rules of the site too, and says so where these cannot be read', async () => {
+    const rule = { region: 'Liver', mustKeep: { figure: 'voxelSliceMm', atMost: 2.5, source: 'our site' } };
+    const folder = folderWith({
+      'rules.json': JSON.stringify({ format: 'holdfast rules', version: 1, rules: [rule] }),
+      'bad.json': '{',
+    });
+    const check = (file: string, preset: string) =>
+      runCommand(['presets', 'check', preset], { environment: { HOLDFAST_RULES: join(folder, file) } });
+    const { exit, out, err } = await check('rules.json', 'liver-3t');
+    expect([exit, out]).toEqual([1, '']);
+    expect(err).toContain('t1-3d: voxel, slice 3 mm: must be at most 2.5 mm (our site)');
+    expect((await check('rules.json', 'knee-3t')).exit).toBe(0);
+    expect((await check('bad.json', 'liver-3t')).exit).toBe(65);
+  });
+
   it('judges pairs at the exact field of the magnet', async () => {
     expect((await runCommand(['presets', 'check', 'liver-1.5t'])).exit).toBe(0);
     const { exit, out, err } = await runCommand(['presets', 'check', 'liver-1.5t', '--field', '1.2']);

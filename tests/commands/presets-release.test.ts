@@ -90,6 +90,23 @@ describe('presets release', () => {
     expect(err).toContain('Nothing was released');
   });
 
+  it('refuses what crosses a rule of the site, and writes that rule into no preset', async () => {
+    const { home, release, files, folder } = site(liver(() => {}));
+    const rule = (atMost: number) => ({ mustKeep: { figure: 'voxelSliceMm', atMost, source: 'our site' } });
+    const keep = (atMost: number) =>
+      writeFileSync(
+        join(home, '.config', 'holdfast', 'rules.json'),
+        JSON.stringify({ format: 'holdfast rules', version: 1, rules: [rule(atMost)] }),
+      );
+    keep(2);
+    const refused = await release(...who, '--based-on', '0');
+    expect([refused.exit, files()]).toEqual([1, []]);
+    expect(refused.err).toContain('must be at most 2 mm (our site)');
+    keep(20);
+    expect((await release(...who, '--based-on', '0')).exit).toBe(0);
+    expect(readFileSync(join(folder, files()[0]!), 'utf8')).not.toContain('our site');
+  });
+
   it('tells the loser whose revision is there and what differs, and takes the changes over on top', async () => {
     const { folder, file, release, files } = site(liver((preset) => dynamic(preset, { sliceThicknessMm: 4, sliceCount: 54 })));
     const theirs = join(folder, '..', 'theirs.json');

@@ -3,12 +3,12 @@ import type { Budget, BudgetProblem, PlannedSeries } from '../search/budget.js';
 import { sayParameter } from '../session/say-parameter.js';
 import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
 import { closingWords } from './closing-words.js';
 import type { Page } from './page.js';
 import { studyHeading } from './study-page.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 /** The document of `budget --json`. */
 export function budgetJson({ study }: BudgetProblem, { plan, totalS, verdict }: Budget): string {

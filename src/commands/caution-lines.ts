@@ -1,8 +1,8 @@
 import type { Caution } from '../calc/caution.js';
+import type { Emphasis } from '../session/text-page.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
-import type { Emphasis } from './command-io.js';
 import type { Page } from './page.js';
-import { wrapText } from './wrap-text.js';
 
 const kindOf: Readonly<Record<Caution['level'], Emphasis>> = { error: 'over', caution: 'close', note: 'quiet' };
 

@@ -1,7 +1,5 @@
+import type { Emphasis } from '../session/text-page.js';
 import type { Disk } from '../store/disk.js';
-
-/** Shades of meaning in plain text; each also has its own words, so that nothing is lost without colour. */
-export type Emphasis = 'heading' | 'fits' | 'close' | 'over' | 'quiet';
 
 /** Everything a command may touch outside itself. Tests hand in plain objects. */
 export interface CommandIo {

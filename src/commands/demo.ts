@@ -6,21 +6,22 @@ import { sayFigure } from '../session/say-figure.js';
 import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
 import { presetBaseline, type SeriesResult, seriesResult } from '../session/series-result.js';
+import type { Emphasis } from '../session/text-page.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { presetFolders } from '../store/preset-folder.js';
 import { cleanText } from '../study/clean-text.js';
 import { runningOrder } from '../study/running-order.js';
 import type { Study, StudySeries } from '../study/study.js';
 import { type Attempt, refuse } from './attempt.js';
 import { closingWords } from './closing-words.js';
-import type { CommandIo, Emphasis } from './command-io.js';
+import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { type LoadedPreset, loadPreset } from './load-preset.js';
 import { type Page, pageOf } from './page.js';
 import { sayHolds, studyHeading } from './study-page.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 const kindOf: Readonly<Record<VerdictWord, Emphasis>> = { FITS: 'fits', 'TOO CLOSE': 'close', OVER: 'over' };
 

@@ -1,4 +1,4 @@
-import type { Emphasis } from './command-io.js';
+import type { Emphasis } from '../session/text-page.js';
 
 /** Codes of ECMA-48 (SGR): named colours alone, so that they follow the terminal's own theme. */
 const codes: Readonly<Record<Emphasis, number>> = { heading: 1, fits: 32, close: 33, over: 31, quiet: 2 };

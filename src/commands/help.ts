@@ -1,6 +1,6 @@
+import { wrapText } from '../session/wrap-text.js';
 import type { CommandRow, OptionRow } from './command-row.js';
 import { bareOptions, commandTable, everywhere, usageOf } from './command-table.js';
-import { wrapText } from './wrap-text.js';
 
 const width = 80;
 

@@ -1,14 +1,10 @@
-import type { Emphasis } from './command-io.js';
-import { tableWidth } from './text-table.js';
+import type { TextPage } from '../session/text-page.js';
+import { tableWidth } from '../session/text-table.js';
 
 /** How plain text is laid out: for eyes or for a screen reader, in all characters or ASCII alone, with or without colour. */
-export interface Page {
-  readonly reader: boolean;
-  /** Characters of a line; a screen reader breaks lines itself. */
-  readonly width: number;
+export interface Page extends TextPage {
   /** Replaces what is no ASCII where only ASCII may be shown. */
   readonly plain: (text: string) => string;
-  readonly emphasis: (kind: Emphasis, text: string) => string;
 }
 
 /** The page that a command line asks for. */

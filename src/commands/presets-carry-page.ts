@@ -7,13 +7,13 @@ import type { SeriesCarry } from '../search/carry.js';
 import type { StudyCarry } from '../search/carry-study.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayParameter } from '../session/say-parameter.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
 import { mustKeepCautions } from '../study/must-keep.js';
 import { cautionLines } from './caution-lines.js';
 import { closingWords } from './closing-words.js';
 import type { Page } from './page.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 const aimWords = { contrast: 'equal contrast ratio', snr: 'equal SNR', shift: 'equal chemical shift', time: 'equal time' } as const;
 

@@ -1,6 +1,6 @@
 import { dirname } from 'node:path';
+import { differencePage } from '../session/difference-page.js';
 import { revisionBefore } from '../store/preset-revisions.js';
-import { cleanText } from '../study/clean-text.js';
 import { studyDifference } from '../study/preset-diff.js';
 import type { Study } from '../study/study.js';
 import { type Attempt, refuse, wrongUse } from './attempt.js';
@@ -10,10 +10,8 @@ import { type CommandSettings, commandSettings } from './command-settings.js';
 import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { type LoadedPreset, loadPreset } from './load-preset.js';
-import { type Page, pageOf } from './page.js';
-import { headLines, releaseWords, type SideNames, seriesDifferenceLines, studyLines } from './presets-diff-page.js';
+import { pageOf } from './page.js';
 import { recordDifferenceText } from './records-diff.js';
-import { wrapText } from './wrap-text.js';
 
 /**
  * `holdfast presets diff A B`: two presets or two revisions, parameters and figures side by side; A alone against the revision before
@@ -55,30 +53,6 @@ async function earlierRevision({ study, path, origin }: LoadedPreset, io: Comman
   });
 }
 
-/** A difference as lines of text. */
-export function differencePage(a: Study, b: Study, page: Page): string[] {
-  const difference = studyDifference(a, b);
-  const names = sideNames(a, b);
-  const same = difference.series.filter(({ kind }) => kind === 'same').map(({ id }) => id);
-  return [
-    ...studyLines(a, page),
-    ...studyLines(b, page),
-    `SNR, contrast and RF are relative to ${names.from}.`,
-    ...headLines(
-      difference.head.filter(({ key }) => !['id', 'revision', 'status'].includes(key)),
-      names,
-      page,
-    ),
-    ...difference.series.flatMap((series) => seriesDifferenceLines(series, names, page)),
-    ...(same.length === 0 ? [] : ['', ...wrapText(`the same: ${same.join(', ')}`, page.width)]),
-  ];
-}
-
-function sideNames(a: Study, b: Study): SideNames {
-  if (a.id === b.id && a.revision !== b.revision) return { from: `rev ${a.revision}`, to: `rev ${b.revision}` };
-  return a.id === b.id ? { from: 'first', to: 'second' } : { from: a.id, to: b.id };
-}
-
 function differenceJson(a: Study, b: Study): string {
   const side = ({ id, revision, status, fieldT, released }: Study) => ({
     preset: id,
@@ -89,9 +63,4 @@ function differenceJson(a: Study, b: Study): string {
   });
   const { head, series } = studyDifference(a, b);
   return `${JSON.stringify({ from: side(a), to: side(b), head, series }, null, 2)}\n`;
-}
-
-/** A revision and who released it, as the start of a sentence. */
-export function releaseText(study: Study): string {
-  return cleanText(`${study.id} revision ${study.revision}, ${study.status}${releaseWords(study)}`);
 }

@@ -1,3 +1,5 @@
+import { releaseWords } from '../session/difference-page.js';
+import { textTable } from '../session/text-table.js';
 import { currentRevisions, listPresets, type StoredPreset } from '../store/preset-folder.js';
 import { cleanText } from '../study/clean-text.js';
 import type { CommandIo } from './command-io.js';
@@ -7,8 +9,6 @@ import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { missingFolder, refusedByStore } from './load-preset.js';
 import { pageOf } from './page.js';
-import { releaseWords } from './presets-diff-page.js';
-import { textTable } from './text-table.js';
 
 const originWords: Readonly<Record<StoredPreset['origin'], string>> = { site: 'site', own: 'saved here', shipped: 'shipped', file: 'file' };
 

@@ -1,3 +1,4 @@
+import { differencePage, releaseText } from '../session/difference-page.js';
 import { newestRevision } from '../store/preset-revisions.js';
 import { addRevision } from '../store/release-revision.js';
 import { cleanText } from '../study/clean-text.js';
@@ -12,7 +13,6 @@ import { type ExitCode, exitCodes } from './exit-codes.js';
 import { loadPreset, refusedByStore } from './load-preset.js';
 import { loadSiteRules } from './load-site-rules.js';
 import { pageOf } from './page.js';
-import { differencePage, releaseText } from './presets-diff.js';
 import { checkedStudy, findingLine } from './presets-findings.js';
 import { ownChangesOnTop } from './presets-release-on-top.js';
 import { readField } from './read-named-numbers.js';

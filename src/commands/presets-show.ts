@@ -1,7 +1,10 @@
 import { classRow } from '../calc/classes.js';
 import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
 import { classOf } from '../calc/series.js';
+import { releaseWords } from '../session/difference-page.js';
 import { sayParameter } from '../session/say-parameter.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
 import { limitInWords } from '../study/must-keep.js';
 import { runningOrder } from '../study/running-order.js';
@@ -13,9 +16,6 @@ import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { loadPreset } from './load-preset.js';
 import { type Page, pageOf } from './page.js';
-import { releaseWords } from './presets-diff-page.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 /** `holdfast presets show`: one preset, its series in running order with parameters and must-keeps. */
 export async function runPresetsShow(request: CommandRequest, io: CommandIo): Promise<ExitCode> {

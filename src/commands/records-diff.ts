@@ -1,3 +1,4 @@
+import { seriesDifferenceLines } from '../session/difference-page.js';
 import { cleanText } from '../study/clean-text.js';
 import { recordedDifference } from '../study/preset-diff.js';
 import type { Attempt } from './attempt.js';
@@ -6,7 +7,6 @@ import type { CommandRequest } from './command-request.js';
 import type { CommandSettings } from './command-settings.js';
 import { findRecord } from './find-record.js';
 import { pageOf } from './page.js';
-import { seriesDifferenceLines } from './presets-diff-page.js';
 
 /** What a session planned against what it used, as text or JSON. */
 export async function recordDifferenceText(

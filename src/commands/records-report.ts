@@ -1,4 +1,5 @@
 import { resolve } from 'node:path';
+import { reportPage } from '../session/report-page.js';
 import { saveDraftPreset } from '../store/save-draft-preset.js';
 import { fileModeOf } from '../store/settings.js';
 import { writeWhole } from '../store/write-whole.js';
@@ -12,9 +13,8 @@ import type { CommandRequest } from './command-request.js';
 import { complain } from './complain.js';
 import type { ExitCode } from './exit-codes.js';
 import { refusedByStore } from './load-preset.js';
-import { pageOf } from './page.js';
+import { type Page, pageOf } from './page.js';
 import { type CountedRecords, countRecords } from './records-counted.js';
-import { recordsReportPage } from './records-report-page.js';
 
 /**
  * `holdfast records report`: what the records say of each preset and series, as text, as JSON or as one HTML page. With
@@ -31,7 +31,7 @@ export async function runRecordsReport(request: CommandRequest, io: CommandIo): 
   }
   const saved = request.has('save-drafts') ? await saveDrafts(counted.value, io) : ({ ok: true, value: [] } as const);
   if (!saved.ok) return complain(saved, io);
-  io.write(request.has('json') ? reportJson(counted.value) : page.plain(recordsReportPage(counted.value, page)));
+  io.write(request.has('json') ? reportJson(counted.value) : page.plain(reportText(counted.value, page)));
   for (const line of saved.value) io.complain(`holdfast: ${line}\n`);
   return counted.value.read.exit;
 }
@@ -42,6 +42,11 @@ async function writeHtml(path: string, { report, read, filter, now, settings }: 
   const text = reportHtml(report, { chosen: filterWords(filter), damaged: read.damaged, files: read.files.length, current, suggestions });
   const written = await writeWhole(io.disk, path, text, fileModeOf(settings.settings), 'the page');
   return written.ok ? written : refusedByStore(written.problems);
+}
+
+function reportText({ report, read, filter, now }: CountedRecords, page: Page): string {
+  const { files, records, damaged } = read;
+  return reportPage({ report, files: files.length, records, damaged, chosen: filterWords(filter), now }, page);
 }
 
 async function saveDrafts({ now, settings }: CountedRecords, io: CommandIo): Promise<Attempt<string[]>> {

@@ -1,3 +1,4 @@
+import { textTable } from '../session/text-table.js';
 import { listScanners, type StoredScanner } from '../store/scanner-folder.js';
 import { cleanText } from '../study/clean-text.js';
 import { foldersOfScanners } from './choose-scanner.js';
@@ -7,7 +8,6 @@ import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { refusedByStore } from './load-preset.js';
 import { pageOf } from './page.js';
-import { textTable } from './text-table.js';
 
 const originWords: Readonly<Record<StoredScanner['origin'], string>> = { site: 'site', own: 'settings', shipped: 'shipped', file: 'file' };
 

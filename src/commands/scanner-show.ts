@@ -1,5 +1,8 @@
 import { phaseTimesMs } from '../calc/chemical-shift.js';
 import { fatShiftHz, larmorMhz } from '../calc/constants.js';
+import { type Both, type SeriesChanges, scannerChanges } from '../session/scanner-changes.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { findScanner } from '../store/scanner-folder.js';
 import { cleanText } from '../study/clean-text.js';
 import { type CoilFile, coilNamed, type ScannerFile, type ScannerNumber, scannerNumbers, scannerOf } from '../study/scanner-file.js';
@@ -12,9 +15,6 @@ import { complain } from './complain.js';
 import { type ExitCode, exitCodes } from './exit-codes.js';
 import { loadPreset, refusedByStore } from './load-preset.js';
 import { type Page, pageOf } from './page.js';
-import { type Both, type SeriesChanges, scannerChanges } from './scanner-changes.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 /** `holdfast scanner show`: one scanner, and with `--preset` what changes in a study on it. */
 export async function runScannerShow(request: CommandRequest, io: CommandIo): Promise<ExitCode> {

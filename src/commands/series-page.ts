@@ -6,14 +6,14 @@ import { classOf } from '../calc/series.js';
 import { sayChange, sayFigure } from '../session/say-figure.js';
 import { sayParameter } from '../session/say-parameter.js';
 import type { SeriesResult } from '../session/series-result.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
 import type { Study } from '../study/study.js';
 import { cautionLines } from './caution-lines.js';
 import { closingWords } from './closing-words.js';
 import type { Page } from './page.js';
 import { seriesHeading, studyHeading } from './study-page.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 /** One series in full as plain text: parameters and figures beside those of the preset, signals, must-keeps, cautions. */
 export function seriesPage(study: Study, fieldT: number, result: SeriesResult, preset: SeriesResult, page: Page): string {

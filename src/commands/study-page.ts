@@ -3,13 +3,13 @@ import { classOf } from '../calc/series.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayTime } from '../session/say-time.js';
 import type { SeriesResult } from '../session/series-result.js';
+import { type Column, textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
 import type { Study } from '../study/study.js';
 import { cautionLines } from './caution-lines.js';
 import { closingWords } from './closing-words.js';
 import type { Page } from './page.js';
-import { type Column, textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 const columns: readonly Column[] = [
   { title: 'series', align: 'left' },

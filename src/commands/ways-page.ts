@@ -10,14 +10,14 @@ import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
 import { bindingInWords, changesInWords, kindWords, searchInWords, spareInWords, tradesInWords } from '../session/say-way.js';
 import type { SeriesResult } from '../session/series-result.js';
+import type { Emphasis } from '../session/text-page.js';
+import { textTable } from '../session/text-table.js';
+import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
 import type { Study } from '../study/study.js';
 import { closingWords } from './closing-words.js';
-import type { Emphasis } from './command-io.js';
 import type { Page } from './page.js';
 import { seriesHeading, studyHeading } from './study-page.js';
-import { textTable } from './text-table.js';
-import { wrapText } from './wrap-text.js';
 
 const emphasisOf: Readonly<Record<Way['verdict'], Emphasis>> = { FITS: 'fits', 'TOO CLOSE': 'close', OVER: 'over' };
 

@@ -37,6 +37,13 @@ export type Suggested =
   | { readonly kind: 'variant'; readonly suggestion: Suggestion }
   | { readonly kind: 'none'; readonly series: string; readonly why: string };
 
+/** The current revision of a preset that records name, and a suggestion for each of its series. */
+export interface PresetNow {
+  /** Null where no folder has it. */
+  readonly study: Study | null;
+  readonly suggestions: readonly Suggested[];
+}
+
 /**
  * The change of a series made most often with good quality, as a variant to review. None where it was made fewer than five times, where
  * the current revision has it already, or where it crosses a must-keep. It is never more than a draft: people review and release.

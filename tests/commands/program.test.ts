@@ -4,8 +4,8 @@ import { modelVersion } from '../../src/calc/model-version.js';
 import { commandTable } from '../../src/commands/command-table.js';
 import { emphasise } from '../../src/commands/emphasis.js';
 import { asciiOnly } from '../../src/commands/page.js';
-import { textTable } from '../../src/commands/text-table.js';
-import { wrapText } from '../../src/commands/wrap-text.js';
+import { textTable } from '../../src/session/text-table.js';
+import { wrapText } from '../../src/session/wrap-text.js';
 import { toolVersion } from '../../src/study/tool-version.js';
 import { runCommand } from './run-command.js';
 

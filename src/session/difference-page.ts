@@ -1,24 +1,52 @@
 import { figureTable } from '../calc/figures.js';
 import { parameterRow } from '../calc/parameters.js';
-import { sayChange, sayFigure } from '../session/say-figure.js';
-import { sayParameter } from '../session/say-parameter.js';
 import { cleanText, shownValue } from '../study/clean-text.js';
-import type { FigureDifference, OtherDifference, SeriesDifference } from '../study/preset-diff.js';
+import { type FigureDifference, type OtherDifference, type SeriesDifference, studyDifference } from '../study/preset-diff.js';
 import type { Study } from '../study/study.js';
-import type { Page } from './page.js';
+import { sayChange, sayFigure } from './say-figure.js';
+import { sayParameter } from './say-parameter.js';
+import type { TextPage } from './text-page.js';
 import { textTable } from './text-table.js';
 import { wrapText } from './wrap-text.js';
 
 /** What stands above the two columns of a difference: `rev 2` and `rev 3`, `planned` and `used`. */
-export interface SideNames {
+interface SideNames {
   readonly from: string;
   readonly to: string;
 }
 
+/** The difference of two studies as lines of text. */
+export function differencePage(a: Study, b: Study, page: TextPage): string[] {
+  const difference = studyDifference(a, b);
+  const names = sideNames(a, b);
+  const same = difference.series.filter(({ kind }) => kind === 'same').map(({ id }) => id);
+  return [
+    ...studyLines(a, page),
+    ...studyLines(b, page),
+    ...wrapText(`SNR, contrast and RF are relative to ${names.from}.`, page.width),
+    ...headLines(
+      difference.head.filter(({ key }) => !['id', 'revision', 'status'].includes(key)),
+      names,
+      page,
+    ),
+    ...difference.series.flatMap((series) => seriesDifferenceLines(series, names, page)),
+    ...(same.length === 0 ? [] : ['', ...wrapText(`the same: ${same.join(', ')}`, page.width)]),
+  ];
+}
+
+function sideNames(a: Study, b: Study): SideNames {
+  if (a.id === b.id && a.revision !== b.revision) return { from: `rev ${a.revision}`, to: `rev ${b.revision}` };
+  return a.id === b.id ? { from: 'first', to: 'second' } : { from: a.id, to: b.id };
+}
+
+/** A revision and who released it, as the start of a sentence. */
+export function releaseText(study: Study): string {
+  return cleanText(`${study.id} revision ${study.revision}, ${study.status}${releaseWords(study)}`);
+}
+
 /** One line that says what a study is, and who released it. */
-export function studyLines(study: Study, page: Page): string[] {
-  const line = `${study.id} revision ${study.revision}, ${study.status}${releaseWords(study)}`;
-  return wrapText(cleanText(line), page.width);
+function studyLines(study: Study, page: TextPage): string[] {
+  return wrapText(releaseText(study), page.width);
 }
 
 /** Who released a revision, when and why; empty where nobody did. */
@@ -29,12 +57,12 @@ export function releaseWords({ released }: Study): string {
 }
 
 /** The study's own differences, notes and titles among them. */
-export function headLines(head: readonly OtherDifference[], names: SideNames, page: Page): string[] {
+function headLines(head: readonly OtherDifference[], names: SideNames, page: TextPage): string[] {
   return head.filter(({ key }) => key !== 'released').flatMap((difference) => otherLines(difference, names, page));
 }
 
 /** One series: parameters and figures side by side, then what else differs. Nothing for a series that is the same. */
-export function seriesDifferenceLines(series: SeriesDifference, names: SideNames, page: Page): string[] {
+export function seriesDifferenceLines(series: SeriesDifference, names: SideNames, page: TextPage): string[] {
   const heading = page.emphasis('heading', cleanText(series.title === '' ? series.id : `${series.id}: ${series.title}`));
   if (series.kind === 'same') return [];
   if (series.kind !== 'changed') return ['', heading, `only in ${series.kind === 'added' ? names.to : names.from}`];
@@ -71,7 +99,7 @@ export function seriesDifferenceLines(series: SeriesDifference, names: SideNames
   ];
 }
 
-function otherLines({ key, from, to }: OtherDifference, names: SideNames, page: Page): string[] {
+function otherLines({ key, from, to }: OtherDifference, names: SideNames, page: TextPage): string[] {
   const words = (value: unknown) => (Array.isArray(value) ? cleanText(JSON.stringify(value), 300) : shownValue(value ?? 'none'));
   return wrapText(cleanText(`${key} differs: ${names.from} ${words(from)}, ${names.to} ${words(to)}`), page.width);
 }

@@ -1,17 +1,16 @@
 import { type ParameterKey, parameterRow } from '../calc/parameters.js';
-import { sayParameter } from '../session/say-parameter.js';
 import { cleanText } from '../study/clean-text.js';
 import { reasonWords } from '../study/record-reasons.js';
-import { type PresetReport, revisionWords } from '../study/record-report.js';
+import { type PresetReport, type RecordReport, revisionWords } from '../study/record-report.js';
 import type { ParameterChanges } from '../study/record-report-changes.js';
 import type { Breach } from '../study/record-report-crossed.js';
-import { filterWords } from '../study/record-report-filter.js';
 import type { ErrorReport } from '../study/record-report-prediction.js';
 import type { QualityCounts, SeriesReport } from '../study/record-report-series.js';
 import { fewestForRate, shareWords } from '../study/record-report-share.js';
+import type { PresetNow } from '../study/record-report-suggestion.js';
 import type { CountedWord } from '../study/record-report-tally.js';
-import type { Page } from './page.js';
-import type { CountedRecords, PresetNow } from './records-counted.js';
+import { sayParameter } from './say-parameter.js';
+import type { TextPage } from './text-page.js';
 import { textTable } from './text-table.js';
 import { wrapText } from './wrap-text.js';
 
@@ -20,14 +19,26 @@ const barLength = 24;
 /** Lines of one plot, and names of one list; the rest is counted together. */
 const mostRows = 8;
 
+/** A report, and what it was made from. */
+export interface ReportedRecords {
+  readonly report: RecordReport;
+  readonly files: number;
+  /** Whole records read, wanted or not. */
+  readonly records: number;
+  readonly damaged: number;
+  /** What was chosen among them, in words; empty for all. */
+  readonly chosen: string;
+  /** By the id of the preset. */
+  readonly now: ReadonlyMap<string, PresetNow>;
+}
+
 /** The report as plain text, with small plots of `#`. */
-export function recordsReportPage({ report, read, filter, now }: CountedRecords, page: Page): string {
+export function reportPage({ report, files, records, damaged, chosen, now }: ReportedRecords, page: TextPage): string {
   const period = report.from === null ? 'no days recorded' : `${report.from} to ${report.to}`;
-  const chosen = filterWords(filter);
   const lines = [
     page.emphasis('heading', `${counted(report.sessions, 'session')} recorded, ${period}`),
-    `${counted(read.files.length, 'file')}, ${counted(read.damaged, 'damaged line')} skipped${report.withoutDay === 0 ? '' : `, ${report.withoutDay} without a day`}`,
-    ...(chosen === '' ? [] : wrapText(cleanText(`Chosen: ${chosen}; ${report.sessions} of ${read.records} records.`), page.width)),
+    `${counted(files, 'file')}, ${counted(damaged, 'damaged line')} skipped${report.withoutDay === 0 ? '' : `, ${report.withoutDay} without a day`}`,
+    ...(chosen === '' ? [] : wrapText(cleanText(`Chosen: ${chosen}; ${report.sessions} of ${records} records.`), page.width)),
     ...(report.leftOut.sessions === 0 ? [] : [`${report.leftOut.sessions} sessions of further presets are not counted apart.`]),
     ...report.presets.flatMap((preset) => ['', ...presetLines(preset, now.get(preset.preset), page)]),
     '',
@@ -39,7 +50,7 @@ export function recordsReportPage({ report, read, filter, now }: CountedRecords,
   return `${lines.join('\n')}\n`;
 }
 
-function presetLines(preset: PresetReport, now: PresetNow | undefined, page: Page): string[] {
+function presetLines(preset: PresetReport, now: PresetNow | undefined, page: TextPage): string[] {
   const revisions = revisionWords(preset.revisions, now?.study?.revision ?? null);
   const mixed = preset.revisions.length > 1 ? 'revisions mixed: ' : '';
   return [
@@ -53,7 +64,7 @@ function presetLines(preset: PresetReport, now: PresetNow | undefined, page: Pag
   ];
 }
 
-function seriesLines(series: SeriesReport, page: Page): string[] {
+function seriesLines(series: SeriesReport, page: TextPage): string[] {
   const { recorded, run, rewritten, repeated, givenUp, quality, prediction } = series;
   return [
     page.emphasis('heading', cleanText(`Series ${series.series}: run ${run}, rewritten ${shareWords(rewritten, recorded)}`)),
@@ -75,7 +86,7 @@ function seriesLines(series: SeriesReport, page: Page): string[] {
   ];
 }
 
-function changeLines(parameters: readonly ParameterChanges[], page: Page): string[] {
+function changeLines(parameters: readonly ParameterChanges[], page: TextPage): string[] {
   if (parameters.length === 0) return [];
   const columns = [
     { title: 'changed', align: 'left' },
@@ -120,7 +131,7 @@ function signed(key: ParameterKey, value: number): string {
 }
 
 /** A bar for each row, in the order given; for a screen reader one sentence. */
-function plotLines(title: string, rows: readonly (readonly [string, number])[], page: Page): string[] {
+function plotLines(title: string, rows: readonly (readonly [string, number])[], page: TextPage): string[] {
   if (rows.length === 0) return [];
   const shown = rows.slice(0, mostRows);
   const rest = rows.slice(mostRows).reduce((sum, [, count]) => sum + count, 0);
@@ -137,7 +148,7 @@ function plotLines(title: string, rows: readonly (readonly [string, number])[], 
   ];
 }
 
-function crossedLines({ crossed }: SeriesReport, page: Page): string[] {
+function crossedLines({ crossed }: SeriesReport, page: TextPage): string[] {
   const { times, withReason, withRole, breaches } = crossed;
   if (times === 0) return [];
   const head = `must-keeps crossed ${times}: ${withReason} with a reason, ${times - withReason} without; accepted by a role ${withRole}, by nobody ${times - withRole}`;
@@ -155,7 +166,7 @@ function breachWords({ record, day, revision, rule, reason, role }: Breach): str
 }
 
 /** Error of a prediction, its months as a row of bars, and its drift. */
-function errorLines(name: string, error: ErrorReport | null, page: Page): string[] {
+function errorLines(name: string, error: ErrorReport | null, page: TextPage): string[] {
   if (error === null) return [];
   const { spread, months, drift } = error;
   const few = spread.count < fewestForRate;
@@ -174,7 +185,7 @@ function percent(value: number): string {
   return `${value > 0 ? '+' : ''}${(value * 100).toFixed(1)} %`;
 }
 
-function suggestionLines({ series }: SeriesReport, now: PresetNow | undefined, page: Page): string[] {
+function suggestionLines({ series }: SeriesReport, now: PresetNow | undefined, page: TextPage): string[] {
   if (now === undefined || now.study === null) return ['no suggestion: the preset is in no folder'];
   const suggested = now.suggestions.find((one) => (one.kind === 'none' ? one.series : one.suggestion.series) === series);
   if (suggested === undefined) return [];

@@ -5,6 +5,7 @@ import { findPreset, listPresets, type PresetFolder, readPresetFile, type Stored
 import { nameProblem, revisionBefore } from '../store/preset-revisions.js';
 import type { Stored, StoreProblem } from '../store/problem-of-error.js';
 import { cleanText } from '../study/clean-text.js';
+import { findingLine } from '../study/finding-line.js';
 import { readRules } from '../study/read-rules.js';
 import { checkStudy, type Finding, isReleasable } from '../study/release-checks.js';
 import { type SiteRules, withSiteRules } from '../study/site-rules.js';
@@ -16,7 +17,6 @@ import { type ExitCode, exitCodes } from './exit-codes.js';
 import { missingFolder, refusedByStore } from './load-preset.js';
 import { loadSiteRules } from './load-site-rules.js';
 import { pageOf } from './page.js';
-import { findingLine } from './presets-findings.js';
 import { readField } from './read-named-numbers.js';
 
 /** One file, and what the checks say of it. */
@@ -38,7 +38,7 @@ export async function runPresetsCheck(request: CommandRequest, io: CommandIo): P
   if (!settings.ok) return complain(settings, io);
   const field = readField(request.value('field'));
   if (!field.ok) return complain(field, io);
-  const site = await loadSiteRules(settings.value.folders.settingsFolder, io);
+  const site = await loadSiteRules(settings.value.folders, io);
   if (!site.ok) return complain(site, io);
   const parse = await loadParser();
   const { presetFolders } = settings.value;

@@ -1,7 +1,10 @@
+import { loadParser } from '../formulas/load-parser.js';
 import { differencePage, releaseText } from '../session/difference-page.js';
 import { newestRevision } from '../store/preset-revisions.js';
 import { addRevision } from '../store/release-revision.js';
+import { checkedStudy } from '../study/checked-study.js';
 import { cleanText } from '../study/clean-text.js';
+import { findingLine } from '../study/finding-line.js';
 import { idForm } from '../study/limits.js';
 import { isReleasable } from '../study/release-checks.js';
 import { type Attempt, wrongUse } from './attempt.js';
@@ -13,7 +16,6 @@ import { type ExitCode, exitCodes } from './exit-codes.js';
 import { loadPreset, refusedByStore } from './load-preset.js';
 import { loadSiteRules } from './load-site-rules.js';
 import { pageOf } from './page.js';
-import { checkedStudy, findingLine } from './presets-findings.js';
 import { ownChangesOnTop } from './presets-release-on-top.js';
 import { readField } from './read-named-numbers.js';
 import { readRelease } from './read-release.js';
@@ -63,10 +65,10 @@ async function release(
   const study = { ...onTop.value.study, status: 'reviewed', revision: basedOn + 1, released: released.value } as const;
 
   const previous = newest.value?.study ?? (base?.ok === true ? base.value.study : null);
-  const site = await loadSiteRules(folders.settingsFolder, io);
+  const site = await loadSiteRules(folders, io);
   if (!site.ok) return site;
-  const checked = await checkedStudy(study, site.value, { fieldT: field.value, previous });
-  if (!checked.ok) return checked;
+  const checked = checkedStudy(study, site.value, { fieldT: field.value, previous }, await loadParser());
+  if (!checked.ok) return { ...checked, exit: exitCodes.failed };
   for (const finding of checked.value) io.complain(`holdfast: ${findingLine(finding)}\n`);
   if (!isReleasable(checked.value)) {
     io.complain('holdfast: Nothing was released: a check failed. Mend the preset, then release again.\n');

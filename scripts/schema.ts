@@ -6,6 +6,7 @@ import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { Ajv } from 'ajv';
 import standalone from 'ajv/dist/standalone/index.js';
 import { build } from 'esbuild';
+import { objectSchema } from './object-schema.js';
 import { presetSchema } from './preset-schema.js';
 import { rulesSchema } from './rules-schema.js';
 import { scannerSchema } from './scanner-schema.js';
@@ -33,7 +34,7 @@ const options = {
 // Node gives the CommonJS module of ajv as the default import.
 const toCode = ((standalone as unknown as { default?: unknown }).default ?? standalone) as (ajv: Ajv, validate: unknown) => string;
 
-const schemas = { preset: presetSchema, rules: rulesSchema, scanner: scannerSchema };
+const schemas = { object: objectSchema, preset: presetSchema, rules: rulesSchema, scanner: scannerSchema };
 
 const types = `export interface SchemaError {
   instancePath: string;

@@ -20,8 +20,12 @@ const mayImport: Readonly<Record<string, readonly string[]>> = {
   commands: ['calc', 'formulas', 'study', 'search', 'picture', 'session', 'store', 'effects'],
 };
 const pure = new Set(['calc', 'formulas', 'study', 'search', 'picture', 'session']);
-/** The one package a pure room may name: the parser of formulas, loaded late by its own file. */
-const parserFile = join('formulas', 'expression-parser.ts');
+/** The packages that a pure room may name, each in one file of its own: the parser of formulas (loaded late), the Fourier transform, the PNG writer. */
+const packageFiles: Readonly<Record<string, string>> = {
+  [join('formulas', 'expression-parser.ts')]: 'mathjs',
+  [join('picture', 'transform.ts')]: 'fft.js',
+  [join('picture', 'png-file.ts')]: 'fast-png',
+};
 
 interface Import {
   readonly file: string;
@@ -103,10 +107,11 @@ describe('rooms', () => {
     );
   });
 
-  it('pure rooms use no Node, no React, no terminal and no package but the parser of formulas', () => {
+  it('pure rooms use no Node, no React, no terminal and no package but those that compute, each in its own file', () => {
     const wrong = imports.filter(({ room, target, file, isType }) => {
       if (!pure.has(room) || target.startsWith('.')) return false;
-      return !(file === parserFile && target.startsWith('mathjs')) && !(isType && target.startsWith('mathjs'));
+      const allowed = packageFiles[file];
+      return !(allowed !== undefined && target.startsWith(allowed)) && !(isType && target.startsWith('mathjs'));
     });
     expect(wrong.map(words)).toEqual([]);
   });

@@ -81,7 +81,14 @@ const levels: readonly CautionLevel[] = ['error', 'caution', 'note'];
 
 /** Cautions ordered worst first; equals keep their order. */
 export function worstFirst(cautions: readonly Caution[]): readonly Caution[] {
-  if (cautions.length < 2) return cautions;
+  let last = 0;
+  let sorted = true;
+  for (let i = 0; i < cautions.length; i += 1) {
+    const rank = levels.indexOf((cautions[i] as Caution).level);
+    if (rank < last) sorted = false;
+    last = rank;
+  }
+  if (sorted) return cautions;
   const ordered: Caution[] = [];
   for (const level of levels) {
     for (const caution of cautions) if (caution.level === level) ordered.push(caution);

@@ -95,15 +95,15 @@ function crusherMs(geometry: Geometry, scanner: Scanner): number {
 export function diffusionLobeMs(bSPerMm2: number, refocusingMs: number, scanner: Scanner): number {
   if (bSPerMm2 <= 0) return 0;
   const wave = 2 * Math.PI * gammaBarMhzPerT * scanner.gradientMtPerM * 1e-3; // rad per ms per mm
-  const weight = (d: number) => (wave * d) ** 2 * (d + refocusingMs - d / 3) * 1e-3; // s/mm2
-  let low = 0;
-  let high = 500;
-  for (let i = 0; i < 60; i += 1) {
-    const middle = (low + high) / 2;
-    if (weight(middle) < bSPerMm2) low = middle;
-    else high = middle;
+  const wanted = (bSPerMm2 * 1e3) / (wave * wave); // ms3
+  // (2/3) d^3 + refocusing d^2 = wanted: either term alone gives too long a lobe, and from there Newton's steps only fall.
+  let d = Math.min(Math.cbrt(1.5 * wanted), Math.sqrt(wanted / refocusingMs));
+  for (let i = 0; i < 40; i += 1) {
+    const step = (d * d * ((2 / 3) * d + refocusingMs) - wanted) / (2 * d * (d + refocusingMs));
+    d -= step;
+    if (step <= 1e-13 * d) break;
   }
-  return (low + high) / 2;
+  return d;
 }
 
 /** Time from the first echo of an echo-planar train to the centre of k-space, ms. */

@@ -1,6 +1,7 @@
 import { displacement } from './chemical-shift.js';
 import { type ClassKey, classRow } from './classes.js';
 import { type Geometry, geometryOf } from './geometry.js';
+import { ignoredIn, withoutIgnored } from './ignored.js';
 import { acquiredLines, type Lines } from './lines.js';
 import { type MinimumTiming, minimumTiming } from './minimum-timing.js';
 import { highestB, noiseAveragingLines, signalFreeSnr } from './noise.js';
@@ -11,7 +12,7 @@ import { type SlotPulses, slotPulses } from './pulses.js';
 import { seriesB1PlusRmsUt } from './rf.js';
 import { guardedCeil } from './rounding.js';
 import type { Scanner } from './scanner.js';
-import { classOf, ignoredIn, type Series, withoutIgnored } from './series.js';
+import { classOf, type Series } from './series.js';
 import { classSignal, inversionPreparedTimingOf, type SignalSetting } from './signal/class-signal.js';
 import { inversionPreparedDelaysMs } from './signal/inversion-prepared.js';
 import { capacity, slotFactor, slotMs } from './slots.js';

@@ -32,7 +32,11 @@ export function noiseAverages(p: Parameters): number {
 
 /** Highest b-value of a series in s/mm2, 0 without diffusion. */
 export function highestB(p: Parameters): number {
-  return p.diffusion === undefined ? 0 : Math.max(...p.diffusion.bValuesSPerMm2);
+  if (p.diffusion === undefined) return 0;
+  const { bValuesSPerMm2 } = p.diffusion;
+  let highest = Number.NEGATIVE_INFINITY;
+  for (let i = 0; i < bValuesSPerMm2.length; i += 1) highest = Math.max(highest, bValuesSPerMm2[i] as number);
+  return highest;
 }
 
 /**

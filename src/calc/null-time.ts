@@ -48,17 +48,17 @@ export function nullTimeMs(setting: SignalSetting, tissue: Tissue): number | nul
     const timing = inversionPreparedTimingOf(setting);
     const lead = timing.centre * timing.echoSpacingMs;
     const longest = timing.repetitionTimeMs - (timing.readouts - timing.centre) * timing.echoSpacingMs;
-    return rootMs((ti) => inversionPreparedSignal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), lead, longest, tissue.t1Ms);
+    return rootMs((ti) => inversionPreparedSignal(timing, tissue.t1Ms, ti), lead, longest, tissue.t1Ms);
   }
   if (row.train) {
     const timing = trainTimingOf(setting);
     const end = timing.fromEquilibrium ? { z0: 0, gain: 0 } : trainEnd(timing, tissue.t1Ms, tissue.t2Ms);
     const longest = timing.fromEquilibrium ? 20 * tissue.t1Ms : timing.repetitionTimeMs - timing.echoTrainLength * timing.echoSpacingMs;
-    return rootMs((ti) => trainLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms, end), 0, longest, tissue.t1Ms);
+    return rootMs((ti) => trainLongitudinal(timing, tissue.t1Ms, end, ti), 0, longest, tissue.t1Ms);
   }
   const timing = spinEchoTimingOf(setting);
   const longest = timing.fromEquilibrium
     ? 20 * tissue.t1Ms
     : timing.repetitionTimeMs - Math.max(timing.echoTimeMs, timing.secondEchoTimeMs ?? 0);
-  return rootMs((ti) => spinEchoLongitudinal({ ...timing, inversionTimeMs: ti }, tissue.t1Ms), 0, longest, tissue.t1Ms);
+  return rootMs((ti) => spinEchoLongitudinal(timing, tissue.t1Ms, ti), 0, longest, tissue.t1Ms);
 }

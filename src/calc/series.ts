@@ -1,4 +1,4 @@
-import { type Acquisition, type ClassKey, classKeys, classRow, type Family, knownClass } from './classes.js';
+import { type Acquisition, type ClassKey, classRow, type Family, knownClass } from './classes.js';
 import { acquiredLines } from './lines.js';
 import { type NumberParameterKey, type ParameterKey, type ParameterTable, parameterKeys, parameterRow } from './parameters.js';
 
@@ -78,26 +78,30 @@ export function classOf(series: Pick<Series, 'family' | 'acquisition'>): ClassKe
  */
 const blank = JSON.parse(JSON.stringify(Object.fromEntries(parameterKeys.map((key) => [key, null])))) as Readonly<Record<string, unknown>>;
 
+/** A copy that has held every kind of value: the layout is then settled, and does not move on with the first preset that differs. */
+const seasoned: Record<string, unknown> = { ...blank };
+for (const key of parameterKeys) for (const value of [1, 0.5, true, 'text', blank, undefined]) seasoned[key] = value;
+
 /**
  * Fills in what a file leaves out: the defaults of the parameter table, then those of the class.
  * Trains that read all lines in one go (single-shot, echo-planar, inversion-prepared) take their length from the lines.
  */
 export function fillDefaults(key: ClassKey, given: GivenParameters): Parameters {
   const row = classRow(key);
-  const filled: Record<string, unknown> = { ...blank };
+  const filled: Record<string, unknown> = { ...seasoned };
   for (const name of parameterKeys) {
     const value = given[name];
     filled[name] = value === undefined ? defaultOf(name, key) : value;
   }
   const parameters = filled as unknown as Parameters;
   if (row.otherwise.echoTrainLength === 'lines' && given.echoTrainLength === undefined) {
-    return { ...parameters, echoTrainLength: linesInOneTrain(key, parameters) };
+    filled.echoTrainLength = linesInOneTrain(key, parameters);
   }
   return parameters;
 }
 
 /** Value of a parameter that was left out, before anything that depends on the lines. */
-function defaultOf(name: ParameterKey, key: ClassKey): unknown {
+export function defaultOf(name: ParameterKey, key: ClassKey): unknown {
   const row = parameterRow(name);
   const otherwise = classRow(key).otherwise;
   if (row.kind === 'object') return row.otherwise === 'none' ? { kind: 'none' } : undefined;
@@ -113,42 +117,4 @@ function defaultOf(name: ParameterKey, key: ClassKey): unknown {
 export function linesInOneTrain(key: ClassKey, parameters: Parameters): number {
   const lines = acquiredLines(key, parameters);
   return key === 'inversion-prepared-gradient-echo/3D' ? lines.slice : lines.phase;
-}
-
-/** What a class has no use for: numbers, flags and choices with a neutral value that it would silently ignore. */
-const ignoredByClass = Object.fromEntries(
-  classKeys.map((key) => [
-    key,
-    parameterKeys
-      // An angle or a spacing that a class has not got has no neutral value that would mean anything.
-      .filter(
-        (name) =>
-          !classRow(key).parameters.includes(name) &&
-          !['refocusingAngleDeg', 'echoSpacingMs', 'flipAngleDeg', 'slabSelective'].includes(name),
-      )
-      .map((name) => ({ name, neutral: defaultOf(name, key) })),
-  ]),
-) as unknown as Readonly<Record<ClassKey, readonly { readonly name: ParameterKey; readonly neutral: unknown }[]>>;
-
-const noneIgnored: readonly ParameterKey[] = [];
-
-/** The parameters that are set to something this class cannot use. */
-export function ignoredIn(key: ClassKey, p: Parameters): readonly ParameterKey[] {
-  const candidates = ignoredByClass[key];
-  let found: ParameterKey[] | null = null;
-  for (let i = 0; i < candidates.length; i += 1) {
-    const entry = candidates[i] as (typeof candidates)[number];
-    if (p[entry.name] !== entry.neutral) {
-      found ??= [];
-      found.push(entry.name);
-    }
-  }
-  return found ?? noneIgnored;
-}
-
-/** The same series with what its class cannot use set back to its neutral value, so that it has no effect on anything. */
-export function withoutIgnored(series: Series, key: ClassKey, ignored: readonly ParameterKey[]): Series {
-  if (ignored.length === 0) return series;
-  const neutral = ignoredByClass[key].filter((entry) => ignored.includes(entry.name)).map((entry) => [entry.name, entry.neutral]);
-  return { ...series, parameters: { ...series.parameters, ...Object.fromEntries(neutral) } };
 }

@@ -43,7 +43,10 @@ export interface SeriesTime {
 
 /** Shots of diffusion: the sum over b of directions x averages (directions count 1 at b 0). */
 export function diffusionShots(diffusion: NonNullable<Parameters['diffusion']>): number {
-  return diffusion.bValuesSPerMm2.reduce((sum, b, i) => sum + (b === 0 ? 1 : diffusion.directions) * (diffusion.averages[i] ?? 1), 0);
+  const { bValuesSPerMm2, directions, averages } = diffusion;
+  let shots = 0;
+  for (let i = 0; i < bValuesSPerMm2.length; i += 1) shots += (bValuesSPerMm2[i] === 0 ? 1 : directions) * (averages[i] ?? 1);
+  return shots;
 }
 
 /** What one pass plays and how often passes follow each other. */

@@ -2,9 +2,10 @@ import type { Baseline } from '../baseline.js';
 import type { AddCaution } from '../caution.js';
 import type { Comparison } from '../compare.js';
 import type { SeriesModel } from '../model.js';
-import { type ParameterKey, parameterKeys } from '../parameters.js';
+import type { ParameterKey } from '../parameters.js';
 import { preparesEverySlot } from '../rf.js';
 import { below, same } from '../rounding.js';
+import { changesPicture } from './changes-picture.js';
 import { inWords } from './number-words.js';
 
 /** Share by which a null may drift before it is said, and before it is lost (common practice, no source). */
@@ -60,7 +61,7 @@ export function driftCautions(
         `${model.series.target} over ${model.series.comparison} changes by ${inWords(100 * change, 0)} %: the picture will look different`,
     );
   }
-  if (model.series.purpose === 'dynamic' && p !== before && changesPicture(model, baseline)) {
+  if (model.series.purpose === 'dynamic' && p !== before && changesPicture(p, before)) {
     add(
       'phases-must-match',
       'caution',
@@ -107,18 +108,4 @@ function ignoredOf(model: SeriesModel, baseline: Baseline): readonly ParameterKe
   const before = baseline.model.ignored;
   if (before.length === 0) return model.ignored;
   return model.ignored.length === 0 ? before : [...new Set([...model.ignored, ...before])];
-}
-
-/** What shows in the picture: everything but how often and when it is taken. */
-const pictureKeys = parameterKeys.filter((key) => key !== 'pacing' && key !== 'diffusion' && key !== 'volumes');
-
-/** True when anything that shows in the picture differs from the baseline. */
-function changesPicture(model: SeriesModel, baseline: Baseline): boolean {
-  const p = model.series.parameters;
-  const before = baseline.model.series.parameters;
-  for (let i = 0; i < pictureKeys.length; i += 1) {
-    const key = pictureKeys[i] as ParameterKey;
-    if (p[key] !== before[key]) return true;
-  }
-  return false;
 }

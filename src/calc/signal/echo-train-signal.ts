@@ -44,8 +44,7 @@ export function trainEnd(s: TrainTiming, t1Ms: number, t2Ms: number): TrainEnd {
  * `(1 - E + E z0) / (1 - E gain)`; an inversion turns M into -M and recovers for TI.
  * Transverse magnetisation is spoiled before the next excitation.
  */
-export function trainLongitudinal(s: TrainTiming, t1Ms: number, end: TrainEnd): number {
-  const ti = s.inversionTimeMs;
+export function trainLongitudinal(s: TrainTiming, t1Ms: number, end: TrainEnd, ti = s.inversionTimeMs): number {
   const i = ti === undefined ? 0 : Math.exp(-ti / t1Ms);
   if (s.fromEquilibrium) return 1 - 2 * i;
   const e = Math.exp(-(s.repetitionTimeMs - (ti ?? 0) - s.echoTrainLength * s.echoSpacingMs) / t1Ms);

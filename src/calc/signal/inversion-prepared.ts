@@ -22,8 +22,9 @@ export function inversionPreparedDelaysMs(s: InversionPreparedTiming): { readonl
  *
  * @example inversionPreparedSignal({ repetitionTimeMs: 2300, inversionTimeMs: 900, flipAngleDeg: 9, readouts: 176, centre: 88, echoSpacingMs: 7 }, 838) //=> 0.046769
  */
-export function inversionPreparedSignal(s: InversionPreparedTiming, t1Ms: number): number {
-  const { beforeMs, afterMs } = inversionPreparedDelaysMs(s);
+export function inversionPreparedSignal(s: InversionPreparedTiming, t1Ms: number, inversionTimeMs = s.inversionTimeMs): number {
+  const beforeMs = inversionTimeMs - s.centre * s.echoSpacingMs;
+  const afterMs = s.repetitionTimeMs - beforeMs - s.readouts * s.echoSpacingMs;
   const angle = (s.flipAngleDeg * Math.PI) / 180;
   const e = Math.exp(-s.echoSpacingMs / t1Ms);
   const f = e * Math.cos(angle);

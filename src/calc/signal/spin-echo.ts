@@ -25,8 +25,7 @@ export function shortSpinEchoSignal(repetitionTimeMs: number, echoTimeMs: number
  * At 90/180: `1 - 2 e^(-(TR - TE/2)/T1) + e^(-TR/T1)`, with an inversion `1 - 2 e^(-TI/T1) + 2 e^(-(TR - TE/2)/T1) - e^(-TR/T1)`
  * (Hahn, Phys Rev 1950;80:580; Bydder & Young 1985; Haacke et al., Magnetic Resonance Imaging, 1999).
  */
-export function spinEchoLongitudinal(s: SpinEchoTiming, t1Ms: number): number {
-  const ti = s.inversionTimeMs;
+export function spinEchoLongitudinal(s: SpinEchoTiming, t1Ms: number, ti = s.inversionTimeMs): number {
   if (s.fromEquilibrium) return ti === undefined ? 1 : 1 - 2 * Math.exp(-ti / t1Ms);
   const last = Math.max(s.echoTimeMs, s.secondEchoTimeMs ?? 0);
   const cosine = Math.cos((s.refocusingAngleDeg * Math.PI) / 180);

@@ -36,7 +36,7 @@ const io: CommandIo = {
 async function openOnTerminal(options: InterfaceOptions): Promise<number> {
   const [{ openInterface }, { openWorld }] = await Promise.all([import('./screens/open-interface.js'), import('./effects/open-world.js')]);
   const { disk, environment, homeFolder, workingFolder } = io;
-  const { presets, records } = options;
+  const { presets, records, scanner } = options;
   const world = await openWorld({
     disk,
     environment,
@@ -45,6 +45,7 @@ async function openOnTerminal(options: InterfaceOptions): Promise<number> {
     shippedPresets: await io.shippedPresets(),
     presets,
     records,
+    scanner,
     programUrl: import.meta.url,
   });
   return openInterface({

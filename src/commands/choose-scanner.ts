@@ -1,4 +1,3 @@
-import { resolve } from 'node:path';
 import { plainScanner, type Scanner } from '../calc/scanner.js';
 import { foldersOf } from '../store/folders.js';
 import { findScanner, type ScannerFolder, scannerFolders } from '../store/scanner-folder.js';
@@ -13,10 +12,9 @@ import { refusedByStore } from './load-preset.js';
 
 /** The folders that scanner files are looked for in, in their order. */
 export async function foldersOfScanners(io: CommandIo): Promise<ScannerFolder[]> {
-  const { settingsFolder } = foldersOf({ environment: io.environment, homeFolder: io.homeFolder, workingFolder: io.workingFolder });
-  const named = io.environment.HOLDFAST_SCANNERS;
-  const site = named === undefined || named === '' ? null : resolve(io.workingFolder, named);
-  return scannerFolders(site, settingsFolder, await io.shippedPresets());
+  const { environment, homeFolder, workingFolder } = io;
+  const { settingsFolder, siteScannersFolder } = foldersOf({ environment, homeFolder, workingFolder });
+  return scannerFolders(siteScannersFolder, settingsFolder, await io.shippedPresets());
 }
 
 /** Name of a coil of a scanner, or null for the first; refused where the scanner has none of that name. */
@@ -42,18 +40,45 @@ export interface ChosenScanner {
 export async function chooseScanner(request: CommandRequest, io: CommandIo, study: Study, fieldT: number): Promise<Attempt<ChosenScanner>> {
   const wanted = request.value('scanner');
   if (wanted === undefined) {
-    if (request.has('coil')) return wrongUse('--coil', '--coil names a coil of a scanner file.', 'Add --scanner NAME.');
+    if (request.has('coil')) return coilAlone;
     return { ok: true, value: { scanner: plainScanner(fieldT), file: null } };
   }
   if (request.has('field'))
     return wrongUse('--field', '--field and --scanner both say the field.', 'Leave --field away: the scanner file has its own.');
+  const named = await namedScanner(wanted, request, io);
+  if (!named.ok) return named;
+  const { file, coil } = named.value;
+  return { ok: true, value: { scanner: scannerOf(file, coil, study.region), file } };
+}
+
+async function namedScanner(wanted: string, request: CommandRequest, io: CommandIo): Promise<Attempt<NamedScanner>> {
   const found = await findScanner(io.disk, await foldersOfScanners(io), wanted, io.workingFolder);
   if (!found.ok) return refusedByStore(found.problems);
   const { file } = found.value;
   const coil = readCoil(request.value('coil'), file);
-  if (!coil.ok) return coil;
-  return { ok: true, value: { scanner: scannerOf(file, coil.value, study.region), file } };
+  return coil.ok ? { ok: true, value: { file, coil: coil.value } } : coil;
 }
+
+/** A scanner file and the coil that was named with it; null takes its first. */
+interface NamedScanner {
+  readonly file: ScannerFile;
+  readonly coil: string | null;
+}
+
+/** The scanner that `--scanner` and `--coil` name for sessions that are begun, with the coil's own name; null where neither is given. */
+export async function scannerToBeginOn(request: CommandRequest, io: CommandIo): Promise<Attempt<NamedScanner | null>> {
+  const wanted = request.value('scanner');
+  if (wanted !== undefined) {
+    const named = await namedScanner(wanted, request, io);
+    if (!named.ok) return named;
+    const { file, coil } = named.value;
+    return { ok: true, value: { file, coil: coilNamed(file, coil)?.name ?? null } };
+  }
+  if (request.has('coil')) return coilAlone;
+  return { ok: true, value: null };
+}
+
+const coilAlone = wrongUse('--coil', '--coil names a coil of a scanner file.', 'Add --scanner NAME.');
 
 /** The scanner in one line, for the head of a page. */
 export function scannerLine({ scanner }: ChosenScanner, request: CommandRequest): string {

@@ -1,5 +1,6 @@
 import type { Emphasis } from '../session/text-page.js';
 import type { Disk } from '../store/disk.js';
+import type { ScannerFile } from '../study/scanner-file.js';
 
 /** Everything a command may touch outside itself. Tests hand in plain objects. */
 export interface CommandIo {
@@ -34,4 +35,6 @@ export interface InterfaceOptions {
   readonly ascii: boolean;
   readonly reader: boolean;
   readonly color: string | undefined;
+  /** Scanner file and coil that sessions are begun on; null where none was named. */
+  readonly scanner: { readonly file: ScannerFile; readonly coil: string | null } | null;
 }

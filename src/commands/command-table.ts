@@ -11,18 +11,20 @@ export const everywhere: readonly OptionRow[] = [
   { name: 'help', value: null, help: 'this help' },
 ];
 
+const scannerOptions: readonly OptionRow[] = [
+  { name: 'scanner', value: 'NAME', help: 'scanner file: its exact field, gradients, pulses and coils' },
+  { name: 'coil', value: 'NAME', help: 'coil of the scanner file; the first unless given' },
+];
+
 /** Options of the program itself, without a command. */
 export const bareOptions: readonly OptionRow[] = [
+  ...scannerOptions,
   ...everywhere,
   { name: 'version', value: null, help: 'version of the program and of its model' },
 ];
 
 const jsonOption: OptionRow = { name: 'json', value: null, help: 'one JSON document on standard output, nothing else there' };
 const fieldOption: OptionRow = { name: 'field', value: 'T', help: 'exact field of the magnet, in tesla' };
-const scannerOptions: readonly OptionRow[] = [
-  { name: 'scanner', value: 'NAME', help: 'scanner file: its exact field, gradients, pulses and coils' },
-  { name: 'coil', value: 'NAME', help: 'coil of the scanner file; the first unless given' },
-];
 const recordDetails = [
   'FILE is a record file, or a folder of them (one a scanner); several read as one. Without FILE: that of --records.',
   'Damaged lines are named, counted and skipped.',

@@ -1,5 +1,5 @@
 import { unknownBody } from '../calc/body.js';
-import { plainScanner, type Scanner } from '../calc/scanner.js';
+import type { Scanner } from '../calc/scanner.js';
 import { type Verdict, type VerdictWord, verdictOf } from '../calc/verdict.js';
 import { type DemoSession, demoSession } from '../session/demo-session.js';
 import { sayFigure } from '../session/say-figure.js';
@@ -14,6 +14,7 @@ import { cleanText } from '../study/clean-text.js';
 import { runningOrder } from '../study/running-order.js';
 import type { Study, StudySeries } from '../study/study.js';
 import { type Attempt, refuse } from './attempt.js';
+import { type ChosenScanner, chooseScanner, scannerLine } from './choose-scanner.js';
 import { closingWords } from './closing-words.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
@@ -31,13 +32,22 @@ export async function runDemo(request: CommandRequest, io: CommandIo): Promise<E
   const loaded = await loadPreset(demoSession.presetId, shipped, io);
   if (!loaded.ok) return complain(loaded, io);
   const page = pageOf(request, io);
-  const text = demoPage(demoSession, loaded.value, page);
+  const { study } = loaded.value;
+  const chosen = await chooseScanner(request, io, study, study.fieldT);
+  if (!chosen.ok) return complain(chosen, io);
+  const text = demoPage(demoSession, loaded.value, chosen.value, scannerLine(chosen.value, request), page);
   if (!text.ok) return complain(text, io);
   io.write(page.plain(text.value));
   return exitCodes.done;
 }
 
-function demoPage(demo: DemoSession, { study, rules }: LoadedPreset, page: Page): Attempt<string> {
+function demoPage(
+  demo: DemoSession,
+  { study, rules }: LoadedPreset,
+  { scanner, file }: ChosenScanner,
+  where: string,
+  page: Page,
+): Attempt<string> {
   const rewritten = study.series.find(({ id }) => id === demo.rewrites.seriesId);
   if (rewritten === undefined) {
     const message = `Preset ${study.id} has no series ${demo.rewrites.seriesId}, which the demo session rewrites.`;
@@ -48,7 +58,6 @@ function demoPage(demo: DemoSession, { study, rules }: LoadedPreset, page: Page)
       hint: 'Leave --presets out to use the shipped preset.',
     });
   }
-  const scanner = plainScanner(study.fieldT);
   const circumstances = { scanner, body: unknownBody, rules };
   const evaluateWith = (series: StudySeries, set = {}) => seriesResult(series, set, presetBaseline(series, study.fieldT), circumstances);
   const results = runningOrder(study.series).map((series) => evaluateWith(series));
@@ -56,7 +65,8 @@ function demoPage(demo: DemoSession, { study, rules }: LoadedPreset, page: Page)
   const lines = [
     page.emphasis('heading', demo.title),
     ...wrapText(demo.note, page.width),
-    ...studyHeading(study, study.fieldT, page),
+    ...studyHeading(study, scanner.fieldT, page),
+    ...(file === null ? [] : wrapText(where, page.width)),
     '',
     ...runningOrderLines(demo, study, results, scanner, page),
     '',

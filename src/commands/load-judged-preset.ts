@@ -22,7 +22,7 @@ export async function loadJudgedPreset(wanted: string, request: CommandRequest, 
   const { presetFolders, folders } = settings.value;
   const loaded = await loadPreset(wanted, presetFolders, io);
   if (!loaded.ok) return loaded;
-  const site = await loadSiteRules(folders.settingsFolder, io);
+  const site = await loadSiteRules(folders, io);
   if (!site.ok) return site;
   const filed = loaded.value.study;
   const study = withSiteRules(filed, site.value);

@@ -1,4 +1,5 @@
 import type { CommandIo } from './command-io.js';
+import type { CommandRequest } from './command-request.js';
 import { complain } from './complain.js';
 import { exitCodes } from './exit-codes.js';
 import { readCommandLine } from './read-command-line.js';
@@ -29,7 +30,10 @@ export async function run(args: readonly string[], io: CommandIo): Promise<numbe
     case 'interface': {
       const { request } = line.value;
       if (!io.canDraw || io.openInterface === null) return (await import('./demo.js')).runDemo(request, io);
+      const scanner = await beginOn(request, io);
+      if (!scanner.ok) return complain(scanner, io);
       return io.openInterface({
+        scanner: scanner.value,
         presets: request.value('presets'),
         records: request.value('records'),
         ascii: request.has('ascii'),
@@ -38,4 +42,10 @@ export async function run(args: readonly string[], io: CommandIo): Promise<numbe
       });
     }
   }
+}
+
+/** The scanner that was named for the interface; nothing is loaded where none was. */
+async function beginOn(request: CommandRequest, io: CommandIo): ReturnType<typeof import('./choose-scanner.js')['scannerToBeginOn']> {
+  if (!request.has('scanner') && !request.has('coil')) return { ok: true, value: null };
+  return (await import('./choose-scanner.js')).scannerToBeginOn(request, io);
 }

@@ -9,11 +9,14 @@ import { heartbeatMs } from '../store/draft-owner.js';
 import { type Folders, foldersOf } from '../store/folders.js';
 import { presetFolders } from '../store/preset-folder.js';
 import { randomId } from '../store/random-id.js';
+import { scannerFolders } from '../store/scanner-folder.js';
 import { defaultSettings, fileModeOf } from '../store/settings.js';
 import { readSettings } from '../store/settings-file.js';
+import type { ScannerFile } from '../study/scanner-file.js';
 import { toolVersion } from '../study/tool-version.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { loadDrafts, loadPresets } from './load-presets.js';
+import { loadScanners, loadSiteRules } from './load-scanners.js';
 import { runEffect } from './run-effect.js';
 import { openSearchWorker, searchRunner } from './run-search.js';
 
@@ -26,6 +29,8 @@ export interface WorldChoices {
   readonly shippedPresets: string | null;
   readonly presets: string | undefined;
   readonly records: string | undefined;
+  /** Scanner file and one of its coils, by its exact name, that were named on the command line. */
+  readonly scanner?: { readonly file: ScannerFile; readonly coil: string | null } | null;
   /** Of the program's own file: the bundle of the search lies beside it. */
   readonly programUrl: string;
 }
@@ -71,6 +76,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
     disk,
     folders,
     presetFolders: presetFolders(folders.sitePresetsFolder, folders.ownPresetsFolder, choices.shippedPresets),
+    scannerFolders: scannerFolders(folders.siteScannersFolder, folders.settingsFolder, choices.shippedPresets),
     settings,
     drafts,
     saver,
@@ -85,19 +91,24 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   };
   const beat = setInterval(() => void drafts.beat(), heartbeatMs);
   beat.unref();
+  const presets = loadPresets(world);
+  // The list of presets is on screen before scanners and rules are read.
+  const later = presets.then(() => Promise.all([loadScanners(world), loadSiteRules(world)]));
   return {
     defaults: {
       role: settings.role,
       scannerName: settings.scannerName,
       coilName: settings.coilName,
       pauses: { preparationS: settings.preparationS, restS: settings.restS },
+      ...(choices.scanner == null ? {} : { scanner: choices.scanner }),
     },
     ascii: settings.glyphs === 'ascii',
     reader: settings.readerMode,
     color: settings.colour === 'auto' ? undefined : settings.colour,
     runEffect: (effect) => runEffect(world, effect),
     firstMessages: [
-      loadPresets(world).then((message) => [message]),
+      presets.then((message) => [message]),
+      later,
       loadDrafts(world),
       Promise.resolve(notes.map(({ message }): Message => ({ kind: 'note', words: message }))),
     ],

@@ -15,6 +15,7 @@ const ofSeries: readonly ScreenName[] = ['series', 'why', 'type-these', 'chart',
 /** The verdict of the present screen: of the series that is looked at, else of the session. */
 export function headlineOf(state: State): Headline {
   const { screen, seriesId } = state.place;
+  if (screen === 'scanner' && state.session === null) return { word: null, text: 'Choose a scanner and a coil' };
   return ofSeries.includes(screen) && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
 }
 

@@ -14,5 +14,6 @@ export function idleWords(state: State): string {
   if (screen === 'patient' || screen === 'readings' || screen === 'record' || screen === 'keep') return formRow(state)?.help ?? '';
   if (screen === 'ways' || screen === 'front') return 'It proposes, people decide: Enter takes what the hand is on, u takes it back';
   if (screen === 'budget') return 'Enter takes the whole plan as one step, u takes it back';
+  if (screen === 'scanner') return 'Enter takes it: every figure, way and budget is then worked out on it';
   return screen === 'start' ? 'Presets are starting values; review before use.' : '';
 }

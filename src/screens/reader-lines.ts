@@ -1,6 +1,7 @@
 import { figureTable } from '../calc/figures.js';
 import { rangeChart } from '../session/chart.js';
 import { consequences } from '../session/consequences.js';
+import { chosenScanner, sayChoice } from '../session/equipment.js';
 import { plannedHere } from '../session/hands/budget-commands.js';
 import { formRow, formRows } from '../session/hands/form-commands.js';
 import { orderRow } from '../session/hands/order-commands.js';
@@ -13,6 +14,7 @@ import { resultNow, studySeries } from '../session/results.js';
 import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayTime } from '../session/say-time.js';
+import { scannerRow, scannerRows, scannerWords } from '../session/scanner-list.js';
 import { fieldValue } from '../session/series-fields.js';
 import { sessionCautions } from '../session/session-cautions.js';
 import { startRows } from '../session/start-list.js';
@@ -68,6 +70,8 @@ function itemsOf(state: State, look: Look): readonly Item[] {
       return seriesItems(state);
     case 'chart':
       return chartItems(state);
+    case 'scanner':
+      return scannerItems(state);
     case 'ways':
       return waysItems(state);
     case 'front':
@@ -95,6 +99,7 @@ function startItems(state: State): Item[] {
   return [
     ...state.fileNotes.map((words) => ({ words })),
     { words: `Type to narrow: ${state.narrowing || 'nothing typed'}` },
+    { words: `Scanner: ${sayChoice(chosenScanner(state))}` },
     ...startRows(state).map((row) => ({
       words:
         row.kind === 'draft'
@@ -102,6 +107,23 @@ function startItems(state: State): Item[] {
           : `${row.preset.study.fieldT} T, ${row.preset.study.region}: ${row.preset.study.title}, ${row.preset.study.status}`,
       here: row.field === here,
     })),
+  ];
+}
+
+function scannerItems(state: State): Item[] {
+  const here = scannerRow(state).field;
+  const { heading, facts, table, notes, attention } = scannerWords(state);
+  const [titles = [], ...rows] = table ?? [];
+  return [
+    ...scannerRows(state).map(({ field, name, where, coil, inUse }) => ({
+      words: `${name}, ${where}, ${coil}${inUse ? ', in use' : ''}`,
+      here: field === here,
+    })),
+    ...[heading, ...facts].map((words) => ({ words: words.replaceAll(' > ', ' becomes ') })),
+    ...rows.map(([id = '', ...cells]) => ({
+      words: `${id}: ${cells.map((cell, at) => `${titles[at + 1]} ${cell.replace(' > ', ' becomes ')}`).join(', ')}`,
+    })),
+    ...[...notes.slice(1), attention].filter((words) => words !== '').map((words) => ({ words })),
   ];
 }
 

@@ -9,6 +9,7 @@ import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
 import { orderScreen } from './order-screen.js';
 import { readerLines } from './reader-lines.js';
+import { scannerScreen } from './scanner-screen.js';
 import { seriesScreen } from './series-screen.js';
 import { startScreen } from './start-screen.js';
 import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
@@ -33,6 +34,7 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
   keep: keepScreen,
   budget: budgetScreen,
   readings: readingsScreen,
+  scanner: scannerScreen,
   record: recordScreen,
   help: helpScreen,
 };

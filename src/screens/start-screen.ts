@@ -1,7 +1,8 @@
+import { chosenScanner, sayChoice } from '../session/equipment.js';
 import { fieldStrengths, type StartRow, startRows } from '../session/start-list.js';
 import type { State } from '../session/state.js';
 import { fitText } from '../terminal/text-width.js';
-import { blank, fill, type Line, line, span, windowOf, wrap } from './line.js';
+import { fill, type Line, line, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
 
 /** Chooses a field strength, a region and a preset; unfinished sessions are offered first. */
@@ -22,7 +23,7 @@ export function startScreen(state: State, look: Look, columns: number, rows: num
             .join(', ')}, and a region: 3 liver`,
       'quiet',
     ),
-    blank,
+    line(`Scanner: ${sayChoice(chosenScanner(state))} (Tab: another)`),
     line(`  ${'field'.padStart(6)}   ${'region'.padEnd(16)}preset`, 'quiet'),
   ];
   const notes = noteLines(state, look, columns);

@@ -63,6 +63,7 @@ export const screenWords: Readonly<Record<ScreenName, string>> = {
   keep: 'what is kept',
   budget: 'budget',
   readings: 'scanner readings',
+  scanner: 'scanner and coil',
   record: 'record',
   help: 'help',
 };

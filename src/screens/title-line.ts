@@ -1,10 +1,12 @@
 import { classRow } from '../calc/classes.js';
 import { classOf } from '../calc/series.js';
 import { changedKeys } from '../session/changed-keys.js';
+import { equipmentNow, isFromFile } from '../session/equipment.js';
 import { fieldHere } from '../session/hands/series-commands.js';
 import { resultNow, studySeries } from '../session/results.js';
 import type { State } from '../session/state.js';
 import { listedWays } from '../session/ways.js';
+import { fitText } from '../terminal/text-width.js';
 import { clockWords, headlineOf, withRight } from './common-lines.js';
 import { type Line, span } from './line.js';
 import type { Look } from './look.js';
@@ -13,13 +15,21 @@ import { screenWords } from './text-screen.js';
 /** The second line: which screen of what. */
 export function titleLine(state: State, look: Look, columns: number): Line {
   const { opened } = state;
-  if (opened === null) return withRight([span('Start', 'bold')], 'holdfast', columns, look, 'quiet');
+  if (opened === null) return withRight([span(words(state), 'bold')], 'holdfast', columns, look, 'quiet');
   const { study } = opened;
-  const right = found(state) ?? `${study.id}, ${opened.scanner.fieldT} T${study.status === 'starter' ? ', starter' : ''}`;
+  const right = found(state) ?? `${study.id}, ${whereOf(state)}${study.status === 'starter' ? ', starter' : ''}`;
   const clocks = clockWords(state);
   return clocks === ''
     ? withRight([span(words(state))], right, columns, look, 'quiet')
     : withRight([span(words(state))], clocks, columns, look);
+}
+
+/** The scanner of the session where it has a file, and the field. */
+function whereOf(state: State): string {
+  const equipment = equipmentNow(state);
+  if (equipment === null) return '';
+  const { scanner } = equipment;
+  return isFromFile(equipment) ? `${fitText(scanner.name, 16, '~').trimEnd()} ${scanner.fieldT} T` : `${scanner.fieldT} T`;
 }
 
 /** While a series is over its limits: what the search has found. */

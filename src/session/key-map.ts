@@ -17,6 +17,7 @@ import {
 } from './hands/order-commands.js';
 import { practice } from './hands/patient-commands.js';
 import { saveAsPreset, savePage, saveRecord, turnRecordPane } from './hands/record-commands.js';
+import { moveInScanners, takeScanner } from './hands/scanner-commands.js';
 import {
   backToPreset,
   enterField,
@@ -98,6 +99,13 @@ const everywhere: readonly KeyRow[] = [
   row('escape', 'Esc', 'back', 'One screen back. Nothing is lost.', back, ({ place }) => place.back.length > 0),
 ];
 
+/** The same where a session need not be open: what belongs to one works once it is. */
+const sessionKeys: readonly KeyRow[] = everywhere.map((each) =>
+  each.keys.some((key) => ['u', 'r', 'p', 'o', 'e', 'g'].includes(key))
+    ? { ...each, when: (state) => state.session !== null && (each.when?.(state) ?? true) }
+    : each,
+);
+
 const upAndDown = (by: (rows: number) => Command, what: string): readonly KeyRow[] => [
   row('up', 'up down', '', `Moves through ${what}.`, by(-1)),
   row('down', '', '', '', by(1)),
@@ -150,6 +158,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     ...upAndDown(moveInList, 'the list'),
     row('enter', 'Enter', 'open', 'Opens the preset, or goes on with the session.', choose),
     row('any-text', 'a-z 0-9', 'narrow', 'Narrows the list: 3 liver.', narrow),
+    row('tab', 'Tab', 'scanner', 'Scanner and coil of the next session, and what changes on them.', show('scanner')),
     row('backspace', 'Backspace', 'widen', 'Takes the last letter back.', widen, ({ narrowing }) => narrowing !== ''),
     row('escape', 'Esc', 'leave', 'Forgets what was typed; with nothing typed, leaves.', clearOrLeave),
     row('?', '?', 'help', 'Help for this screen.', show('help')),
@@ -179,6 +188,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('b', 'b', 'budget', 'Plans the session into the minutes left: as it is, shortened, skipped.', showBudget),
     ...toWays,
     row('n', 'n', '', 'New session; after the record is saved.', anotherSession),
+    row('tab', 'Tab', '', 'Scanner and coil of this session, and what changes on them.', show('scanner')),
     ...everywhere,
   ],
   series: [...series, ...everywhere],
@@ -241,6 +251,12 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     ...everywhere.filter(({ keys }) => !keys.includes('escape')),
   ],
   readings: [...form, ...everywhere],
+  scanner: [
+    ...upAndDown(moveInScanners, 'the scanners and their coils'),
+    row('enter', 'Enter', 'take', 'Takes this scanner and coil; in a session undo takes them back.', takeScanner),
+    row('tab', 'Tab', '', 'Back.', back),
+    ...sessionKeys,
+  ],
   record: [
     ...form,
     row(' ', 'Space', '', 'Ticks and unticks.', enterRow),

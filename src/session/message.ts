@@ -3,6 +3,8 @@ import type { Budget, BudgetProblem } from '../search/budget.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { Rules } from '../study/must-keep.js';
 import type { SessionRecord } from '../study/record.js';
+import type { ScannerFile } from '../study/scanner-file.js';
+import type { SiteRules } from '../study/site-rules.js';
 import type { MustKeep, Study } from '../study/study.js';
 import type { Draft } from './draft.js';
 import type { WaysAnswer } from './ways.js';
@@ -44,6 +46,8 @@ export type Message =
   | { readonly kind: 'tick'; readonly atMs: number }
   | { readonly kind: 'presets'; readonly presets: readonly PresetChoice[]; readonly notes: readonly string[] }
   | { readonly kind: 'drafts'; readonly drafts: readonly DraftChoice[] }
+  | { readonly kind: 'scanners'; readonly scanners: readonly ScannerFile[]; readonly notes: readonly string[] }
+  | { readonly kind: 'site-rules'; readonly siteRules: SiteRules }
   /** Something outside that a person should know. */
   | { readonly kind: 'note'; readonly words: string }
   /** How far a search is, 0 to 1. */

@@ -7,6 +7,8 @@ import { type RecordedSeries, type RecordedValues, recordVersion, type SessionRe
 import type { SeriesOutcome } from '../study/record-words.js';
 import type { Study, StudySeries } from '../study/study.js';
 import { toolVersion } from '../study/tool-version.js';
+import { equipmentNow, scannerNow } from './equipment.js';
+import { filedStudy } from './judged-study.js';
 import { resultNow, resultOfPreset, sessionSeries, studySeries } from './results.js';
 import type { SeriesResult } from './series-result.js';
 import type { SessionSeries } from './session.js';
@@ -49,6 +51,7 @@ export function recordOfSession(state: State): Omit<SessionRecord, 'id' | 'day'>
   const { session, opened } = state;
   if (session === null || opened === null) return null;
   const { study } = opened;
+  const { scanner, scannerName, coilName } = equipmentNow(state) ?? opened;
   return {
     format: 'holdfast record',
     version: recordVersion,
@@ -56,9 +59,9 @@ export function recordOfSession(state: State): Omit<SessionRecord, 'id' | 'day'>
     model: modelVersion,
     preset: { id: study.id, revision: study.revision, hash: opened.hash },
     region: study.region,
-    fieldT: opened.scanner.fieldT,
-    scanner: opened.scannerName,
-    coil: opened.coilName === '' ? null : opened.coilName,
+    fieldT: scanner.fieldT,
+    scanner: scannerName,
+    coil: coilName === '' ? null : coilName,
     role: session.role,
     initials: session.initials === '' ? null : session.initials,
     reasons: session.reasons,
@@ -81,6 +84,9 @@ function valuesOf(series: StudySeries, { parameters, evaluation }: SeriesResult)
 export function studyOfSession(state: State): Study | null {
   const { opened, session } = state;
   if (opened === null || session === null) return null;
-  const { study } = opened;
-  return { ...study, series: study.series.map((series) => ({ ...series, parameters: resultNow(state, series.id).parameters })) };
+  const study = filedStudy(opened);
+  const used = scannerNow(state)?.fieldT ?? study.fieldT;
+  // A magnet a few percent off its name is still one of that field.
+  const fieldT = Math.abs(used - study.fieldT) > 0.05 * study.fieldT ? used : study.fieldT;
+  return { ...study, fieldT, series: study.series.map((series) => ({ ...series, parameters: resultNow(state, series.id).parameters })) };
 }

@@ -1,8 +1,10 @@
 import type { Baseline } from '../calc/baseline.js';
 import type { Body } from '../calc/body.js';
 import type { Readings } from '../calc/reading.js';
+import type { Scanner } from '../calc/scanner.js';
 import type { GivenParameters } from '../calc/series.js';
 import type { StudySeries } from '../study/study.js';
+import { scannerNow } from './equipment.js';
 import { presetBaseline, type SeriesResult, seriesResult } from './series-result.js';
 import type { SessionSeries } from './session.js';
 import type { State } from './state.js';
@@ -22,6 +24,7 @@ interface Kept {
       readonly frontBackMm: number | null;
       readonly leftRightMm: number | null;
       readonly rules: State['rules'];
+      readonly scanner: Scanner | null;
       readonly result: SeriesResult;
     }
   >;
@@ -81,26 +84,42 @@ export function resultWith(state: State, id: string, set: GivenParameters): Seri
   const own = keptOf(state, series);
   const { before } = sessionSeries(state, id);
   const body = bodyOf(state);
+  const scanner = scannerNow(state);
   const last = own.latest.get(set);
   if (
     last !== undefined &&
     last.series === before &&
     last.frontBackMm === body.frontBackMm &&
     last.leftRightMm === body.leftRightMm &&
-    last.rules === state.rules
+    last.rules === state.rules &&
+    last.scanner === scanner
   )
     return last.result;
   const result = keptResult(state, series, own, set, body, readingsOf(sessionSeries(state, id)));
-  own.latest.set(set, { series: before, ...body, rules: state.rules, result });
+  own.latest.set(set, { series: before, ...body, rules: state.rules, scanner, result });
   return result;
+}
+
+/** Scanners by a number of their own: what is worked out on one is nothing for another. */
+const scannerNumbers = new WeakMap<Scanner, number>();
+let scannersSeen = 0;
+
+function numberOf(scanner: Scanner): number {
+  let number = scannerNumbers.get(scanner);
+  if (number === undefined) {
+    scannersSeen += 1;
+    number = scannersSeen;
+    scannerNumbers.set(scanner, number);
+  }
+  return number;
 }
 
 /** The same by what the values say, not by which object holds them. */
 function keptResult(state: State, series: StudySeries, own: Kept, set: GivenParameters, body: Body, readings: Readings): SeriesResult {
-  const key = JSON.stringify([set, readings, body, state.rules.size]);
+  const scanner = scannerNow(state) ?? own.baseline.model.scanner;
+  const key = JSON.stringify([set, readings, body, state.rules.size, numberOf(scanner)]);
   const known = own.results.get(key);
   if (known !== undefined) return known;
-  const scanner = state.opened?.scanner ?? own.baseline.model.scanner;
   // The plain scanner of the preset's own field is the baseline's own: nothing is carried.
   const same = scanner.name === own.baseline.model.scanner.name && scanner.fieldT === own.baseline.model.scanner.fieldT;
   const circumstances = { scanner: same ? own.baseline.model.scanner : scanner, body, rules: state.rules };

@@ -1,4 +1,5 @@
 import { restOfHoldS } from '../calc/time.js';
+import { scannerNow } from './equipment.js';
 import { resultNow } from './results.js';
 import type { SessionSeries } from './session.js';
 import type { State } from './state.js';
@@ -28,7 +29,8 @@ export function holdClock(state: State, series: SessionSeries): HoldClock | null
   const counting = run.sinceMs !== null && leftS > 0;
   if (!held) return { hold: null, holds: null, leftS, counting, seriesLeftS: leftS };
   const hold = Math.min(holds, run.holdsDone + 1);
-  const restS = state.opened === null ? 0 : restOfHoldS(state.opened.scanner);
+  const scanner = scannerNow(state);
+  const restS = scanner === null ? 0 : restOfHoldS(scanner);
   return { hold, holds, leftS, counting, seriesLeftS: leftS + Math.max(0, holds - hold) * (lengthS + restS) };
 }
 

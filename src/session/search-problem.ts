@@ -1,9 +1,11 @@
+import type { Scanner } from '../calc/scanner.js';
 import { preparationS } from '../calc/time.js';
 import type { BudgetProblem } from '../search/budget.js';
 import type { Limits } from '../search/limits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import { runningOrder } from '../study/running-order.js';
 import type { StudySeries } from '../study/study.js';
+import { scannerNow } from './equipment.js';
 import { bodyOf, readingsOf, resultOfPreset, sessionSeries, studySeries } from './results.js';
 import { holdClock } from './running.js';
 import type { Session } from './session.js';
@@ -41,7 +43,7 @@ export function searchProblemOf(state: State, id: string): SearchProblem | null 
     // What was opened by hand is no longer locked.
     series: { ...series, locked: series.locked.filter((key) => !own.opened.includes(key)) },
     presetFieldT: opened.study.fieldT,
-    scanner: opened.scanner,
+    scanner: scannerNow(state) ?? opened.scanner,
     body: bodyOf(state),
     rules: state.rules,
     limits: limitsOf(state, id),
@@ -53,9 +55,26 @@ export function searchProblemOf(state: State, id: string): SearchProblem | null 
   };
 }
 
+/** The scanners of one session differ by this. */
+function scannerKey({ name, fieldT, coil }: Scanner): readonly unknown[] {
+  return [name, fieldT, coil?.name];
+}
+
 /** Two problems with the same key have the same answer, within one opened study. */
-export function searchKey({ series, body, rules, limits, readings, bands, set, frozen }: SearchProblem): string {
-  return JSON.stringify([series.id, series.locked, body, rules.size, limits, readings, bands, set, frozen]);
+export function searchKey({ series, scanner, body, rules, limits, readings, bands, set, frozen }: SearchProblem): string {
+  return JSON.stringify([
+    series.id,
+    series.locked,
+    series.mustKeep.length,
+    scannerKey(scanner),
+    body,
+    rules.size,
+    limits,
+    readings,
+    bands,
+    set,
+    frozen,
+  ]);
 }
 
 /** Everything that a plan into the minutes left is asked with; null where no minutes were said. Series skipped by hand or stopped early stay out. */
@@ -63,7 +82,7 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
   const { opened, session } = state;
   const { leftS } = timeline(state);
   if (opened === null || session === null || leftS === null) return null;
-  const { study, scanner } = opened;
+  const { study } = opened;
   const runsS = session.series.reduce((sum, series) => sum + (holdClock(state, series)?.seriesLeftS ?? 0), 0);
   const stays = session.series.filter(({ state: word }) => word !== 'not-done' && word !== 'stopped-early');
   const planned = stays.map(({ id }) => studySeries(state, id));
@@ -72,7 +91,7 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
   const series = same ? planned : planned.map((each, at) => ({ ...each, priority: at + 1 }));
   return {
     study: { ...study, series },
-    scanner,
+    scanner: scannerNow(state) ?? opened.scanner,
     body: bodyOf(state),
     rules: state.rules,
     minutes: Math.max(0, leftS - runsS) / 60,
@@ -88,7 +107,7 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
 }
 
 /** Two plans with the same key have the same answer; minutes are compared to the tenth. */
-export function budgetKey({ study, body, rules, minutes, longestS, done, bands, asSet }: BudgetProblem): string {
+export function budgetKey({ study, scanner, body, rules, minutes, longestS, done, bands, asSet }: BudgetProblem): string {
   const order = study.series.map(({ id, priority }) => [id, priority]);
-  return JSON.stringify([order, body, rules.size, Math.floor(minutes * 10), longestS, done, bands, asSet]);
+  return JSON.stringify([order, scannerKey(scanner), body, rules.size, Math.floor(minutes * 10), longestS, done, bands, asSet]);
 }

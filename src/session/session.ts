@@ -1,11 +1,11 @@
 import type { ParameterKey } from '../calc/parameters.js';
-import type { Scanner } from '../calc/scanner.js';
 import type { GivenParameters } from '../calc/series.js';
 import type { Bands } from '../search/bands.js';
 import { noRecordedLimits, type RecordedLimits, type RecordedReading } from '../study/record.js';
 import type { Quality, Recommendation, SeriesOutcome } from '../study/record-words.js';
 import { runningOrder } from '../study/running-order.js';
 import type { Study } from '../study/study.js';
+import type { Equipment } from './equipment.js';
 
 /** Where a series stands in the running order. */
 export const seriesStates = ['to-do', 'running', 'done', 'repeated', 'stopped-early', 'not-done'] as const;
@@ -58,19 +58,22 @@ export interface Session {
   readonly recommendation: Recommendation | null;
   /** How much of each figure every way keeps; left out: the usual bands. */
   readonly keep?: Bands;
+  /** Which equipment it is done on: 0 or left out is what it was begun on, 1 the first of `Opened.others`. */
+  readonly equipment?: number;
   /** True once this very session stands in the file of records. */
   readonly saved: boolean;
 }
 
-/** What a session starts from and never changes. */
-export interface Opened {
+/** What a session starts from: its preset, and the equipment it was begun on. */
+export interface Opened extends Equipment {
+  /** As it is judged: with what the site keeps after the must-keeps of each series. */
   readonly study: Study;
+  /** Must-keeps that each series has in the preset itself; left out where the site adds none. */
+  readonly ownMustKeeps?: Readonly<Record<string, number>>;
   /** SHA-256 of the preset file. */
   readonly hash: string;
-  readonly scanner: Scanner;
-  /** Nicknames for the record. */
-  readonly scannerName: string;
-  readonly coilName: string;
+  /** Equipment that was chosen since; a session names the one it is done on by its place. */
+  readonly others?: readonly Equipment[];
 }
 
 /** A session on a preset in which nothing was said or changed yet. */

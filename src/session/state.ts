@@ -1,6 +1,9 @@
 import type { FigureKey } from '../calc/figures.js';
 import type { GivenParameters } from '../calc/series.js';
 import type { Rules } from '../study/must-keep.js';
+import type { ScannerFile } from '../study/scanner-file.js';
+import { noSiteRules, type SiteRules } from '../study/site-rules.js';
+import type { ScannerChoice } from './equipment.js';
 import type { DraftChoice, PresetChoice } from './message.js';
 import type { Opened, Session } from './session.js';
 import type { ListedWay, SessionPlan, WaysSearch } from './ways.js';
@@ -18,6 +21,7 @@ export const screenNames = [
   'keep',
   'budget',
   'readings',
+  'scanner',
   'record',
   'help',
 ] as const;
@@ -78,6 +82,12 @@ export interface Notice {
 export interface State {
   readonly presets: readonly PresetChoice[];
   readonly drafts: readonly DraftChoice[];
+  /** Scanner files that can be chosen, of each name one. */
+  readonly scanners: readonly ScannerFile[];
+  /** What was chosen for the next session; null leaves it to the settings. */
+  readonly scannerChoice: ScannerChoice | null;
+  /** What the site keeps in all its presets. */
+  readonly siteRules: SiteRules;
   readonly size: { readonly columns: number; readonly rows: number };
   readonly nowMs: number;
   /** Defaults of whoever works here. */
@@ -122,6 +132,8 @@ export interface Defaults {
   readonly scannerName: string;
   readonly coilName: string;
   /** Preparation of a series and rest between breath-holds, as the settings have them; absent: common practice. */
+  /** Scanner named on the command line. */
+  readonly scanner?: ScannerChoice;
   readonly pauses?: { readonly preparationS: number; readonly restS: number };
 }
 
@@ -142,6 +154,9 @@ export function initialState(defaults: Defaults, size: State['size']): State {
   return {
     presets: [],
     drafts: [],
+    scanners: [],
+    scannerChoice: defaults.scanner ?? null,
+    siteRules: noSiteRules,
     size,
     nowMs: 0,
     defaults,

@@ -1,7 +1,7 @@
 import { type Change, only, say } from './change.js';
 import { type Draft, draftLayout, draftSteps } from './draft.js';
 import { takeExpression, typeKey } from './hands/entry-commands.js';
-import { openDraft } from './hands/start-commands.js';
+import { judgeAgain, openDraft } from './hands/start-commands.js';
 import { keepSearching } from './keep-searching.js';
 import { keyRowFor } from './key-map.js';
 import type { Answer, Effect, Message } from './message.js';
@@ -38,6 +38,10 @@ function carryOut(state: State, message: Message): Change {
     }
     case 'drafts':
       return only({ ...state, drafts: message.drafts });
+    case 'scanners':
+      return only({ ...state, scanners: message.scanners, fileNotes: withNotes(state, message.notes) });
+    case 'site-rules':
+      return judgeAgain({ ...state, siteRules: message.siteRules });
     case 'note':
       // Before a session is open only files are read: what is wrong with them stays in sight.
       return only(

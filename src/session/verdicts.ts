@@ -1,4 +1,5 @@
 import { type LimitKind, type Verdict, type VerdictWord, verdictOf } from '../calc/verdict.js';
+import { scannerNow } from './equipment.js';
 import { readingsOf, resultNow, sessionSeries } from './results.js';
 import { sayNumber } from './say-number.js';
 import { sayTime } from './say-time.js';
@@ -32,7 +33,7 @@ export function seriesVerdicts(state: State, id: string, result: SeriesResult = 
   const { figures } = result.evaluation;
   const series = sessionSeries(state, id);
   const readings = readingsOf(series);
-  const margins = { modelErrorPercent: state.opened?.scanner.modelErrorPercent ?? 5, hasTimeReading: readings.timeS !== undefined };
+  const margins = { modelErrorPercent: scannerNow(state)?.modelErrorPercent ?? 5, hasTimeReading: readings.timeS !== undefined };
   const judged: Judged[] = [];
   const add = (
     kind: LimitKind,

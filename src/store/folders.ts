@@ -9,6 +9,10 @@ export interface Folders {
   readonly ownPresetsFolder: string;
   /** Presets of the site; null when none is named. */
   readonly sitePresetsFolder: string | null;
+  /** Scanner files of the site; null when none is named. */
+  readonly siteScannersFolder: string | null;
+  /** Rules of the site; null when none is named: then `rules.json` beside the settings holds, where it is there. */
+  readonly siteRulesFile: string | null;
 }
 
 /** The variables of the environment that are asked. */
@@ -18,6 +22,8 @@ export interface Environment {
   readonly XDG_STATE_HOME?: string | undefined;
   readonly HOLDFAST_PRESETS?: string | undefined;
   readonly HOLDFAST_RECORDS?: string | undefined;
+  readonly HOLDFAST_SCANNERS?: string | undefined;
+  readonly HOLDFAST_RULES?: string | undefined;
 }
 
 /** What decides where things are kept; flags win over the environment, that over the settings. */
@@ -49,5 +55,7 @@ export function foldersOf({ environment, homeFolder, workingFolder, flags = {}, 
     draftsFolder: base(environment.XDG_STATE_HOME, join('.local', 'state')),
     ownPresetsFolder: join(dataFolder, 'presets'),
     sitePresetsFolder: chosen(flags.presets, environment.HOLDFAST_PRESETS, settings?.presetsFolder),
+    siteScannersFolder: chosen(environment.HOLDFAST_SCANNERS),
+    siteRulesFile: chosen(environment.HOLDFAST_RULES),
   };
 }

@@ -46,7 +46,34 @@ describe('the program', () => {
     };
     const ran = await runCommand(['--presets', 'here', '--ascii', '--color', '16'], { canDraw: true, openInterface });
     expect(ran).toEqual({ exit: 7, out: '', err: '' });
-    expect(seen).toEqual([{ presets: 'here', records: undefined, ascii: true, reader: false, color: '16' }]);
+    expect(seen).toEqual([{ presets: 'here', records: undefined, ascii: true, reader: false, color: '16', scanner: null }]);
+  });
+
+  it('opens the interface on the scanner and coil that were named, and not on one that is not there', async () => {
+    const seen: unknown[] = [];
+    const openInterface = (options: unknown) => {
+      seen.push(options);
+      return Promise.resolve(0);
+    };
+    const open = (...args: readonly string[]) => runCommand(args, { canDraw: true, openInterface });
+    expect((await open('--scanner', 'demo-3t', '--coil', 'HEAD')).exit).toBe(0);
+    expect((await open('--scanner', 'demo-1.5t')).exit).toBe(0);
+    expect(seen).toMatchObject([
+      { scanner: { file: { name: 'demo-3t' }, coil: 'head' } },
+      { scanner: { file: { name: 'demo-1.5t' }, coil: 'body' } },
+    ]);
+    expect(await open('--scanner', 'demo-4t')).toMatchObject({ exit: 66, out: '' });
+    expect(await open('--scanner', 'demo-3t', '--coil', 'hand')).toMatchObject({ exit: 64, out: '' });
+    expect(await open('--coil', 'head')).toMatchObject({ exit: 64, out: '' });
+    expect(seen).toHaveLength(2);
+  });
+
+  it('the demo session without a terminal is worked out on the scanner that was named', async () => {
+    const { exit, out } = await runCommand(['--scanner', 'demo-3t']);
+    expect(exit).toBe(0);
+    expect(out).toContain('On scanner demo-3t, coil body, the first of its file.');
+    expect(out).not.toBe((await runCommand([])).out);
+    expect((await runCommand(['--coil', 'head'])).exit).toBe(64);
   });
 
   it('prints the demo session without a terminal: running order, times, SNR, verdicts', async () => {

@@ -11,6 +11,8 @@ describe('foldersOf', () => {
       draftsFolder: '/home/a/.local/state/holdfast',
       ownPresetsFolder: '/home/a/.local/share/holdfast/presets',
       sitePresetsFolder: null,
+      siteScannersFolder: null,
+      siteRulesFile: null,
     });
     const environment = { XDG_CONFIG_HOME: '/c', XDG_DATA_HOME: '/d', XDG_STATE_HOME: '/s' };
     expect(foldersOf({ ...place, environment })).toMatchObject({
@@ -18,6 +20,12 @@ describe('foldersOf', () => {
       recordsFile: '/d/holdfast/records.jsonl',
       draftsFolder: '/s/holdfast',
     });
+  });
+
+  it("finds the site's scanner files and rules by the environment, from where the program was started", () => {
+    const environment = { HOLDFAST_SCANNERS: 'scanners', HOLDFAST_RULES: '/site/rules.json' };
+    expect(foldersOf({ ...place, environment })).toMatchObject({ siteScannersFolder: '/work/scanners', siteRulesFile: '/site/rules.json' });
+    expect(foldersOf({ ...place, environment: { HOLDFAST_SCANNERS: '', HOLDFAST_RULES: '' } })).toEqual(foldersOf(place));
   });
 
   it('leaves relative and empty XDG paths aside', () => {

@@ -1,6 +1,7 @@
-import { plainScanner } from '../../calc/scanner.js';
 import { type Change, type Command, neighbour, only, pointAt, say } from '../change.js';
 import { draftOf } from '../draft.js';
+import { chosenScanner, equipmentFor } from '../equipment.js';
+import { filedStudy, judgedStudy } from '../judged-study.js';
 import type { Effect, PresetChoice } from '../message.js';
 import { newSession } from '../session.js';
 import { type StartRow, startRows } from '../start-list.js';
@@ -50,10 +51,8 @@ export const choose: Command = (state) => {
 
 /** Begins a session on a preset, and asks for its rules to be read. */
 export function openPreset(state: State, { study, hash }: PresetChoice): Change {
-  const { role, scannerName, coilName, pauses } = state.defaults;
-  const session = newSession(study, role);
-  const plain = plainScanner(study.fieldT);
-  const opened = { study, hash, scanner: pauses === undefined ? plain : { ...plain, pauses }, scannerName, coilName };
+  const session = newSession(study, state.defaults.role);
+  const opened = { ...judgedStudy(study, state.siteRules), hash, ...equipmentFor(chosenScanner(state), study, state.defaults) };
   const place = { ...startPlace, screen: 'order', seriesId: session.series[0]?.id ?? '' } as const;
   return withRules({
     ...state,
@@ -76,12 +75,23 @@ export function openDraft(state: State, value: unknown): Change {
   if (draft === null)
     return only(say(state, 'This session was saved by another version of the program and cannot be gone on with', 'trouble'));
   const { opened, session, past, place, practiceSinceMs } = draft;
-  return withRules(
+  return judgeAgain(
     say(
       { ...state, opened, session, past, future: [], place, entry: null, rules: new Map(), practiceSinceMs, narrowing: '' },
       'Gone on with, everything as it was',
     ),
   );
+}
+
+/** Judges the open session by the rules of the site as they are now, and asks for all its rules to be read. */
+export function judgeAgain(state: State): Change {
+  const { opened } = state;
+  if (opened === null) return only(state);
+  const { ownMustKeeps: _before, ...rest } = opened;
+  const judged = judgedStudy(filedStudy(opened), state.siteRules);
+  // What is judged as before keeps what was worked out.
+  const same = JSON.stringify(judged.study) === JSON.stringify(opened.study);
+  return withRules(same ? state : { ...state, opened: { ...rest, ...judged }, rules: new Map() });
 }
 
 function withRules(state: State): Change {

@@ -11,15 +11,16 @@ const mayImport: Readonly<Record<string, readonly string[]>> = {
   formulas: ['calc'],
   study: ['calc', 'formulas'],
   search: ['calc', 'formulas', 'study'],
+  headers: ['calc', 'formulas', 'study'],
   picture: ['calc', 'formulas', 'study'],
-  session: ['calc', 'formulas', 'study', 'search', 'picture'],
-  screens: ['calc', 'formulas', 'study', 'search', 'picture', 'session', 'terminal'],
+  session: ['calc', 'formulas', 'study', 'search', 'picture', 'headers'],
+  screens: ['calc', 'formulas', 'study', 'search', 'picture', 'headers', 'session', 'terminal'],
   terminal: [],
-  store: ['calc', 'formulas', 'study'],
-  effects: ['calc', 'formulas', 'study', 'search', 'picture', 'store', 'session'],
-  commands: ['calc', 'formulas', 'study', 'search', 'picture', 'session', 'store', 'effects'],
+  store: ['calc', 'formulas', 'study', 'headers'],
+  effects: ['calc', 'formulas', 'study', 'search', 'picture', 'headers', 'store', 'session'],
+  commands: ['calc', 'formulas', 'study', 'search', 'picture', 'headers', 'session', 'store', 'effects'],
 };
-const pure = new Set(['calc', 'formulas', 'study', 'search', 'picture', 'session']);
+const pure = new Set(['calc', 'formulas', 'study', 'search', 'picture', 'headers', 'session']);
 /** The packages that a pure room may name, each in one file of its own: the parser of formulas (loaded late), the Fourier transform, the PNG writer. */
 const packageFiles: Readonly<Record<string, string>> = {
   [join('formulas', 'expression-parser.ts')]: 'mathjs',

@@ -5,6 +5,8 @@ export interface FileFacts {
   readonly modifiedMs: number;
   /** Permission bits alone: 0o600. */
   readonly mode: number;
+  /** The same for the same file or folder, whatever path leads to it; absent where the disk cannot say. */
+  readonly identity?: string;
 }
 
 /**

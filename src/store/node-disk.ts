@@ -39,6 +39,7 @@ function factsOf(stats: Stats): FileFacts {
     sizeBytes: stats.size,
     modifiedMs: stats.mtimeMs,
     mode: stats.mode & 0o777,
+    identity: `${stats.dev}:${stats.ino}`,
   };
 }
 

@@ -1,0 +1,10 @@
+import { createHmac, randomBytes } from 'node:crypto';
+
+/**
+ * A function that turns a UID into what groups images: a keyed hash. The key is new each time and is never written, so that nobody can
+ * tell from a hash which UID it was, nor compare two readings.
+ */
+export function seriesHash(): (uid: string) => string {
+  const key = randomBytes(32);
+  return (uid) => createHmac('sha256', key).update(uid).digest('hex').slice(0, 24);
+}

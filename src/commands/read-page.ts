@@ -101,7 +101,8 @@ function missingLines(one: SeriesToDraft, key: ClassKey | null, page: Page): str
   for (const { key: name, words } of missing) {
     if (needed.includes(name)) continue;
     const value = defaults?.[name];
-    const shown = value === undefined || value === null || Number.isNaN(value) ? '' : ` (${cleanText(sayParameter(name as ParameterKey, value), 30)})`;
+    const shown =
+      value === undefined || value === null || Number.isNaN(value) ? '' : ` (${cleanText(sayParameter(name as ParameterKey, value), 30)})`;
     byReason.set(words, [...(byReason.get(words) ?? []), `${parameterRow(name).label}${shown}`]);
   }
   const reasonOf = (name: ParameterKey) => missing.find((value) => value.key === name)?.words ?? 'not stated';

@@ -21,7 +21,9 @@ function findRepetition(series: CollectedSeries, key: ClassKey | null): Found {
   const stated = firstNumber(series, 'RepetitionTime');
   const inversion = inversionMs(series);
   if (stated.origin === 'read' && inversion !== undefined && (stated.value as number) < inversion) {
-    return missingFor(`RepetitionTime ${String(stated.value)} ms is under the inversion time: it is the time between readouts, not the cycle`);
+    return missingFor(
+      `RepetitionTime ${String(stated.value)} ms is under the inversion time: it is the time between readouts, not the cycle`,
+    );
   }
   return stated;
 }

@@ -100,6 +100,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
       scannerName: settings.scannerName,
       coilName: settings.coilName,
       pauses: { preparationS: settings.preparationS, restS: settings.restS },
+      release: { folder: folders.sitePresetsFolder, secondRole: settings.secondRoleToRelease },
       ...(choices.scanner == null ? {} : { scanner: choices.scanner }),
     },
     ascii: settings.glyphs === 'ascii',

@@ -1,8 +1,14 @@
 import type { Answer, Effect } from '../session/message.js';
 import { claimDraft } from './claim-draft.js';
 import type { InterfaceWorld } from './interface-world.js';
+import { listRecords } from './list-records.js';
+import { readPastRecord } from './read-past-record.js';
+import { readRevisions } from './read-revisions.js';
 import { readSessionRules } from './read-session-rules.js';
 import { readTypedExpression } from './read-typed-expression.js';
+import { stopReading } from './record-reading.js';
+import { checkRelease, releasePreset } from './release-preset.js';
+import { reportRecords } from './report-records.js';
 import { savePage } from './save-page.js';
 import { savePreset } from './save-preset.js';
 import { saveRecord } from './save-record.js';
@@ -36,6 +42,21 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return planSession(world, effect);
     case 'stop-search':
       world.searches.stop();
+      return null;
+    case 'read-revisions':
+      return readRevisions(world, effect);
+    case 'check-release':
+      return checkRelease(world, effect);
+    case 'release':
+      return releasePreset(world, effect);
+    case 'list-records':
+      return listRecords(world, effect);
+    case 'report-records':
+      return reportRecords(world, effect);
+    case 'read-record':
+      return readPastRecord(world, effect);
+    case 'stop-reading':
+      stopReading(world);
       return null;
     case 'quit':
       return null;

@@ -2,6 +2,7 @@ import { entryKeys, keyMap } from '../session/key-map.js';
 import { holdClock, runningSeries } from '../session/running.js';
 import { sayClock } from '../session/say-number.js';
 import { sayTime } from '../session/say-time.js';
+import { isShelfScreen, shelfHeadline } from '../session/shelf-headline.js';
 import type { ScreenName, State } from '../session/state.js';
 import { type Headline, seriesHeadline, sessionHeadline } from '../session/verdicts.js';
 import { textWidth } from '../terminal/text-width.js';
@@ -15,6 +16,8 @@ const ofSeries: readonly ScreenName[] = ['series', 'why', 'type-these', 'chart',
 /** The verdict of the present screen: of the series that is looked at, else of the session. */
 export function headlineOf(state: State): Headline {
   const { screen, seriesId } = state.place;
+  // While a session is open its verdict stays in sight, but not where something is released.
+  if (isShelfScreen(screen) && (state.session === null || screen === 'release')) return { word: null, text: shelfHeadline(state) };
   if (screen === 'scanner' && state.session === null) return { word: null, text: 'Choose a scanner and a coil' };
   return ofSeries.includes(screen) && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
 }
@@ -84,6 +87,10 @@ function rank(brief: string): number {
       'fit',
       'budget',
       'more',
+      'compare',
+      'revisions',
+      'show',
+      'report',
     ].includes(brief)
   )
     return 1;

@@ -1,4 +1,5 @@
 import { formRow } from '../session/hands/form-commands.js';
+import { releaseRow } from '../session/release-form.js';
 import type { State } from '../session/state.js';
 import { parameterHint } from './parameter-pane.js';
 
@@ -15,5 +16,8 @@ export function idleWords(state: State): string {
   if (screen === 'ways' || screen === 'front') return 'It proposes, people decide: Enter takes what the hand is on, u takes it back';
   if (screen === 'budget') return 'Enter takes the whole plan as one step, u takes it back';
   if (screen === 'scanner') return 'Enter takes it: every figure, way and budget is then worked out on it';
+  if (screen === 'release') return releaseRow(state)?.help ?? '';
+  if (screen === 'revisions') return 'A released revision is never changed: d begins a draft of it';
+  if (screen === 'report') return 'Small counts are said to be small; a suggestion is a variant to review';
   return screen === 'start' ? 'Presets are starting values; review before use.' : '';
 }

@@ -28,6 +28,7 @@ import { frontPoint } from './front-screen.js';
 import { idleWords } from './idle-words.js';
 import { fill, type Line, line, lineText, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
+import { shelfItems } from './shelf-items.js';
 import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
 import { titleLine } from './title-line.js';
 
@@ -70,6 +71,14 @@ function itemsOf(state: State, look: Look): readonly Item[] {
       return seriesItems(state);
     case 'chart':
       return chartItems(state);
+    case 'presets':
+    case 'revisions':
+    case 'compare':
+    case 'release':
+    case 'records':
+    case 'past-record':
+    case 'report':
+      return shelfItems(state);
     case 'scanner':
       return scannerItems(state);
     case 'ways':

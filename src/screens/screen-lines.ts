@@ -8,9 +8,13 @@ import { idleWords } from './idle-words.js';
 import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
 import { orderScreen } from './order-screen.js';
+import { presetsScreen, revisionsScreen } from './presets-screen.js';
 import { readerLines } from './reader-lines.js';
+import { recordsScreen } from './records-screen.js';
+import { releaseScreen } from './release-screen.js';
 import { scannerScreen } from './scanner-screen.js';
 import { seriesScreen } from './series-screen.js';
+import { shelfTextScreen } from './shelf-text-screen.js';
 import { startScreen } from './start-screen.js';
 import { helpScreen, typeTheseScreen, whyScreen } from './text-screen.js';
 import { titleLine } from './title-line.js';
@@ -36,6 +40,13 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
   readings: readingsScreen,
   scanner: scannerScreen,
   record: recordScreen,
+  presets: presetsScreen,
+  revisions: revisionsScreen,
+  compare: shelfTextScreen,
+  release: releaseScreen,
+  records: recordsScreen,
+  'past-record': shelfTextScreen,
+  report: shelfTextScreen,
   help: helpScreen,
 };
 

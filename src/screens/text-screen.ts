@@ -65,5 +65,12 @@ export const screenWords: Readonly<Record<ScreenName, string>> = {
   readings: 'scanner readings',
   scanner: 'scanner and coil',
   record: 'record',
+  presets: 'presets',
+  revisions: 'revisions',
+  compare: 'compared',
+  release: 'release',
+  records: 'records',
+  'past-record': 'one record',
+  report: 'report',
   help: 'help',
 };

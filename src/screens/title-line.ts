@@ -4,6 +4,7 @@ import { changedKeys } from '../session/changed-keys.js';
 import { equipmentNow, isFromFile } from '../session/equipment.js';
 import { fieldHere } from '../session/hands/series-commands.js';
 import { resultNow, studySeries } from '../session/results.js';
+import { isShelfScreen, shelfHeadline } from '../session/shelf-headline.js';
 import type { State } from '../session/state.js';
 import { listedWays } from '../session/ways.js';
 import { fitText } from '../terminal/text-width.js';
@@ -58,6 +59,8 @@ function words(state: State): string {
   if (screen === 'keep') return 'What is kept';
   if (screen === 'budget') return 'Budget: the session in the minutes left';
   if (screen === 'readings') return `Scanner readings: ${seriesId}`;
+  // The first line has the session's verdict: what the screen shows is said here.
+  if (isShelfScreen(screen) && state.session !== null && screen !== 'release') return shelfHeadline(state);
   const name = screenWords[screen];
   return name.charAt(0).toUpperCase() + name.slice(1);
 }

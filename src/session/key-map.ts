@@ -1,4 +1,3 @@
-import type { Command } from './change.js';
 import { leaveBudget, moveInBudget, otherPlan, showBudget, takePlan } from './hands/budget-commands.js';
 import { moveCursor, openChart, takeValue, turnFigure } from './hands/chart-commands.js';
 import { back, contrastGiven, quit, redo, show, undo } from './hands/common-commands.js';
@@ -15,7 +14,9 @@ import {
   stopEarly,
   turnSeries,
 } from './hands/order-commands.js';
+import { showRecords } from './hands/past-record-commands.js';
 import { practice } from './hands/patient-commands.js';
+import { showPresets } from './hands/preset-commands.js';
 import { saveAsPreset, savePage, saveRecord, turnRecordPane } from './hands/record-commands.js';
 import { moveInScanners, takeScanner } from './hands/scanner-commands.js';
 import {
@@ -46,40 +47,12 @@ import {
   takeWay,
   turnFront,
 } from './hands/ways-commands.js';
+import { type KeyRow, row, upAndDown } from './key-row.js';
 import type { KeyPress } from './message.js';
+import { shelfKeys } from './shelf-keys.js';
 import type { ScreenName, State } from './state.js';
 
-/** One line of the key map: keys, what they are called, what they do. Help and the bottom line are made from it. */
-export interface KeyRow {
-  /** Names of keys; characters stand for themselves. `any-text`: every character that no other line has. */
-  readonly keys: readonly string[];
-  /** How the keys are written on screen. */
-  readonly shown: string;
-  /** One or two words for the bottom line; blank keeps the line out of it. */
-  readonly brief: string;
-  readonly help: string;
-  readonly command: Command;
-  /** Where the keys work only here and now. */
-  readonly when?: (state: State) => boolean;
-}
-
 const digits = ['0', '1', '2', '3', '4', '5', '6', '7', '8', '9', '.'];
-
-const row = (
-  keys: string | readonly string[],
-  shown: string,
-  brief: string,
-  help: string,
-  command: Command,
-  when?: KeyRow['when'],
-): KeyRow => ({
-  keys: typeof keys === 'string' ? [keys] : keys,
-  shown,
-  brief,
-  help,
-  command,
-  ...(when === undefined ? {} : { when }),
-});
 
 const canGoTo =
   (screen: ScreenName) =>
@@ -105,13 +78,6 @@ const sessionKeys: readonly KeyRow[] = everywhere.map((each) =>
     ? { ...each, when: (state) => state.session !== null && (each.when?.(state) ?? true) }
     : each,
 );
-
-const upAndDown = (by: (rows: number) => Command, what: string): readonly KeyRow[] => [
-  row('up', 'up down', '', `Moves through ${what}.`, by(-1)),
-  row('down', '', '', '', by(1)),
-  row('home', 'Home End', '', `First and last of ${what}.`, by(-9999)),
-  row('end', '', '', '', by(9999)),
-];
 
 /** The ways of a series, from wherever it is looked at. */
 const toWays: readonly KeyRow[] = [
@@ -161,6 +127,8 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('tab', 'Tab', 'scanner', 'Scanner and coil of the next session, and what changes on them.', show('scanner')),
     row('backspace', 'Backspace', 'widen', 'Takes the last letter back.', widen, ({ narrowing }) => narrowing !== ''),
     row('escape', 'Esc', 'leave', 'Forgets what was typed; with nothing typed, leaves.', clearOrLeave),
+    row('right', 'Right', 'presets', 'The presets: revisions, comparing, drafts, releasing.', showPresets),
+    row('left', 'Left', 'records', 'The records: what was used, and the report.', showRecords),
     row('?', '?', 'help', 'Help for this screen.', show('help')),
   ],
   patient: [
@@ -188,6 +156,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('b', 'b', 'budget', 'Plans the session into the minutes left: as it is, shortened, skipped.', showBudget),
     ...toWays,
     row('n', 'n', '', 'New session; after the record is saved.', anotherSession),
+    row('m', 'm', '', 'More: presets and their revisions, and from there the records.', showPresets),
     row('tab', 'Tab', '', 'Scanner and coil of this session, and what changes on them.', show('scanner')),
     ...everywhere,
   ],
@@ -266,6 +235,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('t', 't', '', 'Writes one page of plain text to print.', savePage),
     ...everywhere,
   ],
+  ...shelfKeys,
   help: [...upAndDown(scrollText, 'the text'), ...everywhere],
 };
 

@@ -7,6 +7,7 @@ import type { ScannerFile } from '../study/scanner-file.js';
 import type { SiteRules } from '../study/site-rules.js';
 import type { MustKeep, Study } from '../study/study.js';
 import type { Draft } from './draft.js';
+import type { ShelfAnswer, ShelfEffect } from './shelf-messages.js';
 import type { WaysAnswer } from './ways.js';
 
 /** One key, as the terminal gives it: a name, and the text of what was typed or pasted. */
@@ -37,7 +38,8 @@ export type Answer =
   | { readonly kind: 'rules'; readonly rules: Rules }
   | { readonly kind: 'draft'; readonly session: unknown }
   | { readonly kind: 'ways'; readonly ways: WaysAnswer }
-  | { readonly kind: 'plan'; readonly plan: Budget };
+  | { readonly kind: 'plan'; readonly plan: Budget }
+  | ShelfAnswer;
 
 /** Everything that can happen to the interface. */
 export type Message =
@@ -50,7 +52,7 @@ export type Message =
   | { readonly kind: 'site-rules'; readonly siteRules: SiteRules }
   /** Something outside that a person should know. */
   | { readonly kind: 'note'; readonly words: string }
-  /** How far a search is, 0 to 1. */
+  /** How far a search or a reading of records is, 0 to 1. */
   | { readonly kind: 'progress'; readonly ask: number; readonly share: number }
   | { readonly kind: 'answer'; readonly ask: number; readonly answer: Answer };
 
@@ -68,6 +70,7 @@ export type Effect =
   | { readonly kind: 'plan'; readonly ask: number; readonly problem: BudgetProblem }
   /** Ends the search or plan that runs; a search answers with what it has. */
   | { readonly kind: 'stop-search' }
+  | ShelfEffect
   | { readonly kind: 'quit' };
 
 /** The name, unit and present value that an expression may use. */

@@ -8,7 +8,7 @@ export type StartRow =
   | { readonly kind: 'preset'; readonly field: string; readonly preset: PresetChoice };
 
 /** Whether a preset is meant by what was typed: a number narrows the field strength, a word the region, the id and the title. */
-function isMeant({ study }: PresetChoice, narrowing: string): boolean {
+export function isMeant({ study }: PresetChoice, narrowing: string): boolean {
   const text = `${study.region} ${study.id} ${study.title}`.toLowerCase();
   return narrowing
     .toLowerCase()
@@ -37,14 +37,17 @@ export function startRows(state: State): readonly StartRow[] {
     seen.add(preset.study.id);
     return isMeant(preset, state.narrowing);
   });
-  presets.sort((a, b) => compare(a.study.region, b.study.region) || a.study.fieldT - b.study.fieldT || compare(a.study.id, b.study.id));
+  presets.sort(
+    (a, b) => compareTexts(a.study.region, b.study.region) || a.study.fieldT - b.study.fieldT || compareTexts(a.study.id, b.study.id),
+  );
   return [
     ...(state.narrowing === '' ? drafts : []),
     ...presets.map((preset): StartRow => ({ kind: 'preset', field: `preset ${preset.study.id}`, preset })),
   ];
 }
 
-function compare(a: string, b: string): number {
+/** Order of the alphabet, the same everywhere. */
+export function compareTexts(a: string, b: string): number {
   return a < b ? -1 : a > b ? 1 : 0;
 }
 

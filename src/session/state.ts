@@ -6,6 +6,8 @@ import { noSiteRules, type SiteRules } from '../study/site-rules.js';
 import type { ScannerChoice } from './equipment.js';
 import type { DraftChoice, PresetChoice } from './message.js';
 import type { Opened, Session } from './session.js';
+import { emptyShelf, type Shelf } from './shelf.js';
+import type { ShelfAsk } from './shelf-messages.js';
 import type { ListedWay, SessionPlan, WaysSearch } from './ways.js';
 
 export const screenNames = [
@@ -23,6 +25,13 @@ export const screenNames = [
   'readings',
   'scanner',
   'record',
+  'presets',
+  'revisions',
+  'compare',
+  'release',
+  'records',
+  'past-record',
+  'report',
   'help',
 ] as const;
 export type ScreenName = (typeof screenNames)[number];
@@ -108,7 +117,9 @@ export interface State {
   readonly rules: Rules;
   /** Asks so far; the newest of each kind that is still open. */
   readonly asks: number;
-  readonly open: Readonly<Partial<Record<'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'search' | 'plan', number>>>;
+  readonly open: Readonly<
+    Partial<Record<'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'search' | 'plan' | ShelfAsk, number>>
+  >;
   /** A saving of this record failed: the next try looks whether it stands there after all. */
   readonly recordFailed: boolean;
   /** The session whose record is being saved: what is changed meanwhile is not in it. */
@@ -125,6 +136,8 @@ export interface State {
   /** The way taken last: what was set before it and with it. */
   readonly taken: { readonly seriesId: string; readonly base: GivenParameters; readonly given: GivenParameters } | null;
   readonly plan: SessionPlan | null;
+  /** Presets and records, as their screens show them. */
+  readonly shelf: Shelf;
 }
 
 export interface Defaults {
@@ -135,6 +148,8 @@ export interface Defaults {
   /** Scanner named on the command line. */
   readonly scanner?: ScannerChoice;
   readonly pauses?: { readonly preparationS: number; readonly restS: number };
+  /** Where presets are released to, and whether that takes a second role; absent: nowhere. */
+  readonly release?: { readonly folder: string | null; readonly secondRole: boolean };
 }
 
 export const startPlace: Place = {
@@ -182,5 +197,6 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     lastWay: null,
     taken: null,
     plan: null,
+    shelf: emptyShelf,
   };
 }

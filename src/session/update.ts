@@ -6,6 +6,7 @@ import { keepSearching } from './keep-searching.js';
 import { keyRowFor } from './key-map.js';
 import type { Answer, Effect, Message } from './message.js';
 import type { State } from './state.js';
+import { takeShelfAnswer, withReadingShare } from './take-shelf-answer.js';
 
 /**
  * What a message makes of the interface, and what it asks of the world outside. Pure and synchronous; every message is taken in
@@ -48,7 +49,7 @@ function carryOut(state: State, message: Message): Change {
         state.session === null ? { ...state, fileNotes: withNotes(state, [message.words]) } : say(state, message.words, 'trouble'),
       );
     case 'progress':
-      return only(withShare(state, message.ask, message.share));
+      return only(withReadingShare(withShare(state, message.ask, message.share), message.ask, message.share));
     case 'answer':
       return takeAnswer(state, message.ask, message.answer);
   }
@@ -99,6 +100,13 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
       const said = answer.kind === 'plan' ? { answer: answer.plan, trouble: null } : { answer: null, trouble: failed ?? 'The plan failed' };
       return only({ ...next, plan: { ...plan, ...said } });
     }
+    case 'revisions':
+    case 'checks':
+    case 'release':
+    case 'list':
+    case 'one-record':
+    case 'report':
+      return takeShelfAnswer(next, kind, answer, failed);
     case 'preset':
     case 'page':
       return only(answer.kind === 'done' ? say(next, answer.words) : say(next, failed ?? 'Not saved', 'trouble'));

@@ -5,6 +5,7 @@ import type { RecordedSeries } from './record.js';
 
 /** Parameters whose planned and used value differ, in table order. */
 export function changedParameters({ planned, used }: RecordedSeries): ParameterKey[] {
+  if (planned === used) return [];
   return parameterKeys.filter((key) => JSON.stringify(planned.parameters[key]) !== JSON.stringify(used.parameters[key]));
 }
 

@@ -9,6 +9,7 @@ import { setField } from '../set-field.js';
 import type { Entry, State } from '../state.js';
 import { snapValue } from '../step-value.js';
 import { commitRow } from './form-commands.js';
+import { commitRelease } from './release-commands.js';
 import { fieldsHere } from './series-commands.js';
 
 const longestEntry = 160;
@@ -30,6 +31,7 @@ export function typeKey(state: State, entry: Entry, key: KeyPress): Change {
 
 /** Takes what was typed. */
 function commit(state: State, entry: Entry): Change {
+  if (state.place.screen === 'release') return commitRelease(state, entry.field, entry.text);
   if (state.place.screen !== 'series') return only(commitRow(state, entry.field, entry.text));
   const field = fieldsHere(state).find(({ path }) => path === entry.field);
   if (field === undefined || entry.text.trim() === '') return only({ ...state, entry: null });

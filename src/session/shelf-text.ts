@@ -1,0 +1,65 @@
+import { recordedDifference } from '../study/preset-diff.js';
+import { recordPage } from '../study/record-print.js';
+import { differencePage, seriesDifferenceLines } from './difference-page.js';
+import { reportPage } from './report-page.js';
+import type { State } from './state.js';
+import type { TextPage } from './text-page.js';
+
+/** One line of a text, and whether it is a heading. */
+export interface TextLine {
+  readonly text: string;
+  readonly heading: boolean;
+}
+
+/** Texts by what they were made from: they are asked for with every key. */
+const known = new WeakMap<object, Map<string, readonly TextLine[]>>();
+
+/** The text of the comparison, of a record or of the report, as lines; none while there is nothing to show. */
+export function shelfText(state: State, reader: boolean): readonly TextLine[] {
+  const { screen } = state.place;
+  const { compared, record, report } = state.shelf;
+  if (screen === 'compare' && compared !== null)
+    return textOf(compared, reader, (page) => differencePage(compared.from, compared.to, page));
+  if (screen === 'past-record' && record?.read != null) {
+    const past = record.read;
+    return textOf(past, reader, (page) => [
+      ...recordPage(past).trimEnd().split('\n'),
+      ...past.series.map(recordedDifference).flatMap((series) => seriesDifferenceLines(series, { from: 'planned', to: 'used' }, page)),
+    ]);
+  }
+  if (screen === 'report' && report?.read != null) {
+    const { shown, notes } = report.read;
+    return textOf(report.read, reader, (page) => [...notes, ...reportPage(shown, page).trimEnd().split('\n')]);
+  }
+  return [];
+}
+
+function textOf(source: object, reader: boolean, make: (page: TextPage) => readonly string[]): readonly TextLine[] {
+  let texts = known.get(source);
+  if (texts === undefined) {
+    texts = new Map();
+    known.set(source, texts);
+  }
+  const name = reader ? 'reader' : 'eyes';
+  let lines = texts.get(name);
+  if (lines === undefined) {
+    const headings = new Set<string>();
+    const page: TextPage = {
+      reader,
+      width: 78,
+      emphasis: (kind, text) => {
+        if (kind === 'heading') headings.add(text);
+        return text;
+      },
+    };
+    lines = make(page).map((text) => ({ text, heading: headings.has(text) }));
+    texts.set(name, lines);
+  }
+  return lines;
+}
+
+/** Line of the text that stands first on the screen. */
+export function textFrom({ place }: State): number {
+  const at = Number(place.fields[place.screen] ?? 0);
+  return Number.isFinite(at) ? Math.max(0, at) : 0;
+}

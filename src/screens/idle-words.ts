@@ -1,4 +1,5 @@
 import { formRow } from '../session/hands/form-commands.js';
+import { presetRow } from '../session/preset-rows.js';
 import { releaseRow } from '../session/release-form.js';
 import type { State } from '../session/state.js';
 import { parameterHint } from './parameter-pane.js';
@@ -19,5 +20,6 @@ export function idleWords(state: State): string {
   if (screen === 'release') return releaseRow(state)?.help ?? '';
   if (screen === 'revisions') return 'A released revision is never changed: d begins a draft of it';
   if (screen === 'report') return 'Small counts are said to be small; a suggestion is a variant to review';
+  if (screen === 'presets') return presetRow(state)?.study.title ?? '';
   return screen === 'start' ? 'Presets are starting values; review before use.' : '';
 }

@@ -56,8 +56,8 @@ export function revisionsScreen(state: State, look: Look, columns: number, rows:
   );
   const body = shown.items.map((row): Line => {
     const { study, origin } = row;
-    const who = study.released === undefined ? '-' : `${study.released.day} ${releasedWords(study).slice(study.released.day.length + 1)}`;
-    const words = `${marked === study ? '=' : ' '}${String(study.revision).padStart(4)}  ${statusOf(row).padEnd(9)}${originWords[origin].padEnd(11)}${who}`;
+    const who = `${marked === study ? 'MARKED  ' : ''}${releasedWords(study)}`;
+    const words = ` ${String(study.revision).padStart(4)}  ${statusOf(row).padEnd(9)}${originWords[origin].padEnd(11)}${who}`;
     return pointed(words, row.field === here?.field, look, columns);
   });
   if (revisions !== null && revisions.presets === null) body.push(line('  Reading the revisions'));

@@ -36,6 +36,7 @@ export function differencePage(a: Study, b: Study, page: TextPage): string[] {
 
 function sideNames(a: Study, b: Study): SideNames {
   if (a.id === b.id && a.revision !== b.revision) return { from: `rev ${a.revision}`, to: `rev ${b.revision}` };
+  if (a.id === b.id && a.status !== 'draft' && b.status === 'draft') return { from: `rev ${a.revision}`, to: 'draft' };
   return a.id === b.id ? { from: 'first', to: 'second' } : { from: a.id, to: b.id };
 }
 

@@ -29,13 +29,20 @@ function rowOf(choice: PresetChoice): PresetRow {
 /** The session of these values, asked for with every key: worked out once. */
 const known = new WeakMap<object, Study | null>();
 
+/** What a session made of a preset is a draft, whoever released that. */
+function draftOf(study: Study | null): Study | null {
+  if (study === null) return null;
+  const { released: _before, ...rest } = study;
+  return { ...rest, status: 'draft' };
+}
+
 /** The open session as a preset: its values in the place of the planned ones. */
 function sessionRow(state: State): PresetRow[] {
   const { session, opened } = state;
   if (session === null || opened === null) return [];
   let study = known.get(session);
   if (study === undefined) {
-    study = studyOfSession(state);
+    study = draftOf(studyOfSession(state));
     known.set(session, study);
   }
   return study === null ? [] : [{ field: 'session', study, origin: 'session', choice: null }];

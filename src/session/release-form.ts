@@ -1,5 +1,6 @@
 import { cleanText } from '../study/clean-text.js';
 import { idForm } from '../study/limits.js';
+import { isSameContent, studyDifference } from '../study/preset-diff.js';
 import { freeText, freeTextReminder } from '../study/record-text.js';
 import { isReleasable } from '../study/release-checks.js';
 import { releaseSaid } from '../study/release-said.js';
@@ -92,6 +93,8 @@ export function releaseNow(
     return against(`From which revision of ${id} was it made? The newest of the site is ${newest?.revision ?? 0}`, 'basedOn');
   if (newest !== null && basedOn > newest.revision)
     return against(`It says revision ${basedOn}; the newest of the site is ${newest.revision}`, 'basedOn');
+  if (newest !== null && isSameContent(studyDifference(newest, { ...form.study, id })))
+    return against(`Nothing differs from revision ${newest.revision} of the site`);
   const said = releaseSaid(form, needsSecond(state));
   return said.ok ? { said: said.value, basedOn } : against(`${said.fault.message} ${said.fault.hint}`, said.fault.of);
 }

@@ -39,6 +39,8 @@ export function shelfHeadline(state: State): string {
   if (screen === 'compare') {
     if (compared === null) return 'Nothing to compare';
     const { from, to } = compared;
+    if (to.status === 'draft' && from.id === to.id)
+      return `${from.id} revision ${from.revision} against the draft made from revision ${to.revision}`;
     return `${from.id} revision ${from.revision} against ${to.id === from.id ? '' : `${to.id} `}revision ${to.revision}`;
   }
   const reading = screen === 'report' ? report : record;

@@ -5,8 +5,11 @@ import { back } from './common-commands.js';
 import { saveAsPreset } from './record-commands.js';
 import { openPreset } from './start-commands.js';
 
-/** Opens the list of presets. */
-export const showPresets: Command = (state) => only(open(state, 'presets'));
+/** Opens the list of presets, with an open session on that. */
+export const showPresets: Command = (state) => {
+  const whole = { ...state, shelf: { ...state.shelf, narrowing: '' } };
+  return only(pointAt(open(whole, 'presets'), presetRows(whole)[0]?.field ?? ''));
+};
 
 export const moveInPresets =
   (by: number): Command =>
@@ -84,10 +87,7 @@ export const editAsDraft: Command = (state) => {
   if (state.session !== null && !state.session.saved && state.past.length > 0)
     return only(say(state, 'Save the record first (e, then s): this program keeps one session at a time', 'trouble'));
   const [next, effects] = openPreset(state, row.choice);
-  return [
-    say(next, `A draft of revision ${row.study.revision}: change its series, then Tab and Enter on "now" to compare, save or release it`),
-    effects,
-  ];
+  return [say(next, `Draft of revision ${row.study.revision}: change its series, then m compares, saves and releases it`), effects];
 };
 
 /** Saves the open session's values as a draft preset of this user. */

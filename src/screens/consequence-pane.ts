@@ -38,6 +38,14 @@ export function consequencePane(state: State, look: Look, columns: number, rows:
     const isHere = row.key === here;
     const { number, unit } = figureParts(row.key, resultNow(state, seriesId).evaluation.figures[row.key]);
     const style = isHere ? 'inverse' : row.over ? 'trouble' : 'plain';
+    if (row.value === 'not known') {
+      const empty = strip(null, row.limitRatio, false, stripColumns, look);
+      return [
+        span(`${isHere ? glyphs.pointer : ' '}${fitText(row.label, 11, glyphs.ellipsis)} `, style),
+        ...empty,
+        span('   not known', style),
+      ];
+    }
     const tail = row.over ? 'over' : row.change === '0 %' ? '' : row.change.replace(' ', '');
     return [
       span(`${isHere ? glyphs.pointer : ' '}${fitText(row.label, 11, glyphs.ellipsis)} `, style),

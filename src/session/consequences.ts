@@ -44,35 +44,38 @@ export function consequences(state: State, id: string): readonly Consequence[] {
   const before = resultOfPreset(state, id).evaluation.figures;
   const judged = seriesVerdicts(state, id);
   const has = classRow(classOf(series)).figures;
-  return scaleFigures
-    .filter((key) => has.includes(key) && now.figures[key] !== null)
-    .map((key) => {
-      const value = now.figures[key];
-      const base = figureRow(key).ratio === true ? 1 : before[key];
-      const ratio = value !== null && base !== null && base > 0 ? value / base : null;
-      const limits = [
-        ...judged.filter(({ of }) => of === key).map(({ verdict }) => verdict.limit),
-        ...mustKeepLimits(series.mustKeep, key),
-      ];
-      const limit = limits[0] ?? rfLimit(state, id, key);
-      const crossed = resultNow(state, id).mustKeeps.some(({ mustKeep, status }) => status === 'crossed' && mustKeep.figure === key);
-      return {
-        key,
-        label: figureLabel(key),
-        ratio,
-        value: sayFigure(key, value),
-        change: ratio === null ? '' : sayChange(ratio - 1).replace('NaN', ''),
-        limitRatio: limit === undefined || base === null || base <= 0 ? null : limit / base,
-        over:
-          crossed ||
-          judged.some(
-            ({ of, verdict }) =>
-              verdict.word === 'OVER' &&
-              (of === key || (of === 'sar' && key === 'rfPowerTrend') || (of === 'b1PlusRmsUt' && key === 'rfPowerTrend')),
-          ),
-        fromReading: now.fromReading.includes(key),
-      };
-    });
+  return (
+    scaleFigures
+      // What has a value with the preset stays in sight where it has none now: it is not known, which is no zero.
+      .filter((key) => has.includes(key) && (now.figures[key] !== null || before[key] !== null))
+      .map((key) => {
+        const value = now.figures[key];
+        const base = figureRow(key).ratio === true ? 1 : before[key];
+        const ratio = value !== null && base !== null && base > 0 ? value / base : null;
+        const limits = [
+          ...judged.filter(({ of }) => of === key).map(({ verdict }) => verdict.limit),
+          ...mustKeepLimits(series.mustKeep, key),
+        ];
+        const limit = limits[0] ?? rfLimit(state, id, key);
+        const crossed = resultNow(state, id).mustKeeps.some(({ mustKeep, status }) => status === 'crossed' && mustKeep.figure === key);
+        return {
+          key,
+          label: figureLabel(key),
+          ratio,
+          value: value === null ? 'not known' : sayFigure(key, value),
+          change: ratio === null ? '' : sayChange(ratio - 1).replace('NaN', ''),
+          limitRatio: limit === undefined || base === null || base <= 0 ? null : limit / base,
+          over:
+            crossed ||
+            judged.some(
+              ({ of, verdict }) =>
+                verdict.word === 'OVER' &&
+                (of === key || (of === 'sar' && key === 'rfPowerTrend') || (of === 'b1PlusRmsUt' && key === 'rfPowerTrend')),
+            ),
+          fromReading: now.fromReading.includes(key),
+        };
+      })
+  );
 }
 
 /** Limits that a must-keep puts on a figure: the upper one where there are two. */

@@ -223,7 +223,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
   scanner: [
     ...upAndDown(moveInScanners, 'the scanners and their coils'),
     row('enter', 'Enter', 'take', 'Takes this scanner and coil; in a session undo takes them back.', takeScanner),
-    row('tab', 'Tab', '', 'Back.', back),
+    row('tab', 'Tab', '', 'Back to where this was opened.', back),
     ...sessionKeys,
   ],
   record: [

@@ -13,6 +13,7 @@ import { update } from '../../src/session/update.js';
 import { asciiGlyphs, unicodeGlyphs } from '../../src/terminal/glyphs.js';
 import { textWidth } from '../../src/terminal/text-width.js';
 import { onField, press, sessionOn, startState } from '../session/invented-state.js';
+import { atScanner, shippedScanners, startWithScanners } from '../session/shipped-scanners.js';
 
 const unicode: Look = { glyphs: unicodeGlyphs, set: 'unicode', colourLevel: 0, reader: false };
 const ascii: Look = { ...unicode, glyphs: asciiGlyphs, set: 'ascii' };
@@ -59,12 +60,18 @@ function waysScreens(id: string): readonly (readonly [string, State])[] {
   ];
 }
 
+/** The same with the shipped scanners to choose from. */
+const onScanners = (state: State) => update(state, { kind: 'scanners', scanners: shippedScanners, notes: [] })[0];
+
 /** Every screen, in the middle of some work. */
 function everyScreen(id: string): readonly (readonly [string, State])[] {
   const order = press(sessionOn(id), 'p', '11', 'enter', 'escape');
   const series = press(onField(press(order, 'enter'), 'sliceThicknessMm'), '+');
   return [
     ['start', startState()],
+    ['start with scanners', startWithScanners()],
+    ['scanner', atScanner(startWithScanners(), 'demo-1.5t body')],
+    ['scanner, help', press(startWithScanners(), 'tab', 'h')],
     ['order', order],
     ['patient', press(order, 'p')],
     ['series', series],
@@ -79,6 +86,7 @@ function everyScreen(id: string): readonly (readonly [string, State])[] {
     ['record', press(series, 'e')],
     ['record, reasons', press(series, 'e', 'tab')],
     ['help', press(series, 'h')],
+    ['scanner, of a session', atScanner(onScanners(order), 'demo-3t head')],
     ...waysScreens(id),
   ];
 }

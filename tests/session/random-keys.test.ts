@@ -12,7 +12,8 @@ import type { Effect, Message } from '../../src/session/message.js';
 import type { State } from '../../src/session/state.js';
 import { draftNow, update } from '../../src/session/update.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
-import { keyOf, startState } from './invented-state.js';
+import { keyOf } from './invented-state.js';
+import { startWithScanners } from './shipped-scanners.js';
 
 const named = [
   'up',
@@ -136,7 +137,7 @@ function faults(state: State): string[] {
       'limits are positive',
     );
     must((session.contrastAtMs !== null) === (limits.contrastGiven === true), 'contrast and its clock agree');
-  } else must(['start', 'help'].includes(place.screen), `no session on ${place.screen}`);
+  } else must(['start', 'help', 'scanner'].includes(place.screen), `no session on ${place.screen}`);
   const { search, plan, open } = state;
   must(
     search === null || session === null || session.series.some(({ id }) => id === search.seriesId),
@@ -160,7 +161,7 @@ describe('update under random keys', () => {
         fc.boolean(),
         fc.constantFrom(['liver-3t'], ['lumbar-spine-1.5t'], ['brain-3t', 'heart-cine-3t']),
         (messages, well, presets) => {
-          let state = startState(presets);
+          let state = startWithScanners(presets);
           const send = (next: Message) => {
             const [changed, effects] = update(state, next);
             state = changed;

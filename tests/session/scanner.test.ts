@@ -1,4 +1,3 @@
-import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { larmorMhz } from '../../src/calc/constants.js';
 import { draftOf } from '../../src/session/draft.js';
@@ -10,27 +9,16 @@ import { scannerRows, scannerWords } from '../../src/session/scanner-list.js';
 import { budgetProblemOf, searchProblemOf } from '../../src/session/search-problem.js';
 import { initialState, type State } from '../../src/session/state.js';
 import { draftNow, update } from '../../src/session/update.js';
-import { readScannerFile } from '../../src/study/read-scanner-file.js';
 import type { ScannerFile } from '../../src/study/scanner-file.js';
-import { after, onField, presetChoice, press, startState } from './invented-state.js';
+import { after, onField, presetChoice, press } from './invented-state.js';
+import { atScanner, shippedScanners, startWithScanners } from './shipped-scanners.js';
 
-function demo(name: string): ScannerFile {
-  const read = readScannerFile(readFileSync(new URL(`../../scanners/${name}.json`, import.meta.url), 'utf8'), `${name}.json`);
-  if (!read.ok) throw new Error(read.problems[0]?.message);
-  return read.value;
-}
-
-const scanners = [demo('demo-1.5t'), demo('demo-3t')];
-
-function start(ids: readonly string[] = ['liver-3t']): State {
-  return update(startState(ids), { kind: 'scanners', scanners, notes: [] })[0];
-}
+const scanners = shippedScanners;
+const start = startWithScanners;
 
 /** At the start, with a scanner and a coil chosen. */
-function chosen(coil: string, ids?: readonly string[]): State {
-  const list = press(start(ids), 'tab');
-  const at = scannerRows(list).findIndex(({ field }) => field === coil);
-  return press(list, 'home', ...Array<string>(at).fill('down'), 'enter');
+function chosen(field: string, ids?: readonly string[]): State {
+  return press(atScanner(start(ids), field), 'enter');
 }
 
 describe('a scanner chosen at the start', () => {
@@ -43,8 +31,7 @@ describe('a scanner chosen at the start', () => {
 
   it('shows what changes: frequencies at the exact field, g, shortest TE and TR, slices in one TR', () => {
     const list = press(start(), 'tab');
-    const at = scannerRows(list).findIndex(({ field }) => field === 'demo-3t body');
-    const { facts, table, attention } = scannerWords(press(list, 'home', ...Array<string>(at).fill('down')));
+    const { facts, table, attention } = scannerWords(atScanner(start(), 'demo-3t body'));
     expect(facts[0]).toContain(`Larmor ${larmorMhz(3).toFixed(3)} > ${larmorMhz(2.894).toFixed(3)} MHz`);
     expect(facts[1]).toBe('Opposed 1.15 > 1.19 ms, in phase 2.30 > 2.39 ms');
     expect(table?.[0]).toEqual(['series', 'g', 'shortest TE', 'shortest TR', 'slices/TR', 'fat px']);
@@ -90,11 +77,7 @@ describe('a scanner chosen at the start', () => {
 
 describe('a scanner changed in a session', () => {
   const order = press(start(), 'enter');
-  const onDemo = (state: State) => {
-    const list = press(state, 'o', 'tab');
-    const at = scannerRows(list).findIndex(({ field }) => field === 'demo-3t body');
-    return press(list, 'home', ...Array<string>(at).fill('down'), 'enter');
-  };
+  const onDemo = (state: State) => press(atScanner(press(state, 'o'), 'demo-3t body'), 'enter');
 
   it('is one step, which undo takes back and redo does again', () => {
     const state = onDemo(order);

@@ -1,6 +1,6 @@
 import { type ClassKey, classRow } from '../calc/classes.js';
 import { gammaBarMhzPerT } from '../calc/constants.js';
-import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
+import { parameterKeys } from '../calc/parameters.js';
 import { type ClassDecision, classOfHeaders } from './class-of-headers.js';
 import type { CollectedSeries } from './collected-series.js';
 import { derivedAs, type Found, missingFor, type ReadValue, readAs } from './found.js';
@@ -8,6 +8,7 @@ import { guessFromDuration } from './guess-from-duration.js';
 import type { HeaderSource } from './header.js';
 import { valueRules } from './value-rules.js';
 import { cross, directionsOf, nearestAxis } from './vector.js';
+import { withinRange } from './within-range.js';
 
 /** One series as its headers tell it, parameter by parameter. */
 export interface ReadSeries {
@@ -53,15 +54,6 @@ function fieldOf({ attributes: a }: CollectedSeries): Found {
   const frequency = a.ImagingFrequency?.[0] ?? 0;
   if (frequency > 0) return derivedAs(Number((frequency / gammaBarMhzPerT).toFixed(2)), 'ImagingFrequency of hydrogen');
   return missingFor('MagneticFieldStrength is not stated');
-}
-
-/** A value that no preset may hold is named and counts as missing. */
-function withinRange(key: ParameterKey, found: Found): Found {
-  const row = parameterRow(key);
-  if (row.kind !== 'number' || typeof found.value !== 'number') return found;
-  const value = row.whole ? Math.round(found.value) : found.value;
-  const inside = value <= row.max && (row.aboveMin ? value > row.min : value >= row.min) && Math.abs(value - found.value) < 0.01;
-  return inside ? { ...found, value } : missingFor(`${found.words} gives ${found.value}, which is no value of ${key}`);
 }
 
 /** What the headers say of each parameter of a class (of every parameter where there is none). */

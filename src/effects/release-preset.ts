@@ -22,7 +22,10 @@ export async function checkRelease(world: InterfaceWorld, { study }: Extract<Eff
   if (!site.ok) return failed(site.problems);
   const previous = newest.value?.study ?? null;
   const checked = checkedStudy(study, site.value, { fieldT: null, previous }, await world.parser());
-  return checked.ok ? { kind: 'checked', findings: checked.value, newest: previous } : { kind: 'failed', problems: checked.problems };
+  if (!checked.ok) return { kind: 'failed', problems: checked.problems };
+  // Who releases it, when and why is what is being typed.
+  const findings = checked.value.filter(({ code }) => code !== 'release-not-said');
+  return { kind: 'checked', findings, newest: previous };
 }
 
 /** Releases a study as the next revision of the site's folder: checked once more, then added, or told that somebody was first. */

@@ -82,7 +82,7 @@ export const objectSchema: Schema = {
         {
           frontBackMm: extent('front to back, where none is typed'),
           leftRightMm: extent('right to left, where none is typed'),
-          headFeetMm: extent('head to feet'),
+          headFeetMm: extent('head to feet, as far as the coil sees'),
           fatRimMm: { type: 'number', minimum: 0, maximum: 200, description: 'thickness of the fat around' },
           tissue,
         },

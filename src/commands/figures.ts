@@ -1,10 +1,6 @@
 import { unknownBody } from '../calc/body.js';
-import { classKeys, classRow } from '../calc/classes.js';
-import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
 import { plainScanner } from '../calc/scanner.js';
-import { classOf, type GivenParameters } from '../calc/series.js';
 import { presetBaseline, type SeriesResult, seriesResult } from '../session/series-result.js';
-import { nearestWord } from '../study/nearest-word.js';
 import { runningOrder } from '../study/running-order.js';
 import { readSetValues } from '../study/set-values.js';
 import type { Study, StudySeries } from '../study/study.js';
@@ -18,6 +14,7 @@ import { figuresJson } from './figures-json.js';
 import { loadJudgedPreset } from './load-judged-preset.js';
 import type { LoadedPreset } from './load-preset.js';
 import { pageOf } from './page.js';
+import { parameterOfOtherClass } from './parameter-of-other-class.js';
 import { readBody, readField, readReadings } from './read-named-numbers.js';
 import { seriesNamed } from './series-named.js';
 import { seriesPage } from './series-page.js';
@@ -100,20 +97,4 @@ function pickSeries(study: Study, seriesId: string | undefined, request: Command
   }
   const found = seriesNamed(study, seriesId);
   return found.ok ? { ok: true, value: [found.value] } : found;
-}
-
-/** Refuses a set value that this class has no use for: it would change nothing. A split goes on to the model, which says why it cannot be. */
-function parameterOfOtherClass(series: StudySeries, set: GivenParameters): Attempt<never> | null {
-  const { parameters: has, label } = classRow(classOf(series));
-  const foreign = (Object.keys(set) as ParameterKey[]).find(
-    (key) => key !== 'rounds' && !has.includes(key) && set[key] !== series.parameters[key],
-  );
-  if (foreign === undefined) return null;
-  const near = nearestWord(
-    foreign,
-    parameterKeys.filter((key) => has.includes(key)),
-  );
-  const users = classKeys.filter((key) => classRow(key).parameters.includes(foreign)).map((key) => classRow(key).label);
-  const message = `Series ${series.id} is ${label}, which has no ${parameterRow(foreign).label} (${foreign}).`;
-  return wrongUse('--set', message, near === null ? `It belongs to: ${users.join(', ')}.` : `Did you mean ${near}?`);
 }

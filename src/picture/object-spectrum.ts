@@ -62,9 +62,8 @@ function turns(samples: number, extentMm: number, placeMm: number): Float64Array
   return turned;
 }
 
-/** Multiplies the turns of repeated shapes in: the sum over them of their own turns. Real and even only about their common middle, which `turns` has. */
+/** Sum of the turns of equal shapes in a row, about the middle of the row: real, `sin(n a / 2) / sin(a / 2)` with a the turn from one to the next. */
 function repetition(count: number, angle: number): number {
-  // Sum of cosines about the middle: sin(n a / 2) / sin(a / 2).
   const half = Math.sin(angle / 2);
   if (Math.abs(half) < 1e-9) return count * (count % 2 === 1 || Math.cos(angle / 2) > 0 ? 1 : -1);
   return Math.sin((count * angle) / 2) / half;
@@ -110,7 +109,12 @@ function addShape(
   const leanPhase = (Math.PI * lean[q] * lengthMm) / phaseExtentMm;
   const stepRead = (scale * step[r]) / readExtentMm;
   const stepPhase = (scale * step[q]) / phaseExtentMm;
-  const plain = count === 1 && leanRead === 0 && leanPhase === 0;
+  const leans = leanRead !== 0 || leanPhase !== 0;
+  // Rows of shapes mostly follow one axis: then their sum is the same for every line.
+  const repeated =
+    count > 1 && stepRead !== 0 && stepPhase === 0
+      ? Float64Array.from({ length: 2 * halfRead + 1 }, (_, i) => repetition(count, stepRead * (i - halfRead)))
+      : null;
   const readTurns = turns(readSamples, readExtentMm, middle[r]);
   const phaseTurns = turns(phaseLines, phaseExtentMm, middle[q]);
 
@@ -124,6 +128,8 @@ function addShape(
     const known = line < phaseLines ? line : mirror;
     const pc = phaseTurns[2 * known] as number;
     const ps = (phaseTurns[2 * known + 1] as number) * (known === line ? 1 : -1);
+    const lineAmount = stepRead === 0 ? amount * repetition(count, stepPhase * m) : amount;
+    const oblique = repeated === null && stepRead !== 0;
     const uLine = uPhase * m;
     const vLine = vPhase * m;
     for (let n = -halfRead; n <= halfRead; n += 1) {
@@ -135,12 +141,13 @@ function addShape(
       let value: number;
       if (index < end) {
         const before = values[index] as number;
-        value = amount * (before + (place - index) * ((values[index + 1] as number) - before));
-      } else value = amount * beyond(x);
-      if (!plain) {
+        value = lineAmount * (before + (place - index) * ((values[index + 1] as number) - before));
+      } else value = lineAmount * beyond(x);
+      if (repeated !== null) value *= repeated[n + halfRead] as number;
+      else if (oblique) value *= repetition(count, stepRead * n + stepPhase * m);
+      if (leans) {
         const leant = leanRead * n + leanPhase * m;
         if (Math.abs(leant) > 1e-9) value *= Math.sin(leant) / leant;
-        if (count > 1) value *= repetition(count, stepRead * n + stepPhase * m);
       }
       const column = n + halfRead;
       const opposite = halfRead - n;

@@ -21,7 +21,7 @@ export interface PlacedObject {
   readonly tissues: readonly string[];
 }
 
-/** Extent of the body along an axis: as typed, else the object's own. Head to feet it fills what the magnet sees, at most. */
+/** Extent of the body along an axis: as typed, else the object's own. Head to feet it reaches as far as the coil sees. */
 function extentMm(object: ObjectFile, body: Body, axis: PhaseDirection): number {
   if (axis === 'AP') return body.frontBackMm ?? object.body.frontBackMm;
   return axis === 'RL' ? (body.leftRightMm ?? object.body.leftRightMm) : object.body.headFeetMm;

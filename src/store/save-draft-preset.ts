@@ -55,9 +55,15 @@ export async function saveDraftPreset(
 }
 
 /** Creates a file whole, or not at all when its name is taken. */
-export async function createWhole(disk: Disk, path: string, text: string, fileMode: number): Promise<'created' | 'taken' | StoreProblem> {
+export async function createWhole(
+  disk: Disk,
+  path: string,
+  content: string | Uint8Array,
+  fileMode: number,
+  thing = 'the preset',
+): Promise<'created' | 'taken' | StoreProblem> {
   const temporary = join(dirname(path), `.${randomId()}.tmp`);
-  const written = await writeTemporary(disk, temporary, text, fileMode, 'the preset');
+  const written = await writeTemporary(disk, temporary, content, fileMode, thing);
   if (!written.ok) return written.problems[0]!;
   try {
     await disk.link(temporary, path);
@@ -66,21 +72,21 @@ export async function createWhole(disk: Disk, path: string, text: string, fileMo
     const code = (error as { code?: string }).code ?? '';
     if (code === 'EEXIST' || !noLinks.has(code)) {
       await disk.remove(temporary).catch(() => {});
-      return code === 'EEXIST' ? 'taken' : problemOfError(error, 'create', 'the preset', path);
+      return code === 'EEXIST' ? 'taken' : problemOfError(error, 'create', thing, path);
     }
-    const renamed = await reserveAndRename(disk, temporary, path);
+    const renamed = await reserveAndRename(disk, temporary, path, thing);
     if (renamed !== 'created') return renamed;
   }
   try {
     await disk.syncFolder(dirname(path));
     return 'created';
   } catch (error) {
-    return problemOfError(error, 'write', 'the preset', path);
+    return problemOfError(error, 'write', thing, path);
   }
 }
 
 /** Without links: the name is taken by an empty file of our own, which the whole file then replaces. */
-async function reserveAndRename(disk: Disk, temporary: string, path: string): Promise<'created' | 'taken' | StoreProblem> {
+async function reserveAndRename(disk: Disk, temporary: string, path: string, thing: string): Promise<'created' | 'taken' | StoreProblem> {
   let reserved = false;
   try {
     await (await disk.open(path, 'new')).close();
@@ -91,6 +97,6 @@ async function reserveAndRename(disk: Disk, temporary: string, path: string): Pr
     await disk.remove(temporary).catch(() => {});
     if (reserved) await disk.remove(path).catch(() => {});
     else if ((error as { code?: string }).code === 'EEXIST') return 'taken';
-    return problemOfError(error, 'create', 'the preset', path);
+    return problemOfError(error, 'create', thing, path);
   }
 }

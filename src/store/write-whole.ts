@@ -3,18 +3,18 @@ import type { Disk, OpenFile } from './disk.js';
 import { problemOfError, refused, type Stored } from './problem-of-error.js';
 
 /**
- * Writes a file so that its path holds either what it held before or the new text whole, whatever fails and whenever the machine
+ * Writes a file so that its path holds either what it held before or the new content whole, whatever fails and whenever the machine
  * stops: temporary file, sync, rename, sync of the folder. Two writers must not share a temporary path.
  */
 export async function writeWhole(
   disk: Disk,
   path: string,
-  text: string,
+  content: string | Uint8Array,
   fileMode: number,
   thing: string,
   temporaryPath = `${path}.tmp`,
 ): Promise<Stored<void>> {
-  const prepared = await writeTemporary(disk, temporaryPath, text, fileMode, thing);
+  const prepared = await writeTemporary(disk, temporaryPath, content, fileMode, thing);
   if (!prepared.ok) return prepared;
   try {
     await disk.rename(temporaryPath, path);
@@ -31,7 +31,13 @@ export async function writeWhole(
 }
 
 /** Writes and syncs a temporary file, or leaves none. One that an earlier program left behind is replaced. */
-export async function writeTemporary(disk: Disk, path: string, text: string, fileMode: number, thing: string): Promise<Stored<void>> {
+export async function writeTemporary(
+  disk: Disk,
+  path: string,
+  content: string | Uint8Array,
+  fileMode: number,
+  thing: string,
+): Promise<Stored<void>> {
   let file: OpenFile;
   try {
     file = await openNew(disk, path, fileMode);
@@ -40,7 +46,7 @@ export async function writeTemporary(disk: Disk, path: string, text: string, fil
   }
   try {
     await file.setMode(fileMode);
-    await writeAll(file, Buffer.from(text, 'utf8'));
+    await writeAll(file, typeof content === 'string' ? Buffer.from(content, 'utf8') : content);
     await file.sync();
     await file.close();
     return { ok: true, value: undefined };
@@ -62,7 +68,7 @@ async function openNew(disk: Disk, path: string, fileMode: number): Promise<Open
 }
 
 /** A file that nobody else writes may be written in pieces. */
-async function writeAll(file: OpenFile, bytes: Buffer): Promise<void> {
+async function writeAll(file: OpenFile, bytes: Uint8Array): Promise<void> {
   let written = 0;
   while (written < bytes.length) {
     const count = await file.write(bytes.subarray(written));

@@ -50,6 +50,7 @@ async function openOnTerminal(options: InterfaceOptions): Promise<number> {
   });
   return openInterface({
     ...world,
+    defaults: { ...world.defaults, reader: options.reader || world.reader },
     environment,
     ascii: options.ascii || world.ascii,
     reader: options.reader || world.reader,

@@ -68,7 +68,7 @@ export function shelfItems(state: State): readonly ShelfItem[] {
 
 /** A text, a line each; the hand is on the line that was scrolled to. */
 function textItems(state: State): readonly ShelfItem[] {
-  const lines = shelfText(state, true).filter(({ text }) => text.trim() !== '');
+  const lines = shelfText(state, true);
   if (lines.length === 0) return [{ words: 'Nothing to read yet; Escape goes back.' }];
   const at = Math.min(textFrom(state), lines.length - 1);
   return lines.map(({ text }, line) => ({ words: text, here: line === at }));

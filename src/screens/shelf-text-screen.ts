@@ -1,17 +1,14 @@
-import { shelfText, textFrom } from '../session/shelf-text.js';
+import { pageColumns, shelfText, textFrom, textPages } from '../session/shelf-text.js';
 import type { State } from '../session/state.js';
 import { beside, fill, type Line, line } from './line.js';
 import type { Look } from './look.js';
 import { shareBar } from './share-bar.js';
 
-/** Columns of a text; where two fit they stand beside each other, as the pages of a book. */
-const pageColumns = 79;
-
 /** A comparison, a record or the report, as text that is scrolled. */
 export function shelfTextScreen(state: State, look: Look, columns: number, rows: number): Line[] {
   const lines = shelfText(state, false).map(({ text, heading }) => line(text, heading ? 'bold' : 'plain'));
   if (lines.length === 0) return fill(waiting(state, look, columns), rows);
-  const pages = columns >= 2 * pageColumns + 1 ? 2 : 1;
+  const pages = textPages(state);
   const room = pages * rows;
   const at = Math.min(textFrom(state), Math.max(0, lines.length - room));
   const shown = lines.slice(at, at + room);

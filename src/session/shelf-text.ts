@@ -46,16 +46,29 @@ function textOf(source: object, reader: boolean, make: (page: TextPage) => reado
     const headings = new Set<string>();
     const page: TextPage = {
       reader,
-      width: 78,
+      width: reader ? Number.POSITIVE_INFINITY : 78,
       emphasis: (kind, text) => {
         if (kind === 'heading') headings.add(text);
         return text;
       },
     };
-    lines = make(page).map((text) => ({ text, heading: headings.has(text) }));
+    const made = make(page).map((text) => ({ text, heading: headings.has(text) }));
+    lines = reader ? made.filter(({ text }) => text.trim() !== '') : made;
     texts.set(name, lines);
   }
   return lines;
+}
+
+/** Columns of a text; where two fit they stand beside each other, as the pages of a book. */
+export const pageColumns = 79;
+
+export function textPages({ size }: State): 1 | 2 {
+  return size.columns >= 2 * pageColumns + 1 ? 2 : 1;
+}
+
+/** Lines of text that a screen shows: beside the verdict, the title, the message and the keys. */
+export function textRoom(state: State): number {
+  return textPages(state) * Math.max(1, state.size.rows - 4);
 }
 
 /** Line of the text that stands first on the screen. */

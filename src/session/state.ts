@@ -3,6 +3,7 @@ import type { GivenParameters } from '../calc/series.js';
 import type { Rules } from '../study/must-keep.js';
 import type { ScannerFile } from '../study/scanner-file.js';
 import { noSiteRules, type SiteRules } from '../study/site-rules.js';
+import type { CarryView } from './carry.js';
 import type { ScannerChoice } from './equipment.js';
 import type { DraftChoice, PresetChoice } from './message.js';
 import type { Opened, Session } from './session.js';
@@ -24,6 +25,7 @@ export const screenNames = [
   'budget',
   'readings',
   'scanner',
+  'carry',
   'record',
   'presets',
   'revisions',
@@ -118,7 +120,12 @@ export interface State {
   /** Asks so far; the newest of each kind that is still open. */
   readonly asks: number;
   readonly open: Readonly<
-    Partial<Record<'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'search' | 'plan' | ShelfAsk, number>>
+    Partial<
+      Record<
+        'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'search' | 'plan' | 'carry' | 'carryRules' | ShelfAsk,
+        number
+      >
+    >
   >;
   /** A saving of this record failed: the next try looks whether it stands there after all. */
   readonly recordFailed: boolean;
@@ -136,6 +143,8 @@ export interface State {
   /** The way taken last: what was set before it and with it. */
   readonly taken: { readonly seriesId: string; readonly base: GivenParameters; readonly given: GivenParameters } | null;
   readonly plan: SessionPlan | null;
+  /** The preset that is carried to another field or scanner. */
+  readonly carry: CarryView | null;
   /** Presets and records, as their screens show them. */
   readonly shelf: Shelf;
 }
@@ -148,6 +157,8 @@ export interface Defaults {
   /** Scanner named on the command line. */
   readonly scanner?: ScannerChoice;
   readonly pauses?: { readonly preparationS: number; readonly restS: number };
+  /** Screens are read aloud: a text is gone through line by line. */
+  readonly reader?: boolean;
   /** Where presets are released to, and whether that takes a second role; absent: nowhere. */
   readonly release?: { readonly folder: string | null; readonly secondRole: boolean };
 }
@@ -197,6 +208,7 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     lastWay: null,
     taken: null,
     plan: null,
+    carry: null,
     shelf: emptyShelf,
   };
 }

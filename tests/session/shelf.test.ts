@@ -11,7 +11,7 @@ import type { State } from '../../src/session/state.js';
 import { update } from '../../src/session/update.js';
 import { namedRecord } from '../../src/study/record-meant.js';
 import type { Study } from '../../src/study/study.js';
-import { after, keyOf, onField, presetChoice, press, startState } from './invented-state.js';
+import { keyOf, onField, after as play, presetChoice, press, startState } from './invented-state.js';
 
 const shipped = presetChoice('liver-3t');
 
@@ -43,7 +43,7 @@ function withAnswers(state: State, answer: (effect: Effect) => Answer | null, ..
   const names = new Set(['enter', 'up', 'down', 'escape', 'right', 'left', 'tab', 'end', 'home', 'backspace']);
   let next = state;
   for (const key of keys.flatMap((each) => (names.has(each) ? [each] : [...each]))) {
-    const { state: changed, effects } = after(next, [{ kind: 'key', key: keyOf(key), atMs: next.nowMs + 1000 }]);
+    const { state: changed, effects } = play(next, [{ kind: 'key', key: keyOf(key), atMs: next.nowMs + 1000 }]);
     next = changed;
     for (const effect of effects) {
       const answered = 'ask' in effect ? answer(effect) : null;
@@ -117,7 +117,7 @@ describe('presets', () => {
     const refused = press(changed, 'down', 'd');
     expect(refused.notice?.words).toContain('Save the record first');
     expect(refused.session).toBe(changed.session);
-    const saved = after(changed, [{ kind: 'key', key: keyOf('s'), atMs: 9e6 }]);
+    const saved = play(changed, [{ kind: 'key', key: keyOf('s'), atMs: 9e6 }]);
     expect(saved.effects.find(({ kind }) => kind === 'save-preset')).toBeDefined();
   });
 });
@@ -306,7 +306,7 @@ describe('records', () => {
   it('are listed and found by typing, without reading again where all are here', () => {
     const state = withAnswers(startState(), answer, 'left');
     expect(recordsHeadline(state)).toBe('30 of 30 records, 1 damaged line skipped');
-    const { state: typed, effects } = after(
+    const { state: typed, effects } = play(
       state,
       [...'trainee'].map((text) => ({ kind: 'key', key: { name: 'text', text }, atMs: 1 }) as const),
     );
@@ -320,9 +320,9 @@ describe('records', () => {
 
   it('are read again where only the newest are here; the older reading is not waited for', () => {
     const state = withAnswers(startState(), (effect) => (effect.kind === 'list-records' ? list('', 5000) : null), 'left');
-    const { state: typed, effects } = after(state, [{ kind: 'key', key: { name: 'text', text: 'p' }, atMs: 1 }]);
+    const { state: typed, effects } = play(state, [{ kind: 'key', key: { name: 'text', text: 'p' }, atMs: 1 }]);
     expect(effects).toMatchObject([{ kind: 'list-records', typed: 'p' }]);
-    const again = after(typed, [{ kind: 'key', key: { name: 'text', text: 'a' }, atMs: 2 }]);
+    const again = play(typed, [{ kind: 'key', key: { name: 'text', text: 'a' }, atMs: 2 }]);
     const [first] = effects;
     const late = update(again.state, { kind: 'answer', ask: first !== undefined && 'ask' in first ? first.ask : -1, answer: list('p') })[0];
     expect(late.shelf.list?.read).toBeNull();
@@ -334,7 +334,7 @@ describe('records', () => {
     const told = update(state, { kind: 'progress', ask, share: 0.4 })[0];
     expect(recordsHeadline(told)).toBe('Reading the records: 40 %');
     expect(update(told, { kind: 'progress', ask: ask - 1, share: 0.9 })[0]).toBe(told);
-    const stopped = after(told, [{ kind: 'key', key: keyOf('escape'), atMs: 1 }]);
+    const stopped = play(told, [{ kind: 'key', key: keyOf('escape'), atMs: 1 }]);
     expect(stopped.effects).toEqual([{ kind: 'stop-reading' }]);
     expect(stopped.state.place.screen).toBe('records');
     const answered = update(stopped.state, { kind: 'answer', ask, answer: list('') })[0];
@@ -346,7 +346,7 @@ describe('records', () => {
     const text = shelfText(state, false).map((line) => line.text);
     expect(text[0]).toContain(records[0]!.id);
     expect(text.some((line) => /planned\s+used/.test(line))).toBe(true);
-    const asked = after(press(withAnswers(startState(), answer, 'left'), 'pain'), [{ kind: 'key', key: keyOf('tab'), atMs: 9e6 }]);
+    const asked = play(press(withAnswers(startState(), answer, 'left'), 'pain'), [{ kind: 'key', key: keyOf('tab'), atMs: 9e6 }]);
     expect(asked.effects).toMatchObject([{ kind: 'report-records', typed: 'pain' }]);
   });
 });

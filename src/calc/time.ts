@@ -22,7 +22,7 @@ export interface Pauses {
 const usualPauses: Pauses = { preparationS, restS };
 
 /** Pauses of those who work at this scanner. */
-function pausesOf(scanner: Scanner): Pauses {
+export function pausesOf(scanner: Scanner): Pauses {
   return scanner.pauses ?? usualPauses;
 }
 

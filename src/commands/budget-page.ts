@@ -1,6 +1,5 @@
-import { type ParameterKey, parameterRow } from '../calc/parameters.js';
 import type { Budget, BudgetProblem, PlannedSeries } from '../search/budget.js';
-import { sayParameter } from '../session/say-parameter.js';
+import { plannedInWords } from '../session/plan-words.js';
 import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
 import { textTable } from '../session/text-table.js';
@@ -24,11 +23,11 @@ export function budgetJson({ study }: BudgetProblem, { plan, totalS, verdict }: 
 
 /** A plan as plain text: each series, the total, what is to spare and what was given up. */
 export function budgetPage(problem: BudgetProblem, budget: Budget, page: Page): string {
-  const { study, minutes, overheadS, longestS, done } = problem;
+  const { study, minutes, overheadS, longestS, holdS = null, done } = problem;
   const { plan, totalS, verdict, missing, alternative } = budget;
   const given = plan.filter(({ choice }) => choice === 'skipped').map(({ series }) => series.id);
   const lines = [
-    `Into ${minutes} min${longestS === null ? '' : `, no series longer than ${sayTime(longestS)}`}; ${overheadS} s of overhead a series${done.length === 0 ? '' : `; done: ${done.join(', ')}`}.`,
+    `Into ${minutes} min${longestS === null ? '' : `, no series longer than ${sayTime(longestS)}`}${holdS === null ? '' : `, breath-holds of at most ${sayTime(holdS)}`}; ${overheadS} s of overhead a series${done.length === 0 ? '' : `; done: ${done.join(', ')}`}.`,
     ...(missing.length === 0
       ? []
       : [
@@ -49,9 +48,7 @@ export function budgetPage(problem: BudgetProblem, budget: Budget, page: Page): 
     '',
     ...textTable(columns, rows(plan, overheadS), page.reader),
     '',
-    ...plan
-      .filter(({ choice }) => choice === 'shortened')
-      .flatMap((one) => wrapText(cleanText(`${one.series.id}: ${changesOf(one)}`), page.width)),
+    ...plan.filter(({ choice }) => choice === 'shortened').flatMap((one) => wrapText(cleanText(plannedInWords(one)), page.width)),
     ...after.flatMap((line) => wrapText(cleanText(line), page.width)),
     '',
     ...wrapText(closingWords, page.width),
@@ -73,12 +70,6 @@ function rows(plan: readonly PlannedSeries[], overheadS: number): string[][] {
     totalS += timeS + overheadS;
     return [series.id, choice, sayTime(timeS), sayTime(totalS)];
   });
-}
-
-function changesOf({ changes }: PlannedSeries): string {
-  return (Object.entries(changes) as [ParameterKey, { from: unknown; to: unknown }][])
-    .map(([key, { from, to }]) => `${parameterRow(key).label} ${sayParameter(key, from)} to ${sayParameter(key, to)}`)
-    .join('; ');
 }
 
 function inWords(one: PlannedSeries): string {

@@ -38,18 +38,21 @@ export async function runBudget(request: CommandRequest, io: CommandIo): Promise
   return budget.missing.length > 0 || nothing ? exitCodes.failed : exitCodes.done;
 }
 
+/** Seconds of an option that may be left out. */
+function readOptionalS(option: 'longest' | 'hold', max: number, request: CommandRequest): Attempt<number | null> {
+  const text = request.value(option);
+  return text === undefined ? { ok: true, value: null } : readAboveZero(`--${option}`, text, 's', max);
+}
+
 function readBudget({ study, rules }: LoadedPreset, scanner: Scanner, request: CommandRequest): Attempt<BudgetProblem> {
   const text = request.value('minutes');
   if (text === undefined) return wrongUse('--minutes', '--minutes is missing: how long may the session take?', 'Write --minutes 25.');
   const minutes = readAboveZero('--minutes', text, 'min', 600);
   if (!minutes.ok) return minutes;
-  let longestS: number | null = null;
-  const longest = request.value('longest');
-  if (longest !== undefined) {
-    const seconds = readAboveZero('--longest', longest, 's', 36_000);
-    if (!seconds.ok) return seconds;
-    longestS = seconds.value;
-  }
+  const longest = readOptionalS('longest', 36_000, request);
+  if (!longest.ok) return longest;
+  const hold = readOptionalS('hold', 600, request);
+  if (!hold.ok) return hold;
   const overheadText = request.value('overhead');
   const overhead = overheadText === undefined ? { ok: true as const, value: usualOverheadS } : readQuantity(overheadText, 's');
   if (!overhead.ok || overhead.value < 0 || overhead.value > 3600) {
@@ -71,7 +74,8 @@ function readBudget({ study, rules }: LoadedPreset, scanner: Scanner, request: C
       body: unknownBody,
       rules,
       minutes: minutes.value,
-      longestS,
+      longestS: longest.value,
+      holdS: hold.value,
       overheadS: overhead.value,
       done: request.values('done'),
       bands: usualBands,

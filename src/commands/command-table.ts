@@ -75,7 +75,11 @@ export const commandTable: readonly CommandRow[] = [
       { name: 'time', value: 'S', help: 'seconds the series may take' },
       { name: 'b1rms', value: 'UT', help: 'B1+rms cap in uT; needs --reading b1rmsUt' },
       { name: 'sar', value: 'WKG', help: 'SAR cap in W/kg; needs --reading sarWkg' },
-      { name: 'rf-ratio', value: 'X', help: 'RF power cap as a ratio to the preset' },
+      {
+        name: 'rf-ratio',
+        value: 'X',
+        help: 'RF power cap as a ratio to the preset; power goes with the square of B1+rms: 0.5 is 0.71 of its B1+rms',
+      },
       { name: 'reading', value: 'KEY=VALUE', repeats: true, help: 'what the scanner displays for the preset: timeS, b1rmsUt, sarWkg' },
       { name: 'body', value: 'AP=MM,RL=MM', help: 'widest extents of the patient at this level, arms included' },
       { name: 'keep', value: 'FIGURE=RATIO', repeats: true, help: 'how far a figure may move: relativeSnr=0.8, voxelPhaseMm=1.2' },
@@ -121,6 +125,7 @@ export const commandTable: readonly CommandRow[] = [
     options: [
       { name: 'minutes', value: 'M', help: 'minutes that are left' },
       { name: 'longest', value: 'S', help: 'no series longer than this, in seconds' },
+      { name: 'hold', value: 'S', help: 'seconds this patient can hold one breath' },
       { name: 'overhead', value: 'S', help: 'seconds between series, counted once for each planned one; 20 unless given' },
       { name: 'done', value: 'SERIES', repeats: true, help: 'a series that is done already' },
       ...scannerOptions,

@@ -8,7 +8,7 @@ import type { Way } from '../search/way.js';
 import { sayRatio } from '../session/say-ratio.js';
 import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
-import { bindingInWords, changesInWords, kindWords, searchInWords, spareInWords, tradesInWords } from '../session/say-way.js';
+import { bindingInWords, changesInWords, exactInWords, kindWords, searchInWords, spareInWords, tradesInWords } from '../session/say-way.js';
 import type { SeriesResult } from '../session/series-result.js';
 import type { Emphasis } from '../session/text-page.js';
 import { textTable } from '../session/text-table.js';
@@ -109,6 +109,7 @@ function oneWay(way: Way, title: string, page: Page, saidOnce: readonly string[]
     `in ${time}`,
     `gives up: ${tradesInWords(way.gives)}`,
     `gains: ${tradesInWords(way.gains)}`,
+    ...exactInWords(way),
     ...way.cautions.filter(({ code }) => code === 'timing-carried').map(({ text }) => `follows: ${text}`),
     ...cautionsInWords(way).filter((text) => !saidOnce.includes(text)),
   ];

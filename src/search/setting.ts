@@ -74,7 +74,9 @@ export function keepsShortfall(p: Parameters, minimum: Minimum, allowed: Shortfa
 /** Works out what all points of a search share. */
 export function settingOf(problem: SearchProblem): SearchSetting {
   const { series, scanner, body, readings, set } = problem;
-  const baseline = baselineOf(series, plainScanner(problem.presetFieldT));
+  // The preset at its own field, with the pauses of those who work here.
+  const plain = plainScanner(problem.presetFieldT);
+  const baseline = baselineOf(series, scanner.pauses === undefined ? plain : { ...plain, pauses: scanner.pauses });
   const presetFigures = evaluate(series, baseline.model.scanner, body, baseline, { readings }).figures;
   const { parameters } = resolveParameters(baseline, set, scanner);
   const start = evaluate({ ...series, parameters }, scanner, body, baseline);

@@ -1,4 +1,4 @@
-import { type Caution, type CautionCode, type CautionLevel, worstFirst } from '../calc/caution.js';
+import { type Caution, worstFirst } from '../calc/caution.js';
 import { type FigureKey, type Figures, figureKeys, figureTable } from '../calc/figures.js';
 import { type ParameterKey, parameterKeys } from '../calc/parameters.js';
 import type { Carried } from '../calc/resolve.js';
@@ -10,6 +10,7 @@ import type { WayKind } from './candidate.js';
 import { judgePoint } from './judge.js';
 import { type LimitKey, limitKeys, verdictsOf, worstRank } from './limits.js';
 import type { SearchSetting } from './setting.js';
+import { carriedCaution, cautionsOfWay, type WayCaution } from './way-cautions.js';
 
 /** One value of a way: what it was in the preset and what it becomes. */
 export interface Change {
@@ -23,13 +24,6 @@ export interface Trade {
   readonly from: number;
   readonly to: number;
   readonly ratio: number | null;
-}
-
-/** A caution as plain data, and the one that only a way can raise. */
-export interface WayCaution {
-  readonly code: CautionCode | 'coverage-lost';
-  readonly level: CautionLevel;
-  readonly text: string;
 }
 
 /** One set of changes with everything it gains and gives up. */
@@ -60,8 +54,9 @@ export function wayOf(setting: SearchSetting, kind: WayKind, point: readonly num
   const verdicts = verdictsOf(limits, figures, readings, setting.margins);
   const changes: Partial<Record<ParameterKey, Change>> = {};
   for (const key of parameterKeys) {
-    if (given[key] !== undefined && given[key] !== series.parameters[key])
-      changes[key] = { from: series.parameters[key] ?? null, to: given[key] };
+    // A split that follows by itself is named beside what was set: every round is one more acquisition.
+    const to = key === 'rounds' ? parameters.rounds : given[key];
+    if (to !== undefined && to !== series.parameters[key]) changes[key] = { from: series.parameters[key] ?? null, to };
   }
   const { gives, gains } = tradesOf(presetFigures, figures);
   const spare = Object.fromEntries(limitKeys.map((key) => [key, verdicts.find(({ limitKey }) => limitKey === key)?.spare ?? null]));
@@ -77,7 +72,7 @@ export function wayOf(setting: SearchSetting, kind: WayKind, point: readonly num
     gives,
     gains,
     cautions: [
-      ...coverageCautions(setting, figures),
+      ...cautionsOfWay(setting, parameters, figures),
       ...worstFirst([
         ...cautions,
         ...mustKeepCautions(checkMustKeeps(series.mustKeep, parameters, figures, rules)),
@@ -107,18 +102,4 @@ function tradesOf(preset: Figures, now: Figures): { gives: Trade[]; gains: Trade
 /** Sentences are put together when they are read: a way is plain data. */
 function plain({ code, level, text }: Caution): WayCaution {
   return { code, level, text };
-}
-
-function carriedCaution({ key, from, to, because }: Carried): Caution {
-  return { code: 'timing-carried', level: 'note', text: `${key} ${short(from)} becomes ${short(to)}: ${because}`, numbers: { from, to } };
-}
-
-const short = (value: number) => String(Number(value.toFixed(3)));
-
-/** Coverage that is lost is said: what lies outside is not acquired. */
-function coverageCautions({ presetFigures, baseline }: SearchSetting, { coverageMm }: Figures): WayCaution[] {
-  const before = presetFigures.coverageMm;
-  if (before === null || coverageMm === null || coverageMm >= before - baseline.model.series.parameters.sliceThicknessMm / 2) return [];
-  const text = `coverage falls from ${short(before)} to ${short(coverageMm)} mm: what lies outside is not acquired`;
-  return [{ code: 'coverage-lost', level: 'caution', text }];
 }

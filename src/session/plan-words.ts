@@ -1,9 +1,8 @@
-import { preparationS } from '../calc/time.js';
 import type { PlannedSeries } from '../search/budget.js';
 import { planHere } from './hands/budget-commands.js';
 import { sayTime } from './say-time.js';
 import { sayVerdict } from './say-verdict.js';
-import { changesInWords } from './say-way.js';
+import { changesInWords, tradesInWords } from './say-way.js';
 import type { State } from './state.js';
 
 /** One series of a plan with the running total, s; null where it is skipped. */
@@ -14,19 +13,20 @@ export interface PlanRow {
 
 /** The plan that is looked at, line by line. Preparation counts for every series that is acquired. */
 export function planRows(state: State): readonly PlanRow[] {
+  const overheadS = state.plan?.answer?.overheadS ?? 0;
   let totalS = 0;
   return planHere(state).map((planned) => {
     if (planned.choice === 'skipped') return { planned, totalS: null };
-    totalS += planned.timeS + preparationS;
+    totalS += planned.timeS + overheadS;
     return { planned, totalS };
   });
 }
 
 /** What a series of a plan changes or gives up, in words. */
-export function plannedInWords({ choice, changes, series }: PlannedSeries): string {
+export function plannedInWords({ choice, changes, series, gives }: PlannedSeries): string {
   if (choice === 'skipped') return `${series.id} is given up: ${series.title}`;
   if (choice === 'as it is') return `${series.id} stays as it is: ${series.title}`;
-  return `${series.id}: ${changesInWords({ changes })}`;
+  return `${series.id}: ${changesInWords({ changes })}. Gives up: ${tradesInWords(gives)}`;
 }
 
 /** What a plan comes to: total and verdict, what is given up, what of the minimum set is missing, the other plan. */

@@ -4,7 +4,7 @@ import type { LimitKey } from '../search/limits.js';
 import type { Binding } from '../search/nothing-fits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { SearchResult } from '../search/search.js';
-import type { Trade, Way } from '../search/way.js';
+import type { Change, Trade, Way } from '../search/way.js';
 import { sayFigure } from './say-figure.js';
 import { sayParameter } from './say-parameter.js';
 import { sayTime } from './say-time.js';
@@ -38,13 +38,22 @@ const weighed: readonly FigureKey[] = [
   'cardiacPhases',
 ];
 
-/** The changes of a way in one line: `slice thickness 3 mm to 4 mm (72 to 54 slices)`. */
+/** One change: `slice thickness 3 mm to 4 mm`; a split says what it is. */
+function changeInWords(key: ParameterKey, { from, to }: Change): string {
+  if (key === 'rounds')
+    return to === 1 ? 'no longer split' : `split into ${String(to)} acquisitions${from === 1 ? '' : ` (before ${String(from)})`}`;
+  return `${parameterRow(key).label} ${sayParameter(key, from)} to ${sayParameter(key, to)}`;
+}
+
+/** The changes of a way in one line: `slices 72 to 54; slice thickness 3 mm to 4 mm`. */
 export function changesInWords({ changes }: Pick<Way, 'changes'>): string {
-  const parts: string[] = [];
-  for (const [key, change] of Object.entries(changes) as [ParameterKey, { from: unknown; to: unknown }][]) {
-    parts.push(`${parameterRow(key).label} ${sayParameter(key, change.from)} to ${sayParameter(key, change.to)}`);
-  }
+  const parts = (Object.entries(changes) as [ParameterKey, Change][]).map(([key, change]) => changeInWords(key, change));
   return parts.length === 0 ? 'nothing is changed' : parts.join('; ');
+}
+
+/** What a way meets exactly at the bound of what must be kept, in plain words with the source. */
+export function exactInWords({ cautions }: Pick<Way, 'cautions'>): readonly string[] {
+  return cautions.filter(({ code }) => code === 'must-keep-exact').map(({ text }) => text);
 }
 
 function tradeInWords({ figure, from, to, ratio }: Trade): string {

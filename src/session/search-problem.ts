@@ -1,5 +1,5 @@
 import type { Scanner } from '../calc/scanner.js';
-import { preparationS } from '../calc/time.js';
+import { pausesOf } from '../calc/time.js';
 import type { BudgetProblem } from '../search/budget.js';
 import type { Limits } from '../search/limits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
@@ -86,17 +86,19 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
   const runsS = session.series.reduce((sum, series) => sum + (holdClock(state, series)?.seriesLeftS ?? 0), 0);
   const stays = session.series.filter(({ state: word }) => word !== 'not-done' && word !== 'stopped-early');
   const planned = stays.map(({ id }) => studySeries(state, id));
+  const scanner = scannerNow(state) ?? opened.scanner;
   // The order by hand is the order of importance, where it differs from the preset's.
   const same = runningOrder(study.series).every((series, at) => series.id === session.series[at]?.id);
   const series = same ? planned : planned.map((each, at) => ({ ...each, priority: at + 1 }));
   return {
     study: { ...study, series },
-    scanner: scannerNow(state) ?? opened.scanner,
+    scanner,
     body: bodyOf(state),
     rules: state.rules,
     minutes: Math.max(0, leftS - runsS) / 60,
     longestS: session.limits.longestSeriesS,
-    overheadS: preparationS,
+    holdS: session.limits.holdS,
+    overheadS: pausesOf(scanner).preparationS,
     done: stays.filter((each) => each.state !== 'to-do').map(({ id }) => id),
     bands: bandsOf(session),
     readings: {},
@@ -107,7 +109,7 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
 }
 
 /** Two plans with the same key have the same answer; minutes are compared to the tenth. */
-export function budgetKey({ study, scanner, body, rules, minutes, longestS, done, bands, asSet }: BudgetProblem): string {
+export function budgetKey({ study, scanner, body, rules, minutes, longestS, holdS, done, bands, asSet }: BudgetProblem): string {
   const order = study.series.map(({ id, priority }) => [id, priority]);
-  return JSON.stringify([order, scannerKey(scanner), body, rules.size, Math.floor(minutes * 10), longestS, done, bands, asSet]);
+  return JSON.stringify([order, scannerKey(scanner), body, rules.size, Math.floor(minutes * 10), longestS, holdS, done, bands, asSet]);
 }

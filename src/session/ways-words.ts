@@ -6,7 +6,7 @@ import { changedKeys } from './changed-keys.js';
 import { consequences } from './consequences.js';
 import { resultNow, sessionSeries, studySeries } from './results.js';
 import { sayVerdict } from './say-verdict.js';
-import { bindingInWords, changesInWords, kindWords, tradesInWords } from './say-way.js';
+import { bindingInWords, changesInWords, exactInWords, kindWords, tradesInWords } from './say-way.js';
 import { pairedSeries } from './set-field.js';
 import type { State } from './state.js';
 import { missingReadings, seriesVerdicts } from './verdicts.js';
@@ -94,6 +94,7 @@ export function wayParagraphs(
     plain(`Change: ${changesInWords(way)}`),
     plain(`Gives up: ${tradesInWords(way.gives)}`),
     plain(`Gains: ${tradesInWords(way.gains)}`),
+    ...exactInWords(way).map(plain),
     ...way.cautions.flatMap(({ level, text }) => (level === 'note' ? [] : [{ words: `${level}: ${text}`, level }])),
     ...way.cautions.filter(({ code }) => code === 'timing-carried').map(({ text }) => plain(`follows: ${text}`)),
   ];
@@ -103,7 +104,8 @@ export function wayParagraphs(
 export function setInWords(state: State, id: string, set: GivenParameters): string {
   const planned = studySeries(state, id).parameters;
   const { parameters } = resultNow(stateWith(state, id, set), id);
-  const keys = changedKeys(planned, parameters).filter((key) => set[key] !== undefined);
+  // A split that follows is named like one that was set.
+  const keys = changedKeys(planned, parameters).filter((key) => set[key] !== undefined || key === 'rounds');
   const changes = Object.fromEntries(keys.map((key): [string, Change] => [key, { from: planned[key] ?? null, to: parameters[key] }]));
   return changesInWords({ changes });
 }

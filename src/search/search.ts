@@ -121,10 +121,19 @@ function waysOf(setting: SearchSetting, bests: Bests): Way[] {
     if (rank === 1 && !outdoesInChanges(bests)) continue;
     const routes = bests
       .routes(rank)
-      .filter(({ changes, point }) => changes > 0 && !chosen.some(({ candidate }) => comparePoints(candidate.point, point) === 0));
+      .filter(({ changes, point }) => changes > 0 && !chosen.some(({ candidate }) => comparePoints(candidate.point, point) === 0))
+      .filter(({ point }) => !(setting.rfCapped && addsSlices(setting, point)));
     chosen.push(...routes.slice(0, mostRoutes).map((candidate) => ({ kind: 'fewest-changes' as const, candidate })));
   }
   return chosen.map(({ kind, candidate }) => wayOf(setting, kind, candidate.point));
+}
+
+/**
+ * Thinner slices at constant coverage are more of them, which only a second acquisition holds: that lowers RF in each TR, and balanced loss does not
+ * count its time. As the best of its own question such a way stands; as one more route to less RF nobody asks for it.
+ */
+function addsSlices({ variables }: SearchSetting, point: readonly number[]): boolean {
+  return variables.some(({ sliceCounts }, i) => sliceCounts !== null && (sliceCounts[point[i] as number] ?? 0) > (sliceCounts[0] ?? 0));
 }
 
 /** True when what is too close changes fewer settings than anything that fits. */

@@ -101,6 +101,9 @@ describe('cervical T1 at 3 T, SAR at most 2.0 W/kg, 2.6 displayed', () => {
     const slices = alone('sliceCount').find(({ verdict }) => verdict === 'TOO CLOSE');
     expect(slices?.changes.sliceCount?.to).toBe(11);
     expect(slices?.cautions.some(({ code }) => code === 'coverage-lost')).toBe(true);
+    // More, thinner slices in two acquisitions would lower RF too: no route that anybody asks for.
+    const routes = ways.filter(({ kind }) => kind === 'fewest-changes');
+    expect(routes.filter(({ changes: { sliceCount } }) => Number(sliceCount?.to ?? 0) > 15)).toEqual([]);
     expect(tr?.gives.some(({ figure }) => figure === 'scanTimeS')).toBe(true);
     expect(ways.every(({ spare }) => (spare.sarWkg as number) >= 0)).toBe(true);
   });

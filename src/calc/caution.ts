@@ -84,7 +84,8 @@ export function worstFirst(cautions: readonly Caution[]): readonly Caution[] {
   let last = 0;
   let sorted = true;
   for (let i = 0; i < cautions.length; i += 1) {
-    const rank = levels.indexOf((cautions[i] as Caution).level);
+    const { level } = cautions[i] as Caution;
+    const rank = level === 'error' ? 0 : level === 'caution' ? 1 : 2;
     if (rank < last) sorted = false;
     last = rank;
   }

@@ -41,6 +41,7 @@ export interface EvaluateOptions {
 }
 
 const noReadings: Readings = {};
+const noFigures: readonly FigureKey[] = [];
 
 /**
  * Evaluates a series on a scanner for a body, against a baseline. Total over every series the schema allows:
@@ -131,7 +132,8 @@ function blurOf(model: SeriesModel, t2Ms: number): number | null {
 }
 
 /** Figures that come from a reading: time and breath-hold, B1+rms. SAR has no figure of its own: it follows the trend. */
-function fromReading(figures: Figures, readings: Readings): FigureKey[] {
+function fromReading(figures: Figures, readings: Readings): readonly FigureKey[] {
+  if (readings.timeS === undefined && readings.b1rmsUt === undefined) return noFigures;
   const keys: FigureKey[] = [];
   if (readings.timeS !== undefined) keys.push('scanTimeS', ...(figures.holdTimeS === null ? [] : (['holdTimeS'] as const)));
   if (readings.b1rmsUt !== undefined) keys.push('b1PlusRmsUt');
@@ -139,14 +141,16 @@ function fromReading(figures: Figures, readings: Readings): FigureKey[] {
 }
 
 function signalsOf(model: SeriesModel, which: 'pair' | 'all'): TissueSignal[] {
+  const { target, comparison } = model;
+  if (which === 'pair' && target !== null && comparison !== null) return [target, comparison];
   const signals: TissueSignal[] = [];
-  if (model.target !== null) signals.push(model.target);
-  if (model.comparison !== null) signals.push(model.comparison);
+  if (target !== null) signals.push(target);
+  if (comparison !== null) signals.push(comparison);
   if (which === 'pair') return signals;
   const listed = new Set([model.series.target, model.series.comparison]);
   for (const name of tissuesWithValueAt(model.scanner.fieldT)) {
     if (listed.has(name)) continue;
-    const signal = tissueSignal(model.setting, model.series, model.scanner.fieldT, name, model.impossible !== null);
+    const signal = tissueSignal(model.setting, model.series, model.scanner.fieldT, name, model.impossible !== null, model.timing);
     if (signal !== null) signals.push(signal);
   }
   return signals;

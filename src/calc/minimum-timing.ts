@@ -24,6 +24,7 @@ export interface MinimumTiming {
 
 /** The parts every class is built from, ms. */
 interface Elements {
+  readonly readoutMtPerM: number;
   readonly readoutMs: number;
   readonly readoutRampMs: number;
   readonly prephaseMs: number;
@@ -47,6 +48,7 @@ function elements(key: ClassKey, p: Parameters, geometry: Geometry, pulse: Playe
   const selection = selectionMtPerM(key, p, pulse, scanner);
   const selectRampMs = rampMs(selection, scanner);
   return {
+    readoutMtPerM: amplitude,
     readoutMs,
     readoutRampMs,
     prephaseMs: lobeMs((amplitude * (readoutMs + readoutRampMs)) / 2, scanner),
@@ -125,7 +127,7 @@ export function minimumTiming(
 ): MinimumTiming {
   const row = classRow(key);
   const part = elements(key, p, geometry, pulses.excitation, scanner);
-  const amplitude = readoutMtPerM(p.pixelBandwidthHz, p.matrixRead, p.fieldOfViewMm);
+  const amplitude = part.readoutMtPerM;
   const flowMs = p.flowCompensation ? part.prephaseMs : 0;
   // Slice refocusing, phase and partition encoding and readout prephasing run side by side: the longest counts.
   const sliceSideMs = part.selectRampMs + Math.max(part.rephaseMs, part.phaseEncodeMs, part.partitionMs);

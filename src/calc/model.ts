@@ -5,19 +5,19 @@ import { ignoredIn, withoutIgnored } from './ignored.js';
 import { acquiredLines, type Lines } from './lines.js';
 import { type MinimumTiming, minimumTiming } from './minimum-timing.js';
 import { highestB, noiseAveragingLines, signalFreeSnr } from './noise.js';
-import { effectiveRepetitionTimeMs, isCine } from './pacing.js';
+import { effectiveRepetitionTimeMs } from './pacing.js';
 import { parallelNoiseFactor } from './parallel-noise.js';
 import type { ParameterKey } from './parameters.js';
 import { type SlotPulses, slotPulses } from './pulses.js';
 import { seriesB1PlusRmsUt } from './rf.js';
 import { guardedCeil } from './rounding.js';
 import type { Scanner } from './scanner.js';
-import { classOf, type Series } from './series.js';
-import { classSignal, inversionPreparedTimingOf, type SignalSetting } from './signal/class-signal.js';
+import { classOf, type Parameters, type Series } from './series.js';
+import { type ClassTiming, classSignal, classTimingOf, type SignalSetting } from './signal/class-signal.js';
 import { inversionPreparedDelaysMs } from './signal/inversion-prepared.js';
 import { capacity, slotFactor, slotMs } from './slots.js';
 import { type SeriesTime, seriesTime } from './time.js';
-import { diffusionFactor, isFat, type Tissue, tissueOf } from './tissues.js';
+import { diffusionFactor, isFat, rememberingTissueOf, type Tissue, tissueOf } from './tissues.js';
 
 /** Everything the model knows of one series on one scanner, before it is compared with a baseline. */
 export interface SeriesModel {
@@ -40,6 +40,7 @@ export interface SeriesModel {
   readonly rounds: number;
   readonly time: SeriesTime;
   readonly setting: SignalSetting;
+  readonly timing: ClassTiming;
   /** What makes the timing impossible, in words; null when nothing does. */
   readonly impossible: string | null;
   readonly noiseFactor: number | null;
@@ -72,6 +73,9 @@ function suppressionOf(tissue: string, fatSuppression: Series['parameters']['fat
   return fatSuppression === 'two-point' ? 0 : 1;
 }
 
+const targetOf = rememberingTissueOf();
+const comparisonOf = rememberingTissueOf();
+
 /** Signal of one tissue in this series, null for a name the table does not have. */
 export function tissueSignal(
   setting: SignalSetting,
@@ -79,8 +83,10 @@ export function tissueSignal(
   fieldT: number,
   name: string,
   impossible: boolean,
+  timing = classTimingOf(setting),
+  lookUp: typeof tissueOf = tissueOf,
 ): TissueSignal | null {
-  const tissue: Tissue | null = tissueOf(name, fieldT, series);
+  const tissue: Tissue | null = lookUp(name, fieldT, series);
   if (tissue === null) return null;
   const p = series.parameters;
   const second = p.secondEchoTimeMs;
@@ -90,8 +96,8 @@ export function tissueSignal(
     t2Ms: tissue.t2Ms,
     t2StarMs: tissue.t2StarMs,
     protonDensity: tissue.protonDensity,
-    signal: impossible ? null : classSignal(setting, p.echoTimeMs, tissue),
-    secondSignal: impossible || second === undefined ? null : classSignal(setting, second, tissue),
+    signal: impossible ? null : classSignal(setting, p.echoTimeMs, tissue, timing),
+    secondSignal: impossible || second === undefined ? null : classSignal(setting, second, tissue, timing),
     suppression: suppressionOf(name, p.fatSuppression),
     diffusionFactor: diffusionFactor(name, highestB(p)),
     extrapolated: tissue.extrapolated,
@@ -105,13 +111,12 @@ export function weightedSignal(tissue: TissueSignal | null): number | null {
 }
 
 /** Why the timing cannot be played, or null. TE under the estimated minimum is a caution, not this. */
-function impossibleBecause(key: ClassKey, setting: SignalSetting, slices: number | null): string | null {
-  const p = setting.parameters;
+function impossibleBecause(key: ClassKey, p: Parameters, { prepared }: ClassTiming, slices: number | null): string | null {
   const row = classRow(key);
-  const tr = isCine(p) ? p.repetitionTimeMs : effectiveRepetitionTimeMs(p);
+  const tr = effectiveRepetitionTimeMs(p);
   const lastEchoMs = Math.max(p.echoTimeMs, p.secondEchoTimeMs ?? 0);
-  if (key === 'inversion-prepared-gradient-echo/3D') {
-    const { beforeMs, afterMs } = inversionPreparedDelaysMs(inversionPreparedTimingOf(setting));
+  if (prepared !== null) {
+    const { beforeMs, afterMs } = inversionPreparedDelaysMs(prepared);
     if (beforeMs < -1e-9) return 'TI is too short for the readouts before the centre';
     if (afterMs < -1e-9) return 'TR is too short for TI and the readouts';
     return p.echoTimeMs >= p.echoSpacingMs ? 'TE is not shorter than the echo spacing' : null;
@@ -140,7 +145,8 @@ export function modelOf(given: Series, scanner: Scanner, knownSlotFactor: number
   const rounds = classRow(key).acquisition === '3D' ? 1 : Math.max(p.rounds, roundsNeeded ?? 1);
   const slicesOfRound = guardedCeil(p.sliceCount / rounds);
   const setting: SignalSetting = { key, parameters: p, lines, slicesOfRound };
-  const impossible = impossibleBecause(key, setting, slices);
+  const timing = classTimingOf(setting);
+  const impossible = impossibleBecause(key, p, timing, slices);
   const g = parallelNoiseFactor(scanner.coil, p.parallelFactorPhase, series.acquisition === '3D' ? p.parallelFactorSlice : 1);
   const simultaneousG = p.simultaneousSlices === 1 ? 1 : (scanner.simultaneousSliceG[p.simultaneousSlices] ?? 1);
   const slicesInRepetition = slices === null ? p.simultaneousSlices : Math.max(1, Math.min(slices, slicesOfRound));
@@ -160,12 +166,13 @@ export function modelOf(given: Series, scanner: Scanner, knownSlotFactor: number
     rounds,
     time: seriesTime(key, p, lines, rounds, scanner),
     setting,
+    timing,
     impossible,
     noiseFactor: g,
     signalFreeSnr:
       g === null ? null : signalFreeSnr(geometry.voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
-    target: tissueSignal(setting, series, scanner.fieldT, series.target, impossible !== null),
-    comparison: tissueSignal(setting, series, scanner.fieldT, series.comparison, impossible !== null),
+    target: tissueSignal(setting, series, scanner.fieldT, series.target, impossible !== null, timing, targetOf),
+    comparison: tissueSignal(setting, series, scanner.fieldT, series.comparison, impossible !== null, timing, comparisonOf),
     b1PlusRmsUt: seriesB1PlusRmsUt(key, p, lines, pulses, slicesInRepetition),
     shift: displacement(key, p, lines, geometry, scanner.fieldT),
   };

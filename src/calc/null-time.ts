@@ -1,6 +1,6 @@
 import { classRow } from './classes.js';
 import type { FatSuppression, Series } from './series.js';
-import { inversionPreparedTimingOf, type SignalSetting, spinEchoTimingOf, trainTimingOf } from './signal/class-signal.js';
+import { type ClassTiming, classTimingOf, type SignalSetting } from './signal/class-signal.js';
 import { trainEnd, trainLongitudinal } from './signal/echo-train-signal.js';
 import { inversionPreparedSignal } from './signal/inversion-prepared.js';
 import { spinEchoLongitudinal } from './signal/spin-echo.js';
@@ -41,24 +41,19 @@ function rootMs(signalAt: (inversionTimeMs: number) => number, lowMs: number, hi
 }
 
 /** Inversion time in ms at which the class's own signal equation gives zero for this tissue, or null where it never does. */
-export function nullTimeMs(setting: SignalSetting, tissue: Tissue): number | null {
-  const { key } = setting;
-  const row = classRow(key);
-  if (key === 'inversion-prepared-gradient-echo/3D') {
-    const timing = inversionPreparedTimingOf(setting);
-    const lead = timing.centre * timing.echoSpacingMs;
-    const longest = timing.repetitionTimeMs - (timing.readouts - timing.centre) * timing.echoSpacingMs;
-    return rootMs((ti) => inversionPreparedSignal(timing, tissue.t1Ms, ti), lead, longest, tissue.t1Ms);
+export function nullTimeMs(setting: SignalSetting, { t1Ms, t2Ms }: Tissue, timing: ClassTiming = classTimingOf(setting)): number | null {
+  const { prepared } = timing;
+  if (prepared !== null) {
+    const lead = prepared.centre * prepared.echoSpacingMs;
+    const longest = prepared.repetitionTimeMs - (prepared.readouts - prepared.centre) * prepared.echoSpacingMs;
+    return rootMs((ti) => inversionPreparedSignal(prepared, t1Ms, ti), lead, longest, t1Ms);
   }
-  if (row.train) {
-    const timing = trainTimingOf(setting);
-    const end = timing.fromEquilibrium ? { z0: 0, gain: 0 } : trainEnd(timing, tissue.t1Ms, tissue.t2Ms);
-    const longest = timing.fromEquilibrium ? 20 * tissue.t1Ms : timing.repetitionTimeMs - timing.echoTrainLength * timing.echoSpacingMs;
-    return rootMs((ti) => trainLongitudinal(timing, tissue.t1Ms, end, ti), 0, longest, tissue.t1Ms);
+  if (classRow(setting.key).train) {
+    const end = timing.fromEquilibrium ? { z0: 0, gain: 0 } : trainEnd(timing, t1Ms, t2Ms);
+    const longest = timing.fromEquilibrium ? 20 * t1Ms : timing.repetitionTimeMs - timing.echoTrainLength * timing.echoSpacingMs;
+    return rootMs((ti) => trainLongitudinal(timing, t1Ms, end, ti), 0, longest, t1Ms);
   }
-  const timing = spinEchoTimingOf(setting);
-  const longest = timing.fromEquilibrium
-    ? 20 * tissue.t1Ms
-    : timing.repetitionTimeMs - Math.max(timing.echoTimeMs, timing.secondEchoTimeMs ?? 0);
-  return rootMs((ti) => spinEchoLongitudinal(timing, tissue.t1Ms, ti), 0, longest, tissue.t1Ms);
+  const lastEchoMs = Math.max(timing.echoTimeMs, timing.secondEchoTimeMs ?? 0);
+  const longest = timing.fromEquilibrium ? 20 * t1Ms : timing.repetitionTimeMs - lastEchoMs;
+  return rootMs((ti) => spinEchoLongitudinal(timing, t1Ms, ti), 0, longest, t1Ms);
 }

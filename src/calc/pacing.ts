@@ -22,6 +22,8 @@ export function isCine(p: Parameters): boolean {
  * `period x ceil(TR / period)`; a cine keeps its own TR within the beat.
  */
 export function effectiveRepetitionTimeMs(p: Parameters): number {
+  const { kind } = p.pacing;
+  if (kind === 'none' || kind === 'breath-hold') return p.repetitionTimeMs;
   const period = pacingPeriodMs(p);
   if (period === null || isCine(p)) return p.repetitionTimeMs;
   return period * guardedCeil(p.repetitionTimeMs / period);

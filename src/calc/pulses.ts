@@ -97,28 +97,32 @@ export function playPulse(name: PulseName, angleDeg: number, stretch: number, sc
   };
 }
 
-/** Last pulse played of each name on a scanner: a series asks for the same few again and again. */
-interface Played {
-  readonly angleDeg: number;
-  readonly stretch: number;
-  readonly simultaneous: number;
-  readonly pulse: PlayedPulse;
+/** Remembers the last pulse of one role (excitation, refocusing, ...): the edits of a series ask for the same few again and again. */
+function rememberingPlay(): typeof playPulse {
+  let last: { readonly name: PulseName; readonly angleDeg: number; readonly stretch: number; readonly scanner: Scanner } | null = null;
+  let lastSimultaneous = 1;
+  let pulse: PlayedPulse | null = null;
+  return (name, angleDeg, stretch, scanner, simultaneous = 1) => {
+    if (
+      pulse === null ||
+      last === null ||
+      last.angleDeg !== angleDeg ||
+      last.name !== name ||
+      last.scanner !== scanner ||
+      last.stretch !== stretch ||
+      lastSimultaneous !== simultaneous
+    ) {
+      pulse = playPulse(name, angleDeg, stretch, scanner, simultaneous);
+      last = { name, angleDeg, stretch, scanner };
+      lastSimultaneous = simultaneous;
+    }
+    return pulse;
+  };
 }
-const lastPlayed = new WeakMap<Scanner, Partial<Record<PulseName, Played>>>();
-
-/** `playPulse`, remembering the last pulse of each name on each scanner. */
-function play(name: PulseName, angleDeg: number, stretch: number, scanner: Scanner, simultaneous: number): PlayedPulse {
-  let known = lastPlayed.get(scanner);
-  if (known === undefined) {
-    known = {};
-    lastPlayed.set(scanner, known);
-  }
-  const last = known[name];
-  if (last !== undefined && last.angleDeg === angleDeg && last.stretch === stretch && last.simultaneous === simultaneous) return last.pulse;
-  const pulse = playPulse(name, angleDeg, stretch, scanner, simultaneous);
-  known[name] = { angleDeg, stretch, simultaneous, pulse };
-  return pulse;
-}
+const playExcitation = rememberingPlay();
+const playRefocusing = rememberingPlay();
+const playFatSaturation = rememberingPlay();
+const playBand = rememberingPlay();
 
 /** The pulses of one slot of a series. */
 export interface SlotPulses {
@@ -133,9 +137,10 @@ export function slotPulses(key: ClassKey, p: Parameters, scanner: Scanner): Slot
   const m = p.simultaneousSlices;
   const refocusing = refocusingPulse(key);
   return {
-    excitation: play(excitationPulse(key, p.slabSelective), p.flipAngleDeg, p.rfPulseStretch, scanner, m),
-    refocusing: refocusing === null ? null : play(refocusing, p.refocusingAngleDeg, p.rfPulseStretch, scanner, m),
-    fatSaturation: p.fatSuppression === 'spectral' ? play('fatSaturation', fatSaturationAngleDeg, p.rfPulseStretch, scanner, 1) : null,
-    band: p.saturationBands > 0 ? play('saturationBand', saturationBandAngleDeg, p.rfPulseStretch, scanner, 1) : null,
+    excitation: playExcitation(excitationPulse(key, p.slabSelective), p.flipAngleDeg, p.rfPulseStretch, scanner, m),
+    refocusing: refocusing === null ? null : playRefocusing(refocusing, p.refocusingAngleDeg, p.rfPulseStretch, scanner, m),
+    fatSaturation:
+      p.fatSuppression === 'spectral' ? playFatSaturation('fatSaturation', fatSaturationAngleDeg, p.rfPulseStretch, scanner, 1) : null,
+    band: p.saturationBands > 0 ? playBand('saturationBand', saturationBandAngleDeg, p.rfPulseStretch, scanner, 1) : null,
   };
 }

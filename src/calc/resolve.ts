@@ -67,7 +67,7 @@ type Carry = (name: Carried['key'], to: number, because: string) => void;
 /** A train that reads all its lines in one go follows their number by difference. */
 function carryTrainLength(key: ClassKey, before: Parameters, draft: Draft, carry: Carry): void {
   if (classRow(key).otherwise.echoTrainLength !== 'lines') return;
-  const moved = linesInOneTrain(key, draft) - linesInOneTrain(key, before);
+  const moved = linesInOneTrain(key, acquiredLines(key, draft)) - linesInOneTrain(key, acquiredLines(key, before));
   carry('echoTrainLength', Math.max(1, before.echoTrainLength + moved), 'the train reads all its lines');
 }
 

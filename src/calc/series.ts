@@ -1,5 +1,5 @@
 import { type Acquisition, type ClassKey, classRow, type Family, knownClass } from './classes.js';
-import { acquiredLines } from './lines.js';
+import { acquiredLines, type Lines } from './lines.js';
 import { type NumberParameterKey, type ParameterKey, type ParameterTable, parameterKeys, parameterRow } from './parameters.js';
 
 export type PhaseDirection = ParameterTable['phaseDirection']['choices'][number];
@@ -91,13 +91,25 @@ export function fillDefaults(key: ClassKey, given: GivenParameters): Parameters 
   const filled: Record<string, unknown> = { ...seasoned };
   for (const name of parameterKeys) {
     const value = given[name];
-    filled[name] = value === undefined ? defaultOf(name, key) : value;
+    filled[name] = value === undefined ? defaultOf(name, key) : ownWord(name, value);
   }
   const parameters = filled as unknown as Parameters;
   if (row.otherwise.echoTrainLength === 'lines' && given.echoTrainLength === undefined) {
-    filled.echoTrainLength = linesInOneTrain(key, parameters);
+    filled.echoTrainLength = linesInOneTrain(key, acquiredLines(key, parameters));
   }
   return parameters;
+}
+
+/**
+ * A choice as the table writes it. Equal texts are compared letter by letter unless they are one text in memory, and what a file
+ * says is a text of its own.
+ */
+function ownWord(name: ParameterKey, value: unknown): unknown {
+  const row = parameterRow(name);
+  if (row.kind === 'choice') return row.choices.find((choice) => choice === value) ?? value;
+  if (name !== 'pacing') return value;
+  const pacing = value as Pacing;
+  return { ...pacing, kind: pacingKinds.find((kind) => kind === pacing.kind) ?? pacing.kind };
 }
 
 /** Value of a parameter that was left out, before anything that depends on the lines. */
@@ -114,7 +126,6 @@ export function defaultOf(name: ParameterKey, key: ClassKey): unknown {
 }
 
 /** Readouts of a train that takes all its lines in one go: partitions inside the cycle, or the phase lines. */
-export function linesInOneTrain(key: ClassKey, parameters: Parameters): number {
-  const lines = acquiredLines(key, parameters);
+export function linesInOneTrain(key: ClassKey, lines: Lines): number {
   return key === 'inversion-prepared-gradient-echo/3D' ? lines.slice : lines.phase;
 }

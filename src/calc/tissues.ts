@@ -158,6 +158,28 @@ export function tissueOf(name: string, fieldT: number, series: Pick<Series, 'con
   };
 }
 
+/**
+ * `tissueOf`, remembering its last answer: an evaluation asks for the same few tissues at every edit of a series. One of these serves
+ * one role (target, comparison, tissue to be nulled).
+ */
+export function rememberingTissueOf(): typeof tissueOf {
+  let last: {
+    readonly name: string;
+    readonly fieldT: number;
+    readonly agent: boolean;
+    readonly overrides: Series['tissueOverrides'];
+  } | null = null;
+  let tissue: Tissue | null = null;
+  return (name, fieldT, series) => {
+    const { contrastAgent: agent, tissueOverrides: overrides } = series;
+    if (last === null || last.name !== name || last.fieldT !== fieldT || last.agent !== agent || last.overrides !== overrides) {
+      tissue = tissueOf(name, fieldT, series);
+      last = { name, fieldT, agent, overrides };
+    }
+    return tissue;
+  };
+}
+
 /** Apparent diffusion in um2/ms, numerically 1e-3 mm2/s (common practice, values from memory); null where no value is kept. */
 const diffusionUm2PerMs: Readonly<Record<string, number>> = {
   'grey matter (cortical)': 0.8,

@@ -1,41 +1,24 @@
 import { classRow } from '../calc/classes.js';
 import { echoAmplitude } from '../calc/echo-train.js';
-import type { Lines } from '../calc/lines.js';
-import { modelOf, type SeriesModel, type TissueSignal, weightedSignal } from '../calc/model.js';
+import { ignoredIn, withoutIgnored } from '../calc/ignored.js';
+import { acquiredLines, type Lines } from '../calc/lines.js';
+import { type TissueSignal, tissueSignal, weightedSignal } from '../calc/model.js';
 import { effectiveRepetitionTimeMs, isCine } from '../calc/pacing.js';
 import type { ParameterKey } from '../calc/parameters.js';
 import { type SlotPulses, slotPulses } from '../calc/pulses.js';
 import { resolveParameters } from '../calc/resolve.js';
-import { seriesB1PlusRmsUt } from '../calc/rf.js';
+import { b1PlusRmsUt, repetitionEnergyUt2Ms } from '../calc/rf.js';
 import { guardedCeil } from '../calc/rounding.js';
 import type { Parameters } from '../calc/series.js';
-import { classSignal, type SignalSetting, trainTimingOf } from '../calc/signal/class-signal.js';
+import { classSignal, classTimingOf, type SignalSetting } from '../calc/signal/class-signal.js';
 import { contrastEcho, type TrainEnd, trainEnd, trainLongitudinal } from '../calc/signal/echo-train-signal.js';
 import { capacity, slotMs } from '../calc/slots.js';
 import { type Tissue, tissueOf } from '../calc/tissues.js';
-import { pointParameters } from './lattice.js';
+import { type LatticeVariable, pointParameters } from './lattice.js';
 import type { SearchSetting } from './setting.js';
+import type { StateModel } from './signal-model.js';
 
-/** What a signal state takes from a model. */
-export interface StateModel {
-  readonly parameters: Parameters;
-  readonly key: SeriesModel['key'];
-  readonly rounds: number;
-  readonly lines: Lines;
-  readonly pulses: SlotPulses;
-  readonly target: number | null;
-  readonly comparison: number | null;
-  readonly targetT2Ms: number | null;
-  readonly b1PlusRmsUt: number;
-  /** Small numbers for timing and shortest timing where they are known already. */
-  readonly ids: { readonly timeId: number; readonly minimumId: number } | null;
-}
-
-/** Gives small numbers to what time and shortest timing follow. */
-export interface StateWords {
-  readonly timeId: (p: Parameters, rounds: number) => number;
-  readonly minimumId: (p: Parameters, pulses: SlotPulses) => number;
-}
+type Draft = { -readonly [K in keyof Parameters]: Parameters[K] };
 
 /** Parameters that move no other timing: TR, and what only slots, splits and counts of shots follow. */
 const freeKeys: readonly ParameterKey[] = [
@@ -53,42 +36,74 @@ const freeKeys: readonly ParameterKey[] = [
   'averages',
 ];
 
-/** What all states share that differ in free parameters alone. */
-interface Base {
-  readonly model: SeriesModel;
-  /** Excitation and train of each tissue, null outside trains. */
-  readonly target: TissuePart | null;
-  readonly comparison: TissuePart | null;
-  readonly pulses: Map<number, SlotPulses>;
-  /** What time and shortest timing follow of the parameters that are not free. */
-  readonly timeBase: number;
-  readonly minimumId: number;
+/** Signals of both tissues: they follow TR and what is not free. */
+export interface SignalPair {
+  readonly target: number | null;
+  readonly comparison: number | null;
 }
 
+/** One tissue under one train: its end and its echo, computed when first asked for. */
 interface TissuePart {
   readonly signal: TissueSignal;
   readonly tissue: Tissue;
-  readonly train: { readonly end: TrainEnd; readonly amplitude: number } | null;
+  train: { readonly end: TrainEnd; readonly amplitude: number } | null;
+}
+
+/** What follows the saturation bands besides a base. */
+interface BandPart {
+  readonly pulses: SlotPulses;
+  readonly slotMs: number;
+  /** RF energy of one TR by the slices in it. */
+  readonly energies: Map<number, number>;
+}
+
+/** What all states share that differ in free parameters alone. */
+export interface SignalBase {
+  readonly parameters: Parameters;
+  readonly lines: Lines;
+  readonly pulses: SlotPulses;
+  readonly targetT2Ms: number | null;
+  readonly target: TissuePart | null;
+  readonly comparison: TissuePart | null;
+  /** Parameters with the free values of the state asked last. */
+  readonly scratch: Draft;
+  readonly written: Int32Array;
+  readonly bands: Map<number, BandPart>;
+}
+
+/** The state a shortcut was asked for last. */
+export interface ShortState {
+  base: SignalBase;
+  pulses: SlotPulses;
+  rounds: number;
+  b1PlusRmsUt: number;
+  /** Number of the free values, unique within a base. */
+  free: number;
+}
+
+interface FreeVariable {
+  readonly at: number;
+  readonly variable: LatticeVariable;
 }
 
 /**
- * Models of states that differ in TR, bands and counts without resolving and modelling each anew: the same functions as `modelOf`, on less.
- * Only for classes whose signal follows neither lines nor a null; the others take the whole model.
+ * Models of states that differ in TR, bands and counts without resolving and modelling each anew: the same functions as `modelOf`, on less,
+ * and what several states share computed once. Only for classes whose signal follows neither lines nor a null.
  */
 export class SignalShortcut {
   readonly #setting: SearchSetting;
-  readonly #bases = new Map<string, Base>();
+  readonly #bases = new Map<number, SignalBase>();
   readonly #bound: readonly number[];
-  readonly #words: StateWords;
-  readonly #timeIds = new Map<number, number>();
-  /** Where a state over an RF cap is of no use, its signal is not computed. */
-  readonly #isOver: (b1PlusRmsUt: number) => boolean;
+  readonly #free: readonly FreeVariable[];
+  /** The state asked for last: its base, split and RF. */
+  readonly last = {} as ShortState;
 
-  constructor(setting: SearchSetting, words: StateWords, isOver: (b1PlusRmsUt: number) => boolean) {
+  constructor(setting: SearchSetting, moving: readonly number[]) {
     this.#setting = setting;
-    this.#words = words;
-    this.#isOver = isOver;
-    this.#bound = setting.variables.flatMap(({ key }, at) => (freeKeys.includes(key) ? [] : [at]));
+    const { variables } = setting;
+    const isFree = (at: number) => freeKeys.includes((variables[at] as LatticeVariable).key);
+    this.#bound = moving.filter((at) => !isFree(at));
+    this.#free = moving.filter(isFree).map((at) => ({ at, variable: variables[at] as LatticeVariable }));
   }
 
   /** True where this way of modelling is complete. */
@@ -101,103 +116,162 @@ export class SignalShortcut {
     return families.includes(series.family) && plain && !isCine(p);
   }
 
-  /** The model of a point; null where its timing is impossible, or a timed phase would be split. */
-  modelAt(point: ArrayLike<number>, signalKeys: readonly number[]): StateModel | null {
-    const { problem, baseline, variables } = this.#setting;
-    const base = this.#baseAt(point, signalKeys);
-    const { key, lines } = base.model;
-    let free = 0;
-    const p = { ...base.model.series.parameters } as { -readonly [K in keyof Parameters]: Parameters[K] };
-    for (const at of signalKeys) {
-      const { key: name, values, sliceCounts } = variables[at] as (typeof variables)[number];
-      const i = point[at] as number;
-      if (!freeKeys.includes(name)) continue;
-      free = free * values.length + i;
-      if (i === 0) continue;
-      (p as unknown as Record<string, unknown>)[name] = values[i];
-      if (sliceCounts !== null) p.sliceCount = sliceCounts[i] as number;
-    }
-    const pulses = this.#pulses(base, p);
-    const slices = capacity(key, p, slotMs(key, p, pulses, lines.fullPhase) * baseline.model.slotFactor);
-    const roundsNeeded = slices === null || slices === 0 ? null : guardedCeil(p.sliceCount / slices);
-    const rounds = classRow(key).acquisition === '3D' ? 1 : Math.max(p.rounds, roundsNeeded ?? 1);
-    if (problem.series.purpose === 'dynamic' && rounds > 1) return null;
+  /** Works out split and RF of a point into `last`; false where its timing is impossible, or a timed phase would be split. */
+  stateAt(point: ArrayLike<number>): boolean {
+    const { problem, baseline } = this.#setting;
+    const { key } = baseline.model;
+    const base = this.#baseAt(point);
+    const free = this.#writeFree(base, point);
+    const p = base.scratch;
+    const band = this.#bandPart(base, p);
+    const slices = capacity(key, p, band.slotMs);
+    const needed = slices === null || slices === 0 ? 1 : guardedCeil(p.sliceCount / slices);
+    const rounds = classRow(key).acquisition === '3D' ? 1 : Math.max(this.#roundsSet(point, base), needed);
+    if (problem.series.purpose === 'dynamic' && rounds > 1) return false;
     const tr = effectiveRepetitionTimeMs(p);
     const lastMs = classRow(key).train ? p.echoTrainLength * p.echoSpacingMs : p.echoTimeMs;
-    if (p.echoTimeMs >= tr || lastMs > tr + 1e-9 || slices === 0) return null;
+    if (p.echoTimeMs >= tr || lastMs > tr + 1e-9 || slices === 0) return false;
     p.rounds = rounds;
-    const slicesOfRound = guardedCeil(p.sliceCount / rounds);
-    const slicesInRepetition = slices === null ? p.simultaneousSlices : Math.max(1, Math.min(slices, slicesOfRound));
-    const b1PlusRmsUt = seriesB1PlusRmsUt(key, p, lines, pulses, slicesInRepetition);
-    if (this.#isOver(b1PlusRmsUt)) return null;
-    const setting: SignalSetting = { key, parameters: p, lines, slicesOfRound };
+    const inRepetition = slices === null ? p.simultaneousSlices : Math.max(1, Math.min(slices, guardedCeil(p.sliceCount / rounds)));
+    let energy = band.energies.get(inRepetition);
+    if (energy === undefined) {
+      energy = repetitionEnergyUt2Ms(key, p, base.lines, band.pulses, inRepetition);
+      band.energies.set(inRepetition, energy);
+    }
+    const { last } = this;
+    last.base = base;
+    last.pulses = band.pulses;
+    last.rounds = rounds;
+    last.b1PlusRmsUt = b1PlusRmsUt(energy, tr);
+    last.free = free;
+    return true;
+  }
+
+  /** Signals of the state asked for last. */
+  signals(): SignalPair {
+    const { base } = this.last;
+    const setting: SignalSetting = {
+      key: this.#setting.baseline.model.key,
+      parameters: base.scratch,
+      lines: base.lines,
+      slicesOfRound: guardedCeil(base.scratch.sliceCount / this.last.rounds),
+    };
+    return { target: signalOf(base.target, setting), comparison: signalOf(base.comparison, setting) };
+  }
+
+  /** Parameters of a state, by what `last` said of it. */
+  parametersOf(base: SignalBase, free: number, rounds: number): Parameters {
+    const p: Draft = { ...base.parameters };
+    let rest = free;
+    for (let k = this.#free.length - 1; k >= 0; k -= 1) {
+      const { variable } = this.#free[k] as FreeVariable;
+      writeValue(p, base.parameters, variable, rest % variable.values.length);
+      rest = Math.floor(rest / variable.values.length);
+    }
+    p.rounds = rounds;
+    return p;
+  }
+
+  /** The model of the state asked for last, as those of other classes are. */
+  modelOf({ target, comparison }: SignalPair): StateModel {
+    const { base, pulses, rounds, free, b1PlusRmsUt: b1 } = this.last;
     return {
-      parameters: p,
-      key,
+      parameters: this.parametersOf(base, free, rounds),
       rounds,
-      lines,
+      lines: base.lines,
       pulses,
-      ids: { timeId: this.#timeId(base, free, rounds, p), minimumId: base.minimumId },
-      target: signalOf(base.target, setting),
-      comparison: signalOf(base.comparison, setting),
-      targetT2Ms: base.model.target?.t2Ms ?? null,
-      b1PlusRmsUt,
+      target,
+      comparison,
+      targetT2Ms: base.targetT2Ms,
+      b1PlusRmsUt: b1,
     };
   }
 
-  #timeId(base: Base, free: number, rounds: number, p: Parameters): number {
-    const key = (base.timeBase * 512 + rounds) * 2 ** 22 + free;
-    const known = this.#timeIds.get(key);
-    if (known !== undefined) return known;
-    const id = this.#words.timeId(p, rounds);
-    this.#timeIds.set(key, id);
-    return id;
-  }
-
-  #pulses(base: Base, p: Parameters): SlotPulses {
-    let pulses = base.pulses.get(p.saturationBands);
-    if (pulses === undefined) {
-      pulses = slotPulses(base.model.key, p, this.#setting.problem.scanner);
-      base.pulses.set(p.saturationBands, pulses);
+  /** Writes what differs from the state asked before; the number of the free values. */
+  #writeFree({ scratch, parameters, written }: SignalBase, point: ArrayLike<number>): number {
+    let free = 0;
+    for (let k = 0; k < this.#free.length; k += 1) {
+      const { at, variable } = this.#free[k] as FreeVariable;
+      const i = point[at] as number;
+      free = free * variable.values.length + i;
+      if (written[k] === i) continue;
+      written[k] = i;
+      writeValue(scratch, parameters, variable, i);
     }
-    return pulses;
+    return free;
   }
 
-  #baseAt(point: ArrayLike<number>, signalKeys: readonly number[]): Base {
-    const bound = this.#bound.filter((at) => signalKeys.includes(at));
-    let id = '';
-    for (const at of bound) id += `${point[at]},`;
-    const known = this.#bases.get(id);
-    if (known !== undefined) return known;
+  /** The split as a point sets it: the one in force overwrites it in the scratch. */
+  #roundsSet(point: ArrayLike<number>, base: SignalBase): number {
+    for (const { at, variable } of this.#free)
+      if (variable.key === 'rounds') return (point[at] === 0 ? base.parameters.rounds : variable.values[point[at] as number]) as number;
+    return base.parameters.rounds;
+  }
+
+  #bandPart(base: SignalBase, p: Parameters): BandPart {
+    let band = base.bands.get(p.saturationBands);
+    if (band === undefined) {
+      const { baseline, problem } = this.#setting;
+      const { key, slotFactor } = baseline.model;
+      const pulses = slotPulses(key, p, problem.scanner);
+      band = { pulses, slotMs: slotMs(key, p, pulses, base.lines.fullPhase) * slotFactor, energies: new Map() };
+      base.bands.set(p.saturationBands, band);
+    }
+    return band;
+  }
+
+  #baseAt(point: ArrayLike<number>): SignalBase {
+    const { variables } = this.#setting;
+    let id = 0;
+    for (const at of this.#bound) id = id * (variables[at] as LatticeVariable).values.length + (point[at] as number);
+    let base = this.#bases.get(id);
+    if (base === undefined) {
+      base = this.#formBase(point);
+      this.#bases.set(id, base);
+    }
+    return base;
+  }
+
+  #formBase(point: ArrayLike<number>): SignalBase {
     const { problem, baseline, variables } = this.#setting;
     const { series, scanner } = problem;
-    const alone = variables.map((_, at) => (bound.includes(at) ? (point[at] as number) : 0));
+    const { key } = baseline.model;
+    const alone = variables.map((_, at) => (this.#bound.includes(at) ? (point[at] as number) : 0));
     // The split that its own slots need is worked out for each state: here it stays the preset's.
     const rounds = problem.set.rounds ?? series.parameters.rounds;
-    const resolved = resolveParameters(baseline, pointParameters(variables, alone, problem.set), scanner).parameters;
-    const model = modelOf({ ...series, parameters: { ...resolved, rounds } }, scanner, baseline.model.slotFactor);
-    const setting: SignalSetting = { key: model.key, parameters: model.series.parameters, lines: model.lines, slicesOfRound: 1 };
-    const part = (signal: TissueSignal | null): TissuePart | null => {
-      const tissue = signal === null ? null : tissueOf(signal.tissue, scanner.fieldT, series);
-      return signal === null || tissue === null
-        ? null
-        : { signal, tissue, train: classRow(model.key).train ? trainOf(setting, tissue) : null };
+    const resolved = { ...resolveParameters(baseline, pointParameters(variables, alone, problem.set), scanner).parameters, rounds };
+    const usable = withoutIgnored({ ...series, parameters: resolved }, key, ignoredIn(key, resolved));
+    const { parameters } = usable;
+    const lines = acquiredLines(key, parameters);
+    const part = (name: string): TissuePart | null => {
+      // Without a signal: that follows TR.
+      const signal = tissueSignal({ key, parameters, lines, slicesOfRound: 1 }, usable, scanner.fieldT, name, true);
+      const tissue = tissueOf(name, scanner.fieldT, series);
+      return signal === null || tissue === null ? null : { signal, tissue, train: null };
     };
-    const base = {
-      model,
-      target: part(model.target),
-      comparison: part(model.comparison),
-      pulses: new Map<number, SlotPulses>(),
-      timeBase: this.#words.timeId(model.series.parameters, 0),
-      minimumId: this.#words.minimumId(model.series.parameters, model.pulses),
+    const target = part(series.target);
+    return {
+      parameters,
+      lines,
+      pulses: slotPulses(key, parameters, scanner),
+      targetT2Ms: target?.signal.t2Ms ?? null,
+      target,
+      comparison: part(series.comparison),
+      scratch: { ...parameters },
+      written: new Int32Array(this.#free.length),
+      bands: new Map(),
     };
-    this.#bases.set(id, base);
-    return base;
   }
 }
 
+function writeValue(p: Draft, start: Parameters, { key, values, sliceCounts }: LatticeVariable, i: number): void {
+  const draft = p as unknown as Record<string, unknown>;
+  draft[key] = i === 0 ? start[key] : values[i];
+  if (sliceCounts !== null) p.sliceCount = i === 0 ? start.sliceCount : (sliceCounts[i] as number);
+}
+
 function trainOf(setting: SignalSetting, { t1Ms, t2Ms }: Tissue): { end: TrainEnd; amplitude: number } {
-  const timing = trainTimingOf(setting);
+  const timing = classTimingOf(setting);
   const { refocusingAngleDeg, echoSpacingMs, echoTimeMs, echoTrainLength } = timing;
   const echo = contrastEcho(echoTimeMs, echoSpacingMs, echoTrainLength);
   return { end: trainEnd(timing, t1Ms, t2Ms), amplitude: echoAmplitude({ refocusingAngleDeg, echoSpacingMs, t1Ms, t2Ms }, echo) };
@@ -206,11 +280,13 @@ function trainOf(setting: SignalSetting, { t1Ms, t2Ms }: Tissue): { end: TrainEn
 /** Weighted signal of a tissue: the product in the order of `trainSignal`, or the class's own equation. */
 function signalOf(part: TissuePart | null, setting: SignalSetting): number | null {
   if (part === null) return null;
-  const { tissue, train } = part;
-  if (train === null) return weightedSignal({ ...part.signal, signal: classSignal(setting, setting.parameters.echoTimeMs, tissue) });
-  const timing = trainTimingOf(setting);
+  const { tissue } = part;
+  if (!classRow(setting.key).train)
+    return weightedSignal({ ...part.signal, signal: classSignal(setting, setting.parameters.echoTimeMs, tissue) });
+  part.train ??= trainOf(setting, tissue);
+  const timing = classTimingOf(setting);
   const signal = Math.abs(
-    trainLongitudinal(timing, tissue.t1Ms, train.end) * Math.sin((timing.flipAngleDeg * Math.PI) / 180) * train.amplitude,
+    trainLongitudinal(timing, tissue.t1Ms, part.train.end) * Math.sin((timing.flipAngleDeg * Math.PI) / 180) * part.train.amplitude,
   );
   return weightedSignal({ ...part.signal, signal });
 }

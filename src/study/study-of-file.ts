@@ -1,6 +1,7 @@
-import { classKeyOf } from '../calc/classes.js';
+import { classKeyOf, classTable } from '../calc/classes.js';
 import type { ParameterKey } from '../calc/parameters.js';
 import { fillDefaults, type GivenParameters } from '../calc/series.js';
+import { tissueNames } from '../calc/tissues.js';
 import { cleanText } from './clean-text.js';
 import type { PresetFile, SeriesFile } from './preset-file.js';
 import type { MustKeep, Release, Study, StudySeries } from './study.js';
@@ -14,6 +15,11 @@ function cleanMustKeep(mustKeep: MustKeep): MustKeep {
   return { ...plainCopy(mustKeep), source: cleanText(mustKeep.source) };
 }
 
+/** A tissue as the table writes it: one text in memory is compared at once, two equal ones letter by letter. */
+function ownName(tissue: string): string {
+  return tissueNames.find((name) => name === tissue) ?? tissue;
+}
+
 function seriesOf(file: SeriesFile, index: number): StudySeries {
   const key = classKeyOf(file.family, file.acquisition);
   if (key === null) throw new Error(`no class ${file.family} ${file.acquisition}: check the structure first`);
@@ -24,10 +30,10 @@ function seriesOf(file: SeriesFile, index: number): StudySeries {
     plane: cleanText(file.plane ?? 'axial'),
     purpose: file.purpose === undefined ? null : cleanText(file.purpose),
     priority: file.priority ?? index + 1,
-    family: file.family,
-    acquisition: file.acquisition,
-    target: file.target,
-    comparison: file.comparison,
+    family: classTable[key].family,
+    acquisition: classTable[key].acquisition,
+    target: ownName(file.target),
+    comparison: ownName(file.comparison),
     contrastAgent: file.contrastAgent ?? false,
     nullTissue: file.nullTissue ?? null,
     tissueOverrides: plainCopy(file.tissueOverrides ?? {}),

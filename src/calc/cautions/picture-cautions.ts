@@ -1,6 +1,6 @@
 import type { AddCaution } from '../caution.js';
 import { classRow } from '../classes.js';
-import type { SeriesModel } from '../model.js';
+import type { SeriesModel, TissueSignal } from '../model.js';
 import { below } from '../rounding.js';
 import { inWords } from './number-words.js';
 
@@ -54,14 +54,16 @@ export function pictureCautions(model: SeriesModel, add: AddCaution): void {
       () => `gap ${inWords(p.sliceGapMm, 2)} mm is under 10 % of the slice: neighbours excite each other`,
     );
   }
-  for (const tissue of [model.target, model.comparison]) {
-    if (tissue?.extrapolated === true) {
-      add(
-        'extrapolated-tissue',
-        'note',
-        { t1Ms: tissue.t1Ms, t2Ms: tissue.t2Ms },
-        () => `${tissue.tissue}: relaxation at ${inWords(model.scanner.fieldT, 2)} T lies beyond the measured fields`,
-      );
-    }
-  }
+  extrapolationCaution(model.target, model, add);
+  extrapolationCaution(model.comparison, model, add);
+}
+
+function extrapolationCaution(tissue: TissueSignal | null, model: SeriesModel, add: AddCaution): void {
+  if (tissue === null || !tissue.extrapolated) return;
+  add(
+    'extrapolated-tissue',
+    'note',
+    { t1Ms: tissue.t1Ms, t2Ms: tissue.t2Ms },
+    () => `${tissue.tissue}: relaxation at ${inWords(model.scanner.fieldT, 2)} T lies beyond the measured fields`,
+  );
 }

@@ -2,17 +2,22 @@ import type { Baseline } from '../baseline.js';
 import type { AddCaution } from '../caution.js';
 import type { SeriesModel } from '../model.js';
 import { effectiveRepetitionTimeMs } from '../pacing.js';
+import type { PlayedPulse } from '../pulses.js';
 import type { Readings } from '../reading.js';
 import { b1RmsWindowMs } from '../rf.js';
 import { below } from '../rounding.js';
 import { inWords } from './number-words.js';
 
+function lengthenedOne(pulse: PlayedPulse | null): PlayedPulse | null {
+  return pulse?.lengthened === true ? pulse : null;
+}
+
 /** Pulses that had to change, RF bounds, and what a scanner reading stands for. */
 export function rfCautions(model: SeriesModel, baseline: Baseline, readings: Readings, add: AddCaution): void {
   const p = model.series.parameters;
   const { excitation, refocusing, band, fatSaturation } = model.pulses;
-  const stretched = [excitation, refocusing, band, fatSaturation].find((pulse) => pulse?.lengthened === true);
-  if (stretched) {
+  const stretched = lengthenedOne(excitation) ?? lengthenedOne(refocusing) ?? lengthenedOne(band) ?? lengthenedOne(fatSaturation);
+  if (stretched !== null) {
     add(
       'pulse-lengthened',
       'caution',

@@ -2,7 +2,7 @@ import type { Baseline } from '../baseline.js';
 import type { AddCaution } from '../caution.js';
 import { classRow } from '../classes.js';
 import type { SeriesModel } from '../model.js';
-import { effectiveRepetitionTimeMs, isCine } from '../pacing.js';
+import { effectiveRepetitionTimeMs } from '../pacing.js';
 import { atMost, below } from '../rounding.js';
 import { linesInOneTrain } from '../series.js';
 import { contrastEcho } from '../signal/echo-train-signal.js';
@@ -48,7 +48,7 @@ export function timingCautions(model: SeriesModel, baseline: Baseline, add: AddC
         `TE ${inWords(p.echoTimeMs, 2)} ms is under the estimated minimum of ${inWords(minimum.echoTimeMs, 2)} ms (${minimum.binding}): the scanner may refuse it`,
     );
   }
-  const tr = isCine(p) ? p.repetitionTimeMs : effectiveRepetitionTimeMs(p);
+  const tr = effectiveRepetitionTimeMs(p);
   if (below(tr, minimum.repetitionTimeMs)) {
     add(
       'below-minimum-tr',
@@ -144,7 +144,7 @@ export function trainCautions(model: SeriesModel, add: AddCaution): void {
     }
   }
   if (row.otherwise.echoTrainLength === 'lines') {
-    const wanted = linesInOneTrain(model.key, p);
+    const wanted = linesInOneTrain(model.key, model.lines);
     if (wanted !== p.echoTrainLength) {
       add(
         'train-length-differs',

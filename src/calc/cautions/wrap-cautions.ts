@@ -25,8 +25,10 @@ function isOblique(plane: string): boolean {
 export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline, add: AddCaution): void {
   const p = model.series.parameters;
   if (model.key === 'rotating-strip-fast-spin-echo/2D') return;
+  const bodyKnown = body.frontBackMm !== null || body.leftRightMm !== null;
+  if (!bodyKnown && p.phaseDirection !== 'HF') return;
   if (isOblique(model.series.plane)) {
-    if (body.frontBackMm !== null || body.leftRightMm !== null) {
+    if (bodyKnown) {
       add('wrap-not-checked', 'note', {}, () => `wrap not checked: ${model.series.plane} plane, no body extent lies along phase`);
     }
     return;

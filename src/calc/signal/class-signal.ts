@@ -19,9 +19,6 @@ export interface SignalSetting {
   readonly slicesOfRound: number;
 }
 
-/** Signed signal for proton density 1, at `echoTimeMs`, before fat factor and diffusion. */
-type SignalOf = (setting: SignalSetting, echoTimeMs: number, tissue: Tissue) => number;
-
 /** True when each slice is excited once only: the magnetisation starts at equilibrium. */
 function startsAtEquilibrium({ key, parameters: p }: SignalSetting): boolean {
   if (p.averages !== 1 || p.dummyShots !== 0) return false;
@@ -35,23 +32,14 @@ function signalRepetitionMs({ key, parameters: p, slicesOfRound }: SignalSetting
   return key === 'single-shot-fast-spin-echo/2D' ? tr * guardedCeil(slicesOfRound / p.simultaneousSlices) : tr;
 }
 
-/** Timing of a refocused train as its signal sees it. */
-export function trainTimingOf(setting: SignalSetting): TrainTiming {
-  const p = setting.parameters;
-  return {
-    repetitionTimeMs: signalRepetitionMs(setting),
-    echoTimeMs: p.echoTimeMs,
-    inversionTimeMs: p.inversionTimeMs,
-    flipAngleDeg: p.flipAngleDeg,
-    refocusingAngleDeg: p.refocusingAngleDeg,
-    echoTrainLength: p.echoTrainLength,
-    echoSpacingMs: p.echoSpacingMs,
-    fromEquilibrium: startsAtEquilibrium(setting),
-  };
+/** Timing of a series as the signals of its class see it: worked out once, used for every tissue. */
+export interface ClassTiming extends TrainTiming, SpinEchoTiming {
+  /** The cycle of the inversion-prepared class, null in the others. */
+  readonly prepared: InversionPreparedTiming | null;
 }
 
-/** Timing of a spin echo as its signal sees it. */
-export function spinEchoTimingOf(setting: SignalSetting): SpinEchoTiming {
+/** Timing of a series as its signals see it. */
+export function classTimingOf(setting: SignalSetting): ClassTiming {
   const p = setting.parameters;
   return {
     repetitionTimeMs: signalRepetitionMs(setting),
@@ -60,12 +48,15 @@ export function spinEchoTimingOf(setting: SignalSetting): SpinEchoTiming {
     inversionTimeMs: p.inversionTimeMs,
     flipAngleDeg: p.flipAngleDeg,
     refocusingAngleDeg: p.refocusingAngleDeg,
+    echoTrainLength: p.echoTrainLength,
+    echoSpacingMs: p.echoSpacingMs,
     fromEquilibrium: startsAtEquilibrium(setting),
+    prepared: setting.key === 'inversion-prepared-gradient-echo/3D' ? inversionPreparedTimingOf(setting) : null,
   };
 }
 
 /** Timing of an inversion-prepared cycle: readouts from the partitions, the centre counted from 0. */
-export function inversionPreparedTimingOf({ parameters: p, lines }: SignalSetting): InversionPreparedTiming {
+function inversionPreparedTimingOf({ parameters: p, lines }: SignalSetting): InversionPreparedTiming {
   const all = guardedCeil(lines.fullSlice / p.parallelFactorSlice);
   return {
     repetitionTimeMs: effectiveRepetitionTimeMs(p),
@@ -77,30 +68,32 @@ export function inversionPreparedTimingOf({ parameters: p, lines }: SignalSettin
   };
 }
 
-const spinEcho: SignalOf = (s, te, tissue) => spinEchoSignal(spinEchoTimingOf(s), te, tissue.t1Ms, tissue.t2Ms);
-const train: SignalOf = (s, _te, tissue) => trainSignal(trainTimingOf(s), tissue.t1Ms, tissue.t2Ms);
-const spoiled: SignalOf = (s, te, tissue) => {
-  const p = s.parameters;
-  if (startsAtEquilibrium(s)) return Math.sin((p.flipAngleDeg * Math.PI) / 180) * Math.exp(-te / tissue.t2StarMs);
-  return spoiledGradientEchoSignal(signalRepetitionMs(s), te, p.flipAngleDeg, tissue.t1Ms, tissue.t2StarMs);
-};
+function spoiledSignal(s: ClassTiming, echoTimeMs: number, tissue: Tissue): number {
+  if (s.fromEquilibrium) return Math.sin((s.flipAngleDeg * Math.PI) / 180) * Math.exp(-echoTimeMs / tissue.t2StarMs);
+  return spoiledGradientEchoSignal(s.repetitionTimeMs, echoTimeMs, s.flipAngleDeg, tissue.t1Ms, tissue.t2StarMs);
+}
 
-/** The signal of each family. A new family is one file beside this one and one line here. */
-const signals: Readonly<Record<Family, SignalOf>> = {
-  'spin-echo': spinEcho,
-  'fast-spin-echo': train,
-  'single-shot-fast-spin-echo': train,
-  'rotating-strip-fast-spin-echo': train,
-  'spoiled-gradient-echo': spoiled,
-  'balanced-steady-state': (s, te, tissue) =>
-    balancedSignal(signalRepetitionMs(s), te, s.parameters.flipAngleDeg, tissue.t1Ms, tissue.t2Ms),
-  'inversion-prepared-gradient-echo': (s, te, tissue) =>
-    inversionPreparedSignal(inversionPreparedTimingOf(s), tissue.t1Ms) * Math.exp(-te / tissue.t2StarMs),
-  'echo-planar-gradient-echo': spoiled,
-  'echo-planar-spin-echo': spinEcho,
-};
+/** Signed signal for proton density 1 at `echoTimeMs`. A new family is one file beside this one and one case here. */
+function signedSignal(family: Family, s: ClassTiming, echoTimeMs: number, tissue: Tissue): number {
+  switch (family) {
+    case 'spoiled-gradient-echo':
+    case 'echo-planar-gradient-echo':
+      return spoiledSignal(s, echoTimeMs, tissue);
+    case 'spin-echo':
+    case 'echo-planar-spin-echo':
+      return spinEchoSignal(s, echoTimeMs, tissue.t1Ms, tissue.t2Ms);
+    case 'fast-spin-echo':
+    case 'single-shot-fast-spin-echo':
+    case 'rotating-strip-fast-spin-echo':
+      return trainSignal(s, tissue.t1Ms, tissue.t2Ms);
+    case 'balanced-steady-state':
+      return balancedSignal(s.repetitionTimeMs, echoTimeMs, s.flipAngleDeg, tissue.t1Ms, tissue.t2Ms);
+    case 'inversion-prepared-gradient-echo':
+      return inversionPreparedSignal(s.prepared as InversionPreparedTiming, tissue.t1Ms) * Math.exp(-echoTimeMs / tissue.t2StarMs);
+  }
+}
 
 /** Magnitude of the signal at `echoTimeMs` for proton density 1, before noise, fat factor and diffusion. */
-export function classSignal(setting: SignalSetting, echoTimeMs: number, tissue: Tissue): number {
-  return Math.abs(signals[classRow(setting.key).family as Family](setting, echoTimeMs, tissue));
+export function classSignal(setting: SignalSetting, echoTimeMs: number, tissue: Tissue, timing = classTimingOf(setting)): number {
+  return Math.abs(signedSignal(classRow(setting.key).family as Family, timing, echoTimeMs, tissue));
 }

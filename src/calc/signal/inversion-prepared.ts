@@ -30,9 +30,20 @@ export function inversionPreparedSignal(s: InversionPreparedTiming, t1Ms: number
   const f = e * Math.cos(angle);
   const eBefore = Math.exp(-beforeMs / t1Ms);
   const eAfter = Math.exp(-afterMs / t1Ms);
-  const fN = f ** s.readouts;
-  const fn = f ** s.centre;
+  const fn = wholePower(f, s.centre);
+  const fN = wholePower(f, s.readouts);
   const c = ((1 - e) * (1 - fN)) / (1 - f);
   const steady = (1 + ((1 - eBefore) * fN + c - 1) * eAfter) / (1 + eBefore * fN * eAfter);
   return Math.sin(angle) * ((1 - eBefore - steady * eBefore) * fn + ((1 - e) * (1 - fn)) / (1 - f));
+}
+
+/** x to a whole power by repeated squaring: the general power takes several times as long. */
+function wholePower(x: number, n: number): number {
+  let power = 1;
+  let square = x;
+  for (let rest = n; rest > 0; rest >>= 1) {
+    if ((rest & 1) === 1) power *= square;
+    square *= square;
+  }
+  return power;
 }

@@ -15,8 +15,8 @@ import type { ReadResult } from './read.js';
 export function readPage(result: ReadResult, page: Page): string {
   const { counts, series, draft, picked, written } = result;
   const images = series.reduce((sum, { read }) => sum + read.images, 0);
-  const over = counts.passedOver === 0 ? '' : `; ${counts.passedOver} other files passed over`;
   const count = (n: number, word: string) => `${n} ${word}${n === 1 || word === 'series' ? '' : 's'}`;
+  const over = counts.passedOver === 0 ? '' : `; ${count(counts.passedOver, 'other file')} passed over`;
   const heading = `${count(series.length, 'series')}, ${count(images, 'image')} in ${counts.read} of ${count(counts.files, 'file')}${over}`;
   return [
     page.emphasis('heading', heading),

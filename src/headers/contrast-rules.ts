@@ -53,7 +53,7 @@ function findBands({ attributes: a }: CollectedSeries): Found {
   const count = a.SaturationBandCount?.[0];
   const stated = a.SpatialPresaturation?.[0];
   if (stated === 'NONE') return readAs(0, 'SpatialPresaturation NONE');
-  if (count !== undefined && count > 0) return derivedAs(count, `${count} items of MRSpatialSaturationSequence`);
+  if (count !== undefined && count > 0) return derivedAs(count, `items of MRSpatialSaturationSequence: ${count}`);
   if (stated === 'SLAB') return missingFor('SpatialPresaturation SLAB: at least one, how many is not stated');
   if (says(a.ScanOptions, 'SP')) return missingFor('ScanOptions SP: at least one, how many is not stated');
   return listed(a) ? derivedAs(0, 'not among the ScanOptions that are listed') : missingFor('SpatialPresaturation is not stated');

@@ -11,8 +11,8 @@ import { guessedAs, type ReadValue } from './found.js';
 const usual: Readonly<Partial<Record<ParameterKey, readonly number[]>>> = {
   partialFourierPhase: [0.625, 0.75, 0.875],
   partialFourierSlice: [0.625, 0.75, 0.875],
-  phaseOversamplingPercent: [10, 20, 30, 40, 50, 60, 70, 80, 90, 100],
-  sliceOversamplingPercent: [10, 12.5, 20, 25, 33, 50, 100],
+  phaseOversamplingPercent: [10, 20, 25, 30, 40, 50, 60, 70, 75, 80, 90, 100],
+  sliceOversamplingPercent: [10, 12.5, 15, 20, 25, 33, 50, 100],
 };
 
 /** What a header may leave unsaid and time hangs on as well: tried beside. */
@@ -24,8 +24,10 @@ const unsaid: Readonly<Partial<Record<ParameterKey, readonly number[]>>> = {
 /** Real series run up to 6 % over the rules (published series against them), and hardly under. */
 const shortest = 0.94;
 const longest = 1.01;
-/** Real series run this much over on average; of several explanations the nearest to it is the guess. */
+/** Real series run this much over on average: of several explanations the nearest to it is the best. */
 const average = 0.98;
+/** Explanations that differ by less cannot be told apart. */
+const indistinguishable = 0.02;
 
 interface Explanation {
   readonly values: Readonly<Partial<Record<ParameterKey, number>>>;
@@ -42,7 +44,8 @@ function combinations(keys: readonly (readonly [ParameterKey, readonly number[]]
 
 /**
  * Amounts that a header says are there but does not give (partial Fourier, oversampling), from AcquisitionDuration: the one that
- * explains it becomes a guess, marked as one; where several do, the nearest, and the others are named; where nothing does, that is said.
+ * explains it becomes a guess, marked as one; where several do equally well, they are named and it stays missing; where nothing does,
+ * that is said.
  *
  * @param values What is known of each parameter of the class.
  * @param durationS AcquisitionDuration; nothing is guessed without it.
@@ -68,13 +71,16 @@ export function guessFromDuration(
   const said = `AcquisitionDuration ${Number(durationS.toFixed(1))} s`;
   if (explanations.length === 0) return bounded(`no usual amount explains ${said}`);
   const best = explanations.reduce((a, b) => (distance(b) < distance(a) ? b : a));
+  const asGood = explanations.filter((one) => distance(one) < distance(best) + indistinguishable);
   return values.map((value) => {
     if (!wanted.includes(value.key)) return value;
-    const all = [...new Set(explanations.map((one) => one.values[value.key] as number))].sort((a, b) => a - b);
-    const others =
-      all.length === 1 ? 'no other usual amount does' : `so would ${all.filter((one) => one !== best.values[value.key]).join(', ')}`;
-    const beside = besideWords(best, wanted);
-    return { key: value.key, ...guessedAs(best.values[value.key], `explains ${said}${beside}; ${others}. ${value.words}`) };
+    const valuesOf = (some: readonly Explanation[]) =>
+      [...new Set(some.map((one) => one.values[value.key] as number))].sort((a, b) => a - b);
+    const candidates = valuesOf(asGood);
+    if (candidates.length > 1) return { ...value, words: `${value.words}; ${said} allows ${candidates.join(' or ')}` };
+    const others = valuesOf(explanations).filter((one) => one !== candidates[0]);
+    const beside = others.length === 0 ? 'no other usual amount does' : `less well would ${others.join(', ')}`;
+    return { key: value.key, ...guessedAs(candidates[0], `explains ${said}${besideWords(best, wanted)}; ${beside}. ${value.words}`) };
   });
 }
 

@@ -1,10 +1,12 @@
 import { worstFirst } from '../calc/caution.js';
 import { classRow } from '../calc/classes.js';
-import { type FigureKey, figureTable } from '../calc/figures.js';
+import { figureTable } from '../calc/figures.js';
 import { parameterRow } from '../calc/parameters.js';
 import { classOf } from '../calc/series.js';
 import type { SeriesCarry } from '../search/carry.js';
 import type { StudyCarry } from '../search/carry-study.js';
+import { aimWords } from '../session/carry.js';
+import { carryFigures } from '../session/carry-rows.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayParameter } from '../session/say-parameter.js';
 import { textTable } from '../session/text-table.js';
@@ -14,19 +16,6 @@ import { mustKeepCautions } from '../study/must-keep.js';
 import { cautionLines } from './caution-lines.js';
 import { closingWords } from './closing-words.js';
 import type { Page } from './page.js';
-
-const aimWords = { contrast: 'equal contrast ratio', snr: 'equal SNR', shift: 'equal chemical shift', time: 'equal time' } as const;
-
-/** Figures that a change of field is about, in this order. */
-const shownFigures: readonly FigureKey[] = [
-  'scanTimeS',
-  'holdTimeS',
-  'relativeSnr',
-  'contrastRatio',
-  'chemicalShiftPx',
-  'b1PlusRmsUt',
-  'blurFwhmPx',
-];
 
 /** A carried study as plain text: side by side, and why. */
 export function carryPage(
@@ -43,7 +32,7 @@ export function carryPage(
       page.emphasis('heading', line),
     ),
     ...wrapText(
-      cleanText(`From ${from.fieldT} T to ${where}, ${aimWords[aim]}. A proposal: a person reviews and releases it.`),
+      cleanText(`From ${from.fieldT} T to ${where}, equal ${aimWords[aim]}. A proposal: a person reviews and releases it.`),
       page.width,
     ),
     ...series.flatMap((one) => ['', ...seriesLines(one, page)]),
@@ -72,7 +61,7 @@ function seriesLines(one: SeriesCarry, page: Page): string[] {
   const parameters = values
     .filter(({ key }) => !isLong(key))
     .map(({ key, from, to }) => [parameterRow(key).label, cleanText(sayParameter(key, from)), cleanText(sayParameter(key, to))]);
-  const figures = shownFigures
+  const figures = carryFigures
     .filter((key) => before.figures[key] !== null || evaluation.figures[key] !== null)
     .map((key) => [figureTable[key].label, sayFigure(key, before.figures[key]), sayFigure(key, evaluation.figures[key])]);
   const kept = mustKeeps.filter(({ status }) => status === 'kept').length;

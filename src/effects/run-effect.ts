@@ -1,4 +1,5 @@
 import type { Answer, Effect } from '../session/message.js';
+import { carryPreset } from './carry-preset.js';
 import { claimDraft } from './claim-draft.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { listRecords } from './list-records.js';
@@ -40,6 +41,8 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return searchWays(world, effect);
     case 'plan':
       return planSession(world, effect);
+    case 'carry':
+      return carryPreset(world, effect);
     case 'stop-search':
       world.searches.stop();
       return null;

@@ -1,5 +1,6 @@
 import { Worker } from 'node:worker_threads';
 import type { Budget, BudgetProblem } from '../search/budget.js';
+import type { CarryProblem, StudyCarry } from '../search/carry-study.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import { replyToAsk } from './answer-search.js';
 import type { Job, SearchAnswer, SearchAsk, SearchReply } from './search-protocol.js';
@@ -17,6 +18,12 @@ export interface PlanListener {
   readonly failed: (message: string) => void;
 }
 
+/** What a preset that is carried tells. */
+export interface CarryListener {
+  readonly carried: (carried: StudyCarry) => void;
+  readonly failed: (message: string) => void;
+}
+
 /** The part of a worker that a search needs; tests hand in plain objects. */
 export interface SearchPort {
   readonly post: (ask: SearchAsk) => void;
@@ -31,6 +38,8 @@ export interface SearchRunner {
   readonly start: (problem: SearchProblem, listener: SearchListener) => number;
   /** Starts to plan a session, in the place of what runs, and answers its number. */
   readonly plan: (problem: BudgetProblem, listener: PlanListener) => number;
+  /** Carries a preset, in the place of what runs, and answers its number. */
+  readonly carry: (problem: CarryProblem, listener: CarryListener) => number;
   /** Ends the running search at once; it answers with what it has. */
   readonly stop: () => void;
   /** Ends everything: no search can be started any more. */
@@ -120,6 +129,11 @@ export function searchRunner(open: () => SearchPort | null): SearchRunner {
     plan: (problem, listener) =>
       begin(problem, (reply) => {
         if (reply.kind === 'plan') listener.planned(reply.plan);
+        else if (reply.kind === 'fault') listener.failed(reply.message);
+      }),
+    carry: (problem, listener) =>
+      begin(problem, (reply) => {
+        if (reply.kind === 'carried') listener.carried(reply.carried);
         else if (reply.kind === 'fault') listener.failed(reply.message);
       }),
     stop: () => {

@@ -1,3 +1,4 @@
+import { carryHeadline, isCarrying } from '../session/carry.js';
 import { entryKeys, keyMap } from '../session/key-map.js';
 import { holdClock, runningSeries } from '../session/running.js';
 import { sayClock } from '../session/say-number.js';
@@ -18,6 +19,7 @@ export function headlineOf(state: State): Headline {
   const { screen, seriesId } = state.place;
   // While a session is open its verdict stays in sight, but not where something is released.
   if (isShelfScreen(screen) && (state.session === null || screen === 'release')) return { word: null, text: shelfHeadline(state) };
+  if (isCarrying(state)) return { word: null, text: carryHeadline(state) };
   if (screen === 'scanner' && state.session === null) return { word: null, text: 'Choose a scanner and a coil' };
   return ofSeries.includes(screen) && state.session !== null ? seriesHeadline(state, seriesId) : sessionHeadline(state);
 }

@@ -1,4 +1,5 @@
 import { figureTable } from '../calc/figures.js';
+import { carryChoices, carryRow, carryRows } from '../session/carry-rows.js';
 import { rangeChart } from '../session/chart.js';
 import { consequences } from '../session/consequences.js';
 import { chosenScanner, sayChoice } from '../session/equipment.js';
@@ -79,6 +80,8 @@ function itemsOf(state: State, look: Look): readonly Item[] {
     case 'past-record':
     case 'report':
       return shelfItems(state);
+    case 'carry':
+      return carryItems(state);
     case 'scanner':
       return scannerItems(state);
     case 'ways':
@@ -115,6 +118,25 @@ function startItems(state: State): Item[] {
           ? `Unfinished session: ${row.words}, ${row.changes} changed`
           : `${row.preset.study.fieldT} T, ${row.preset.study.region}: ${row.preset.study.title}, ${row.preset.study.status}`,
       here: row.field === here,
+    })),
+  ];
+}
+
+function carryItems(state: State): Item[] {
+  const here = carryRow(state)?.field;
+  if (state.carry?.trouble != null) return [{ words: state.carry.trouble, here: true }];
+  const rows = carryRows(state);
+  return [
+    ...carryChoices(state).map(({ field, label, after }) => ({ words: `${label}: ${after}`, here: field === here })),
+    ...(rows.length === 0 ? [{ words: 'Being worked out' }] : []),
+    ...rows.map(({ field, kind, label, before, after, words }) => ({
+      words:
+        kind === 'heading'
+          ? `${label}:`
+          : kind === 'words'
+            ? `${label}: ${words}`
+            : `${label}: ${before === after ? `${before}, as in the preset` : `${before} becomes ${after}`}${words === '' ? '' : `: ${words}`}`,
+      here: field === here,
     })),
   ];
 }

@@ -1,5 +1,6 @@
 import type { ScreenName, State } from '../session/state.js';
 import { budgetScreen } from './budget-screen.js';
+import { carryScreen } from './carry-screen.js';
 import { chartScreen } from './chart-screen.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { keepScreen, patientScreen, readingsScreen, recordScreen } from './form-screen.js';
@@ -39,6 +40,7 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
   budget: budgetScreen,
   readings: readingsScreen,
   scanner: scannerScreen,
+  carry: carryScreen,
   record: recordScreen,
   presets: presetsScreen,
   revisions: revisionsScreen,

@@ -64,6 +64,7 @@ export const screenWords: Readonly<Record<ScreenName, string>> = {
   budget: 'budget',
   readings: 'scanner readings',
   scanner: 'scanner and coil',
+  carry: 'carry to another field or scanner',
   record: 'record',
   presets: 'presets',
   revisions: 'revisions',

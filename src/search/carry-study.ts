@@ -16,6 +16,13 @@ export interface StudyCarry {
   readonly gaps: readonly CarryGap[];
 }
 
+/** Everything that a study is carried with: plain data, so that it can be handed to a worker. */
+export interface CarryProblem {
+  /** The study, as it is judged. */
+  readonly carry: Study;
+  readonly circumstances: CarryCircumstances;
+}
+
 /** True for a field that a study may be carried from or to. */
 export function canCarry(fieldT: number): boolean {
   return fieldT >= carryFields.min - 1e-9 && fieldT <= carryFields.max + 1e-9;

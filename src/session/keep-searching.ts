@@ -38,7 +38,7 @@ export function keepSearching(before: State, after: State): Change {
   const begun: State = {
     ...after,
     asks: ask,
-    open: { ...after.open, search: ask },
+    open: { ...withoutCarry(after.open), search: ask },
     search: { seriesId: wanted, problem, key, ask, share: null, answer: null, trouble: null },
     plan: planGone ? null : plan,
     allWays: false,
@@ -50,6 +50,11 @@ export function keepSearching(before: State, after: State): Change {
 
 function atFirstWay(place: State['place']): State['place'] {
   return { ...place, fields: { ...place.fields, ways: '0' } };
+}
+
+/** A preset that is being carried gives way too; its screen asks again. */
+function withoutCarry({ carry: _gone, ...open }: State['open']): State['open'] {
+  return open;
 }
 
 function withoutSearch({ search: _gone, ...open }: State['open']): State['open'] {

@@ -1,4 +1,14 @@
 import { leaveBudget, moveInBudget, otherPlan, showBudget, takePlan } from './hands/budget-commands.js';
+import {
+  carryOpened,
+  enterCarry,
+  moveInCarry,
+  saveCarried,
+  turnCarried,
+  turnCarry,
+  typeCarry,
+  whyCarried,
+} from './hands/carry-commands.js';
 import { moveCursor, openChart, takeValue, turnFigure } from './hands/chart-commands.js';
 import { back, contrastGiven, quit, redo, show, undo } from './hands/common-commands.js';
 import { clearRow, enterRow, moveInForm, turnRow, typeRow } from './hands/form-commands.js';
@@ -158,6 +168,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('n', 'n', '', 'New session; after the record is saved.', anotherSession),
     row('m', 'm', '', 'More: presets and their revisions, and from there the records.', showPresets),
     row('tab', 'Tab', '', 'Scanner and coil of this session, and what changes on them.', show('scanner')),
+    row('t', 't', '', 'To another field or scanner: carries the preset there, as a proposal.', carryOpened),
     ...everywhere,
   ],
   series: [...series, ...everywhere],
@@ -220,6 +231,23 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     ...everywhere.filter(({ keys }) => !keys.includes('escape')),
   ],
   readings: [...form, ...everywhere],
+  carry: [
+    ...upAndDown(moveInCarry, 'the lines'),
+    row(
+      ['-', 'left'],
+      'left right',
+      'change',
+      'Another field or scanner, coil, what is kept equal, or series; minus and plus do the same.',
+      turnCarry(-1),
+    ),
+    row(['+', '=', 'right'], '', '', '', turnCarry(1)),
+    row(digits, '0-9', 'type', 'Begins typing a field: 2.89 T.', typeCarry),
+    row('enter', 'Enter', '', 'Types a field, turns a choice; on other lines explains.', enterCarry),
+    row('w', 'w', 'why', 'Explains the line: sentence, numbers, formula, source, what it ignores.', whyCarried),
+    row('n', 'n', 'next', 'The next series.', turnCarried(1)),
+    row('s', 's', 'save', 'Saves the proposal as a draft preset; nothing is released.', saveCarried),
+    ...sessionKeys,
+  ],
   scanner: [
     ...upAndDown(moveInScanners, 'the scanners and their coils'),
     row('enter', 'Enter', 'take', 'Takes this scanner and coil; in a session undo takes them back.', takeScanner),

@@ -1,5 +1,6 @@
 import type { Problem } from '../calc/problem.js';
 import type { Budget, BudgetProblem } from '../search/budget.js';
+import type { CarryProblem, StudyCarry } from '../search/carry-study.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { Rules } from '../study/must-keep.js';
 import type { SessionRecord } from '../study/record.js';
@@ -39,6 +40,7 @@ export type Answer =
   | { readonly kind: 'draft'; readonly session: unknown }
   | { readonly kind: 'ways'; readonly ways: WaysAnswer }
   | { readonly kind: 'plan'; readonly plan: Budget }
+  | { readonly kind: 'carried'; readonly carried: StudyCarry }
   | ShelfAnswer;
 
 /** Everything that can happen to the interface. */
@@ -68,6 +70,7 @@ export type Effect =
   | { readonly kind: 'save-page'; readonly ask: number; readonly record: Omit<SessionRecord, 'id' | 'day'> }
   | { readonly kind: 'search'; readonly ask: number; readonly problem: SearchProblem }
   | { readonly kind: 'plan'; readonly ask: number; readonly problem: BudgetProblem }
+  | { readonly kind: 'carry'; readonly ask: number; readonly problem: CarryProblem }
   /** Ends the search or plan that runs; a search answers with what it has. */
   | { readonly kind: 'stop-search' }
   | ShelfEffect

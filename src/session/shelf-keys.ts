@@ -1,4 +1,5 @@
 import type { Command } from './change.js';
+import { carryRevision } from './hands/carry-commands.js';
 import { back, quit, show } from './hands/common-commands.js';
 import {
   moveInRecords,
@@ -64,6 +65,7 @@ export const shelfKeys = {
     row('d', 'd', 'draft', 'Begins a draft of this revision: its series are changed as in any session.', editAsDraft),
     row('s', 's', 'save', 'Saves what the open session changed as a draft preset of yours.', saveDraft, isSession),
     row('r', 'r', 'release', 'Releases it as the next revision of the site: checks, role, reason, and a word typed in full.', beginRelease),
+    row('t', 't', 'to', 'To another field or scanner: carries it there, as a proposal.', carryRevision),
     toSession('p', '', 'This patient.', show('patient')),
     toSession('o', 'order', 'The running order.', show('order')),
     help,

@@ -1,5 +1,7 @@
+import { keepCarrying } from './carry.js';
 import { type Change, only, say } from './change.js';
 import { type Draft, draftLayout, draftSteps } from './draft.js';
+import { takeCarryAnswer } from './hands/carry-commands.js';
 import { takeExpression, typeKey } from './hands/entry-commands.js';
 import { judgeAgain, openDraft } from './hands/start-commands.js';
 import { keepSearching } from './keep-searching.js';
@@ -16,8 +18,10 @@ import { takeShelfAnswer, withReadingShare } from './take-shelf-answer.js';
  */
 export function update(state: State, message: Message): Change {
   const [moved, asked] = carryOut(state, message);
-  const [next, searched] = keepSearching(state, moved);
-  const effects = searched.length === 0 ? asked : [...asked, ...searched];
+  const [sought, searched] = keepSearching(state, moved);
+  const [next, carried] = keepCarrying(sought);
+  const more = [...searched, ...carried];
+  const effects = more.length === 0 ? asked : [...asked, ...more];
   const draft = draftToSave(state, next);
   return draft === null ? [next, effects] : [next, [...effects, { kind: 'save-draft', draft } satisfies Effect]];
 }
@@ -100,6 +104,9 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
       const said = answer.kind === 'plan' ? { answer: answer.plan, trouble: null } : { answer: null, trouble: failed ?? 'The plan failed' };
       return only({ ...next, plan: { ...plan, ...said } });
     }
+    case 'carry':
+    case 'carryRules':
+      return only(takeCarryAnswer(next, answer, failed));
     case 'revisions':
     case 'checks':
     case 'release':

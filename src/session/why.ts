@@ -2,6 +2,8 @@ import { classRow, figureNeeds } from '../calc/classes.js';
 import { figureTable } from '../calc/figures.js';
 import { parameterRow } from '../calc/parameters.js';
 import { classOf } from '../calc/series.js';
+import { isCarrying } from './carry.js';
+import { carryWhy } from './carry-why.js';
 import { changedKeys } from './changed-keys.js';
 import { consequences } from './consequences.js';
 import { figureReasons } from './figure-reasons.js';
@@ -19,6 +21,7 @@ import type { Paragraph } from './type-these.js';
 
 /** Explains what the hand is on: a parameter, a consequence, a caution. The sentence comes first. */
 export function whyText(state: State): readonly Paragraph[] {
+  if (isCarrying(state)) return carryWhy(state);
   const { pane } = state.place;
   return pane === 'consequences' ? whyFigure(state) : pane === 'cautions' ? whyCaution(state) : whyParameter(state);
 }

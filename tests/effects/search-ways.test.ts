@@ -16,6 +16,7 @@ function held() {
   const searches = {
     start: (_problem: unknown, listener: SearchListener) => listeners.push(listener),
     plan: () => 0,
+    carry: () => 0,
     stop: () => {},
     close: () => {},
   };

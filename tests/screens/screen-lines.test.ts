@@ -1,10 +1,13 @@
 import { describe, expect, it } from 'vitest';
+import { plainScanner } from '../../src/calc/scanner.js';
 import { answerSearch } from '../../src/effects/answer-search.js';
 import { headlineOf } from '../../src/screens/common-lines.js';
 import { lineText } from '../../src/screens/line.js';
 import type { Look } from '../../src/screens/look.js';
 import { screenLines } from '../../src/screens/screen-lines.js';
 import { planBudget } from '../../src/search/budget.js';
+import { carryStudy, type StudyCarry } from '../../src/search/carry-study.js';
+import { type CarryView, sayTarget } from '../../src/session/carry.js';
 import { formRows } from '../../src/session/hands/form-commands.js';
 import { keyMap } from '../../src/session/key-map.js';
 import { budgetProblemOf } from '../../src/session/search-problem.js';
@@ -12,6 +15,7 @@ import { type State, screenNames } from '../../src/session/state.js';
 import { update } from '../../src/session/update.js';
 import { asciiGlyphs, unicodeGlyphs } from '../../src/terminal/glyphs.js';
 import { textWidth } from '../../src/terminal/text-width.js';
+import { pictureFailed, withPicture } from '../session/drawn-picture.js';
 import { onField, press, sessionOn, startState } from '../session/invented-state.js';
 import { atScanner, shippedScanners, startWithScanners } from '../session/shipped-scanners.js';
 
@@ -23,6 +27,17 @@ const at = (state: State, columns: number, rows: number): State => ({ ...state, 
 const textOf = (state: State, look: Look = unicode) => screenLines(state, look).map(lineText);
 
 const answers = new Map<string, ReturnType<typeof answerSearch>>();
+
+const carries = new Map<string, StudyCarry>();
+
+/** The study that is carried, at 1.5 or 3 T. */
+function carriedOf({ study, target }: CarryView): StudyCarry {
+  const name = `${study.id} ${sayTarget(target)}`;
+  const to = plainScanner('fieldT' in target ? target.fieldT : (target.choice.file?.fieldT ?? 3));
+  const known = carries.get(name) ?? carryStudy(study, { from: plainScanner(study.fieldT), to, aim: 'contrast', rules: new Map() });
+  carries.set(name, known);
+  return known;
+}
 
 /** Answers the search that is open, or the plan: stopped after a while, so that every screen is soon there. */
 function told(state: State): State {
@@ -38,6 +53,10 @@ function told(state: State): State {
     answers.set(name, ways);
     return update(state, { kind: 'answer', ask: search.ask, answer: { kind: 'ways', ways } })[0];
   }
+  const rules = state.open.carryRules;
+  if (rules !== undefined) return told(update(state, { kind: 'answer', ask: rules, answer: { kind: 'rules', rules: new Map() } })[0]);
+  if (state.open.carry !== undefined && state.carry !== null)
+    return update(state, { kind: 'answer', ask: state.open.carry, answer: { kind: 'carried', carried: carriedOf(state.carry) } })[0];
   const problem = budgetProblemOf(state);
   if (plan === null || problem === null) return state;
   return update(state, { kind: 'answer', ask: plan.ask, answer: { kind: 'plan', plan: planBudget(problem) } })[0];
@@ -57,6 +76,23 @@ function waysScreens(id: string): readonly (readonly [string, State])[] {
     ['front of loss', press(ways, 'c', 'tab', 'right')],
     ['keep', press(ways, 'k')],
     ['ways help', press(ways, 'h')],
+    ['picture of a way', withPicture(press(ways, 's'))],
+  ];
+}
+
+/** A preset at another field: while it is worked out, and when it is there. */
+function carryScreens(order: State): readonly (readonly [string, State])[] {
+  const working = press(onScanners(order), 't');
+  const carried = told(working);
+  return [
+    ['carry, being worked out', working],
+    ['carry', carried],
+    ['carry, a value', press(carried, 'down', 'down', 'down', 'down', 'down')],
+    ['carry, its end', press(carried, 'end')],
+    ['carry, to a typed field', told(press(carried, '2', '.', '8', '9', 'enter'))],
+    ['carry, typing', press(carried, '2', '.')],
+    ['carry, why', press(carried, 'down', 'down', 'down', 'down', 'w')],
+    ['carry, help', press(carried, 'h')],
   ];
 }
 
@@ -85,8 +121,13 @@ function everyScreen(id: string): readonly (readonly [string, State])[] {
     ['readings', press(series, 'd')],
     ['record', press(series, 'e')],
     ['record, reasons', press(series, 'e', 'tab')],
+    ['picture, asked for', press(series, 's')],
+    ['picture', withPicture(press(series, 's'))],
+    ['picture, close, with a divider', withPicture(press(series, 's', 'z', 'd', 'right'))],
+    ['picture, failed', pictureFailed(press(series, 's'))],
     ['help', press(series, 'h')],
     ['scanner, of a session', atScanner(onScanners(order), 'demo-3t head')],
+    ...carryScreens(order),
     ...waysScreens(id),
   ];
 }
@@ -274,5 +315,30 @@ describe('what is wrong with files', () => {
       expect(text).toContain('broken.json, line 3');
       expect(text).toContain('Liver');
     }
+  });
+});
+
+describe('the carry screen', () => {
+  const carried = told(press(onScanners(press(sessionOn('lumbar-spine-1.5t'))), 't'));
+
+  it('has preset and carried value side by side with the reason, and the line under the hand in full', () => {
+    const text = textOf(press(carried, ...Array<string>(3).fill('down')));
+    expect(text[0]).toMatch(/^PROPOSAL.*lumbar-spine-1\.5t, 1\.5 T to /);
+    expect(text.join('\n')).toMatch(/bandwidth +\d+ Hz\/px +\d+ Hz\/px {2}\S/);
+    expect(text.join('\n')).toMatch(/Formula: |Source: /);
+    expect(text.join('\n')).toMatch(/\(\d+ more lines\)/);
+  });
+
+  it('a wide screen shows all series under the one that is looked at, and why beside them', () => {
+    const text = textOf(at(carried, 160, 50)).join('\n');
+    expect(text).toContain('All series');
+    for (const { id } of carried.carry?.study.series ?? []) expect(text).toMatch(new RegExp(`^${id} .* > `, 'm'));
+    expect(text).toContain('Not carried');
+  });
+
+  it('the reader says what becomes of each value and why, one thing a line', () => {
+    const said = textOf(at(carried, 100, 60), reader).join('\n');
+    expect(said).toMatch(/bandwidth: \d+ Hz\/px becomes \d+ Hz\/px: \S/);
+    expect(said).toContain('Not carried:');
   });
 });

@@ -14,7 +14,7 @@ export const showBudget: Command = (state) => {
   if (state.plan?.key === key && state.plan.trouble === null) return only(shown);
   const ask = state.asks + 1;
   // One worker serves both: a search that is on its way gives way.
-  const { search: searching, ...others } = state.open;
+  const { search: searching, carry: _carrying, ...others } = state.open;
   const next: State = {
     ...shown,
     asks: ask,

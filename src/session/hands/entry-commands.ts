@@ -8,6 +8,7 @@ import { fieldValue, type SeriesField, withField } from '../series-fields.js';
 import { setField } from '../set-field.js';
 import type { Entry, State } from '../state.js';
 import { snapValue } from '../step-value.js';
+import { takeCarryField } from './carry-commands.js';
 import { commitRow } from './form-commands.js';
 import { commitRelease } from './release-commands.js';
 import { fieldsHere } from './series-commands.js';
@@ -32,6 +33,7 @@ export function typeKey(state: State, entry: Entry, key: KeyPress): Change {
 /** Takes what was typed. */
 function commit(state: State, entry: Entry): Change {
   if (state.place.screen === 'release') return commitRelease(state, entry.field, entry.text);
+  if (state.place.screen === 'carry') return only(takeCarryField(state, entry.text));
   if (state.place.screen !== 'series') return only(commitRow(state, entry.field, entry.text));
   const field = fieldsHere(state).find(({ path }) => path === entry.field);
   if (field === undefined || entry.text.trim() === '') return only({ ...state, entry: null });

@@ -60,6 +60,7 @@ export function openPreset(state: State, { study, hash }: PresetChoice): Change 
     session,
     past: [],
     future: [],
+    carry: null,
     place,
     narrowing: '',
     notice: null,
@@ -77,7 +78,19 @@ export function openDraft(state: State, value: unknown): Change {
   const { opened, session, past, place, practiceSinceMs } = draft;
   return judgeAgain(
     say(
-      { ...state, opened, session, past, future: [], place, entry: null, rules: new Map(), practiceSinceMs, narrowing: '' },
+      {
+        ...state,
+        opened,
+        session,
+        past,
+        future: [],
+        carry: null,
+        place: isCarried(place) ? { ...place, screen: 'order', back: [] } : place,
+        entry: null,
+        rules: new Map(),
+        practiceSinceMs,
+        narrowing: '',
+      },
       'Gone on with, everything as it was',
     ),
   );
@@ -102,4 +115,9 @@ function withRules(state: State): Change {
   const ask = state.asks + 1;
   const effect: Effect = { kind: 'read-rules', ask, mustKeeps };
   return [{ ...state, asks: ask, open: { ...state.open, rules: ask } }, [effect]];
+}
+
+/** A preset that was carried is not in the draft: the session goes on in its running order. */
+function isCarried({ screen, back }: State['place']): boolean {
+  return screen === 'carry' || back.includes('carry');
 }

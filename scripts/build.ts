@@ -72,3 +72,4 @@ await bundle('src/main.ts', 'dist/holdfast.js');
 const worker = 'src/effects/search-worker.ts';
 if (existsSync(`${root}${worker}`)) await bundle(worker, 'dist/search-worker.js');
 else await rm(`${root}dist/search-worker.js`, { force: true });
+await bundle('src/effects/picture-worker.ts', 'dist/picture-worker.js');

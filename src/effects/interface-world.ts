@@ -8,6 +8,7 @@ import type { Folders } from '../store/folders.js';
 import type { PresetFolder } from '../store/preset-folder.js';
 import type { ScannerFolder } from '../store/scanner-folder.js';
 import type { Settings } from '../store/settings.js';
+import type { PictureRunner } from './run-picture.js';
 import type { SearchRunner } from './run-search.js';
 
 /** Everything outside that the effects of the interface touch. Tests put plain objects in its place. */
@@ -22,6 +23,9 @@ export interface InterfaceWorld {
   /** Loads the parser of expressions once, on first need. */
   readonly parser: () => Promise<ParseExpression>;
   readonly searches: SearchRunner;
+  readonly pictures: PictureRunner;
+  /** Folder of the shipped presets; the objects of pictures lie beside it. */
+  readonly shippedPresets: string | null;
   /** Says something to the interface without being asked. */
   readonly tell: (message: Message) => void;
   /** Today as YYYY-MM-DD. */

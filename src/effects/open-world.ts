@@ -18,6 +18,7 @@ import type { InterfaceWorld } from './interface-world.js';
 import { loadDrafts, loadPresets } from './load-presets.js';
 import { loadScanners, loadSiteRules } from './load-scanners.js';
 import { runEffect } from './run-effect.js';
+import { openPictureWorker, pictureRunner } from './run-picture.js';
 import { openSearchWorker, searchRunner } from './run-search.js';
 
 /** Where the interface finds its files, and what the command line said. */
@@ -72,6 +73,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   });
   const parser: { loading: Promise<ParseExpression> | null } = { loading: null };
   const searches = searchRunner(() => openSearchWorker(choices.programUrl));
+  const pictures = pictureRunner(() => openPictureWorker(choices.programUrl));
   const world: InterfaceWorld = {
     disk,
     folders,
@@ -85,6 +87,8 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
       return parser.loading;
     },
     searches,
+    pictures,
+    shippedPresets: choices.shippedPresets,
     tell: (message) => late.note(message),
     today,
     newId: randomId,
@@ -118,6 +122,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
     },
     leave: async (draft) => {
       searches.close();
+      pictures.close();
       clearInterval(beat);
       if (draft !== null) saver.change(draft);
       await saver.flush();

@@ -2,6 +2,7 @@ import type { ObjectFile, PlanePoint } from '../study/object-file.js';
 import { greyOf, inks } from './palette.js';
 import type { Picture } from './picture.js';
 import type { PicturePair } from './picture-pair.js';
+import { type PictureWindow, squareWindow, wholeWindow } from './picture-window.js';
 import { drawBox, drawLine, drawText, fillBox, type Raster, rasterOf, setPixel, textPixels } from './raster.js';
 import { extentOf, profileOf, valueAt } from './sample-picture.js';
 
@@ -34,7 +35,7 @@ export function pictureSheet(pair: PicturePair, object: ObjectFile, words: Sheet
   const down = Math.max(...extents.map(([, y]) => y));
   const wholeHeight = Math.max(80, Math.min(panel, Math.round((panel * down) / across)));
   const pixelMm = Math.max(across / panel, down / wholeHeight);
-  const window = zoomWindow(pair, object);
+  const window = squareWindow(pair, object.look);
   const lines = (texts: readonly string[]) => texts.flatMap((text) => wrapped(text, width - 2 * margin));
   const head = lines(words.title);
   const frame = lines([frameWords]);
@@ -63,7 +64,7 @@ export function pictureSheet(pair: PicturePair, object: ObjectFile, words: Sheet
   const { zoom, profile } = object.look;
   for (const { picture, left, colour } of sides) {
     const view = { left, top, width: panel, height: wholeHeight, pixelMm, middleMm: [0, 0] as const };
-    drawPicture(sheet, picture, view, [0, pair.white]);
+    drawPicture(sheet, picture, view, wholeWindow(pair));
     drawBox(sheet, left, top, panel, wholeHeight, colour, 2);
     const [x, y] = placeIn(view, [zoom.atMm[0] - zoom.sideMm / 2, zoom.atMm[1] - zoom.sideMm / 2]);
     const side = Math.round(zoom.sideMm / pixelMm);
@@ -113,24 +114,6 @@ interface View {
   readonly middleMm: PlanePoint;
 }
 
-/** Values that are drawn black and white. */
-type Window = readonly [number, number];
-
-/** Window of the squares: the range of both, the brightest and darkest half percent aside, so that small differences are seen. */
-function zoomWindow({ preset, now, white }: PicturePair, { look: { zoom } }: ObjectFile): Window {
-  const steps = 120;
-  const values = [preset, now].flatMap((picture) =>
-    Array.from({ length: steps * steps }, (_, i) => {
-      const x = zoom.atMm[0] + (((i % steps) + 0.5) / steps - 0.5) * zoom.sideMm;
-      return valueAt(picture, x, zoom.atMm[1] + ((Math.floor(i / steps) + 0.5) / steps - 0.5) * zoom.sideMm);
-    }),
-  );
-  values.sort((a, b) => a - b);
-  const at = (share: number) => values[Math.round(share * (values.length - 1))] as number;
-  const [low, high] = [at(0.005), at(0.995)];
-  return high - low > 1e-6 * white ? [low, high] : [low - white / 2, low + white / 2];
-}
-
 function percent(value: number, white: number): string {
   return `${Math.round((100 * value) / white)} %`;
 }
@@ -140,7 +123,7 @@ function placeIn({ left, top, width: wide, height, pixelMm, middleMm }: View, [x
   return [Math.round(left + wide / 2 + (x - middleMm[0]) / pixelMm), Math.round(top + height / 2 + (y - middleMm[1]) / pixelMm)];
 }
 
-function drawPicture(sheet: Raster, picture: Picture, view: View, [black, white]: Window): void {
+function drawPicture(sheet: Raster, picture: Picture, view: View, [black, white]: PictureWindow): void {
   for (let j = 0; j < view.height; j += 1) {
     for (let i = 0; i < view.width; i += 1) {
       const x = view.middleMm[0] + (i + 0.5 - view.width / 2) * view.pixelMm;

@@ -28,7 +28,7 @@ function extentMm(object: ObjectFile, body: Body, axis: PhaseDirection): number 
 }
 
 /** A tissue by its name, or the one of the series that a role stands for. */
-export function tissueNamed(word: string, series: Pick<Series, 'target' | 'comparison'>): string {
+function tissueNamed(word: string, series: Pick<Series, 'target' | 'comparison'>): string {
   return word === 'target' ? series.target : word === 'comparison' ? series.comparison : word;
 }
 

@@ -7,6 +7,8 @@ export type Style = 'plain' | 'bold' | 'quiet' | 'inverse' | 'attention' | 'trou
 export interface Span {
   readonly text: string;
   readonly style: Style;
+  /** Greys of a picture, 0 to 1: of the characters, and behind them. They need 256 colours or more. */
+  readonly greys?: readonly [number, number];
   /** The terminal's own cursor stands on its first character. */
   readonly cursor?: true;
 }

@@ -49,12 +49,25 @@ function opening(style: Style, level: ColourLevel): string {
   }
 }
 
+/** Codes of two greys: as they are in true colour, on the ramp of 24 between black and white of the 256 (232 to 255; 16 and 231). */
+function greyCodes(greys: readonly [number, number], level: ColourLevel): string {
+  const code = (grey: number) => {
+    if (level === 3) {
+      const value = Math.round(grey * 255);
+      return `2;${value};${value};${value}`;
+    }
+    const step = Math.round(grey * 25);
+    return `5;${step === 0 ? 16 : step === 25 ? 231 : 231 + step}`;
+  };
+  return `${sgr}38;${code(greys[0])}m${sgr}48;${code(greys[1])}m`;
+}
+
 /** A line with its styles as the painter reads them. */
 export function paintLine(given: Line, { colourLevel }: Look): string {
   let painted = '';
-  for (const { text, style, cursor } of given) {
+  for (const { text, style, cursor, greys } of given) {
     if (text === '') continue;
-    const begin = opening(style, colourLevel);
+    const begin = greys === undefined ? opening(style, colourLevel) : greyCodes(greys, colourLevel);
     const shown = cursor ? cursorHere(text) : text;
     painted += begin === '' ? shown : `${begin}${shown}${sgr}0m`;
   }

@@ -6,6 +6,7 @@ import { fieldHere } from '../session/hands/series-commands.js';
 import { resultNow, studySeries } from '../session/results.js';
 import { isShelfScreen, shelfHeadline } from '../session/shelf-headline.js';
 import type { State } from '../session/state.js';
+import { pictureSet } from '../session/picture-view.js';
 import { listedWays } from '../session/ways.js';
 import { fitText } from '../terminal/text-width.js';
 import { clockWords, headlineOf, withRight } from './common-lines.js';
@@ -54,6 +55,7 @@ function words(state: State): string {
   }
   if (screen === 'chart')
     return `Range chart: ${fieldHere({ ...state, place: { ...state.place, fields: { ...state.place.fields, series: state.place.chart?.path ?? '' } } }).label} of ${seriesId}`;
+  if (screen === 'picture') return `See it: ${seriesId}, preset and ${pictureSet(state).of === 'way' ? 'this way' : 'now'}`;
   if (screen === 'ways') return `Ways to fit: ${seriesId}`;
   if (screen === 'front') return `Front of ${seriesId}: what is reached in each time`;
   if (screen === 'keep') return 'What is kept';

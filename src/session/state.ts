@@ -6,6 +6,7 @@ import { noSiteRules, type SiteRules } from '../study/site-rules.js';
 import type { CarryView } from './carry.js';
 import type { ScannerChoice } from './equipment.js';
 import type { DraftChoice, PresetChoice } from './message.js';
+import { type PictureEyes, type PictureView, plainEyes } from './picture-eyes.js';
 import type { Opened, Session } from './session.js';
 import { emptyShelf, type Shelf } from './shelf.js';
 import type { ShelfAsk } from './shelf-messages.js';
@@ -19,6 +20,7 @@ export const screenNames = [
   'why',
   'type-these',
   'chart',
+  'picture',
   'ways',
   'front',
   'keep',
@@ -122,7 +124,7 @@ export interface State {
   readonly open: Readonly<
     Partial<
       Record<
-        'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'search' | 'plan' | 'carry' | 'carryRules' | ShelfAsk,
+        'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'picture' | 'search' | 'plan' | 'carry' | 'carryRules' | ShelfAsk,
         number
       >
     >
@@ -143,6 +145,9 @@ export interface State {
   /** The way taken last: what was set before it and with it. */
   readonly taken: { readonly seriesId: string; readonly base: GivenParameters; readonly given: GivenParameters } | null;
   readonly plan: SessionPlan | null;
+  /** The newest pictures of a series, and how they are looked at. */
+  readonly picture: PictureView | null;
+  readonly pictureEyes: PictureEyes;
   /** The preset that is carried to another field or scanner. */
   readonly carry: CarryView | null;
   /** Presets and records, as their screens show them. */
@@ -208,6 +213,8 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     lastWay: null,
     taken: null,
     plan: null,
+    picture: null,
+    pictureEyes: plainEyes,
     carry: null,
     shelf: emptyShelf,
   };

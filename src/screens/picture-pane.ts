@@ -1,0 +1,93 @@
+import { diffused, type FieldView, pictureField } from '../picture/picture-field.js';
+import type { DrawnPictures } from '../picture/picture-problem.js';
+import { type PictureWindow, squareWindow, wholeWindow } from '../picture/picture-window.js';
+import { extentOf } from '../picture/sample-picture.js';
+import { chartDotBit, chartDots } from '../terminal/chart-dots.js';
+import type { Line, Span } from './line.js';
+import type { Look } from './look.js';
+
+/** Dark to light, for terminals that show neither greys nor dots. */
+const ramp = ' .:-=+*#%@';
+
+/** How many squares a cell holds, across and down: two greys, eight dots, or one sign for its two halves. */
+function squaresOf({ colourLevel, set }: Look): readonly [number, number] {
+  if (set === 'ascii') return [1, 2];
+  return colourLevel >= 2 ? [1, 2] : [2, 4];
+}
+
+/** Which part of the pictures is shown in a pane of cells, and how bright: the same for both. */
+export function pictureView(
+  { pair, look, voxelMm }: DrawnPictures,
+  close: boolean,
+  columns: number,
+  rows: number,
+  terminal: Look,
+): { readonly view: FieldView; readonly window: PictureWindow } {
+  const [across, down] = squaresOf(terminal);
+  const size = { columns: columns * across, rows: rows * down };
+  if (close) {
+    // One acquired voxel takes two cells or more.
+    const squareMm = Math.min(voxelMm / 2 / across, look.zoom.sideMm / Math.min(size.columns, size.rows));
+    return { view: { ...size, squareMm, middleMm: look.zoom.atMm }, window: squareWindow(pair, look) };
+  }
+  const extents = [extentOf(pair.preset), extentOf(pair.now)];
+  const squareMm = Math.max(...extents.map(([x, y]) => Math.max(x / size.columns, y / size.rows)));
+  return { view: { ...size, squareMm, middleMm: [0, 0] }, window: wholeWindow(pair) };
+}
+
+/** Draws a pane of cells: preset to the left of `from` columns, the series now from there on. */
+export function picturePane(
+  drawn: DrawnPictures,
+  seen: ReturnType<typeof pictureView>,
+  which: 'preset' | 'now' | { readonly from: number },
+  columns: number,
+  rows: number,
+  look: Look,
+): Line[] {
+  const { view, window } = seen;
+  const [across, down] = squaresOf(look);
+  const fieldOf = (name: 'preset' | 'now') => pictureField(drawn.pair[name], view, window);
+  const left = which === 'now' ? null : fieldOf('preset');
+  const right = which === 'preset' ? null : fieldOf('now');
+  const from = which === 'preset' ? columns : which === 'now' ? 0 : which.from;
+  const field = Float64Array.from({ length: view.columns * view.rows }, (_, i) => {
+    const side = i % view.columns < from * across ? left : right;
+    return side?.[i] ?? 0;
+  });
+  const dots = across === 2 ? diffused(field, view.columns) : null;
+  return Array.from({ length: rows }, (_, row) =>
+    joined(
+      Array.from({ length: columns }, (_cell, column): Span => {
+        if (dots !== null) return { text: dotCell(dots, view.columns, column, row), style: 'plain' };
+        const at = row * down * view.columns + column;
+        const [upper, lower] = [field[at] ?? 0, field[at + view.columns] ?? 0];
+        if (look.set === 'ascii') return { text: ramp[Math.round(((upper + lower) / 2) * (ramp.length - 1))] ?? ' ', style: 'plain' };
+        // A level of 24 changes fewer cells than the grain of each pixel would.
+        return { text: '\u2580', style: 'plain', greys: [level(upper), level(lower)] };
+      }),
+    ),
+  );
+}
+
+const level = (grey: number) => Math.round(grey * 24) / 24;
+
+function dotCell(dots: Uint8Array, columns: number, column: number, row: number): string {
+  let bits = 0;
+  for (const y of [0, 1, 2, 3] as const) {
+    for (const x of [0, 1] as const) {
+      if (dots[(row * 4 + y) * columns + column * 2 + x] === 1) bits |= chartDotBit(x, y);
+    }
+  }
+  return chartDots(bits, 'unicode');
+}
+
+/** Neighbours that look the same become one stretch. */
+function joined(cells: readonly Span[]): Line {
+  const spans: { text: string; style: Span['style']; greys?: Span['greys'] }[] = [];
+  for (const cell of cells) {
+    const last = spans.at(-1);
+    if (last !== undefined && last.greys?.[0] === cell.greys?.[0] && last.greys?.[1] === cell.greys?.[1]) last.text += cell.text;
+    else spans.push({ ...cell });
+  }
+  return spans as Line;
+}

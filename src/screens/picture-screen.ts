@@ -1,0 +1,88 @@
+import type { DrawnPictures } from '../picture/picture-problem.js';
+import { profileOf } from '../picture/sample-picture.js';
+import { pictureSentences } from '../session/picture-sentences.js';
+import { pictureSet } from '../session/picture-view.js';
+import type { State } from '../session/state.js';
+import { fitText } from '../terminal/text-width.js';
+import { beside, fill, fitLine, type Line, line, span, wrap } from './line.js';
+import type { Look } from './look.js';
+import { picturePane, pictureView } from './picture-pane.js';
+import { Plot } from './plot.js';
+
+/** What every picture says in its frame. */
+const frame = 'Computed from an invented object: an illustration, never an image of a patient';
+
+/** Preset and now side by side as pictures of an invented object, or one with a divider; a profile and what differs below. */
+export function pictureScreen(state: State, look: Look, columns: number, rows: number): Line[] {
+  const { picture, place } = state;
+  const drawn = picture?.seriesId === place.seriesId ? picture.drawn : null;
+  const [, ...sentences] = pictureSentences(state);
+  const roomy = rows >= 30;
+  const words = sentences.flatMap((each) => wrap(each, columns)).map((each) => line(each));
+  const wordRows = Math.min(words.length, roomy ? 12 : 3);
+  const head = line(fitText(frame, columns, look.glyphs.ellipsis), 'attention');
+  if (drawn === null) {
+    const said = picture?.trouble ?? (picture === null ? 'No picture yet' : 'Drawing...');
+    return fill([head, ...wrap(said, columns).map((each) => line(each, picture?.trouble == null ? 'quiet' : 'trouble')), ...words], rows);
+  }
+  const stale = state.open.picture !== undefined ? ', drawing' : '';
+  const profileRows = roomy ? 6 : 3;
+  const pictureRows = rows - 2 - profileRows - 1 - wordRows;
+  return fill(
+    [
+      head,
+      ...panes(state, drawn, look, columns, pictureRows, stale),
+      ...profile(drawn, look, columns, profileRows),
+      ...words.slice(0, wordRows),
+    ],
+    rows,
+  );
+}
+
+/** The pictures with their names above. */
+function panes(state: State, drawn: DrawnPictures, look: Look, columns: number, rows: number, stale: string): Line[] {
+  const { close, divider } = state.pictureEyes;
+  const name = pictureSet(state).of === 'way' ? 'this way' : 'now';
+  const scale = (squareMm: number, wide: number) => `${(squareMm * wide).toFixed(0)} mm wide`;
+  if (divider !== null) {
+    const from = Math.round(divider * columns);
+    const seen = pictureView(drawn, close, columns, rows, look);
+    const title = `preset left of the divider, ${name} right of it, ${scale(seen.view.squareMm, seen.view.columns)}${stale}`;
+    return [dividerLine(title, from, columns, look), ...picturePane(drawn, seen, { from }, columns, rows, look)];
+  }
+  const half = Math.floor((columns - 1) / 2);
+  const seen = pictureView(drawn, close, half, rows, look);
+  const wide = scale(seen.view.squareMm, seen.view.columns);
+  const titles = beside([line(`preset, ${wide}`, 'first')], [line(`${name}, ${wide}${stale}`, 'second')], half, ' ', look.glyphs.ellipsis);
+  const [left, right] = (['preset', 'now'] as const).map((which) => picturePane(drawn, seen, which, half, rows, look)) as [Line[], Line[]];
+  return [...titles, ...left.map((each, row) => [...each, span(' '), ...(right[row] ?? [])])];
+}
+
+/** The place of the divider stands in the line above the picture. */
+function dividerLine(title: string, from: number, columns: number, look: Look): Line {
+  const marked = fitLine([span(title, 'quiet')], columns, look.glyphs.ellipsis);
+  const text = marked.map((each) => each.text).join('');
+  const at = Math.min(columns - 1, from);
+  return [span(text.slice(0, at), 'first'), span(look.glyphs.verticalRule, 'inverse'), span(text.slice(at + 1), 'second')];
+}
+
+/** Both values along one line of the object, as two curves. */
+function profile({ pair, look: object }: DrawnPictures, look: Look, columns: number, rows: number): Line[] {
+  const { fromMm, toMm } = object.profile;
+  const plot = new Plot(columns, rows, look);
+  const curves = (['preset', 'now'] as const).map((which) => profileOf(pair[which], fromMm, toMm, 2 * columns));
+  const all = curves.flat();
+  const [low, high] = [Math.min(...all), Math.max(...all)];
+  const place = (value: number) => Math.round(((value - low) / Math.max(high - low, 1e-12)) * (4 * rows - 1));
+  curves.forEach((values, which) => {
+    for (const [x, value] of values.entries()) plot.dot(x, place(value), which as 0 | 1);
+  });
+  const mm = Math.hypot(toMm[0] - fromMm[0], toMm[1] - fromMm[1]).toFixed(0);
+  return [
+    line(
+      fitText(`profile of ${mm} mm across the discs: two curves, preset and now`, columns, look.glyphs.ellipsis),
+      'quiet',
+    ),
+    ...plot.lines(),
+  ];
+}

@@ -1,0 +1,23 @@
+import type { DrawnPictures } from '../picture/picture-problem.js';
+
+/** The newest pair of pictures. */
+export interface PictureView {
+  readonly seriesId: string;
+  /** What it was asked with, to see whether it still stands. */
+  readonly key: string;
+  readonly ask: number;
+  /** Pictures of an earlier ask stay until the new ones are there. */
+  readonly drawn: DrawnPictures | null;
+  readonly trouble: string | null;
+}
+
+/** How the pictures are looked at. */
+export interface PictureEyes {
+  /** The square at the fine lines instead of the whole field. */
+  readonly close: boolean;
+  /** One picture with the preset to the left of this share of its width; null shows both side by side. */
+  readonly divider: number | null;
+}
+
+/** Both pictures, whole. */
+export const plainEyes: PictureEyes = { close: false, divider: null };

@@ -1,8 +1,17 @@
 import { eastAsianWidthType } from 'get-east-asian-width';
 import stringWidth from 'string-width';
 
-/** Printable ASCII, braille and the signs of `glyphs.ts`: one column each. Nearly all that is drawn, and counted without a look at every character. */
-const plainText = /^[\x20-\x7e\u00b5\u2212\u22ef\u25b4\u25b8\u25be\u25ca\u2713\u2717\u2800-\u28ff]*$/;
+/**
+ * Printable ASCII, Latin-1 signs, Greek letters, box drawing, blocks, braille and the signs of `glyphs.ts`: one column each, one
+ * character each. Nearly all that is drawn, and counted without a look at every character.
+ */
+const plainText =
+  /^[\x20-\x7e\u00a1-\u00a8\u00aa-\u00ac\u00af-\u00ff\u0391-\u03a1\u03a3-\u03c9\u2212\u22ef\u2500-\u259f\u25b4\u25b8\u25be\u25ca\u2713\u2717\u2800-\u28ff]*$/;
+
+/** True where every UTF-16 unit of a text is one character of one column. */
+export function isPlainText(text: string): boolean {
+  return plainText.test(text);
+}
 
 /**
  * Columns that a text takes on the screen; escape sequences take none, East Asian wide characters and emoji two.
@@ -21,6 +30,18 @@ export function textWidth(text: string): number {
  * @example isSureWidth('\u00b1') //=> false
  */
 export function isSureWidth(text: string): boolean {
+  const known = sureWidths.get(text);
+  if (known !== undefined) return known;
+  const sure = isEachSure(text);
+  if (sureWidths.size >= mostKeptWidths) sureWidths.clear();
+  sureWidths.set(text, sure);
+  return sure;
+}
+
+const sureWidths = new Map<string, boolean>();
+const mostKeptWidths = 2000;
+
+function isEachSure(text: string): boolean {
   for (const character of text) {
     const code = character.codePointAt(0) ?? 0;
     if (code >= 0x20 && code < 0x7f) continue;

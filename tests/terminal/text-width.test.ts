@@ -1,6 +1,7 @@
 import fc from 'fast-check';
+import stringWidth from 'string-width';
 import { describe, expect, it } from 'vitest';
-import { fitText, graphemesOf, isSureWidth, textWidth } from '../../src/terminal/text-width.js';
+import { fitText, graphemesOf, isPlainText, isSureWidth, textWidth } from '../../src/terminal/text-width.js';
 
 describe('textWidth', () => {
   it.each([
@@ -14,6 +15,25 @@ describe('textWidth', () => {
   ])('of %j is %i', (text, width) => {
     expect(textWidth(text)).toBe(width);
   });
+});
+
+describe('isPlainText', () => {
+  it('holds for characters of one column each and no others, by the package that counts them one by one', () => {
+    for (let code = 0; code <= 0xffff; code += 1) {
+      const character = String.fromCharCode(code);
+      if (!isPlainText(character)) continue;
+      expect(stringWidth(character), code.toString(16)).toBe(1);
+      // Neither swallows nor joins its neighbour.
+      expect(graphemesOf(`a${character}${character}b`), code.toString(16)).toHaveLength(4);
+    }
+  });
+
+  it.each(['\u00ad', '\u0301', '\u6f22', '\u200d', '\u001b', '\ufe0f', '\ud83d', '\u00a9', '\u00ae'])(
+    'does not hold for %j',
+    (character) => {
+      expect(isPlainText(`a${character}`)).toBe(false);
+    },
+  );
 });
 
 describe('isSureWidth', () => {

@@ -1,5 +1,5 @@
 import type { Size } from '../size.js';
-import { graphemesOf, textWidth } from '../text-width.js';
+import { graphemesOf, isPlainText, textWidth } from '../text-width.js';
 import { cursorMarkCode } from './cursor-mark.js';
 import { blankIsPlain, type Style, styleAfter } from './sgr.js';
 
@@ -39,14 +39,15 @@ const escapes = new RegExp(`${esc}\\[([0-9:;<=>?]*)[ -/]*([@-~])|${esc}[\\]PX^_]
 
 /** Cells of a plain text; control characters and characters of no width are left out, a tab is one blank. */
 function pushCells(cells: Cell[], text: string, style: Style, columns: number): void {
-  const ascii = /^[ -~]*$/.test(text);
-  for (const character of ascii ? text : graphemesOf(text)) {
+  const plain = isPlainText(text);
+  const blankCell: Cell = blankIsPlain(style) ? blank : { text: ' ', width: 1, style };
+  for (const character of plain ? text : graphemesOf(text)) {
     if (cells.length >= columns) return;
     if (character === ' ' || character === '\t') {
-      cells.push(blankIsPlain(style) ? blank : { text: ' ', width: 1, style });
+      cells.push(blankCell);
       continue;
     }
-    const width = ascii ? 1 : Math.min(2, textWidth(character));
+    const width = plain ? 1 : Math.min(2, textWidth(character));
     if (width === 0) continue;
     if (width === 1) {
       cells.push({ text: character, width: 1, style });

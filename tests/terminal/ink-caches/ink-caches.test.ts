@@ -3,14 +3,18 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { build } from 'esbuild';
 import fc from 'fast-check';
+import stringWidth from 'string-width';
 import { describe, expect, it } from 'vitest';
 import { boundedCache } from '../../../src/terminal/ink-caches/bounded-cache.js';
+import { FlatOutput } from '../../../src/terminal/ink-caches/flat-output.js';
 import { inkDefines, replaceInkCaches } from '../../../src/terminal/ink-caches/ink-bundling.js';
-import { measureText } from '../../../src/terminal/ink-caches/measure-text.js';
+import { measureText, widestLine } from '../../../src/terminal/ink-caches/measure-text.js';
 import { type TextWrap, wrapText } from '../../../src/terminal/ink-caches/wrap-text.js';
 
 const inkFile = async (name: string) =>
   ((await import(new URL(`../../../node_modules/ink/build/${name}.js`, import.meta.url).href)) as { default: unknown }).default;
+
+const measuredWidest = (value: string) => Math.max(...value.split('\n').map((line) => stringWidth(line)));
 
 const text = fc
   .array(fc.oneof(fc.string({ maxLength: 8 }), fc.constantFrom('\n', ' ', '\u6f22\u5b57', '\u001b[31m', '\u001b[39m', 'e\u0301')), {
@@ -62,6 +66,37 @@ describe('the replacements', () => {
   });
 });
 
+describe('whole lines', () => {
+  it('are passed on as they are, each through the functions around it', () => {
+    const output = new FlatOutput({ width: 20, height: 4 });
+    output.write(0, 0, 'one\n\u001b[1mtwo\u001b[0m', { transformers: [(line, index) => `${index}${line}`] });
+    output.write(0, 3, 'four', { transformers: [] });
+    expect(output.get()).toEqual({ output: '0one\n1\u001b[1mtwo\u001b[0m\n\nfour', height: 4 });
+  });
+
+  it('beyond the last line of the screen are left out', () => {
+    const output = new FlatOutput({ width: 20, height: 1 });
+    output.write(0, 0, 'one\ntwo', { transformers: [] });
+    expect(output.get()).toEqual({ output: 'one', height: 1 });
+  });
+
+  it('are all there is: texts beside each other, over each other or cut off are refused', () => {
+    const output = new FlatOutput({ width: 20, height: 2 });
+    output.write(0, 0, 'one', { transformers: [] });
+    expect(() => output.write(4, 0, 'two', { transformers: [] })).toThrow('column 4');
+    expect(() => output.write(0, 0, 'two', { transformers: [] })).toThrow('line 0');
+    expect(() => output.clip()).toThrow('whole lines');
+  });
+
+  it('have the width that the package says', () => {
+    fc.assert(
+      fc.property(text, (value) => {
+        expect(widestLine(value)).toBe(measuredWidest(value));
+      }),
+    );
+  });
+});
+
 describe('bundling', () => {
   const bundle = async (contents: string, resolveDir = process.cwd()) => {
     const outfile = join(mkdtempSync(join(tmpdir(), 'holdfast-bundle-')), 'out.mjs');
@@ -80,12 +115,12 @@ describe('bundling', () => {
     return Object.keys(result.metafile.inputs).map((input) => input.replaceAll('\\', '/'));
   };
 
-  it("leaves ink's two files out and puts ours in", async () => {
+  it("leaves ink's own files out and puts ours in", async () => {
     const inputs = await bundle("export { render } from 'ink';");
     expect(inputs.some((input) => input.endsWith('ink/build/dom.js'))).toBe(true);
-    expect(inputs.filter((input) => /ink\/build\/(measure-text|wrap-text)\.js$/.test(input))).toEqual([]);
-    const ours = inputs.filter((input) => input.startsWith('src/terminal/ink-caches/')).map((input) => input.split('/').at(-1));
-    expect(new Set(ours)).toEqual(new Set(['bounded-cache.ts', 'measure-text.ts', 'wrap-text.ts']));
+    expect(inputs.filter((input) => /ink\/build\/(measure-text|wrap-text|output)\.js$|node_modules\/widest-line/.test(input))).toEqual([]);
+    const ours = inputs.filter((input) => input.startsWith('src/terminal/')).map((input) => input.split('/').at(-1));
+    expect(new Set(ours)).toEqual(new Set(['bounded-cache.ts', 'flat-output.ts', 'measure-text.ts', 'text-width.ts', 'wrap-text.ts']));
     expect(inputs.filter((input) => input.includes('react-devtools-core'))).toEqual([]);
   });
 

@@ -1,0 +1,37 @@
+/** How ink hands over a text: each line goes through the functions of the components around it. */
+interface WriteOptions {
+  readonly transformers: readonly ((line: string, index: number) => string)[];
+}
+
+/**
+ * Takes the place of ink's own `Output`, which takes every text apart into cells and puts them together again, though the painter is
+ * about to do that by itself. Whole lines are all this program gives to ink, so they are passed on as they are; anything else is a
+ * fault of the program and is refused.
+ */
+export class FlatOutput {
+  readonly #lines: string[];
+
+  constructor({ height }: { readonly width: number; readonly height: number }) {
+    this.#lines = Array.from({ length: height }, () => '');
+  }
+
+  /** Takes a text whose first character stands at column `x` of line `y`, counted from 0. */
+  write(x: number, y: number, text: string, { transformers }: WriteOptions): void {
+    if (text === '') return;
+    if (x !== 0) throw new Error(`a text at column ${x}: only whole lines are drawn`);
+    text.split('\n').forEach((given, index) => {
+      const row = y + index;
+      if (row >= this.#lines.length) return;
+      if (this.#lines[row] !== '') throw new Error(`two texts on line ${row}: only whole lines are drawn`);
+      this.#lines[row] = transformers.reduce((line, transform) => transform(line, index), given);
+    });
+  }
+
+  clip(): void {
+    throw new Error('a box that cuts off what is in it: only whole lines are drawn');
+  }
+
+  get(): { readonly output: string; readonly height: number } {
+    return { output: this.#lines.join('\n'), height: this.#lines.length };
+  }
+}

@@ -3,6 +3,7 @@ import { carryPreset } from './carry-preset.js';
 import { claimDraft } from './claim-draft.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { listRecords } from './list-records.js';
+import { loadPresets } from './load-presets.js';
 import { readPastRecord } from './read-past-record.js';
 import { readRevisions } from './read-revisions.js';
 import { readSessionRules } from './read-session-rules.js';
@@ -45,6 +46,9 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return carryPreset(world, effect);
     case 'stop-search':
       world.searches.stop();
+      return null;
+    case 'list-presets':
+      world.tell(await loadPresets(world));
       return null;
     case 'read-revisions':
       return readRevisions(world, effect);

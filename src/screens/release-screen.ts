@@ -50,7 +50,14 @@ export function releaseWords({
       words: findingLine(finding),
       style: finding.level === 'failure' ? ('trouble' as const) : ('attention' as const),
     })),
-    { words: newest === null ? 'The site has no revision of this preset yet.' : `The site has ${releaseText(newest)}.`, style: 'plain' },
+    ...(taken === null
+      ? [
+          {
+            words: newest === null ? 'The site has no revision of this preset yet.' : `The site has ${releaseText(newest)}.`,
+            style: 'plain' as const,
+          },
+        ]
+      : []),
     {
       words: `Everyone who reads the site's folder gets the next revision once the word ${releaseWord} is typed in full. A released revision is never changed.`,
       style: 'quiet',

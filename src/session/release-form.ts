@@ -5,7 +5,6 @@ import { freeText, freeTextReminder } from '../study/record-text.js';
 import { isReleasable } from '../study/release-checks.js';
 import { releaseSaid } from '../study/release-said.js';
 import type { Release } from '../study/study.js';
-import { releaseText } from './difference-page.js';
 import type { ReleaseForm } from './shelf.js';
 import type { State } from './state.js';
 
@@ -104,7 +103,7 @@ export function releaseHeadline(state: State): string {
   const { release } = state.shelf;
   if (release === null) return 'Nothing to release';
   const { taken, findings } = release;
-  if (taken !== null) return `NOT RELEASED: somebody was first, ${releaseText(taken.theirs)}`;
+  if (taken !== null) return `NOT RELEASED: ${taken.theirs.released?.role ?? 'somebody'} was first with revision ${taken.theirs.revision}`;
   if (findings === null) return 'Checking the preset';
   const failed = findings.filter(({ level }) => level === 'failure').length;
   if (failed > 0) return `CANNOT BE RELEASED: ${failed} ${failed === 1 ? 'check' : 'checks'} failed`;

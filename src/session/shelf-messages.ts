@@ -6,6 +6,8 @@ import type { ReadList, ReadReport, TakenRevision } from './shelf.js';
 
 /** What the screens of presets and records ask of the world outside. */
 export type ShelfEffect =
+  /** Reads the list of presets anew: others release too. It answers by the message that brings them at the start. */
+  | { readonly kind: 'list-presets' }
   | { readonly kind: 'read-revisions'; readonly ask: number; readonly id: string }
   | { readonly kind: 'check-release'; readonly ask: number; readonly study: Study }
   /** `study` is what is released, `basedOn` the revision it was made from. */

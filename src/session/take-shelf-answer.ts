@@ -42,7 +42,7 @@ function takeRelease(state: State, answer: Answer, failed: string | null): Chang
   if (answer.kind === 'taken') {
     const { theirs, base } = answer;
     const next = withShelf(state, { release: { ...release, taken: { theirs, base }, newest: theirs } });
-    return only(say(next, 'Nothing was written. d shows what differs, t takes your changes over on top of theirs', 'trouble'));
+    return only(say(next, 'Nothing was written: d shows what differs, t takes your changes over', 'trouble'));
   }
   if (answer.kind === 'checked')
     return only(

@@ -5,10 +5,10 @@ import { back } from './common-commands.js';
 import { saveAsPreset } from './record-commands.js';
 import { openPreset } from './start-commands.js';
 
-/** Opens the list of presets, with an open session on that. */
+/** Opens the list of presets and reads it anew; the hand is on the open session where there is one. */
 export const showPresets: Command = (state) => {
   const whole = { ...state, shelf: { ...state.shelf, narrowing: '' } };
-  return only(pointAt(open(whole, 'presets'), presetRows(whole)[0]?.field ?? ''));
+  return [pointAt(open(whole, 'presets'), presetRows(whole)[0]?.field ?? ''), [{ kind: 'list-presets' }]];
 };
 
 export const moveInPresets =

@@ -26,6 +26,7 @@ import {
 } from './hands/order-commands.js';
 import { showRecords } from './hands/past-record-commands.js';
 import { practice } from './hands/patient-commands.js';
+import { moveDivider, showPicture, turnClose, turnDivider } from './hands/picture-commands.js';
 import { showPresets } from './hands/preset-commands.js';
 import { saveAsPreset, savePage, saveRecord, turnRecordPane } from './hands/record-commands.js';
 import { moveInScanners, takeScanner } from './hands/scanner-commands.js';
@@ -72,7 +73,7 @@ const canGoTo =
 /** Keys of every screen but the first. */
 const everywhere: readonly KeyRow[] = [
   row(['h', '?'], 'h', 'help', 'Help for this screen.', show('help')),
-  row('u', 'u', 'undo', 'Takes back the last step, of whatever screen.', undo, ({ past }) => past.length > 0),
+  row('u', 'u', 'undo', 'Takes back the last step, of whatever screen.', undo),
   row('r', 'r', 'redo', 'Does again what was taken back.', redo, ({ future }) => future.length > 0),
   row('p', 'p', 'patient', 'This patient: breath-hold, time, RF caps, body.', show('patient'), canGoTo('patient')),
   row('o', 'o', 'order', 'The running order.', show('order'), canGoTo('order')),
@@ -112,6 +113,7 @@ const series: readonly KeyRow[] = [
   row('c', 'c', 'chart', 'Range chart of this parameter.', openChart),
   row('j', 'j', 'jump', 'Jumps to the next value at which the time changes.', jump, inMain),
   row('t', 't', 'scanner', 'The changed values, to type on the scanner.', show('type-these')),
+  row('s', 's', 'see', 'Pictures of an invented object: the preset, and the series as it is now.', showPicture),
   row('b', 'b', '', 'This parameter back to the preset.', backToPreset, inMain),
   row('d', 'd', '', 'What the scanner displays: time, B1+rms, SAR.', openReadings),
   row('l', 'l', '', 'Opens a parameter that the preset locks, or locks it again.', openLock, inMain),
@@ -188,6 +190,14 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('enter', 'Enter', 'take', 'Takes the value under the cursor.', takeValue),
     ...everywhere,
   ],
+  picture: [
+    row('z', 'z', 'close or whole', 'Between the whole field and the square at the fine lines.', turnClose),
+    row('d', 'd', 'divider', 'Both side by side, or one picture: the preset left of a divider.', turnDivider),
+    row(['-', 'left'], 'left right', 'move', 'Moves the divider; minus and plus do the same.', moveDivider(-0.05)),
+    row(['+', '=', 'right'], '', '', '', moveDivider(0.05)),
+    row('s', 's', '', 'Back to where this was opened.', back),
+    ...everywhere,
+  ],
   ways: [
     ...upAndDown(moveInWays, 'the ways'),
     row('enter', 'Enter', 'take', 'Takes the way under the hand; undo takes it back.', takeWay),
@@ -195,6 +205,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('page-down', 'PgUp PgDn', '', 'Scrolls what is said of the way.', scrollWay(4)),
     row('page-up', '', '', '', scrollWay(-4)),
     row('m', 'm', 'more', 'Shows every way, or the first three alone.', moreWays),
+    row('s', 's', 'see', 'Pictures of an invented object: the preset, and the way under the hand.', showPicture),
     row('c', 'c', 'chart', 'The front: the most SNR, or the least loss, in every time.', showFront),
     row('k', 'k', 'keep', 'How much of each figure every way keeps; can be changed.', show('keep')),
     row('a', 'a', '', 'Again: the way looked at last.', recallWay, ({ lastWay }) => lastWay !== null),

@@ -11,8 +11,8 @@ export interface TextSize {
 const cache = boundedCache<TextSize>(16);
 
 /** SGR sequences, which take no column. */
-const escape = '\u001b';
-const styles = new RegExp(`${escape}\\[[0-9;:]*m`, 'g');
+const esc = '\u001b';
+const styles = new RegExp(`${esc}\\[[0-9;:]*m`, 'g');
 
 /**
  * The same as ink's `measure-text`, but what it remembers is bounded, and plain characters are counted without a look at each.
@@ -23,7 +23,7 @@ export function measureText(text: string): TextSize {
   if (text === '') return { width: 0, height: 0 };
   const known = cache.get(text);
   if (known !== undefined) return known;
-  const lines = (text.includes(escape) ? text.replace(styles, '') : text).split('\n');
+  const lines = (text.includes(esc) ? text.replace(styles, '') : text).split('\n');
   let width = 0;
   for (const line of lines) width = Math.max(width, textWidth(line));
   const size = { width, height: lines.length };

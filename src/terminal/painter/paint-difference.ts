@@ -3,11 +3,18 @@ import { blank, type Cell, type Grid } from './frame-grid.js';
 import { blankIsPlain, type Style } from './sgr.js';
 
 /** Unchanged cells between two changed ones are written again if that is shorter than moving the cursor over them. */
-const longestBridge = 4;
+const longestBridge = 3;
 
 const same = (a: Cell | undefined, b: Cell | undefined) =>
   a === b || (a?.text === b?.text && a?.style === b?.style && a?.width === b?.width);
 const isPlainBlank = (cell: Cell) => cell.text === ' ' && cell.style === '';
+
+/** The shorter of going on by so many columns and going to a column, within one line (ECMA-48 8.3.20 and 8.3.9). */
+function withinLine(from: number, to: number): string {
+  const forward = to - from === 1 ? '\u001b[C' : `\u001b[${to - from}C`;
+  const absolute = `\u001b[${to + 1}G`;
+  return to > from && forward.length < absolute.length ? forward : absolute;
+}
 
 /** Writes cells one after the other, keeping account of where the terminal's cursor is and which style it has. */
 class Pen {
@@ -38,7 +45,7 @@ class Pen {
 
   #moveTo(x: number, y: number): void {
     if (x === this.#x && y === this.#y) return;
-    this.#text += `\u001b[${y + 1};${x + 1}H`;
+    this.#text += y === this.#y && this.#x >= 0 ? withinLine(this.#x, x) : `\u001b[${y + 1};${x + 1}H`;
     this.#x = x;
     this.#y = y;
   }

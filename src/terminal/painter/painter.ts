@@ -43,6 +43,9 @@ const probeMs = 2000;
 /** An answer that is lost on the way must not stop the picture for ever. */
 const lostAnswerMs = 5000;
 
+/** About what one number takes, with the way there. */
+const shortStretch = 24;
+
 const statusQuery = '\u001b[5n';
 const beginUpdate = '\u001b[?2026h';
 const endUpdate = '\u001b[?2026l';
@@ -157,8 +160,8 @@ class CellPainter implements Painter {
     const before = this.#shown?.cursor;
     const still = this.#cursorShown && cells === '' && before?.x === cursor.x && before.y === cursor.y;
     if (still) return '';
-    // Hidden while it runs over the screen, so that terminals without update marks do not show it jumping.
-    const hide = this.#cursorShown && cells !== '' ? hideCursor : '';
+    // Hidden while it runs over the screen, so that terminals without update marks do not show it jumping; not for one short stretch.
+    const hide = this.#cursorShown && cells.length > shortStretch ? hideCursor : '';
     return `${hide}${cells}\u001b[${cursor.y + 1};${cursor.x + 1}H${this.#cursorShown && hide === '' ? '' : showCursor}`;
   }
 

@@ -87,7 +87,9 @@ describe('painting the difference', () => {
 
   it('writes over a short stretch that stays, and jumps over a long one', () => {
     expect(paintDifference(grid('17.0 s'), grid('19.4 s'))).toBe('\u001b[1;2H9.4');
-    expect(paintDifference(grid('1 abcdefgh 2'), grid('3 abcdefgh 4'))).toBe('\u001b[1;1H3\u001b[1;12H4');
+    expect(paintDifference(grid('1 abcdefgh 2'), grid('3 abcdefgh 4'))).toBe('\u001b[1;1H3\u001b[12G4');
+    expect(paintDifference(grid('1 abcde 2'), grid('3 abcde 4'))).toBe('\u001b[1;1H3\u001b[9G4');
+    expect(paintDifference(grid('ab\n1 abcde 2'), grid('xb\n3 abcde 4'))).toBe('\u001b[1;1Hx\u001b[2;1H3\u001b[9G4');
   });
 
   it('erases a long blank end instead of writing it', () => {

@@ -174,9 +174,11 @@ describe('the cursor', () => {
     return last();
   };
 
-  it('is shown on the marked cell, hidden while cells are written, and hidden when nothing is marked', () => {
+  it('is shown on the marked cell, hidden while much is written, and hidden when nothing is marked', () => {
     expect(draw(`ab${cursorHere('c')}`)).toBe(`${begin}\u001b[1;1Habc\u001b[1;3H\u001b[?25h${end}`);
-    expect(draw(`xb${cursorHere('c')}`)).toBe(`${begin}\u001b[?25l\u001b[1;1Hx\u001b[1;3H\u001b[?25h${end}`);
+    expect(draw(`xb${cursorHere('c')}`)).toBe(`${begin}\u001b[1;1Hx\u001b[1;3H${end}`);
+    expect(draw(`xb${cursorHere('c')}\n123456789\n123456789`)).toContain(`${begin}\u001b[?25l\u001b[2;1H1234`);
+    draw(`xb${cursorHere('c')}`);
     expect(draw('xbc')).toBe(`${begin}\u001b[?25l${end}`);
   });
 

@@ -1,9 +1,10 @@
 import { answers, type Candidate, compareCandidates, compareMeasures, type WayKind, wayKinds } from './candidate.js';
 import type { Pulse } from './control.js';
-import { type LineEntry, lineBuckets } from './line-buckets.js';
+import { type FewBucket, type FewLine, fewBuckets } from './few-changes.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchTables } from './search-tables.js';
-import { joinedPoint, SignalLists } from './signal-lists.js';
+import { joinedPoint, type SignalEntry, SignalLists } from './signal-lists.js';
+import type { TimeFamily } from './time-family.js';
 
 type Measures = Omit<Candidate, 'point' | 'rank'>;
 
@@ -30,9 +31,11 @@ export class Bests {
     return (this.#best.get(kind) as [Candidate | null, Candidate | null])[rank];
   }
 
-  /** Best way of one set of changed settings (a bit for each variable): its least balanced loss. */
-  offerRoute(mask: number, measures: Measures, rank: 0 | 1, pointOf: () => number[]): void {
-    const key = mask * 2 + rank;
+  /** Best way of one set of changed settings (a bit for each variable): its least balanced loss. Only fewest changes make a route. */
+  offerRoute(maskOf: () => number, measures: Measures, rank: 0 | 1, pointOf: () => number[]): void {
+    const fewest = this.best('fewest-changes', rank)?.changes;
+    if (fewest !== undefined && measures.changes > fewest) return;
+    const key = maskOf() * 2 + rank;
     const current = this.#routes.get(key);
     if (current !== undefined && compareMeasures('closest', measures, current) > 0) return;
     const candidate = { ...measures, rank, point: pointOf() };
@@ -67,46 +70,102 @@ function maskOf(which: readonly number[], point: readonly number[]): number {
 
 /** Goes through every point that changes at most so many settings and is within bands and limits, and keeps the best of each kind. */
 export function bestsWithin(tables: SearchTables, mostChanges: number, bests: Bests, pulse: Pulse): void {
-  const { setting, groups, lines, signals, join } = tables;
+  const { setting, groups, signals, join } = tables;
   const point = setting.variables.map(() => 0);
-  const signalAndShared = [...groups.shared, ...groups.signal];
   walkPoints(setting.variables, groups.shared, mostChanges, point, (sharedChanges) => {
     const left = mostChanges - sharedChanges;
-    const buckets = lineBuckets(setting, groups, lines, point, left, pulse);
     const lists = new SignalLists(setting, groups, signals, left, pulse);
-    for (const bucket of buckets) {
-      // Lines that leave room for so many changes of the signal.
-      const room = Array.from({ length: left + 1 }, (_, changes) => bucket.entries.filter((line) => line.changes <= left - changes));
-      for (const signal of lists.of(bucket)) {
-        const { state } = signal;
-        const entries = room[signal.changes] as readonly LineEntry[];
-        if (entries.length === 0 || state.rfRank === 2 || !signals.playable(state, bucket)) continue;
-        for (const line of entries) {
-          const time = join.time(state, bucket, line.lineCount);
-          // More lines never take less time: the rest of the bucket is over as well.
-          if (time.rank === 2 || !time.kept) break;
-          pulse.beat();
-          pulse.formed += 1;
-          const noise = join.noise(state, line.signalFreeSnr);
-          if (!join.audible(noise)) continue;
-          const rank = Math.max(time.rank, state.rfRank) as 0 | 1;
-          const measures = {
-            changes: sharedChanges + line.changes + signal.changes,
-            timeS: time.timeS,
-            snr: noise.snr,
-            contrast: noise.contrast,
-            volumeMm3: bucket.volumeMm3,
-            blurPx: state.blurPx,
-            power: state.power,
-            loss: join.loss(bucket, state, noise),
-          };
-          const pointOf = () => joinedPoint(groups, line.point, signal.point);
-          bests.offer(measures, rank, pointOf);
-          if (measures.changes <= mostInRoute)
-            bests.offerRoute(maskOf(groups.lines, line.point) + maskOf(signalAndShared, signal.point), measures, rank, pointOf);
-        }
-      }
+    const timings = new Map<string, readonly Timing[]>();
+    for (const bucket of fewBuckets(tables, point, left, pulse)) {
+      const { train } = bucket.bucket;
+      const ofTrain = timings.get(train) ?? timingsOf(lists.of(bucket.bucket));
+      timings.set(train, ofTrain);
+      bestsOfBucket(tables, bucket, ofTrain, sharedChanges, left, bests, pulse);
     }
     join.forget();
   });
+}
+
+/** Signals that play their lines in the same time, fewest changes first. */
+interface Timing {
+  readonly entries: readonly SignalEntry[];
+  readonly fewestChanges: number;
+}
+
+/** The timings of signals that RF allows, those that take fewest changes first. */
+function timingsOf(signals: readonly SignalEntry[]): Timing[] {
+  const groups = new Map<number, SignalEntry[]>();
+  for (const signal of [...signals].sort((a, b) => a.changes - b.changes)) {
+    if (signal.state.rfRank === 2) continue;
+    const group = groups.get(signal.state.timeId);
+    if (group === undefined) groups.set(signal.state.timeId, [signal]);
+    else group.push(signal);
+  }
+  return [...groups.values()].map((entries) => ({ entries, fewestChanges: (entries[0] as SignalEntry).changes }));
+}
+
+/** Offers the ways of one bucket: lines that leave time for some signal, with the signals that leave room for their changes. */
+function bestsOfBucket(
+  tables: SearchTables,
+  { bucket, fewestChanges, fewestLines, lines }: FewBucket,
+  timings: readonly Timing[],
+  sharedChanges: number,
+  left: number,
+  bests: Bests,
+  pulse: Pulse,
+): void {
+  const { groups, join, shortest } = tables;
+  const room = left - fewestChanges;
+  const usable: { readonly entries: readonly SignalEntry[]; readonly times: TimeFamily }[] = [];
+  let most = 0;
+  for (const timing of timings) {
+    if (timing.fewestChanges > room) break;
+    const times = join.times((timing.entries[0] as SignalEntry).state, bucket);
+    if (times.mostLines < fewestLines) continue;
+    most = Math.max(most, times.mostLines);
+    usable.push({ entries: timing.entries, times });
+  }
+  const all = most === 0 ? [] : lines(most, left);
+  if (all.length === 0) return;
+  const snrs = all.map(({ averaging }) => (averaging < 0 ? null : bucket.signalFreeSnr(averaging)));
+  const signalAndShared = [...groups.shared, ...groups.signal];
+  const offer = (signal: SignalEntry, line: FewLine, snr: number | null, times: TimeFamily) => {
+    const { state } = signal;
+    pulse.formed += 1;
+    const noise = join.noise(state, snr);
+    if (!join.audible(noise)) return;
+    const time = times.at(line.lineCount);
+    const rank = Math.max(time.rank, state.rfRank) as 0 | 1;
+    const measures = {
+      changes: sharedChanges + line.changes + signal.changes,
+      timeS: time.timeS,
+      snr: noise.snr,
+      contrast: noise.contrast,
+      volumeMm3: bucket.volumeMm3,
+      blurPx: state.blurPx,
+      power: state.power,
+      loss: join.loss(bucket, state, noise),
+    };
+    const pointOf = () => joinedPoint(groups, line.point(), signal.point);
+    bests.offer(measures, rank, pointOf);
+    if (measures.changes <= mostInRoute)
+      bests.offerRoute(() => maskOf(groups.lines, line.point()) + maskOf(signalAndShared, signal.point), measures, rank, pointOf);
+  };
+  for (const { entries, times } of usable) {
+    const within = times.mostLines;
+    for (const signal of entries) {
+      if (signal.changes > room) break;
+      if ((all[0] as FewLine).lineCount > within) break;
+      let playable = false;
+      for (let k = 0; k < all.length; k += 1) {
+        const line = all[k] as FewLine;
+        if (line.lineCount > within) break;
+        if (line.changes + signal.changes > left) continue;
+        pulse.beat();
+        if (!playable && !shortest.playable(signal.state, bucket)) break;
+        playable = true;
+        offer(signal, line, snrs[k] as number | null, times);
+      }
+    }
+  }
 }

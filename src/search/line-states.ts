@@ -4,7 +4,7 @@ import type { Geometry } from '../calc/geometry.js';
 import { geometryOf } from '../calc/geometry.js';
 import { acquiredLines, type Lines } from '../calc/lines.js';
 import type { SeriesModel } from '../calc/model.js';
-import { noiseAveragingLines, signalFreeSnr } from '../calc/noise.js';
+import { noiseAveragingLines } from '../calc/noise.js';
 import { parallelNoiseFactor } from '../calc/parallel-noise.js';
 import type { Parameters } from '../calc/series.js';
 import { namedValues } from '../formulas/formula-names.js';
@@ -14,33 +14,43 @@ import { type BandLimit, withinBand } from './bands.js';
 import { type Groups, levelOf } from './groups.js';
 import type { LatticeVariable } from './lattice.js';
 import { isCrossed, isTimeCap, namesOfMustKeep } from './must-keep-test.js';
+import { NumberIds } from './number-ids.js';
 import type { SearchSetting } from './setting.js';
 
-/** Lines, voxel and averages of one choice of the line variables: all that time and noise ask of them. */
-export interface LineState {
-  /** The count of lines that time follows. */
-  readonly lineCount: number;
-  /** SNR without signal; null where the noise of this acceleration is not known. */
-  readonly signalFreeSnr: number | null;
-  /** States of one bucket share everything but lines and noise: voxel, averages, what signal needs to know of the lines. */
-  readonly bucket: string;
+/** Voxel and averages of one choice of the line variables: what a bucket shares. */
+export interface LineVoxel {
   /** States of one train share what the signal needs to know of the lines. */
   readonly train: string;
+  /** Buckets with one of these have the same estimates of the shortest timing. */
+  readonly voxelId: number;
+  /** Buckets with one of these play a count of lines in the same time. */
+  readonly timeId: number;
   readonly volumeMm3: number;
   readonly geometryLoss: number;
 }
 
-/** One direction of a line state. */
+/** Lines and noise of one choice of the line variables. */
+export interface LineNoise {
+  /** The count of lines that time follows. */
+  readonly lineCount: number;
+  /** Lines that average noise; null where the noise of this acceleration is not known. */
+  readonly averagingLines: number | null;
+}
+
+/** One direction of a choice of the line variables: what the lines of both follow. */
 export interface LinePart {
   /** What tells it apart for time and noise. */
   readonly key: string;
-  /** What voxel and train follow. */
+  /** What voxel and train follow: parts of one group can share a bucket. */
   readonly group: string;
-  /** Lines over acceleration: no fewer are acquired; and no more than `most`. */
-  readonly least: number;
-  readonly most: number;
+  readonly encoded: number;
+  /** Acquired with no acceleration along the other direction. */
+  readonly acquired: number;
   /** Acceleration along this direction. */
   readonly factor: number;
+  /** Reference lines as set, and those of them that count along this direction. */
+  readonly reference: number;
+  readonly referenceKept: number;
 }
 
 /** Some of the bands and must-keeps. */
@@ -83,7 +93,7 @@ const bothVoxelNames: readonly string[] = ['voxelVolumeMm3'];
 /** Working copy of parameters that variables are written into. */
 type Scratch = { -readonly [K in keyof Parameters]: Parameters[K] };
 
-/** Computes line states of a setting. The same numbers as `evaluate`, by the same functions. */
+/** Computes lines and voxels of a setting. The same numbers as `evaluate`, by the same functions. */
 export class LineTable {
   readonly #setting: SearchSetting;
   readonly #start: Parameters;
@@ -100,6 +110,7 @@ export class LineTable {
   #lines: Lines;
   #geometry: Geometry;
   #wraps = false;
+  readonly #ids = new NumberIds();
 
   constructor(setting: SearchSetting, groups: Groups, start: Parameters) {
     const { problem, bands } = setting;
@@ -122,8 +133,11 @@ export class LineTable {
       mustKeeps: this.#mustKeeps.filter((one) => this.#variableNames(one).every((name) => known.includes(name))),
     });
     this.#apart = { phase: only([...phaseNames, ...phaseVoxelNames]), slice: only([...sliceNames, ...sliceVoxelNames]) };
+    const referenced = start.referenceLines > 0 || setting.variables.some(({ key }) => key === 'referenceLines');
     this.factors = this.#mustKeeps.every((one) => {
       const names = this.#variableNames(one);
+      // Reference lines count along slices only where both directions are accelerated.
+      if (referenced && names.includes('linesSlice')) return false;
       const alongPhase = names.some((name) => phaseNames.includes(name));
       const alongSlice = names.some((name) => sliceNames.includes(name));
       const voxel = (phase: boolean) =>
@@ -147,62 +161,59 @@ export class LineTable {
    */
   partAt(point: ArrayLike<number>, direction: 'phase' | 'slice'): LinePart | null {
     const { problem, baseline } = this.#setting;
+    const { key } = baseline.model;
     this.#write(point);
     const p = this.#scratch;
     this.#geometry = geometryOf(problem.series.acquisition, p);
-    const lines = acquiredLines(baseline.model.key, p);
+    const lines = acquiredLines(key, p);
     this.#lines = lines;
     if (!this.#keeps(this.#apart[direction], direction === 'phase')) return null;
     const train = this.#train(direction);
+    const reference = p.referenceLines;
+    const factorPhase = p.parallelFactorPhase;
     if (direction === 'phase') {
       const group = `${train}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.displayMatrix}`;
-      const key = `${group}|${lines.encodedPhase}|${lines.phase}|${p.parallelFactorPhase}|${p.referenceLines}`;
       return {
-        key,
+        key: `${lines.encodedPhase}|${lines.phase}|${factorPhase}|${reference}`,
         group,
-        least: Math.min(lines.phase, lines.encodedPhase / p.parallelFactorPhase),
-        most: lines.phase,
-        factor: p.parallelFactorPhase,
+        encoded: lines.encodedPhase,
+        acquired: lines.phase,
+        factor: factorPhase,
+        reference,
+        referenceKept: factorPhase > 1 ? Math.min(reference, lines.encodedPhase) : 0,
       };
     }
-    const group = `${train}|${p.averages}|${p.ellipticalSampling}|${p.sliceThicknessMm}|${p.sliceCount}|${p.sliceGapMm}`;
-    const key = `${group}|${lines.encodedSlice}|${lines.slice}|${p.parallelFactorSlice}`;
+    // Lines along slices follow the acceleration along phase only where both are accelerated.
+    p.parallelFactorPhase = 1;
+    const { slice, encodedSlice } = acquiredLines(key, p);
+    p.parallelFactorPhase = factorPhase;
+    const factor = p.parallelFactorSlice;
     return {
-      key,
-      group,
-      least: Math.min(lines.slice, lines.encodedSlice / p.parallelFactorSlice),
-      most: lines.slice,
-      factor: p.parallelFactorSlice,
+      key: `${encodedSlice}|${slice}|${factor}|${p.ellipticalSampling}`,
+      group: `${train}|${p.averages}|${p.ellipticalSampling}|${p.sliceThicknessMm}|${p.sliceCount}|${p.sliceGapMm}`,
+      encoded: encodedSlice,
+      acquired: slice,
+      factor,
+      reference,
+      referenceKept: 0,
     };
   }
 
-  /** Lines and noise of a point that is known to keep within its bands. */
-  noiseAt(point: ArrayLike<number>): Pick<LineState, 'lineCount' | 'signalFreeSnr'> {
+  /** Lines and noise of the point asked for last. */
+  noise(): LineNoise {
     const { problem, baseline } = this.#setting;
-    this.#write(point);
-    this.#lines = acquiredLines(baseline.model.key, this.#scratch);
-    const { voxelVolumeMm3 } = this.#bucketGeometry();
-    return this.#noise(this.#lines, voxelVolumeMm3, problem.series.acquisition === '3D');
-  }
-
-  #bucketGeometry(): Geometry {
-    return geometryOf(this.#setting.problem.series.acquisition, this.#scratch);
-  }
-
-  #noise(lines: Lines, voxelVolumeMm3: number, volume: boolean): Pick<LineState, 'lineCount' | 'signalFreeSnr'> {
-    const { scanner } = this.#setting.problem;
-    const { key } = this.#setting.baseline.model;
+    const { key } = baseline.model;
     const p = this.#scratch;
-    const g = parallelNoiseFactor(scanner.coil, p.parallelFactorPhase, volume ? p.parallelFactorSlice : 1);
-    const simultaneousG = p.simultaneousSlices === 1 ? 1 : (scanner.simultaneousSliceG[p.simultaneousSlices] ?? 1);
+    const volume = problem.series.acquisition === '3D';
+    const lines = this.#lines;
+    const g = parallelNoiseFactor(problem.scanner.coil, p.parallelFactorPhase, volume ? p.parallelFactorSlice : 1);
     return {
       lineCount: volume && key !== 'inversion-prepared-gradient-echo/3D' ? lines.total : lines.phase,
-      signalFreeSnr:
-        g === null ? null : signalFreeSnr(voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
+      averagingLines: g === null ? null : noiseAveragingLines(key, p, lines, g),
     };
   }
 
-  /** The parameters the last `stateAt` was computed from: lines and voxel are right, carried timing is not. */
+  /** The parameters of the point asked for last: lines and voxel are right, carried timing is not. */
   get parameters(): Parameters {
     return this.#scratch;
   }
@@ -218,25 +229,40 @@ export class LineTable {
     }
   }
 
-  /** The state of a point, or null where a band or a must-keep of voxel and lines is broken, or the body wraps into the picture. */
-  stateAt(point: ArrayLike<number>): LineState | null {
+  /** Voxel and averages of a point, or null where a band or a must-keep of voxel and lines is broken, or the body wraps into the picture. */
+  voxelAt(point: ArrayLike<number>): LineVoxel | null {
     const { problem, baseline } = this.#setting;
     this.#write(point);
     const p = this.#scratch;
-    const { key } = baseline.model;
     this.#geometry = geometryOf(problem.series.acquisition, p);
-    this.#lines = acquiredLines(key, p);
+    this.#lines = acquiredLines(baseline.model.key, p);
     if (!this.#keeps()) return null;
     const geometry = this.#geometry;
     const train = this.#train();
-    const { coverageMm, voxelVolumeMm3 } = geometry;
+    const { voxelVolumeMm3 } = geometry;
     return {
-      ...this.#noise(this.#lines, voxelVolumeMm3, problem.series.acquisition === '3D'),
       train,
-      bucket: `${train}|${p.averages}|${p.ellipticalSampling}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.sliceThicknessMm}|${p.sliceCount}|${coverageMm}`,
+      voxelId: this.#voxelId(train, p),
+      timeId: this.#timeId(p),
       volumeMm3: voxelVolumeMm3,
       geometryLoss: geometryLoss(geometry, baseline.model.geometry),
     };
+  }
+
+  /** What tells buckets apart: voxel, averages, train; of the point asked for last. */
+  bucketWord(): string {
+    const p = this.#scratch;
+    return `${this.#train()}|${p.averages}|${p.ellipticalSampling}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.sliceThicknessMm}|${p.sliceCount}|${this.#geometry.coverageMm}`;
+  }
+
+  #timeId({ averages, ellipticalSampling, matrixPhase, parallelFactorPhase }: Parameters): number {
+    // Blades follow matrix and acceleration besides their lines; elsewhere lines say all.
+    const blades = this.#setting.problem.series.family === 'rotating-strip-fast-spin-echo';
+    return this.#ids.of('time', averages, Number(ellipticalSampling), blades ? matrixPhase : 0, blades ? parallelFactorPhase : 0);
+  }
+
+  #voxelId(train: string, { fieldOfViewMm, matrixPhase, sliceThicknessMm, sliceCount }: Parameters): number {
+    return this.#ids.of(train, fieldOfViewMm, matrixPhase, sliceThicknessMm, sliceCount);
   }
 
   /** What trains that read all their lines in one go need to know of them. */

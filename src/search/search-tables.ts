@@ -4,6 +4,7 @@ import { type Groups, groupsOf } from './groups.js';
 import { Join } from './join.js';
 import { LineTable } from './line-states.js';
 import type { SearchSetting } from './setting.js';
+import { ShortestTiming } from './shortest-timing.js';
 import { SignalTable } from './signal-states.js';
 
 /** Tables that all parts of a search share. */
@@ -13,6 +14,7 @@ export interface SearchTables {
   readonly lines: LineTable;
   readonly signals: SignalTable;
   readonly join: Join;
+  readonly shortest: ShortestTiming;
 }
 
 /** Forms the tables of a setting. */
@@ -28,5 +30,6 @@ export function tablesOf(setting: SearchSetting): SearchTables {
     lines: new LineTable(setting, groups, start),
     signals: new SignalTable(setting, groups),
     join: new Join(setting),
+    shortest: new ShortestTiming(setting),
   };
 }

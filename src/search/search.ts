@@ -25,12 +25,14 @@ import { WholeLatticeSearch } from './whole-lattice.js';
  * signal what it needs to know of the lines by the `train` of a bucket.
  *
  * `line-states` and `signal-states` compute each part once; `join` puts two parts together by the functions and in the order of `evaluate`.
- * A bucket holds line states with one voxel, one number of averages and one train: they differ in lines and noise alone. Time never falls and noise
- * never rises with them, so a bucket needs its skyline only, and stretches of it are bounded by their ends.
+ * A bucket holds line states with one voxel, one number of averages and one train: they differ in lines and noise alone. Phase and slice directions
+ * are gone through apart (`line-parts`) and paired (`line-pairs`). Time never falls and noise never rises with lines, so a bucket needs its skyline
+ * only; buckets whose lines come from the same parts share it, whatever their voxel (`line-shapes`).
  *
  * Bests (`bests`) go through all points that change at most three settings; where none of those fits, four, five... Fronts, the nearest way and the
- * count (`whole-lattice`) go over everything: phase and slice directions apart (`whole-lines`), buckets that both fronts already beat not formed, points
- * counted by sorting. The count is null where that would take too long.
+ * count (`whole-lattice`) go over everything. Buckets and signals that can be played together are put together (`signal-groups`). Time against SNR needs
+ * the envelope of all their lines (`snr-front`). Time against loss goes down a tree of buckets (`loss-front`, `bucket-tree`) and leaves out stretches of
+ * lines of many buckets that the front already beats. Points are counted by sorting; the count is null where that would take too long.
  *
  * Order among equals: what fits before what is too close; the kind's own number, to a billionth; fewer changes; less balanced loss; then the first
  * variable, in the order of the table of parameters, on which two points differ: its earlier value. On a front, of ways with equal time and value the

@@ -37,7 +37,7 @@ export interface Shortfall {
 type Minimum = { readonly echoTimeMs: number; readonly repetitionTimeMs: number; readonly echoSpacingMs: number | null };
 
 /** Repetition time that the estimate of the shortest one is compared with, ms. */
-function comparedRepetitionMs(p: Parameters): number {
+export function comparedRepetitionMs(p: Parameters): number {
   return isCine(p) ? p.repetitionTimeMs : effectiveRepetitionTimeMs(p);
 }
 
@@ -62,12 +62,19 @@ export function noFurtherBelow(now: Shortfall, allowed: Shortfall): boolean {
   );
 }
 
+/** What the estimates of the shortest timing are compared with, ms. */
+interface ComparedTiming {
+  readonly echoTimeMs: number;
+  readonly comparedRepetitionMs: number;
+  readonly echoSpacingMs: number;
+}
+
 /** `noFurtherBelow` of `shortfallOf`, without forming it: a search asks this millions of times. */
-export function keepsShortfall(p: Parameters, minimum: Minimum, allowed: Shortfall): boolean {
+export function keepsShortfall(now: ComparedTiming, minimum: Minimum, allowed: Shortfall): boolean {
   return (
-    atMost(minimum.echoTimeMs - p.echoTimeMs, allowed.echoTimeMs + carriedDustMs) &&
-    atMost(minimum.repetitionTimeMs - comparedRepetitionMs(p), allowed.repetitionTimeMs + carriedDustMs) &&
-    (minimum.echoSpacingMs === null || atMost(minimum.echoSpacingMs - p.echoSpacingMs, allowed.echoSpacingMs + carriedDustMs))
+    atMost(minimum.echoTimeMs - now.echoTimeMs, allowed.echoTimeMs + carriedDustMs) &&
+    atMost(minimum.repetitionTimeMs - now.comparedRepetitionMs, allowed.repetitionTimeMs + carriedDustMs) &&
+    (minimum.echoSpacingMs === null || atMost(minimum.echoSpacingMs - now.echoSpacingMs, allowed.echoSpacingMs + carriedDustMs))
   );
 }
 

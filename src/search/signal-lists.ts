@@ -1,21 +1,91 @@
+import type { ParameterKey } from '../calc/parameters.js';
 import type { Pulse } from './control.js';
 import type { Groups } from './groups.js';
+import type { LatticeVariable } from './lattice.js';
 import type { LineBucket } from './line-buckets.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchSetting } from './setting.js';
-import type { SignalState, SignalTable } from './signal-states.js';
+import type { SignalState } from './signal-state.js';
+import type { SignalTable } from './signal-states.js';
 
-/** A signal state with the point that gives it and the settings it changes. */
-export interface SignalEntry {
-  readonly state: SignalState;
-  readonly changes: number;
+/** A signal state with the settings it changes; its point is put together when asked for. */
+export class SignalEntry {
+  readonly #code: number;
+  readonly #list: SignalPoints;
+
+  constructor(
+    readonly state: SignalState,
+    readonly changes: number,
+    code: number,
+    list: SignalPoints,
+  ) {
+    this.#code = code;
+    this.#list = list;
+  }
+
   /** Whole point: shared and signal variables are right, line variables stand for the train. */
-  readonly point: readonly number[];
+  get point(): number[] {
+    return this.#list.pointOf(this.#code);
+  }
+}
+
+/** Points of one list as numbers. */
+class SignalPoints {
+  constructor(
+    private readonly variables: readonly LatticeVariable[],
+    private readonly which: readonly number[],
+    private readonly start: readonly number[],
+  ) {}
+
+  codeOf(point: readonly number[]): number {
+    let code = 0;
+    for (const at of this.which) code = code * (this.variables[at] as LatticeVariable).values.length + (point[at] as number);
+    return code;
+  }
+
+  pointOf(code: number): number[] {
+    const point = [...this.start];
+    let rest = code;
+    for (let k = this.which.length - 1; k >= 0; k -= 1) {
+      const at = this.which[k] as number;
+      const count = (this.variables[at] as LatticeVariable).values.length;
+      point[at] = rest % count;
+      rest = Math.floor(rest / count);
+    }
+    return point;
+  }
+}
+
+/** What only takes time or power: of states that differ in these alone, and are split alike, none beats the one with the least of them. */
+const onlyCosts: readonly ParameterKey[] = ['dummyShots', 'saturationBands'];
+
+/** One choice of what only costs: indices of values, and the choices before it that cost no more of anything. */
+interface CostChoice {
+  readonly values: readonly number[];
+  readonly beatenBy: readonly number[];
+}
+
+/** All choices of some variables whose values only cost, those that cost less first. */
+function costChoices(variables: readonly LatticeVariable[], costs: readonly number[]): CostChoice[] {
+  const costOf = (values: readonly number[], k: number) =>
+    (variables[costs[k] as number] as LatticeVariable).values[values[k] as number] as number;
+  const all: number[][] = [];
+  const point: number[] = [];
+  walkPoints(variables, costs, costs.length, point, () => {
+    all.push(costs.map((at) => point[at] as number));
+  });
+  const total = (values: readonly number[]) => values.reduce((sum, _, k) => sum + costOf(values, k), 0);
+  all.sort((a, b) => total(a) - total(b));
+  return all.map((values, i) => ({
+    values,
+    beatenBy: all.slice(0, i).flatMap((other, k) => (costs.every((_, v) => costOf(other, v) <= costOf(values, v)) ? [k] : [])),
+  }));
 }
 
 /** Signal states of one choice of the shared variables, by the train that the lines ask for, changing at most so many signal variables. */
 export class SignalLists {
   readonly #lists = new Map<string, SignalEntry[]>();
+  readonly #best = new Map<string, SignalEntry[]>();
 
   constructor(
     private readonly setting: SearchSetting,
@@ -25,17 +95,52 @@ export class SignalLists {
     private readonly pulse: Pulse,
   ) {}
 
-  of(bucket: LineBucket): readonly SignalEntry[] {
+  of(bucket: Pick<LineBucket, 'train' | 'point'>): readonly SignalEntry[] {
     const known = this.#lists.get(bucket.train);
     if (known !== undefined) return known;
     const entries: SignalEntry[] = [];
     const point = [...bucket.point];
-    walkPoints(this.setting.variables, this.groups.signal, this.mostChanges, point, (changes) => {
+    const { variables } = this.setting;
+    const points = new SignalPoints(variables, this.groups.signal, bucket.point);
+    walkPoints(variables, this.table.inOrder(this.groups.signal), this.mostChanges, point, (changes) => {
       this.pulse.beat();
       const state = this.table.stateAt(point);
-      if (state !== null) entries.push({ state, changes, point: [...point] });
+      if (state !== null) entries.push(new SignalEntry(state, changes, points.codeOf(point), points));
     });
     this.#lists.set(bucket.train, entries);
+    return entries;
+  }
+
+  /** Of all these states at least those that no other beats in time, signal, contrast and train. */
+  best(bucket: Pick<LineBucket, 'train' | 'point'>): readonly SignalEntry[] {
+    const { variables } = this.setting;
+    const isCost = (at: number) => onlyCosts.includes((variables[at] as LatticeVariable).key);
+    const costs = this.groups.signal.filter(isCost);
+    if (!this.table.splitsApart || costs.length === 0) return this.of(bucket);
+    const known = this.#best.get(bucket.train);
+    if (known !== undefined) return known;
+    const others = this.table.inOrder(this.groups.signal.filter((at) => !isCost(at)));
+    const entries: SignalEntry[] = [];
+    const point = [...bucket.point];
+    const points = new SignalPoints(variables, this.groups.signal, bucket.point);
+    const choices = costChoices(variables, costs);
+    const splits = new Int32Array(choices.length);
+    walkPoints(variables, others, others.length, point, () => {
+      for (let i = 0; i < choices.length; i += 1) {
+        this.pulse.beat();
+        const { values, beatenBy } = choices[i] as CostChoice;
+        for (let k = 0; k < costs.length; k += 1) point[costs[k] as number] = values[k] as number;
+        splits[i] = 0;
+        const rounds = this.table.splitAt(point);
+        if (rounds === null || beatenBy.some((k) => splits[k] === rounds)) continue;
+        const state = this.table.stateAsked(point);
+        if (state === null || state.rfRank === 2) continue;
+        splits[i] = rounds;
+        entries.push(new SignalEntry(state, 0, points.codeOf(point), points));
+      }
+      for (const at of costs) point[at] = 0;
+    });
+    this.#best.set(bucket.train, entries);
     return entries;
   }
 }
@@ -45,30 +150,4 @@ export function joinedPoint(groups: Groups, line: readonly number[], signal: rea
   const point = [...signal];
   for (const at of groups.lines) point[at] = line[at] as number;
   return point;
-}
-
-/**
- * States that can be best for some lines: of those with the same timing and the same shortest timing, no other has at least
- * the signal, the contrast and the train. What neither time nor playability tells apart is only compared in these three.
- */
-export function undominated(entries: readonly SignalEntry[]): SignalEntry[] {
-  const groups = new Map<number, SignalEntry[]>();
-  for (const entry of entries) {
-    if (entry.state.rfRank === 2) continue;
-    const key = entry.state.timeId * 2 ** 24 + entry.state.minimumId;
-    const group = groups.get(key);
-    if (group === undefined) groups.set(key, [entry]);
-    else if (!group.some((other) => dominates(other.state, entry.state))) {
-      groups.set(key, [...group.filter((other) => !dominates(entry.state, other.state)), entry]);
-    }
-  }
-  return [...groups.values()].flat();
-}
-
-function contrastOf({ target, comparison }: SignalState): number {
-  return target === null || comparison === null ? -1 : Math.abs(target - comparison);
-}
-
-function dominates(a: SignalState, b: SignalState): boolean {
-  return (a.target ?? -1) >= (b.target ?? -1) && contrastOf(a) >= contrastOf(b) && a.trainLoss <= b.trainLoss;
 }

@@ -97,6 +97,8 @@ export class SignalShortcut {
   readonly #free: readonly FreeVariable[];
   /** The state asked for last: its base, split and RF. */
   readonly last = {} as ShortState;
+  #lastId = -1;
+  #lastBase: SignalBase | null = null;
 
   constructor(setting: SearchSetting, moving: readonly number[]) {
     this.#setting = setting;
@@ -104,6 +106,15 @@ export class SignalShortcut {
     const isFree = (at: number) => freeKeys.includes((variables[at] as LatticeVariable).key);
     this.#bound = moving.filter((at) => !isFree(at));
     this.#free = moving.filter(isFree).map((at) => ({ at, variable: variables[at] as LatticeVariable }));
+  }
+
+  /** Variables with the free ones last: states of one base come one after the other. */
+  inOrder(which: readonly number[]): readonly number[] {
+    return [...which].sort((a, b) => Number(this.#isFree(a)) - Number(this.#isFree(b)) || a - b);
+  }
+
+  #isFree(at: number): boolean {
+    return this.#free.some((one) => one.at === at);
   }
 
   /** True where this way of modelling is complete. */
@@ -224,11 +235,14 @@ export class SignalShortcut {
     const { variables } = this.#setting;
     let id = 0;
     for (const at of this.#bound) id = id * (variables[at] as LatticeVariable).values.length + (point[at] as number);
+    if (id === this.#lastId) return this.#lastBase as SignalBase;
     let base = this.#bases.get(id);
     if (base === undefined) {
       base = this.#formBase(point);
       this.#bases.set(id, base);
     }
+    this.#lastId = id;
+    this.#lastBase = base;
     return base;
   }
 

@@ -1,11 +1,11 @@
-import { ellipticalShare } from '../calc/lines.js';
-import { signalFreeSnr } from '../calc/noise.js';
-import { parallelNoiseFactor } from '../calc/parallel-noise.js';
 import type { ParameterKey } from '../calc/parameters.js';
 import type { Pulse } from './control.js';
 import type { Groups } from './groups.js';
-import { type BucketBound, compareEntries, type LineBucket, type LineEntry, lineBuckets } from './line-buckets.js';
-import type { LineTable } from './line-states.js';
+import { LineBucket } from './line-buckets.js';
+import { LinePairs } from './line-pairs.js';
+import { type Part, partsOf } from './line-parts.js';
+import { LineShape, pairSource } from './line-shapes.js';
+import type { LineTable, LineVoxel } from './line-states.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchSetting } from './setting.js';
 
@@ -31,205 +31,138 @@ const apartFromPlane: readonly ParameterKey[] = [
   'averages',
 ];
 
-/** Entries of a bucket that are formed without asking for bounds first. */
-const fewEntries = 500;
-
-/** Choices along one direction that time and noise cannot tell apart. */
-interface Part {
-  /** The first such choice, a whole point of which only this direction's variables count. */
-  readonly point: readonly number[];
-  multiplicity: number;
-  /** What both voxel and train follow: parts of one group can share a bucket. */
-  readonly group: string;
-  /** Lines over acceleration: no fewer are acquired. */
-  readonly least: number;
-  readonly most: number;
-  readonly factor: number;
-  /** Some lines are fully sampled. */
-  readonly referenced: boolean;
+/** Which line variables lie along phase, and which do not. */
+export function directionsOf(
+  setting: SearchSetting,
+  groups: Groups,
+): { readonly plane: readonly number[]; readonly slice: readonly number[] } {
+  const along = (at: number) => planeKeys.includes(setting.variables[at]?.key as ParameterKey);
+  return { plane: groups.lines.filter(along), slice: groups.lines.filter((at) => !along(at)) };
 }
 
-/** An entry whose point is put together when it is asked for: few ever are. */
-class JoinedEntry implements LineEntry {
-  readonly changes = 0;
-
-  constructor(
-    readonly lineCount: number,
-    readonly signalFreeSnr: number | null,
-    private readonly plane: Part,
-    private readonly slice: Part,
-    private readonly pointOf: (plane: Part, slice: Part) => readonly number[],
-  ) {}
-
-  get multiplicity(): number {
-    return this.plane.multiplicity * this.slice.multiplicity;
-  }
-
-  get point(): readonly number[] {
-    return this.pointOf(this.plane, this.slice);
-  }
-}
-
-/** Line states of whole lattices: phase and slice directions are gone through apart, and buckets form their entries when asked. */
+/** Line states of whole lattices: phase and slice directions are gone through apart, and buckets share the shapes of their lines. */
 export class WholeLines {
   readonly #setting: SearchSetting;
   readonly #groups: Groups;
   readonly #table: LineTable;
   readonly #pulse: Pulse;
   readonly #plane: readonly number[];
-  readonly #others: readonly number[];
+  readonly #slice: readonly number[];
   readonly #planeShared: readonly number[];
-  readonly #boundedFrom: number;
-  readonly #planes = new Map<string, Map<string, Part[]>>();
+  readonly #planes = new Map<string, Part[][]>();
+  readonly #words = new Map<string, number>();
+  readonly #wordOf = new WeakMap<readonly Part[], number>();
+  readonly #shapes = new Map<string, LineShape>();
 
-  constructor(setting: SearchSetting, groups: Groups, table: LineTable, pulse: Pulse, boundedFrom: number = fewEntries) {
-    const keyOf = (at: number) => setting.variables[at]?.key as ParameterKey;
+  constructor(setting: SearchSetting, groups: Groups, table: LineTable, pulse: Pulse) {
+    const { plane, slice } = directionsOf(setting, groups);
     this.#setting = setting;
     this.#groups = groups;
     this.#table = table;
     this.#pulse = pulse;
-    this.#boundedFrom = boundedFrom;
-    this.#plane = groups.lines.filter((at) => planeKeys.includes(keyOf(at)));
-    this.#others = groups.lines.filter((at) => !planeKeys.includes(keyOf(at)));
-    this.#planeShared = groups.shared.filter((at) => !apartFromPlane.includes(keyOf(at)));
+    this.#plane = plane;
+    this.#slice = slice;
+    this.#planeShared = groups.shared.filter((at) => !apartFromPlane.includes(setting.variables[at]?.key as ParameterKey));
   }
 
   /** The buckets of one choice of the shared variables, which `point` holds. */
   buckets(point: number[]): readonly LineBucket[] {
-    const all = this.#setting.variables.length;
-    if (!this.#table.factors) return lineBuckets(this.#setting, this.#groups, this.#table, point, all, this.#pulse);
+    if (!this.#table.factors) return this.#together(point);
     const planes = this.#planesAt(point);
-    const slices = this.#partsOf(this.#others, point, 'slice');
+    const slices = partsOf(this.#setting, this.#table, this.#slice, this.#slice.length, point, 'slice', true, this.#pulse);
     const buckets: LineBucket[] = [];
-    for (const plane of planes.values()) for (const slice of slices.values()) this.#join(plane, slice, point, buckets);
+    for (const plane of planes) {
+      for (const slice of slices) {
+        const bucket = this.#join(plane, slice, point);
+        if (bucket !== null) buckets.push(bucket);
+      }
+    }
     return buckets;
   }
 
-  #planesAt(point: number[]): Map<string, Part[]> {
+  #planesAt(point: number[]): Part[][] {
     const key = this.#planeShared.map((at) => point[at]).join(',');
     const known = this.#planes.get(key);
     if (known !== undefined) return known;
-    const parts = this.#partsOf(this.#plane, point, 'phase');
+    const parts = partsOf(this.#setting, this.#table, this.#plane, this.#plane.length, point, 'phase', true, this.#pulse);
     this.#planes.set(key, parts);
     return parts;
   }
 
-  #partsOf(which: readonly number[], point: number[], direction: 'phase' | 'slice'): Map<string, Part[]> {
-    const byKey = new Map<string, Part>();
-    walkPoints(this.#setting.variables, which, which.length, point, () => {
-      this.#pulse.beat();
-      const part = this.#table.partAt(point, direction);
-      if (part === null) return;
-      const known = byKey.get(part.key);
-      if (known !== undefined) known.multiplicity += 1;
-      else {
-        const { group, least, most, factor } = part;
-        byKey.set(part.key, {
-          point: [...point],
-          multiplicity: 1,
-          group,
-          least,
-          most,
-          factor,
-          referenced: this.#table.parameters.referenceLines > 0,
-        });
-      }
-    });
-    const groups = new Map<string, Part[]>();
-    for (const part of byKey.values()) groups.set(part.group, [...(groups.get(part.group) ?? []), part]);
-    return groups;
-  }
-
   /** The bucket of one group of each direction, if voxel and averages keep within bands and must-keeps. */
-  #join(plane: readonly Part[], slice: readonly Part[], shared: readonly number[], into: LineBucket[]): void {
-    const point = this.#pointOf(plane[0] as Part, slice[0] as Part, shared);
+  #join(planes: readonly Part[], slices: readonly Part[], shared: readonly number[]): LineBucket | null {
+    const plane = planes[0] as Part;
+    const slice = slices[0] as Part;
+    const own = [...shared];
+    const pointOf = (a: Part, b: Part) => {
+      const point = [...own];
+      for (const at of this.#plane) point[at] = a.point[at] as number;
+      for (const at of this.#slice) point[at] = b.point[at] as number;
+      return point;
+    };
+    const point = pointOf(plane, slice);
+    const voxel = this.#table.voxelAt(point);
+    if (voxel === null) return null;
+    const parameters = { ...this.#table.parameters };
+    const key = `${this.#word(planes)}|${this.#word(slices)}`;
+    let shape = this.#shapes.get(key);
+    if (shape === undefined) {
+      const { baseline, problem } = this.#setting;
+      shape = new LineShape(pairSource(planes, slices, new LinePairs(baseline.model.key, problem.scanner.coil, parameters)));
+      this.#shapes.set(key, shape);
+    }
+    const pointAt = (at: number) => pointOf(planes[at % planes.length] as Part, slices[Math.floor(at / planes.length)] as Part);
+    return new LineBucket(voxel, point, parameters, shape, this.#setting.problem.scanner, pointAt);
+  }
+
+  /** A number for what the lines of some parts follow: equal for parts of another voxel. */
+  #word(parts: readonly Part[]): number {
+    let number = this.#wordOf.get(parts);
+    if (number === undefined) {
+      const word = parts.map(({ key, multiplicity }) => `${key}x${multiplicity}`).join(' ');
+      number = this.#words.get(word) ?? this.#words.size;
+      this.#words.set(word, number);
+      this.#wordOf.set(parts, number);
+    }
+    return number;
+  }
+
+  /** Where something ties both directions, their choices are gone through together. */
+  #together(point: number[]): LineBucket[] {
+    const { variables, problem } = this.#setting;
     const table = this.#table;
-    const state = table.stateAt(point);
-    if (state === null) return;
-    const { volumeMm3, geometryLoss } = state;
-    const parameters = { ...table.parameters };
-    const common = { train: state.train, point, parameters, volumeMm3, geometryLoss, entryCount: plane.length * slice.length };
-    const sharedCopy = [...shared];
-    let formed: LineEntry[] | null = null;
-    const form = () => this.#entries(plane, slice, sharedCopy);
-    into.push({
-      ...common,
-      bound: this.#boundOf(plane, slice, common),
-      release: () => {
-        formed = null;
-      },
-      get entries() {
-        formed ??= form();
-        return formed;
-      },
+    const found = new Map<
+      string,
+      { voxel: LineVoxel; parameters: LineTable['parameters']; points: number[][]; lines: number[]; averaging: number[] }
+    >();
+    walkPoints(variables, this.#groups.lines, variables.length, point, () => {
+      this.#pulse.beat();
+      const voxel = table.voxelAt(point);
+      if (voxel === null) return;
+      const word = table.bucketWord();
+      let one = found.get(word);
+      if (one === undefined) {
+        one = { voxel, parameters: { ...table.parameters }, points: [], lines: [], averaging: [] };
+        found.set(word, one);
+      }
+      const { lineCount, averagingLines } = table.noise();
+      one.points.push([...point]);
+      one.lines.push(lineCount);
+      one.averaging.push(averagingLines ?? -1);
+    });
+    return [...found.values()].map(({ voxel, parameters, points, lines, averaging }) => {
+      const shape = new LineShape({
+        size: points.length,
+        reach: (into) => {
+          lines.forEach((lineCount, at) => {
+            into.offer(lineCount, averaging[at] as number, at);
+          });
+        },
+        averagingAt: (at) => averaging[at] as number,
+        lineCountAt: (at) => lines[at] as number,
+        multiplicityAt: () => 1,
+      });
+      return new LineBucket(voxel, points[0] as number[], parameters, shape, problem.scanner, (at) => points[at] as number[]);
     });
   }
-
-  #pointOf(plane: Part, slice: Part, shared: readonly number[]): number[] {
-    const point = [...shared];
-    for (const at of this.#plane) point[at] = plane.point[at] as number;
-    for (const at of this.#others) point[at] = slice.point[at] as number;
-    return point;
-  }
-
-  #entries(plane: readonly Part[], slice: readonly Part[], shared: readonly number[]): LineEntry[] {
-    const entries: LineEntry[] = [];
-    const scratch = [...shared];
-    const pointOf = (one: Part, other: Part) => this.#pointOf(one, other, shared);
-    for (const b of slice) {
-      for (const at of this.#others) scratch[at] = b.point[at] as number;
-      for (const a of plane) {
-        this.#pulse.beat();
-        for (const at of this.#plane) scratch[at] = a.point[at] as number;
-        const { lineCount, signalFreeSnr: snr } = this.#table.noiseAt(scratch);
-        entries.push(new JoinedEntry(lineCount, snr, a, b, pointOf));
-      }
-    }
-    return entries.sort(compareEntries);
-  }
-
-  /**
-   * Bounds of a bucket: lines are never fewer than those encoded over acceleration, and lines that average noise never more than those acquired
-   * over g^2 (with reference lines g acts on a part only: then g is taken as 1; Cauchy-Schwarz on `S^2 / (C + g^2 R (S - C))` and `C + (S - C) / R`).
-   */
-  #boundOf(
-    plane: readonly Part[],
-    slice: readonly Part[],
-    { parameters, volumeMm3 }: Pick<LineBucket, 'parameters' | 'volumeMm3'>,
-  ): BucketBound | null {
-    const { series, scanner } = this.#setting.problem;
-    // Readouts of a cycle take no time of their own, and few entries are formed as quickly as bounded.
-    if (series.family === 'inversion-prepared-gradient-echo' || plane.length * slice.length < this.#boundedFrom) return null;
-    const share = ellipticalShare(parameters);
-    const referenced = plane.some(({ referenced: lines }) => lines);
-    const stretches = byFactor(plane).flatMap((a) =>
-      byFactor(slice).flatMap((b) => {
-        const g = parallelNoiseFactor(scanner.coil, a.factor, series.acquisition === '3D' ? b.factor : 1);
-        return g === null ? [] : [{ least: a.least * b.least - 1e-6, most: a.most * b.most + 1, g: referenced ? 1 : Math.max(1, g) }];
-      }),
-    );
-    return {
-      fewestLines: Math.max(1, Math.min(...stretches.map(({ least }) => least))),
-      mostLines: Math.max(1, ...stretches.map(({ most }) => most)),
-      noiseWithin: (from, to) => {
-        let best = 0;
-        for (const { least, most, g } of stretches) if (least <= to && most >= from) best = Math.max(best, Math.min(to, most) / (g * g));
-        return signalFreeSnr(volumeMm3, best * share, parameters, scanner.fieldT, 1) * (1 + 1e-9);
-      },
-    };
-  }
-}
-
-/** Parts by acceleration: the fewest and the most lines of each. */
-function byFactor(parts: readonly Part[]): { factor: number; least: number; most: number }[] {
-  const byFactors = new Map<number, { factor: number; least: number; most: number }>();
-  for (const { factor, least, most } of parts) {
-    const known = byFactors.get(factor);
-    if (known === undefined) byFactors.set(factor, { factor, least, most });
-    else {
-      known.least = Math.min(known.least, least);
-      known.most = Math.max(known.most, most);
-    }
-  }
-  return [...byFactors.values()];
 }

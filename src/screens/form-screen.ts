@@ -87,7 +87,7 @@ function formPane(
   const shown = windowOf(all, at, rows);
   const labelColumns = Math.min(26, Math.max(...all.map(({ label }) => label.length), 10) + 1);
   const lines = shown.items.map((row): Line => {
-    if (row.kind === 'heading') return line(row.label, 'quiet');
+    if (row.kind === 'heading' || (row.kind === 'note' && row.shown === '')) return line(row.label, 'quiet');
     const isHere = row === here || row.field === here?.field;
     const typed = isHere && state.entry !== null ? `${state.entry.text}_` : row.shown;
     const style = isHere ? 'inverse' : row.attention ? 'attention' : row.shown === '-' ? 'quiet' : 'plain';

@@ -13,6 +13,10 @@ import { sayFigure } from './say-figure.js';
 import type { Session, SessionSeries } from './session.js';
 import { eachSeries } from './set-field.js';
 import type { State } from './state.js';
+import { wrapText } from './wrap-text.js';
+
+/** Columns of a rule that is crossed, on the smallest screen. */
+const ruleColumns = 46;
 
 const outcomes = { ...outcomeWords, 'left-out': 'left out of the record' } as const;
 
@@ -57,11 +61,11 @@ function seriesRows(state: State, series: SessionSeries): FormRow[] {
   return [
     outcomeRow,
     ...comparisonRows(id, recorded),
-    ...recorded.crossed.map(
-      ({ rule, role }, at): FormRow => ({
+    ...recorded.crossed.flatMap(({ rule, role }, at): FormRow[] => [
+      {
         field: `${id} crossed ${at}`,
         label: '  crossed',
-        shown: `${role === null ? 'accepted by nobody' : `accepted by ${role}`}: ${rule}`,
+        shown: role === null ? 'accepted by nobody' : `accepted by ${role}`,
         help: 'Right: the role above accepts that this must-keep is crossed. Left: nobody does.',
         kind: 'flag',
         ...(role === null ? { attention: true as const } : {}),
@@ -69,8 +73,12 @@ function seriesRows(state: State, series: SessionSeries): FormRow[] {
           const { [rule]: _gone, ...accepted } = series.accepted;
           return change(session, { accepted: direction > 0 ? { ...accepted, [rule]: session.role || 'no role given' } : accepted });
         },
-      }),
-    ),
+      },
+      // What is accepted stands under it in full, numbers and source.
+      ...wrapText(rule, ruleColumns).map(
+        (words, line): FormRow => ({ field: `${id} crossed ${at} ${line}`, label: `    ${words}`, shown: '', help: '', kind: 'note' }),
+      ),
+    ]),
     ...(changed || series.reason !== '' || outcome === 'given-up' || outcome === 'repeated'
       ? [
           textRow(

@@ -99,7 +99,12 @@ function itemsOf(state: State, look: Look): readonly Item[] {
     default: {
       const here = formRow(state)?.field;
       return formRows(state).map((row) => ({
-        words: row.kind === 'heading' ? `${row.label}:` : `${row.label.trim()}: ${row.shown === '-' ? 'blank' : row.shown.trim() || 'no'}`,
+        words:
+          row.kind === 'heading'
+            ? `${row.label}:`
+            : row.kind === 'note' && row.shown === ''
+              ? row.label.trim()
+              : `${row.label.trim()}: ${row.shown === '-' ? 'blank' : row.shown.trim() || 'no'}`,
         here: row.field === here,
       }));
     }

@@ -11,7 +11,7 @@ export interface FieldView {
   readonly middleMm: PlanePoint;
 }
 
-/** Brightness of each square, 0 black to 1 white, row after row: the mean of four places in it, so that thin lines are not missed. */
+/** Brightness of each square, 0 black to 1 white, row after row: the value in its middle, since a mean over the square would hide the grain. */
 export function pictureField(
   picture: Picture,
   { columns, rows, squareMm, middleMm }: FieldView,
@@ -22,13 +22,7 @@ export function pictureField(
     for (let column = 0; column < columns; column += 1) {
       const x = middleMm[0] + (column + 0.5 - columns / 2) * squareMm;
       const y = middleMm[1] + (row + 0.5 - rows / 2) * squareMm;
-      const quarter = squareMm / 4;
-      const sum =
-        valueAt(picture, x - quarter, y - quarter) +
-        valueAt(picture, x + quarter, y - quarter) +
-        valueAt(picture, x - quarter, y + quarter) +
-        valueAt(picture, x + quarter, y + quarter);
-      field[row * columns + column] = Math.min(1, Math.max(0, (sum / 4 - black) / (white - black)));
+      field[row * columns + column] = Math.min(1, Math.max(0, (valueAt(picture, x, y) - black) / (white - black)));
     }
   }
   return field;

@@ -5,6 +5,7 @@ import { plainScanner, type Scanner } from '../calc/scanner.js';
 import type { Parameters, Series } from '../calc/series.js';
 import type { ObjectFile } from '../study/object-file.js';
 import { type PicturePair, picturePair, usualTargetSnr } from './picture-pair.js';
+import { type PictureWindow, squareWindow } from './picture-window.js';
 
 /** What a pair of pictures is asked with from the interface; plain values, so that a worker can be handed them. */
 export interface PictureProblem {
@@ -24,6 +25,8 @@ export interface DrawnPictures {
   readonly pair: PicturePair;
   readonly title: string;
   readonly look: ObjectFile['look'];
+  /** Window of the squares that are shown close: worked out once, not with every frame. */
+  readonly squareWindow: PictureWindow;
   /** The shortest side of an acquired voxel in the plane, mm, of both. */
   readonly voxelMm: number;
 }
@@ -36,5 +39,7 @@ export function drawPictures(problem: PictureProblem, object: ObjectFile): Outco
   const pair = picturePair({ object, series, scanner, body, baseline, targetSnr: usualTargetSnr, seed: 1, fineness: 1 });
   if (!pair.ok) return pair;
   const voxels = [preset.parameters, parameters].flatMap((p) => [p.fieldOfViewMm / p.matrixRead, p.fieldOfViewMm / p.matrixPhase]);
-  return { ok: true, value: { pair: pair.value, title: object.title, look: object.look, voxelMm: Math.min(...voxels) } };
+  const { look, title } = object;
+  const voxelMm = Math.min(...voxels);
+  return { ok: true, value: { pair: pair.value, title, look, squareWindow: squareWindow(pair.value, look), voxelMm } };
 }

@@ -1,6 +1,6 @@
 import { diffused, type FieldView, pictureField } from '../picture/picture-field.js';
 import type { DrawnPictures } from '../picture/picture-problem.js';
-import { type PictureWindow, squareWindow, wholeWindow } from '../picture/picture-window.js';
+import { type PictureWindow, wholeWindow } from '../picture/picture-window.js';
 import { extentOf } from '../picture/sample-picture.js';
 import { chartDotBit, chartDots } from '../terminal/chart-dots.js';
 import type { Line, Span } from './line.js';
@@ -17,7 +17,7 @@ function squaresOf({ colourLevel, set }: Look): readonly [number, number] {
 
 /** Which part of the pictures is shown in a pane of cells, and how bright: the same for both. */
 export function pictureView(
-  { pair, look, voxelMm }: DrawnPictures,
+  { pair, look, voxelMm, squareWindow }: DrawnPictures,
   close: boolean,
   columns: number,
   rows: number,
@@ -28,7 +28,7 @@ export function pictureView(
   if (close) {
     // One acquired voxel takes two cells or more.
     const squareMm = Math.min(voxelMm / 2 / across, look.zoom.sideMm / Math.min(size.columns, size.rows));
-    return { view: { ...size, squareMm, middleMm: look.zoom.atMm }, window: squareWindow(pair, look) };
+    return { view: { ...size, squareMm, middleMm: look.zoom.atMm }, window: squareWindow };
   }
   const extents = [extentOf(pair.preset), extentOf(pair.now)];
   const squareMm = Math.max(...extents.map(([x, y]) => Math.max(x / size.columns, y / size.rows)));
@@ -62,14 +62,15 @@ export function picturePane(
         const at = row * down * view.columns + column;
         const [upper, lower] = [field[at] ?? 0, field[at + view.columns] ?? 0];
         if (look.set === 'ascii') return { text: ramp[Math.round(((upper + lower) / 2) * (ramp.length - 1))] ?? ' ', style: 'plain' };
-        // A level of 24 changes fewer cells than the grain of each pixel would.
         return { text: '\u2580', style: 'plain', greys: [level(upper), level(lower)] };
       }),
     ),
   );
 }
 
-const level = (grey: number) => Math.round(grey * 24) / 24;
+/** Few enough greys that neighbours are often equal, which keeps a frame short; enough that the grain is seen. */
+const greys = 40;
+const level = (grey: number) => Math.round(grey * greys) / greys;
 
 function dotCell(dots: Uint8Array, columns: number, column: number, row: number): string {
   let bits = 0;

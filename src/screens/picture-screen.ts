@@ -39,6 +39,21 @@ export function pictureScreen(state: State, look: Look, columns: number, rows: n
   );
 }
 
+/** The pictures beside a series: whole above, close below. */
+export function besidePane(state: State, look: Look, columns: number, rows: number): Line[] {
+  const { picture, place } = state;
+  const head = wrap(frame, columns).map((each) => line(each, 'attention'));
+  const drawn = picture?.seriesId === place.seriesId ? picture.drawn : null;
+  if (drawn === null) return fill([...head, line(picture?.trouble ?? 'Drawing...', 'quiet')], rows);
+  const stale = state.open.picture !== undefined ? ', drawing' : '';
+  const each = Math.floor((rows - head.length - 2) / 2);
+  const both = [false, true].flatMap((close) => {
+    const eyes = { ...state.pictureEyes, close, divider: null };
+    return panes({ ...state, pictureEyes: eyes }, drawn, look, columns, each, stale);
+  });
+  return fill([...head, ...both], rows);
+}
+
 /** The pictures with their names above. */
 function panes(state: State, drawn: DrawnPictures, look: Look, columns: number, rows: number, stale: string): Line[] {
   const { close, divider } = state.pictureEyes;
@@ -79,10 +94,7 @@ function profile({ pair, look: object }: DrawnPictures, look: Look, columns: num
   });
   const mm = Math.hypot(toMm[0] - fromMm[0], toMm[1] - fromMm[1]).toFixed(0);
   return [
-    line(
-      fitText(`profile of ${mm} mm across the discs: two curves, preset and now`, columns, look.glyphs.ellipsis),
-      'quiet',
-    ),
+    line(fitText(`profile of ${mm} mm across the discs: two curves, preset and now`, columns, look.glyphs.ellipsis), 'quiet'),
     ...plot.lines(),
   ];
 }

@@ -1,6 +1,7 @@
 import { rangeChart, usualFigures } from '../session/chart.js';
 import { consequences } from '../session/consequences.js';
 import { fieldHere } from '../session/hands/series-commands.js';
+import { showsPictures } from '../session/keep-drawing.js';
 import type { State } from '../session/state.js';
 import { cautionPane, wholeCautions } from './caution-pane.js';
 import { chartPane } from './chart-pane.js';
@@ -8,6 +9,7 @@ import { consequencePane, nextStepPane } from './consequence-pane.js';
 import { beside, blank, fill, type Line, line } from './line.js';
 import type { Look } from './look.js';
 import { parameterPane } from './parameter-pane.js';
+import { besidePane } from './picture-screen.js';
 import { typeTheseScreen } from './text-screen.js';
 
 /** One series is adjusted: parameters, consequences, the next step, cautions; wide screens show the range chart and what to type too. */
@@ -31,7 +33,10 @@ export function seriesScreen(state: State, look: Look, columns: number, rows: nu
   const rightColumns = columns - leftColumns - middleColumns - 2;
   const chartRows = Math.min(upper - 12, 24);
   const right = [
-    ...fill(sideChart(state, look, rightColumns, chartRows), chartRows),
+    ...fill(
+      showsPictures(state) ? besidePane(state, look, rightColumns, chartRows) : sideChart(state, look, rightColumns, chartRows),
+      chartRows,
+    ),
     blank,
     line('Cautions, worst first', 'quiet'),
     ...wholeCautions(state, look, rightColumns, upper - chartRows - 2),

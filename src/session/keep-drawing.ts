@@ -1,13 +1,20 @@
 import { type Change, only } from './change.js';
 import type { Effect } from './message.js';
+import { isWide } from './picture-eyes.js';
 import { pictureKey, pictureProblemOf } from './picture-view.js';
 import type { State } from './state.js';
 
-/** Asks for the pictures that the picture screen shows, when what they hang on changed. They are asked for on no other screen. */
+/** True where pictures are on the screen: on their own, or beside the series of a wide screen when a person asked for that. */
+export function showsPictures({ place, pictureEyes, size }: State): boolean {
+  return place.screen === 'picture' || (place.screen === 'series' && pictureEyes.beside && isWide(size));
+}
+
+/** Asks for the pictures that the screen shows, when what they hang on changed. They are asked for on no other screen. */
 export function keepDrawing(before: State, after: State): Change {
   const { place, picture } = after;
-  if (place.screen !== 'picture') return only(after);
-  if (before.session === after.session && before.place === place && before.search === after.search && before.rules === after.rules)
+  if (!showsPictures(after)) return only(after);
+  const shown = showsPictures(before);
+  if (shown && before.session === after.session && before.place === place && before.search === after.search && before.rules === after.rules)
     return only(after);
   const problem = pictureProblemOf(after);
   if (problem === null) return only(after);

@@ -26,7 +26,7 @@ import {
 } from './hands/order-commands.js';
 import { showRecords } from './hands/past-record-commands.js';
 import { practice } from './hands/patient-commands.js';
-import { moveDivider, showPicture, turnClose, turnDivider } from './hands/picture-commands.js';
+import { moveDivider, showPicture, turnBeside, turnClose, turnDivider } from './hands/picture-commands.js';
 import { showPresets } from './hands/preset-commands.js';
 import { saveAsPreset, savePage, saveRecord, turnRecordPane } from './hands/record-commands.js';
 import { moveInScanners, takeScanner } from './hands/scanner-commands.js';
@@ -195,6 +195,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('d', 'd', 'divider', 'Both side by side, or one picture: the preset left of a divider.', turnDivider),
     row(['-', 'left'], 'left right', 'move', 'Moves the divider; minus and plus do the same.', moveDivider(-0.05)),
     row(['+', '=', 'right'], '', '', '', moveDivider(0.05)),
+    row('k', 'k', '', 'Keeps the pictures beside the series on a wide screen, in the place of the range chart; or no longer.', turnBeside),
     row('s', 's', '', 'Back to where this was opened.', back),
     ...everywhere,
   ],

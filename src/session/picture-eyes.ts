@@ -17,7 +17,14 @@ export interface PictureEyes {
   readonly close: boolean;
   /** One picture with the preset to the left of this share of its width; null shows both side by side. */
   readonly divider: number | null;
+  /** On a wide screen the pictures stand beside the series, in the place of the range chart. */
+  readonly beside: boolean;
 }
 
 /** Both pictures, whole. */
-export const plainEyes: PictureEyes = { close: false, divider: null };
+export const plainEyes: PictureEyes = { close: false, divider: null, beside: false };
+
+/** True for a screen on which a series, its range chart and more stand together. */
+export function isWide({ columns, rows }: { readonly columns: number; readonly rows: number }): boolean {
+  return columns >= 150 && rows >= 40;
+}

@@ -7,8 +7,8 @@ import { frontSet, wayHere } from './ways.js';
 
 /** What stands beside the preset: the way or the point of the front that the picture was opened from, else the series as it is now. */
 export function pictureSet(state: State): { readonly set: GivenParameters; readonly of: 'now' | 'way' } {
-  const { back, seriesId } = state.place;
-  const from = back.at(-1);
+  const { back, screen, seriesId } = state.place;
+  const from = screen === 'picture' ? back.at(-1) : screen;
   const set = from === 'ways' ? wayHere(state)?.listed.way.given : from === 'front' ? frontSet(state) : null;
   return set == null ? { set: sessionSeries(state, seriesId).set, of: 'now' } : { set, of: 'way' };
 }

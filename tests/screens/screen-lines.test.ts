@@ -125,6 +125,7 @@ function everyScreen(id: string): readonly (readonly [string, State])[] {
     ['picture', withPicture(press(series, 's'))],
     ['picture, close, with a divider', withPicture(press(series, 's', 'z', 'd', 'right'))],
     ['picture, failed', pictureFailed(press(series, 's'))],
+    ['series, pictures kept beside', press(withPicture(press(at(series, 160, 50), 's', 'k')), 'escape')],
     ['help', press(series, 'h')],
     ['scanner, of a session', atScanner(onScanners(order), 'demo-3t head')],
     ...carryScreens(order),

@@ -4,6 +4,7 @@ import { pictureProblemOf } from '../../src/session/picture-view.js';
 import type { State } from '../../src/session/state.js';
 import { update } from '../../src/session/update.js';
 import { readObjectFile } from '../../src/study/read-object-file.js';
+import { press, sessionOn } from './invented-state.js';
 
 const objects = readdirSync('objects').map((name) => {
   const read = readObjectFile(readFileSync(`objects/${name}`, 'utf8'), name);
@@ -39,4 +40,13 @@ export function pictureFailed(state: State): State {
     { code: 'nothing-to-draw', path: '', message: 'There is no picture: TE is not shorter than TR.', hint: 'Change the timing.' },
   ];
   return update(state, { kind: 'answer', ask: state.picture?.ask ?? -1, answer: { kind: 'failed', problems } })[0];
+}
+
+/** A problem that is quickly drawn, with its object. */
+export function knownProblem(): { readonly problem: PictureProblem; readonly object: (typeof objects)[number] } {
+  const dwi = press(sessionOn('liver-3t'), 'p', '11', 'enter', 'escape', 'end', 'enter', 's');
+  const problem = pictureProblemOf(dwi);
+  const object = objects.find(({ id }) => id === 'liver');
+  if (problem === null || object === undefined) throw new Error('no session');
+  return { problem, object };
 }

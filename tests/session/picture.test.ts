@@ -60,6 +60,16 @@ describe('pictures in the interface', () => {
     expect(shown.past).toBe(dwi.past);
   });
 
+  it('stand beside the series of a wide screen once they are kept there, and follow the edits', () => {
+    const wide = { ...onField(dwi, 'sliceThicknessMm'), size: { columns: 160, rows: 50 } };
+    const kept = press(wide, 's', 'k', 'escape');
+    expect(kept.place.screen).toBe('series');
+    const [, effects] = update(kept, key('+'));
+    expect(asked(effects)).toHaveLength(1);
+    expect(asked(update({ ...kept, size: { columns: 100, rows: 30 } }, key('+'))[1])).toEqual([]);
+    expect(asked(update(press(wide, 's', 'k', 'k', 'escape'), key('+'))[1])).toEqual([]);
+  });
+
   it('say each difference in a sentence, and what failed', () => {
     const thin = press(press(onField(dwi, 'sliceThicknessMm'), '3', 'enter'), 's');
     const said = pictureSentences(thin);

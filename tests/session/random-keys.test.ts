@@ -1,18 +1,25 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { inventedRecords } from '../../scripts/invented-records.js';
 import { parameterKeys } from '../../src/calc/parameters.js';
 import { answerSearch } from '../../src/effects/answer-search.js';
 import { headlineOf } from '../../src/screens/common-lines.js';
 import { lineText } from '../../src/screens/line.js';
 import { screenLines } from '../../src/screens/screen-lines.js';
 import { type BudgetProblem, planBudget } from '../../src/search/budget.js';
+import { type CarryProblem, carryStudy } from '../../src/search/carry-study.js';
 import type { SearchProblem } from '../../src/search/problem-to-solve.js';
 import { draftOf } from '../../src/session/draft.js';
-import type { Effect, Message } from '../../src/session/message.js';
-import type { State } from '../../src/session/state.js';
+import type { Answer, Effect, Message, PresetChoice } from '../../src/session/message.js';
+import { shelfScreens } from '../../src/session/shelf-headline.js';
+import type { ScreenName, State } from '../../src/session/state.js';
 import { draftNow, update } from '../../src/session/update.js';
+import type { SessionRecord } from '../../src/study/record.js';
+import { isMeantRecord, namedRecord } from '../../src/study/record-meant.js';
+import { RecordCounts } from '../../src/study/record-report.js';
+import type { Study } from '../../src/study/study.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
-import { keyOf } from './invented-state.js';
+import { keyOf, presetChoice } from './invented-state.js';
 import { startWithScanners } from './shipped-scanners.js';
 
 const named = [
@@ -36,11 +43,21 @@ const keys = named.concat([...'abcdefghijklmnopqrstuvwxyz0123456789.-+=/*^()% ?:
 
 const look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader: false } as const;
 
+/** Where somebody begins: in the running order, among the presets, or with a release that lacks its word alone. */
+const beginnings = [
+  [],
+  ['m', 'enter', 'enter', 'escape'],
+  ['m', 'tab', 'tab', 'escape', 'enter'],
+  ['enter', 'down', '+', 'm', 'enter', 'r', 'down', 'down', 'enter', 'paste physicist', 'enter', 'enter', 'paste short', 'enter'],
+] as const;
+
 /** A step of somebody at the keys, of the clock, of the window; by name, so that a failure can be read. */
 const step = fc.oneof(
   { weight: 40, arbitrary: fc.constantFrom(...keys) },
   { weight: 20, arbitrary: fc.constantFrom('down', '+', '-', 'down', 'up', 'enter', 'u', 'r') },
   { weight: 4, arbitrary: fc.constantFrom('f', 'a', 'b', 'm', 'c', 'k', '1', '2', '9') },
+  { weight: 3, arbitrary: fc.constantFrom('o', 't', 'tab', 'n', 's', 'w', 'right') },
+  { weight: 5, arbitrary: fc.constantFrom('m', 'tab', 'd', 'r', 't', ' ', 'end', 'paste RELEASE', 'paste physicist', 'paste 2') },
   { weight: 2, arbitrary: fc.constantFrom('wait 500', 'wait 20000') },
   { weight: 1, arbitrary: fc.constantFrom('size 80 24', 'size 160 50', 'size 60 15', 'size 100 30') },
 );
@@ -49,6 +66,7 @@ function messageOf(name: string, { nowMs }: State): Message {
   const [word, first, second] = name.length > 1 ? name.split(' ') : [name];
   if (word === 'wait') return { kind: 'tick', atMs: nowMs + Number(first) };
   if (word === 'size') return { kind: 'size', columns: Number(first), rows: Number(second) };
+  if (word === 'paste' && first !== undefined) return { kind: 'key', key: { name: 'paste', text: first }, atMs: nowMs + 137 };
   return { kind: 'key', key: name === 'paste' ? { name, text: '38 cm\n' } : keyOf(name), atMs: nowMs + 137 };
 }
 
@@ -89,6 +107,59 @@ function planFor(problem: BudgetProblem): ReturnType<typeof planBudget> {
   return known;
 }
 
+const records = [...inventedRecords(40, 11)];
+
+const shipped = new Map(['liver-3t', 'lumbar-spine-1.5t', 'brain-3t', 'heart-cine-3t'].map((id) => [id, presetChoice(id)]));
+
+/** A revision of a shipped preset at the site; under an id that was typed, of the liver. */
+function revised(id: string, revision: number): PresetChoice {
+  const known = shipped.get(id) ?? presetChoice('liver-3t');
+  return { ...known, origin: 'site', study: { ...known.study, id, revision, status: 'reviewed', notes: `revision ${revision}` } };
+}
+
+/** What the world answers to the screens of presets and records; sometimes somebody else released first. */
+function shelfAnswer(effect: Effect): Answer | null {
+  switch (effect.kind) {
+    case 'read-revisions':
+      return { kind: 'revisions', presets: [2, 1].map((revision) => revised(effect.id, revision)), notes: ['One file is wrong'] };
+    case 'check-release':
+      return { kind: 'checked', findings: [], newest: revised(effect.study.id, 2).study };
+    case 'release': {
+      const [theirs, base] = [effect.basedOn + 1, effect.basedOn].map((revision) => revised(effect.study.id, revision).study);
+      if (effect.ask % 2 === 0) return { kind: 'taken', theirs: theirs as Study, base: base as Study };
+      return { kind: 'released', study: { ...effect.study, released: { ...effect.said, day: '2026-03-02' } }, path: '/site' };
+    }
+    case 'list-records':
+    case 'report-records': {
+      const meant = records.filter((record) => isMeantRecord(namedRecord(record), effect.typed));
+      // Sometimes there are more than a list holds.
+      const counts = { records: 42, meant: meant.length + (effect.ask % 3), damaged: 1, stopped: false, notes: [] };
+      if (effect.kind === 'list-records') {
+        const place = { file: '/r', revision: 1, series: 5, rewritten: 1 };
+        const rows = meant.map((record, at) => ({ ...namedRecord(record), ...place, line: at + 1, id: record.id }));
+        return { kind: 'record-list', list: { ...counts, typed: effect.typed, rows } };
+      }
+      const report = new RecordCounts();
+      for (const record of meant) report.add(record);
+      const shown = { report: report.report(), files: 1, records: 42, damaged: 1, chosen: effect.typed, now: new Map() };
+      return { kind: 'record-report', report: { ...counts, shown } };
+    }
+    case 'read-record':
+      return { kind: 'one-record', record: records[effect.line % records.length] as SessionRecord };
+    default:
+      return null;
+  }
+}
+
+const knownCarries = new Map<string, ReturnType<typeof carryStudy>>();
+
+/** What comes out for the first target stands in for every other: the keys are tried here. */
+function carriedFor({ carry, circumstances }: CarryProblem): ReturnType<typeof carryStudy> {
+  const known = knownCarries.get(carry.id) ?? carryStudy(carry, circumstances);
+  knownCarries.set(carry.id, known);
+  return known;
+}
+
 /** Answers what was asked, as the world might: well or badly. */
 function answerTo(effect: Effect, well: boolean): Message | null {
   if (!('ask' in effect)) return null;
@@ -103,7 +174,9 @@ function answerTo(effect: Effect, well: boolean): Message | null {
   if (effect.kind === 'read-rules') return { kind: 'answer', ask, answer: { kind: 'rules', rules: new Map() } };
   if (effect.kind === 'search') return { kind: 'answer', ask, answer: { kind: 'ways', ways: waysFor(effect.problem) } };
   if (effect.kind === 'plan') return { kind: 'answer', ask, answer: { kind: 'plan', plan: planFor(effect.problem) } };
-  return { kind: 'answer', ask, answer: { kind: 'done', words: 'Saved' } };
+  if (effect.kind === 'carry') return { kind: 'answer', ask, answer: { kind: 'carried', carried: carriedFor(effect.problem) } };
+  const shelf = shelfAnswer(effect);
+  return { kind: 'answer', ask, answer: shelf ?? { kind: 'done', words: 'Saved' } };
 }
 
 /** What does not hold of a state although it must: the session can explain itself. */
@@ -137,7 +210,7 @@ function faults(state: State): string[] {
       'limits are positive',
     );
     must((session.contrastAtMs !== null) === (limits.contrastGiven === true), 'contrast and its clock agree');
-  } else must(['start', 'help', 'scanner'].includes(place.screen), `no session on ${place.screen}`);
+  } else must(['start', 'help', 'scanner', 'carry', 'why', ...shelfScreens].includes(place.screen), `no session on ${place.screen}`);
   const { search, plan, open } = state;
   must(
     search === null || session === null || session.series.some(({ id }) => id === search.seriesId),
@@ -145,7 +218,11 @@ function faults(state: State): string[] {
   );
   must(open.search === undefined || search?.ask === open.search, 'only the newest search is waited for');
   must(open.plan === undefined || plan?.ask === open.plan, 'only the newest plan is waited for');
-  must(open.search === undefined || open.plan === undefined, 'one worker does one thing');
+  must([open.search, open.plan, open.carry].filter((ask) => ask !== undefined).length <= 1, 'one worker does one thing');
+  must(place.screen !== 'carry' || state.carry !== null, 'the carry screen has a preset');
+  const readings = [open.list, open['one-record'], open.report].filter((ask) => ask !== undefined);
+  must(readings.length <= 1, 'one reading of records at a time');
+  must(open.release === undefined || state.shelf.release !== null, 'what is being released is known');
   must(!place.back.includes(place.screen), 'back leads elsewhere');
   const { text } = headlineOf(state);
   must(text !== '' && !/NaN|undefined|Infinity|null/.test(text), `the verdict is words: ${text}`);
@@ -155,13 +232,16 @@ function faults(state: State): string[] {
 describe('update under random keys', () => {
   it('takes 100,000 keys without an exception and without a state the session cannot explain', () => {
     let count = 0;
+    const seen = new Set<ScreenName>();
     fc.assert(
       fc.property(
         fc.array(step, { minLength: 500, maxLength: 500 }),
         fc.boolean(),
         fc.constantFrom(['liver-3t'], ['lumbar-spine-1.5t'], ['brain-3t', 'heart-cine-3t']),
-        (messages, well, presets) => {
-          let state = startWithScanners(presets);
+        fc.constantFrom(...beginnings),
+        (messages, well, presets, beginning) => {
+          const start = startWithScanners(presets);
+          let state: State = { ...start, defaults: { ...start.defaults, release: { folder: '/site', secondRole: false } } };
           const send = (next: Message) => {
             const [changed, effects] = update(state, next);
             state = changed;
@@ -171,9 +251,10 @@ describe('update under random keys', () => {
             }
           };
           send({ kind: 'key', key: keyOf('enter'), atMs: 1 });
-          for (const next of messages) {
+          for (const next of [...beginning, ...messages]) {
             send(messageOf(next, state));
             count += 1;
+            seen.add(state.place.screen);
             const found = faults(state);
             if (found.length > 0) expect(found).toEqual([]);
             if (count % 50 !== 0) continue;
@@ -191,5 +272,7 @@ describe('update under random keys', () => {
       { numRuns: 200, endOnFailure: true },
     );
     expect(count).toBeGreaterThanOrEqual(100_000);
+    // They did go there: presets, a comparison, a release, records, the report.
+    expect([...shelfScreens, 'scanner', 'carry'].filter((screen) => !seen.has(screen as ScreenName))).toEqual([]);
   }, 600_000);
 });

@@ -1,11 +1,55 @@
-import { originWords, type PresetRow, presetRow, presetRows, releasedWords, revisionRow, revisionRows } from '../session/preset-rows.js';
+import {
+  comparedWith,
+  originWords,
+  type PresetRow,
+  presetRow,
+  presetRows,
+  releasedWords,
+  revisionRow,
+  revisionRows,
+} from '../session/preset-rows.js';
+import { comparedText, pageColumns } from '../session/shelf-text.js';
 import type { State } from '../session/state.js';
+import type { Study } from '../study/study.js';
 import { fitText } from '../terminal/text-width.js';
-import { blank, fill, type Line, line, span, windowOf } from './line.js';
+import { beside, blank, fill, type Line, line, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
 
-/** The presets by region and field strength: find by typing, Enter shows the revisions. */
+/** The presets by region and field strength: find by typing, Enter shows the revisions. A wide screen shows what is in the preset, too. */
 export function presetsScreen(state: State, look: Look, columns: number, rows: number): Line[] {
+  const row = presetRow(state);
+  if (!isWide(columns) || row === undefined) return presetList(state, look, columns, rows);
+  return besideList(presetList(state, look, pageColumns, rows), contents(row.study, columns - pageColumns - 3), look, rows);
+}
+
+function isWide(columns: number): boolean {
+  return columns >= 2 * pageColumns + 1;
+}
+
+function besideList(list: readonly Line[], right: readonly Line[], look: Look, rows: number): Line[] {
+  const shown = right.length <= rows ? right : [...right.slice(0, rows - 1), line(`${right.length - rows + 1} more lines: Enter`, 'quiet')];
+  const indented = fill(shown, rows).map((each) => [span(' '), ...each]);
+  return beside(list, indented, pageColumns, look.glyphs.verticalRule, look.glyphs.ellipsis);
+}
+
+/** What a preset holds, in words. */
+function contents(study: Study, columns: number): Line[] {
+  const series = study.series.map(({ id, title, mustKeep }) => {
+    const kept = mustKeep.length === 0 ? '' : `, ${mustKeep.length} must-keep${mustKeep.length === 1 ? '' : 's'}`;
+    return `${id.padEnd(13)}${title}${kept}`;
+  });
+  return [
+    line(study.title, 'bold'),
+    line(`${study.id} revision ${study.revision}, ${study.status}, ${study.fieldT} T`),
+    line(`Released: ${releasedWords(study)}`),
+    blank,
+    ...series.map((words) => line(words)),
+    blank,
+    ...wrap(study.notes, columns).map((words) => line(words, 'quiet')),
+  ];
+}
+
+function presetList(state: State, look: Look, columns: number, rows: number): Line[] {
   const list = presetRows(state);
   const here = presetRow(state);
   const typed: Line = [span('Type to find: '), span(state.shelf.narrowing, 'bold'), { text: ' ', style: 'inverse', cursor: true }];
@@ -36,8 +80,16 @@ export function presetsScreen(state: State, look: Look, columns: number, rows: n
   return fill([...head, ...body], rows);
 }
 
-/** The revisions of one preset: status, who by role, when, why. */
+/** The revisions of one preset: status, who by role, when, why. A wide screen shows what differs from the one before, too. */
 export function revisionsScreen(state: State, look: Look, columns: number, rows: number): Line[] {
+  const row = revisionRow(state);
+  const from = row === undefined ? undefined : comparedWith(state, row);
+  if (!isWide(columns) || row === undefined || from === undefined) return revisionList(state, look, columns, rows);
+  const text = comparedText(from, row.study, false).map(({ text: words, heading }) => line(words, heading ? 'bold' : 'plain'));
+  return besideList(revisionList(state, look, pageColumns, rows), text, look, rows);
+}
+
+function revisionList(state: State, look: Look, columns: number, rows: number): Line[] {
   const { revisions, marked } = state.shelf;
   const list = revisionRows(state);
   const here = revisionRow(state);

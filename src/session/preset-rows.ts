@@ -77,8 +77,14 @@ export function revisionRow(state: State): PresetRow | undefined {
   return rows.find(({ field }) => field === state.place.fields.revisions) ?? rows[0];
 }
 
+/** What a revision is compared with: the marked one, of whatever preset, else the one before. */
+export function comparedWith(state: State, row: PresetRow): Study | undefined {
+  const { marked } = state.shelf;
+  return marked !== null && marked !== row.study ? marked : rowBefore(state, row);
+}
+
 /** The revision before one of the rows: the next below; of the session what it was begun on. */
-export function rowBefore(state: State, row: PresetRow): Study | undefined {
+function rowBefore(state: State, row: PresetRow): Study | undefined {
   if (row.origin === 'session')
     return revisionRows(state).find(({ study, origin }) => origin !== 'session' && study.revision <= row.study.revision)?.study;
   return revisionRows(state).find(({ study, origin }) => origin !== 'session' && study.revision < row.study.revision)?.study;

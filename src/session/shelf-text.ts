@@ -1,14 +1,27 @@
 import { recordedDifference } from '../study/preset-diff.js';
 import { recordPage } from '../study/record-print.js';
+import type { Study } from '../study/study.js';
 import { differencePage, seriesDifferenceLines } from './difference-page.js';
 import { reportPage } from './report-page.js';
 import type { State } from './state.js';
 import type { TextPage } from './text-page.js';
+import { wrapText } from './wrap-text.js';
 
 /** One line of a text, and whether it is a heading. */
 export interface TextLine {
   readonly text: string;
   readonly heading: boolean;
+}
+
+/** Differences by their two sides. */
+const pairs = new WeakMap<Study, WeakMap<Study, object>>();
+
+/** What differs between two studies, as lines. */
+export function comparedText(from: Study, to: Study, reader: boolean): readonly TextLine[] {
+  const others = pairs.get(from) ?? new WeakMap<Study, object>();
+  const pair = others.get(to) ?? {};
+  pairs.set(from, others.set(to, pair));
+  return textOf(pair, reader, (page) => differencePage(from, to, page));
 }
 
 /** Texts by what they were made from: they are asked for with every key. */
@@ -18,8 +31,7 @@ const known = new WeakMap<object, Map<string, readonly TextLine[]>>();
 export function shelfText(state: State, reader: boolean): readonly TextLine[] {
   const { screen } = state.place;
   const { compared, record, report } = state.shelf;
-  if (screen === 'compare' && compared !== null)
-    return textOf(compared, reader, (page) => differencePage(compared.from, compared.to, page));
+  if (screen === 'compare' && compared !== null) return comparedText(compared.from, compared.to, reader);
   if (screen === 'past-record' && record?.read != null) {
     const past = record.read;
     return textOf(past, reader, (page) => [
@@ -52,7 +64,10 @@ function textOf(source: object, reader: boolean, make: (page: TextPage) => reado
         return text;
       },
     };
-    const made = make(page).map((text) => ({ text, heading: headings.has(text) }));
+    const made = make(page)
+      // Rows of a table keep their columns, headings are told apart by their text.
+      .flatMap((text) => (text.length <= page.width || headings.has(text) || /\S {2,}\S/.test(text) ? [text] : wrapText(text, page.width)))
+      .map((text) => ({ text, heading: headings.has(text) }));
     lines = reader ? made.filter(({ text }) => text.trim() !== '') : made;
     texts.set(name, lines);
   }

@@ -149,6 +149,15 @@ describe('the screens of presets and records', () => {
     for (const [row, line] of first.slice(0, 40).entries()) expect(wide[row + 2]?.startsWith(line.trimEnd())).toBe(true);
   });
 
+  it('a wide screen shows what a preset holds, and what a revision changed, beside the lists', () => {
+    const presets = textOf(sized(named('presets'), 160, 50)).join('\n');
+    expect(presets).toMatch(/liver-3t\s+3.*\|/);
+    expect(presets).toContain('pdfs-sag     Proton density, fat-suppressed, 1 must-keep');
+    const revisions = textOf(sized(named('revisions'), 160, 50)).join('\n');
+    expect(revisions).toMatch(/\| slice thickness\s+3 mm\s+4 mm/);
+    expect(textOf(sized(named('revisions'), 100, 30)).join('\n')).not.toContain('slice thickness');
+  });
+
   it('a report longer than the screen is scrolled to its end and no further', () => {
     const state = named('report');
     const end = press(state, 'end');

@@ -1,5 +1,5 @@
 import { type Command, neighbour, only, open, pointAt, say } from '../change.js';
-import { presetRow, presetRows, revisionRow, revisionRows, rowBefore } from '../preset-rows.js';
+import { comparedWith, presetRow, presetRows, revisionRow, revisionRows } from '../preset-rows.js';
 import type { State } from '../state.js';
 import { back } from './common-commands.js';
 import { saveAsPreset } from './record-commands.js';
@@ -72,8 +72,7 @@ export const markRevision: Command = (state) => {
 export const compareRevisions: Command = (state) => {
   const row = revisionRow(state);
   if (row === undefined) return only(say(state, 'The revisions are being read'));
-  const { marked } = state.shelf;
-  const from = marked !== null && marked !== row.study ? marked : rowBefore(state, row);
+  const from = comparedWith(state, row);
   if (from === undefined)
     return only(say(state, `Nothing stands before revision ${row.study.revision}: Space marks one, Enter on another compares`, 'trouble'));
   return only(pointAt(open({ ...state, shelf: { ...state.shelf, compared: { from, to: row.study } } }, 'compare'), '0'));

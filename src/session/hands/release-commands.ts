@@ -42,7 +42,7 @@ export const beginRelease: Command = (state) => {
 };
 
 /** The study as it would be written. */
-export function studyToRelease({ study, id, basedOn, newest }: ReleaseForm): Study {
+function studyToRelease({ study, id, basedOn, newest }: ReleaseForm): Study {
   return { ...study, id, status: 'reviewed', revision: (basedOn ?? newest?.revision ?? 0) + 1 };
 }
 

@@ -50,7 +50,7 @@ export async function withFreshExamples(text: string): Promise<string> {
     fresh = fresh.replace(block, () => `\`\`\`console\n$ ${commandLine}\n${output}\`\`\``);
   }
   for (const [block, columns, rows, presetId = '', keys = ''] of text.matchAll(screen)) {
-    const shown = screenAfter(Number(columns), Number(rows), presetId, keys);
+    const shown = await screenAfter(Number(columns), Number(rows), presetId, keys);
     fresh = fresh.replace(block, () => `\`\`\`text screen ${columns}x${rows} ${presetId}: ${keys}\n${shown}\`\`\``);
   }
   return fresh;

@@ -1,11 +1,19 @@
 import { readFileSync } from 'node:fs';
+import { loadParser } from '../src/formulas/load-parser.js';
+import type { ParseExpression } from '../src/formulas/parsed-node.js';
 import { lineText } from '../src/screens/line.js';
 import type { Look } from '../src/screens/look.js';
 import { screenLines } from '../src/screens/screen-lines.js';
+import { carryStudy } from '../src/search/carry-study.js';
+import type { Change } from '../src/session/change.js';
 import { openPreset } from '../src/session/hands/start-commands.js';
+import type { Effect, Message } from '../src/session/message.js';
 import { initialState } from '../src/session/state.js';
 import { update } from '../src/session/update.js';
 import { readPreset } from '../src/study/read-preset.js';
+import { readRules } from '../src/study/read-rules.js';
+import { readScannerFile } from '../src/study/read-scanner-file.js';
+import type { ScannerFile } from '../src/study/scanner-file.js';
 import { asciiGlyphs } from '../src/terminal/glyphs.js';
 
 const look: Look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader: false };
@@ -20,13 +28,44 @@ function pressed(keys: string): readonly { readonly name: string; readonly text?
   });
 }
 
+function shippedFile(name: string): string {
+  return readFileSync(new URL(`../${name}`, import.meta.url), 'utf8');
+}
+
+/** The scanners that ship. */
+function shippedScanners(): readonly ScannerFile[] {
+  return ['demo-1.5t.json', 'demo-3t.json'].map((name) => {
+    const read = readScannerFile(shippedFile(`scanners/${name}`), name);
+    if (!read.ok) throw new Error(read.problems[0]?.message);
+    return read.value;
+  });
+}
+
+/** What is answered to what a key asks for: rules are read, a preset is carried; searches are left open. */
+function answerTo(effect: Effect, parser: ParseExpression): Message | null {
+  if (effect.kind === 'read-rules')
+    return { kind: 'answer', ask: effect.ask, answer: { kind: 'rules', rules: readRules(effect.mustKeeps, parser) } };
+  if (effect.kind !== 'carry') return null;
+  const { carry, circumstances } = effect.problem;
+  return { kind: 'answer', ask: effect.ask, answer: { kind: 'carried', carried: carryStudy(carry, circumstances) } };
+}
+
 /** The screen of a shipped preset after some keys, in plain ASCII: what the example blocks of the README show. */
-export function screenAfter(columns: number, rows: number, presetId: string, keys: string): string {
-  const read = readPreset(readFileSync(new URL(`../presets/${presetId}.json`, import.meta.url), 'utf8'), `${presetId}.json`);
+export async function screenAfter(columns: number, rows: number, presetId: string, keys: string): Promise<string> {
+  const parser = await loadParser();
+  const read = readPreset(shippedFile(`presets/${presetId}.json`), `${presetId}.json`);
   if (!read.ok) throw new Error(read.problems[0]?.message);
-  const start = initialState({ role: '', scannerName: '', coilName: '' }, { columns, rows });
-  let [state] = openPreset(start, { study: read.value, hash: '', origin: 'shipped' });
-  for (const key of pressed(keys)) [state] = update(state, { kind: 'key', key, atMs: 0 });
+  let state = initialState({ role: '', scannerName: '', coilName: '' }, { columns, rows });
+  const take = ([next, effects]: Change) => {
+    state = next;
+    for (const effect of effects) {
+      const answer = answerTo(effect, parser);
+      if (answer !== null) take(update(state, answer));
+    }
+  };
+  take(update(state, { kind: 'scanners', scanners: shippedScanners(), notes: [] }));
+  take(openPreset(state, { study: read.value, hash: '', origin: 'shipped' }));
+  for (const key of pressed(keys)) take(update(state, { kind: 'key', key, atMs: 0 }));
   return `${screenLines(state, look)
     .map((each) => lineText(each).trimEnd())
     .join('\n')}\n`;

@@ -8,7 +8,16 @@ import type { Way } from '../search/way.js';
 import { sayRatio } from '../session/say-ratio.js';
 import { sayTime } from '../session/say-time.js';
 import { sayVerdict } from '../session/say-verdict.js';
-import { bindingInWords, changesInWords, exactInWords, kindWords, searchInWords, spareInWords, tradesInWords } from '../session/say-way.js';
+import {
+  bindingInWords,
+  bindingsInWords,
+  changesInWords,
+  exactInWords,
+  kindWords,
+  searchInWords,
+  spareInWords,
+  tradesInWords,
+} from '../session/say-way.js';
 import type { SeriesResult } from '../session/series-result.js';
 import type { Emphasis } from '../session/text-page.js';
 import { textTable } from '../session/text-table.js';
@@ -124,8 +133,10 @@ function oneWay(way: Way, title: string, page: Page, saidOnce: readonly string[]
 /** Where nothing fits: what binds, the nearest way, and what else the trade does. */
 function nothingLines({ nearest }: SearchResult, nothing: NothingFits | null, problem: SearchProblem, page: Page): string[] {
   const moves = otherMoves(problem);
+  const known = nothing === null ? null : bindingsInWords(nothing);
   return [
     page.emphasis('over', 'Nothing fits.'),
+    ...(known === null ? [] : wrapText(known, page.width)),
     ...(nothing?.bindings ?? []).flatMap((binding) => [
       ...wrapText(bindingInWords(binding, problem), page.width),
       ...oneWay(binding.way, 'the way that needs least', page),

@@ -24,7 +24,7 @@ export async function runWays(request: CommandRequest, io: CommandIo): Promise<E
   if (!read.ok) return complain(read, io);
   const problem = read.value;
   const result = search(problem);
-  const nothing = result.ways.length === 0 && result.proven ? nothingFits(problem) : null;
+  const nothing = result.ways.length === 0 && result.proven ? nothingFits(problem, {}, result.nearest) : null;
   const { study } = loaded.value;
   const start = startOf(problem);
   if (request.has('json')) {

@@ -10,7 +10,7 @@ import type { SearchAnswer, SearchAsk, SearchReply } from './search-protocol.js'
 /** The search, and where nothing fits what binds: the one path that worker and program share, so that both give the same. */
 export function answerSearch(problem: SearchProblem, control: SearchControl): SearchAnswer {
   const result = search(problem, control);
-  const nothing = result.ways.length === 0 && result.proven ? nothingFits(problem, control) : null;
+  const nothing = result.ways.length === 0 && result.proven ? nothingFits(problem, control, result.nearest) : null;
   return { result, nothing };
 }
 

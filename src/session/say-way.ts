@@ -1,7 +1,7 @@
 import { type FigureKey, figureTable } from '../calc/figures.js';
 import { type ParameterKey, parameterRow } from '../calc/parameters.js';
 import type { LimitKey } from '../search/limits.js';
-import type { Binding } from '../search/nothing-fits.js';
+import type { Binding, NothingFits } from '../search/nothing-fits.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { SearchResult } from '../search/search.js';
 import type { Change, Trade, Way } from '../search/way.js';
@@ -121,6 +121,14 @@ export function bindingInWords({ binders, needs }: Pick<Binding, 'binders' | 'ne
     return `${what}${need === null ? '' : `: needs ${say(need)}`}${given === undefined ? '' : `; the limit is ${say(given)}`}`;
   });
   return `What binds: ${parts.join(', and ')}.`;
+}
+
+/** What is known of what binds where nothing fits: whether it was searched to the end, and that nothing helps. */
+export function bindingsInWords({ bindings, proven }: Pick<NothingFits, 'bindings' | 'proven'>): string | null {
+  if (!proven) return 'What binds was not searched to the end: other limits may bind too.';
+  return bindings.length === 0
+    ? 'Without any of its limits there is still no way: what stands against it is an error of the series itself.'
+    : null;
 }
 
 /** How large the search was, and whether something better may exist. */

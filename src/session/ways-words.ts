@@ -6,7 +6,7 @@ import { changedKeys } from './changed-keys.js';
 import { consequences } from './consequences.js';
 import { resultNow, sessionSeries, studySeries } from './results.js';
 import { sayVerdict } from './say-verdict.js';
-import { bindingInWords, changesInWords, exactInWords, kindWords, tradesInWords } from './say-way.js';
+import { bindingInWords, bindingsInWords, changesInWords, exactInWords, kindWords, tradesInWords } from './say-way.js';
 import { pairedSeries } from './set-field.js';
 import type { State } from './state.js';
 import { missingReadings, seriesVerdicts } from './verdicts.js';
@@ -24,9 +24,10 @@ export function searchStatus(state: State): { readonly words: string; readonly l
   }
   const { ways, proven } = answer.result;
   const doubt = proven ? '' : '. NOT PROVEN: the search was stopped, a better one may exist';
+  const known = answer.nothing === null ? null : bindingsInWords(answer.nothing);
   if (ways.length === 0)
     return proven
-      ? { words: 'Nothing fits.', level: 'trouble' }
+      ? { words: known === null ? 'Nothing fits.' : `Nothing fits. ${known}`, level: 'trouble' }
       : { words: 'Stopped before anything was found. NOT PROVEN: a way may exist', level: 'attention' };
   const count = listedWays(answer).length;
   const few = count > firstWays && !allWays ? `, the first ${firstWays}; m shows all` : '';

@@ -1,14 +1,17 @@
 /**
- * Writes `dist/holdfast.js`: one minified ESM file in production mode, executable, with everything it needs inside.
+ * Writes `dist/program-*.cjs`: one minified file in production mode with everything it needs inside, and `dist/holdfast.js`,
+ * executable, which starts it with the code that V8 compiled of it (`dist/program-*.cache`, see `write-code-cache.ts`). The star is a
+ * digest of the program: compiled code can then not be taken for that of another one.
  * Whatever is imported dynamically stays in the same file and runs only when it is asked for, so that the commands
  * never start the interface, and formulas load late.
  */
 import { spawnSync } from 'node:child_process';
-import { existsSync } from 'node:fs';
-import { chmod, mkdir, rename, rm } from 'node:fs/promises';
+import { createHash } from 'node:crypto';
+import { chmod, mkdir, readdir, readFile, rename, rm } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
 import { type BuildOptions, build, type Plugin } from 'esbuild';
 import { inkDefines, replaceInkCaches } from '../src/terminal/ink-caches/ink-bundling.js';
+import { writeCodeCache } from './write-code-cache.js';
 
 const root = fileURLToPath(new URL('../', import.meta.url));
 
@@ -45,10 +48,18 @@ const shared: BuildOptions = {
   jsx: 'automatic',
   define: inkDefines,
   // CommonJS packages inside the bundle ask for Node's own modules by `require`.
-  banner: {
-    js: "#!/usr/bin/env node\nimport { createRequire as __createRequire } from 'node:module';\nconst require = __createRequire(import.meta.url);",
-  },
   logLevel: 'warning',
+};
+
+/** A worker is a module of its own; CommonJS packages in it ask for Node's own modules by `require`. */
+const workerBanner = "import { createRequire as __createRequire } from 'node:module';\nconst require = __createRequire(import.meta.url);";
+
+/** The program is one function that `src/launch.ts` calls: V8 keeps compiled code of scripts, not of modules. */
+const program: BuildOptions = {
+  format: 'cjs',
+  define: { ...inkDefines, 'import.meta.url': '__programUrl' },
+  banner: { js: '(function(require,__programUrl){' },
+  footer: { js: '})' },
 };
 
 /** Runs the script that compiles the schemas to code; the committed schema files stay as they are. */
@@ -58,18 +69,43 @@ function compileSchemas(): void {
 }
 
 /** Writes beside and renames, so that a program that starts meanwhile finds either the old file or the new one. */
-async function bundle(entry: string, target: string): Promise<void> {
+async function bundle(entry: string, target: string, options: BuildOptions): Promise<void> {
   const fresh = `${root}${target}.${process.pid}`;
   // The plugin counts what it replaced: a new one for each bundle.
-  await build({ ...shared, plugins: [parserAlone, replaceInkCaches()], entryPoints: [entry], outfile: fresh });
+  await build({ ...shared, ...options, plugins: [parserAlone, replaceInkCaches()], entryPoints: [entry], outfile: fresh });
   await chmod(fresh, 0o755);
   await rename(fresh, `${root}${target}`);
 }
 
+/** Bundles the program to a file named by its digest; the name without its ending. */
+async function bundleProgram(): Promise<string> {
+  const fresh = `dist/program.cjs.${process.pid}`;
+  await bundle('src/main.ts', fresh, program);
+  const digest = createHash('sha256')
+    .update(await readFile(`${root}${fresh}`))
+    .digest('hex')
+    .slice(0, 12);
+  await rename(`${root}${fresh}`, `${root}dist/program-${digest}.cjs`);
+  return `program-${digest}`;
+}
+
+/** Removes programs that `dist/holdfast.js` does not start. */
+async function removeOlder(): Promise<void> {
+  const started = await readFile(`${root}dist/holdfast.js`, 'utf8');
+  for (const file of await readdir(`${root}dist`)) {
+    const name = /^(program-[0-9a-f]+)\.(?:cjs|cache)$/.exec(file)?.[1];
+    if (name !== undefined && !started.includes(name)) await rm(`${root}dist/${file}`, { force: true });
+  }
+}
+
 compileSchemas();
 await mkdir(`${root}dist`, { recursive: true });
-await bundle('src/main.ts', 'dist/holdfast.js');
-const worker = 'src/effects/search-worker.ts';
-if (existsSync(`${root}${worker}`)) await bundle(worker, 'dist/search-worker.js');
-else await rm(`${root}dist/search-worker.js`, { force: true });
-await bundle('src/effects/picture-worker.ts', 'dist/picture-worker.js');
+await bundle('src/effects/search-worker.ts', 'dist/search-worker.js', { banner: { js: workerBanner } });
+await bundle('src/effects/picture-worker.ts', 'dist/picture-worker.js', { banner: { js: workerBanner } });
+const name = await bundleProgram();
+await writeCodeCache(root, name);
+await bundle('src/launch.ts', 'dist/holdfast.js', {
+  banner: { js: '#!/usr/bin/env node' },
+  define: { __programName: JSON.stringify(name) },
+});
+await removeOlder();

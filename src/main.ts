@@ -61,12 +61,16 @@ async function openOnTerminal(options: InterfaceOptions): Promise<number> {
 process.stdout.on('error', leaveQuietlyOnBrokenPipe);
 process.stderr.on('error', leaveQuietlyOnBrokenPipe);
 
-try {
-  // Not process.exit: what is still on its way to a pipe must arrive.
-  process.exitCode = await run(process.argv.slice(2), io);
-} catch (error) {
-  process.stderr.write(
-    `holdfast: a fault of the program itself: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
-  );
-  process.exitCode = 70;
+async function main(): Promise<void> {
+  try {
+    // Not process.exit: what is still on its way to a pipe must arrive.
+    process.exitCode = await run(process.argv.slice(2), io);
+  } catch (error) {
+    process.stderr.write(
+      `holdfast: a fault of the program itself: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
+    );
+    process.exitCode = 70;
+  }
 }
+
+void main();

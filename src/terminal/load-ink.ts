@@ -1,3 +1,5 @@
+import { startLayoutEngine } from './ink-caches/layout-engine.js';
+
 /** What is used of ink, and the colour library that ink draws with. */
 export interface LoadedInk {
   readonly render: typeof import('ink')['render'];
@@ -16,6 +18,7 @@ export async function loadInk(): Promise<LoadedInk> {
   if (fetchProperty?.configurable) delete (globalThis as { fetch?: unknown }).fetch;
   try {
     const [{ render }, { default: chalk }] = await Promise.all([import('ink'), import('chalk')]);
+    await startLayoutEngine();
     return { render, chalk };
   } finally {
     if (fetchProperty?.configurable) Object.defineProperty(globalThis, 'fetch', fetchProperty);

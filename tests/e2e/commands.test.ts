@@ -1,7 +1,7 @@
 import { spawn, spawnSync } from 'node:child_process';
 import { accessSync, constants, existsSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { join, resolve } from 'node:path';
+import { dirname, join, resolve } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { keyBytes } from './harness/key-bytes.js';
 import { start } from './harness/start.js';
@@ -36,18 +36,25 @@ function starts(module: keyof typeof startsOf, args: readonly string[]): number 
   return startsIn(reports, module);
 }
 
+/** The file that the bundle starts. */
+function programFile(): string {
+  const name = /program-[0-9a-f]+/.exec(readFileSync(bundle, 'utf8'))?.[0] ?? '';
+  return join(dirname(bundle), `${name}.cjs`);
+}
+
 /** How often the module that holds a text was started: V8's own count of its outermost function, from a coverage report. */
 function startsIn(reports: string, module: keyof typeof startsOf): number {
   const scripts = readdirSync(reports).flatMap(
     (name) => (JSON.parse(readFileSync(join(reports, name), 'utf8')) as { result: ScriptCoverage[] }).result,
   );
-  const script = scripts.find(({ url }) => url.endsWith('/dist/holdfast.js'));
-  const source = readFileSync(bundle, 'utf8');
+  const program = programFile();
+  const script = scripts.find(({ url }) => url.endsWith(program));
+  const source = readFileSync(program, 'utf8');
   const at = source.indexOf(startsOf[module]);
   if (script === undefined || at === -1) throw new Error(`no coverage of the bundle, or ${module} is not in it`);
   const around = script.functions
     .map(({ ranges }) => ranges[0] as CoverageRange)
-    .filter(({ startOffset, endOffset }) => startOffset > 0 && startOffset <= at && at < endOffset && endOffset < source.length - 1)
+    .filter(({ startOffset, endOffset }) => startOffset > 1 && startOffset <= at && at < endOffset)
     .sort((a, b) => a.startOffset - b.startOffset);
   if (around[0] === undefined) throw new Error(`no function of the bundle holds the start of ${module}`);
   return around[0].count;

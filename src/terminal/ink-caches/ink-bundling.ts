@@ -11,8 +11,11 @@
  * development tools: their package is not installed, and a bundled ink started with DEV=true in the environment would end at once,
  * looking for a file beside itself.
  */
+import { readFile } from 'node:fs/promises';
+import { dirname } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Plugin } from 'esbuild';
+import { layoutEngineFile } from './layout-engine.js';
 
 /** Production React, which does not keep what it drew. */
 export const inkDefines: Record<string, string> = { 'process.env.NODE_ENV': '"production"' };
@@ -48,6 +51,28 @@ export function replaceInkCaches(): Plugin {
       });
       build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]devtools\.js$/ }, () => ({ contents: '' }));
       build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]utils\.js$/ }, () => ({ contents: 'export const isDev = () => false;' }));
+      // Nothing may wait at the top level: the bundle is one function, and V8 keeps compiled code of such a one only.
+      build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]reconciler\.js$/ }, async ({ path }) => {
+        const own = await readFile(path, 'utf8');
+        const contents = own.replace(/await import\('\.\/devtools\.js'\);/, '').replace('await loadPackageJson()', '{}');
+        const waits = /^ {0,4}[^/*]*\bawait\b/m.test(contents.replace(/^async function loadPackageJson[\s\S]*?^}/m, ''));
+        return waits ? { errors: [{ text: "ink's reconciler.js waits at its top level, where it did not before" }] } : { contents };
+      });
+      build.onLoad({ filter: /[\\/]yoga-layout[\\/]dist[\\/]src[\\/]index\.js$/ }, ({ path }) => ({
+        contents: layoutEngineFile,
+        resolveDir: dirname(path),
+      }));
+      // Its first use compiles a pattern of all emoji, which takes tens of milliseconds: few screens ever ask for one.
+      build.onResolve({ filter: /^string-width$/ }, ({ path, pluginData, resolveDir }) =>
+        pluginData === 'own' ? undefined : { path, namespace: 'late', pluginData: resolveDir },
+      );
+      build.onLoad({ filter: /^string-width$/, namespace: 'late' }, ({ pluginData }) => ({
+        contents: `let own; export default (text, options) => (own ??= require('string-width').default)(text, options);`,
+        resolveDir: pluginData as string,
+      }));
+      build.onResolve({ filter: /^string-width$/, namespace: 'late' }, ({ path, resolveDir }) =>
+        build.resolve(path, { kind: 'import-statement', resolveDir, pluginData: 'own' }),
+      );
       build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]ink\.js$/ }, () => {
         inkSeen = true;
         return undefined;

@@ -4,10 +4,12 @@ import { back, quit, show } from './hands/common-commands.js';
 import {
   moveInRecords,
   narrowRecords,
+  saveSuggestions,
   showRecord,
   showRecords,
   showReport,
   stopReading,
+  suggestedStudies,
   widenRecords,
 } from './hands/past-record-commands.js';
 import {
@@ -92,5 +94,15 @@ export const shelfKeys = {
     row('?', '?', 'help', 'Help for this screen.', show('help')),
   ],
   'past-record': text(stop),
-  report: text(stop),
+  report: [
+    row(
+      's',
+      's',
+      'save drafts',
+      'Saves every suggestion as a draft preset of yours, with its evidence in its notes: a variant to review.',
+      saveSuggestions,
+      (state) => suggestedStudies(state).length > 0,
+    ),
+    ...text(stop),
+  ],
 } as const satisfies Partial<Record<ScreenName, readonly KeyRow[]>>;

@@ -10,6 +10,8 @@ import { startRows } from '../../src/session/start-list.js';
 import type { State } from '../../src/session/state.js';
 import { update } from '../../src/session/update.js';
 import { namedRecord } from '../../src/study/record-meant.js';
+import { RecordCounts } from '../../src/study/record-report.js';
+import { type PresetNow, suggestVariant } from '../../src/study/record-report-suggestion.js';
 import type { Study } from '../../src/study/study.js';
 import { keyOf, onField, after as play, presetChoice, press, startState } from './invented-state.js';
 
@@ -339,6 +341,29 @@ describe('records', () => {
     expect(stopped.state.place.screen).toBe('records');
     const answered = update(stopped.state, { kind: 'answer', ask, answer: list('') })[0];
     expect(press(answered, 'escape').place.screen).toBe('start');
+  });
+
+  it('what the report suggests is saved as drafts by one key, and only where it suggests something', () => {
+    const counts = new RecordCounts();
+    for (const record of inventedRecords(400, 2)) counts.add(record);
+    const report = counts.report();
+    const suggestions = report.presets[0]!.series.map((series) => suggestVariant(shipped.study, report.presets[0]!, series, new Map()));
+    const variants = suggestions.filter(({ kind }) => kind === 'variant').length;
+    expect(variants).toBeGreaterThan(0);
+    const withNow =
+      (now: ReadonlyMap<string, PresetNow>) =>
+      (effect: Effect): Answer | null => {
+        if (effect.kind !== 'report-records') return answer(effect);
+        const shown = { report, files: 1, records: 400, damaged: 0, chosen: '', now };
+        return { kind: 'record-report', report: { records: 400, meant: 400, damaged: 0, stopped: false, notes: [], shown } };
+      };
+    const none = withAnswers(startState(), withNow(new Map()), 'left', 'tab');
+    expect(play(none, [{ kind: 'key', key: keyOf('s'), atMs: 9e6 }]).effects).toEqual([]);
+    const some = withAnswers(startState(), withNow(new Map([['liver-3t', { study: shipped.study, suggestions }]])), 'left', 'tab');
+    const { effects, state } = play(some, [{ kind: 'key', key: keyOf('s'), atMs: 9e6 }]);
+    expect(effects.map(({ kind }) => kind)).toEqual(Array.from({ length: variants }, () => 'save-preset'));
+    expect(effects[0]).toMatchObject({ study: { status: 'draft', notes: expect.stringContaining('nobody has reviewed it') } });
+    expect(state.open.preset).toBe(state.asks);
   });
 
   it('one is shown planned against used, and the report is of what was typed', () => {

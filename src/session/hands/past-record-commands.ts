@@ -1,3 +1,5 @@
+import type { PresetNow } from '../../study/record-report-suggestion.js';
+import type { Study } from '../../study/study.js';
 import { type Change, type Command, goBack, neighbour, only, open, pointAt, say } from '../change.js';
 import { fieldOfRecord, recordRow, recordRows } from '../record-rows.js';
 import type { Shelf } from '../shelf.js';
@@ -75,3 +77,19 @@ export const showRecord: Command = (state) => {
 /** The report over the records that are meant by what was typed. */
 export const showReport: Command = (state) =>
   read(pointAt(open(state, 'report'), '0'), 'report', (ask) => ({ kind: 'report-records', ask, typed: state.shelf.typed }));
+
+/** The variants that the report suggests, as draft presets. */
+export function suggestedStudies({ shelf }: State): readonly Study[] {
+  const now = shelf.report?.read?.shown.now ?? new Map<string, PresetNow>();
+  return [...now.values()].flatMap(({ suggestions }) =>
+    suggestions.flatMap((one) => (one.kind === 'variant' ? [one.suggestion.study] : [])),
+  );
+}
+
+/** Saves every suggestion as a draft preset of this user, with its evidence in its notes; nothing else ever comes of one. */
+export const saveSuggestions: Command = (state) => {
+  const studies = suggestedStudies(state);
+  const last = state.asks + studies.length;
+  const saving = say({ ...state, asks: last, open: { ...state.open, preset: last } }, `Saving ${studies.length} drafts to review`);
+  return [saving, studies.map((study, at) => ({ kind: 'save-preset', ask: state.asks + 1 + at, study }) as const)];
+};

@@ -98,6 +98,8 @@ function rank(brief: string): number {
     return 1;
   if (brief === 'undo') return 2;
   if (brief === 'patient') return 3;
+  // Seldom wanted in a hurry: where the line is wide enough.
+  if (['on scanner', 'to field'].includes(brief)) return 6;
   return ['redo', 'order', 'end', 'quit', 'back'].includes(brief) ? 5 : 4;
 }
 

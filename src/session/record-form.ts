@@ -6,6 +6,7 @@ import { reasonCodes, reasonWords, recordReasons } from '../study/record-reasons
 import { initialsText } from '../study/record-text.js';
 import { outcomeWords, qualityWords, recommendationWords } from '../study/record-words.js';
 import { scaleFigures } from './consequences.js';
+import { type Equipment, equipmentNow, sayEquipment } from './equipment.js';
 import { choiceRow, type FormRow, textRow } from './form-row.js';
 import { readingRows } from './readings-form.js';
 import { outcomeOf, recordedSeries } from './record-of-session.js';
@@ -24,7 +25,9 @@ const outcomes = { ...outcomeWords, 'left-out': 'left out of the record' } as co
 export function recordForm(state: State): readonly FormRow[] {
   const { session } = state;
   if (session === null) return [];
+  const equipment = equipmentNow(state);
   return [
+    ...(equipment === null ? [] : [scannerRow(equipment)]),
     textRow('role', 'role', session.role, 'Who worked here: technologist, physicist. No name.', (before, role) => ({ ...before, role })),
     textRow(
       'initials',
@@ -42,6 +45,17 @@ export function recordForm(state: State): readonly FormRow[] {
     ),
     ...session.series.flatMap((series) => seriesRows(state, series)),
   ];
+}
+
+/** What the session was done on, as the record names it. */
+function scannerRow(equipment: Equipment): FormRow {
+  return {
+    field: 'scanner',
+    label: 'scanner',
+    shown: sayEquipment(equipment),
+    help: '',
+    kind: 'note',
+  };
 }
 
 function seriesRows(state: State, series: SessionSeries): FormRow[] {

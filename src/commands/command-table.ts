@@ -341,6 +341,7 @@ export const commandTable: readonly CommandRow[] = [
       { name: 'lines', value: null, help: 'JSON lines, as they are recorded' },
       { name: 'change-request', value: null, help: 'one page: what, why, how often, figures before and after' },
       { name: 'series', value: 'SERIES', help: 'series of the change request' },
+      { name: 'picture', value: 'FILE', help: 'PNG to go with the change request: what the change does to an invented object' },
     ],
     examples: ['holdfast records export --csv > records.csv', 'holdfast records export --change-request --preset liver-3t'],
     load: async () => (await import('./records-export.js')).runRecordsExport,

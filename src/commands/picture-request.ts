@@ -1,19 +1,15 @@
 import { resolve } from 'node:path';
-import type { Baseline } from '../calc/baseline.js';
-import type { Body } from '../calc/body.js';
-import type { Scanner } from '../calc/scanner.js';
 import { readQuantity } from '../formulas/read-quantity.js';
 import { usualTargetSnr } from '../picture/picture-pair.js';
-import { presetBaseline, type SeriesResult, seriesResult } from '../session/series-result.js';
+import { presetBaseline, seriesResult } from '../session/series-result.js';
 import { objectOfRegion, readObjectPath } from '../store/object-folder.js';
 import { shownValue } from '../study/clean-text.js';
-import type { ObjectFile } from '../study/object-file.js';
 import { readSetValues } from '../study/set-values.js';
-import type { Study } from '../study/study.js';
 import { type Attempt, wrongUse } from './attempt.js';
 import { chooseScanner } from './choose-scanner.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
+import type { SheetAsk } from './draw-sheet.js';
 import { exitCodes } from './exit-codes.js';
 import { loadJudgedPreset } from './load-judged-preset.js';
 import { refusedByStore } from './load-preset.js';
@@ -22,15 +18,7 @@ import { readBody, readField } from './read-named-numbers.js';
 import { seriesNamed } from './series-named.js';
 
 /** What `holdfast picture` is asked for, read and checked. */
-export interface PictureAsk {
-  readonly study: Study;
-  /** The series with its values set. */
-  readonly now: SeriesResult;
-  readonly baseline: Baseline;
-  readonly scanner: Scanner;
-  readonly body: Body;
-  readonly object: ObjectFile;
-  readonly targetSnr: number;
+export interface PictureAsk extends SheetAsk {
   /** Path of the PNG. */
   readonly out: string;
 }

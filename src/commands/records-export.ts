@@ -1,6 +1,8 @@
 import { changeRequest } from '../study/change-request.js';
 import { recordLine } from '../study/record-line.js';
+import type { Suggestion } from '../study/record-report-suggestion.js';
 import { recordsCsvHead, recordsCsvRows } from '../study/records-csv.js';
+import type { Study } from '../study/study.js';
 import { type Attempt, refuse, wrongUse } from './attempt.js';
 import type { CommandIo } from './command-io.js';
 import type { CommandRequest } from './command-request.js';
@@ -42,14 +44,26 @@ async function exportRequest(request: CommandRequest, io: CommandIo): Promise<Ex
   }
   const counted = await countRecords(request, io);
   if (!counted.ok) return complain(counted, io);
-  const text = requestText(counted.value, request.value('series'));
-  if (!text.ok) return complain(text, io);
-  io.write(pageOf(request, io).plain(text.value));
+  const asked = requestText(counted.value, request.value('series'));
+  if (!asked.ok) return complain(asked, io);
+  const picture = request.value('picture');
+  if (picture !== undefined) {
+    const written = await (await import('./request-picture.js')).writeRequestPicture(picture, asked.value, counted.value, io);
+    if (!written.ok) return complain(written, io);
+  }
+  io.write(pageOf(request, io).plain(asked.value.text));
   return counted.value.read.exit;
 }
 
+/** What is asked of the committee, and the page that asks it. */
+export interface ChangeRequest {
+  readonly text: string;
+  readonly study: Study;
+  readonly suggestion: Suggestion;
+}
+
 /** The page of the series that was asked for, else of the first that has a suggestion. */
-function requestText({ report, now }: CountedRecords, wanted: string | undefined): Attempt<string> {
+function requestText({ report, now }: CountedRecords, wanted: string | undefined): Attempt<ChangeRequest> {
   const preset = report.presets[0];
   const current = preset === undefined ? undefined : now.get(preset.preset);
   if (preset === undefined || current === undefined) return nothing('no record of this preset was found');
@@ -67,7 +81,12 @@ function requestText({ report, now }: CountedRecords, wanted: string | undefined
       continue;
     }
     const counts = preset.series.find((one) => one.series === series);
-    if (counts !== undefined) return { ok: true, value: changeRequest(current.study, preset, counts, suggested.suggestion) };
+    if (counts === undefined) continue;
+    const { study } = current;
+    return {
+      ok: true,
+      value: { text: changeRequest(study, preset, counts, suggested.suggestion), study, suggestion: suggested.suggestion },
+    };
   }
   return nothing(whys.join('; '));
 }

@@ -36,10 +36,20 @@ export async function runRecordsReport(request: CommandRequest, io: CommandIo): 
   return counted.value.read.exit;
 }
 
-async function writeHtml(path: string, { report, read, filter, now, settings }: CountedRecords, io: CommandIo): Promise<Attempt<void>> {
+async function writeHtml(path: string, counted: CountedRecords, io: CommandIo): Promise<Attempt<void>> {
+  const { report, read, filter, now, settings } = counted;
   const current = new Map([...now].flatMap(([id, { study }]) => (study === null ? [] : [[id, study.revision] as const])));
   const suggestions = [...now.values()].flatMap((one) => one.suggestions);
-  const text = reportHtml(report, { chosen: filterWords(filter), damaged: read.damaged, files: read.files.length, current, suggestions });
+  // Drawing is loaded where a page is written and nowhere else.
+  const pictures = await (await import('./suggestion-pictures.js')).suggestionPictures(counted, io);
+  const text = reportHtml(report, {
+    chosen: filterWords(filter),
+    damaged: read.damaged,
+    files: read.files.length,
+    current,
+    suggestions,
+    pictures,
+  });
   const written = await writeWhole(io.disk, path, text, fileModeOf(settings.settings), 'the page');
   return written.ok ? written : refusedByStore(written.problems);
 }

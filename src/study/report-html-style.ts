@@ -8,6 +8,7 @@ small { font-weight: normal; color: #444; }
 p, li { max-width: 72em; overflow-wrap: anywhere; }
 .plots { display: grid; grid-template-columns: repeat(auto-fill, minmax(340px, 1fr)); gap: 8px 24px; align-items: start; }
 figure { margin: 0 0 8px; max-width: 460px; break-inside: avoid; } figcaption { font-weight: 600; }
+figure.sheet { max-width: 720px; } img { display: block; width: 100%; height: auto; }
 svg { display: block; width: 100%; height: auto; }
 svg text { font: 12px system-ui, sans-serif; fill: #111; }
 .bar { fill: #0072b2; } .line { fill: none; stroke: #0072b2; stroke-width: 2; } .axis { stroke: #777; stroke-width: 1; }

@@ -19,6 +19,19 @@ export interface ReportSurroundings {
   /** Current revision by preset. */
   readonly current: ReadonlyMap<string, number>;
   readonly suggestions: readonly Suggested[];
+  /** Pictures of suggested variants, by `pictureOfVariant`. */
+  readonly pictures?: ReadonlyMap<string, ReportPicture>;
+}
+
+/** A picture inside the page: a PNG, and what it shows. */
+export interface ReportPicture {
+  readonly pngBase64: string;
+  readonly caption: string;
+}
+
+/** Name of the picture of a series' variant. */
+export function pictureOfVariant(preset: string, series: string): string {
+  return `${preset} ${series}`;
 }
 
 /** Rows of one plot; what is beyond is counted together. */
@@ -51,7 +64,7 @@ export function reportHtml(report: RecordReport, surroundings: ReportSurrounding
   ].join('\n');
 }
 
-function presetHtml(preset: PresetReport, { current, suggestions }: ReportSurroundings): string {
+function presetHtml(preset: PresetReport, { current, suggestions, pictures }: ReportSurroundings): string {
   const mixed = preset.revisions.length > 1 ? 'Revisions mixed: ' : 'Revision: ';
   return [
     '<section class="preset">',
@@ -61,7 +74,9 @@ function presetHtml(preset: PresetReport, { current, suggestions }: ReportSurrou
       'How often rewritten',
       preset.series.map(({ series, rewritten }) => ({ label: series, value: rewritten })),
     ),
-    ...preset.series.map((series) => seriesHtml(series, suggestionFor(series, preset, suggestions))),
+    ...preset.series.map((series) =>
+      seriesHtml(series, suggestionFor(series, preset, suggestions), pictures?.get(pictureOfVariant(preset.preset, series.series))),
+    ),
     '</section>',
   ].join('\n');
 }
@@ -74,7 +89,7 @@ function suggestionFor({ series }: SeriesReport, { preset }: PresetReport, sugge
   return null;
 }
 
-function seriesHtml(series: SeriesReport, suggestion: string | null): string {
+function seriesHtml(series: SeriesReport, suggestion: string | null, picture: ReportPicture | undefined): string {
   const { recorded, run, rewritten, repeated, givenUp, quality, prediction } = series;
   return [
     `<section class="series"><h3>${escapeHtml(series.series)}</h3>`,
@@ -82,6 +97,7 @@ function seriesHtml(series: SeriesReport, suggestion: string | null): string {
       `Run ${run}; rewritten ${shareWords(rewritten, recorded)}; repeated ${shareWords(repeated, recorded)}; given up ${shareWords(givenUp, recorded)}.`,
     ),
     ...(suggestion === null ? [] : [`<p class="variant"><strong>Variant to review.</strong> ${escapeHtml(suggestion)}</p>`]),
+    ...(suggestion === null || picture === undefined ? [] : [pictureHtml(picture)]),
     '<div class="plots">',
     barPlot('Reasons', rows(series.reasons.map(({ word, count }) => ({ label: reasonWords(word), value: count })))),
     ...series.parameters.flatMap(parameterPlots),
@@ -95,6 +111,12 @@ function seriesHtml(series: SeriesReport, suggestion: string | null): string {
     crossedHtml(series),
     '</section>',
   ].join('\n');
+}
+
+/** A picture with its caption; the bytes stand in the page itself. */
+function pictureHtml({ pngBase64, caption }: ReportPicture): string {
+  const words = escapeHtml(caption);
+  return `<figure class="sheet"><img alt="${words}" src="data:image/png;base64,${pngBase64.replace(/[^A-Za-z0-9+/=]/g, '')}"><figcaption>${words}</figcaption></figure>`;
 }
 
 interface Row {

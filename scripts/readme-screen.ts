@@ -7,7 +7,7 @@ import { screenLines } from '../src/screens/screen-lines.js';
 import { carryStudy } from '../src/search/carry-study.js';
 import type { Change } from '../src/session/change.js';
 import { openPreset } from '../src/session/hands/start-commands.js';
-import type { Effect, Message } from '../src/session/message.js';
+import type { Effect, Message, PresetChoice } from '../src/session/message.js';
 import { initialState } from '../src/session/state.js';
 import { update } from '../src/session/update.js';
 import { readPreset } from '../src/study/read-preset.js';
@@ -41,8 +41,10 @@ function shippedScanners(): readonly ScannerFile[] {
   });
 }
 
-/** What is answered to what a key asks for: rules are read, a preset is carried; searches are left open. */
-function answerTo(effect: Effect, parser: ParseExpression): Message | null {
+/** What is answered to what a key asks for: rules are read, a preset is carried, the preset is its own one revision; searches are left open. */
+function answerTo(effect: Effect, parser: ParseExpression, preset: PresetChoice): Message | null {
+  if (effect.kind === 'read-revisions')
+    return { kind: 'answer', ask: effect.ask, answer: { kind: 'revisions', presets: [preset], notes: [] } };
   if (effect.kind === 'read-rules')
     return { kind: 'answer', ask: effect.ask, answer: { kind: 'rules', rules: readRules(effect.mustKeeps, parser) } };
   if (effect.kind !== 'carry') return null;
@@ -55,16 +57,17 @@ export async function screenAfter(columns: number, rows: number, presetId: strin
   const parser = await loadParser();
   const read = readPreset(shippedFile(`presets/${presetId}.json`), `${presetId}.json`);
   if (!read.ok) throw new Error(read.problems[0]?.message);
+  const preset: PresetChoice = { study: read.value, hash: '', origin: 'shipped' };
   let state = initialState({ role: '', scannerName: '', coilName: '' }, { columns, rows });
   const take = ([next, effects]: Change) => {
     state = next;
     for (const effect of effects) {
-      const answer = answerTo(effect, parser);
+      const answer = answerTo(effect, parser, preset);
       if (answer !== null) take(update(state, answer));
     }
   };
   take(update(state, { kind: 'scanners', scanners: shippedScanners(), notes: [] }));
-  take(openPreset(state, { study: read.value, hash: '', origin: 'shipped' }));
+  take(openPreset(state, preset));
   for (const key of pressed(keys)) take(update(state, { kind: 'key', key, atMs: 0 }));
   return `${screenLines(state, look)
     .map((each) => lineText(each).trimEnd())

@@ -40,7 +40,7 @@ export function shelfHeadline(state: State): string {
     if (compared === null) return 'Nothing to compare';
     const { from, to } = compared;
     if (to.status === 'draft' && from.id === to.id)
-      return `${from.id} revision ${from.revision} against the draft made from revision ${to.revision}`;
+      return `${from.id} revision ${from.revision} against ${from.revision === to.revision ? 'its draft' : `the draft of revision ${to.revision}`}`;
     return `${from.id} revision ${from.revision} against ${to.id === from.id ? '' : `${to.id} `}revision ${to.revision}`;
   }
   const reading = screen === 'report' ? report : record;

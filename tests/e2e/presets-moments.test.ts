@@ -64,7 +64,7 @@ describe('two people at one site', () => {
     expect(ben.program.text()).toContain('physicist: short holds. Nothing was written.');
     expect(readdirSync(site).sort()).toEqual(['liver-3t@1.json', 'liver-3t@2.json']);
 
-    await ben.keys('d', 'against the draft made from revision 1');
+    await ben.keys('d', 'against the draft of revision 1');
     expect(ben.program.text()).toMatch(/slices\s+70\s+72/);
     await ben.escape('NOT RELEASED');
     await ben.keys('t', 'taken over: dwi sliceCount 30 to 28');

@@ -51,14 +51,19 @@ export function gaussianWaveform(): Waveform {
 
 /** The time-bandwidth product whose windowed sinc has this power factor: gives a peak to a pulse of which only the power is known. */
 export function timeBandwidthOfPower(powerFactor: number): number {
-  let low = 0.1;
-  let high = 20;
-  for (let i = 0; i < 60; i += 1) {
-    const middle = (low + high) / 2;
-    if (waveformOf((x) => sincAt(middle, x)).powerFactor < powerFactor) low = middle;
-    else high = middle;
+  const off = (timeBandwidth: number) => waveformOf((x) => sincAt(timeBandwidth, x)).powerFactor - powerFactor;
+  // The power factor grows nearly in proportion: the secant through two neighbours lands within a few steps.
+  let before = powerFactor;
+  let here = 1.3 * powerFactor;
+  let offBefore = off(before);
+  for (let i = 0; i < 20 && here !== before; i += 1) {
+    const offHere = off(here);
+    if (offHere === offBefore) break;
+    const next = here - (offHere * (here - before)) / (offHere - offBefore);
+    [before, offBefore, here] = [here, offHere, next];
+    if (Math.abs(here - before) < 1e-13 * here) break;
   }
-  return (low + high) / 2;
+  return here;
 }
 
 function sincAt(timeBandwidth: number, x: number): number {

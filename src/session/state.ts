@@ -5,7 +5,7 @@ import type { ScannerFile } from '../study/scanner-file.js';
 import { noSiteRules, type SiteRules } from '../study/site-rules.js';
 import type { CarryView } from './carry.js';
 import type { ScannerChoice } from './equipment.js';
-import type { DraftChoice, PresetChoice } from './message.js';
+import type { DraftChoice, KeyPress, PresetChoice } from './message.js';
 import { type PictureEyes, type PictureView, plainEyes } from './picture-eyes.js';
 import type { Opened, Session } from './session.js';
 import { emptyShelf, type Shelf } from './shelf.js';
@@ -94,6 +94,8 @@ export interface Notice {
 
 export interface State {
   readonly presets: readonly PresetChoice[];
+  /** Keys that were typed ahead of the presets, Enter the first of them; null once the presets are read. */
+  readonly early: readonly KeyPress[] | null;
   readonly drafts: readonly DraftChoice[];
   /** Scanner files that can be chosen, of each name one. */
   readonly scanners: readonly ScannerFile[];
@@ -184,6 +186,7 @@ export const startPlace: Place = {
 export function initialState(defaults: Defaults, size: State['size']): State {
   return {
     presets: [],
+    early: [],
     drafts: [],
     scanners: [],
     scannerChoice: defaults.scanner ?? null,

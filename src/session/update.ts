@@ -4,9 +4,10 @@ import { type Draft, draftLayout, draftSteps } from './draft.js';
 import { takeCarryAnswer } from './hands/carry-commands.js';
 import { takeExpression, typeKey } from './hands/entry-commands.js';
 import { judgeAgain, openDraft } from './hands/start-commands.js';
+import { keepDrawing } from './keep-drawing.js';
 import { keepSearching } from './keep-searching.js';
 import { keyRowFor } from './key-map.js';
-import type { Answer, Effect, Message } from './message.js';
+import type { Answer, Effect, KeyPress, Message } from './message.js';
 import type { State } from './state.js';
 import { takeShelfAnswer, withReadingShare } from './take-shelf-answer.js';
 
@@ -17,10 +18,33 @@ import { takeShelfAnswer, withReadingShare } from './take-shelf-answer.js';
  * @example update(state, { kind: 'key', key: { name: 'text', text: '+' }, atMs }) //=> [state, effects]
  */
 export function update(state: State, message: Message): Change {
+  const change = takeOne(state, message);
+  if (message.kind !== 'presets' || state.early === null) return change;
+  // What was typed ahead of the presets comes now, in its order.
+  return state.early.reduce<Change>(
+    ([before, asked], key) => {
+      const [after, more] = takeOne(before, { kind: 'key', key, atMs: before.nowMs });
+      return [after, [...asked, ...more]];
+    },
+    change,
+  );
+}
+
+/** Keys that are kept while the presets are read; whoever types more has left the keyboard to something else. */
+const mostEarlyKeys = 50;
+
+/** Enter has nothing to open before the presets are read, and what follows it is meant for what it opens. */
+function comesTooEarly(state: State, { name }: KeyPress): boolean {
+  if (state.early === null || state.drafts.length > 0 || state.place.screen !== 'start') return false;
+  return name !== 'escape' && (name === 'enter' || state.early.length > 0);
+}
+
+function takeOne(state: State, message: Message): Change {
   const [moved, asked] = carryOut(state, message);
   const [sought, searched] = keepSearching(state, moved);
-  const [next, carried] = keepCarrying(sought);
-  const more = [...searched, ...carried];
+  const [carrying, carried] = keepCarrying(sought);
+  const [next, drawn] = keepDrawing(state, carrying);
+  const more = [...searched, ...carried, ...drawn];
   const effects = more.length === 0 ? asked : [...asked, ...more];
   const draft = draftToSave(state, next);
   return draft === null ? [next, effects] : [next, [...effects, { kind: 'save-draft', draft } satisfies Effect]];
@@ -30,6 +54,7 @@ function carryOut(state: State, message: Message): Change {
   switch (message.kind) {
     case 'key': {
       const now = { ...state, nowMs: Math.max(state.nowMs, message.atMs) };
+      if (comesTooEarly(state, message.key)) return only({ ...now, early: [...(state.early ?? []), message.key].slice(0, mostEarlyKeys) });
       if (state.entry !== null) return typeKey(now, state.entry, message.key);
       const row = keyRowFor(now, message.key);
       return row === undefined ? only(now) : row.command(now, message.key);
@@ -39,7 +64,7 @@ function carryOut(state: State, message: Message): Change {
     case 'tick':
       return only({ ...state, nowMs: Math.max(state.nowMs, message.atMs) });
     case 'presets': {
-      return only({ ...state, presets: message.presets, fileNotes: withNotes(state, message.notes) });
+      return only({ ...state, early: null, presets: message.presets, fileNotes: withNotes(state, message.notes) });
     }
     case 'drafts':
       return only({ ...state, drafts: message.drafts });
@@ -107,6 +132,13 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
     case 'carry':
     case 'carryRules':
       return only(takeCarryAnswer(next, answer, failed));
+    case 'picture': {
+      const { picture } = state;
+      if (picture === null || picture.ask !== ask) return only(next);
+      const said =
+        answer.kind === 'pictures' ? { drawn: answer.pictures, trouble: null } : { drawn: null, trouble: failed ?? 'The picture failed' };
+      return only({ ...next, picture: { ...picture, ...said } });
+    }
     case 'revisions':
     case 'checks':
     case 'release':

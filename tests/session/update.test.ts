@@ -3,7 +3,7 @@ import { fieldHere } from '../../src/session/hands/series-commands.js';
 import { nextStep } from '../../src/session/next-step.js';
 import { resultNow, sessionSeries } from '../../src/session/results.js';
 import type { Opened } from '../../src/session/session.js';
-import type { State } from '../../src/session/state.js';
+import { initialState, type State } from '../../src/session/state.js';
 import { timeline } from '../../src/session/timeline.js';
 import { update } from '../../src/session/update.js';
 import { seriesHeadline } from '../../src/session/verdicts.js';
@@ -18,6 +18,25 @@ describe('the start', () => {
     const state = press(startState(['liver-3t', 'lumbar-spine-1.5t', 'brain-3t']), '3 liv', 'enter');
     expect(state.opened?.study.id).toBe('liver-3t');
     expect(state.place.screen).toBe('order');
+  });
+
+  it('keys typed ahead of the presets open what they name once it is there', () => {
+    const presets = startState(['liver-3t', 'lumbar-spine-1.5t']).presets;
+    const early = press(initialState(startState().defaults, { columns: 80, rows: 24 }), '3 liv', 'enter', 'enter', 'down');
+    expect([early.narrowing, early.session]).toEqual(['3 liv', null]);
+    const [state] = update(early, { kind: 'presets', presets, notes: [] });
+    expect([state.opened?.study.id, state.place.screen]).toEqual(['liver-3t', 'series']);
+    expect(state.place).toEqual(press(startState(['liver-3t', 'lumbar-spine-1.5t']), '3 liv', 'enter', 'enter', 'down').place);
+    // And only once.
+    expect(update(state, { kind: 'presets', presets, notes: [] })[0].session).toBe(state.session);
+  });
+
+  it('Escape leaves at once while the presets are read; without any preset Enter says so', () => {
+    const early = press(initialState(startState().defaults, { columns: 80, rows: 24 }), 'enter');
+    expect(update(early, { kind: 'key', key: keyOf('escape'), atMs: 1 })[1]).toEqual([{ kind: 'quit' }]);
+    const [state] = update(early, { kind: 'presets', presets: [], notes: [] });
+    expect(state.notice?.words).toContain('no preset');
+    expect(press(state, 'enter').early).toBeNull();
   });
 
   it('nothing matches: it is said, and nothing opens', () => {

@@ -43,7 +43,7 @@ export const clearOrLeave: Command = (state) => {
 export const choose: Command = (state) => {
   const row = startRow(state);
   if (row === undefined)
-    return only(say(state, state.presets.length === 0 ? 'The presets are being read' : 'Nothing matches: take a letter back', 'trouble'));
+    return only(say(state, state.presets.length === 0 ? 'There is no preset to open: see the notes' : 'Nothing matches: take a letter back', 'trouble'));
   if (row.kind === 'preset') return openPreset(state, row.preset);
   const ask = state.asks + 1;
   return [{ ...state, asks: ask, open: { ...state.open, draft: ask } }, [{ kind: 'claim-draft', ask, id: row.draft.id }]];

@@ -36,6 +36,7 @@ export function budgetPage(problem: BudgetProblem, budget: Budget, page: Page): 
   ];
   const after = [
     `Together ${sayTime(totalS)} of ${sayTime(minutes * 60)}: ${sayVerdict(verdict)}.`,
+    ...(plan.length === 0 ? ['Every series is done: nothing is left to plan.'] : []),
     given.length === 0 ? 'No series is given up.' : `Given up: ${given.join(', ')}.`,
     ...(alternative === null
       ? []

@@ -18,6 +18,7 @@ import { exitCodes } from './exit-codes.js';
 import type { LoadedPreset } from './load-preset.js';
 import { readBody, readReadings } from './read-named-numbers.js';
 import { seriesNamed } from './series-named.js';
+import { withSomethingToChange } from './with-something-to-change.js';
 
 /** Options that limit a search: unit, and the largest number that is still no slip of the keyboard. */
 const limitOptions = [
@@ -153,20 +154,17 @@ export function readWaysRequest(preset: LoadedPreset, scanner: Scanner, request:
   const both = opened.value.find((key) => set.value[key] !== undefined);
   if (both !== undefined)
     return wrongUse('--open', `--set and --open both name ${both}: a value set by hand is not searched.`, 'Give one of them.');
-  return {
-    ok: true,
-    value: {
-      series: series.value,
-      presetFieldT: study.fieldT,
-      scanner,
-      body: body.value,
-      rules,
-      limits: limits.value,
-      readings: readings.value,
-      bands: bands.value,
-      set: set.value,
-      opened: opened.value,
-      frozen: false,
-    },
-  };
+  return withSomethingToChange({
+    series: series.value,
+    presetFieldT: study.fieldT,
+    scanner,
+    body: body.value,
+    rules,
+    limits: limits.value,
+    readings: readings.value,
+    bands: bands.value,
+    set: set.value,
+    opened: opened.value,
+    frozen: false,
+  });
 }

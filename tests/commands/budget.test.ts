@@ -34,9 +34,25 @@ describe('holdfast budget', () => {
     expect(out).toContain('The minimum set does not fit');
   });
 
+  it('shortens or skips what a patient cannot hold, though there is time', async () => {
+    const plan = async (...more: string[]) =>
+      (JSON.parse((await runCommand(['budget', 'liver-3t', '--minutes', '40', ...more, '--json'])).out) as Document).plan;
+    expect((await plan()).map(({ choice }) => choice)).not.toContain('shortened');
+    expect((await plan('--hold', '11')).find(({ series }) => series === 't1-3d')?.choice).toBe('shortened');
+  });
+
+  it('says that nothing is left to plan where every series is done', async () => {
+    const ids = ['ss-ax', 'dwi', 'ss-sag', 't2', 'flair', 't1'].flatMap((id) => ['--done', id]);
+    const { exit, out } = await runCommand(['budget', 'brain-child-fast-3t', '--minutes', '5', ...ids]);
+    expect(exit).toBe(0);
+    expect(out).toContain('Every series is done: nothing is left to plan.');
+  });
+
   it.each<[string, readonly string[], number, RegExp]>([
     ['no minutes', [], 64, /--minutes is missing/],
     ['minutes of nothing', ['--minutes', '0'], 64, /--minutes takes more than 0/],
+    ['a longest series of nothing', ['--minutes', '5', '--longest', '0'], 64, /--longest takes more than 0/],
+    ['a breath-hold of nothing', ['--minutes', '5', '--hold', '0'], 64, /--hold takes more than 0/],
     ['a negative overhead', ['--minutes', '5', '--overhead', '-1'], 64, /--overhead/],
     ['a series done that is not there', ['--minutes', '5', '--done', 't22'], 66, /Did you mean t2/],
   ])('refuses %s', async (_what, args, code, message) => {

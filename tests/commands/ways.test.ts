@@ -7,6 +7,24 @@ import { runCommand } from './run-command.js';
 const folder = await mkdtemp(join(tmpdir(), 'holdfast-ways-'));
 afterAll(() => rm(folder, { recursive: true, force: true }));
 
+/** Invented: 3D T1 of the liver, 17 s a hold. */
+const parameters = {
+  repetitionTimeMs: 3.55,
+  echoTimeMs: 1.2,
+  flipAngleDeg: 10,
+  pixelBandwidthHz: 635,
+  fieldOfViewMm: 380,
+  phaseFieldOfViewPercent: 80,
+  matrixRead: 320,
+  matrixPhase: 200,
+  sliceCount: 72,
+  sliceThicknessMm: 3,
+  sliceOversamplingPercent: 11,
+  partialFourierSlice: 0.75,
+  parallelFactorPhase: 2,
+  pacing: { kind: 'breath-hold' },
+};
+
 /** An invented study of one series with few values to choose among, so that each test is quick. */
 async function preset(more: object = {}): Promise<string> {
   const file = join(folder, `small-${Math.abs(hash(JSON.stringify(more)))}.json`);
@@ -25,22 +43,7 @@ async function preset(more: object = {}): Promise<string> {
         acquisition: '3D',
         target: 'liver',
         comparison: 'spleen',
-        parameters: {
-          repetitionTimeMs: 3.55,
-          echoTimeMs: 1.2,
-          flipAngleDeg: 10,
-          pixelBandwidthHz: 635,
-          fieldOfViewMm: 380,
-          phaseFieldOfViewPercent: 80,
-          matrixRead: 320,
-          matrixPhase: 200,
-          sliceCount: 72,
-          sliceThicknessMm: 3,
-          sliceOversamplingPercent: 11,
-          partialFourierSlice: 0.75,
-          parallelFactorPhase: 2,
-          pacing: { kind: 'breath-hold' },
-        },
+        parameters,
         locked: ['phaseOversamplingPercent', 'sliceOversamplingPercent', 'parallelFactorSlice', 'partialFourierSlice', 'averages'],
         ...more,
       },
@@ -135,6 +138,11 @@ describe('holdfast ways', () => {
     ['a B1+rms cap without its reading', ['--b1rms', '2'], /--b1rms needs what the scanner displays.*--reading b1rmsUt/s],
     ['a SAR cap without its reading', ['--sar', '2'], /--sar needs what the scanner displays.*--reading sarWkg/s],
     ['a hold longer than the series may be', ['--hold', '20', '--time', '10'], /contradict/],
+    ['a ratio of RF power of nothing', ['--rf-ratio', '0'], /--rf-ratio takes more than 0/],
+    ['a reading that is none', ['--hold', '11', '--reading', 'b1rms=2'], /--reading knows timeS, b1rmsUt, sarWkg.*Did you mean b1rmsUt/s],
+    ['an option that is none', ['--hold', '11', '--kind', 'closest'], /no option --kind/],
+    ['a limit given twice', ['--hold', '11', '--hold', '12'], /--hold was given more than once/],
+    ['a band given twice', ['--keep', 'relativeSnr=0.8', '--keep', 'relativeSnr=0.9'], /--keep names relativeSnr twice/],
     ['a figure that is none', ['--keep', 'relativeSNR=0.8'], /Did you mean relativeSnr/],
     ['a parameter that is none', ['--open', 'flipAngle'], /Did you mean flipAngleDeg/],
     ['a parameter that the preset locks', ['--open', 'averages'], /the preset locks it/],
@@ -155,6 +163,53 @@ describe('holdfast ways', () => {
     ]);
     expect(exit).toBe(65);
     expect(err).toContain('min');
+  });
+
+  const everything = [
+    'phaseOversamplingPercent',
+    'sliceOversamplingPercent',
+    'parallelFactorPhase',
+    'parallelFactorSlice',
+    'partialFourierPhase',
+    'partialFourierSlice',
+    'averages',
+    'matrixPhase',
+    'sliceThicknessMm',
+  ];
+
+  it.each<[string, object, RegExp]>([
+    ['a preset that locks everything', { locked: everything }, /Nothing may change in t1/],
+    [
+      'ranges of one value each',
+      { locked: everything.filter((key) => key !== 'matrixPhase'), ranges: { matrixPhase: [200] } },
+      /Nothing may change in t1/,
+    ],
+    ['an empty range', { ranges: { sliceThicknessMm: [] } }, /expected at least 1/],
+    ['a range without a step', { ranges: { sliceThicknessMm: { min: 2, max: 4, step: 0 } } }, /step: 0 was given/],
+    [
+      'a must-keep whose limits contradict each other',
+      { mustKeep: [{ figure: 'voxelSliceMm', atMost: 2, atLeast: 3, source: 'invented' }] },
+      /lower limit is above the upper one/,
+    ],
+    [
+      'an unknown kind of pacing',
+      { parameters: { ...parameters, pacing: { kind: 'breath' } } },
+      /pacing\.kind: "breath" was given.*Did you mean "breath-hold"/s,
+    ],
+    ['an unknown class', { family: 'spoiled' }, /family: "spoiled" was given/],
+  ])('%s is bad data: 65 and says why', async (_what, more, message) => {
+    const { exit, out, err } = await runCommand(['ways', await preset(more), 't1', '--hold', '11']);
+    expect([exit, out]).toEqual([65, '']);
+    expect(err).toMatch(message);
+  });
+
+  it('values set by hand that leave nothing to search are wrong use: 64; an opened parameter is something to search', async () => {
+    const file = await preset({ locked: everything.filter((key) => key !== 'matrixPhase') });
+    const args = ['ways', file, 't1', '--hold', '11', '--set', 'matrixPhase=192'];
+    const { exit, out, err } = await runCommand(args);
+    expect([exit, out]).toEqual([64, '']);
+    expect(err).toMatch(/nothing is left to search/);
+    expect((await runCommand([...args, '--open', 'flipAngleDeg'])).exit).toBe(1);
   });
 
   it('a series that is not there: 66', async () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { inventedRecords } from '../../scripts/invented-records.js';
+import { openDraft } from '../../src/session/hands/start-commands.js';
 import type { Answer, Effect, PresetChoice } from '../../src/session/message.js';
 import { presetRows, revisionRow, revisionRows } from '../../src/session/preset-rows.js';
 import { recordRows, recordsHeadline } from '../../src/session/record-rows.js';
@@ -8,7 +9,7 @@ import type { RecordRow } from '../../src/session/shelf.js';
 import { shelfText } from '../../src/session/shelf-text.js';
 import { startRows } from '../../src/session/start-list.js';
 import type { State } from '../../src/session/state.js';
-import { update } from '../../src/session/update.js';
+import { draftNow, update } from '../../src/session/update.js';
 import { namedRecord } from '../../src/study/record-meant.js';
 import { RecordCounts } from '../../src/study/record-report.js';
 import { type PresetNow, suggestVariant } from '../../src/study/record-report-suggestion.js';
@@ -121,6 +122,18 @@ describe('presets', () => {
     expect(refused.session).toBe(changed.session);
     const saved = play(changed, [{ kind: 'key', key: keyOf('s'), atMs: 9e6 }]);
     expect(saved.effects.find(({ kind }) => kind === 'save-preset')).toBeDefined();
+  });
+});
+
+describe('a session that was left among the presets', () => {
+  it('goes on in its running order: what was shown there was not saved', () => {
+    const state = draftWithFour(world(two));
+    const draft = JSON.parse(JSON.stringify(draftNow(state)));
+    const [again] = openDraft(startState(), draft);
+    expect(again.place).toMatchObject({ screen: 'order', back: [] });
+    expect(again.session?.series.find(({ id }) => id === 't1-3d')?.set).toEqual(
+      state.session?.series.find(({ id }) => id === 't1-3d')?.set,
+    );
   });
 });
 

@@ -4,6 +4,7 @@ import { chosenScanner, equipmentFor } from '../equipment.js';
 import { filedStudy, judgedStudy } from '../judged-study.js';
 import type { Effect, PresetChoice } from '../message.js';
 import { newSession } from '../session.js';
+import { isShelfScreen } from '../shelf-headline.js';
 import { type StartRow, startRows } from '../start-list.js';
 import { type State, startPlace } from '../state.js';
 
@@ -43,7 +44,13 @@ export const clearOrLeave: Command = (state) => {
 export const choose: Command = (state) => {
   const row = startRow(state);
   if (row === undefined)
-    return only(say(state, state.presets.length === 0 ? 'There is no preset to open: see the notes' : 'Nothing matches: take a letter back', 'trouble'));
+    return only(
+      say(
+        state,
+        state.presets.length === 0 ? 'There is no preset to open: see the notes' : 'Nothing matches: take a letter back',
+        'trouble',
+      ),
+    );
   if (row.kind === 'preset') return openPreset(state, row.preset);
   const ask = state.asks + 1;
   return [{ ...state, asks: ask, open: { ...state.open, draft: ask } }, [{ kind: 'claim-draft', ask, id: row.draft.id }]];
@@ -85,7 +92,7 @@ export function openDraft(state: State, value: unknown): Change {
         past,
         future: [],
         carry: null,
-        place: isCarried(place) ? { ...place, screen: 'order', back: [] } : place,
+        place: isCarried(place) || isOnShelf(place) ? { ...place, screen: 'order', back: [] } : place,
         entry: null,
         rules: new Map(),
         practiceSinceMs,
@@ -115,6 +122,11 @@ function withRules(state: State): Change {
   const ask = state.asks + 1;
   const effect: Effect = { kind: 'read-rules', ask, mustKeeps };
   return [{ ...state, asks: ask, open: { ...state.open, rules: ask } }, [effect]];
+}
+
+/** Nor is what the screens of presets and records showed. */
+function isOnShelf({ screen, back }: State['place']): boolean {
+  return [screen, ...back].some(isShelfScreen);
 }
 
 /** A preset that was carried is not in the draft: the session goes on in its running order. */

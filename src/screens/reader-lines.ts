@@ -148,7 +148,7 @@ function carryItems(state: State): Item[] {
 
 function scannerItems(state: State): Item[] {
   const here = scannerRow(state).field;
-  const { heading, facts, table, notes, attention } = scannerWords(state);
+  const { heading, facts, table, notes, coil, attention } = scannerWords(state);
   const [titles = [], ...rows] = table ?? [];
   return [
     ...scannerRows(state).map(({ field, name, where, coil, inUse }) => ({
@@ -159,7 +159,7 @@ function scannerItems(state: State): Item[] {
     ...rows.map(([id = '', ...cells]) => ({
       words: `${id}: ${cells.map((cell, at) => `${titles[at + 1]} ${cell.replace(' > ', ' becomes ')}`).join(', ')}`,
     })),
-    ...[...notes.slice(1), attention].filter((words) => words !== '').map((words) => ({ words })),
+    ...[...notes.slice(1), coil, attention].filter((words) => words !== '').map((words) => ({ words })),
   ];
 }
 

@@ -10,7 +10,7 @@ export function scannerScreen(state: State, look: Look, columns: number, rows: n
   const wide = columns >= 140;
   const { glyphs } = look;
   const listColumns = wide ? 60 : columns;
-  const changes = changeLines(state, look, wide ? columns - listColumns - 1 : columns);
+  const changes = changeLines(state, look, wide ? columns - listColumns - 1 : columns, rows >= 26);
   const listRows = wide ? rows - 1 : Math.max(5, rows - changes.length - 2);
   const all = scannerRows(state);
   const here = scannerRow(state).field;
@@ -29,13 +29,14 @@ export function scannerScreen(state: State, look: Look, columns: number, rows: n
   return [...left, blank, ...changes];
 }
 
-function changeLines(state: State, look: Look, columns: number): Line[] {
-  const { heading, facts, table, notes, attention } = scannerWords(state);
+function changeLines(state: State, look: Look, columns: number, roomy: boolean): Line[] {
+  const { heading, facts, table, notes, coil, attention } = scannerWords(state);
   return [
     line(fitText(heading, columns, look.glyphs.ellipsis), 'bold'),
     ...facts.flatMap((words) => wrap(words, columns)).map((words) => line(words)),
     ...(table === null ? [] : tableLines(table, columns)),
     ...notes.flatMap((words) => wrap(words, columns)).map((words) => line(words, 'quiet')),
+    ...(roomy && coil !== '' ? wrap(coil, columns).map((words) => line(words)) : []),
     ...(attention === '' ? [] : wrap(attention, columns).map((words) => line(words, 'attention'))),
   ];
 }

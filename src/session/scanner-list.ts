@@ -76,6 +76,8 @@ export interface ScannerWords {
   /** Titles first; null without a preset to look at. */
   readonly table: readonly (readonly string[])[] | null;
   readonly notes: readonly string[];
+  /** Elements and measured g of the coil: where there is room. */
+  readonly coil: string;
   /** What needs a person's eye; blank where nothing does. */
   readonly attention: string;
 }
@@ -102,6 +104,15 @@ function shown({ from, to }: Both, digits: number): string {
   return a === b ? (a as string) : `${a} > ${b}`;
 }
 
+/** A coil: its elements, and its measured g where it has a table. */
+function coilWords({ coil }: Scanner): string {
+  if (coil === null) return 'g: the usual table, values from memory: R 2 1.05, R 3 1.20, R 4 1.7, 2 x 2 1.15; beyond it not known';
+  const rows = coil.g.map(({ phase, slice, g, region }) => `${phase} x ${slice} ${g}${region === undefined ? '' : ` (${region})`}`);
+  const { AP, RL, HF } = coil.elements;
+  const table = rows.length === 0 ? 'no g measured' : `g of R phase x slice ${rows.join(', ')}; beyond it not known`;
+  return cleanText(`Coil ${coil.name}: elements AP ${AP}, RL ${RL}, HF ${HF}; ${table}`);
+}
+
 /** What changes when the scanner under the hand is chosen: frequencies at the exact field, g, shortest TE and TR, slices in one TR. */
 export function scannerWords(state: State): ScannerWords {
   const { choice } = scannerRow(state);
@@ -113,18 +124,20 @@ export function scannerWords(state: State): ScannerWords {
       facts: ['The field of the preset, usual gradients, usual g.'],
       table: null,
       notes: [],
+      coil: '',
       attention: '',
     };
   const plain = plainScanner(fieldT);
   const equipment = equipmentFor(choice, study ?? ({ fieldT, region: '' } as Study), { role: '', scannerName: '', coilName: '' });
   const { scanner } = equipment;
+  const coil = coilWords(scanner);
   const [before, after] = [phaseTimesMs(fieldT), phaseTimesMs(scanner.fieldT)];
   const facts = [
     `Field ${fieldT === scanner.fieldT ? fieldT : `${fieldT} > ${scanner.fieldT}`} T, Larmor ${pair(larmorMhz(fieldT), larmorMhz(scanner.fieldT), 3, 'MHz')}, fat ${pair(fatShiftHz(fieldT), fatShiftHz(scanner.fieldT), 1, 'Hz')}`,
     `Opposed ${pair(before.opposedPhaseMs, after.opposedPhaseMs, 2, 'ms')}, in phase ${pair(before.inPhaseMs, after.inPhaseMs, 2, 'ms')}`,
     `Gradients ${pair(plain.gradientMtPerM, scanner.gradientMtPerM, 0, 'mT/m')}, ${pair(plain.slewTPerMPerS, scanner.slewTPerMPerS, 0, 'T/m/s')}; B1 ${pair(plain.maximumB1Ut, scanner.maximumB1Ut, 0, 'uT')}; visible ${pair(plain.visibleLengthMm, scanner.visibleLengthMm, 0, 'mm')}`,
   ];
-  if (study === null) return { heading: sayEquipment(equipment), facts, table: null, notes: [], attention: '' };
+  if (study === null) return { heading: sayEquipment(equipment), facts, table: null, notes: [], coil, attention: '' };
   const changes = changesOf(study, scanner);
   const together = changes.filter(({ simultaneousG }) => simultaneousG.to === null).map(({ id }) => id);
   const away = Math.abs(scanner.fieldT - study.fieldT) > 0.05 * study.fieldT;
@@ -147,6 +160,7 @@ export function scannerWords(state: State): ScannerWords {
       ...(together.length === 0 ? [] : [`g of simultaneous slices is not known here: ${together.join(', ')}`]),
       ...(changes.some(({ g }) => g.to === null) ? ['g not known: beyond the table of this coil. No SNR, and no way uses it.'] : []),
     ],
+    coil,
     attention: away
       ? `This preset is for ${study.fieldT} T: carry it there (t in its running order) before it is used on ${scanner.fieldT} T`
       : '',

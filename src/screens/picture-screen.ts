@@ -4,7 +4,7 @@ import { pictureSentences } from '../session/picture-sentences.js';
 import { pictureSet } from '../session/picture-view.js';
 import type { State } from '../session/state.js';
 import { fitText } from '../terminal/text-width.js';
-import { beside, fill, fitLine, type Line, line, span, wrap } from './line.js';
+import { beside, fill, type Line, line, span, wrap } from './line.js';
 import type { Look } from './look.js';
 import { picturePane, pictureView } from './picture-pane.js';
 import { Plot } from './plot.js';
@@ -62,8 +62,8 @@ function panes(state: State, drawn: DrawnPictures, look: Look, columns: number, 
   if (divider !== null) {
     const from = Math.round(divider * columns);
     const seen = pictureView(drawn, close, columns, rows, look);
-    const title = `preset left of the divider, ${name} right of it, ${scale(seen.view.squareMm, seen.view.columns)}${stale}`;
-    return [dividerLine(title, from, columns, look), ...picturePane(drawn, seen, { from }, columns, rows, look)];
+    const right = `${name}, ${scale(seen.view.squareMm, seen.view.columns)}${stale}`;
+    return [dividerLine('preset', right, from, columns, look), ...picturePane(drawn, seen, { from }, columns, rows, look)];
   }
   const half = Math.floor((columns - 1) / 2);
   const seen = pictureView(drawn, close, half, rows, look);
@@ -73,12 +73,11 @@ function panes(state: State, drawn: DrawnPictures, look: Look, columns: number, 
   return [...titles, ...left.map((each, row) => [...each, span(' '), ...(right[row] ?? [])])];
 }
 
-/** The place of the divider stands in the line above the picture. */
-function dividerLine(title: string, from: number, columns: number, look: Look): Line {
-  const marked = fitLine([span(title, 'quiet')], columns, look.glyphs.ellipsis);
-  const text = marked.map((each) => each.text).join('');
+/** The divider stands in the line above the picture, between the names of its sides. */
+function dividerLine(left: string, right: string, from: number, columns: number, { glyphs }: Look): Line {
   const at = Math.min(columns - 1, from);
-  return [span(text.slice(0, at), 'first'), span(look.glyphs.verticalRule, 'inverse'), span(text.slice(at + 1), 'second')];
+  const cellsOf = (text: string, room: number) => (room <= 0 ? '' : fitText(text, room, glyphs.ellipsis).padEnd(room));
+  return [span(cellsOf(left, at), 'first'), span(glyphs.verticalRule, 'inverse'), span(cellsOf(right, columns - at - 1), 'second')];
 }
 
 /** Both values along one line of the object, as two curves. */

@@ -1,5 +1,6 @@
-import { join, resolve } from 'node:path';
+import { resolve } from 'node:path';
 import { problemOfError } from '../store/problem-of-error.js';
+import { recordFilesAt } from '../store/record-files.js';
 import { readRecords } from '../store/record-reader.js';
 import { cleanText } from '../study/clean-text.js';
 import type { SessionRecord } from '../study/record.js';
@@ -32,9 +33,7 @@ export async function recordFiles(named: readonly string[], ownFile: string, io:
   const files: string[] = [];
   for (const path of named.length === 0 ? [ownFile] : named.map((name) => resolve(io.workingFolder, name))) {
     try {
-      const { kind } = await io.disk.facts(path);
-      if (kind !== 'folder') files.push(path);
-      else files.push(...(await io.disk.names(path)).filter((name) => name.endsWith('.jsonl')).map((name) => join(path, name)));
+      files.push(...(await recordFilesAt(io.disk, path)));
     } catch (error) {
       return refusedByStore([problemOfError(error, 'read', 'the record file', path)]);
     }

@@ -1,10 +1,10 @@
 import type { ReadCounts } from '../session/shelf.js';
+import { recordFilesAt } from '../store/record-files.js';
 import { readRecords } from '../store/record-reader.js';
 import { cleanText } from '../study/clean-text.js';
 import type { SessionRecord } from '../study/record.js';
 import { isMeantRecord, type NamedRecord, namedRecord } from '../study/record-meant.js';
 import type { InterfaceWorld } from './interface-world.js';
-import { recordFiles } from './record-files.js';
 
 /** How long a reading runs before its progress is said, and how often then, ms. */
 const quietMs = 200;
@@ -17,17 +17,23 @@ const running = new WeakMap<object, { ended: 'no' | 'stopped' | 'replaced' }>();
 
 /** Ends the reading that runs; it answers with what it has. */
 export function stopReading(world: InterfaceWorld): void {
-  const now = running.get(world.disk);
+  const now = running.get(world);
   if (now?.ended === 'no') now.ended = 'stopped';
 }
 
 /** A reading begins: the one before ends and answers nobody. */
 export function beginReading(world: InterfaceWorld): { ended: 'no' | 'stopped' | 'replaced' } {
-  const before = running.get(world.disk);
+  const before = running.get(world);
   if (before !== undefined) before.ended = 'replaced';
   const now = { ended: 'no' as const };
-  running.set(world.disk, now);
+  running.set(world, now);
   return now;
+}
+
+/** The files of this user's records; none where nobody recorded yet. What cannot be looked at is read all the same, and says so then. */
+export async function ownRecordFiles({ disk, folders }: InterfaceWorld): Promise<readonly string[]> {
+  const path = folders.recordsFile;
+  return recordFilesAt(disk, path).catch((error: unknown) => ((error as { code?: string }).code === 'ENOENT' ? [] : [path]));
 }
 
 /** Says how far something is: from a while after its beginning on, and not with every piece. */
@@ -52,7 +58,7 @@ export async function readMeant(
   onRecord: (record: SessionRecord, named: NamedRecord, file: string, line: number) => void,
 ): Promise<ReadCounts | null> {
   const now = beginReading(world);
-  const files = await recordFiles(world.disk, world.folders.recordsFile);
+  const files = await ownRecordFiles(world);
   const notes: string[] = [];
   let [records, meant, damaged] = [0, 0, 0];
   for await (const entry of readRecords(world.disk, files, { onProgress: shareTeller(world, ask) })) {

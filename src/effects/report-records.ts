@@ -3,8 +3,7 @@ import { presetNow } from '../store/preset-now.js';
 import { RecordCounts } from '../study/record-report.js';
 import type { PresetNow } from '../study/record-report-suggestion.js';
 import type { InterfaceWorld } from './interface-world.js';
-import { recordFiles } from './record-files.js';
-import { readMeant } from './record-reading.js';
+import { ownRecordFiles, readMeant } from './record-reading.js';
 
 /** The report over the records that are meant by what was typed. */
 export async function reportRecords(
@@ -17,7 +16,7 @@ export async function reportRecords(
   const report = counts.report();
   const now = new Map<string, PresetNow>();
   for (const preset of report.presets) now.set(preset.preset, await presetNow(world.disk, world.presetFolders, preset, world.parser));
-  const files = (await recordFiles(world.disk, world.folders.recordsFile)).length;
+  const files = (await ownRecordFiles(world)).length;
   const shown = { report, files, records: read.records, damaged: read.damaged, chosen: typed.trim(), now };
   return { kind: 'record-report', report: { ...read, shown } };
 }

@@ -1,6 +1,6 @@
 import type { Command } from './change.js';
 import { carryRevision } from './hands/carry-commands.js';
-import { back, quit, show } from './hands/common-commands.js';
+import { back, contrastGiven, quit, show } from './hands/common-commands.js';
 import {
   moveInRecords,
   narrowRecords,
@@ -36,10 +36,14 @@ const goBackOnly = row('escape', 'Esc', 'back', 'One screen back. Nothing is los
 const toSession = (key: string, brief: string, words: string, command: Command): KeyRow =>
   row(key, key, brief, words, command, ({ session }) => session !== null);
 
+/** A patient may be waiting while somebody reads. */
+const contrast = row('g', 'g', '', 'Contrast is given: starts its clock.', contrastGiven, ({ session }) => session !== null);
+
 const text = (leaving: KeyRow): readonly KeyRow[] => [
   ...upAndDown(scrollShelf, 'the text'),
   row('page-down', 'PgUp PgDn', 'page', 'A page down or up.', scrollShelf('page-down')),
   row('page-up', '', '', '', scrollShelf('page-up')),
+  contrast,
   help,
   leaving,
   leave,
@@ -70,6 +74,7 @@ export const shelfKeys = {
     row('t', 't', 'to', 'To another field or scanner: carries it there, as a proposal.', carryRevision),
     toSession('p', '', 'This patient.', show('patient')),
     toSession('o', 'order', 'The running order.', show('order')),
+    contrast,
     help,
     goBackOnly,
     leave,
@@ -80,6 +85,7 @@ export const shelfKeys = {
     row('enter', 'Enter', 'type', 'Begins typing on the line; nothing is filled in by itself.', typeInRelease),
     row('d', 'd', 'difference', "What differs from the site's revision to this one.", compareRelease),
     row('t', 't', 'take over', 'Somebody was first: sets your changes on top of their revision.', takeOverOnTop, isTaken),
+    contrast,
     help,
     goBackOnly,
     leave,

@@ -21,7 +21,10 @@ export function takeShelfAnswer(state: State, kind: ShelfAsk, answer: Answer, fa
     case 'checks': {
       if (shelf.release === null) return only(state);
       if (answer.kind !== 'checked') return only(say(state, trouble, 'trouble'));
-      return only(withShelf(state, { release: { ...shelf.release, findings: answer.findings, newest: answer.newest } }));
+      const { findings, newest } = answer;
+      // Where the site has none of this id there is nothing that it could have been made from.
+      const basedOn = shelf.release.basedOn ?? (newest === null ? 0 : null);
+      return only(withShelf(state, { release: { ...shelf.release, findings, newest, basedOn } }));
     }
     case 'release':
       return takeRelease(state, answer, failed);

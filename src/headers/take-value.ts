@@ -3,10 +3,9 @@ import { type Attributes, attributeRow, type Keyword } from './attribute-table.j
 /** Values of one attribute beyond this are dropped: none of the list has more. */
 const mostValues = 16;
 
-/** Numbers of one attribute, finite ones; null when one is not, or there are too many. */
-function takenNumbers(values: readonly unknown[]): readonly number[] | null {
-  const taken = values.filter((value): value is number => typeof value === 'number' && Number.isFinite(value));
-  return taken.length === values.length ? taken : null;
+function areFinite(values: readonly unknown[]): values is readonly number[] {
+  for (const value of values) if (typeof value !== 'number' || !Number.isFinite(value)) return false;
+  return true;
 }
 
 /**
@@ -20,8 +19,7 @@ export function takeValue(into: Attributes, keyword: Keyword, values: readonly u
   const row = attributeRow(keyword);
   const target = into as Record<string, readonly unknown[]>;
   if (row.kind === 'numbers') {
-    const numbers = takenNumbers(values);
-    if (numbers !== null) target[keyword] = numbers;
+    if (areFinite(values)) target[keyword] = values;
     return;
   }
   const words = values.filter((value): value is string => typeof value === 'string' && row.words.includes(value));

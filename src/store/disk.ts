@@ -9,6 +9,12 @@ export interface FileFacts {
   readonly identity?: string;
 }
 
+/** A name in a folder. */
+export interface FolderEntry {
+  readonly name: string;
+  readonly kind: 'file' | 'folder' | 'unknown';
+}
+
 /**
  * How a file is opened.
  * `read`: must exist. `new`: must not exist, read and written. `append`: must exist, every write goes to the end.
@@ -36,6 +42,8 @@ export interface Disk {
   facts(path: string): Promise<FileFacts>;
   /** Names in a folder, sorted. */
   names(folder: string): Promise<string[]>;
+  /** Names in a folder, sorted, with what the folder itself says they are: `unknown` where it says nothing, or a link. */
+  entries(folder: string): Promise<FolderEntry[]>;
   open(path: string, how: OpenHow, mode?: number): Promise<OpenFile>;
   /** Makes a folder and those above it; gives false when it was there. */
   makeFolder(path: string, mode: number): Promise<boolean>;

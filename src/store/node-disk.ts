@@ -1,4 +1,4 @@
-import type { Stats } from 'node:fs';
+import { fstatSync, type Stats } from 'node:fs';
 import { chmod, type FileHandle, link, mkdir, open, readdir, rename, stat, unlink, utimes } from 'node:fs/promises';
 import type { Disk, FileFacts, OpenFile, OpenHow } from './disk.js';
 
@@ -12,6 +12,15 @@ const cannotSyncFolders = new Set(['EINVAL', 'ENOTSUP', 'EOPNOTSUPP', 'ENOSYS', 
 export const nodeDisk: Disk = {
   facts: async (path) => factsOf(await stat(path)),
   names: async (folder) => (await readdir(folder)).sort(),
+  entries: async (folder) => {
+    const entries = await readdir(folder, { withFileTypes: true });
+    return entries
+      .map((entry) => ({
+        name: entry.name,
+        kind: entry.isFile() ? ('file' as const) : entry.isDirectory() ? ('folder' as const) : ('unknown' as const),
+      }))
+      .sort((a, b) => (a.name < b.name ? -1 : a.name > b.name ? 1 : 0));
+  },
   open: async (path, how, mode = 0o600) => openFile(await open(path, flags[how], mode)),
   makeFolder: async (path, mode) => (await mkdir(path, { recursive: true, mode })) !== undefined,
   setMode: (path, mode) => chmod(path, mode),
@@ -27,7 +36,8 @@ function openFile(handle: FileHandle): OpenFile {
     read: async (into, position) => (await handle.read(into, 0, into.length, position)).bytesRead,
     write: async (bytes) => (await handle.write(bytes, 0, bytes.length, null)).bytesWritten,
     sync: () => handle.sync(),
-    facts: async () => factsOf(await handle.stat()),
+    // The system holds the facts of an open file: nothing is waited for, and a trip through the thread pool costs more than the answer.
+    facts: async () => factsOf(fstatSync(handle.fd)),
     setMode: (mode) => handle.chmod(mode),
     close: () => handle.close(),
   };

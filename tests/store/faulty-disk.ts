@@ -48,6 +48,7 @@ export function faultyDisk(fault: Fault | null, real: Disk = nodeDisk): { disk: 
   const disk: Disk = {
     facts: (path) => pass('facts', () => real.facts(path)),
     names: (folder) => pass('names', () => real.names(folder)),
+    entries: (folder) => pass('entries', () => real.entries(folder)),
     open: async (path, how, mode) => faultyFile(await pass('open', () => real.open(path, how, mode))),
     makeFolder: (path, mode) => pass('makeFolder', () => real.makeFolder(path, mode)),
     setMode: (path, mode) => pass('setMode', () => real.setMode(path, mode)),

@@ -42,6 +42,19 @@ const representations = new Map<string, string>([
   ...[...opened].map((tag) => [tag, 'SQ'] as const),
 ]);
 
+/** What is asked for in a data set, as numbers: the list, sequences that are looked into, and what tells an MR image and its series. */
+const wanted = new Set<number>(
+  [...representations.keys(), ...opened, 'x00080016', 'x0020000e'].map((tag) => Number.parseInt(tag.slice(1), 16)),
+);
+
+/** Bytes before the value by the two letters of a representation (PS3.5, 7.1.2): 12 where the length takes four bytes, 8 where two; 0 is none. */
+const headBytes = new Uint8Array(0x10000);
+const setHead = (names: string, bytes: number) => {
+  for (const name of names.split(' ')) headBytes[name.charCodeAt(0) * 0x100 + name.charCodeAt(1)] = bytes;
+};
+setHead('OB OD OF OL OV OW SQ SV UC UN UR UT UV', 12);
+setHead('AE AS AT CS DA DS DT FD FL IS LO LT PN SH SL SS ST TM UI UL US', 8);
+
 /** Text of an element, to its first zero byte. Stays within this folder. */
 export function textOf(element: Element | undefined, bytes: Buffer): string {
   if (element === undefined || element.length > 1024 || element.dataOffset + element.length > bytes.length) return '';
@@ -95,7 +108,7 @@ function parseDataSet(bytes: Buffer, meta: { elements: Elements; position: numbe
   const done = (pixelsEnd: number | null): ParsedObject => ({ kind: 'parsed', meta: meta.elements, elements, bytes, pixelsEnd });
   while (stream.position + 8 <= bytes.length) {
     if (bytes.readUInt16LE(stream.position) >= pixelGroup) return done(pixelsEndOf(bytes, stream.position, explicit));
-    if (explicit && skipsSequence(bytes, stream)) continue;
+    if (skipsElement(bytes, stream, explicit)) continue;
     const element = explicit
       ? parser.readDicomElementExplicit(stream, stream.warnings)
       : parser.readDicomElementImplicit(stream, undefined, ((tag: string) => representations.get(tag)) as (tag: string) => string);
@@ -106,13 +119,20 @@ function parseDataSet(bytes: Buffer, meta: { elements: Elements; position: numbe
   return complete && whole ? done(null) : cut(whole);
 }
 
-/** Steps over a sequence of known length that nobody looks into; false where there is none. */
-function skipsSequence(bytes: Buffer, stream: ByteStream): boolean {
+/**
+ * Steps over an element of known length that nobody asks for: most of a header is such, private groups above all. False where the
+ * parser must look: at what is asked for, at lengths that are not stated, and at what has no form.
+ */
+function skipsElement(bytes: Buffer, stream: ByteStream, explicit: boolean): boolean {
   const at = stream.position;
-  if (at + 12 > bytes.length || bytes[at + 4] !== 0x53 || bytes[at + 5] !== 0x51) return false;
-  const length = bytes.readUInt32LE(at + 8);
-  if (length === undefinedLength || opened.has(tagAt(bytes, at))) return false;
-  stream.position = at + 12 + length;
+  const group = bytes[at]! + bytes[at + 1]! * 0x100;
+  // Odd groups are private: none is asked for.
+  if (group % 2 === 0 && wanted.has(group * 0x10000 + bytes[at + 2]! + bytes[at + 3]! * 0x100)) return false;
+  const head = explicit ? headBytes[bytes[at + 4]! * 0x100 + bytes[at + 5]!]! : 8;
+  if (head === 0 || at + head > bytes.length) return false;
+  const length = explicit && head === 8 ? bytes[at + 6]! + bytes[at + 7]! * 0x100 : bytes.readUInt32LE(at + head - 4);
+  if (length === undefinedLength) return false;
+  stream.position = at + head + length;
   return true;
 }
 

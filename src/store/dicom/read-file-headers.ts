@@ -21,7 +21,7 @@ export const firstBytes = 64 * 1024;
  * Reads the header of one file: its first 64 kB, more only where the header goes on, 8 MB at most. It never rejects.
  *
  * @param buffer At least 64 kB to read into; nothing that is given back points into it once the headers have been gone through.
- * @param mark What groups a sidecar, which has no series.
+ * @param hash What turns a UID into what groups images.
  */
 export async function readFileHeaders(disk: Disk, path: string, buffer: Buffer, hash: (uid: string) => string): Promise<FileHeaders> {
   let file: OpenFile | null = null;
@@ -44,8 +44,7 @@ export async function readFileHeaders(disk: Disk, path: string, buffer: Buffer, 
       if (parsed.kind === 'parsed') {
         const headers = objectHeaders(parsed, hash);
         if (headers === null) return { kind: 'problem', problem: fileTrouble('not-mr', path) };
-        const sizeBytes = whole ? bytes.length : parsed.pixelsEnd === null ? Number.POSITIVE_INFINITY : (await file.facts()).sizeBytes;
-        const isCut = parsed.pixelsEnd !== null && parsed.pixelsEnd > sizeBytes;
+        const isCut = parsed.pixelsEnd !== null && parsed.pixelsEnd > (whole ? bytes.length : (await file.facts()).sizeBytes);
         return { kind: 'headers', headers, problem: isCut ? fileTrouble('cut', path) : null };
       }
       if (bytes.length >= mostObjectBytes) return { kind: 'problem', problem: fileTrouble('too-long', path) };

@@ -6,5 +6,10 @@ import { createHmac, randomBytes } from 'node:crypto';
  */
 export function seriesHash(): (uid: string) => string {
   const key = randomBytes(32);
-  return (uid) => createHmac('sha256', key).update(uid).digest('hex').slice(0, 24);
+  let last = { uid: '', hash: '' };
+  return (uid) => {
+    // Images of one series mostly follow each other.
+    if (uid !== last.uid || last.hash === '') last = { uid, hash: createHmac('sha256', key).update(uid).digest('hex').slice(0, 24) };
+    return last.hash;
+  };
 }

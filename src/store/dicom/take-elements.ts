@@ -39,26 +39,37 @@ const binary: Readonly<Record<string, { readonly bytes: number; readonly read: (
   FD: { bytes: 8, read: (bytes, at) => bytes.readDoubleLE(at) },
 };
 
-/** The values of an element, as numbers or as pieces of text. */
+/** The values of an element, as numbers or as pieces of text; an empty list where there are none. */
 function valuesOf(element: Element, bytes: Buffer, row: AttributeRow): readonly unknown[] {
   const { length, dataOffset } = element;
   if (length === 0 || length > mostValueBytes || dataOffset + length > bytes.length) return [];
   const vr = element.vr === undefined || element.vr === 'UN' ? row.vr : element.vr;
   const form = binary[vr];
+  const values: unknown[] = [];
   if (form !== undefined) {
     if (length % form.bytes !== 0) return [];
-    return Array.from({ length: length / form.bytes }, (_, i) => form.read(bytes, dataOffset + i * form.bytes));
+    for (let at = dataOffset; at < dataOffset + length; at += form.bytes) values.push(form.read(bytes, at));
+    return values;
   }
-  const text = bytes.toString('latin1', dataOffset, dataOffset + length);
-  const end = text.indexOf('\0');
-  const pieces = (end === -1 ? text : text.slice(0, end)).split('\\').map((piece) => piece.trim());
-  if (row.kind === 'words') return pieces;
-  return pieces.map((piece) => (decimal.test(piece) ? Number(piece) : Number.NaN));
+  const padded = bytes.toString('latin1', dataOffset, dataOffset + length);
+  const end = padded.indexOf('\0');
+  const text = end === -1 ? padded : padded.slice(0, end);
+  let from = 0;
+  while (from <= text.length) {
+    const next = text.indexOf('\\', from);
+    const piece = text.slice(from, next === -1 ? text.length : next).trim();
+    values.push(row.kind === 'words' ? piece : decimal.test(piece) ? Number(piece) : Number.NaN);
+    if (next === -1) break;
+    from = next + 1;
+  }
+  return values;
 }
 
 /** Takes what the allow-list names out of a data set and the sequences in it that are looked into. */
 function takeElements(elements: Elements, bytes: Buffer, into: Attributes, nesting = 0): void {
   for (const tag in elements) {
+    // The functional groups of frames stand over what the data set says: they are taken after it.
+    if (nesting === 0 && (tag === shared || tag === perFrame)) continue;
     const element = elements[tag] as Element;
     const keyword = keywordByTag.get(tag);
     if (keyword !== undefined) takeValue(into, keyword, valuesOf(element, bytes, attributeRow(keyword)));
@@ -75,10 +86,10 @@ function takeElements(elements: Elements, bytes: Buffer, into: Attributes, nesti
  * all frames share stands as well (PS3.3, C.7.6.16). Given one by one, so that many frames need no memory.
  */
 export function* takeFrames(elements: Elements, bytes: Buffer): Generator<Attributes> {
-  const { [shared]: sharedGroups, [perFrame]: frames, ...root } = elements;
+  const frames = elements[perFrame];
   const common: Attributes = {};
-  takeElements(root, bytes, common);
-  if (sharedGroups?.items !== undefined) takeElements({ [shared]: sharedGroups }, bytes, common);
+  takeElements(elements, bytes, common);
+  for (const item of elements[shared]?.items ?? []) if (item.dataSet !== undefined) takeElements(item.dataSet.elements, bytes, common, 1);
   if (frames?.items === undefined || frames.items.length === 0) {
     yield common;
     return;

@@ -118,10 +118,10 @@ describe('folders', () => {
     const problems: string[] = [];
     const disk: Disk = {
       ...nodeDisk,
-      names: async (path) => {
-        const names = await nodeDisk.names(path);
+      entries: async (path) => {
+        const entries = await nodeDisk.entries(path);
         rmSync(join(folder, 'b'));
-        return names;
+        return entries;
       },
     };
     const counts = await readHeaders(disk, [folder], { header: () => {}, problem: ({ code }) => problems.push(code) });

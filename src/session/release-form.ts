@@ -107,6 +107,9 @@ export function releaseHeadline(state: State): string {
   if (findings === null) return 'Checking the preset';
   const failed = findings.filter(({ level }) => level === 'failure').length;
   if (failed > 0) return `CANNOT BE RELEASED: ${failed} ${failed === 1 ? 'check' : 'checks'} failed`;
+  const { basedOn, newest } = release;
+  if (basedOn !== null && newest !== null && newest.revision > basedOn)
+    return `Made from revision ${basedOn}; the site has revision ${newest.revision} already: d shows what differs`;
   const notes = findings.length === 0 ? '' : `, ${findings.length} to look at`;
   return `Checks passed${notes}. Not released yet: ${release.id} revision ${(release.basedOn ?? release.newest?.revision ?? 0) + 1}`;
 }

@@ -222,6 +222,12 @@ describe('releasing', () => {
     ).toContain('--presets DIR');
   });
 
+  it('of something older than what the site has says so before anything is typed', () => {
+    const state = withAnswers(atSite([...two, shipped]), world([...two, shipped]), 'right', 'liver', 'enter', 'end', 'r');
+    expect(state.shelf.release).toMatchObject({ basedOn: 1, study: { status: 'starter' } });
+    expect(releaseHeadline(state)).toBe('Made from revision 1; the site has revision 2 already: d shows what differs');
+  });
+
   it('goes back to the revisions and reads them anew', () => {
     const keys = ['r', 'down', 'down', 'enter', 'physicist', 'enter', 'enter', 'short holds', 'enter', 'enter', 'RELEASE', 'enter'];
     const state = withAnswers(draftWithFour(world(two)), world(two, released), ...keys);

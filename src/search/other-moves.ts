@@ -2,8 +2,13 @@ import { hasRfCap } from './limits.js';
 import type { SearchProblem } from './problem-to-solve.js';
 
 /** What else the trade does where no way fits, or before one is taken: words, never ways (common practice, no source). */
-export function otherMoves({ series, limits }: Pick<SearchProblem, 'series' | 'limits'>): string[] {
+export function otherMoves({ series, limits, set }: Pick<SearchProblem, 'series' | 'limits' | 'set'>): string[] {
   const moves: string[] = [];
+  const swapped = set.phaseDirection !== undefined && set.phaseDirection !== series.parameters.phaseDirection;
+  if (swapped && series.plane === 'axial')
+    moves.push(
+      'leave phase as it was and set saturation bands above and below first: they weaken the ghosts of blood that flows in, and take no time',
+    );
   if (limits.holdS !== undefined) {
     moves.push(
       'coach, and practise the hold once; hold at the end of expiration',

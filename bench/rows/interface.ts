@@ -161,7 +161,10 @@ async function mostBytes(before: readonly string[], keys: readonly string[]): Pr
   });
 }
 
-function bytesRow(name: string, budget: number, before: readonly string[], keys: readonly string[]): Row {
+/** From the first line of the series screen to its slice count. */
+const toSlices = Array.from({ length: 7 }, () => down);
+
+function bytesRow(name: string, budget: number | null, before: readonly string[], keys: readonly string[]): Row {
   return { name: `bytes of a key at 100x30: ${name}`, against: '', unit: 'bytes', budget, measure: () => mostBytes(before, keys) };
 }
 
@@ -234,7 +237,8 @@ export const rows: readonly Row[] = [
     measure: () => keypress(2000),
   },
   bytesRow('one number', 60, ['1'], ['2', '3', '4']),
-  bytesRow('a step', 300, [down, down], ['+', '+', '-', '-']),
+  bytesRow('a step of the slice count, the series changed before', 300, [...toSlices, '-', '-'], ['-', '-', '+', '-']),
+  bytesRow('the first change of a dynamic series, with the caution it brings and takes away', null, toSlices, ['-', '+', '-', '+']),
   bytesRow('a range chart that shifts', 1000, ['c'], ['+', '+', '-', '+']),
   bytesRow('a new screen', 4500, [], ['p', 'o', 'e', 'h']),
   {

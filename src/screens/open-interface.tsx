@@ -54,9 +54,10 @@ export async function openInterface(setup: InterfaceSetup): Promise<number> {
     const [next, effects] = update(state, message);
     const changed = next !== state;
     state = next;
-    for (const effect of effects) carryOut(effect);
     keepTime();
     if (changed) mounted?.redraw();
+    // After the frame: an effect may load something first, and the frame need not wait for that.
+    if (effects.length > 0) setImmediate(() => effects.forEach(carryOut));
   }
 
   function carryOut(effect: Effect): void {

@@ -44,7 +44,7 @@ const probeMs = 2000;
 const lostAnswerMs = 5000;
 
 /** About what one number takes, with the way there. */
-const shortStretch = 24;
+const shortStretch = 40;
 
 const statusQuery = '\u001b[5n';
 const beginUpdate = '\u001b[?2026h';

@@ -177,7 +177,7 @@ describe('the cursor', () => {
   it('is shown on the marked cell, hidden while much is written, and hidden when nothing is marked', () => {
     expect(draw(`ab${cursorHere('c')}`)).toBe(`${begin}\u001b[1;1Habc\u001b[1;3H\u001b[?25h${end}`);
     expect(draw(`xb${cursorHere('c')}`)).toBe(`${begin}\u001b[1;1Hx\u001b[1;3H${end}`);
-    expect(draw(`xb${cursorHere('c')}\n123456789\n123456789`)).toContain(`${begin}\u001b[?25l\u001b[2;1H1234`);
+    expect(draw(`xb${cursorHere('c')}\n123456789012345678\n123456789012345678`)).toContain(`${begin}\u001b[?25l\u001b[2;1H1234`);
     draw(`xb${cursorHere('c')}`);
     expect(draw('xbc')).toBe(`${begin}\u001b[?25l${end}`);
   });

@@ -27,6 +27,7 @@ const startsOf = {
   react: 'react.transitional.element',
   ink: 'must be rendered inside <Text> component',
   parser: 'Parenthesis ) expected',
+  objects: 'missing required meta header attribute',
 } as const;
 
 /** How often the module was started by a command. */
@@ -164,6 +165,12 @@ describe('what is loaded', () => {
     expect(starts('parser', ['presets', 'check'])).toBe(1);
   });
 
+  it('reading headers starts the reader of objects, and no parser of formulas', () => {
+    const sidecar = resolve('tests/headers/invented-bold.json');
+    expect(starts('objects', ['read', sidecar])).toBe(1);
+    expect(starts('parser', ['read', sidecar])).toBe(0);
+  });
+
   it.each(commands.map((args) => [args.join(' ') || 'the demo session', args] as const))(
     '%s starts no parser of formulas',
     (_name, args) => {
@@ -172,10 +179,11 @@ describe('what is loaded', () => {
   );
 
   it.each(commands.map((args) => [args.join(' ') || 'the demo session', args] as const))(
-    '%s starts neither ink nor react',
+    '%s starts neither ink nor react, nor the reader of objects',
     (_name, args) => {
       expect(starts('react', args)).toBe(0);
       expect(starts('ink', args)).toBe(0);
+      expect(starts('objects', args)).toBe(0);
     },
   );
 

@@ -23,7 +23,7 @@ export async function runPicture(request: CommandRequest, io: CommandIo): Promis
   if (!read.ok) return complain(read, io);
   const ask = read.value;
   const sheet = drawSheet(ask);
-  if (!sheet.ok) return complain({ ok: false, exit: exitOf(sheet.problems), problems: sheet.problems }, io);
+  if (!sheet.ok) return complain({ ok: false, exit: exitOf(sheet.problems, request.has('body')), problems: sheet.problems }, io);
   const { pair, words, bytes } = sheet.value;
   const saved = await savePicture(io.disk, ask.out, bytes, fileModeOf(settings.value.settings), request.has('replace'));
   if (!saved.ok) return complain(refusedByStore(saved.problems), io);
@@ -36,9 +36,10 @@ export async function runPicture(request: CommandRequest, io: CommandIo): Promis
   return exitCodes.done;
 }
 
-/** A body that was typed too small is wrong use; a timing or a grid that gives no picture is a check that failed. */
-function exitOf(problems: readonly Problem[]): ExitCode {
-  return problems[0]?.code === 'body-too-small' ? exitCodes.wrongUse : exitCodes.failed;
+/** A body that was typed too small is wrong use, an object too large for its own body bad data; a timing or a grid without a picture is a check that failed. */
+function exitOf(problems: readonly Problem[], typed: boolean): ExitCode {
+  if (problems[0]?.code === 'body-too-small') return typed ? exitCodes.wrongUse : exitCodes.badData;
+  return exitCodes.failed;
 }
 
 function documentOf(ask: PictureAsk, { preset, now, white, notes }: PicturePair, words: SheetWords): object {

@@ -1,5 +1,6 @@
 import type { Baseline } from '../calc/baseline.js';
 import type { Body } from '../calc/body.js';
+import { classRow } from '../calc/classes.js';
 import { modelOf, type SeriesModel, weightedSignal } from '../calc/model.js';
 import type { Outcome } from '../calc/problem.js';
 import type { Scanner } from '../calc/scanner.js';
@@ -79,13 +80,14 @@ function drawn(model: SeriesModel, request: PairRequest): Outcome<{ readonly pic
   const picture = pictureOf({ model, object: object.value, plane }, options);
   if (!picture.ok) return picture;
   const unknown = [...tissueWeights(model, object.value)].flatMap(([name, signal]) => (weightedSignal(signal) === null ? [name] : []));
-  return { ok: true, value: { picture: picture.value, notes: notesOf(model, noise, unknown) } };
+  return { ok: true, value: { picture: picture.value, notes: notesOf(model, noise, unknown, object.value.enlarged) } };
 }
 
-function notesOf(model: SeriesModel, noise: number | null, unknown: readonly string[]): string[] {
+function notesOf(model: SeriesModel, noise: number | null, unknown: readonly string[], enlarged: boolean): string[] {
   const p = model.series.parameters;
   const volume = model.series.acquisition === '3D';
   const cases: readonly (readonly [boolean, string])[] = [
+    [enlarged, 'The body is drawn larger than typed: the shapes inside need the room.'],
     [noise === null, 'The noise of this setting is not known: drawn without noise.'],
     [unknown.length > 0, `No signal is known here for ${unknown.join(', ')}: drawn black.`],
     [p.partialFourierPhase < 1, 'Partial Fourier: lines that are not acquired are filled with zeros.'],
@@ -94,6 +96,11 @@ function notesOf(model: SeriesModel, noise: number | null, unknown: readonly str
       'Acceleration: noise by the mean g of the table, the same everywhere; no residue of unfolding.',
     ],
     [volume, 'A partition is drawn as a slice with sharp edges; what is left out along slices is not drawn.'],
+    [volume && p.ellipticalSampling, 'Elliptical sampling leaves out corners along slices: not drawn.'],
+    [volume && classRow(model.key).train, 'The train blurs along phase alone.'],
+    [p.secondEchoTimeMs !== undefined, 'The first of the two echoes is drawn.'],
+    [p.diffusion !== undefined, 'The highest b-value is drawn.'],
+    [p.fatSuppression === 'two-point', 'The water image is drawn.'],
     [model.key === 'rotating-strip-fast-spin-echo/2D', 'Rotating strips are drawn as straight lines.'],
     [p.inversionTimeMs !== undefined, 'Tissues after an inversion are drawn by their magnitude, edges between signs included.'],
   ];

@@ -18,6 +18,8 @@ export interface PlacedObject {
   readonly shapes: readonly PlacedShape[];
   /** Extents of the body in the picture: across, down, mm. */
   readonly bodyMm: readonly [number, number];
+  /** True where the body is drawn larger than it was typed. */
+  readonly enlarged: boolean;
   readonly tissues: readonly string[];
 }
 
@@ -32,16 +34,19 @@ function tissueNamed(word: string, series: Pick<Series, 'target' | 'comparison'>
   return word === 'target' ? series.target : word === 'comparison' ? series.comparison : word;
 }
 
-/** Puts an object into the plane of a series, its body at the typed size. A body too small for the shapes inside is refused. */
+/** A body that is a little too small for the shapes is drawn larger, by at most this; beyond, the picture would be of another body. */
+const mostEnlarged = 1.6;
+
+/**
+ * Puts an object into the plane of a series, its body at the typed size, or larger where the shapes inside need it. A body far too small for them
+ * is refused.
+ */
 export function placeObject(object: ObjectFile, series: Series, plane: PicturePlane, body: Body): Outcome<PlacedObject> {
-  const bodyMm = [extentMm(object, body, plane.across), extentMm(object, body, plane.down)] as const;
+  const typedMm = [extentMm(object, body, plane.across), extentMm(object, body, plane.down)] as const;
+  const bodyMm = roomyBody(object, typedMm);
   const outline = ellipseOf(bodyMm, 0);
   const within = ellipseOf(bodyMm, object.body.fatRimMm);
-  const lost = object.shapes.find(
-    (shape) =>
-      shape.inside === undefined &&
-      (within === null || [-4, 0, 4].some((mm) => ellipsesOf(shape, mm).some((one) => !liesWithin(one, within)))),
-  );
+  const lost = within === null ? undefined : lostShape(object, within);
   if (lost !== undefined || within === null || outline === null) {
     const message = `a body of ${bodyMm[0]} x ${bodyMm[1]} mm is too small for "${lost?.id ?? 'its fat rim'}" of the object ${object.id}.`;
     return {
@@ -68,7 +73,24 @@ export function placeObject(object: ObjectFile, series: Series, plane: PicturePl
     shapes.push({ tissue, insteadOf: shape.inside === undefined ? inner : (tissueOfId.get(shape.inside) ?? inner), shape });
   }
   const tissues = [...new Set(shapes.map(({ tissue }) => tissue))];
-  return { ok: true, value: { shapes, bodyMm, tissues } };
+  return { ok: true, value: { shapes, bodyMm, enlarged: bodyMm !== typedMm, tissues } };
+}
+
+/** A shape that leaves the inside of the body. */
+function lostShape(object: ObjectFile, within: PlaneEllipse): ObjectShape | undefined {
+  return object.shapes.find(
+    (shape) => shape.inside === undefined && [-4, 0, 4].some((mm) => ellipsesOf(shape, mm).some((one) => !liesWithin(one, within))),
+  );
+}
+
+/** The typed extents, or in the same proportion the smallest ones in steps of 5 % that hold every shape; the typed ones where none do. */
+function roomyBody(object: ObjectFile, typedMm: readonly [number, number]): readonly [number, number] {
+  for (let factor = 1; factor <= mostEnlarged + 1e-9; factor += 0.05) {
+    const bodyMm = factor === 1 ? typedMm : ([typedMm[0] * factor, typedMm[1] * factor] as const);
+    const within = ellipseOf(bodyMm, object.body.fatRimMm);
+    if (within !== null && lostShape(object, within) === undefined) return bodyMm;
+  }
+  return typedMm;
 }
 
 function ellipseOf([across, down]: readonly [number, number], rimMm: number): PlaneEllipse | null {

@@ -18,10 +18,10 @@ export function keepDrawing(before: State, after: State): Change {
     return only(after);
   const problem = pictureProblemOf(after);
   if (problem === null) return only(after);
-  const key = pictureKey(place.seriesId, problem);
+  const key = pictureKey(after, problem);
   if (picture?.key === key) return only(after);
   const ask = after.asks + 1;
-  const drawn = picture?.seriesId === place.seriesId ? picture.drawn : null;
+  const drawn = picture?.seriesId === place.seriesId && before.opened === after.opened ? picture.drawn : null;
   const next: State = {
     ...after,
     asks: ask,

@@ -224,6 +224,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('end', '', '', '', moveOnFront(99999)),
     row(['tab', 'shift-tab'], 'Tab', 'SNR or loss', 'The most SNR, or the least loss of everything together.', turnFront),
     row('enter', 'Enter', 'take', 'Takes this point with all its changes; undo takes it back.', takeFront),
+    row('s', 's', 'see', 'Pictures of an invented object: the preset, and this point.', showPicture),
     row('c', 'c', '', 'Back to the ways.', back),
     ...everywhere,
   ],

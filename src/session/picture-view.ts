@@ -29,7 +29,17 @@ export function pictureProblemOf(state: State): PictureProblem | null {
   };
 }
 
-/** Two asks with the same key have the same pictures, within one opened study. */
-export function pictureKey(seriesId: string, { parameters, scanner, body }: PictureProblem): string {
-  return JSON.stringify([seriesId, parameters, scanner.name, scanner.fieldT, scanner.coil?.name, body]);
+/** Two asks with the same key have the same pictures. */
+export function pictureKey({ opened, place }: State, { parameters, scanner, body }: PictureProblem): string {
+  return JSON.stringify([
+    opened?.study.id,
+    opened?.study.revision,
+    opened?.hash,
+    place.seriesId,
+    parameters,
+    scanner.name,
+    scanner.fieldT,
+    scanner.coil?.name,
+    body,
+  ]);
 }

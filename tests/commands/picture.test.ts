@@ -127,6 +127,15 @@ describe('picture', () => {
     const negative = await draw('--object', own, '--replace');
     expect(negative.exit).toBe(65);
     expect(negative.err).toMatch(/own\.json, line \d+, shapes\.1\.halfAxesMm\.1: -32 was given/);
+    const many = Array.from({ length: 10_000 }, (_, i) => `{"id":"e${i}","tissue":"CSF","atMm":[0,0],"halfAxesMm":[1,1]}`);
+    writeFileSync(own, knee.replace('"shapes": [', `"shapes": [${many.join(',')},`));
+    const endless = await draw('--object', own, '--replace');
+    expect(endless.exit).toBe(65);
+    expect(endless.err).toMatch(/own\.json has \d+ bytes or more, expected 200000 at most/);
+    writeFileSync(own, knee.replace('"leftRightMm": 125', '"leftRightMm": 40'));
+    const narrow = await draw('--object', own, '--replace');
+    expect(narrow.exit).toBe(65);
+    expect(narrow.err).toContain('is too small for');
     writeFileSync(own, knee.replaceAll('synovial fluid', 'synovial liquid'));
     const unknown = await draw('--object', own, '--replace');
     expect(unknown.exit).toBe(65);

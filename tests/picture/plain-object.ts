@@ -15,7 +15,7 @@ export function placed(tissue: string, shape: Omit<ObjectShape, 'id' | 'tissue'>
 
 /** An object of shapes, without a body around them. */
 export function objectOf(shapes: readonly PlacedShape[], bodyMm: readonly [number, number] = [10, 10]): PlacedObject {
-  return { shapes, bodyMm, tissues: [...new Set(shapes.map(({ tissue }) => tissue))] };
+  return { shapes, bodyMm, enlarged: false, tissues: [...new Set(shapes.map(({ tissue }) => tissue))] };
 }
 
 /** Model of an invented series, its own baseline, at 1.5 T unless another is given. */

@@ -95,9 +95,11 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   };
   const beat = setInterval(() => void drafts.beat(), heartbeatMs);
   beat.unref();
-  const presets = loadPresets(world);
-  // The list of presets is on screen before scanners and rules are read.
-  const later = presets.then(() => Promise.all([loadScanners(world), loadSiteRules(world)]));
+  const named = settings.scannerName !== '';
+  // A key typed ahead opens a preset as soon as presets are there: the scanner that the settings name is known before.
+  const presets = Promise.all([...(named ? [loadScanners(world)] : []), loadPresets(world)]);
+  // Else the list of presets is on screen before scanners are read, and always before rules are.
+  const later = presets.then(() => Promise.all([...(named ? [] : [loadScanners(world)]), loadSiteRules(world)]));
   return {
     defaults: {
       role: settings.role,
@@ -112,7 +114,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
     color: settings.colour === 'auto' ? undefined : settings.colour,
     runEffect: (effect) => runEffect(world, effect),
     firstMessages: [
-      presets.then((message) => [message]),
+      presets,
       later,
       loadDrafts(world),
       Promise.resolve(notes.map(({ message }): Message => ({ kind: 'note', words: message }))),

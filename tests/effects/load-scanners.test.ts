@@ -46,6 +46,13 @@ describe('scanner files and rules of the site at the start of the interface', ()
     expect(notesOf(messages)).toEqual([]);
   });
 
+  it('knows the scanner that the settings name before a preset can be opened', async () => {
+    const order = (messages: readonly Message[]) =>
+      messages.map(({ kind }) => kind).filter((kind) => ['scanners', 'presets'].includes(kind));
+    expect(order(await told({ 'config.json': '{ "scannerName": "demo-3t" }' }))).toEqual(['scanners', 'presets']);
+    expect(order(await told({}))).toEqual(['presets', 'scanners']);
+  });
+
   it('a scanner file of the site wins over a shipped one of the same name', async () => {
     const messages = await told({ 'scanners/own.json': room2.replace('room 2', 'Demo-3T') });
     const scanners = messages.flatMap((message) => (message.kind === 'scanners' ? message.scanners : []));

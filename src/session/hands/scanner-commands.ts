@@ -41,7 +41,8 @@ function onEquipment(state: State, opened: Opened, equipment: Equipment): State 
     series: session.series.map((series) => ({ ...series, before: null, after: null })),
   });
   const next = edit(state, words, change);
-  return { ...next, opened: others.length === 0 ? opened : { ...opened, others } };
+  // A way that was looked at or taken was worked out on the other one.
+  return { ...next, lastWay: null, taken: null, opened: others.length === 0 ? opened : { ...opened, others } };
 }
 
 function isSame(a: Equipment, b: Equipment): boolean {

@@ -7,7 +7,7 @@
  */
 import { spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { chmod, mkdir, readdir, readFile, rename, rm } from 'node:fs/promises';
+import { chmod, mkdir, readdir, readFile, rename, rm, writeFile } from 'node:fs/promises';
 import { fileURLToPath } from 'node:url';
 import { type BuildOptions, build, type Plugin } from 'esbuild';
 import { inkDefines, replaceInkCaches } from '../src/terminal/ink-caches/ink-bundling.js';
@@ -51,8 +51,8 @@ const shared: BuildOptions = {
   logLevel: 'warning',
 };
 
-/** A worker is a module of its own; CommonJS packages in it ask for Node's own modules by `require`. */
-const workerBanner = "import { createRequire as __createRequire } from 'node:module';\nconst require = __createRequire(import.meta.url);";
+/** What Node starts is a plain script (`dist/package.json` says so): a module takes Node longer to start. */
+const script: BuildOptions = { format: 'cjs', define: { ...inkDefines, 'import.meta.url': '""' } };
 
 /** The program is one function that `src/launch.ts` calls: V8 keeps compiled code of scripts, not of modules. */
 const program: BuildOptions = {
@@ -100,11 +100,13 @@ async function removeOlder(): Promise<void> {
 
 compileSchemas();
 await mkdir(`${root}dist`, { recursive: true });
-await bundle('src/effects/search-worker.ts', 'dist/search-worker.js', { banner: { js: workerBanner } });
-await bundle('src/effects/picture-worker.ts', 'dist/picture-worker.js', { banner: { js: workerBanner } });
+await writeFile(`${root}dist/package.json`, '{ "type": "commonjs" }\n');
+await bundle('src/effects/search-worker.ts', 'dist/search-worker.js', script);
+await bundle('src/effects/picture-worker.ts', 'dist/picture-worker.js', script);
 const name = await bundleProgram();
 await writeCodeCache(root, name);
 await bundle('src/launch.ts', 'dist/holdfast.js', {
+  ...script,
   banner: { js: '#!/usr/bin/env node' },
   define: { __programName: JSON.stringify(name) },
 });

@@ -4,25 +4,26 @@
  */
 import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
-import { fileURLToPath } from 'node:url';
+import { join } from 'node:path';
+import { pathToFileURL } from 'node:url';
 import { Script } from 'node:vm';
 
 /** Name of the program's file without its ending, put in by the build; it changes with every byte of the program, since V8 does not look. */
 declare const __programName: string;
 
-const url = new URL(`./${__programName}.cjs`, import.meta.url);
+const file = join(__dirname, `${__programName}.cjs`);
 
 function compiled(): Buffer | undefined {
   try {
-    return readFileSync(fileURLToPath(new URL(`./${__programName}.cache`, import.meta.url)));
+    return readFileSync(join(__dirname, `${__programName}.cache`));
   } catch {
     return undefined;
   }
 }
 
 const cachedData = compiled();
+const filename = pathToFileURL(file).href;
 // The bundle is ASCII: read as such, it need not be decoded.
-const source = readFileSync(fileURLToPath(url), 'latin1');
-const script = new Script(source, cachedData === undefined ? { filename: url.href } : { filename: url.href, cachedData });
+const script = new Script(readFileSync(file, 'latin1'), cachedData === undefined ? { filename } : { filename, cachedData });
 const program = script.runInThisContext() as (require: NodeJS.Require, programUrl: string) => void;
-program(createRequire(import.meta.url), url.href);
+program(createRequire(file), filename);

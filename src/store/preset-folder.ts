@@ -111,6 +111,9 @@ export async function findPreset(
   );
 }
 
+/** Files that are read side by side: most of the time of one is waiting, on a file system over a network nearly all. */
+const filesAtOnce = 8;
+
 async function readFiles(
   disk: Disk,
   { folder, origin }: PresetFolder,
@@ -119,10 +122,12 @@ async function readFiles(
 ): Promise<{ presets: StoredPreset[]; problems: StoreProblem[] }> {
   const presets: StoredPreset[] = [];
   const problems: StoreProblem[] = [];
-  for (const name of names) {
-    const read = await readPresetFile(disk, join(folder, name), origin, parse);
-    if (read.ok) presets.push(read.value);
-    else problems.push(...read.problems);
+  for (let from = 0; from < names.length; from += filesAtOnce) {
+    const some = names.slice(from, from + filesAtOnce);
+    for (const read of await Promise.all(some.map((name) => readPresetFile(disk, join(folder, name), origin, parse)))) {
+      if (read.ok) presets.push(read.value);
+      else problems.push(...read.problems);
+    }
   }
   return { presets, problems };
 }

@@ -51,10 +51,12 @@ function isEachSure(text: string): boolean {
   return true;
 }
 
-const graphemes = new Intl.Segmenter(undefined, { granularity: 'grapheme' });
+/** Made at its first use: that reads tables of the system, which the start need not wait for. */
+let graphemes: Intl.Segmenter | null = null;
 
 /** The characters of a text as people count them: a letter with its accents is one. */
 export function graphemesOf(text: string): readonly string[] {
+  graphemes ??= new Intl.Segmenter(undefined, { granularity: 'grapheme' });
   return Array.from(graphemes.segment(text), ({ segment }) => segment);
 }
 

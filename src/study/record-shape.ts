@@ -1,4 +1,5 @@
 import { type ParameterKey, parameterKeys, parameterRow } from '../calc/parameters.js';
+import { isRemembered } from './known-values.js';
 import { type RecordedLimits, recordVersion } from './record.js';
 import { holdStates, outcomeWords, qualityWords, recommendationWords } from './record-words.js';
 
@@ -119,13 +120,13 @@ function parameterCheck(key: ParameterKey): Check {
 
 const values = withKeys({ parameters: withSomeKeys(parameterChecks), figures: numbersOrNull });
 
-/** Planned values found right before: a reader of many records meets the same objects again and again. */
+/** Remembered planned values that were found right: a reader of many records meets the same objects again and again. */
 const rightPlans = new WeakSet<object>();
 
 const plannedValues: Check = (value) => {
   if (isObject(value) && rightPlans.has(value)) return null;
   const fault = values(value);
-  if (fault === null) rightPlans.add(value as object);
+  if (fault === null && isRemembered(value as object)) rightPlans.add(value as object);
   return fault;
 };
 

@@ -3,7 +3,7 @@ export interface Row {
   readonly name: string;
   /** What the subject is divided by. */
   readonly against: string;
-  readonly unit: 'us' | 'ms' | 'MB' | 'bytes';
+  readonly unit: 'us' | 'ms' | 'MB' | 'bytes' | 'ways';
   /** Highest ratio allowed (subject / yardstick), or highest subject where there is no yardstick; null is printed only. */
   readonly budget: number | null;
   measure(): Promise<Measured>;

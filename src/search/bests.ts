@@ -1,9 +1,11 @@
 import { answers, type Candidate, compareCandidates, compareMeasures, type WayKind, wayKinds } from './candidate.js';
 import type { Pulse } from './control.js';
 import { type FewBucket, type FewLine, fewBuckets } from './few-changes.js';
+import type { LineBucket } from './line-buckets.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchTables } from './search-tables.js';
 import { joinedPoint, type SignalEntry, SignalLists } from './signal-lists.js';
+import type { Timely } from './signal-state.js';
 import type { TimeFamily } from './time-family.js';
 
 type Measures = Omit<Candidate, 'point' | 'rank'>;
@@ -74,9 +76,10 @@ export function bestsWithin(tables: SearchTables, mostChanges: number, bests: Be
   const point = setting.variables.map(() => 0);
   walkPoints(setting.variables, groups.shared, mostChanges, point, (sharedChanges) => {
     const left = mostChanges - sharedChanges;
-    const lists = new SignalLists(setting, groups, signals, left, pulse);
+    const buckets = fewBuckets(tables, point, left, pulse);
+    const lists = new SignalLists(setting, groups, signals, left, pulse, timelyFor(tables, buckets, left));
     const timings = new Map<string, readonly Timing[]>();
-    for (const bucket of fewBuckets(tables, point, left, pulse)) {
+    for (const bucket of buckets) {
       const { train } = bucket.bucket;
       const ofTrain = timings.get(train) ?? timingsOf(lists.of(bucket.bucket));
       timings.set(train, ofTrain);
@@ -84,6 +87,33 @@ export function bestsWithin(tables: SearchTables, mostChanges: number, bests: Be
     }
     join.forget();
   });
+}
+
+/** Tells whether some bucket has few enough lines for a timing that takes so many changes: a signal without such lines is of no use. */
+function timelyFor({ join }: SearchTables, buckets: readonly FewBucket[], left: number): Timely {
+  const byTime = new Map<number, { readonly bucket: LineBucket; readonly fewest: number[] }>();
+  for (const { bucket, fewestLines } of buckets) {
+    const known = byTime.get(bucket.timeId);
+    if (known === undefined) byTime.set(bucket.timeId, { bucket, fewest: [...fewestLines] });
+    else for (const [i, lines] of fewestLines.entries()) known.fewest[i] = Math.min(known.fewest[i] as number, lines);
+  }
+  /** Most changes that leave a timing lines for which there is time; -1 where none do. */
+  const mostChanges = new Map<number, number>();
+  return (timing, changes) => {
+    let most = mostChanges.get(timing.timeId);
+    if (most === undefined) {
+      most = -1;
+      for (const { bucket, fewest } of byTime.values()) {
+        const times = join.times(timing, bucket);
+        for (let own = left; own > most; own -= 1) {
+          const lines = fewest[left - own] as number;
+          if (Number.isFinite(lines) && times.allows(Math.ceil(lines))) most = own;
+        }
+      }
+      mostChanges.set(timing.timeId, most);
+    }
+    return changes <= most;
+  };
 }
 
 /** Signals that play their lines in the same time, fewest changes first. */
@@ -107,7 +137,7 @@ function timingsOf(signals: readonly SignalEntry[]): Timing[] {
 /** Offers the ways of one bucket: lines that leave time for some signal, with the signals that leave room for their changes. */
 function bestsOfBucket(
   tables: SearchTables,
-  { bucket, fewestChanges, fewestLines, lines }: FewBucket,
+  { bucket, fewestChanges, fewestLines, lines: linesWithin }: FewBucket,
   timings: readonly Timing[],
   sharedChanges: number,
   left: number,
@@ -121,18 +151,23 @@ function bestsOfBucket(
   for (const timing of timings) {
     if (timing.fewestChanges > room) break;
     const times = join.times((timing.entries[0] as SignalEntry).state, bucket);
-    if (times.mostLines < fewestLines) continue;
+    // One time is asked before the most lines are sought.
+    const fewest = fewestLines[left - timing.fewestChanges] as number;
+    if (!times.allows(Math.ceil(fewest)) || times.mostLines < fewest) continue;
     most = Math.max(most, times.mostLines);
     usable.push({ entries: timing.entries, times });
   }
-  const all = most === 0 ? [] : lines(most, left);
+  const all = most === 0 ? [] : linesWithin(most, left);
   if (all.length === 0) return;
-  const snrs = all.map(({ averaging }) => (averaging < 0 ? null : bucket.signalFreeSnr(averaging)));
+  // Lines that leave room for so many changes of the signal.
+  const rooms = Array.from({ length: left + 1 }, (_, changes) =>
+    changes === 0 ? all : all.filter((line) => line.changes <= left - changes),
+  );
   const signalAndShared = [...groups.shared, ...groups.signal];
-  const offer = (signal: SignalEntry, line: FewLine, snr: number | null, times: TimeFamily) => {
+  const offer = (signal: SignalEntry, line: FewLine, times: TimeFamily) => {
     const { state } = signal;
     pulse.formed += 1;
-    const noise = join.noise(state, snr);
+    const noise = join.noise(state, line.signalFreeSnr);
     if (!join.audible(noise)) return;
     const time = times.at(line.lineCount);
     const rank = Math.max(time.rank, state.rfRank) as 0 | 1;
@@ -155,16 +190,12 @@ function bestsOfBucket(
     const within = times.mostLines;
     for (const signal of entries) {
       if (signal.changes > room) break;
-      if ((all[0] as FewLine).lineCount > within) break;
-      let playable = false;
-      for (let k = 0; k < all.length; k += 1) {
-        const line = all[k] as FewLine;
+      const lines = rooms[signal.changes] as readonly FewLine[];
+      if (lines.length === 0 || (lines[0] as FewLine).lineCount > within || !shortest.playable(signal.state, bucket)) continue;
+      for (const line of lines) {
         if (line.lineCount > within) break;
-        if (line.changes + signal.changes > left) continue;
         pulse.beat();
-        if (!playable && !shortest.playable(signal.state, bucket)) break;
-        playable = true;
-        offer(signal, line, snrs[k] as number | null, times);
+        offer(signal, line, times);
       }
     }
   }

@@ -3,7 +3,6 @@ import { LineBucket } from './line-buckets.js';
 import { LinePairs } from './line-pairs.js';
 import { type Part, partsOf } from './line-parts.js';
 import { LineShape } from './line-shapes.js';
-import type { LineVoxel } from './line-states.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchTables } from './search-tables.js';
 import { directionsOf } from './whole-lines.js';
@@ -11,8 +10,8 @@ import { directionsOf } from './whole-lines.js';
 /** One choice of the line variables. */
 export interface FewLine {
   readonly lineCount: number;
-  /** Lines that average noise; -1 where the noise of this acceleration is not known. */
-  readonly averaging: number;
+  /** SNR without signal; null where the noise of this acceleration is not known. */
+  readonly signalFreeSnr: number | null;
   readonly changes: number;
   /** The choice, a whole point whose shared variables are right. */
   readonly point: () => readonly number[];
@@ -23,8 +22,8 @@ export interface FewBucket {
   readonly bucket: LineBucket;
   /** The fewest changes of its choices. */
   readonly fewestChanges: number;
-  /** No choice has fewer lines. */
-  readonly fewestLines: number;
+  /** No choice with at most so many changes has fewer lines; infinite where none has so few changes. */
+  readonly fewestLines: readonly number[];
   /** Choices with at most so many lines and at most so many changes, fewest lines first. */
   readonly lines: (mostLines: number, mostChanges: number) => FewLine[];
 }
@@ -58,11 +57,10 @@ function ofParts(tables: SearchTables, point: number[], mostChanges: number, pul
   const found: FewBucket[] = [];
   // Readouts of a cycle take no time of their own.
   const volume = problem.series.acquisition === '3D' && problem.series.family !== 'inversion-prepared-gradient-echo';
-  const leastSlices = slices.map(leastOf);
+  const leastSlices = slices.map((parts) => leastOf(parts, mostChanges).map((least) => (volume || !Number.isFinite(least) ? least : 1)));
   for (const those of planes) {
-    const leastPlane = leastOf(those);
+    const leastPlane = leastOf(those, mostChanges);
     for (const [i, others] of slices.entries()) {
-      const leastSlice = leastSlices[i] as number;
       const a = those[0] as Part;
       const b = others[0] as Part;
       if (a.changes + b.changes > mostChanges) continue;
@@ -81,28 +79,42 @@ function ofParts(tables: SearchTables, point: number[], mostChanges: number, pul
             pulse.beat();
             const averaging = pairs.join(one, other);
             const { lineCount } = pairs;
-            if (lineCount <= mostLines) kept.push({ lineCount, averaging, changes, point: () => pointOf(one, other) });
+            if (lineCount > mostLines) continue;
+            const signalFreeSnr = averaging < 0 ? null : bucket.signalFreeSnr(averaging);
+            kept.push({ lineCount, signalFreeSnr, changes, point: () => pointOf(one, other) });
           }
         }
         return kept.sort(byLines);
       };
-      found.push({ bucket, fewestChanges: a.changes + b.changes, fewestLines: leastPlane * (volume ? leastSlice : 1), lines });
+      found.push({ bucket, fewestChanges: a.changes + b.changes, fewestLines: leastOfBoth(leastPlane, leastSlices[i] as number[]), lines });
     }
   }
   return found;
 }
 
-/** A bound: no fewer lines are acquired along a direction than are encoded over its acceleration. */
-function leastOf(parts: readonly Part[]): number {
-  let least = Number.POSITIVE_INFINITY;
-  for (const { encoded, factor } of parts) least = Math.min(least, encoded / Math.max(1, factor));
-  return least * (1 - 1e-9);
+/** A bound for each number of changes: no fewer lines are acquired along a direction than are encoded over its acceleration. */
+function leastOf(parts: readonly Part[], mostChanges: number): number[] {
+  const least = Array.from({ length: mostChanges + 1 }, () => Number.POSITIVE_INFINITY);
+  for (const { encoded, factor, changes } of parts)
+    least[changes] = Math.min(least[changes] as number, (encoded / Math.max(1, factor)) * (1 - 1e-9));
+  return least;
+}
+
+/** The bound of two directions together, for at most so many changes of both. */
+function leastOfBoth(plane: readonly number[], slice: readonly number[]): number[] {
+  const least: number[] = [];
+  for (let changes = 0; changes < plane.length; changes += 1) {
+    let own = least.at(-1) ?? Number.POSITIVE_INFINITY;
+    for (let i = 0; i <= changes; i += 1) own = Math.min(own, (plane[i] as number) * (slice[changes - i] as number));
+    least.push(own);
+  }
+  return least;
 }
 
 /** Where something ties both directions, their choices are gone through together. */
 function together(tables: SearchTables, point: number[], mostChanges: number, pulse: Pulse): FewBucket[] {
   const { setting, groups, lines: table } = tables;
-  const found = new Map<string, { voxel: LineVoxel; parameters: typeof table.parameters; all: FewLine[] }>();
+  const found = new Map<string, { bucket: LineBucket; all: FewLine[] }>();
   walkPoints(setting.variables, groups.lines, mostChanges, point, (changes) => {
     pulse.beat();
     const voxel = table.voxelAt(point);
@@ -110,21 +122,22 @@ function together(tables: SearchTables, point: number[], mostChanges: number, pu
     const word = table.bucketWord();
     let one = found.get(word);
     if (one === undefined) {
-      one = { voxel, parameters: { ...table.parameters }, all: [] };
+      const first = [...point];
+      one = { bucket: new LineBucket(voxel, first, { ...table.parameters }, noShape, setting.problem.scanner, () => first), all: [] };
       found.set(word, one);
     }
     const { lineCount, averagingLines } = table.noise();
     const whole = [...point];
-    one.all.push({ lineCount, averaging: averagingLines ?? -1, changes, point: () => whole });
+    const signalFreeSnr = averagingLines === null ? null : one.bucket.signalFreeSnr(averagingLines);
+    one.all.push({ lineCount, signalFreeSnr, changes, point: () => whole });
   });
-  return [...found.values()].map(({ voxel, parameters, all }) => {
-    const first = (all[0] as FewLine).point();
-    all.sort(byLines);
-    return {
-      bucket: new LineBucket(voxel, first, parameters, noShape, setting.problem.scanner, () => first),
-      fewestChanges: Math.min(...all.map(({ changes }) => changes)),
-      fewestLines: (all[0] as FewLine).lineCount,
-      lines: (mostLines, most) => all.filter(({ lineCount, changes }) => lineCount <= mostLines && changes <= most),
-    };
-  });
+  for (const { all } of found.values()) all.sort(byLines);
+  return [...found.values()].map(({ bucket, all }) => ({
+    bucket,
+    fewestChanges: Math.min(...all.map(({ changes }) => changes)),
+    fewestLines: Array.from({ length: mostChanges + 1 }, (_, most) =>
+      Math.min(...all.filter(({ changes }) => changes <= most).map(({ lineCount }) => lineCount)),
+    ),
+    lines: (mostLines, most) => all.filter(({ lineCount, changes }) => lineCount <= mostLines && changes <= most),
+  }));
 }

@@ -3,7 +3,7 @@ import { type BandLimit, withinBand } from './bands.js';
 import { noiseFigures } from './groups.js';
 import type { LineBucket } from './line-buckets.js';
 import type { SearchSetting } from './setting.js';
-import type { SignalState } from './signal-state.js';
+import type { SignalState, SignalTiming } from './signal-state.js';
 import { TimeFamily, type TimeRules, timeRulesOf } from './time-family.js';
 
 /** SNR and contrast of a line state and a signal state together. */
@@ -43,7 +43,7 @@ export class Join {
   }
 
   /** Times of the lines of a bucket under a timing. */
-  times(state: Pick<SignalState, 'timeId' | 'parameters' | 'rounds'>, bucket: Pick<LineBucket, 'timeId' | 'parameters'>): TimeFamily {
+  times(state: SignalTiming, bucket: Pick<LineBucket, 'timeId' | 'parameters'>): TimeFamily {
     let row = this.#families[bucket.timeId];
     if (row === undefined) {
       row = [];

@@ -5,7 +5,7 @@ import type { LatticeVariable } from './lattice.js';
 import type { LineBucket } from './line-buckets.js';
 import { walkPoints } from './point-walk.js';
 import type { SearchSetting } from './setting.js';
-import type { SignalState } from './signal-state.js';
+import type { SignalState, Timely } from './signal-state.js';
 import type { SignalTable } from './signal-states.js';
 
 /** A signal state with the settings it changes; its point is put together when asked for. */
@@ -63,6 +63,8 @@ const onlyCosts: readonly ParameterKey[] = ['dummyShots', 'saturationBands'];
 interface CostChoice {
   readonly values: readonly number[];
   readonly beatenBy: readonly number[];
+  /** Those of them that are split alike whatever the slots: they differ in dummies alone. */
+  readonly splitAs: readonly number[];
 }
 
 /** All choices of some variables whose values only cost, those that cost less first. */
@@ -76,10 +78,12 @@ function costChoices(variables: readonly LatticeVariable[], costs: readonly numb
   });
   const total = (values: readonly number[]) => values.reduce((sum, _, k) => sum + costOf(values, k), 0);
   all.sort((a, b) => total(a) - total(b));
-  return all.map((values, i) => ({
-    values,
-    beatenBy: all.slice(0, i).flatMap((other, k) => (costs.every((_, v) => costOf(other, v) <= costOf(values, v)) ? [k] : [])),
-  }));
+  const isDummies = (v: number) => (variables[costs[v] as number] as LatticeVariable).key === 'dummyShots';
+  return all.map((values, i) => {
+    const beatenBy = all.slice(0, i).flatMap((other, k) => (costs.every((_, v) => costOf(other, v) <= costOf(values, v)) ? [k] : []));
+    const splitAs = beatenBy.filter((k) => costs.every((_, v) => isDummies(v) || all[k]?.[v] === values[v]));
+    return { values, beatenBy, splitAs };
+  });
 }
 
 /** Signal states of one choice of the shared variables, by the train that the lines ask for, changing at most so many signal variables. */
@@ -93,6 +97,8 @@ export class SignalLists {
     private readonly table: SignalTable,
     private readonly mostChanges: number,
     private readonly pulse: Pulse,
+    /** Where it is known that a timing leaves no time for any lines, its signals are left out. */
+    private readonly timely: Timely = () => true,
   ) {}
 
   of(bucket: Pick<LineBucket, 'train' | 'point'>): readonly SignalEntry[] {
@@ -104,7 +110,7 @@ export class SignalLists {
     const points = new SignalPoints(variables, this.groups.signal, bucket.point);
     walkPoints(variables, this.table.inOrder(this.groups.signal), this.mostChanges, point, (changes) => {
       this.pulse.beat();
-      const state = this.table.stateAt(point);
+      const state = this.table.stateAt(point, changes, this.timely);
       if (state !== null) entries.push(new SignalEntry(state, changes, points.codeOf(point), points));
     });
     this.#lists.set(bucket.train, entries);
@@ -128,9 +134,10 @@ export class SignalLists {
     walkPoints(variables, others, others.length, point, () => {
       for (let i = 0; i < choices.length; i += 1) {
         this.pulse.beat();
-        const { values, beatenBy } = choices[i] as CostChoice;
-        for (let k = 0; k < costs.length; k += 1) point[costs[k] as number] = values[k] as number;
+        const { values, beatenBy, splitAs } = choices[i] as CostChoice;
         splits[i] = 0;
+        if (splitAs.some((k) => (splits[k] as number) > 0)) continue;
+        for (let k = 0; k < costs.length; k += 1) point[costs[k] as number] = values[k] as number;
         const rounds = this.table.splitAt(point);
         if (rounds === null || beatenBy.some((k) => splits[k] === rounds)) continue;
         const state = this.table.stateAsked(point);

@@ -36,6 +36,10 @@ const freeKeys: readonly ParameterKey[] = [
   'averages',
 ];
 
+export function isFree(key: ParameterKey): boolean {
+  return freeKeys.includes(key);
+}
+
 /** Signals of both tissues: they follow TR and what is not free. */
 export interface SignalPair {
   readonly target: number | null;
@@ -58,7 +62,7 @@ interface BandPart {
 }
 
 /** What all states share that differ in free parameters alone. */
-export interface SignalBase {
+export interface SignalBase<Known> {
   readonly parameters: Parameters;
   readonly lines: Lines;
   readonly pulses: SlotPulses;
@@ -69,11 +73,13 @@ export interface SignalBase {
   readonly scratch: Draft;
   readonly written: Int32Array;
   readonly bands: Map<number, BandPart>;
+  /** What whoever asks works out once for a base. */
+  known: Known | null;
 }
 
 /** The state a shortcut was asked for last. */
-export interface ShortState {
-  base: SignalBase;
+export interface ShortState<Known> {
+  base: SignalBase<Known>;
   pulses: SlotPulses;
   rounds: number;
   b1PlusRmsUt: number;
@@ -90,22 +96,22 @@ interface FreeVariable {
  * Models of states that differ in TR, bands and counts without resolving and modelling each anew: the same functions as `modelOf`, on less,
  * and what several states share computed once. Only for classes whose signal follows neither lines nor a null.
  */
-export class SignalShortcut {
+export class SignalShortcut<Known> {
   readonly #setting: SearchSetting;
-  readonly #bases = new Map<number, SignalBase>();
+  readonly #bases = new Map<number, SignalBase<Known>>();
   readonly #bound: readonly number[];
   readonly #free: readonly FreeVariable[];
   /** The state asked for last: its base, split and RF. */
-  readonly last = {} as ShortState;
+  readonly last = {} as ShortState<Known>;
   #lastId = -1;
-  #lastBase: SignalBase | null = null;
+  #lastBase: SignalBase<Known> | null = null;
 
   constructor(setting: SearchSetting, moving: readonly number[]) {
     this.#setting = setting;
     const { variables } = setting;
-    const isFree = (at: number) => freeKeys.includes((variables[at] as LatticeVariable).key);
-    this.#bound = moving.filter((at) => !isFree(at));
-    this.#free = moving.filter(isFree).map((at) => ({ at, variable: variables[at] as LatticeVariable }));
+    const isFreeAt = (at: number) => isFree((variables[at] as LatticeVariable).key);
+    this.#bound = moving.filter((at) => !isFreeAt(at));
+    this.#free = moving.filter(isFreeAt).map((at) => ({ at, variable: variables[at] as LatticeVariable }));
   }
 
   /** Variables with the free ones last: states of one base come one after the other. */
@@ -171,7 +177,7 @@ export class SignalShortcut {
   }
 
   /** Parameters of a state, by what `last` said of it. */
-  parametersOf(base: SignalBase, free: number, rounds: number): Parameters {
+  parametersOf(base: SignalBase<Known>, free: number, rounds: number): Parameters {
     const p: Draft = { ...base.parameters };
     let rest = free;
     for (let k = this.#free.length - 1; k >= 0; k -= 1) {
@@ -199,7 +205,7 @@ export class SignalShortcut {
   }
 
   /** Writes what differs from the state asked before; the number of the free values. */
-  #writeFree({ scratch, parameters, written }: SignalBase, point: ArrayLike<number>): number {
+  #writeFree({ scratch, parameters, written }: SignalBase<Known>, point: ArrayLike<number>): number {
     let free = 0;
     for (let k = 0; k < this.#free.length; k += 1) {
       const { at, variable } = this.#free[k] as FreeVariable;
@@ -213,13 +219,13 @@ export class SignalShortcut {
   }
 
   /** The split as a point sets it: the one in force overwrites it in the scratch. */
-  #roundsSet(point: ArrayLike<number>, base: SignalBase): number {
+  #roundsSet(point: ArrayLike<number>, base: SignalBase<Known>): number {
     for (const { at, variable } of this.#free)
       if (variable.key === 'rounds') return (point[at] === 0 ? base.parameters.rounds : variable.values[point[at] as number]) as number;
     return base.parameters.rounds;
   }
 
-  #bandPart(base: SignalBase, p: Parameters): BandPart {
+  #bandPart(base: SignalBase<Known>, p: Parameters): BandPart {
     let band = base.bands.get(p.saturationBands);
     if (band === undefined) {
       const { baseline, problem } = this.#setting;
@@ -231,11 +237,11 @@ export class SignalShortcut {
     return band;
   }
 
-  #baseAt(point: ArrayLike<number>): SignalBase {
+  #baseAt(point: ArrayLike<number>): SignalBase<Known> {
     const { variables } = this.#setting;
     let id = 0;
     for (const at of this.#bound) id = id * (variables[at] as LatticeVariable).values.length + (point[at] as number);
-    if (id === this.#lastId) return this.#lastBase as SignalBase;
+    if (id === this.#lastId) return this.#lastBase as SignalBase<Known>;
     let base = this.#bases.get(id);
     if (base === undefined) {
       base = this.#formBase(point);
@@ -246,7 +252,7 @@ export class SignalShortcut {
     return base;
   }
 
-  #formBase(point: ArrayLike<number>): SignalBase {
+  #formBase(point: ArrayLike<number>): SignalBase<Known> {
     const { problem, baseline, variables } = this.#setting;
     const { series, scanner } = problem;
     const { key } = baseline.model;
@@ -274,6 +280,7 @@ export class SignalShortcut {
       scratch: { ...parameters },
       written: new Int32Array(this.#free.length),
       bands: new Map(),
+      known: null,
     };
   }
 }

@@ -2,11 +2,20 @@ import type { Lines } from '../calc/lines.js';
 import type { SlotPulses } from '../calc/pulses.js';
 import type { Parameters } from '../calc/series.js';
 
-/** Timing, signal and RF of one choice of the signal variables, for one train and one choice of the shared ones. */
-export interface SignalState {
+/** What the time of lines follows. */
+export interface SignalTiming {
+  /** States with one of these play their lines in the same time. */
+  readonly timeId: number;
+  readonly rounds: number;
   /** Put together when asked for: few ever are. */
   readonly parameters: Parameters;
-  readonly rounds: number;
+}
+
+/** Tells whether a timing that takes so many changes is of any use. */
+export type Timely = (timing: SignalTiming, changes: number) => boolean;
+
+/** Timing, signal and RF of one choice of the signal variables, for one train and one choice of the shared ones. */
+export interface SignalState extends SignalTiming {
   readonly lines: Lines;
   readonly pulses: SlotPulses;
   readonly target: number | null;
@@ -18,8 +27,6 @@ export interface SignalState {
   readonly rfRank: 0 | 1 | 2;
   /** Largest RF value over its limit, 0 without one. */
   readonly rfExcess: number;
-  /** States with one of these play their lines in the same time. */
-  readonly timeId: number;
   /** States with one of these differ in the time of their lines by dummies alone. */
   readonly shotId: number;
   readonly dummyShots: number;

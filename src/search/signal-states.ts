@@ -3,6 +3,7 @@ import { blurFwhmPx } from '../calc/blur.js';
 import { classRow } from '../calc/classes.js';
 import { evaluate } from '../calc/evaluate.js';
 import { type FigureKey, type Figures, figureTable } from '../calc/figures.js';
+import type { ParameterKey } from '../calc/parameters.js';
 import { sarTrend } from '../calc/rf.js';
 import type { Parameters } from '../calc/series.js';
 import { contrastEcho } from '../calc/signal/echo-train-signal.js';
@@ -16,8 +17,8 @@ import { limitedValue, limitVerdict, verdictRank } from './limits.js';
 import { isCrossed, isTimeCap, namesOfMustKeep } from './must-keep-test.js';
 import { comparedRepetitionMs, type SearchSetting } from './setting.js';
 import { type StateModel, wholeModel } from './signal-model.js';
-import { type SignalBase, type SignalPair, SignalShortcut } from './signal-shortcut.js';
-import type { SignalState } from './signal-state.js';
+import { isFree, type SignalBase, type SignalPair, SignalShortcut } from './signal-shortcut.js';
+import type { SignalState, SignalTiming, Timely } from './signal-state.js';
 import { SignalWords } from './signal-words.js';
 
 const rfLimitKeys = ['b1rmsUt', 'sarWkg', 'rfRatio'] as const;
@@ -31,13 +32,14 @@ type QuickFigures = Pick<
   Figures,
   'contrastRatio' | 'contrastRatioChange' | 'b1PlusRmsUt' | 'rfPowerTrend' | 'sarTrendLow' | 'sarTrendHigh' | 'blurFwhmPx'
 >;
-type RfFigures = Pick<Figures, 'scanTimeS' | 'holdTimeS' | 'b1PlusRmsUt' | 'rfPowerTrend' | 'sarTrendLow' | 'sarTrendHigh'>;
+type RfFigures = { -readonly [K in 'b1PlusRmsUt' | 'rfPowerTrend' | 'sarTrendLow' | 'sarTrendHigh']: Figures[K] };
 
 /** RF of a state: its figures, and the verdict of the RF limits on them. */
-interface RfState {
-  readonly figures: RfFigures;
-  readonly rank: 0 | 1 | 2;
-  readonly excess: number;
+interface RfState extends RfFigures {
+  readonly scanTimeS: null;
+  readonly holdTimeS: null;
+  rank: 0 | 1 | 2;
+  excess: number;
 }
 
 /** What states share that have their base and their TR in common. */
@@ -45,25 +47,57 @@ interface PairState extends SignalPair {
   /** False where signals or blur break a band of their own. */
   readonly kept: boolean;
   readonly quietFrom: number;
+  readonly comparedRepetitionMs: number;
 }
+
+/** A free variable that the time of the lines follows. */
+interface TimedVariable {
+  readonly at: number;
+  readonly key: ParameterKey;
+  readonly count: number;
+}
+
+/** More splits and TRs than any search has. */
+const mostRounds = 1024;
+const mostRepetitions = 65536;
 
 /** What states share that differ in free parameters alone. */
 interface BaseState {
   readonly blurPx: number | null;
   readonly minimumId: number;
+  /** What the time of the lines follows besides free variables. */
+  readonly shotId: number;
   readonly pairs: Map<number, PairState>;
-  readonly shotIds: Map<number, number>;
 }
 
-/** A state of the shortcut: its parameters are put together when asked for. */
+type Shortcut = SignalShortcut<BaseState>;
+type Base = SignalBase<BaseState>;
+
+/** Timing of a state of the shortcut before the state is formed. */
+class ShortTiming implements SignalTiming {
+  constructor(
+    readonly timeId: number,
+    readonly rounds: number,
+    private readonly shortcut: Shortcut,
+    private readonly base: Base,
+    private readonly free: number,
+  ) {}
+
+  get parameters(): Parameters {
+    return this.shortcut.parametersOf(this.base, this.free, this.rounds);
+  }
+}
+
+/** A state of the shortcut: most of it is what its base and its TR say, and its parameters are put together when asked for. */
 class ShortcutState implements SignalState {
   constructor(
+    private readonly shortcut: Shortcut,
+    private readonly base: Base,
+    private readonly known: BaseState,
+    private readonly pair: PairState,
+    private readonly free: number,
     readonly rounds: number,
-    readonly lines: SignalState['lines'],
     readonly pulses: SignalState['pulses'],
-    readonly target: number | null,
-    readonly comparison: number | null,
-    readonly blurPx: number | null,
     readonly power: number | null,
     readonly trainLoss: number,
     readonly rfRank: 0 | 1 | 2,
@@ -71,18 +105,37 @@ class ShortcutState implements SignalState {
     readonly timeId: number,
     readonly shotId: number,
     readonly dummyShots: number,
-    readonly minimumId: number,
-    readonly echoTimeMs: number,
-    readonly comparedRepetitionMs: number,
-    readonly echoSpacingMs: number,
-    readonly quietFrom: number,
-    private readonly base: SignalBase,
-    private readonly free: number,
-    private readonly shortcut: SignalShortcut,
   ) {}
 
   get parameters(): Parameters {
     return this.shortcut.parametersOf(this.base, this.free, this.rounds);
+  }
+  get lines(): SignalState['lines'] {
+    return this.base.lines;
+  }
+  get target(): number | null {
+    return this.pair.target;
+  }
+  get comparison(): number | null {
+    return this.pair.comparison;
+  }
+  get quietFrom(): number {
+    return this.pair.quietFrom;
+  }
+  get blurPx(): number | null {
+    return this.known.blurPx;
+  }
+  get minimumId(): number {
+    return this.known.minimumId;
+  }
+  get echoTimeMs(): number {
+    return this.base.parameters.echoTimeMs;
+  }
+  get echoSpacingMs(): number {
+    return this.base.parameters.echoSpacingMs;
+  }
+  get comparedRepetitionMs(): number {
+    return this.pair.comparedRepetitionMs;
   }
 }
 
@@ -97,11 +150,25 @@ export class SignalTable {
   keepsOver = false;
   readonly #words: SignalWords;
   /** Null where each state needs its whole model. */
-  readonly #shortcut: SignalShortcut | null;
-  readonly #bases = new WeakMap<SignalBase, BaseState>();
+  readonly #shortcut: Shortcut | null;
+  /** RF of the state asked for last. */
+  readonly #rf: RfState = {
+    scanTimeS: null,
+    holdTimeS: null,
+    b1PlusRmsUt: null,
+    rfPowerTrend: null,
+    sarTrendLow: null,
+    sarTrendHigh: null,
+    rank: 0,
+    excess: 0,
+  };
+  /** True where bands or must-keeps ask for more than signals and blur. */
+  readonly #asksMore: boolean;
   readonly #blurs = { linear: new Map<number, number | null>(), centric: new Map<number, number | null>() };
-  /** Free variables that time follows, dummies apart. */
-  readonly #timed: readonly { readonly at: number; readonly count: number }[];
+  /** Free variables that time follows, TR and dummies apart; and their keys with TR. */
+  readonly #timed: readonly TimedVariable[];
+  readonly #timedKeys: readonly ParameterKey[];
+  readonly #repetitions = new Map<number, number>();
 
   constructor(setting: SearchSetting, groups: Groups) {
     const { problem, bands, variables } = setting;
@@ -112,7 +179,8 @@ export class SignalTable {
     this.#shortcut = SignalShortcut.serves(setting) ? new SignalShortcut(setting, moving) : null;
     this.#timed = moving
       .map((at) => ({ at, key: (variables[at] as LatticeVariable).key, count: (variables[at] as LatticeVariable).values.length }))
-      .filter(({ key }) => this.#words.times(key));
+      .filter(({ key }) => this.#words.times(key) && isFree(key) && key !== 'repetitionTimeMs');
+    this.#timedKeys = ['repetitionTimeMs', ...this.#timed.map(({ key }) => key)];
     const here = (level: string) => level === 'signal' || (groups.tied && level === 'both');
     const own = bands.filter(({ figure }) => here(levelOf([figure], groups, setting)) && !noiseFigures.includes(figure));
     const ofPair = ({ figure }: BandLimit) => figure === 'contrastRatio' || figure === 'contrastRatioChange' || figure === 'blurFwhmPx';
@@ -121,12 +189,13 @@ export class SignalTable {
     this.#mustKeeps = series.mustKeep.filter(
       (mustKeep) => !isTimeCap(mustKeep, rules) && here(levelOf(namesOfMustKeep(mustKeep, rules), groups, setting)),
     );
+    this.#asksMore = this.#otherBands.length > 0 || this.#mustKeeps.length > 0;
   }
 
   /** The state of a point, whose line variables stand for its train; null where it is an error or breaks a band or a must-keep of the signal. */
-  stateAt(point: ArrayLike<number>): SignalState | null {
+  stateAt(point: ArrayLike<number>, changes: number, timely: Timely): SignalState | null {
     if (this.#shortcut === null) return this.#wholeState(point);
-    return this.#shortcut.stateAt(point) ? this.#shortState(this.#shortcut, point) : null;
+    return this.#shortcut.stateAt(point) ? this.#shortState(this.#shortcut, point, changes, timely) : null;
   }
 
   /** Signal variables in the order in which their states are formed quickest. */
@@ -146,54 +215,63 @@ export class SignalTable {
 
   /** The state whose split was asked for last. */
   stateAsked(point: ArrayLike<number>): SignalState | null {
-    return this.#shortcut === null ? null : this.#shortState(this.#shortcut, point);
+    return this.#shortcut === null ? null : this.#shortState(this.#shortcut, point, 0, null);
   }
 
-  #shortState(shortcut: SignalShortcut, point: ArrayLike<number>): SignalState | null {
+  #shortState(shortcut: Shortcut, point: ArrayLike<number>, changes: number, timely: Timely | null): SignalState | null {
     const { base, pulses, rounds, free, b1PlusRmsUt } = shortcut.last;
-    const rf = this.#rfState(b1PlusRmsUt);
-    // Where a state over an RF cap is of no use, its signal is not computed.
-    if (rf.rank === 2 && !this.keepsOver) return null;
+    base.known ??= this.#formBaseState(base);
+    const { known } = base;
     const p = base.scratch;
-    const known = this.#baseState(base);
+    const shotId = this.#shotIdOf(known, p, rounds, point);
+    const timeId = this.#words.timeId(shotId, p.dummyShots);
+    // Signals without lines that leave time for them are not computed.
+    if (timely !== null && !timely(new ShortTiming(timeId, rounds, shortcut, base, free), changes)) return null;
+    const rf = this.#rfState(b1PlusRmsUt);
+    // Nor where a state over an RF cap is of no use.
+    if (rf.rank === 2 && !this.keepsOver) return null;
     let pair = known.pairs.get(p.repetitionTimeMs);
     if (pair === undefined) {
-      pair = this.#pairState(shortcut.signals(), known.blurPx);
+      pair = this.#pairState(shortcut.signals(), known.blurPx, p);
       known.pairs.set(p.repetitionTimeMs, pair);
     }
-    if (!pair.kept || (this.#asksMore && !this.#keeps(shortcut.modelOf(pair), known.blurPx, rf))) return null;
-    let timed = rounds;
-    for (const { at, count } of this.#timed) timed = timed * count + (point[at] as number);
-    let shotId = known.shotIds.get(timed);
-    if (shotId === undefined) {
-      shotId = this.#words.shotId(p, rounds);
-      known.shotIds.set(timed, shotId);
-    }
-    const power = rf.figures.rfPowerTrend;
-    const { target, comparison, quietFrom } = pair;
+    if (!pair.kept || (this.#asksMore && !this.#keeps(shortcut.modelOf(pair), known.blurPx))) return null;
+    const power = rf.rfPowerTrend;
     return new ShortcutState(
+      shortcut,
+      base,
+      known,
+      pair,
+      free,
       rounds,
-      base.lines,
       pulses,
-      target,
-      comparison,
-      known.blurPx,
       power,
       trainLoss(known.blurPx, this.#setting.presetFigures.blurFwhmPx, power, this.#setting.rfCapped),
       rf.rank,
       rf.excess,
-      this.#words.timeId(shotId, p.dummyShots),
+      timeId,
       shotId,
       p.dummyShots,
-      known.minimumId,
-      p.echoTimeMs,
-      comparedRepetitionMs(p),
-      p.echoSpacingMs,
-      quietFrom,
-      base,
-      free,
-      shortcut,
     );
+  }
+
+  /** What of the time of lines follows the base, TR, the split and each free variable, as one number. */
+  #shotIdOf({ shotId }: BaseState, p: Parameters, rounds: number, point: ArrayLike<number>): number {
+    let timed = (shotId * mostRounds + rounds) * mostRepetitions + this.#repetitionId(p.repetitionTimeMs);
+    for (let k = 0; k < this.#timed.length; k += 1) {
+      const { at, count } = this.#timed[k] as TimedVariable;
+      timed = timed * count + (point[at] as number);
+    }
+    return this.#words.numberId(timed);
+  }
+
+  #repetitionId(repetitionTimeMs: number): number {
+    let id = this.#repetitions.get(repetitionTimeMs);
+    if (id === undefined) {
+      id = this.#repetitions.size;
+      this.#repetitions.set(repetitionTimeMs, id);
+    }
+    return id;
   }
 
   #wholeState(point: ArrayLike<number>): SignalState | null {
@@ -201,11 +279,11 @@ export class SignalTable {
     if (model === null) return null;
     const { parameters: p, rounds, lines, pulses, target, comparison, targetT2Ms } = model;
     const blurPx = this.#blurPx(p, targetT2Ms);
-    const pair = this.#pairState(model, blurPx);
+    const pair = this.#pairState(model, blurPx, p);
     if (!pair.kept) return null;
     const rf = this.#rfState(model.b1PlusRmsUt);
-    if (this.#asksMore && !this.#keeps(model, blurPx, rf)) return null;
-    const power = rf.figures.rfPowerTrend;
+    if (this.#asksMore && !this.#keeps(model, blurPx)) return null;
+    const power = rf.rfPowerTrend;
     const shotId = this.#words.shotId(p, rounds);
     return {
       parameters: p,
@@ -224,24 +302,19 @@ export class SignalTable {
       dummyShots: p.dummyShots,
       minimumId: this.#words.minimumId(p, pulses),
       echoTimeMs: p.echoTimeMs,
-      comparedRepetitionMs: comparedRepetitionMs(p),
+      comparedRepetitionMs: pair.comparedRepetitionMs,
       echoSpacingMs: p.echoSpacingMs,
       quietFrom: pair.quietFrom,
     };
   }
 
-  #baseState(base: SignalBase): BaseState {
-    let known = this.#bases.get(base);
-    if (known === undefined) {
-      known = {
-        blurPx: this.#blurPx(base.parameters, base.targetT2Ms),
-        minimumId: this.#words.minimumId(base.parameters, base.pulses),
-        pairs: new Map(),
-        shotIds: new Map(),
-      };
-      this.#bases.set(base, known);
-    }
-    return known;
+  #formBaseState(base: Base): BaseState {
+    return {
+      blurPx: this.#blurPx(base.parameters, base.targetT2Ms),
+      minimumId: this.#words.minimumId(base.parameters, base.pulses),
+      shotId: this.#words.shotIdWithout(this.#timedKeys, base.parameters),
+      pairs: new Map(),
+    };
   }
 
   #blurPx(p: Parameters, targetT2Ms: number | null): number | null {
@@ -257,10 +330,17 @@ export class SignalTable {
     return value;
   }
 
-  #pairState({ target, comparison }: SignalPair, blurPx: number | null): PairState {
-    const figures = { ...this.#contrastFigures(target, comparison), blurFwhmPx: blurPx };
-    const kept = this.#pairBands.every((band) => withinBand(band, figures[band.figure as keyof typeof figures]));
-    return { target, comparison, kept, quietFrom: this.#quietFrom(target, comparison) };
+  #pairState({ target, comparison }: SignalPair, blurPx: number | null, p: Parameters): PairState {
+    let kept = true;
+    if (this.#pairBands.length > 0) {
+      const { contrastRatio, contrastRatioChange } = this.#contrastFigures(target, comparison);
+      for (const band of this.#pairBands) {
+        const { figure } = band;
+        const value = figure === 'blurFwhmPx' ? blurPx : figure === 'contrastRatio' ? contrastRatio : contrastRatioChange;
+        kept &&= withinBand(band, value);
+      }
+    }
+    return { target, comparison, kept, quietFrom: this.#quietFrom(target, comparison), comparedRepetitionMs: comparedRepetitionMs(p) };
   }
 
   /** As `compareWith` and `evaluate` give them. */
@@ -273,41 +353,33 @@ export class SignalTable {
     };
   }
 
-  /** RF figures of B1+rms and the verdict on them. */
+  /** RF figures of B1+rms and the verdict on them: they stand until the next are asked for. */
   #rfState(b1PlusRmsUt: number): RfState {
     const { problem, baseline, margins } = this.#setting;
+    const rf = this.#rf;
     const b1Ratio = problem.readings.b1rmsUt === undefined ? 1 : problem.readings.b1rmsUt / baseline.model.b1PlusRmsUt;
     const power = (b1PlusRmsUt / baseline.model.b1PlusRmsUt) ** 2;
     const sar = sarTrend(power, problem.scanner.fieldT / baseline.model.scanner.fieldT);
-    const figures: RfFigures = {
-      scanTimeS: null,
-      holdTimeS: null,
-      b1PlusRmsUt: finite(b1PlusRmsUt * b1Ratio),
-      rfPowerTrend: finite(power),
-      sarTrendLow: finite(sar.low),
-      sarTrendHigh: finite(sar.high),
-    };
-    let rank: 0 | 1 | 2 = 0;
-    let excess = 0;
+    rf.b1PlusRmsUt = finite(b1PlusRmsUt * b1Ratio);
+    rf.rfPowerTrend = finite(power);
+    rf.sarTrendLow = finite(sar.low);
+    rf.sarTrendHigh = finite(sar.high);
+    rf.rank = 0;
+    rf.excess = 0;
     for (const key of rfLimitKeys) {
       const limit = problem.limits[key];
       if (limit === undefined) continue;
-      const value = limitedValue(key, figures, problem.readings);
+      const value = limitedValue(key, rf, problem.readings);
       const own = verdictRank[limitVerdict(key, value, limit, margins).word];
-      if (own > rank) rank = own;
-      excess = Math.max(excess, (value ?? Number.POSITIVE_INFINITY) / limit);
+      if (own > rf.rank) rf.rank = own;
+      rf.excess = Math.max(rf.excess, (value ?? Number.POSITIVE_INFINITY) / limit);
     }
-    return { figures, rank, excess };
+    return rf;
   }
 
-  /** True where bands or must-keeps ask for more than signals and blur. */
-  get #asksMore(): boolean {
-    return this.#otherBands.length > 0 || this.#mustKeeps.length > 0;
-  }
-
-  #keeps({ parameters, target, comparison }: StateModel, blurPx: number | null, rf: RfState): boolean {
+  #keeps({ parameters, target, comparison }: StateModel, blurPx: number | null): boolean {
     const { problem, baseline } = this.#setting;
-    const { b1PlusRmsUt, rfPowerTrend, sarTrendLow, sarTrendHigh } = rf.figures;
+    const { b1PlusRmsUt, rfPowerTrend, sarTrendLow, sarTrendHigh } = this.#rf;
     const quick: QuickFigures = {
       ...this.#contrastFigures(target, comparison),
       b1PlusRmsUt,

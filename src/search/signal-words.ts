@@ -49,6 +49,7 @@ export class SignalWords {
   readonly #minimal: readonly ParameterKey[];
   readonly #ids = new Map<string, number>();
   readonly #timeIds = new Map<number, number>();
+  readonly #numberIds = new Map<number, number>();
 
   constructor({ problem, variables }: SearchSetting) {
     const moved: readonly ParameterKey[] = [
@@ -64,13 +65,34 @@ export class SignalWords {
     this.#minimal = minimumKeys.filter((key) => moved.includes(key));
   }
 
-  /** True for a parameter that `shotId` follows. */
+  /** True for a parameter that the time of the lines follows, dummies apart. */
   times(key: ParameterKey): boolean {
     return this.#timed.includes(key);
   }
 
+  /** For the time of the lines, dummies apart. */
   shotId(p: Parameters, rounds: number): number {
     return this.#idFor(`time ${wordOf(this.#timed, p)}${rounds}`);
+  }
+
+  /** For what of that time follows all parameters but these. */
+  shotIdWithout(keys: readonly ParameterKey[], p: Parameters): number {
+    return this.#idFor(
+      `time ${wordOf(
+        this.#timed.filter((key) => !keys.includes(key)),
+        p,
+      )}`,
+    );
+  }
+
+  /** For a number: equal numbers have the same. */
+  numberId(value: number): number {
+    let id = this.#numberIds.get(value);
+    if (id === undefined) {
+      id = this.#numberIds.size;
+      this.#numberIds.set(value, id);
+    }
+    return id;
   }
 
   timeId(shotId: number, dummyShots: number): number {

@@ -75,6 +75,12 @@ export class TimeFamily {
     return timeS;
   }
 
+  /** True where no time limit and no cap forbids so many lines. */
+  allows(lineCount: number): boolean {
+    const { rank, kept } = this.at(lineCount);
+    return rank < 2 && kept;
+  }
+
   /** The most lines that no time limit and no cap forbids; 0 where there are none, infinite where nothing limits them. */
   get mostLines(): number {
     this.#mostLines ??= this.#findMostLines();
@@ -83,12 +89,16 @@ export class TimeFamily {
 
   #findMostLines(): number {
     const within = (lines: number) => {
-      const { rank, kept } = this.at(lines);
+      const { rank, kept } = this.#compute(lines);
       return rank < 2 && kept;
     };
     if (within(anyLines)) return Number.POSITIVE_INFINITY;
     let low = 0;
-    let high = anyLines;
+    let high = 64;
+    while (within(high)) {
+      low = high;
+      high *= 4;
+    }
     while (high - low > 1) {
       const middle = Math.floor((low + high) / 2);
       if (within(middle)) low = middle;

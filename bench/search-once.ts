@@ -1,0 +1,118 @@
+import { readFileSync } from 'node:fs';
+import { spoiledGradientEchoSignal } from '../src/calc/signal/spoiled-gradient-echo.js';
+import { Bests, bestsWithin } from '../src/search/bests.js';
+import { Pulse } from '../src/search/control.js';
+import { latticeSize } from '../src/search/lattice.js';
+import { mostChanges, search } from '../src/search/search.js';
+import { tablesOf } from '../src/search/search-tables.js';
+import { settingOf } from '../src/search/setting.js';
+import { WholeLatticeSearch } from '../src/search/whole-lattice.js';
+import { type LatticeName, latticeOfSize } from './search-lattices.js';
+
+/** What searching one lattice took, in a process of its own. Times are of the processor, ms. */
+export interface SearchedOnce {
+  readonly size: number;
+  readonly formed: number;
+  /** The first search of the process, while it is being compiled: of the thread that searches. */
+  readonly bestsMs: number;
+  readonly frontsMs: number;
+  /** The same of all threads: what compiles and what collects garbage run beside it. */
+  readonly bestsAllMs: number;
+  readonly frontsAllMs: number;
+  /** A million bare signals right before and after each. */
+  readonly bestsYardstickMs: number;
+  readonly frontsYardstickMs: number;
+}
+
+/** Processor time of this thread, which neither a busy machine nor helpers stretch, ms; of all threads where the system does not say. */
+function threadMs(): number {
+  try {
+    return Number(readFileSync('/proc/thread-self/schedstat', 'utf8').split(' ')[0]) / 1e6;
+  } catch {
+    return processMs();
+  }
+}
+
+function processMs(): number {
+  const { user, system } = process.cpuUsage();
+  return (user + system) / 1000;
+}
+
+/** Invented timings, angles and tissues, every one of them another: what stays the same in a loop is worked out once, and not timed. */
+const kinds = 4096;
+const spread = (low: number, high: number, step: number) =>
+  Float64Array.from({ length: kinds }, (_, i) => low + ((high - low) * ((i * step) % kinds)) / kinds);
+const repetitions = spread(3, 10, 1021);
+const echoes = spread(1, 3, 1669);
+const angles = spread(5, 20, 2113);
+const t1s = spread(500, 1500, 2741);
+const t2Stars = spread(10, 60, 3307);
+
+let sum = 0;
+
+function millionSignals(): void {
+  for (let i = 0; i < 1_000_000; i += 1) {
+    const k = i & (kinds - 1);
+    sum += spoiledGradientEchoSignal(
+      repetitions[k] as number,
+      echoes[k] as number,
+      angles[k] as number,
+      t1s[k] as number,
+      t2Stars[k] as number,
+    );
+  }
+}
+
+function timed(work: () => void): { readonly ownMs: number; readonly allMs: number } {
+  const [own, all] = [threadMs(), processMs()];
+  work();
+  return { ownMs: threadMs() - own, allMs: processMs() - all };
+}
+
+/** The middle of three: a million signals take as long as a few scheduling turns. */
+function yardstickMs(): number {
+  const times = [0, 1, 2].map(() => timed(millionSignals).ownMs).sort((a, b) => a - b);
+  return times[1] as number;
+}
+
+function timesOf(name: LatticeName, wanted: number): SearchedOnce {
+  const { problem } = latticeOfSize(name, wanted);
+  const setting = settingOf(problem);
+  const tables = tablesOf(setting);
+  const pulse = new Pulse({});
+  millionSignals();
+  const before = yardstickMs();
+  const bests = timed(() => {
+    bestsWithin(tables, mostChanges, new Bests(), pulse);
+  });
+  const between = yardstickMs();
+  const fronts = timed(() => {
+    new WholeLatticeSearch(tables, pulse, { fronts: true, nearest: false, count: false }).run();
+  });
+  const after = yardstickMs();
+  if (Number.isNaN(sum)) throw new Error('a measured function gave no number');
+  return {
+    size: latticeSize(setting.variables),
+    formed: pulse.formed,
+    bestsMs: bests.ownMs,
+    frontsMs: fronts.ownMs,
+    bestsAllMs: bests.allMs,
+    frontsAllMs: fronts.allMs,
+    bestsYardstickMs: (before + between) / 2,
+    frontsYardstickMs: (between + after) / 2,
+  };
+}
+
+/** Memory that a whole search takes at its peak beyond what the process had before, MB. */
+function memoryOf(name: LatticeName, wanted: number): { readonly peakMb: number } {
+  const { problem } = latticeOfSize(name, wanted);
+  const before = process.memoryUsage.rss();
+  const { proven } = search(problem);
+  if (!proven) throw new Error('the search was not through');
+  return { peakMb: (process.resourceUsage().maxRSS * 1024 - before) / 2 ** 20 };
+}
+
+/** Run by `rows/search.ts` in a process of its own: what is asked, which lattice, how many ways. */
+const [what, name, wanted] = process.argv.slice(2);
+const once = what === 'memory' ? memoryOf : timesOf;
+process.stdout.write(JSON.stringify(once(name as LatticeName, Number(wanted))));

@@ -35,3 +35,11 @@ export class FlatOutput {
     return { output: this.#lines.join('\n'), height: this.#lines.length };
   }
 }
+
+/**
+ * Takes the place of ink's search for control sequences that are no styles: texts from files lose theirs when they are read, and the
+ * painter leaves out whatever is not a style.
+ */
+export function asItIs(text: string): string {
+  return text;
+}

@@ -26,6 +26,7 @@ const replacements: ReadonlyMap<string, readonly [string, string]> = new Map([
   ['wrap-text', ['wrap-text', 'wrapText']],
   ['widest-line', ['measure-text', 'widestLine']],
   ['output', ['flat-output', 'FlatOutput']],
+  ['sanitize-ansi', ['flat-output', 'asItIs']],
 ]);
 
 /** The esbuild plugin; see the head of this file. */
@@ -35,7 +36,7 @@ export function replaceInkCaches(): Plugin {
     setup(build) {
       const replaced = new Set<string>();
       let inkSeen = false;
-      build.onResolve({ filter: /^(?:\.\.?\/(?:.*\/)?(?:measure-text|wrap-text|output)\.js|widest-line)$/ }, ({ path, importer }) => {
+      build.onResolve({ filter: /^(?:\.\.?\/(?:.*\/)?(?:measure-text|wrap-text|output|sanitize-ansi)\.js|widest-line)$/ }, ({ path, importer }) => {
         const name = /([a-z-]+)(?:\.js)?$/.exec(path)?.[1] ?? '';
         if (!/[\\/]ink[\\/]build[\\/]/.test(importer)) return undefined;
         replaced.add(name);

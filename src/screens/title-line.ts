@@ -19,7 +19,7 @@ export function titleLine(state: State, look: Look, columns: number): Line {
   const { opened } = state;
   if (opened === null) return withRight([span(words(state), 'bold')], 'holdfast', columns, look, 'quiet');
   const { study } = opened;
-  const right = found(state) ?? `${study.id}, ${whereOf(state)}${study.status === 'starter' ? ', starter' : ''}`;
+  const right = found(state) ?? `${study.id}, ${whereOf(state, look)}${study.status === 'starter' ? ', starter' : ''}`;
   const clocks = clockWords(state);
   return clocks === ''
     ? withRight([span(words(state))], right, columns, look, 'quiet')
@@ -27,11 +27,11 @@ export function titleLine(state: State, look: Look, columns: number): Line {
 }
 
 /** The scanner of the session where it has a file, and the field. */
-function whereOf(state: State): string {
+function whereOf(state: State, { glyphs }: Look): string {
   const equipment = equipmentNow(state);
   if (equipment === null) return '';
   const { scanner } = equipment;
-  return isFromFile(equipment) ? `${fitText(scanner.name, 16, '~').trimEnd()} ${scanner.fieldT} T` : `${scanner.fieldT} T`;
+  return isFromFile(equipment) ? `${fitText(scanner.name, 16, glyphs.ellipsis).trimEnd()} ${scanner.fieldT} T` : `${scanner.fieldT} T`;
 }
 
 /** While a series is over its limits: what the search has found. */

@@ -1,6 +1,8 @@
 import { phaseTimesMs } from '../calc/chemical-shift.js';
 import { fatShiftHz, larmorMhz } from '../calc/constants.js';
 import { plainScanner, type Scanner } from '../calc/scanner.js';
+import { carryFields } from '../search/carry.js';
+import { canCarry } from '../search/carry-study.js';
 import { cleanText } from '../study/clean-text.js';
 import type { Study } from '../study/study.js';
 import { chosenScanner, equipmentFor, equipmentNow, isFromFile, plainChoice, type ScannerChoice, sayEquipment } from './equipment.js';
@@ -161,8 +163,14 @@ export function scannerWords(state: State): ScannerWords {
       ...(changes.some(({ g }) => g.to === null) ? ['g not known: beyond the table of this coil. No SNR, and no way uses it.'] : []),
     ],
     coil,
-    attention: away
-      ? `This preset is for ${study.fieldT} T: carry it there (t in its running order) before it is used on ${scanner.fieldT} T`
-      : '',
+    attention: away ? elsewhere(study.fieldT, scanner.fieldT) : '',
   };
+}
+
+/** What is said of a preset on a magnet of another field. */
+function elsewhere(presetT: number, scannerT: number): string {
+  if (canCarry(presetT) && canCarry(scannerT))
+    return `This preset is for ${presetT} T: carry it there (t in its running order) before it is used on ${scannerT} T`;
+  const { min, max } = carryFields;
+  return `This preset is for ${presetT} T, and nothing carries it to ${scannerT} T: the sources reach from ${min} to ${max} T`;
 }

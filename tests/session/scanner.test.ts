@@ -10,7 +10,7 @@ import { budgetProblemOf, searchProblemOf } from '../../src/session/search-probl
 import { initialState, type State } from '../../src/session/state.js';
 import { draftNow, update } from '../../src/session/update.js';
 import type { ScannerFile } from '../../src/study/scanner-file.js';
-import { after, onField, presetChoice, press } from './invented-state.js';
+import { after, onField, presetChoice, press, startState } from './invented-state.js';
 import { atScanner, shippedScanners, startWithScanners } from './shipped-scanners.js';
 
 const scanners = shippedScanners;
@@ -38,6 +38,9 @@ describe('a scanner chosen at the start', () => {
     expect(table?.find(([id]) => id === 't1-3d')?.[1]).toBe('1.05 > 1.04');
     expect(attention).toBe('');
     expect(scannerWords(press(list, 'home', 'down')).attention).toMatch(/^This preset is for 3 T: carry it there/);
+    const strong = { ...scanners[1], name: 'room 7', fieldT: 7 } as ScannerFile;
+    const far = press(update(startState(['liver-3t']), { kind: 'scanners', scanners: [strong], notes: [] })[0], 'tab', 'down');
+    expect(scannerWords(far).attention).toMatch(/^This preset is for 3 T, and nothing carries it to 7 T/);
   });
 
   it('is what sessions are begun on: figures, ways, budget, record and its nicknames', () => {

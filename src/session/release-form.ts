@@ -86,6 +86,7 @@ export function releaseNow(
   if (state.open.release !== undefined) return against('The revision is being written');
   if (taken !== null)
     return against(`Somebody was first: revision ${taken.theirs.revision}. d shows what differs, t takes your changes over`);
+  if (form.trouble !== null) return against(form.trouble);
   if (findings === null) return against('The checks are not through yet');
   if (!isReleasable(findings)) return against('A check failed: mend the preset, then release it');
   if (basedOn === null)
@@ -104,6 +105,7 @@ export function releaseHeadline(state: State): string {
   if (release === null) return 'Nothing to release';
   const { taken, findings } = release;
   if (taken !== null) return `NOT RELEASED: ${taken.theirs.released?.role ?? 'somebody'} was first with revision ${taken.theirs.revision}`;
+  if (release.trouble !== null) return `CANNOT BE CHECKED: ${release.trouble}`;
   if (findings === null) return 'Checking the preset';
   const failed = findings.filter(({ level }) => level === 'failure').length;
   if (failed > 0) return `CANNOT BE RELEASED: ${failed} ${failed === 1 ? 'check' : 'checks'} failed`;

@@ -39,6 +39,8 @@ export interface ReleaseForm {
   readonly reason: string;
   /** What the checks found; null while they run. */
   readonly findings: readonly Finding[] | null;
+  /** Why it could not be checked. */
+  readonly trouble: string | null;
   /** Newest revision of the site under this id; null where there is none, or the checks still run. */
   readonly newest: Study | null;
   readonly taken: TakenRevision | null;

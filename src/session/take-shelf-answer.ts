@@ -20,7 +20,7 @@ export function takeShelfAnswer(state: State, kind: ShelfAsk, answer: Answer, fa
     }
     case 'checks': {
       if (shelf.release === null) return only(state);
-      if (answer.kind !== 'checked') return only(say(state, trouble, 'trouble'));
+      if (answer.kind !== 'checked') return only(say(withShelf(state, { release: { ...shelf.release, trouble } }), trouble, 'trouble'));
       const { findings, newest } = answer;
       // Where the site has none of this id there is nothing that it could have been made from.
       const basedOn = shelf.release.basedOn ?? (newest === null ? 0 : null);

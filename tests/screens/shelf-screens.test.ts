@@ -67,6 +67,7 @@ const form = {
   secondRole: '',
   reason: 'short holds',
   findings: [{ level: 'failure', code: 'must-keep', series: 't1-3d', text: 'voxel, slice 6 mm: must be at most 5 mm' }],
+  trouble: null,
   newest: older.study,
   taken: null,
   notes: [],
@@ -101,6 +102,10 @@ function screens(): readonly (readonly [string, State])[] {
       }),
     ],
     ['release, checking', at(start, 'release', { release: { ...form, findings: null } })],
+    [
+      'release, not checked',
+      at(start, 'release', { release: { ...form, findings: null, trouble: 'The folder of presets /nowhere is not there.' } }),
+    ],
     ['records', at(start, 'records', { list: { ...reading, read: list } })],
     ['records on their way', at(start, 'records', { list: { ...reading, share: 0.3 } })],
     ['records, failed', at(start, 'records', { list: { ...reading, trouble: 'The record file may not be opened.' } })],

@@ -228,6 +228,16 @@ describe('releasing', () => {
     expect(releaseHeadline(state)).toBe('Made from revision 1; the site has revision 2 already: d shows what differs');
   });
 
+  it('that cannot be checked says why, and writes nothing', () => {
+    const problem = { code: 'not-there', path: '', message: 'The folder of presets /site is not there.', hint: 'Check the spelling.' };
+    const failing = (effect: Effect): Answer | null =>
+      effect.kind === 'check-release' ? { kind: 'failed', problems: [problem] } : world(two)(effect);
+    const state = withAnswers(draftWithFour(world(two)), failing, 'r', 'end', 'enter', 'RELEASE', 'enter');
+    expect(releaseHeadline(state)).toBe('CANNOT BE CHECKED: The folder of presets /site is not there. Check the spelling.');
+    expect(state.notice?.words).toContain('Not released. The folder of presets /site is not there.');
+    expect(state.open.release).toBeUndefined();
+  });
+
   it('goes back to the revisions and reads them anew', () => {
     const keys = ['r', 'down', 'down', 'enter', 'physicist', 'enter', 'enter', 'short holds', 'enter', 'enter', 'RELEASE', 'enter'];
     const state = withAnswers(draftWithFour(world(two)), world(two, released), ...keys);

@@ -34,6 +34,7 @@ export const beginRelease: Command = (state) => {
     secondRole: '',
     reason: '',
     findings: null,
+    trouble: null,
     newest: null,
     taken: null,
     notes: [],
@@ -49,7 +50,7 @@ function studyToRelease({ study, id, basedOn, newest }: ReleaseForm): Study {
 function check(state: State, form: ReleaseForm): Change {
   const ask = state.asks + 1;
   return [
-    withForm({ ...state, asks: ask, open: { ...state.open, checks: ask } }, { ...form, findings: null }),
+    withForm({ ...state, asks: ask, open: { ...state.open, checks: ask } }, { ...form, findings: null, trouble: null }),
     [{ kind: 'check-release', ask, study: studyToRelease(form) }],
   ];
 }

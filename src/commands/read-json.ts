@@ -37,6 +37,7 @@ function seriesDocument(one: SeriesToDraft, isPicked: boolean): object {
     echoTimesMs: read.echoTimesMs,
     bValues: read.bValues,
     durationS: read.durationS,
+    computedS: read.computedS,
     values: Object.fromEntries(
       read.values.map(({ key: name, value, origin, words }) => {
         const own = typed[name];

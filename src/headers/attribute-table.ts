@@ -155,6 +155,8 @@ export const attributeTable = {
   PixelSpacing: numbers('00280030', 'DS'),
   /** Number of items in the sequence of saturation bands (0018,9107). */
   SaturationBandCount: numbers(null, 'US'),
+  /** Words among ScanOptions that the standard does not list: their number, never they. */
+  UnlistedScanOptions: numbers(null, 'US'),
   /** Sidecars alone: what the BIDS specification gives a name of its own. */
   PartialFourierFraction: numbers(null, 'FD'),
   EffectiveEchoSpacing: numbers(null, 'FD'),

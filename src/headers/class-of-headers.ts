@@ -108,6 +108,10 @@ function gradientClass(a: Attributes, { by }: Echo, dimension: Dimension, geomet
     if (dimension === '3D') return decided('inversion-prepared-gradient-echo/3D', `${by}, 3D, ${inversion}`);
     return undecided(`${by}, 2D, ${inversion}: an inversion before a 2D gradient echo is not modelled`);
   }
+  const readouts = a.GradientEchoTrainLength?.[0] ?? 0;
+  if (dimension === '3D' && readouts > 1) {
+    return undecided(`${by}, 3D, trains of ${readouts} readouts (GradientEchoTrainLength): what prepares them is not stated`);
+  }
   const steady = a.SteadyStatePulseSequence?.[0];
   const spoiling = a.Spoiling?.[0];
   const variant = a.SequenceVariant;

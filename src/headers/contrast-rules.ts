@@ -44,9 +44,12 @@ function findFatSuppression({ attributes: a }: CollectedSeries, key: ClassKey | 
   return missingFor('SpectrallySelectedSuppression is not stated');
 }
 
-/** True where a header lists options: what is not among them was not used. An empty list says nothing. */
+/**
+ * True where a header lists options, all of them the standard's: what is not among them was not used. An empty list says nothing, and
+ * a word of a maker's own may mean any of them.
+ */
 function listed(a: Attributes): boolean {
-  return a.ScanOptions !== undefined;
+  return a.ScanOptions !== undefined && a.UnlistedScanOptions === undefined;
 }
 
 function findBands({ attributes: a }: CollectedSeries): Found {

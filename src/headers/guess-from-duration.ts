@@ -1,11 +1,8 @@
 import { type ClassKey, classRow } from '../calc/classes.js';
-import { acquiredLines } from '../calc/lines.js';
 import type { ParameterKey } from '../calc/parameters.js';
-import { plainScanner } from '../calc/scanner.js';
-import { fillDefaults, type GivenParameters, type Parameters } from '../calc/series.js';
-import { seriesTime } from '../calc/time.js';
-import { requiredParameters } from '../study/required-keys.js';
+import type { GivenParameters } from '../calc/series.js';
 import { guessedAs, type ReadValue } from './found.js';
+import { lackingForTime, timeOfValues } from './time-of-values.js';
 
 /** Amounts that scanners offer of what a header says is there (common practice). */
 const usual: Readonly<Partial<Record<ParameterKey, readonly number[]>>> = {
@@ -63,11 +60,9 @@ export function guessFromDuration(
     values.map((value) => (wanted.includes(value.key) ? { ...value, words: `${value.words}; ${why}` } : value));
   if (durationS === undefined || !(durationS > 0)) return bounded('AcquisitionDuration is not stated, which could bound it');
   const given = Object.fromEntries(values.flatMap((one) => (one.value === undefined ? [] : [[one.key, one.value]]))) as GivenParameters;
-  const lacking = requiredParameters(key).filter(
-    (name) => given[name] === undefined && name !== 'echoTimeMs' && name !== 'pixelBandwidthHz',
-  );
+  const lacking = lackingForTime(key, given);
   if (lacking.length > 0) return bounded(`AcquisitionDuration could bound it if ${lacking.join(', ')} were stated`);
-  const explanations = explain(key, given, values, wanted, durationS, typeof fieldT === 'number' ? fieldT : 1.5);
+  const explanations = explain(key, given, values, wanted, durationS, fieldT);
   const said = `AcquisitionDuration ${Number(durationS.toFixed(1))} s`;
   if (explanations.length === 0) return bounded(`no usual amount explains ${said}`);
   const best = explanations.reduce((a, b) => (distance(b) < distance(a) ? b : a));
@@ -100,16 +95,14 @@ function explain(
   values: readonly ReadValue[],
   wanted: readonly ParameterKey[],
   durationS: number,
-  fieldT: number,
+  fieldT: unknown,
 ): readonly Explanation[] {
   const open = (Object.keys(unsaid) as ParameterKey[]).filter((name) => values.some((one) => one.key === name && one.origin === 'missing'));
   const tried = combinations([...wanted, ...open].map((name) => [name, (usual[name] ?? unsaid[name]) as readonly number[]]));
-  const scanner = plainScanner(fieldT);
   return tried.flatMap((one) => {
     // Slices that share no repetition are not split over several.
     if ((one.rounds ?? 1) > 1 && classRow(key).interleaving !== 'interleaved') return [];
-    const parameters: Parameters = fillDefaults(key, { ...given, ...one } as GivenParameters);
-    const ratio = seriesTime(key, parameters, acquiredLines(key, parameters), parameters.rounds, scanner).scanTimeS / durationS;
+    const ratio = timeOfValues(key, { ...given, ...one } as GivenParameters, fieldT) / durationS;
     return ratio >= shortest && ratio <= longest ? [{ values: one, ratio }] : [];
   });
 }

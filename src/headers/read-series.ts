@@ -1,11 +1,13 @@
 import { type ClassKey, classRow } from '../calc/classes.js';
 import { gammaBarMhzPerT } from '../calc/constants.js';
 import { parameterKeys } from '../calc/parameters.js';
+import type { GivenParameters } from '../calc/series.js';
 import { type ClassDecision, classOfHeaders } from './class-of-headers.js';
 import type { CollectedSeries } from './collected-series.js';
 import { derivedAs, type Found, missingFor, type ReadValue, readAs } from './found.js';
 import { guessFromDuration } from './guess-from-duration.js';
 import type { HeaderSource } from './header.js';
+import { lackingForTime, timeOfValues } from './time-of-values.js';
 import { valueRules } from './value-rules.js';
 import { cross, directionsOf, nearestAxis } from './vector.js';
 import { withinRange } from './within-range.js';
@@ -29,6 +31,8 @@ export interface ReadSeries {
   readonly echoTimesMs: readonly number[];
   readonly bValues: readonly number[];
   readonly durationS: number | null;
+  /** What the values give by the model's rules, s; null where something that time hangs on is not known. */
+  readonly computedS: number | null;
   /** Parameters of the class in the order of the table; all where the class is not decided. */
   readonly values: readonly ReadValue[];
 }
@@ -63,6 +67,12 @@ export function valuesOfHeaders(series: CollectedSeries, key: ClassKey | null): 
   return key === null ? values : guessFromDuration(key, values, series.attributes.AcquisitionDuration?.[0], fieldOf(series).value);
 }
 
+function computedTimeS(key: ClassKey, values: readonly ReadValue[], fieldT: unknown): number | null {
+  if (values.some(({ some }) => some === true)) return null;
+  const given = Object.fromEntries(values.flatMap((one) => (one.value === undefined ? [] : [[one.key, one.value]]))) as GivenParameters;
+  return lackingForTime(key, given).length > 0 ? null : timeOfValues(key, given, fieldT);
+}
+
 function coverageOf({ places, attributes: a }: CollectedSeries): number | null {
   const thickness = a.SliceThickness?.[0];
   if (places.length === 0 || thickness === undefined) return null;
@@ -80,6 +90,7 @@ export function readSeries(series: CollectedSeries, id: string, key?: ClassKey):
   const decision = key === undefined ? classOfHeaders(series) : { key, reason: 'typed' };
   const number = a.SeriesNumber?.[0];
   const duration = a.AcquisitionDuration?.[0];
+  const values = valuesOfHeaders(series, decision.key);
   return {
     id,
     seriesNumber: number !== undefined && Number.isInteger(number) && number >= 0 && number < 1e9 ? number : null,
@@ -94,6 +105,7 @@ export function readSeries(series: CollectedSeries, id: string, key?: ClassKey):
     echoTimesMs: series.echoTimes,
     bValues: series.bValues.map(({ b }) => b),
     durationS: duration !== undefined && duration > 0 ? duration : null,
-    values: valuesOfHeaders(series, decision.key),
+    computedS: decision.key === null ? null : computedTimeS(decision.key, values, fieldOf(series).value),
+    values,
   };
 }

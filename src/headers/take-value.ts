@@ -24,4 +24,6 @@ export function takeValue(into: Attributes, keyword: Keyword, values: readonly u
   }
   const words = values.filter((value): value is string => typeof value === 'string' && row.words.includes(value));
   if (words.length > 0) target[keyword] = words;
+  const unlisted = values.length - words.length - values.filter((value) => value === '').length;
+  if (keyword === 'ScanOptions' && unlisted > 0) target['UnlistedScanOptions'] = [unlisted];
 }

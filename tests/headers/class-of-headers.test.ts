@@ -87,6 +87,12 @@ const cases: readonly (readonly [string, readonly Attributes[], string | null, R
     /inversion time/,
   ],
   ['inversion, 2D', [{ ...gradient2D, SequenceVariant: ['SP', 'MP'], InversionTime: [900] }], null, /not modelled/],
+  [
+    'trains of readouts, prepared by what is not said',
+    [{ ...gradient3D, Spoiling: ['RF'], GradientEchoTrainLength: [225] }],
+    null,
+    /what prepares them/,
+  ],
   ['an inversion time of 0', [{ ...gradient3D, SequenceVariant: ['SP'], InversionTime: [0] }], 'spoiled-gradient-echo/3D', /SP/],
   ['echo-planar, spin', [{ ScanningSequence: ['EP', 'SE'], MRAcquisitionType: ['2D'] }], 'echo-planar-spin-echo/2D', /echo-planar/],
   ['echo-planar, gradient', [{ ScanningSequence: ['EP', 'GR'], MRAcquisitionType: ['2D'] }], 'echo-planar-gradient-echo/2D', /echo-planar/],

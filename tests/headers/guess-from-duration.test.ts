@@ -77,6 +77,13 @@ describe('what a header says is there, from AcquisitionDuration', () => {
     }
   });
 
+  it('is compared with what the values give where nothing is open', () => {
+    const plain: StudySeries = { ...oneUnknown, parameters: { ...oneUnknown.parameters, partialFourierSlice: 1 } };
+    const { durationS, computedS } = readWith(plain, 3, 2 * timeOf(plain, 3));
+    expect(computedS).toBeCloseTo((durationS as number) / 2, 6);
+    expect(readWith(oneUnknown, 3, undefined).computedS).toBeNull();
+  });
+
   it('explains the duration of every series that it guesses for, in all shipped presets', () => {
     let guessed = 0;
     let right = 0;

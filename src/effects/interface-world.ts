@@ -6,7 +6,6 @@ import type { Disk } from '../store/disk.js';
 import type { DraftFile } from '../store/draft-file.js';
 import type { Folders } from '../store/folders.js';
 import type { PresetFolder } from '../store/preset-folder.js';
-import type { ScannerFolder } from '../store/scanner-folder.js';
 import type { Settings } from '../store/settings.js';
 import type { PictureRunner } from './run-picture.js';
 import type { SearchRunner } from './run-search.js';
@@ -16,7 +15,6 @@ export interface InterfaceWorld {
   readonly disk: Disk;
   readonly folders: Folders;
   readonly presetFolders: readonly PresetFolder[];
-  readonly scannerFolders: readonly ScannerFolder[];
   readonly settings: Settings;
   readonly drafts: DraftFile;
   readonly saver: DebouncedSaver<Draft>;

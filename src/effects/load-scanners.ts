@@ -1,11 +1,13 @@
 import type { Message } from '../session/message.js';
-import { listScanners } from '../store/scanner-folder.js';
+import { listScanners, scannerFolders } from '../store/scanner-folder.js';
 import { readSiteRulesFile } from '../store/site-rules-file.js';
 import type { InterfaceWorld } from './interface-world.js';
 
 /** Reads the scanner files that can be chosen, of each name the first, and says what is wrong with the others. */
 export async function loadScanners(world: InterfaceWorld): Promise<Message> {
-  const { scanners, problems } = await listScanners(world.disk, world.scannerFolders);
+  const { disk, folders, shippedPresets } = world;
+  const searched = scannerFolders(folders.siteScannersFolder, folders.settingsFolder, shippedPresets);
+  const { scanners, problems } = await listScanners(disk, searched);
   const seen = new Set<string>();
   const first = scanners.filter(({ file: { name } }) => {
     const plain = name.trim().toLowerCase();

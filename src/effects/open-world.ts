@@ -9,14 +9,12 @@ import { heartbeatMs } from '../store/draft-owner.js';
 import { type Folders, foldersOf } from '../store/folders.js';
 import { presetFolders } from '../store/preset-folder.js';
 import { randomId } from '../store/random-id.js';
-import { scannerFolders } from '../store/scanner-folder.js';
 import { defaultSettings, fileModeOf } from '../store/settings.js';
 import { readSettings } from '../store/settings-file.js';
 import type { ScannerFile } from '../study/scanner-file.js';
 import { toolVersion } from '../study/tool-version.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { loadDrafts, loadPresets } from './load-presets.js';
-import { loadScanners, loadSiteRules } from './load-scanners.js';
 import { runEffect } from './run-effect.js';
 import { openPictureWorker, pictureRunner } from './run-picture.js';
 import { openSearchWorker, searchRunner } from './run-search.js';
@@ -78,7 +76,6 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
     disk,
     folders,
     presetFolders: presetFolders(folders.sitePresetsFolder, folders.ownPresetsFolder, choices.shippedPresets),
-    scannerFolders: scannerFolders(folders.siteScannersFolder, folders.settingsFolder, choices.shippedPresets),
     settings,
     drafts,
     saver,
@@ -96,10 +93,13 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   const beat = setInterval(() => void drafts.beat(), heartbeatMs);
   beat.unref();
   const named = settings.scannerName !== '';
+  // The readers of their files are loaded when they are needed, like the files themselves.
+  const scanners = () => import('./load-scanners.js').then(({ loadScanners }) => loadScanners(world));
+  const rules = () => import('./load-scanners.js').then(({ loadSiteRules }) => loadSiteRules(world));
   // A key typed ahead opens a preset as soon as presets are there: the scanner that the settings name is known before.
-  const presets = Promise.all([...(named ? [loadScanners(world)] : []), loadPresets(world)]);
+  const presets = Promise.all([...(named ? [scanners()] : []), loadPresets(world)]);
   // Else the list of presets is on screen before scanners are read, and always before rules are.
-  const later = presets.then(() => Promise.all([...(named ? [] : [loadScanners(world)]), loadSiteRules(world)]));
+  const later = presets.then(() => Promise.all([...(named ? [] : [scanners()]), rules()]));
   return {
     defaults: {
       role: settings.role,

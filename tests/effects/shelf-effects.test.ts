@@ -1,4 +1,4 @@
-import { mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { mkdirSync, readdirSync, readFileSync, symlinkSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { inventedRecords } from '../../scripts/invented-records.js';
@@ -95,6 +95,32 @@ describe('releasing from the interface', () => {
     if (answer?.kind !== 'revisions') throw new Error('no revisions');
     expect(answer.presets.map(({ origin, study }) => `${origin} ${study.revision}`)).toEqual(['site 2', 'site 1', 'shipped 1']);
     expect(answer.notes.join()).toContain('liver-3t@7.json');
+  });
+});
+
+describe("a colleague's folder", () => {
+  it('of thirty presets with wrong files among them is listed without stopping, of each the current revision', async () => {
+    const { run, site, told } = await atSite();
+    const text = readFileSync('presets/knee-3t.json', 'utf8');
+    for (let at = 0; at < 30; at += 1) writeFileSync(join(site, `knee-${at}.json`), text.replace('"knee-3t"', `"knee-${at}"`));
+    for (const revision of [2, 3])
+      writeFileSync(join(site, `knee-7@${revision}.json`), JSON.stringify({ ...JSON.parse(text), id: 'knee-7', revision }));
+    writeFileSync(join(site, 'half.json'), text.slice(0, 700));
+    writeFileSync(join(site, 'binary.json'), Buffer.from([0, 1, 2, 255, 254]));
+    writeFileSync(join(site, 'empty.json'), '');
+    mkdirSync(join(site, 'folder.json'));
+    symlinkSync(join(site, 'nowhere'), join(site, 'dangling.json'));
+    await run({ kind: 'list-presets' });
+    const listed = told.find(({ kind }) => kind === 'presets');
+    if (listed?.kind !== 'presets') throw new Error('no list');
+    const ofSite = listed.presets.filter(({ origin }) => origin === 'site');
+    expect(ofSite).toHaveLength(30);
+    expect(ofSite.find(({ study }) => study.id === 'knee-7')?.study.revision).toBe(3);
+    for (const name of ['half.json', 'binary.json', 'empty.json', 'folder.json', 'dangling.json'])
+      expect(
+        listed.notes.some((note) => note.includes(name)),
+        name,
+      ).toBe(true);
   });
 });
 

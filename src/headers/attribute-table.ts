@@ -149,6 +149,7 @@ export const attributeTable = {
   TemporalPositionIdentifier: numbers('00200100', 'IS'),
   NumberOfTemporalPositions: numbers('00200105', 'IS'),
   SliceLocation: numbers('00201041', 'DS'),
+  NominalCardiacTriggerDelayTime: numbers('00209153', 'FD'),
   NumberOfFrames: numbers('00280008', 'IS'),
   Rows: numbers('00280010', 'US'),
   Columns: numbers('00280011', 'US'),

@@ -61,7 +61,7 @@ export class CollectedSeries {
     for (const time of a.EffectiveEchoTime ?? a.EchoTime ?? []) if (this.#echoTimes.size < mostKinds) this.#echoTimes.add(time);
     const b = a.DiffusionBValue?.[0];
     addTo(this.#temporal, a.TemporalPositionIdentifier?.[0]);
-    addTo(this.#triggers, a.TriggerTime?.[0]);
+    addTo(this.#triggers, (a.NominalCardiacTriggerDelayTime ?? a.TriggerTime)?.[0]);
     const component = a.ComplexImageComponent?.[0] ?? a.ImageType?.find((word) => 'MPRI'.includes(word)) ?? '';
     const key = `${place} ${echo} ${b} ${a.DiffusionGradientOrientation?.join(' ')} ${component}`;
     const repeat = (this.#repeats.get(key) ?? 0) + 1;

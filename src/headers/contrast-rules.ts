@@ -2,6 +2,7 @@ import { type ClassKey, classRow } from '../calc/classes.js';
 import type { Attributes } from './attribute-table.js';
 import type { CollectedSeries } from './collected-series.js';
 import { derivedAs, type Found, guessedAs, missingFor, readAs } from './found.js';
+import { gatedWords } from './gated-words.js';
 import { firstNumber, heldNowhere, says, type ValueRule } from './value-rule.js';
 
 /** Inversion times under this null fat and not fluid, ms: fat 140 to 260, fluid over 1500 from 0.5 to 3 T (common practice). */
@@ -69,14 +70,12 @@ function findFlowCompensation({ attributes: a }: CollectedSeries): Found {
   return listed(a) ? derivedAs(false, 'not among the ScanOptions that are listed') : missingFor('FlowCompensation is not stated');
 }
 
-const gating = ['REALTIME', 'PROSPECTIVE', 'RETROSPECTIVE', 'PACED'];
 const breathing = ['GATING', 'REALTIME', 'TRACKING'];
 
 function findPacing({ attributes: a }: CollectedSeries): Found {
-  const heart = a.CardiacSynchronizationTechnique?.[0];
   const breath = a.RespiratoryMotionCompensationTechnique?.[0];
   const held = breath === 'BREATH_HOLD';
-  const gatedBy = heart !== undefined && gating.includes(heart) ? `CardiacSynchronizationTechnique ${heart}` : gatedWord(a);
+  const gatedBy = gatedWords(a);
   if (gatedBy !== null) {
     const interval = a.NominalInterval?.[0] ?? 0;
     const rate = a.HeartRate?.[0] ?? 0;
@@ -90,13 +89,9 @@ function findPacing({ attributes: a }: CollectedSeries): Found {
     return readAs({ kind: 'respiratory-trigger' }, `RespiratoryMotionCompensationTechnique ${breath}; the period is not stated`);
   }
   if (says(a.ScanOptions, 'RG')) return readAs({ kind: 'respiratory-trigger' }, 'ScanOptions RG; the period is not stated');
-  if (heart === 'NONE' && breath === 'NONE') return readAs({ kind: 'none' }, 'both synchronisation attributes NONE');
+  if (a.CardiacSynchronizationTechnique?.[0] === 'NONE' && breath === 'NONE')
+    return readAs({ kind: 'none' }, 'both synchronisation attributes NONE');
   return missingFor('ScanOptions name no gate, and breath-holds are not stated');
-}
-
-function gatedWord(a: Attributes): string | null {
-  const word = ['CG', 'PPG'].find((option) => says(a.ScanOptions, option));
-  return word === undefined ? null : `ScanOptions ${word}`;
 }
 
 export const contrastRules = {

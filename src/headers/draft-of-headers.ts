@@ -36,12 +36,17 @@ export function lackingFor(key: ClassKey, given: GivenParameters): readonly Para
   return requiredParameters(key).filter((name) => given[name] === undefined);
 }
 
+/** A magnet a few percent off its name is one of that field. */
+function isSameField(a: number, b: number | null): boolean {
+  return b !== null && Math.abs(a - b) <= 0.05 * b;
+}
+
 function whyLeftOut(one: SeriesToDraft, fieldT: number | null): string | null {
   const { decision, fieldT: field } = one.read;
   if (decision.key === null) return `its class is not decided (${decision.reason}): type it`;
   const lacking = lackingFor(decision.key, givenOfHeaders(one));
   if (lacking.length > 0) return `type ${lacking.join(', ')}`;
-  if (typeof field.value === 'number' && field.value !== fieldT)
+  if (typeof field.value === 'number' && !isSameField(field.value, fieldT))
     return `it is of ${field.value} T, the draft of ${fieldT} T: a preset has one field`;
   return null;
 }

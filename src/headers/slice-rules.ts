@@ -2,6 +2,7 @@ import { classRow } from '../calc/classes.js';
 import type { CollectedSeries } from './collected-series.js';
 import { isTiled } from './encoded-matrix.js';
 import { derivedAs, type Found, missingFor, plainNumber, readAs, someOf } from './found.js';
+import { gatedWords } from './gated-words.js';
 import { firstNumber, heldNowhere, numberIn, type ValueRule } from './value-rule.js';
 
 /** Distance of neighbouring slices by their places, mm; null where there is none, or it is not even. */
@@ -64,7 +65,9 @@ function findVolumes(series: CollectedSeries): Found {
   if (series.temporalPositions > 1) return derivedAs(series.temporalPositions, 'different TemporalPositionIdentifier');
   if (series.places.length === 0) return missingFor('neither positions in time nor places of slices are stated');
   const perPlace = Math.max(1, series.repeats);
-  if (perPlace > 1 && series.triggerTimes > series.places.length) return derivedAs(1, 'images of one place are phases of a beat');
+  // Images of one place at as many times after the trigger are phases of a beat, not volumes.
+  if (perPlace > 1 && series.triggerTimes >= perPlace && gatedWords(a) !== null)
+    return derivedAs(1, 'images of one place are phases of a beat');
   return derivedAs(perPlace, perPlace === 1 ? 'each place was imaged once' : `each place was imaged ${perPlace} times`);
 }
 

@@ -125,6 +125,17 @@ describe('holdfast read', () => {
     expect(out).toMatch(/^2 series, 7 images in 7 of 13 files; 1 other file passed over$/m);
   });
 
+  it('takes a magnet a few percent off its name for one of that field, and passes over the index of a medium', async () => {
+    const folder = exam();
+    const index = dicomObject([{ tag: '0008,0016', vr: 'UI', value: '1.2.840.10008.1.3.10' }]);
+    writeFileSync(join(folder, 'DICOMDIR'), index);
+    const { exit, out } = await runCommand(['read', folder, '--field', '1.494']);
+    expect(exit).toBe(0);
+    expect(out).toContain('1 other file passed over');
+    expect(out).toContain('read-1.494t: s1, s2');
+    expect((await runCommand(['read', folder, '--field', '3'])).out).toContain('a preset has one field');
+  });
+
   it('leaves a series without a needed value out of the draft, and takes it once it is typed', async () => {
     const folder = temporaryFolder();
     for (const [i, image] of presetImages(lumbar, 't2-sag', 2, '1.2.3.1').entries()) {

@@ -104,6 +104,19 @@ describe('values of headers', () => {
     expect(found({ InPlanePhaseEncodingDirection: ['ROW'] }, 'phaseDirection')).toMatchObject({ origin: 'missing' });
   });
 
+  it('images of one place are volumes, unless the series is gated and they differ in the time after the trigger', () => {
+    const image = (z: number, time: number): Attributes => ({
+      ImageOrientationPatient: [1, 0, 0, 0, 1, 0],
+      ImagePositionPatient: [0, 0, z],
+      TriggerTime: [time],
+    });
+    const images = [0, 8, 16].flatMap((z) => [0, 40].map((time) => image(z, time)));
+    expect(found(images, 'volumes', 'spoiled-gradient-echo/2D')).toMatchObject({ value: 2, origin: 'derived' });
+    const gated = images.map((one) => ({ ...one, ScanOptions: ['CG'] }));
+    expect(found(gated, 'volumes', 'spoiled-gradient-echo/2D')).toMatchObject({ value: 1, origin: 'derived' });
+    expect(found(gated, 'pacing', 'spoiled-gradient-echo/2D')).toMatchObject({ value: { kind: 'cardiac-gate' }, origin: 'read' });
+  });
+
   it('two echoes are two echo times, in their order; more are named', () => {
     const echo = (time: number): Attributes => ({ EchoTime: [time] });
     expect(found([echo(4.6), echo(2.3)], 'echoTimeMs', 'spoiled-gradient-echo/2D')).toMatchObject({ value: 2.3 });

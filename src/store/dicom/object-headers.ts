@@ -20,6 +20,11 @@ export function objectHeaders({ elements, meta, bytes }: Parsed, hash: (uid: str
   return headersOf(takeFrames(elements, bytes), seriesKey);
 }
 
+/** True for the index of a medium (Media Storage Directory Storage, PS3.10): no image, and no fault in a folder. */
+export function isIndex({ meta, bytes }: Parsed): boolean {
+  return textOf(meta['x00020002'], bytes) === '1.2.840.10008.1.3.10';
+}
+
 function* headersOf(frames: Iterable<Attributes>, seriesKey: string): Generator<Header> {
   for (const attributes of frames) yield { source: 'dicom', seriesKey, attributes };
 }

@@ -3,7 +3,7 @@ import { readSidecar } from '../../headers/read-sidecar.js';
 import type { Disk, OpenFile } from '../disk.js';
 import { problemOfError, type StoreProblem } from '../problem-of-error.js';
 import { fileTrouble } from './file-trouble.js';
-import { objectHeaders } from './object-headers.js';
+import { isIndex, objectHeaders } from './object-headers.js';
 import { mostObjectBytes, parseObject } from './parse-object.js';
 
 /** What one file gave. */
@@ -43,7 +43,7 @@ export async function readFileHeaders(disk: Disk, path: string, buffer: Buffer, 
       if (parsed.kind === 'trouble') return { kind: 'problem', problem: fileTrouble(parsed.trouble, path) };
       if (parsed.kind === 'parsed') {
         const headers = objectHeaders(parsed, hash);
-        if (headers === null) return { kind: 'problem', problem: fileTrouble('not-mr', path) };
+        if (headers === null) return { kind: isIndex(parsed) ? 'other' : 'problem', problem: fileTrouble('not-mr', path) };
         const isCut = parsed.pixelsEnd !== null && parsed.pixelsEnd > (whole ? bytes.length : (await file.facts()).sizeBytes);
         return { kind: 'headers', headers, problem: isCut ? fileTrouble('cut', path) : null };
       }

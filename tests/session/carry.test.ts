@@ -14,7 +14,7 @@ import { draftNow, update } from '../../src/session/update.js';
 import { readPreset } from '../../src/study/read-preset.js';
 import { writePreset } from '../../src/study/write-preset.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
-import { keyOf, press, startState, after as told } from './invented-state.js';
+import { keyOf, presetChoice, press, startState, after as told } from './invented-state.js';
 import { atScanner, startWithScanners } from './shipped-scanners.js';
 
 /** What a worker answers: through a message, as plain data. */
@@ -187,6 +187,21 @@ describe('the carry screen', () => {
     expect(textOf(failed)).toContain('It stopped.');
     expect(failed.open.carry).toBeUndefined();
     expect(worked(failed, 'right').carry?.carried).not.toBeNull();
+  });
+
+  it('opens on a revision of the presets too, with no session', () => {
+    const presets = [presetChoice('liver-3t')];
+    const list = told(startWithScanners(['liver-3t']), [
+      { kind: 'key', key: keyOf('right'), atMs: 1 },
+      { kind: 'key', key: keyOf('enter'), atMs: 2 },
+    ]);
+    const ask = list.effects.flatMap((effect) => (effect.kind === 'read-revisions' ? [effect.ask] : []))[0] ?? -1;
+    const revisions = update(list.state, { kind: 'answer', ask, answer: { kind: 'revisions', presets, notes: [] } })[0];
+    const state = worked(revisions, 't');
+    expect([state.session, state.place.screen]).toEqual([null, 'carry']);
+    expect(carryHeadline(state)).toMatch(/^PROPOSAL, \d of 5 series not in full: liver-3t, 3 T to 1\.5 T/);
+    expect(textOf(worked(state, 'end', 'w'))).toMatch(/^PROPOSAL/);
+    expect(press(state, 'escape').place.screen).toBe('revisions');
   });
 
   it('changes nothing of the session, and a draft of it goes on in the running order', () => {

@@ -1,6 +1,5 @@
 import { plannedHere } from '../session/hands/budget-commands.js';
 import { planInWords, plannedInWords, planRows } from '../session/plan-words.js';
-import { resultNow } from '../session/results.js';
 import { sayTime } from '../session/say-time.js';
 import type { State } from '../session/state.js';
 import { fitText } from '../terminal/text-width.js';
@@ -26,10 +25,10 @@ export function budgetScreen(state: State, look: Look, columns: number, rows: nu
     list.findIndex(({ planned }) => planned.series.id === here?.series.id),
   );
   const shown = windowOf(list, chosen, room);
-  const body = shown.items.map(({ planned, totalS }): Line => {
+  const body = shown.items.map(({ planned, nowS, totalS }): Line => {
     const { series, choice, timeS } = planned;
     const isHere = series.id === here?.series.id;
-    const now = sayTime(resultNow(state, series.id).evaluation.figures.scanTimeS ?? 0);
+    const now = sayTime(nowS);
     const text = `${isHere ? look.glyphs.pointer : ' '}${choice === 'skipped' ? look.glyphs.cross : ' '}${fitText(series.id, 14, look.glyphs.ellipsis)}${choice.padEnd(11)}${now.padStart(8)}${(totalS === null ? '-' : sayTime(timeS)).padStart(9)}${(totalS === null ? '-' : sayTime(totalS)).padStart(9)}`;
     const wide = columns >= 120 && choice === 'shortened' ? `  ${plannedInWords(planned).replace(/^[^:]*: /, '')}` : '';
     return [

@@ -12,7 +12,7 @@ import { Plot } from './plot.js';
 export const frontWords = {
   timeSnr: { title: 'most SNR', say: (value: number) => `SNR ${sayRatio(value)}`, axis: (value: number) => sayRatio(value) },
   timeLoss: {
-    title: 'least loss of everything',
+    title: 'least loss',
     say: (value: number) => `loss ${value.toFixed(3)}`,
     axis: (value: number) => value.toFixed(2),
   },

@@ -8,7 +8,7 @@ import { formRow, formRows } from '../session/hands/form-commands.js';
 import { orderRow } from '../session/hands/order-commands.js';
 import { fieldHere, fieldsHere } from '../session/hands/series-commands.js';
 import { startRow } from '../session/hands/start-commands.js';
-import { keepInWords } from '../session/keep-form.js';
+import { keptInWords } from '../session/keep-form.js';
 import { nextStep } from '../session/next-step.js';
 import { planInWords, plannedInWords, planRows } from '../session/plan-words.js';
 import { resultNow, studySeries } from '../session/results.js';
@@ -251,7 +251,7 @@ function waysItems(state: State): Item[] {
         ]
       : []),
     ...(moves === null ? [] : [{ words: moves }]),
-    { words: `k keeps ${keepInWords(state)}` },
+    { words: `k keeps ${keptInWords(state).join(', ')}` },
   ];
 }
 

@@ -1,4 +1,4 @@
-import { keepInWords } from '../session/keep-form.js';
+import { keptInWords } from '../session/keep-form.js';
 import { sayFigure } from '../session/say-figure.js';
 import { sayTime } from '../session/say-time.js';
 import { changesInWords, searchInWords } from '../session/say-way.js';
@@ -49,6 +49,9 @@ function progressLine({ search, place }: State, { glyphs }: Look, columns: numbe
   return [line(`${glyphs.barFull.repeat(full)}${glyphs.barTrack.repeat(width - full)}`)];
 }
 
+/** `TOO CLOSE, 0.03 W/kg to spare`. */
+const verdictColumns = 29;
+
 const verdictStyles: Readonly<Record<string, Style>> = { OVER: 'trouble', 'TOO CLOSE': 'attention', FITS: 'bold' };
 
 /** One way in one line: number, what it is best at, verdict, time, SNR. */
@@ -59,19 +62,19 @@ function wayLine(state: State, listed: ListedWay, number: string, here: boolean,
   const verdict = wayVerdict(state, listed);
   const style = verdictStyles[verdict.word ?? ''] ?? 'plain';
   if (listed.binding !== null) {
-    const text = `${here ? glyphs.pointer : ' '}${number.padStart(2)} ${fitText(wayTitle(state, listed), columns - 32, glyphs.ellipsis)} `;
-    return [span(text, here ? 'inverse' : 'plain'), span(fitText(verdict.text, 27, glyphs.ellipsis), style)];
+    const text = `${here ? glyphs.pointer : ' '}${number.padStart(2)} ${fitText(wayTitle(state, listed), columns - 34, glyphs.ellipsis)} `;
+    return [span(text, here ? 'inverse' : 'plain'), span(fitText(verdict.text, verdictColumns, glyphs.ellipsis), style)];
   }
   const time = sayTime(figures.holdTimeS ?? figures.scanTimeS ?? 0);
   const titleColumns = Math.min(columns - 53, 34);
-  const rest = columns - titleColumns - 55;
+  const rest = columns - titleColumns - verdictColumns - 28;
   const changes = rest > 20 ? `  ${fitText(changesInWords(listed.way), rest, glyphs.ellipsis)}` : '';
   return [
     span(
       `${here ? glyphs.pointer : ' '}${number.padStart(2)} ${fitText(wayTitle(state, listed), titleColumns, glyphs.ellipsis)} `,
       here ? 'inverse' : 'plain',
     ),
-    span(fitText(verdict.text, 27, glyphs.ellipsis), style),
+    span(fitText(verdict.text, verdictColumns, glyphs.ellipsis), style),
     span(`${time.padStart(8)}  SNR ${sayFigure('relativeSnr', figures.relativeSnr).padStart(5)}`),
     span(changes),
   ];
@@ -95,7 +98,8 @@ function cut(lines: readonly Line[], scroll: number, rows: number): Line[] {
 }
 
 function narrowDetail(state: State, { listed }: Here, look: Look, columns: number, rows: number): Line[] {
-  const leftColumns = columns >= 98 ? 46 : 40;
+  // The strips need their room: a number from a reading has its mark.
+  const leftColumns = columns >= 98 ? 46 : 42;
   const rightColumns = columns - leftColumns - 2;
   const copy = asIf(state, listed);
   const words = paragraphLines(state, listed, rightColumns);
@@ -142,8 +146,16 @@ function footLines(state: State, columns: number, rows: number, noList: boolean)
   return [
     ...(moves !== null && (nothing || rows >= 26) ? wrap(moves, columns).map((words) => line(words)) : []),
     ...(result !== undefined && rows >= 26 && !noList ? wrap(searchInWords(result), columns).map((words) => line(words, 'quiet')) : []),
-    ...wrap(`k keeps ${keepInWords(state)}`, columns)
-      .slice(0, rows >= 26 ? 3 : 1)
-      .map((words) => line(words, 'quiet')),
+    ...wrap(keptLine(keptInWords(state), rows >= 26 ? 3 * columns - 20 : columns), columns).map((words) => line(words, 'quiet')),
   ];
+}
+
+/** What every way keeps, as many bands as there is room for; the rest is counted, and its key shows all. */
+function keptLine(kept: readonly string[], room: number): string {
+  for (let count = kept.length; count > 0; count -= 1) {
+    const rest = kept.length - count;
+    const words = `k keeps ${kept.slice(0, count).join(', ')}${rest === 0 ? '' : `, ${rest} more`}`;
+    if (words.length <= room) return words;
+  }
+  return `k: ${kept.length} figures are kept`;
 }

@@ -82,10 +82,9 @@ function mustKeepWords({ figure, parameter, rule, atMost, atLeast, between }: Mu
   );
 }
 
-/** The bands in one line: `SNR at least 70 %, voxel at most 170 %`. */
-export function keepInWords(state: State): string {
+/** The bands, each in words: `SNR at least 70 %`, `voxel phase at most 135 %`. */
+export function keptInWords(state: State): readonly string[] {
   return keepForm(state)
     .filter(({ kind }) => kind === 'number')
-    .map(({ label, shown }) => `${label.replace(',', '')} ${shown.replace(/, usual.*/, '')}`)
-    .join(', ');
+    .map(({ label, shown }) => `${label.replaceAll(',', '')} ${shown.replace(/, usual.*/, '')}`);
 }

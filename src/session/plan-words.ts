@@ -1,5 +1,8 @@
+import { pausesOf } from '../calc/time.js';
 import type { PlannedSeries } from '../search/budget.js';
+import { scannerNow } from './equipment.js';
 import { planHere } from './hands/budget-commands.js';
+import { resultNow } from './results.js';
 import { sayTime } from './say-time.js';
 import { sayVerdict } from './say-verdict.js';
 import { changesInWords, tradesInWords } from './say-way.js';
@@ -8,17 +11,23 @@ import type { State } from './state.js';
 /** One series of a plan with the running total, s; null where it is skipped. */
 export interface PlanRow {
   readonly planned: PlannedSeries;
+  /** Time of the series as it stands, rests between its breath-holds included, as in the plan, s. */
+  readonly nowS: number;
   readonly totalS: number | null;
 }
 
 /** The plan that is looked at, line by line. Preparation counts for every series that is acquired. */
 export function planRows(state: State): readonly PlanRow[] {
   const overheadS = state.plan?.answer?.overheadS ?? 0;
+  const scanner = scannerNow(state);
+  const preparationS = scanner === null ? 0 : pausesOf(scanner).preparationS;
   let totalS = 0;
   return planHere(state).map((planned) => {
-    if (planned.choice === 'skipped') return { planned, totalS: null };
+    const { tableTimeS } = resultNow(state, planned.series.id).evaluation.figures;
+    const nowS = Math.max(0, (tableTimeS ?? 0) - preparationS);
+    if (planned.choice === 'skipped') return { planned, nowS, totalS: null };
     totalS += planned.timeS + overheadS;
-    return { planned, totalS };
+    return { planned, nowS, totalS };
   });
 }
 

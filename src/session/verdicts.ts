@@ -104,12 +104,17 @@ export interface Headline {
   readonly text: string;
 }
 
-/** `OVER by 6.0 s: breath-hold 17.0 s, this patient 11 s`. */
-export function sayJudged({ verdict, against, of }: Judged): string {
+/** `FITS, 0.17 uT to spare`: the verdict alone, with the unit of what is judged. */
+export function sayJudgedAlone({ verdict, of }: Pick<Judged, 'verdict' | 'of'>): string {
   const unit = of === 'b1PlusRmsUt' ? ' uT' : of === 'sar' ? ' W/kg' : '';
   const said = sayVerdict(verdict);
-  if (unit === '') return `${said}: ${against}`;
-  return `${verdict.word === 'OVER' ? `${said}${unit}` : said.replace(' to spare', `${unit} to spare`)}: ${against}`;
+  if (unit === '') return said;
+  return verdict.word === 'OVER' ? `${said}${unit}` : said.replace(' to spare', `${unit} to spare`);
+}
+
+/** `OVER by 6.0 s: breath-hold 17.0 s, this patient 11 s`. */
+export function sayJudged(judged: Judged): string {
+  return `${sayJudgedAlone(judged)}: ${judged.against}`;
 }
 
 /** The same of one series among others: `OVER by 1.8 s: t1-3d, breath-hold 12.8 s, this patient 11 s`. */

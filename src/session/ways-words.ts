@@ -5,11 +5,10 @@ import type { Change } from '../search/way.js';
 import { changedKeys } from './changed-keys.js';
 import { consequences } from './consequences.js';
 import { resultNow, sessionSeries, studySeries } from './results.js';
-import { sayVerdict } from './say-verdict.js';
 import { bindingInWords, bindingsInWords, changesInWords, exactInWords, kindWords, tradesInWords } from './say-way.js';
 import { pairedSeries } from './set-field.js';
 import type { State } from './state.js';
-import { missingReadings, seriesVerdicts } from './verdicts.js';
+import { missingReadings, sayJudgedAlone, seriesVerdicts } from './verdicts.js';
 import { firstWays, type ListedWay, listedWays, stateWith } from './ways.js';
 
 /** What stands over the list: how far the search is, or what it found and whether that is proven. */
@@ -44,9 +43,13 @@ export function searchNotes(state: State): readonly string[] {
   const series = studySeries(state, seriesId);
   const pairs = pairedSeries(state, seriesId).map(({ id }) => id);
   const limits = search?.seriesId === seriesId ? search.problem.limits : null;
+  const unread = missingReadings(state, sessionSeries(state, seriesId));
   return [
-    ...missingReadings(state, sessionSeries(state, seriesId)).map((cap) => `${cap} is not searched for: type the scanner's number (d)`),
-    ...(limits !== null && Object.keys(limits).length === 0 ? ['No limit binds this series: everything within what is kept fits'] : []),
+    ...unread.map((cap) => `${cap} is not searched for: type the scanner's number (d)`),
+    // A cap that waits for its reading is limit enough to speak of.
+    ...(limits !== null && Object.keys(limits).length === 0 && unread.length === 0
+      ? ['No limit binds this series: everything within what is kept fits']
+      : []),
     ...(state.session?.contrastAtMs !== null && series.purpose === 'dynamic'
       ? ['Contrast is given: the volumes before it cannot be acquired again, so this series stays as it is']
       : []),
@@ -73,7 +76,7 @@ export function wayTitle(state: State, { kinds, binding, way }: ListedWay): stri
 /** The verdict of a series with some values set, in words. */
 export function verdictWith(state: State, id: string, set: GivenParameters): { readonly word: string | null; readonly text: string } {
   const judged = seriesVerdicts(stateWith(state, id, set), id)[0];
-  return judged === undefined ? { word: null, text: 'no limit' } : { word: judged.verdict.word, text: sayVerdict(judged.verdict) };
+  return judged === undefined ? { word: null, text: 'no limit' } : { word: judged.verdict.word, text: sayJudgedAlone(judged) };
 }
 
 /** The verdict of a way of the list; one that needs more than what is kept says so. */

@@ -41,7 +41,7 @@ describe('moments at the console, by the ways to fit', () => {
     await screen.escape('Ways to fit');
     await screen.program.waitFor('Proven: none is better', 60_000);
     expect(screen.verdict()).toContain('OVER by 0.80 uT');
-    expect(screen.program.text()).toMatch(/1 .*FITS, 0\.\d\d to spare/);
+    expect(screen.program.text()).toMatch(/1 .*FITS, 0\.\d\d uT to spare/);
     await screen.keys(keyBytes.enter, 'Way 1 taken');
     expect(screen.verdict()).toMatch(/^FITS, 0\.\d\d uT to spare: B1\+rms 1\.\d\d uT, cap 2 uT/);
     expect(screen.program.text()).toContain("read the scanner's displayed value again before starting");

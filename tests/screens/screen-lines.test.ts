@@ -224,6 +224,27 @@ describe('the ways to fit', () => {
     expect(lineText(screenLines(ways, unicode)[0] ?? [])).toContain('OVER by 6.0 s');
   });
 
+  it('at 80 by 24 nothing of a line is cut off: what is kept is said as far as it goes, and the rest counted', () => {
+    const kept = textOf(at(ways, 80, 24)).find((text) => text.startsWith('k keeps')) ?? '';
+    expect(kept).toMatch(/^k keeps SNR at least 70 %, .*, \d more *$/);
+    expect(kept.trimEnd().length).toBeLessThanOrEqual(80);
+    expect(textOf(at(ways, 160, 50)).join('\n')).toMatch(/k keeps SNR at least 70 %, .*voxel slice at most 170 %(?!.*more)/);
+  });
+
+  it('a cap without its reading is said once, and not that no limit binds', () => {
+    const capped = told(
+      press(sessionOn('lumbar-spine-1.5t'), 'p', 'down', 'down', 'down', 'down', 'down', '2', 'enter', 'escape', 'enter', 'f'),
+    );
+    const text = textOf(at(capped, 80, 24)).join('\n');
+    expect(text).toContain("is not searched for: type the scanner's number (d)");
+    expect(text).not.toContain('No limit binds');
+  });
+
+  it('the chart of a front says its limit at 100 columns', () => {
+    for (const keys of [['c'], ['c', 'tab']])
+      expect(textOf(at(press(ways, ...keys), 100, 30)).join('\n')).toMatch(/Front: [^|]*limit 11\.0 s/);
+  });
+
   it('a wide screen has list, strips, words and front together', () => {
     const text = textOf(at(ways, 160, 50)).join('\n');
     for (const words of ['Consequences', 'Gives up: ', 'Front: most SNR in each breath-hold', 'Before rewriting: ', 'limit 11.0 s'])
@@ -261,6 +282,13 @@ describe('the budget', () => {
       expect(text).toMatch(/Together \d+:\d\d of 8:00: /);
       expect(text).toMatch(/shortened|skipped/);
     }
+  });
+
+  it('compares like with like: what stays as it is takes as long in the plan as now, rests between its holds included', () => {
+    const liver = told(press(sessionOn('liver-3t'), 'p', 'down', 'down', 'down', '40', 'enter', 'escape', 'b'));
+    const rows = textOf(liver).flatMap((text) => /as it is +(\S+ ?s?) +(\S+ ?s?) +\d/.exec(text)?.slice(1, 3).join('|') ?? []);
+    expect(rows.length).toBeGreaterThan(3);
+    for (const row of rows) expect(row.split('|')[0]?.trim()).toBe(row.split('|')[1]?.trim());
   });
 });
 

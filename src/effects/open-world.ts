@@ -15,6 +15,7 @@ import type { ScannerFile } from '../study/scanner-file.js';
 import { toolVersion } from '../study/tool-version.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { loadDrafts, loadPresets } from './load-presets.js';
+import { stopReading } from './record-reading.js';
 import { runEffect } from './run-effect.js';
 import { openPictureWorker, pictureRunner } from './run-picture.js';
 import { openSearchWorker, searchRunner } from './run-search.js';
@@ -124,6 +125,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
     },
     leave: async (draft) => {
       searches.close();
+      stopReading(world);
       pictures.close();
       clearInterval(beat);
       if (draft !== null) saver.change(draft);

@@ -32,7 +32,7 @@ async function atSite(files: Readonly<Record<string, string>> = {}) {
   });
   const told: Message[] = [];
   world.listen((message) => told.push(message));
-  return { home, site, told, run: world.runEffect, names: () => readdirSync(site).sort() };
+  return { home, site, told, leave: world.leave, run: world.runEffect, names: () => readdirSync(site).sort() };
 }
 
 function changed(study: Study, sliceThicknessMm: number, revision = study.revision): Study {
@@ -91,10 +91,15 @@ describe('releasing from the interface', () => {
     await run({ kind: 'release', ask: 1, study: changed(liver, 3, 1), basedOn: 0, said });
     await run({ kind: 'release', ask: 2, study: changed(liver, 4, 2), basedOn: 1, said });
     writeFileSync(join(site, 'liver-3t@7.json'), '{');
+    writeFileSync(
+      join(site, 'liver-3t.json'),
+      readFileSync(join(site, 'liver-3t@2.json'), 'utf8').replace('short holds', 'another reason'),
+    );
     const answer = await run({ kind: 'read-revisions', ask: 3, id: 'liver-3t' });
     if (answer?.kind !== 'revisions') throw new Error('no revisions');
     expect(answer.presets.map(({ origin, study }) => `${origin} ${study.revision}`)).toEqual(['site 2', 'site 1', 'shipped 1']);
     expect(answer.notes.join()).toContain('liver-3t@7.json');
+    expect(answer.notes.join()).toContain('liver-3t.json says that it is revision 2 too');
   });
 });
 
@@ -186,6 +191,12 @@ describe('records from the interface', () => {
     if (answer?.kind !== 'record-list') throw new Error('no list');
     expect(answer.list.stopped).toBe(true);
     expect(answer.list.records).toBeLessThan(700);
+
+    const left = await inFile();
+    const reading = left.run({ kind: 'report-records', ask: 9, typed: '' });
+    await left.leave(null);
+    // Whoever leaves does not wait for the end of the files.
+    expect(await reading).toMatchObject({ kind: 'record-report', report: { stopped: true } });
 
     const first = run({ kind: 'report-records', ask: 3, typed: '' });
     const second = run({ kind: 'list-records', ask: 4, typed: '' });

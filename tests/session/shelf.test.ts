@@ -359,6 +359,32 @@ describe('records', () => {
     expect(late.shelf.list?.read).toBeNull();
   });
 
+  it('a period that is being typed is read for again, since its end widens it', () => {
+    const state = withAnswers(
+      startState(),
+      (effect) => (effect.kind === 'list-records' ? list(effect.typed, effect.typed === '' ? 5000 : 30) : null),
+      'left',
+      '2026-01',
+    );
+    const asked = (text: string) =>
+      play(
+        state,
+        [...text].map((each) => ({ kind: 'key', key: { name: 'text', text: each }, atMs: 1 }) as const),
+      ).effects;
+    expect(asked(' l')).toEqual([]);
+    expect(asked('.')).toMatchObject([{ typed: '2026-01.' }]);
+    expect(asked('..')).toMatchObject([{ typed: '2026-01.' }, { typed: '2026-01..' }]);
+  });
+
+  it('a list that gave way to a report is read again when one comes back', () => {
+    const state = press(startState(), 'left', 'tab');
+    expect([state.place.screen, state.shelf.list]).toEqual(['report', null]);
+    const ask = state.open.report ?? -1;
+    const failed = update(state, { kind: 'answer', ask, answer: { kind: 'failed', problems: [] } })[0];
+    const back = play(failed, [{ kind: 'key', key: keyOf('escape'), atMs: 1 }]);
+    expect([back.state.place.screen, back.effects]).toMatchObject(['records', [{ kind: 'list-records' }]]);
+  });
+
   it('a long reading says how far it is, takes keys, and Escape ends it before it goes back', () => {
     const state = press(startState(), 'left');
     const ask = state.open.list ?? -1;

@@ -42,12 +42,17 @@ export const moveInRecords =
     return only(pointAt({ ...state, notice: null }, next === undefined ? '' : fieldOfRecord(next)));
   };
 
+/** Whether a longer text means fewer records: it does, unless a period is being typed, whose end widens it. */
+function isNarrower(typed: string, before: string): boolean {
+  return typed.startsWith(before) && !/\.\S*$/.test(typed);
+}
+
 function narrowed(state: State, text: string): Change {
   const typed = text.replace(/^\s+/, '').slice(0, 60);
   const next = pointAt({ ...state, notice: null, shelf: { ...state.shelf, typed } }, '');
   const list = state.shelf.list?.read ?? null;
   // Among all of them the others are found here; where only the newest are here, or fewer were asked for, they are read anew.
-  const isHere = list !== null && list.meant <= list.rows.length && typed.startsWith(list.typed);
+  const isHere = list !== null && list.meant <= list.rows.length && (list.typed === '' || isNarrower(typed, list.typed));
   return isHere ? only(next) : readList(next);
 }
 
@@ -63,7 +68,10 @@ function isReading({ open: asked }: State): boolean {
 export const stopReading: Command = (state, key) => {
   if (isReading(state)) return [say(state, 'Stopped: what was read so far'), [{ kind: 'stop-reading' }]];
   if (state.place.screen === 'records' && state.shelf.typed !== '') return narrowed(state, '');
-  return state.place.back.length === 0 ? back(state, key) : only(goBack(state));
+  if (state.place.back.length === 0) return back(state, key);
+  const before = goBack(state);
+  // A list that gave way to another reading is read again.
+  return before.place.screen === 'records' && before.shelf.list === null ? readList(before) : only(before);
 };
 
 /** One record: its page, and planned against used. */

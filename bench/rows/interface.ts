@@ -150,6 +150,30 @@ async function keypress(count: number): Promise<Measured> {
   );
 }
 
+/** Steps of a value that each ask for new pictures, with pictures beside the series and without, on a screen that is wide enough for them. */
+async function keypressBesidePictures(count: number): Promise<Measured> {
+  const wide = { columns: 160, rows: 50 };
+  const a = await seriesScreen(wide);
+  const b = await seriesScreen(wide);
+  return closing(a, () =>
+    closing(b, async () => {
+      a.program.press('s');
+      await a.program.shows('mm wide');
+      await answers(a.program, ['k', '\u001b']);
+      const ours: number[] = [];
+      const theirs: number[] = [];
+      const steps = Array.from({ length: 20 }, (_, i) => (i % 2 === 0 ? '+' : '-'));
+      for (let from = 0; from < count; from += steps.length) {
+        ours.push(...msOf(await answers(a.program, steps)));
+        theirs.push(...msOf(await answers(b.program, steps)));
+      }
+      const subject = percentile(ours, 0.95);
+      const yardstick = percentile(theirs, 0.95);
+      return { subject, yardstick, ratio: subject / yardstick };
+    }),
+  );
+}
+
 /** Most bytes that one of these keys had written, after others that led there. */
 async function mostBytes(before: readonly string[], keys: readonly string[]): Promise<Measured> {
   const a = await seriesScreen();
@@ -235,6 +259,13 @@ export const rows: readonly Row[] = [
     unit: 'ms',
     budget: 2,
     measure: () => keypress(2000),
+  },
+  {
+    name: 'key to frame written, 95 of 100, while the picture beside the series is drawn anew for every key, 160x50',
+    against: 'the same keys without pictures',
+    unit: 'ms',
+    budget: 2,
+    measure: () => keypressBesidePictures(400),
   },
   bytesRow('one number', 60, ['1'], ['2', '3', '4']),
   bytesRow('a step of the slice count, the series changed before', 300, [...toSlices, '-', '-'], ['-', '-', '+', '-']),

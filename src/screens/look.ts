@@ -59,17 +59,27 @@ function greyCodes(greys: readonly [number, number], level: ColourLevel): string
     const step = Math.round(grey * 25);
     return `5;${step === 0 ? 16 : step === 25 ? 231 : 231 + step}`;
   };
-  return `${sgr}38;${code(greys[0])}m${sgr}48;${code(greys[1])}m`;
+  return `${sgr}38;${code(greys[0])};48;${code(greys[1])}m`;
 }
 
 /** A line with its styles as the painter reads them. */
 export function paintLine(given: Line, { colourLevel }: Look): string {
   let painted = '';
+  // One sequence a cell of a picture and none between them: each is read again with every frame.
+  let inPicture = false;
   for (const { text, style, cursor, greys } of given) {
     if (text === '') continue;
-    const begin = greys === undefined ? opening(style, colourLevel) : greyCodes(greys, colourLevel);
+    if (greys !== undefined) {
+      painted += `${greyCodes(greys, colourLevel)}${text}`;
+      inPicture = true;
+      continue;
+    }
+    if (inPicture) painted += `${sgr}0m`;
+    inPicture = false;
+    const begin = opening(style, colourLevel);
     const shown = cursor ? cursorHere(text) : text;
     painted += begin === '' ? shown : `${begin}${shown}${sgr}0m`;
   }
+  if (inPicture) painted += `${sgr}0m`;
   return painted;
 }

@@ -19,6 +19,7 @@ import { isMeantRecord, namedRecord } from '../../src/study/record-meant.js';
 import { RecordCounts } from '../../src/study/record-report.js';
 import type { Study } from '../../src/study/study.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
+import { knownProblem, picturesOf } from './drawn-picture.js';
 import { keyOf, presetChoice } from './invented-state.js';
 import { startWithScanners } from './shipped-scanners.js';
 
@@ -174,6 +175,7 @@ function answerTo(effect: Effect, well: boolean): Message | null {
   if (effect.kind === 'read-rules') return { kind: 'answer', ask, answer: { kind: 'rules', rules: new Map() } };
   if (effect.kind === 'search') return { kind: 'answer', ask, answer: { kind: 'ways', ways: waysFor(effect.problem) } };
   if (effect.kind === 'plan') return { kind: 'answer', ask, answer: { kind: 'plan', plan: planFor(effect.problem) } };
+  if (effect.kind === 'picture') return { kind: 'answer', ask, answer: { kind: 'pictures', pictures: picturesOf(knownProblem().problem) } };
   if (effect.kind === 'carry') return { kind: 'answer', ask, answer: { kind: 'carried', carried: carriedFor(effect.problem) } };
   const shelf = shelfAnswer(effect);
   return { kind: 'answer', ask, answer: shelf ?? { kind: 'done', words: 'Saved' } };

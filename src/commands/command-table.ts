@@ -159,7 +159,7 @@ export const commandTable: readonly CommandRow[] = [
     words: ['presets', 'check'],
     summary: 'are these preset files right? Exit code 1 when one is not',
     details: [
-      'Checked are the form of the file and its rules; that the timing is possible and every figure has a value; in/opposed pairs and nulls at the exact field; that must-keeps are kept and name a source.',
+      'Checked are the form of the file and its rules; that the timing is possible and every figure has a value; in/opposed pairs and nulls at the exact field; that must-keeps and the rules of the site are kept and name a source.',
       'Without FILE all presets are checked: those of --presets and those that ship with the program.',
     ],
     arguments: [{ name: 'FILE', required: false, repeats: true }],

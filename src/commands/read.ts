@@ -60,7 +60,10 @@ export async function runRead(request: CommandRequest, io: CommandIo): Promise<E
   const out = request.value('out');
   let written: ReadResult['written'] = null;
   if (out !== undefined) {
-    if (draft.study === null) return complain(nothingToWrite(draft), io);
+    if (draft.study === null) {
+      sayProblems(found, io);
+      return complain(nothingToWrite(draft, series, picked.value), io);
+    }
     const path = resolve(io.workingFolder, out);
     const saved = await saveNewPreset(io.disk, path, draft.study);
     if (!saved.ok) return complain(refusedByStore(saved.problems), io);
@@ -117,12 +120,14 @@ function nothingRead({ problems, counts }: Collected) {
   });
 }
 
-function nothingToWrite({ leftOut }: HeaderDraft) {
-  const reasons = leftOut.map(({ id, why }) => `${id}: ${why}`).join('; ');
+function nothingToWrite({ leftOut }: HeaderDraft, series: readonly SeriesToDraft[], picked: ReadonlySet<string>) {
+  const unpicked = series.map(({ read }) => read.id).filter((id) => !picked.has(id));
+  const aside = unpicked.map((id) => `${id}: made from other images or not picked, --series ${id} picks it`);
+  const reasons = [...leftOut.map(({ id, why }) => `${id}: ${why}`), ...aside].slice(0, 20).join('; ');
   return refuse(exitCodes.failed, {
     code: 'nothing-to-draft',
     path: '--out',
-    message: `Nothing was written: no series is whole (${reasons === '' ? 'none was picked' : reasons}).`,
+    message: `Nothing was written: no series is whole (${reasons}).`,
     hint: 'Type what is missing with --set SERIES:KEY=VALUE and --class SERIES:CLASS.',
   });
 }

@@ -29,6 +29,7 @@ const words = (tag: string, taken: readonly string[], vr: Representation = 'CS')
  * (tags and representations are compared with an independent dictionary by a test).
  */
 export const attributeTable = {
+  // Beyond the first two words scanners write their own: those here tell components, diffusion and tiled slices (common practice).
   ImageType: words('00080008', ['ORIGINAL', 'DERIVED', 'PRIMARY', 'SECONDARY', 'M', 'P', 'R', 'I', 'DIFFUSION', 'MOSAIC', 'WATER', 'FAT']),
   Modality: words('00080060', [
     'MR',

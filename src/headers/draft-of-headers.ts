@@ -111,7 +111,7 @@ export function draftOfHeaders(series: readonly SeriesToDraft[], fieldT?: number
   if (field === null || field < min || field > max || whole.length === 0) return { study: null, leftOut };
   const { region, pair, isAssumed } = regionOf(whole.map(({ read }) => read.bodyPart));
   const notes = [
-    `Read from headers; review every value before use. Assumed: target and comparison${isAssumed ? ', region' : ''}.`,
+    `Read from headers; review every value before use. What is not named here was read as it stands. Assumed: target and comparison${isAssumed ? ', region' : ''}.`,
     ...whole.map(originsOf),
   ].join(' ');
   const digits = Number(field.toFixed(3));

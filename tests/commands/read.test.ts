@@ -114,7 +114,7 @@ describe('holdfast read', () => {
     const { exit, out, err } = await runCommand(['read', folder], { disk });
     expect(exit).toBe(1);
     expect(err).toMatch(/cut\.dcm is damaged or cut short/);
-    expect(err).toMatch(/pack\.zip is a packed file \(zip\)/);
+    expect(err).toMatch(/pack\.zip is a packed file/);
     expect(err).toMatch(/round leads round in a circle and was not read again/);
     expect(err).toMatch(/self leads round in a circle of links \(ELOOP\)/);
     expect(err).toMatch(/ct\.dcm holds no MR image/);
@@ -134,6 +134,19 @@ describe('holdfast read', () => {
     expect(out).toContain('1 other file passed over');
     expect(out).toContain('read-1.494t: s1, s2');
     expect((await runCommand(['read', folder, '--field', '3'])).out).toContain('a preset has one field');
+  });
+
+  it('says of a series made from other images that it is to be picked, and what else was wrong', async () => {
+    const folder = temporaryFolder();
+    const [image] = presetImages(lumbar, 't2-sag', 1, '1.2.3.1');
+    writeFileSync(join(folder, 'map'), dicomObject([...image!, { tag: '0008,0008', vr: 'CS', value: 'DERIVED\\SECONDARY' }]));
+    writeFileSync(join(folder, 'packed.zip'), Buffer.from('PK\u0003\u0004', 'latin1'));
+    const draft = join(temporaryFolder(), 'draft.json');
+    const { exit, out, err } = await runCommand(['read', folder, '--out', draft]);
+    expect([exit, out]).toEqual([1, '']);
+    expect(err).toContain('--series s1 picks it');
+    expect(err).toContain('packed.zip is a packed file');
+    expect((await runCommand(['read', join(folder, 'map'), '--series', 's1', '--out', draft])).exit).toBe(0);
   });
 
   it('leaves a series without a needed value out of the draft, and takes it once it is typed', async () => {

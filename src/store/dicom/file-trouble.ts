@@ -19,7 +19,7 @@ const troubles: Readonly<Record<FileTrouble, { readonly code: string; readonly s
   },
   damaged: { code: 'object-damaged', says: 'is damaged or cut short: its header ends before it should', hint: 'Export or copy it again.' },
   'inflates-too-far': { code: 'inflates-too-far', says: 'inflates past 64 MB and was given up', hint: 'Export it again, not deflated.' },
-  zip: { code: 'packed-file', says: 'is a packed file (zip)', hint: 'Unpack it, then name its folder.' },
+  zip: { code: 'packed-file', says: 'is a packed file (zip or gzip)', hint: 'Unpack it, then name its folder.' },
   'not-mr': { code: 'not-mr', says: 'holds no MR image', hint: 'Nothing of it was used.' },
   cut: { code: 'object-cut', says: 'is cut short within its pixels; its header was read', hint: 'Copy it again if the pictures matter.' },
   'too-long': {

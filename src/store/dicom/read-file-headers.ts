@@ -30,10 +30,11 @@ export async function readFileHeaders(disk: Disk, path: string, buffer: Buffer, 
     let bytes = buffer.subarray(0, await fill(file, buffer, 0));
     const form = formOf(bytes);
     if (form === 'zip') return { kind: 'problem', problem: fileTrouble('zip', path) };
+    if (form === 'gzip') return { kind: 'other', problem: fileTrouble('zip', path) };
     if (form === 'other') return { kind: 'other', problem: fileTrouble('no-object', path) };
     let whole = bytes.length < firstBytes;
     if (form === 'text') {
-      if (!whole) bytes = await more(file, bytes, mostObjectBytes + 1);
+      if (!whole) bytes = await more(file, bytes, mostObjectBytes);
       return bytes.length > mostObjectBytes
         ? { kind: 'problem', problem: fileTrouble('too-long', path) }
         : sidecarHeaders(bytes, path, hash);
@@ -77,10 +78,12 @@ async function more(file: OpenFile, bytes: Buffer, wanted: number): Promise<Buff
 }
 
 /** What the first bytes are: an object (PS3.10 prefix), a packed file, text that may be JSON, or something else. */
-function formOf(bytes: Buffer): 'object' | 'zip' | 'text' | 'other' {
+function formOf(bytes: Buffer): 'object' | 'zip' | 'gzip' | 'text' | 'other' {
   if (bytes.length >= 132 && bytes.toString('latin1', 128, 132) === 'DICM') return 'object';
   const [first, second] = bytes;
   if (first === 0x50 && second === 0x4b) return 'zip';
+  // Pictures of a sidecar are packed this way: in a folder it is no fault.
+  if (first === 0x1f && second === 0x8b) return 'gzip';
   return /^(?:\xef\xbb\xbf)?\s*\{/.test(bytes.toString('latin1', 0, 256)) ? 'text' : 'other';
 }
 

@@ -80,10 +80,22 @@ function drawn(model: SeriesModel, request: PairRequest): Outcome<{ readonly pic
   const picture = pictureOf({ model, object: object.value, plane }, options);
   if (!picture.ok) return picture;
   const unknown = [...tissueWeights(model, object.value)].flatMap(([name, signal]) => (weightedSignal(signal) === null ? [name] : []));
-  return { ok: true, value: { picture: picture.value, notes: notesOf(model, noise, unknown, object.value.enlarged) } };
+  const { bodyMm, enlarged } = object.value;
+  const unfolds = bodyMm[plane.phaseIsDown ? 1 : 0] <= model.geometry.encodedPhaseExtentMm;
+  return { ok: true, value: { picture: picture.value, notes: notesOf(model, { noise, unknown, enlarged, unfolds }) } };
 }
 
-function notesOf(model: SeriesModel, noise: number | null, unknown: readonly string[], enlarged: boolean): string[] {
+/** What a case is like, besides the series. */
+interface CaseFacts {
+  readonly noise: number | null;
+  /** Tissues of the object without a signal here. */
+  readonly unknown: readonly string[];
+  readonly enlarged: boolean;
+  /** The body lies within what is encoded along phase. */
+  readonly unfolds: boolean;
+}
+
+function notesOf(model: SeriesModel, { noise, unknown, enlarged, unfolds }: CaseFacts): string[] {
   const p = model.series.parameters;
   const volume = model.series.acquisition === '3D';
   const cases: readonly (readonly [boolean, string])[] = [
@@ -91,6 +103,10 @@ function notesOf(model: SeriesModel, noise: number | null, unknown: readonly str
     [noise === null, 'The noise of this setting is not known: drawn without noise.'],
     [unknown.length > 0, `No signal is known here for ${unknown.join(', ')}: drawn black.`],
     [p.partialFourierPhase < 1, 'Partial Fourier: lines that are not acquired are filled with zeros.'],
+    [
+      p.parallelFactorPhase > 1 && !unfolds,
+      'The body is wider than what is encoded: acceleration cannot unfold that. A plain fold is drawn; what a scanner shows looks worse.',
+    ],
     [
       p.parallelFactorPhase > 1 || (volume && p.parallelFactorSlice > 1),
       'Acceleration: noise by the mean g of the table, the same everywhere; no residue of unfolding.',

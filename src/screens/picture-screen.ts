@@ -19,7 +19,7 @@ export function pictureScreen(state: State, look: Look, columns: number, rows: n
   const [, ...sentences] = pictureSentences(state);
   const roomy = rows >= 30;
   const words = sentences.flatMap((each) => wrap(each, columns)).map((each) => line(each));
-  const wordRows = Math.min(words.length, roomy ? 12 : 3);
+  const wordRows = Math.min(words.length, rows >= 42 ? 16 : roomy ? 8 : 3);
   const head = line(fitText(frame, columns, look.glyphs.ellipsis), 'attention');
   if (drawn === null) {
     const said = picture?.trouble ?? (picture === null ? 'No picture yet' : 'Drawing...');

@@ -1,4 +1,5 @@
 import type { FigureKey } from '../calc/figures.js';
+import { usualTargetSnr } from '../picture/picture-pair.js';
 import { pictureSet } from './picture-view.js';
 import { pictureFigureWords } from './picture-words.js';
 import { resultOfPreset, resultWith, studySeries } from './results.js';
@@ -40,6 +41,8 @@ export function pictureSentences(state: State): string[] {
     ...(differences.length + folds.length === 0 ? ["Nothing is seen that is not seen in the preset's picture"] : differences),
     ...folds,
     ...pictureFigureWords(series, before, figures),
+    `Assumed: the target has a signal to noise of ${usualTargetSnr} in the preset`,
+    ...(state.picture?.seriesId === seriesId ? (state.picture.drawn?.pair.notes ?? []) : []),
     ...(state.picture?.trouble == null ? [] : [state.picture.trouble]),
   ];
 }

@@ -29,6 +29,15 @@ describe('picture', () => {
     expect(new Set(png.data).size).toBeGreaterThan(60);
   });
 
+  it('says where acceleration cannot unfold, and where a body is drawn larger than typed', async () => {
+    const wide = await draw('--body', 'AP=400,RL=430', '--json');
+    expect((JSON.parse(wide.out) as { notes: string[] }).notes.join(' ')).toContain('acceleration cannot unfold that');
+    const small = await draw('--body', 'AP=160,RL=210', '--json', '--replace');
+    const { notes } = JSON.parse(small.out) as { notes: string[] };
+    expect(notes).toContain('The body is drawn larger than typed: the shapes inside need the room.');
+    expect(notes.join(' ')).not.toContain('unfold that');
+  });
+
   it('--json gives one document', async () => {
     const { exit, out: said } = await draw('--set', 'parallelFactorPhase=3', '--json');
     expect(exit).toBe(0);

@@ -77,6 +77,8 @@ describe('pictures in the interface', () => {
     expect(said).toContain("The grain is coarser (50 % of the preset's)");
     expect(said).toContain('Small discs stand out and leaning edges sharpen (6.0 mm to 3.0 mm)');
     expect(pictureSentences(press(dwi, 's'))).toContain("Nothing is seen that is not seen in the preset's picture");
+    expect(said).toContain('Assumed: the target has a signal to noise of 20 in the preset');
+    expect(pictureSentences(withPicture(press(dwi, 's')))).toContain('The highest b-value is drawn.');
     expect(pictureSentences(pictureFailed(press(dwi, 's'))).at(-1)).toContain('TE is not shorter than TR');
   });
 

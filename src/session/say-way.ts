@@ -125,10 +125,8 @@ export function bindingInWords({ binders, needs }: Pick<Binding, 'binders' | 'ne
 
 /** What is known of what binds where nothing fits: whether it was searched to the end, and that nothing helps. */
 export function bindingsInWords({ bindings, proven }: Pick<NothingFits, 'bindings' | 'proven'>): string | null {
-  if (!proven) return 'What binds was not searched to the end: other limits may bind too.';
-  return bindings.length === 0
-    ? 'Without any of its limits there is still no way: what stands against it is an error of the series itself.'
-    : null;
+  if (!proven) return 'What binds is not proven: the search for it was stopped.';
+  return bindings.length === 0 ? 'Not even without any limit: the series itself is in error.' : null;
 }
 
 /** How large the search was, and whether something better may exist. */

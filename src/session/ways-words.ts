@@ -22,7 +22,7 @@ export function searchStatus(state: State): { readonly words: string; readonly l
     return { words: `Searching${share}; Esc ends it with what it has`, level: 'plain' };
   }
   const { ways, proven } = answer.result;
-  const doubt = proven ? '' : '. NOT PROVEN: the search was stopped, a better one may exist';
+  const doubt = proven ? '' : '. NOT PROVEN: stopped, a better one may exist';
   const known = answer.nothing === null ? null : bindingsInWords(answer.nothing);
   if (ways.length === 0)
     return proven

@@ -166,6 +166,26 @@ describe('the ways', () => {
   });
 });
 
+describe('where nothing fits', () => {
+  const none = press(sessionOn('liver-3t'), 'p', '2', 'enter', 'escape', 'enter', 'f');
+  const told = (nothing: { readonly bindings: []; readonly proven: boolean }) => {
+    const { result } = answerSearch(none.search!.problem, {});
+    return update(none, { kind: 'answer', ask: none.search!.ask, answer: { kind: 'ways', ways: { result, nothing } } })[0];
+  };
+
+  it('what binds is said to be not proven where the search for it was stopped', () => {
+    expect(searchStatus(told({ bindings: [], proven: false })).words).toBe(
+      'Nothing fits. What binds is not proven: the search for it was stopped.',
+    );
+  });
+
+  it('says that no limit is what stands against it where nothing helps', () => {
+    expect(searchStatus(told({ bindings: [], proven: true })).words).toBe(
+      'Nothing fits. Not even without any limit: the series itself is in error.',
+    );
+  });
+});
+
 describe('the budget', () => {
   const lumbar = press(sessionOn('lumbar-spine-1.5t'), 'p', ...Array<string>(3).fill('down'), '8', 'enter', 'escape');
 

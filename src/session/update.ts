@@ -21,13 +21,10 @@ export function update(state: State, message: Message): Change {
   const change = takeOne(state, message);
   if (message.kind !== 'presets' || state.early === null) return change;
   // What was typed ahead of the presets comes now, in its order.
-  return state.early.reduce<Change>(
-    ([before, asked], key) => {
-      const [after, more] = takeOne(before, { kind: 'key', key, atMs: before.nowMs });
-      return [after, [...asked, ...more]];
-    },
-    change,
-  );
+  return state.early.reduce<Change>(([before, asked], key) => {
+    const [after, more] = takeOne(before, { kind: 'key', key, atMs: before.nowMs });
+    return [after, [...asked, ...more]];
+  }, change);
 }
 
 /** Keys that are kept while the presets are read; whoever types more has left the keyboard to something else. */

@@ -42,5 +42,6 @@ export function budgetScreen(state: State, look: Look, columns: number, rows: nu
 function limitLine({ session }: State): string {
   const limits = session?.limits;
   const longest = limits?.longestSeriesS == null ? '' : `, no series longer than ${sayTime(limits.longestSeriesS)}`;
-  return `Minimum set first${longest}; preparation and rests count`;
+  const hold = limits?.holdS == null ? '' : `, no breath-hold over ${sayTime(limits.holdS)}`;
+  return `Minimum set first${longest}${hold}; preparation and rests count`;
 }

@@ -26,8 +26,9 @@ export function frontScreen(state: State, look: Look, columns: number, rows: num
   const below = [read, ...fill(words, Math.max(roomy ? 3 : 6, words.length))];
   const chartRows = Math.max(6, Math.min(rows - below.length - 1, 34));
   if (!roomy) return fill([...frontPane(state, look, { columns, rows: chartRows, cursor: true }), blank, ...below], rows);
+  // Two columns are for the mark of a number that comes from a reading.
   const rightColumns = columns >= 120 ? 50 : 46;
-  const right = consequencePane(asIf(state, seriesId, said.set), look, rightColumns, Math.min(chartRows, 19));
+  const right = consequencePane(asIf(state, seriesId, said.set), look, rightColumns - 2, Math.min(chartRows, 19));
   const leftColumns = columns - rightColumns - 1;
   const chart = frontPane(state, look, { columns: leftColumns, rows: chartRows, cursor: true });
   return fill([...beside(chart, right, leftColumns, look.glyphs.verticalRule, look.glyphs.ellipsis), blank, ...below], rows);

@@ -49,6 +49,9 @@ function progressLine({ search, place }: State, { glyphs }: Look, columns: numbe
   return [line(`${glyphs.barFull.repeat(full)}${glyphs.barTrack.repeat(width - full)}`)];
 }
 
+/** Columns of the mark beside a number that comes from a reading. */
+const markColumns = 2;
+
 /** `TOO CLOSE, 0.03 W/kg to spare`. */
 const verdictColumns = 29;
 
@@ -98,13 +101,12 @@ function cut(lines: readonly Line[], scroll: number, rows: number): Line[] {
 }
 
 function narrowDetail(state: State, { listed }: Here, look: Look, columns: number, rows: number): Line[] {
-  // The strips need their room: a number from a reading has its mark.
   const leftColumns = columns >= 98 ? 46 : 42;
   const rightColumns = columns - leftColumns - 2;
   const copy = asIf(state, listed);
   const words = paragraphLines(state, listed, rightColumns);
   return beside(
-    fill(consequencePane(copy, look, leftColumns, rows), rows),
+    fill(consequencePane(copy, look, leftColumns - markColumns, rows), rows),
     cut(words, state.wayScroll, rows).map((each) => [span(' '), ...each]),
     leftColumns,
     look.glyphs.verticalRule,
@@ -124,7 +126,7 @@ function wideDetail(state: State, { listed }: Here, look: Look, columns: number,
       ? [line('No front', 'quiet')]
       : frontPane(state, look, { columns: rightColumns, rows: Math.min(rows, 26), cursor: false });
   const two = beside(
-    fill(consequencePane(copy, look, leftColumns, Math.min(rows, 19)), rows),
+    fill(consequencePane(copy, look, leftColumns - markColumns, Math.min(rows, 19)), rows),
     cut(paragraphLines(state, listed, middleColumns - 1), state.wayScroll, rows).map((each) => [span(' '), ...each]),
     leftColumns,
     look.glyphs.verticalRule,

@@ -240,6 +240,30 @@ describe('the ways to fit', () => {
     expect(text).not.toContain('No limit binds');
   });
 
+  it('a number from a reading has room for its mark', () => {
+    const open = press(
+      sessionOn('lumbar-spine-1.5t'),
+      'p',
+      'down',
+      'down',
+      'down',
+      'down',
+      'down',
+      '2',
+      'enter',
+      'escape',
+      'down',
+      'enter',
+    );
+    const read = told(press(open, 'f', 'd', '2.8', 'enter', 'escape'));
+    for (const [columns, rows] of [
+      [80, 24],
+      [100, 30],
+      [160, 50],
+    ] as const)
+      expect(textOf(at(read, columns, rows)).find((text) => text.startsWith(' B1+rms'))).toMatch(/uT +[-+]\d+% r *\|/);
+  });
+
   it('the chart of a front says its limit at 100 columns', () => {
     for (const keys of [['c'], ['c', 'tab']])
       expect(textOf(at(press(ways, ...keys), 100, 30)).join('\n')).toMatch(/Front: [^|]*limit 11\.0 s/);

@@ -39,6 +39,28 @@ describe('blur, measured in the picture', () => {
   });
 });
 
+describe('echoes far before the one that sets contrast', () => {
+  it('give no more than all the magnetisation there is, however short T2 is', () => {
+    // Stored magnetisation makes the late echo; counting back by T2 alone would make the early ones e^155 times larger.
+    const of = model(
+      'fast-spin-echo/2D',
+      {
+        repetitionTimeMs: 9000,
+        echoTrainLength: 64,
+        echoSpacingMs: 10,
+        echoTimeMs: 320,
+        refocusingAngleDeg: 60,
+        matrixRead: 64,
+        matrixPhase: 64,
+      },
+      { tissueOverrides: { liver: { t2Ms: 2, t1Ms: 900 } } },
+    );
+    const { values } = draw(of, objectOf([placed('liver', { atMm: [0, 0], halfAxesMm: [60, 60] })]));
+    expect(liverSignal(of)).toBeGreaterThan(0);
+    expect(Math.max(...values)).toBeLessThan(1.5 * (of.target?.protonDensity ?? 0));
+  });
+});
+
 describe('truncation ringing at a long straight edge, no decay', () => {
   // A broad ellipse is straight at its middle; fine display, so that the overshoot is not missed between pixels.
   const of = model('spin-echo/2D', { matrixRead: 64, matrixPhase: 128, fieldOfViewMm: 256 });
@@ -86,6 +108,7 @@ describe('chemical shift, measured in the picture', () => {
       echoTimeMs: 60,
       echoSpacingMs: 0.5,
       parallelFactorPhase: 2,
+      phaseFieldOfViewPercent: 75,
       matrixRead: 64,
       matrixPhase: 128,
       fieldOfViewMm: 256,

@@ -2,12 +2,15 @@ import type { NothingFits } from '../search/nothing-fits.js';
 import type { SearchResult } from '../search/search.js';
 import type { Way } from '../search/way.js';
 
-/** One way as data. Values set by hand are among its changes, so that applying them to the preset gives its figures. */
-function wayDocument({ kind, changes, figures, gives, gains, cautions, spare, verdict }: Way): object {
+/**
+ * One way as data. Values set by hand are among its changes, so that applying them to the preset gives its figures. A split that follows is nothing to
+ * set: `gives` names it, as rounds needed.
+ */
+function wayDocument({ kind, changes: { rounds, ...others }, given, figures, gives, gains, cautions, spare, verdict }: Way): object {
   const { timeS, holdS, b1rmsUt, sarWkg, rfRatio } = spare;
   return {
     kind,
-    changes,
+    changes: given.rounds === undefined || rounds === undefined ? others : { ...others, rounds },
     figures,
     gives,
     gains,

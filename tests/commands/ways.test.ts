@@ -66,6 +66,7 @@ interface Document {
     readonly kind: string;
     readonly changes: Record<string, { from: unknown; to: unknown }>;
     readonly figures: Record<string, number | null>;
+    readonly gives: readonly { readonly figure: string; readonly from: number; readonly to: number }[];
     readonly verdict: string;
     readonly spare: Record<string, number | null>;
   }[];
@@ -106,6 +107,16 @@ describe('holdfast ways', () => {
       const again = JSON.parse((await runCommand(['figures', file, 't1', ...set, '--json'])).out) as { series: { figures: object }[] };
       expect(again.series[0]?.figures).toEqual(figures);
     }
+  });
+
+  it('names a split that follows in what a way gives up, and counts no more than three settings among its changes', async () => {
+    const args = ['ways', 'lumbar-spine-1.5t', 't1-sag', '--b1rms', '2', '--reading', 'b1rmsUt=2.8'];
+    const { ways } = JSON.parse((await runCommand([...args, '--json'])).out) as Document;
+    const split = ways.filter(({ figures }) => Number(figures['roundsNeeded']) > 1);
+    expect(split.length).toBeGreaterThan(0);
+    for (const { gives } of split) expect(gives.find(({ figure }) => figure === 'roundsNeeded')).toMatchObject({ from: 1, to: 2 });
+    for (const { changes } of ways) expect(Object.keys(changes).filter((key) => key !== 'sliceCount').length).toBeLessThanOrEqual(3);
+    expect((await runCommand(args)).out).toContain('split into 2 acquisitions');
   });
 
   it('as text it keeps to 80 columns, numbers the ways and never calls anything safe', async () => {

@@ -1,6 +1,7 @@
 import type { Answer, Effect } from '../session/message.js';
 import { carryPreset } from './carry-preset.js';
 import { claimDraft } from './claim-draft.js';
+import { drawPicture } from './draw-picture.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { listRecords } from './list-records.js';
 import { loadPresets } from './load-presets.js';
@@ -44,6 +45,8 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return planSession(world, effect);
     case 'carry':
       return carryPreset(world, effect);
+    case 'picture':
+      return drawPicture(world, effect);
     case 'stop-search':
       world.searches.stop();
       return null;

@@ -12,7 +12,7 @@ import type { Look } from './look.js';
 
 const headlineStyle: Readonly<Record<string, Style>> = { OVER: 'trouble', 'TOO CLOSE': 'attention', FITS: 'bold' };
 
-const ofSeries: readonly ScreenName[] = ['series', 'why', 'type-these', 'chart', 'ways', 'front', 'keep', 'readings'];
+const ofSeries: readonly ScreenName[] = ['series', 'why', 'type-these', 'chart', 'picture', 'ways', 'front', 'keep', 'readings'];
 
 /** The verdict of the present screen: of the series that is looked at, else of the session. */
 export function headlineOf(state: State): Headline {

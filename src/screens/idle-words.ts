@@ -15,6 +15,7 @@ export function idleWords(state: State): string {
         : 'w explains the caution under the hand';
   if (screen === 'patient' || screen === 'readings' || screen === 'record' || screen === 'keep') return formRow(state)?.help ?? '';
   if (screen === 'ways' || screen === 'front') return 'It proposes, people decide: Enter takes what the hand is on, u takes it back';
+  if (screen === 'picture') return 'An illustration of the model: an invented object, never an image of a patient';
   if (screen === 'budget') return 'Enter takes the whole plan as one step, u takes it back';
   if (screen === 'carry') return 'A proposal: s saves it as a draft, a person reviews and releases it';
   if (screen === 'scanner') return 'Enter takes it: every figure, way and budget is then worked out on it';

@@ -10,6 +10,7 @@ import { fieldHere, fieldsHere } from '../session/hands/series-commands.js';
 import { startRow } from '../session/hands/start-commands.js';
 import { keptInWords } from '../session/keep-form.js';
 import { nextStep } from '../session/next-step.js';
+import { pictureSentences } from '../session/picture-sentences.js';
 import { planInWords, plannedInWords, planRows } from '../session/plan-words.js';
 import { resultNow, studySeries } from '../session/results.js';
 import { sayField } from '../session/say-field.js';
@@ -86,6 +87,8 @@ function itemsOf(state: State, look: Look): readonly Item[] {
       return scannerItems(state);
     case 'ways':
       return waysItems(state);
+    case 'picture':
+      return pictureSentences(state).map((words, at) => ({ words, here: at === 0 }));
     case 'front':
       return frontItems(state);
     case 'budget':

@@ -9,6 +9,7 @@ import { idleWords } from './idle-words.js';
 import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
 import { orderScreen } from './order-screen.js';
+import { pictureScreen } from './picture-screen.js';
 import { presetsScreen, revisionsScreen } from './presets-screen.js';
 import { readerLines } from './reader-lines.js';
 import { recordsScreen } from './records-screen.js';
@@ -34,6 +35,7 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
   why: whyScreen,
   'type-these': typeTheseScreen,
   chart: chartScreen,
+  picture: pictureScreen,
   ways: waysScreen,
   front: frontScreen,
   keep: keepScreen,

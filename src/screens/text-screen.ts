@@ -58,6 +58,7 @@ export const screenWords: Readonly<Record<ScreenName, string>> = {
   why: 'why',
   'type-these': 'type these on the scanner',
   chart: 'range chart',
+  picture: 'see it: preset and now',
   ways: 'ways to fit',
   front: 'front',
   keep: 'what is kept',

@@ -25,8 +25,8 @@ export function partsOf(
   merged: boolean,
   pulse: Pulse,
 ): Part[][] {
-  const groups = new Map<string, Part[]>();
-  const known = new Map<string, Map<string, Part>>();
+  const groups = new Map<number, Part[]>();
+  const known = new Map<number, Map<number, Part>>();
   walkPoints(setting.variables, which, mostChanges, point, (changes) => {
     pulse.beat();
     const part = table.partAt(point, direction);

@@ -40,9 +40,9 @@ export interface LineNoise {
 /** One direction of a choice of the line variables: what the lines of both follow. */
 export interface LinePart {
   /** What tells it apart for time and noise. */
-  readonly key: string;
+  readonly key: number;
   /** What voxel and train follow: parts of one group can share a bucket. */
-  readonly group: string;
+  readonly group: number;
   readonly encoded: number;
   /** Acquired with no acceleration along the other direction. */
   readonly acquired: number;
@@ -111,6 +111,8 @@ export class LineTable {
   #geometry: Geometry;
   #wraps = false;
   readonly #ids = new NumberIds();
+  readonly #parts = new NumberIds();
+  readonly #partGroups = new NumberIds();
 
   constructor(setting: SearchSetting, groups: Groups, start: Parameters) {
     const { problem, bands } = setting;
@@ -172,10 +174,9 @@ export class LineTable {
     const reference = p.referenceLines;
     const factorPhase = p.parallelFactorPhase;
     if (direction === 'phase') {
-      const group = `${train}|${p.fieldOfViewMm}|${p.matrixPhase}|${p.displayMatrix}`;
       return {
-        key: `${lines.encodedPhase}|${lines.phase}|${factorPhase}|${reference}`,
-        group,
+        key: this.#parts.of('phase', lines.encodedPhase, lines.phase, factorPhase, reference),
+        group: this.#partGroups.of(train, p.fieldOfViewMm, p.matrixPhase, p.displayMatrix ?? 0, 0),
         encoded: lines.encodedPhase,
         acquired: lines.phase,
         factor: factorPhase,
@@ -188,9 +189,16 @@ export class LineTable {
     const { slice, encodedSlice } = acquiredLines(key, p);
     p.parallelFactorPhase = factorPhase;
     const factor = p.parallelFactorSlice;
+    const elliptical = Number(p.ellipticalSampling);
     return {
-      key: `${encodedSlice}|${slice}|${factor}|${p.ellipticalSampling}`,
-      group: `${train}|${p.averages}|${p.ellipticalSampling}|${p.sliceThicknessMm}|${p.sliceCount}|${p.sliceGapMm}`,
+      key: this.#parts.of('slice', encodedSlice, slice, factor, elliptical),
+      group: this.#partGroups.of(
+        elliptical === 1 ? `${train} elliptical` : train,
+        p.averages,
+        p.sliceThicknessMm,
+        p.sliceCount,
+        p.sliceGapMm,
+      ),
       encoded: encodedSlice,
       acquired: slice,
       factor,

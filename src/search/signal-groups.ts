@@ -5,6 +5,7 @@ import type { SignalState } from './signal-state.js';
 
 /** Signal states that play their lines in the same time, and the best that any of them gives. */
 export interface SignalGroup {
+  /** Most signal of the target first; those without one last. */
   readonly entries: readonly SignalEntry[];
   /** Highest signal of the target; null where one of them has none. */
   readonly target: number | null;
@@ -127,6 +128,7 @@ function cellsOf(entries: readonly SignalEntry[]): Cell[] {
 function groupsOf(entries: readonly SignalEntry[]): SignalGroup[] {
   const kept = groupBy(entries, ({ shotId }) => shotId).flatMap(undominated);
   return groupBy(kept, ({ timeId }) => timeId).map((own) => {
+    own.sort((a, b) => (b.state.target ?? -1) - (a.state.target ?? -1));
     let target: number | null = 0;
     let difference: number | null = 0;
     let trainLoss = Number.POSITIVE_INFINITY;

@@ -108,10 +108,16 @@ export class SignalLists {
     const point = [...bucket.point];
     const { variables } = this.setting;
     const points = new SignalPoints(variables, this.groups.signal, bucket.point);
-    walkPoints(variables, this.table.inOrder(this.groups.signal), this.mostChanges, point, (changes) => {
-      this.pulse.beat();
-      const state = this.table.stateAt(point, changes, this.timely);
-      if (state !== null) entries.push(new SignalEntry(state, changes, points.codeOf(point), points));
+    // What time follows comes first: where it leaves no time for any lines, nothing else helps.
+    const timed = this.table.timedAlone(this.groups.signal);
+    const others = this.table.inOrder(this.groups.signal.filter((at) => !timed.includes(at)));
+    walkPoints(variables, timed, this.mostChanges, point, (changes) => {
+      if (timed.length > 0 && !this.table.mayBeTimely(point, changes, this.timely)) return;
+      walkPoints(variables, others, this.mostChanges - changes, point, (more) => {
+        this.pulse.beat();
+        const state = this.table.stateAt(point, changes + more, this.timely);
+        if (state !== null) entries.push(new SignalEntry(state, changes + more, points.codeOf(point), points));
+      });
     });
     this.#lists.set(bucket.train, entries);
     return entries;

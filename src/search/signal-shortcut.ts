@@ -101,6 +101,9 @@ export class SignalShortcut<Known> {
   readonly #bases = new Map<number, SignalBase<Known>>();
   readonly #bound: readonly number[];
   readonly #free: readonly FreeVariable[];
+  readonly #roundsFree: FreeVariable | undefined;
+  readonly #volume: boolean;
+  readonly #train: boolean;
   /** The state asked for last: its base, split and RF. */
   readonly last = {} as ShortState<Known>;
   #lastId = -1;
@@ -111,7 +114,11 @@ export class SignalShortcut<Known> {
     const { variables } = setting;
     const isFreeAt = (at: number) => isFree((variables[at] as LatticeVariable).key);
     this.#bound = moving.filter((at) => !isFreeAt(at));
+    const row = classRow(setting.baseline.model.key);
+    this.#volume = row.acquisition === '3D';
+    this.#train = row.train;
     this.#free = moving.filter(isFreeAt).map((at) => ({ at, variable: variables[at] as LatticeVariable }));
+    this.#roundsFree = this.#free.find(({ variable }) => variable.key === 'rounds');
   }
 
   /** Variables with the free ones last: states of one base come one after the other. */
@@ -143,10 +150,10 @@ export class SignalShortcut<Known> {
     const band = this.#bandPart(base, p);
     const slices = capacity(key, p, band.slotMs);
     const needed = slices === null || slices === 0 ? 1 : guardedCeil(p.sliceCount / slices);
-    const rounds = classRow(key).acquisition === '3D' ? 1 : Math.max(this.#roundsSet(point, base), needed);
+    const rounds = this.#volume ? 1 : Math.max(this.#roundsSet(point, base), needed);
     if (problem.series.purpose === 'dynamic' && rounds > 1) return false;
     const tr = effectiveRepetitionTimeMs(p);
-    const lastMs = classRow(key).train ? p.echoTrainLength * p.echoSpacingMs : p.echoTimeMs;
+    const lastMs = this.#train ? p.echoTrainLength * p.echoSpacingMs : p.echoTimeMs;
     if (p.echoTimeMs >= tr || lastMs > tr + 1e-9 || slices === 0) return false;
     p.rounds = rounds;
     const inRepetition = slices === null ? p.simultaneousSlices : Math.max(1, Math.min(slices, guardedCeil(p.sliceCount / rounds)));
@@ -162,6 +169,13 @@ export class SignalShortcut<Known> {
     last.b1PlusRmsUt = b1PlusRmsUt(energy, tr);
     last.free = free;
     return true;
+  }
+
+  /** The base of a point, its free values, and a split that no state of it goes below. */
+  leastSplitAt(point: ArrayLike<number>): { readonly base: SignalBase<Known>; readonly free: number; readonly rounds: number } {
+    const base = this.#baseAt(point);
+    const free = this.#writeFree(base, point);
+    return { base, free, rounds: this.#volume ? 1 : this.#roundsSet(point, base) };
   }
 
   /** Signals of the state asked for last. */
@@ -220,9 +234,9 @@ export class SignalShortcut<Known> {
 
   /** The split as a point sets it: the one in force overwrites it in the scratch. */
   #roundsSet(point: ArrayLike<number>, base: SignalBase<Known>): number {
-    for (const { at, variable } of this.#free)
-      if (variable.key === 'rounds') return (point[at] === 0 ? base.parameters.rounds : variable.values[point[at] as number]) as number;
-    return base.parameters.rounds;
+    if (this.#roundsFree === undefined) return base.parameters.rounds;
+    const { at, variable } = this.#roundsFree;
+    return (point[at] === 0 ? base.parameters.rounds : variable.values[point[at] as number]) as number;
   }
 
   #bandPart(base: SignalBase<Known>, p: Parameters): BandPart {

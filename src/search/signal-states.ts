@@ -203,6 +203,26 @@ export class SignalTable {
     return this.#shortcut?.inOrder(which) ?? which;
   }
 
+  /** Signal variables that time follows, where no other signal variable moves it but by more splits. */
+  timedAlone(which: readonly number[]): readonly number[] {
+    const { variables, baseline } = this.#setting;
+    // In gradient echoes TR follows pulses and angle.
+    if (this.#shortcut === null || classRow(baseline.model.key).gradientEcho) return [];
+    return which.filter((at) => {
+      const { key } = variables[at] as LatticeVariable;
+      return key === 'dummyShots' || this.#words.times(key);
+    });
+  }
+
+  /** False where a point leaves no time for any lines, whatever the variables that time does not follow are. */
+  mayBeTimely(point: ArrayLike<number>, changes: number, timely: Timely): boolean {
+    if (this.#shortcut === null) return true;
+    const { base, rounds, free } = this.#shortcut.leastSplitAt(point);
+    base.known ??= this.#formBaseState(base);
+    const timeId = this.#words.timeId(this.#shotIdOf(base.known, base.scratch, rounds, point), base.scratch.dummyShots);
+    return timely(new ShortTiming(timeId, rounds, this.#shortcut, base, free), changes);
+  }
+
   /** True where the split of a state can be asked for before the state is formed. */
   get splitsApart(): boolean {
     return this.#shortcut !== null;
@@ -223,6 +243,8 @@ export class SignalTable {
     base.known ??= this.#formBaseState(base);
     const { known } = base;
     const p = base.scratch;
+    let pair = known.pairs.get(p.repetitionTimeMs);
+    if (pair?.kept === false) return null;
     const shotId = this.#shotIdOf(known, p, rounds, point);
     const timeId = this.#words.timeId(shotId, p.dummyShots);
     // Signals without lines that leave time for them are not computed.
@@ -230,7 +252,6 @@ export class SignalTable {
     const rf = this.#rfState(b1PlusRmsUt);
     // Nor where a state over an RF cap is of no use.
     if (rf.rank === 2 && !this.keepsOver) return null;
-    let pair = known.pairs.get(p.repetitionTimeMs);
     if (pair === undefined) {
       pair = this.#pairState(shortcut.signals(), known.blurPx, p);
       known.pairs.set(p.repetitionTimeMs, pair);

@@ -39,27 +39,26 @@ export function addToSnrFront(tables: SearchTables, { buckets, groups }: PlayedT
     const contrast = group.difference === null || contrastBefore === null ? null : (ratio * group.difference) / contrastBefore;
     if (front.beats(timeS, snr) || !join.audible({ snr, contrast })) return;
     if (to - from === 1) {
-      form(group, from, timeS);
+      form(group.entries, from, timeS);
       return;
     }
     const middle = (from + to) >> 1;
     branch(group, family, from, middle);
     branch(group, family, middle, to);
   };
-  const form = ({ entries }: SignalGroup, i: number, timeS: number): void => {
-    let best = Number.NEGATIVE_INFINITY;
-    let which: SignalEntry | null = null;
+  /** Entries stand by signal: the first that is audible has the most. */
+  const form = (entries: readonly SignalEntry[], i: number, timeS: number): void => {
     for (const entry of entries) {
       pulse.formed += 1;
       const noise = join.noise(entry.state, signalFreeSnr[i] as number);
-      if (noise.snr === null || noise.snr <= best || !join.audible(noise)) continue;
-      best = noise.snr;
-      which = entry;
+      if (noise.snr === null) return;
+      if (noise.snr <= (snrs.at(-1) ?? Number.NEGATIVE_INFINITY)) return;
+      if (!join.audible(noise)) continue;
+      times.push(timeS);
+      snrs.push(noise.snr);
+      found.push({ entry, i });
+      return;
     }
-    if (which === null || best <= (snrs.at(-1) ?? Number.NEGATIVE_INFINITY)) return;
-    times.push(timeS);
-    snrs.push(best);
-    found.push({ entry: which, i });
   };
   for (const group of groups) {
     branch(group, join.times((group.entries[0] as SignalEntry).state, buckets[0] as LineBucket), 0, lineCounts.length);
@@ -96,15 +95,14 @@ function envelopeOf(buckets: readonly LineBucket[]): Envelope {
   for (let b = 0; b < some.length; b += 1) which.fill(b, starts[b] as number);
   const bucketAt = (i: number) => some[which[at[i] as number] as number] as LineBucket;
   const choiceAt = (i: number) => (at[i] as number) - (starts[which[at[i] as number] as number] as number);
+  const signalFreeSnr = new Float64Array(at.length);
+  for (let i = 0; i < at.length; i += 1) {
+    const bucket = bucketAt(i);
+    signalFreeSnr[i] = bucket.signalFreeSnr(bucket.shape.skyline.averaging[choiceAt(i)] as number);
+  }
   return {
     lineCounts,
-    signalFreeSnr:
-      at.length === 0
-        ? new Float64Array(0)
-        : Float64Array.from(at, (_, i) => {
-            const bucket = bucketAt(i);
-            return bucket.signalFreeSnr(bucket.shape.skyline.averaging[choiceAt(i)] as number);
-          }),
+    signalFreeSnr,
     pointAt: (i) => {
       const bucket = bucketAt(i);
       return bucket.pointAt(bucket.shape.skyline.at[choiceAt(i)] as number);

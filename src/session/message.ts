@@ -1,4 +1,5 @@
 import type { Problem } from '../calc/problem.js';
+import type { DrawnPictures, PictureProblem } from '../picture/picture-problem.js';
 import type { Budget, BudgetProblem } from '../search/budget.js';
 import type { CarryProblem, StudyCarry } from '../search/carry-study.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
@@ -40,6 +41,7 @@ export type Answer =
   | { readonly kind: 'draft'; readonly session: unknown }
   | { readonly kind: 'ways'; readonly ways: WaysAnswer }
   | { readonly kind: 'plan'; readonly plan: Budget }
+  | { readonly kind: 'pictures'; readonly pictures: DrawnPictures }
   | { readonly kind: 'carried'; readonly carried: StudyCarry }
   | ShelfAnswer;
 
@@ -70,6 +72,7 @@ export type Effect =
   | { readonly kind: 'save-page'; readonly ask: number; readonly record: Omit<SessionRecord, 'id' | 'day'> }
   | { readonly kind: 'search'; readonly ask: number; readonly problem: SearchProblem }
   | { readonly kind: 'plan'; readonly ask: number; readonly problem: BudgetProblem }
+  | { readonly kind: 'picture'; readonly ask: number; readonly problem: PictureProblem }
   | { readonly kind: 'carry'; readonly ask: number; readonly problem: CarryProblem }
   /** Ends the search or plan that runs; a search answers with what it has. */
   | { readonly kind: 'stop-search' }

@@ -1,6 +1,9 @@
 import { mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
+import type { Header } from '../../src/headers/header.js';
+import { readHeaders } from '../../src/store/dicom/read-headers.js';
+import { nodeDisk } from '../../src/store/node-disk.js';
 import { readPreset } from '../../src/study/read-preset.js';
 import { runCommand } from '../commands/run-command.js';
 import { temporaryFolder } from '../store/temporary-folder.js';
@@ -81,6 +84,19 @@ describe('what could name somebody', () => {
     expect(outputs.some((text) => text.includes('"format": "holdfast preset"'))).toBe(true);
     expect(outputs.some((text) => text.includes('3D spoiled gradient echo'))).toBe(true);
     expectNoMarks(outputs);
+  });
+
+  it('does not leave the reader: what it hands on holds none of it, the UID of the series included', async () => {
+    const folder = temporaryFolder();
+    for (const [name, bytes] of Object.entries(objects)) writeFileSync(join(folder, name), bytes);
+    const handedOn: string[] = [];
+    const receiver = {
+      header: (header: Header) => handedOn.push(JSON.stringify(header)),
+      problem: (problem: object) => handedOn.push(JSON.stringify(problem)),
+    };
+    await readHeaders(nodeDisk, [folder], receiver);
+    expect(handedOn.length).toBeGreaterThan(5);
+    expectNoMarks(handedOn);
   });
 
   it('reaches none from objects that are cut or damaged anywhere', async () => {

@@ -117,6 +117,14 @@ describe('values of headers', () => {
     expect(found(gated, 'pacing', 'spoiled-gradient-echo/2D')).toMatchObject({ value: { kind: 'cardiac-gate' }, origin: 'read' });
   });
 
+  it('where the phase direction is not stated, the zeros of AcquisitionMatrix tell it', () => {
+    // As real headers have both: COL beside 128\\0\\0\\128, ROW beside 0\\384\\202\\0 (test files of Debian's python3-nibabel).
+    const axial: Attributes = { ImageOrientationPatient: [1, 0, 0, 0, 1, 0] };
+    expect(found({ ...axial, AcquisitionMatrix: [128, 0, 0, 128] }, 'phaseDirection')).toMatchObject({ value: 'AP', origin: 'derived' });
+    expect(found({ ...axial, AcquisitionMatrix: [0, 384, 202, 0] }, 'phaseDirection')).toMatchObject({ value: 'RL', origin: 'derived' });
+    expect(found({ ...axial, AcquisitionMatrix: [128, 128, 128, 128] }, 'phaseDirection')).toMatchObject({ origin: 'missing' });
+  });
+
   it('two echoes are two echo times, in their order; more are named', () => {
     const echo = (time: number): Attributes => ({ EchoTime: [time] });
     expect(found([echo(4.6), echo(2.3)], 'echoTimeMs', 'spoiled-gradient-echo/2D')).toMatchObject({ value: 2.3 });

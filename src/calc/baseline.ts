@@ -4,7 +4,7 @@ import { nullTimeMs, nullTissueOf } from './null-time.js';
 import { isBreathHeld } from './pacing.js';
 import type { Scanner } from './scanner.js';
 import type { Series } from './series.js';
-import { rememberingTissueOf, type Tissue } from './tissues.js';
+import { type Tissue, TissueRole } from './tissues.js';
 
 /** What "relative" and "trend" compare with: the preset as it stands on its own field, computed once. */
 export interface Baseline {
@@ -22,13 +22,13 @@ export function contrastRatioOf(target: number | null, comparison: number | null
   return target === null || comparison === null || comparison === 0 ? null : target / comparison;
 }
 
-const nullTissue = rememberingTissueOf();
+const nullRole = new TissueRole();
 
 /** Inversion time that nulls the series' null tissue, ms; null where the series has none. */
 export function seriesNullMs(model: SeriesModel): number | null {
   const p = model.series.parameters;
   const name = nullTissueOf(model.series, p.fatSuppression, p.inversionTimeMs);
-  const tissue: Tissue | null = name === null ? null : nullTissue(name, model.scanner.fieldT, model.series);
+  const tissue: Tissue | null = name === null ? null : nullRole.tissueOf(name, model.scanner.fieldT, model.series);
   return tissue === null ? null : nullTimeMs(model.setting, tissue, model.timing);
 }
 

@@ -1,3 +1,5 @@
+import type { SeriesModel } from './model.js';
+
 /** How much a caution weighs: `error` means the series as written cannot give what it promises. */
 export type CautionLevel = 'note' | 'caution' | 'error';
 
@@ -51,25 +53,43 @@ export interface Caution {
   readonly numbers: Readonly<Record<string, number>>;
 }
 
-/** How the checks of one series report: code, level, numbers, and the sentence, which is only put together when somebody reads it. */
-export type AddCaution = (code: CautionCode, level: CautionLevel, numbers: Readonly<Record<string, number>>, say: () => string) => void;
+/**
+ * How the checks of one series report: code, level, numbers, and the sentence, which is only put together when somebody reads it.
+ * The sentence takes what it needs from the numbers and the model, and nothing from around it: what a function remembers for its
+ * sentences is set up at every call, whether there is anything to say or not.
+ */
+export type AddCaution = <Numbers extends Readonly<Record<string, number>>>(
+  code: CautionCode,
+  level: CautionLevel,
+  numbers: Numbers,
+  say: (numbers: Numbers, model: SeriesModel) => string,
+) => void;
 
 /** A caution whose sentence is put together when it is read: most evaluations of a search never read one. */
 export class SaidCaution implements Caution {
-  readonly code: CautionCode;
-  readonly level: CautionLevel;
-  readonly numbers: Readonly<Record<string, number>>;
-  private readonly say: () => string;
+  // Declared only: what a class defines is written twice at every making.
+  declare readonly code: CautionCode;
+  declare readonly level: CautionLevel;
+  declare readonly numbers: Readonly<Record<string, number>>;
+  declare private readonly model: SeriesModel;
+  declare private readonly say: (numbers: never, model: SeriesModel) => string;
 
-  constructor(code: CautionCode, level: CautionLevel, numbers: Readonly<Record<string, number>>, say: () => string) {
+  constructor(
+    code: CautionCode,
+    level: CautionLevel,
+    numbers: Readonly<Record<string, number>>,
+    model: SeriesModel,
+    say: (numbers: never, model: SeriesModel) => string,
+  ) {
     this.code = code;
     this.level = level;
     this.numbers = numbers;
+    this.model = model;
     this.say = say;
   }
 
   get text(): string {
-    return this.say();
+    return this.say(this.numbers as never, this.model);
   }
 
   toJSON(): Caution {

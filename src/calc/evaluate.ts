@@ -166,7 +166,7 @@ function cautionsOf(
 ): readonly Caution[] {
   const cautions: Caution[] = [];
   const add: AddCaution = (code, level, numbers, say) => {
-    cautions.push(new SaidCaution(code, level, numbers, say));
+    cautions.push(new SaidCaution(code, level, numbers, model, say));
   };
   timingCautions(model, baseline, add);
   splitCautions(model, baseline, isBreathHeld(model.series.parameters), add);

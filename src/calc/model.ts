@@ -17,7 +17,7 @@ import { type ClassTiming, classSignal, classTimingOf, type SignalSetting } from
 import { inversionPreparedDelaysMs } from './signal/inversion-prepared.js';
 import { capacity, slotFactor, slotMs } from './slots.js';
 import { type SeriesTime, seriesTime } from './time.js';
-import { diffusionFactor, isFat, rememberingTissueOf, type Tissue, tissueOf } from './tissues.js';
+import { type Tissue, TissueRole } from './tissues.js';
 
 /** Everything the model knows of one series on one scanner, before it is compared with a baseline. */
 export interface SeriesModel {
@@ -67,14 +67,15 @@ export interface TissueSignal {
 }
 
 /** What is left of fat: 5 % under spectral suppression or water excitation (common practice, no source), nothing in a two-point water image. */
-function suppressionOf(tissue: string, fatSuppression: Series['parameters']['fatSuppression']): number {
-  if (!isFat(tissue)) return 1;
+function suppressionOf(isFat: boolean, fatSuppression: Series['parameters']['fatSuppression']): number {
+  if (!isFat) return 1;
   if (fatSuppression === 'spectral' || fatSuppression === 'water-excitation') return 0.05;
   return fatSuppression === 'two-point' ? 0 : 1;
 }
 
-const targetOf = rememberingTissueOf();
-const comparisonOf = rememberingTissueOf();
+const targetRole = new TissueRole();
+const comparisonRole = new TissueRole();
+const otherRole = new TissueRole();
 
 /** Signal of one tissue in this series, null for a name the table does not have. */
 export function tissueSignal(
@@ -84,9 +85,9 @@ export function tissueSignal(
   name: string,
   impossible: boolean,
   timing = classTimingOf(setting),
-  lookUp: typeof tissueOf = tissueOf,
+  role = otherRole,
 ): TissueSignal | null {
-  const tissue: Tissue | null = lookUp(name, fieldT, series);
+  const tissue: Tissue | null = role.tissueOf(name, fieldT, series);
   if (tissue === null) return null;
   const p = series.parameters;
   const second = p.secondEchoTimeMs;
@@ -98,8 +99,8 @@ export function tissueSignal(
     protonDensity: tissue.protonDensity,
     signal: impossible ? null : classSignal(setting, p.echoTimeMs, tissue, timing),
     secondSignal: impossible || second === undefined ? null : classSignal(setting, second, tissue, timing),
-    suppression: suppressionOf(name, p.fatSuppression),
-    diffusionFactor: diffusionFactor(name, highestB(p)),
+    suppression: suppressionOf(role.isFat, p.fatSuppression),
+    diffusionFactor: role.diffusionFactor(p.diffusion === undefined ? 0 : highestB(p)),
     extrapolated: tissue.extrapolated,
   };
 }
@@ -171,8 +172,8 @@ export function modelOf(given: Series, scanner: Scanner, knownSlotFactor: number
     noiseFactor: g,
     signalFreeSnr:
       g === null ? null : signalFreeSnr(geometry.voxelVolumeMm3, noiseAveragingLines(key, p, lines, g), p, scanner.fieldT, simultaneousG),
-    target: tissueSignal(setting, series, scanner.fieldT, series.target, impossible !== null, timing, targetOf),
-    comparison: tissueSignal(setting, series, scanner.fieldT, series.comparison, impossible !== null, timing, comparisonOf),
+    target: tissueSignal(setting, series, scanner.fieldT, series.target, impossible !== null, timing, targetRole),
+    comparison: tissueSignal(setting, series, scanner.fieldT, series.comparison, impossible !== null, timing, comparisonRole),
     b1PlusRmsUt: seriesB1PlusRmsUt(key, p, lines, pulses, slicesInRepetition),
     shift: displacement(key, p, lines, geometry, scanner.fieldT),
   };

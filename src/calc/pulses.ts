@@ -81,48 +81,64 @@ export interface PlayedPulse {
  */
 export function playPulse(name: PulseName, angleDeg: number, stretch: number, scanner: Scanner, simultaneous = 1): PlayedPulse {
   const shape = pulseShape(name, scanner);
-  const form = waveform(shape);
+  return playShape(shape, waveform(shape), angleDeg, stretch, scanner.maximumB1Ut, simultaneous);
+}
+
+function playShape(
+  shape: PulseShape,
+  form: Waveform,
+  angleDeg: number,
+  stretch: number,
+  maximumB1Ut: number,
+  simultaneous: number,
+): PlayedPulse {
   const wantedMs = shape.durationMs * stretch;
   // Simultaneous slices add up in amplitude: peak power grows with the square of their number (Barth, Magn Reson Med 2016;75:63, law from memory).
   const peakAtWanted = hardPulseB1Ut(angleDeg, wantedMs) * form.peakFactor * simultaneous;
-  const lengthened = peakAtWanted > scanner.maximumB1Ut * (1 + 1e-9);
-  const durationMs = lengthened ? wantedMs * (peakAtWanted / scanner.maximumB1Ut) : wantedMs;
+  const lengthened = peakAtWanted > maximumB1Ut * (1 + 1e-9);
+  const durationMs = lengthened ? wantedMs * (peakAtWanted / maximumB1Ut) : wantedMs;
   const b1 = hardPulseB1Ut(angleDeg, durationMs);
   return {
     durationMs,
     timeBandwidth: shape.timeBandwidth ?? 0,
-    peakB1Ut: Math.min(peakAtWanted, scanner.maximumB1Ut),
+    peakB1Ut: Math.min(peakAtWanted, maximumB1Ut),
     energyUt2Ms: b1 * b1 * durationMs * form.powerFactor,
     lengthened,
   };
 }
 
-/** Remembers the last pulse of one role (excitation, refocusing, ...): the edits of a series ask for the same few again and again. */
-function rememberingPlay(): typeof playPulse {
-  let last: { readonly name: PulseName; readonly angleDeg: number; readonly stretch: number; readonly scanner: Scanner } | null = null;
-  let lastSimultaneous = 1;
-  let pulse: PlayedPulse | null = null;
-  return (name, angleDeg, stretch, scanner, simultaneous = 1) => {
-    if (
-      pulse === null ||
-      last === null ||
-      last.angleDeg !== angleDeg ||
-      last.name !== name ||
-      last.scanner !== scanner ||
-      last.stretch !== stretch ||
-      lastSimultaneous !== simultaneous
-    ) {
-      pulse = playPulse(name, angleDeg, stretch, scanner, simultaneous);
-      last = { name, angleDeg, stretch, scanner };
-      lastSimultaneous = simultaneous;
+/** Plays the pulses of one role (excitation, refocusing, ...), remembering shape and last pulse: the edits of a series ask for the same few. */
+class PulseRole {
+  #name: PulseName = 'excitation';
+  #scanner: Scanner | null = null;
+  #shape: PulseShape = defaults.excitation;
+  #form: Waveform = hardWaveform;
+  #angleDeg = 0;
+  #stretch = 0;
+  #simultaneous = 0;
+  #pulse: PlayedPulse | null = null;
+
+  play(name: PulseName, angleDeg: number, stretch: number, scanner: Scanner, simultaneous: number): PlayedPulse {
+    if (name !== this.#name || scanner !== this.#scanner) {
+      this.#name = name;
+      this.#scanner = scanner;
+      this.#shape = pulseShape(name, scanner);
+      this.#form = waveform(this.#shape);
+      this.#pulse = null;
     }
-    return pulse;
-  };
+    if (this.#pulse === null || angleDeg !== this.#angleDeg || stretch !== this.#stretch || simultaneous !== this.#simultaneous) {
+      this.#angleDeg = angleDeg;
+      this.#stretch = stretch;
+      this.#simultaneous = simultaneous;
+      this.#pulse = playShape(this.#shape, this.#form, angleDeg, stretch, scanner.maximumB1Ut, simultaneous);
+    }
+    return this.#pulse;
+  }
 }
-const playExcitation = rememberingPlay();
-const playRefocusing = rememberingPlay();
-const playFatSaturation = rememberingPlay();
-const playBand = rememberingPlay();
+const excitations = new PulseRole();
+const refocusings = new PulseRole();
+const fatSaturations = new PulseRole();
+const bands = new PulseRole();
 
 /** The pulses of one slot of a series. */
 export interface SlotPulses {
@@ -137,10 +153,10 @@ export function slotPulses(key: ClassKey, p: Parameters, scanner: Scanner): Slot
   const m = p.simultaneousSlices;
   const refocusing = refocusingPulse(key);
   return {
-    excitation: playExcitation(excitationPulse(key, p.slabSelective), p.flipAngleDeg, p.rfPulseStretch, scanner, m),
-    refocusing: refocusing === null ? null : playRefocusing(refocusing, p.refocusingAngleDeg, p.rfPulseStretch, scanner, m),
+    excitation: excitations.play(excitationPulse(key, p.slabSelective), p.flipAngleDeg, p.rfPulseStretch, scanner, m),
+    refocusing: refocusing === null ? null : refocusings.play(refocusing, p.refocusingAngleDeg, p.rfPulseStretch, scanner, m),
     fatSaturation:
-      p.fatSuppression === 'spectral' ? playFatSaturation('fatSaturation', fatSaturationAngleDeg, p.rfPulseStretch, scanner, 1) : null,
-    band: p.saturationBands > 0 ? playBand('saturationBand', saturationBandAngleDeg, p.rfPulseStretch, scanner, 1) : null,
+      p.fatSuppression === 'spectral' ? fatSaturations.play('fatSaturation', fatSaturationAngleDeg, p.rfPulseStretch, scanner, 1) : null,
+    band: p.saturationBands > 0 ? bands.play('saturationBand', saturationBandAngleDeg, p.rfPulseStretch, scanner, 1) : null,
   };
 }

@@ -158,28 +158,6 @@ export function tissueOf(name: string, fieldT: number, series: Pick<Series, 'con
   };
 }
 
-/**
- * `tissueOf`, remembering its last answer: an evaluation asks for the same few tissues at every edit of a series. One of these serves
- * one role (target, comparison, tissue to be nulled).
- */
-export function rememberingTissueOf(): typeof tissueOf {
-  let last: {
-    readonly name: string;
-    readonly fieldT: number;
-    readonly agent: boolean;
-    readonly overrides: Series['tissueOverrides'];
-  } | null = null;
-  let tissue: Tissue | null = null;
-  return (name, fieldT, series) => {
-    const { contrastAgent: agent, tissueOverrides: overrides } = series;
-    if (last === null || last.name !== name || last.fieldT !== fieldT || last.agent !== agent || last.overrides !== overrides) {
-      tissue = tissueOf(name, fieldT, series);
-      last = { name, fieldT, agent, overrides };
-    }
-    return tissue;
-  };
-}
-
 /** Apparent diffusion in um2/ms, numerically 1e-3 mm2/s (common practice, values from memory); null where no value is kept. */
 const diffusionUm2PerMs: Readonly<Record<string, number>> = {
   'grey matter (cortical)': 0.8,
@@ -205,9 +183,55 @@ const diffusionUm2PerMs: Readonly<Record<string, number>> = {
 
 /** `e^(-bD)` of a tissue at b in s/mm2 (Mansfield 1977 for echo-planar; Stejskal-Tanner weighting); null where no D is kept. */
 export function diffusionFactor(tissue: string, bSPerMm2: number): number | null {
+  return decayOf(diffusionUm2PerMs[tissue], bSPerMm2);
+}
+
+function decayOf(d: number | undefined, bSPerMm2: number): number | null {
   if (bSPerMm2 === 0) return 1;
-  const d = diffusionUm2PerMs[tissue];
   return d === undefined ? null : Math.exp(-bSPerMm2 * d * 1e-3);
+}
+
+/**
+ * Looks a tissue up for one role in an evaluation (target, comparison, tissue to be nulled), remembering the last one: the edits of a
+ * series ask for the same again and again.
+ */
+export class TissueRole {
+  #name = '';
+  #fieldT = Number.NaN;
+  #contrastAgent = false;
+  #overrides: Series['tissueOverrides'] | null = null;
+  #tissue: Tissue | null = null;
+  #diffusion: number | undefined;
+  #isFat = false;
+
+  /** The same as `tissueOf`. */
+  tissueOf(name: string, fieldT: number, series: Pick<Series, 'contrastAgent' | 'tissueOverrides'>): Tissue | null {
+    if (
+      name !== this.#name ||
+      fieldT !== this.#fieldT ||
+      series.contrastAgent !== this.#contrastAgent ||
+      series.tissueOverrides !== this.#overrides
+    ) {
+      this.#name = name;
+      this.#fieldT = fieldT;
+      this.#contrastAgent = series.contrastAgent;
+      this.#overrides = series.tissueOverrides;
+      this.#tissue = tissueOf(name, fieldT, series);
+      this.#diffusion = diffusionUm2PerMs[name];
+      this.#isFat = isFat(name);
+    }
+    return this.#tissue;
+  }
+
+  /** True when the tissue looked up last is fat. */
+  get isFat(): boolean {
+    return this.#isFat;
+  }
+
+  /** The same as `diffusionFactor`, of the tissue looked up last. */
+  diffusionFactor(bSPerMm2: number): number | null {
+    return decayOf(this.#diffusion, bSPerMm2);
+  }
 }
 
 /** Names with a value at this field: every tissue measured at it or between its measured fields. */

@@ -47,7 +47,8 @@ export function driftCautions(
         'null-drift',
         drift > nullDriftLost ? 'error' : 'caution',
         { inversionTimeMs, wantedMs: wanted, nullMs, presetNullMs: baseline.nullMs },
-        () => `the null moved: TI ${inWords(inversionTimeMs, 0)} ms, about ${inWords(wanted, 0)} ms would null as before`,
+        ({ inversionTimeMs, wantedMs }) =>
+          `the null moved: TI ${inWords(inversionTimeMs, 0)} ms, about ${inWords(wantedMs, 0)} ms would null as before`,
       );
     }
   }
@@ -57,8 +58,8 @@ export function driftCautions(
       'contrast-drift',
       'caution',
       { change, contrastRatio: comparison.contrastRatio ?? 0 },
-      () =>
-        `${model.series.target} over ${model.series.comparison} changes by ${inWords(100 * change, 0)} %: the picture will look different`,
+      ({ change }, { series }) =>
+        `${series.target} over ${series.comparison} changes by ${inWords(100 * change, 0)} %: the picture will look different`,
     );
   }
   if (model.series.purpose === 'dynamic' && p !== before && changesPicture(p, before)) {
@@ -100,7 +101,12 @@ export function driftCautions(
     }
   }
   // What the preset gives in vain stays said while it is edited.
-  for (const name of ignoredOf(model, baseline)) add('not-modelled', 'caution', {}, () => `${name} has no effect in this class`);
+  const ignored = ignoredOf(model, baseline);
+  for (let i = 0; i < ignored.length; i += 1) ignoredCaution(ignored[i] as ParameterKey, add);
+}
+
+function ignoredCaution(name: ParameterKey, add: AddCaution): void {
+  add('not-modelled', 'caution', {}, () => `${name} has no effect in this class`);
 }
 
 /** What the class cannot use, of the series and of its preset, each once. */

@@ -30,17 +30,23 @@ export function echoPairCautions(model: SeriesModel, add: AddCaution): void {
   const numbers = { firstCycles: first, secondCycles: second, offCycles: off, inPhaseMs, opposedPhaseMs };
   const later = secondOpposed < firstOpposed === p.secondEchoTimeMs > p.echoTimeMs;
   if (off > tolerance) {
-    const bothIn = fromWhole(first) <= tolerance && fromWhole(second) <= tolerance;
-    const bothOpposed = fromWhole(first - 0.5) <= tolerance && fromWhole(second - 0.5) <= tolerance;
-    const what = bothIn ? 'both echoes are in phase' : bothOpposed ? 'both echoes are opposed' : 'the pair is neither in nor opposed phase';
-    add(
-      'echo-pair-phase',
-      'error',
-      numbers,
-      () =>
-        `${what} at ${inWords(model.scanner.fieldT, 2)} T (${first.toFixed(2)} and ${second.toFixed(2)} cycles), opposed-phase information lost: ${opposedPhaseMs.toFixed(2)}/${inPhaseMs.toFixed(2)} ms would be opposed and in phase; where the shortest echo forbids it, ${(3 * opposedPhaseMs).toFixed(2)}/${inPhaseMs.toFixed(2)} ms, opposed later and T2* in the way`,
-    );
+    add('echo-pair-phase', 'error', numbers, sayPairOff);
   } else if (later) {
     add('echo-pair-phase', 'note', numbers, () => 'the opposed echo comes later than the in-phase one: T2* decay reads as fat');
   }
+}
+
+function sayPairOff(
+  {
+    firstCycles: first,
+    secondCycles: second,
+    inPhaseMs,
+    opposedPhaseMs,
+  }: Record<'firstCycles' | 'secondCycles' | 'inPhaseMs' | 'opposedPhaseMs', number>,
+  { scanner }: SeriesModel,
+): string {
+  const bothIn = fromWhole(first) <= tolerance && fromWhole(second) <= tolerance;
+  const bothOpposed = fromWhole(first - 0.5) <= tolerance && fromWhole(second - 0.5) <= tolerance;
+  const what = bothIn ? 'both echoes are in phase' : bothOpposed ? 'both echoes are opposed' : 'the pair is neither in nor opposed phase';
+  return `${what} at ${inWords(scanner.fieldT, 2)} T (${first.toFixed(2)} and ${second.toFixed(2)} cycles), opposed-phase information lost: ${opposedPhaseMs.toFixed(2)}/${inPhaseMs.toFixed(2)} ms would be opposed and in phase; where the shortest echo forbids it, ${(3 * opposedPhaseMs).toFixed(2)}/${inPhaseMs.toFixed(2)} ms, opposed later and T2* in the way`;
 }

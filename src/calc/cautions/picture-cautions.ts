@@ -26,7 +26,7 @@ export function pictureCautions(model: SeriesModel, add: AddCaution): void {
       'partial-fourier-low',
       'caution',
       { phase, slice },
-      () => `only ${inWords(100 * Math.min(phase, slice), 0)} % of the lines of one direction are acquired`,
+      ({ phase, slice }) => `only ${inWords(100 * Math.min(phase, slice), 0)} % of the lines of one direction are acquired`,
     );
   }
   if (model.noiseFactor === null) {
@@ -34,8 +34,8 @@ export function pictureCautions(model: SeriesModel, add: AddCaution): void {
       'g-unknown',
       'caution',
       { parallelFactorPhase: p.parallelFactorPhase, parallelFactorSlice: p.parallelFactorSlice },
-      () =>
-        `noise of acceleration ${inWords(p.parallelFactorPhase)} x ${inWords(volume ? p.parallelFactorSlice : 1)} is not known for this coil: no SNR`,
+      ({ parallelFactorPhase, parallelFactorSlice }, { series }) =>
+        `noise of acceleration ${inWords(parallelFactorPhase)} x ${inWords(series.acquisition === '3D' ? parallelFactorSlice : 1)} is not known for this coil: no SNR`,
     );
   }
   if (p.simultaneousSlices > 1 && model.scanner.simultaneousSliceG[p.simultaneousSlices] === undefined) {
@@ -43,7 +43,7 @@ export function pictureCautions(model: SeriesModel, add: AddCaution): void {
       'g-unknown',
       'note',
       { simultaneousSlices: p.simultaneousSlices },
-      () => `noise of ${p.simultaneousSlices} simultaneous slices is not known for this coil: taken as none`,
+      ({ simultaneousSlices }) => `noise of ${simultaneousSlices} simultaneous slices is not known for this coil: taken as none`,
     );
   }
   if (!volume && p.sliceCount > 1 && model.rounds === 1 && below(p.sliceGapMm, crossTalkShare * p.sliceThicknessMm)) {
@@ -51,19 +51,18 @@ export function pictureCautions(model: SeriesModel, add: AddCaution): void {
       'cross-talk',
       'note',
       { sliceGapMm: p.sliceGapMm, sliceThicknessMm: p.sliceThicknessMm },
-      () => `gap ${inWords(p.sliceGapMm, 2)} mm is under 10 % of the slice: neighbours excite each other`,
+      ({ sliceGapMm }) => `gap ${inWords(sliceGapMm, 2)} mm is under 10 % of the slice: neighbours excite each other`,
     );
   }
-  extrapolationCaution(model.target, model, add);
-  extrapolationCaution(model.comparison, model, add);
+  if (model.target?.extrapolated === true) extrapolationCaution(model.target, add);
+  if (model.comparison?.extrapolated === true) extrapolationCaution(model.comparison, add);
 }
 
-function extrapolationCaution(tissue: TissueSignal | null, model: SeriesModel, add: AddCaution): void {
-  if (tissue === null || !tissue.extrapolated) return;
+function extrapolationCaution({ tissue, t1Ms, t2Ms }: TissueSignal, add: AddCaution): void {
   add(
     'extrapolated-tissue',
     'note',
-    { t1Ms: tissue.t1Ms, t2Ms: tissue.t2Ms },
-    () => `${tissue.tissue}: relaxation at ${inWords(model.scanner.fieldT, 2)} T lies beyond the measured fields`,
+    { t1Ms, t2Ms },
+    (_, { scanner }) => `${tissue}: relaxation at ${inWords(scanner.fieldT, 2)} T lies beyond the measured fields`,
   );
 }

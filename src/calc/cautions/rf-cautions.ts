@@ -22,8 +22,8 @@ export function rfCautions(model: SeriesModel, baseline: Baseline, readings: Rea
       'pulse-lengthened',
       'caution',
       { maximumB1Ut: model.scanner.maximumB1Ut, durationMs: stretched.durationMs },
-      () =>
-        `a pulse needs more than the scanner's ${inWords(model.scanner.maximumB1Ut)} uT and is lengthened to ${inWords(stretched.durationMs, 2)} ms`,
+      ({ maximumB1Ut, durationMs }) =>
+        `a pulse needs more than the scanner's ${inWords(maximumB1Ut)} uT and is lengthened to ${inWords(durationMs, 2)} ms`,
     );
   }
   if (below(b1RmsWindowMs, effectiveRepetitionTimeMs(p))) {
@@ -38,18 +38,7 @@ export function rfCautions(model: SeriesModel, baseline: Baseline, readings: Rea
   if (below(before.parallelFactorPhase, p.parallelFactorPhase) || below(before.parallelFactorSlice, p.parallelFactorSlice)) {
     add('rf-per-exposure', 'note', {}, () => 'acceleration shortens the RF exposure but does not lower B1+rms');
   }
-  if (readings.timeS !== undefined || readings.b1rmsUt !== undefined || readings.sarWkg !== undefined) {
-    const parts: string[] = [];
-    if (readings.timeS !== undefined) parts.push(`time ${inWords(readings.timeS)} s`);
-    if (readings.b1rmsUt !== undefined) parts.push(`B1+rms ${inWords(readings.b1rmsUt, 2)} uT`);
-    if (readings.sarWkg !== undefined) parts.push(`SAR ${inWords(readings.sarWkg, 2)} W/kg`);
-    add(
-      'reading-used',
-      'note',
-      { ...readings } as Record<string, number>,
-      () => `scaled from the scanner's own ${parts.join(', ')} of the preset: same coil, same patient`,
-    );
-  }
+  if (readings.timeS !== undefined || readings.b1rmsUt !== undefined || readings.sarWkg !== undefined) readingCaution(readings, add);
   if (readings.b1rmsUt !== undefined || readings.sarWkg !== undefined) {
     add(
       'read-scanner-again',
@@ -58,4 +47,14 @@ export function rfCautions(model: SeriesModel, baseline: Baseline, readings: Rea
       () => "read the scanner's displayed value again before starting; the implant's label and local rules decide",
     );
   }
+}
+
+function readingCaution(readings: Readings, add: AddCaution): void {
+  add('reading-used', 'note', { ...readings } as Readonly<Record<string, number>>, ({ timeS, b1rmsUt, sarWkg }) => {
+    const parts: string[] = [];
+    if (timeS !== undefined) parts.push(`time ${inWords(timeS)} s`);
+    if (b1rmsUt !== undefined) parts.push(`B1+rms ${inWords(b1rmsUt, 2)} uT`);
+    if (sarWkg !== undefined) parts.push(`SAR ${inWords(sarWkg, 2)} W/kg`);
+    return `scaled from the scanner's own ${parts.join(', ')} of the preset: same coil, same patient`;
+  });
 }

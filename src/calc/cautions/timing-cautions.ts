@@ -26,7 +26,7 @@ export function timingCautions(model: SeriesModel, baseline: Baseline, add: AddC
       'timing-impossible',
       'error',
       { repetitionTimeMs: p.repetitionTimeMs, echoTimeMs: p.echoTimeMs },
-      () => `impossible timing: ${model.impossible}`,
+      (_, { impossible }) => `impossible timing: ${impossible}`,
     );
   }
   const { minimum } = model;
@@ -35,8 +35,8 @@ export function timingCautions(model: SeriesModel, baseline: Baseline, add: AddC
       'readout-gradient',
       'caution',
       { neededMtPerM: minimum.readoutMtPerM, gradientMtPerM: model.scanner.gradientMtPerM },
-      () =>
-        `readout needs ${inWords(minimum.readoutMtPerM)} mT/m, the gradients give ${inWords(model.scanner.gradientMtPerM)}: lower the bandwidth or the read matrix`,
+      ({ neededMtPerM, gradientMtPerM }) =>
+        `readout needs ${inWords(neededMtPerM)} mT/m, the gradients give ${inWords(gradientMtPerM)}: lower the bandwidth or the read matrix`,
     );
   }
   if (below(p.echoTimeMs, minimum.echoTimeMs)) {
@@ -44,8 +44,8 @@ export function timingCautions(model: SeriesModel, baseline: Baseline, add: AddC
       'below-minimum-te',
       levelOf(minimum.echoTimeMs - p.echoTimeMs, beforeMinimum.echoTimeMs - before.echoTimeMs),
       { echoTimeMs: p.echoTimeMs, minimumMs: minimum.echoTimeMs },
-      () =>
-        `TE ${inWords(p.echoTimeMs, 2)} ms is under the estimated minimum of ${inWords(minimum.echoTimeMs, 2)} ms (${minimum.binding}): the scanner may refuse it`,
+      ({ echoTimeMs, minimumMs }, { minimum: { binding } }) =>
+        `TE ${inWords(echoTimeMs, 2)} ms is under the estimated minimum of ${inWords(minimumMs, 2)} ms (${binding}): the scanner may refuse it`,
     );
   }
   const tr = effectiveRepetitionTimeMs(p);
@@ -54,8 +54,8 @@ export function timingCautions(model: SeriesModel, baseline: Baseline, add: AddC
       'below-minimum-tr',
       levelOf(minimum.repetitionTimeMs - tr, beforeMinimum.repetitionTimeMs - before.repetitionTimeMs),
       { repetitionTimeMs: tr, minimumMs: minimum.repetitionTimeMs },
-      () =>
-        `TR ${inWords(tr, 2)} ms is under the estimated minimum of ${inWords(minimum.repetitionTimeMs, 2)} ms: the scanner may refuse it`,
+      ({ repetitionTimeMs, minimumMs }) =>
+        `TR ${inWords(repetitionTimeMs, 2)} ms is under the estimated minimum of ${inWords(minimumMs, 2)} ms: the scanner may refuse it`,
     );
   }
   const spacingMs = minimum.echoSpacingMs;
@@ -64,8 +64,8 @@ export function timingCautions(model: SeriesModel, baseline: Baseline, add: AddC
       'below-minimum-spacing',
       levelOf(spacingMs - p.echoSpacingMs, (beforeMinimum.echoSpacingMs ?? 0) - before.echoSpacingMs),
       { echoSpacingMs: p.echoSpacingMs, minimumMs: spacingMs },
-      () =>
-        `echo spacing ${inWords(p.echoSpacingMs, 2)} ms is under the estimated minimum of ${inWords(spacingMs, 2)} ms: the scanner may refuse it`,
+      ({ echoSpacingMs, minimumMs }) =>
+        `echo spacing ${inWords(echoSpacingMs, 2)} ms is under the estimated minimum of ${inWords(minimumMs, 2)} ms: the scanner may refuse it`,
     );
   }
 }
@@ -80,7 +80,8 @@ export function splitCautions(model: SeriesModel, baseline: Baseline, breathHeld
       'slices-need-rounds',
       'caution',
       { slices: p.sliceCount, capacity, rounds: p.rounds, roundsNeeded },
-      () => `only ${capacity} of ${p.sliceCount} slices fit in one TR: ${roundsNeeded} separate acquisitions, time counts them all`,
+      ({ slices, capacity, roundsNeeded }) =>
+        `only ${capacity} of ${slices} slices fit in one TR: ${roundsNeeded} separate acquisitions, time counts them all`,
     );
   }
   if (model.slotFactor < 1) {
@@ -88,7 +89,7 @@ export function splitCautions(model: SeriesModel, baseline: Baseline, breathHeld
       'slot-scaled',
       'note',
       { factor: model.slotFactor },
-      () => `the preset's slices fit only if one takes ${inWords(model.slotFactor, 3)} of the modelled time: that factor is kept for edits`,
+      ({ factor }) => `the preset's slices fit only if one takes ${inWords(factor, 3)} of the modelled time: that factor is kept for edits`,
     );
   }
   // A volume has no split of its own; asking for one in a timed phase is refused all the same, with the reason.
@@ -103,7 +104,12 @@ export function splitCautions(model: SeriesModel, baseline: Baseline, breathHeld
   }
   const holds = model.time.holds;
   if (breathHeld && holds !== null && holds > p.volumes) {
-    add('shift-between-holds', 'caution', { holds }, () => `${holds} breath-holds: slices may be missed or doubled where two holds differ`);
+    add(
+      'shift-between-holds',
+      'caution',
+      { holds },
+      ({ holds }) => `${holds} breath-holds: slices may be missed or doubled where two holds differ`,
+    );
   }
 }
 
@@ -119,7 +125,8 @@ export function trainCautions(model: SeriesModel, add: AddCaution): void {
         'echo-off-time',
         'caution',
         { echo, playedMs, echoTimeMs: p.echoTimeMs },
-        () => `the train's nearest echo to TE ${inWords(p.echoTimeMs)} ms is at ${inWords(playedMs)} ms: figures use that`,
+        ({ echoTimeMs, playedMs }) =>
+          `the train's nearest echo to TE ${inWords(echoTimeMs)} ms is at ${inWords(playedMs)} ms: figures use that`,
       );
     }
     if (model.key === 'single-shot-fast-spin-echo/2D') {
@@ -129,8 +136,8 @@ export function trainCautions(model: SeriesModel, add: AddCaution): void {
           'echo-centre-differs',
           'caution',
           { echoesBeforeByLines: before, echoesBeforeByTime: echo - 1 },
-          () =>
-            `partial Fourier puts ${inWords(before)} echoes before the centre, TE asks for ${echo - 1}: the scanner will move one of them`,
+          ({ echoesBeforeByLines, echoesBeforeByTime }) =>
+            `partial Fourier puts ${inWords(echoesBeforeByLines)} echoes before the centre, TE asks for ${echoesBeforeByTime}: the scanner will move one of them`,
         );
       }
     }
@@ -150,7 +157,7 @@ export function trainCautions(model: SeriesModel, add: AddCaution): void {
         'train-length-differs',
         'note',
         { wanted, echoTrainLength: p.echoTrainLength },
-        () => `the lines need a train of ${wanted}, the series says ${p.echoTrainLength}`,
+        ({ wanted, echoTrainLength }) => `the lines need a train of ${wanted}, the series says ${echoTrainLength}`,
       );
     }
   }

@@ -12,6 +12,11 @@ function bodyAlongPhaseMm(model: SeriesModel, body: Body): number | null {
   return direction === 'AP' ? body.frontBackMm : body.leftRightMm;
 }
 
+/** What is wider than the encoded extent, in words. */
+function wideOne({ series }: SeriesModel): string {
+  return series.parameters.phaseDirection === 'HF' ? 'visible length' : 'body';
+}
+
 /** True where phase encoding follows no body axis, so that no typed extent lies along it. */
 function isOblique(plane: string): boolean {
   return plane.includes('oblique') || plane.includes('axis');
@@ -29,7 +34,7 @@ export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline,
   if (!bodyKnown && p.phaseDirection !== 'HF') return;
   if (isOblique(model.series.plane)) {
     if (bodyKnown) {
-      add('wrap-not-checked', 'note', {}, () => `wrap not checked: ${model.series.plane} plane, no body extent lies along phase`);
+      add('wrap-not-checked', 'note', {}, (_, { series }) => `wrap not checked: ${series.plane} plane, no body extent lies along phase`);
     }
     return;
   }
@@ -40,7 +45,6 @@ export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline,
   const encoded = model.geometry.encodedPhaseExtentMm;
   const kept = model.geometry.phaseExtentMm;
   const numbers = { encodedMm: encoded, keptMm: kept, bodyMm };
-  const what = headFeet ? 'visible length' : 'body';
   if (p.parallelFactorPhase > 1) {
     if (atMost(bodyMm, encoded)) return;
     // Head-feet the visible length is a property of the magnet, not this body: what the preset already does is a caution, an edit that causes it an error.
@@ -54,8 +58,8 @@ export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline,
       'wrap-unfoldable',
       asPreset ? 'caution' : 'error',
       numbers,
-      () =>
-        `${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded: acceleration cannot unfold the rest (body taken as centred)`,
+      ({ bodyMm, encodedMm }, model) =>
+        `${wideOne(model)} ${inWords(bodyMm, 0)} mm, ${inWords(encodedMm, 0)} mm encoded: acceleration cannot unfold the rest (body taken as centred)`,
     );
     return;
   }
@@ -64,8 +68,8 @@ export function wrapCautions(model: SeriesModel, body: Body, baseline: Baseline,
       'wrap',
       'caution',
       { ...numbers, neededMm: (bodyMm + kept) / 2 },
-      () =>
-        `wrap reaches the picture: ${what} ${inWords(bodyMm, 0)} mm, ${inWords(encoded, 0)} mm encoded, ${inWords((bodyMm + kept) / 2, 0)} mm needed (body taken as centred)`,
+      ({ bodyMm, encodedMm, neededMm }, model) =>
+        `wrap reaches the picture: ${wideOne(model)} ${inWords(bodyMm, 0)} mm, ${inWords(encodedMm, 0)} mm encoded, ${inWords(neededMm, 0)} mm needed (body taken as centred)`,
     );
   }
 }

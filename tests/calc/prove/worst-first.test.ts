@@ -1,7 +1,11 @@
 import { describe, expect, it } from 'vitest';
+import { baselineOf } from '../../../src/calc/baseline.js';
 import { type CautionLevel, SaidCaution, worstFirst } from '../../../src/calc/caution.js';
+import { plainScanner } from '../../../src/calc/scanner.js';
+import { seriesOf } from '../series-of.js';
 
-const caution = (level: CautionLevel, text: string) => new SaidCaution('must-keep', level, {}, () => text);
+const { model } = baselineOf(seriesOf('spin-echo/2D'), plainScanner(1.5));
+const caution = (level: CautionLevel, text: string) => new SaidCaution('must-keep', level, {}, model, () => text);
 
 describe('the order of cautions', () => {
   it('is worst first, two as well as many; equals keep their order', () => {

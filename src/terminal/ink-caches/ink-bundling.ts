@@ -36,12 +36,15 @@ export function replaceInkCaches(): Plugin {
     setup(build) {
       const replaced = new Set<string>();
       let inkSeen = false;
-      build.onResolve({ filter: /^(?:\.\.?\/(?:.*\/)?(?:measure-text|wrap-text|output|sanitize-ansi)\.js|widest-line)$/ }, ({ path, importer }) => {
-        const name = /([a-z-]+)(?:\.js)?$/.exec(path)?.[1] ?? '';
-        if (!/[\\/]ink[\\/]build[\\/]/.test(importer)) return undefined;
-        replaced.add(name);
-        return { path: name, namespace: 'ink-cache' };
-      });
+      build.onResolve(
+        { filter: /^(?:\.\.?\/(?:.*\/)?(?:measure-text|wrap-text|output|sanitize-ansi)\.js|widest-line)$/ },
+        ({ path, importer }) => {
+          const name = /([a-z-]+)(?:\.js)?$/.exec(path)?.[1] ?? '';
+          if (!/[\\/]ink[\\/]build[\\/]/.test(importer)) return undefined;
+          replaced.add(name);
+          return { path: name, namespace: 'ink-cache' };
+        },
+      );
       // Ink imports the default export; ours is named, as everywhere in this project.
       build.onLoad({ filter: /.*/, namespace: 'ink-cache' }, ({ path }) => {
         const [file, name] = replacements.get(path) as readonly [string, string];

@@ -118,7 +118,9 @@ describe('bundling', () => {
   it("leaves ink's own files out and puts ours in", async () => {
     const inputs = await bundle("export { render } from 'ink';");
     expect(inputs.some((input) => input.endsWith('ink/build/dom.js'))).toBe(true);
-    expect(inputs.filter((input) => /ink\/build\/(measure-text|wrap-text|output|sanitize-ansi)\.js$|node_modules\/widest-line/.test(input))).toEqual([]);
+    expect(
+      inputs.filter((input) => /ink\/build\/(measure-text|wrap-text|output|sanitize-ansi)\.js$|node_modules\/widest-line/.test(input)),
+    ).toEqual([]);
     const ours = inputs.filter((input) => input.startsWith('src/terminal/')).map((input) => input.split('/').at(-1));
     expect(new Set(ours)).toEqual(new Set(['bounded-cache.ts', 'flat-output.ts', 'measure-text.ts', 'text-width.ts', 'wrap-text.ts']));
     expect(inputs.filter((input) => input.includes('react-devtools-core'))).toEqual([]);

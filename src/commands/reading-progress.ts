@@ -17,7 +17,7 @@ export function readingProgress({ reader, rows = false }: ReadingWords, io: Comm
   const silent = progress === undefined || (rows && io.outputIsSeen === true);
   let last = -1;
   return {
-    tell(readBytes: number, totalBytes: number): void {
+    tell: (readBytes: number, totalBytes: number): void => {
       if (silent || totalBytes < progressFromBytes) return;
       const percent = Math.min(100, Math.floor((100 * readBytes) / totalBytes));
       const now = reader ? percent - (percent % 25) : percent;
@@ -26,7 +26,7 @@ export function readingProgress({ reader, rows = false }: ReadingWords, io: Comm
       if (reader) io.complain(`reading records: ${now} %\n`);
       else progress(`reading records: ${now} %`);
     },
-    done(): void {
+    done: (): void => {
       if (!silent && !reader && last >= 0) progress('');
     },
   };

@@ -6,10 +6,11 @@ import fc from 'fast-check';
 import stringWidth from 'string-width';
 import { describe, expect, it } from 'vitest';
 import { boundedCache } from '../../../src/terminal/ink-caches/bounded-cache.js';
-import { FlatOutput } from '../../../src/terminal/ink-caches/flat-output.js';
+import { asItIs, FlatOutput } from '../../../src/terminal/ink-caches/flat-output.js';
 import { inkDefines, replaceInkCaches } from '../../../src/terminal/ink-caches/ink-bundling.js';
 import { measureText, widestLine } from '../../../src/terminal/ink-caches/measure-text.js';
 import { type TextWrap, wrapText } from '../../../src/terminal/ink-caches/wrap-text.js';
+import { readFrame } from '../../../src/terminal/painter/frame-grid.js';
 
 const inkFile = async (name: string) =>
   ((await import(new URL(`../../../node_modules/ink/build/${name}.js`, import.meta.url).href)) as { default: unknown }).default;
@@ -86,6 +87,16 @@ describe('whole lines', () => {
     expect(() => output.write(4, 0, 'two', { transformers: [] })).toThrow('column 4');
     expect(() => output.write(0, 0, 'two', { transformers: [] })).toThrow('line 0');
     expect(() => output.clip()).toThrow('whole lines');
+  });
+
+  it('keep every style: what else there is, the painter leaves out', () => {
+    const styled = '\u001b[1;31mtwo\u001b[0m';
+    expect(asItIs(styled)).toBe(styled);
+    expect(
+      readFrame(asItIs(`a${styled}\u001b[2Jb`), { columns: 8, rows: 1 })
+        .rows[0]?.cells.map(({ text }) => text)
+        .join(''),
+    ).toBe('atwob   ');
   });
 
   it('have the width that the package says', () => {

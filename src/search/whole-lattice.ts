@@ -82,10 +82,11 @@ export class WholeLatticeSearch {
     const buckets = this.#lines.buckets(point);
     if (this.parts.count && this.#counted) this.#counted = this.#canCount(buckets, lists, rounds);
     if (this.parts.fronts) this.#fronts(buckets, lists, report);
+    const done = this.parts.fronts ? 0.5 : 0;
     const timings = new Map<string, readonly (readonly SignalEntry[])[]>();
     for (const [i, bucket] of buckets.entries()) {
       if (!this.parts.nearest && !(this.parts.count && this.#counted)) break;
-      if (i > 0 && i % 16 === 0) report(i / buckets.length);
+      if (i > 0 && i % 16 === 0) report(done + ((1 - done) * i) / buckets.length);
       const entries = lists.of(bucket);
       if (this.parts.nearest) this.#nearest = nearerWay(this.tables, bucket, entries, this.#nearest);
       if (!this.parts.count || !this.#counted) continue;
@@ -97,11 +98,11 @@ export class WholeLatticeSearch {
   }
 
   #fronts(buckets: readonly LineBucket[], lists: SignalLists, report: (share: number) => void): void {
-    const families = bucketFamilies(this.tables, buckets, (bucket) =>
-      this.parts.nearest || (this.parts.count && this.#counted) ? lists.of(bucket) : lists.best(bucket),
-    );
+    const alone = !this.parts.nearest && !(this.parts.count && this.#counted);
+    const families = bucketFamilies(this.tables, buckets, (bucket) => (alone ? lists.best(bucket) : lists.of(bucket)));
     for (const [i, { classes, envelopes }] of families.entries()) {
-      report(i / families.length);
+      // Half of the work where the nearest way or the count is asked for too.
+      report((i / families.length) * (alone ? 1 : 0.5));
       for (const one of envelopes) addToSnrFront(this.tables, one, this.timeSnr, this.pulse);
       for (const one of classes) addToLossFront(this.tables, one, this.timeLoss, this.pulse);
     }

@@ -32,6 +32,7 @@ export const cautionCodes = [
   'must-keep-not-checked',
   'reading-used',
   'read-scanner-again',
+  'reading-no-longer-holds',
   'extrapolated-tissue',
   'approximate-train',
   'g-unknown',

@@ -89,7 +89,7 @@ function mustKeepLimits(mustKeeps: readonly MustKeep[], key: FigureKey): number[
 function rfLimit(state: State, id: string, key: FigureKey): number | undefined {
   if (key !== 'rfPowerTrend') return undefined;
   const { b1rmsCapUt = null, sarCapWkg = null } = state.session?.limits ?? {};
-  const { b1rmsUt, sarWkg } = readingsOf(sessionSeries(state, id));
+  const { b1rmsUt, sarWkg } = readingsOf(state, sessionSeries(state, id));
   const caps = [
     ...(b1rmsCapUt !== null && b1rmsUt !== undefined ? [(b1rmsCapUt / b1rmsUt) ** 2] : []),
     ...(sarCapWkg !== null && sarWkg !== undefined ? [sarCapWkg / sarWkg] : []),

@@ -1,6 +1,6 @@
-import type { RecordedReading } from '../study/record.js';
+import type { ReadingConditions, RecordedReading } from '../study/record.js';
 import { type FormRow, numberRow, textRow } from './form-row.js';
-import { sessionSeries } from './results.js';
+import { conditionsNow, sessionSeries } from './results.js';
 import { sayNumber } from './say-number.js';
 import { sayTime } from './say-time.js';
 import type { Session } from './session.js';
@@ -14,14 +14,14 @@ export function readingsForm(state: State, id: string): readonly FormRow[] {
   const series = sessionSeries(state, id);
   return [
     { field: 'heading before', label: 'Displayed for the preset, before any change', shown: '', help: '', kind: 'heading' },
-    ...readingRows('before', id, series.before),
+    ...readingRows(state, 'before', id, series.before),
     { field: 'heading after', label: 'Displayed after the changes', shown: '', help: '', kind: 'heading' },
-    ...readingRows('after', id, series.after),
+    ...readingRows(state, 'after', id, series.after),
   ];
 }
 
 /** The lines of one reading. */
-export function readingRows(when: When, id: string, reading: RecordedReading | null): FormRow[] {
+export function readingRows(state: State, when: When, id: string, reading: RecordedReading | null): FormRow[] {
   const keep = (session: Session, values: { readonly [K in keyof RecordedReading]: RecordedReading[K] | undefined | null }) =>
     eachSeries(session, new Set([id]), (series) => ({ ...series, [when]: cleaned({ ...series[when], ...values }) }));
   const scaled = when === 'before' ? 'Later figures scale from it: same coil and patient.' : 'Shows how far the prediction was off.';
@@ -44,7 +44,7 @@ export function readingRows(when: When, id: string, reading: RecordedReading | n
       max,
       step: unit === 's' ? 1 : 0.1,
       first: 1,
-      keep: (session, next) => keep(session, { [key]: next }),
+      keep: (session, next) => keep(session, { [key]: next, ...(next === null ? {} : { conditions: readWith(state, reading, key) }) }),
     });
   };
   return [
@@ -79,8 +79,13 @@ export function readingRows(when: When, id: string, reading: RecordedReading | n
   ];
 }
 
+/** Conditions of a reading are those of its SAR, which alone hangs on the body; else those of its first number. */
+function readWith(state: State, reading: RecordedReading | null, key: keyof RecordedReading): ReadingConditions {
+  return key === 'sarWkg' ? conditionsNow(state) : (reading?.conditions ?? conditionsNow(state));
+}
+
 /** A reading without what was taken out; null when nothing is left. */
 function cleaned(reading: Readonly<Record<string, unknown>>): RecordedReading | null {
   const entries = Object.entries(reading).filter(([, value]) => value !== undefined && value !== null);
-  return entries.length === 0 ? null : (Object.fromEntries(entries) as RecordedReading);
+  return entries.every(([key]) => key === 'conditions') ? null : (Object.fromEntries(entries) as RecordedReading);
 }

@@ -110,10 +110,14 @@ function seriesRows(state: State, series: SessionSeries): FormRow[] {
       qualityWords,
       (session, quality) => change(session, { quality }),
     ),
-    ...readingRows('before', id, series.before)
+    ...readingRows(state, 'before', id, series.before)
       .slice(0, 3)
       .map((row) => ({ ...row, field: `${id} ${row.field}`, label: `  before, ${row.label}` })),
-    ...readingRows('after', id, series.after).map((row) => ({ ...row, field: `${id} ${row.field}`, label: `  after, ${row.label}` })),
+    ...readingRows(state, 'after', id, series.after).map((row) => ({
+      ...row,
+      field: `${id} ${row.field}`,
+      label: `  after, ${row.label}`,
+    })),
   ];
 }
 

@@ -4,12 +4,13 @@ import { modelVersion } from '../calc/model-version.js';
 import type { GivenParameters, Parameters } from '../calc/series.js';
 import { classOf } from '../calc/series.js';
 import { type RecordedSeries, type RecordedValues, recordVersion, type SessionRecord } from '../study/record.js';
+import { comparedReadings } from '../study/record-prediction.js';
 import type { SeriesOutcome } from '../study/record-words.js';
 import type { Study, StudySeries } from '../study/study.js';
 import { toolVersion } from '../study/tool-version.js';
 import { equipmentNow, scannerNow } from './equipment.js';
 import { filedStudy } from './judged-study.js';
-import { resultNow, resultOfPreset, sessionSeries, studySeries } from './results.js';
+import { modelOfPreset, resultNow, resultOfPreset, sessionSeries, studySeries } from './results.js';
 import type { SeriesResult } from './series-result.js';
 import type { SessionSeries } from './session.js';
 import type { State } from './state.js';
@@ -34,15 +35,19 @@ function crossedRules(state: State, id: string): readonly string[] {
 export function recordedSeries(state: State, id: string): RecordedSeries {
   const series = sessionSeries(state, id);
   const outcome = outcomeOf(series);
+  const used = valuesOf(studySeries(state, id), resultNow(state, id));
+  const { before, after } = series;
+  const compared = comparedReadings(modelOfPreset(state, id).evaluation.figures, used.figures, { before, after });
   return {
     id,
+    class: classOf(studySeries(state, id)),
     outcome: outcome === 'left-out' ? 'given-up' : outcome,
     reason: series.reason,
     quality: series.quality,
     planned: valuesOf(studySeries(state, id), resultOfPreset(state, id)),
-    used: valuesOf(studySeries(state, id), resultNow(state, id)),
+    used,
     crossed: crossedRules(state, id).map((rule) => ({ rule, role: series.accepted[rule] ?? null })),
-    readings: { before: series.before, after: series.after },
+    readings: { before, after, ...(compared === null ? {} : { compared }) },
   };
 }
 

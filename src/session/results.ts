@@ -1,13 +1,17 @@
 import type { Baseline } from '../calc/baseline.js';
 import type { Body } from '../calc/body.js';
-import type { Readings } from '../calc/reading.js';
+import { type Readings, readingKeys } from '../calc/reading.js';
 import type { Scanner } from '../calc/scanner.js';
 import type { GivenParameters } from '../calc/series.js';
+import { endedBy } from '../study/reading-conditions.js';
+import type { ReadingConditions } from '../study/record.js';
 import type { StudySeries } from '../study/study.js';
-import { scannerNow } from './equipment.js';
+import { equipmentNow, scannerNow } from './equipment.js';
 import { presetBaseline, type SeriesResult, seriesResult } from './series-result.js';
 import type { SessionSeries } from './session.js';
 import type { State } from './state.js';
+
+const noReadings: Readings = {};
 
 /** How many results of one series are kept: the present one, its neighbours, a chart. */
 const mostKept = 160;
@@ -60,14 +64,23 @@ function keptOf(state: State, series: StudySeries): Kept {
   return known;
 }
 
-/** What the scanner displayed for the preset, as the model takes it. */
-export function readingsOf(series: SessionSeries): Readings {
-  const { timeS, b1rmsUt, sarWkg } = series.before ?? {};
-  return {
-    ...(timeS === undefined ? {} : { timeS }),
-    ...(b1rmsUt === undefined ? {} : { b1rmsUt }),
-    ...(sarWkg === undefined ? {} : { sarWkg }),
-  };
+/** What the scanner displayed for the preset, as the model takes it: without what no longer holds for this coil, body or field. */
+export function readingsOf(state: State, { before }: SessionSeries): Readings {
+  if (before === null) return noReadings;
+  const now = conditionsNow(state);
+  const readings: { -readonly [K in keyof Readings]: Readings[K] } = {};
+  for (const key of readingKeys) {
+    const value = before[key];
+    if (value !== undefined && endedBy(before, key, now) === null) readings[key] = value;
+  }
+  return readings;
+}
+
+/** What a number that is typed now was read with. */
+export function conditionsNow(state: State): ReadingConditions {
+  const equipment = equipmentNow(state);
+  const { frontBackMm, leftRightMm } = bodyOf(state);
+  return { coil: equipment?.coilName || null, fieldT: equipment?.scanner.fieldT ?? 0, frontBackMm, leftRightMm };
 }
 
 /** This patient's extents. */
@@ -95,7 +108,7 @@ export function resultWith(state: State, id: string, set: GivenParameters): Seri
     last.scanner === scanner
   )
     return last.result;
-  const result = keptResult(state, series, own, set, body, readingsOf(sessionSeries(state, id)));
+  const result = keptResult(state, series, own, set, body, readingsOf(state, sessionSeries(state, id)));
   own.latest.set(set, { series: before, ...body, rules: state.rules, scanner, result });
   return result;
 }
@@ -135,6 +148,12 @@ export function resultNow(state: State, id: string): SeriesResult {
 }
 
 const nothingSet: GivenParameters = {};
+
+/** The preset of a series as the model alone has it, whatever was read. */
+export function modelOfPreset(state: State, id: string): SeriesResult {
+  const series = studySeries(state, id);
+  return keptResult(state, series, keptOf(state, series), nothingSet, bodyOf(state), noReadings);
+}
 
 /** The preset of a series under the same circumstances. */
 export function resultOfPreset(state: State, id: string): SeriesResult {

@@ -23,7 +23,7 @@ function limitsOf(state: State, id: string): Limits {
   const { session } = state;
   if (session === null) return {};
   const { holdS, longestSeriesS, b1rmsCapUt, sarCapWkg } = session.limits;
-  const readings = readingsOf(sessionSeries(state, id));
+  const readings = readingsOf(state, sessionSeries(state, id));
   const held = resultOfPreset(state, id).evaluation.figures.holdTimeS !== null;
   return {
     ...(holdS !== null && held ? { holdS } : {}),
@@ -47,7 +47,7 @@ export function searchProblemOf(state: State, id: string): SearchProblem | null 
     body: bodyOf(state),
     rules: state.rules,
     limits: limitsOf(state, id),
-    readings: readingsOf(own),
+    readings: readingsOf(state, own),
     bands: bandsOf(session),
     set: baseSet(state, id),
     opened: [],
@@ -103,7 +103,10 @@ export function budgetProblemOf(state: State): BudgetProblem | null {
     bands: bandsOf(session),
     readings: {},
     asSet: Object.fromEntries(
-      stays.map((each) => [each.id, { set: each.set, readings: readingsOf(each), frozen: isFrozen(session, studySeries(state, each.id)) }]),
+      stays.map((each) => [
+        each.id,
+        { set: each.set, readings: readingsOf(state, each), frozen: isFrozen(session, studySeries(state, each.id)) },
+      ]),
     ),
   };
 }

@@ -32,7 +32,7 @@ export function seriesVerdicts(state: State, id: string, result: SeriesResult = 
   if (limits === undefined) return [];
   const { figures } = result.evaluation;
   const series = sessionSeries(state, id);
-  const readings = readingsOf(series);
+  const readings = readingsOf(state, series);
   const margins = { modelErrorPercent: scannerNow(state)?.modelErrorPercent ?? 5, hasTimeReading: readings.timeS !== undefined };
   const judged: Judged[] = [];
   const add = (
@@ -82,7 +82,7 @@ export function seriesVerdicts(state: State, id: string, result: SeriesResult = 
 /** Caps that cannot be judged for want of the scanner's own number: SAR and B1+rms are only ever scaled from it. */
 export function missingReadings(state: State, series: SessionSeries): readonly string[] {
   const { b1rmsCapUt = null, sarCapWkg = null } = state.session?.limits ?? {};
-  const readings = readingsOf(series);
+  const readings = readingsOf(state, series);
   return [
     ...(b1rmsCapUt !== null && readings.b1rmsUt === undefined ? [`B1+rms cap ${sayNumber(b1rmsCapUt)} uT`] : []),
     ...(sarCapWkg !== null && readings.sarWkg === undefined ? [`SAR cap ${sayNumber(sarCapWkg)} W/kg`] : []),

@@ -1,7 +1,16 @@
 import { figureKeys } from '../calc/figures.js';
 import { parameterKeys } from '../calc/parameters.js';
 import { withSum } from './line-sum.js';
-import type { RecordedLimits, RecordedReading, RecordedSeries, RecordedValues, SessionRecord } from './record.js';
+import type {
+  ComparedReading,
+  ComparedReadings,
+  ReadingConditions,
+  RecordedLimits,
+  RecordedReading,
+  RecordedSeries,
+  RecordedValues,
+  SessionRecord,
+} from './record.js';
 import { freeText, initialsText } from './record-text.js';
 
 /** Rules come from presets, not from a keyboard: long ones are kept, endless ones are not. */
@@ -59,13 +68,18 @@ function tidyLimits(limits: RecordedLimits): RecordedLimits {
 function tidySeries(series: RecordedSeries): RecordedSeries {
   return {
     id: freeText(series.id),
+    ...(series.class === undefined ? {} : { class: freeText(series.class) }),
     outcome: series.outcome,
     reason: freeText(series.reason),
     quality: series.quality,
     planned: tidyValues(series.planned),
     used: tidyValues(series.used),
     crossed: series.crossed.map(({ rule, role }) => ({ rule: freeText(rule, maximumRuleLength), role: cleanOrNull(role) })),
-    readings: { before: tidyReading(series.readings.before), after: tidyReading(series.readings.after) },
+    readings: {
+      before: tidyReading(series.readings.before),
+      after: tidyReading(series.readings.after),
+      ...(series.readings.compared === undefined ? {} : { compared: tidyCompared(series.readings.compared) }),
+    },
   };
 }
 
@@ -109,7 +123,7 @@ function sayable(value: unknown): unknown {
 
 function tidyReading(reading: RecordedReading | null): RecordedReading | null {
   if (reading === null) return null;
-  const { timeS, b1rmsUt, sarWkg, operatingMode, changedByScanner, notModelled } = reading;
+  const { conditions, timeS, b1rmsUt, sarWkg, operatingMode, changedByScanner, notModelled } = reading;
   return {
     ...numberGiven('timeS', timeS),
     ...numberGiven('b1rmsUt', b1rmsUt),
@@ -117,7 +131,32 @@ function tidyReading(reading: RecordedReading | null): RecordedReading | null {
     ...(operatingMode === undefined ? {} : { operatingMode: freeText(operatingMode) }),
     ...(changedByScanner === undefined ? {} : { changedByScanner: freeText(changedByScanner) }),
     ...(notModelled === undefined ? {} : { notModelled: notModelled.map((text) => freeText(text)) }),
+    ...(conditions === undefined ? {} : { conditions: tidyConditions(conditions) }),
   };
+}
+
+function tidyConditions({ coil, fieldT, frontBackMm, leftRightMm }: ReadingConditions): ReadingConditions {
+  return { coil: cleanOrNull(coil), fieldT: finite(fieldT) ?? 0, frontBackMm: finite(frontBackMm), leftRightMm: finite(leftRightMm) };
+}
+
+function tidyCompared({ before, after }: ComparedReadings): ComparedReadings {
+  return {
+    before: { ...comparedGiven('timeS', before.timeS), ...comparedGiven('b1rmsUt', before.b1rmsUt) },
+    after: {
+      ...comparedGiven('timeS', after.timeS),
+      ...comparedGiven('b1rmsUt', after.b1rmsUt),
+      ...comparedGiven('sarWkg', after.sarWkg),
+    },
+  };
+}
+
+/** The key with what was compared, or nothing where one of its numbers is none. */
+function comparedGiven<K extends string>(key: K, compared: ComparedReading | undefined): { [key in K]?: ComparedReading } {
+  if (compared === undefined) return {};
+  const [predicted, read, ratio] = [finite(compared.predicted), finite(compared.read), finite(compared.ratio)];
+  return predicted === null || read === null || ratio === null
+    ? {}
+    : ({ [key]: { predicted, read, ratio } } as { [key in K]: ComparedReading });
 }
 
 /** The key with its number, or nothing where no number was given. */

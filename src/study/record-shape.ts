@@ -132,7 +132,14 @@ const plannedValues: Check = (value) => {
 
 const usedValues: Check = (value) => (isObject(value) && rightPlans.has(value) ? null : values(value));
 
+const conditions = withKeys({ coil: orNull(text), fieldT: number, frontBackMm: orNull(number), leftRightMm: orNull(number) });
+
+const comparedReading = withKeys({ predicted: number, read: number, ratio: number });
+const comparedNumbers = withSomeKeys({ timeS: comparedReading, b1rmsUt: comparedReading, sarWkg: comparedReading });
+const compared = withKeys({ before: comparedNumbers, after: comparedNumbers });
+
 const reading = withSomeKeys({
+  conditions,
   timeS: number,
   b1rmsUt: number,
   sarWkg: number,
@@ -174,16 +181,19 @@ const record = withKeys({
   reasons: listOf(text),
   limits: withKeys(limitChecks),
   series: listOf(
-    withKeys({
-      id: text,
-      outcome: wordOf(Object.keys(outcomeWords)),
-      reason: text,
-      quality: orNull(wordOf(Object.keys(qualityWords))),
-      planned: plannedValues,
-      used: usedValues,
-      crossed: listOf(withKeys({ rule: text, role: orNull(text) })),
-      readings: withKeys({ before: orNull(reading), after: orNull(reading) }),
-    }),
+    both(
+      withSomeKeys({ class: text }),
+      withKeys({
+        id: text,
+        outcome: wordOf(Object.keys(outcomeWords)),
+        reason: text,
+        quality: orNull(wordOf(Object.keys(qualityWords))),
+        planned: plannedValues,
+        used: usedValues,
+        crossed: listOf(withKeys({ rule: text, role: orNull(text) })),
+        readings: both(withKeys({ before: orNull(reading), after: orNull(reading) }), withSomeKeys({ compared })),
+      }),
+    ),
   ),
   recommendation: orNull(wordOf(Object.keys(recommendationWords))),
 });

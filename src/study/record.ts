@@ -57,8 +57,37 @@ export interface RecordedValues {
   readonly figures: Partial<Figures>;
 }
 
+/** What a reading was taken with; for another coil, body or field it no longer holds. */
+export interface ReadingConditions {
+  /** Nickname; null where none is named. */
+  readonly coil: string | null;
+  readonly fieldT: number;
+  /** Extents as typed then; null was not typed. */
+  readonly frontBackMm: number | null;
+  readonly leftRightMm: number | null;
+}
+
+/** A number of the scanner beside what was predicted for it. */
+export interface ComparedReading {
+  /** Of a predicted range the end that lies nearer, or what was read where it lies inside. */
+  readonly predicted: number;
+  readonly read: number;
+  /** Read over predicted. */
+  readonly ratio: number;
+}
+
+/** Readings of one series against what was predicted. */
+export interface ComparedReadings {
+  /** The preset's own, against the model alone. */
+  readonly before: { readonly timeS?: ComparedReading; readonly b1rmsUt?: ComparedReading };
+  /** As run, against the figures used; these scale from the readings before where there were any. */
+  readonly after: { readonly timeS?: ComparedReading; readonly b1rmsUt?: ComparedReading; readonly sarWkg?: ComparedReading };
+}
+
 /** What the scanner displayed, as typed by the operator. */
 export interface RecordedReading {
+  /** Absent where an earlier program did not keep them. */
+  readonly conditions?: ReadingConditions;
   readonly timeS?: number;
   readonly b1rmsUt?: number;
   readonly sarWkg?: number;
@@ -79,6 +108,8 @@ export interface CrossedMustKeep {
 /** One series of a finished session. */
 export interface RecordedSeries {
   readonly id: string;
+  /** Its class as `family/acquisition`; absent where an earlier program did not say it. */
+  readonly class?: string;
   readonly outcome: SeriesOutcome;
   /** A code of the table of reasons, or free text; blank prints as NO REASON GIVEN. */
   readonly reason: string;
@@ -86,7 +117,12 @@ export interface RecordedSeries {
   readonly planned: RecordedValues;
   readonly used: RecordedValues;
   readonly crossed: readonly CrossedMustKeep[];
-  readonly readings: { readonly before: RecordedReading | null; readonly after: RecordedReading | null };
+  readonly readings: {
+    readonly before: RecordedReading | null;
+    readonly after: RecordedReading | null;
+    /** Left out where nothing was read that can be compared. */
+    readonly compared?: ComparedReadings;
+  };
 }
 
 /**

@@ -74,11 +74,15 @@ const anyReading = fc.option(
       operatingMode: anyText,
       changedByScanner: anyText,
       notModelled: fc.array(anyText, { maxLength: 2 }),
+      conditions: fc.record({ coil: textOrNull, fieldT: anyNumber, frontBackMm: numberOrNull, leftRightMm: numberOrNull }),
     },
     { requiredKeys: [], noNullPrototype: true },
   ),
   { nil: null },
 );
+
+const anyCompared = fc.record({ predicted: anyNumber, read: anyNumber, ratio: anyNumber });
+const sparse = { requiredKeys: [], noNullPrototype: true };
 
 /** Any record the types allow, with any text and any number in it. */
 export const anyRecord: fc.Arbitrary<SessionRecord> = fc.record({
@@ -114,13 +118,24 @@ export const anyRecord: fc.Arbitrary<SessionRecord> = fc.record({
   series: fc.array(
     fc.record({
       id: anyText,
+      class: anyText,
       outcome: keyOf(outcomeWords),
       reason: anyText,
       quality: fc.option(keyOf(qualityWords), { nil: null }),
       planned: anyValues,
       used: anyValues,
       crossed: fc.array(fc.record({ rule: anyText, role: textOrNull }), { maxLength: 2 }),
-      readings: fc.record({ before: anyReading, after: anyReading }),
+      readings: fc.record(
+        {
+          before: anyReading,
+          after: anyReading,
+          compared: fc.record({
+            before: fc.record({ timeS: anyCompared, b1rmsUt: anyCompared }, sparse),
+            after: fc.record({ timeS: anyCompared, b1rmsUt: anyCompared, sarWkg: anyCompared }, sparse),
+          }),
+        },
+        { requiredKeys: ['before', 'after'], noNullPrototype: true },
+      ),
     }),
     { maxLength: 3 },
   ),

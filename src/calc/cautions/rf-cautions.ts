@@ -38,7 +38,10 @@ export function rfCautions(model: SeriesModel, baseline: Baseline, readings: Rea
   if (below(before.parallelFactorPhase, p.parallelFactorPhase) || below(before.parallelFactorSlice, p.parallelFactorSlice)) {
     add('rf-per-exposure', 'note', {}, () => 'acceleration shortens the RF exposure but does not lower B1+rms');
   }
-  if (readings.timeS !== undefined || readings.b1rmsUt !== undefined || readings.sarWkg !== undefined) readingCaution(readings, add);
+  if (readings.timeS !== undefined || readings.b1rmsUt !== undefined || readings.sarWkg !== undefined) {
+    readingCaution(readings, add);
+    fieldCaution(model, baseline, add);
+  }
   if (readings.b1rmsUt !== undefined || readings.sarWkg !== undefined) {
     add(
       'read-scanner-again',
@@ -47,6 +50,22 @@ export function rfCautions(model: SeriesModel, baseline: Baseline, readings: Rea
       () => "read the scanner's displayed value again before starting; the implant's label and local rules decide",
     );
   }
+}
+
+/** A magnet a few percent off its name is still one of that field. Common practice, no source. */
+const sameField = 0.05;
+
+/** What was read at one field says nothing about another. */
+function fieldCaution(model: SeriesModel, baseline: Baseline, add: AddCaution): void {
+  const [fromT, toT] = [baseline.model.scanner.fieldT, model.scanner.fieldT];
+  if (Math.abs(toT - fromT) <= sameField * fromT) return;
+  add(
+    'reading-no-longer-holds',
+    'caution',
+    { fromT, toT },
+    ({ fromT: from, toT: to }) =>
+      `a reading of the preset at ${inWords(from, 3)} T no longer holds at ${inWords(to, 3)} T: read time, B1+rms and SAR on that scanner`,
+  );
 }
 
 function readingCaution(readings: Readings, add: AddCaution): void {

@@ -74,4 +74,13 @@ describe('scanner readings', () => {
     expect(edit(train(), {}, { readings: { timeS: 60 } }).codes).not.toContain('read-scanner-again');
     expect(edit(train(), {}, { readings: { timeS: 60 } }).codes).toContain('reading-used');
   });
+
+  it('say that they no longer hold at another field, and hold on a magnet a few percent off its name', () => {
+    const at = (fieldT: number) => edit(train(), {}, { onto: plainScanner(fieldT), readings: { timeS: 60 } });
+    expect(at(1.5).codes).not.toContain('reading-no-longer-holds');
+    expect(at(1.494).codes).not.toContain('reading-no-longer-holds');
+    expect(cautionOf(at(3), 'reading-no-longer-holds')).toMatchObject({ level: 'caution', numbers: { fromT: 1.5, toT: 3 } });
+    expect(cautionOf(at(3), 'reading-no-longer-holds')?.text).toContain('at 1.5 T no longer holds at 3 T');
+    expect(edit(train(), {}, { onto: plainScanner(3) }).codes).not.toContain('reading-no-longer-holds');
+  });
 });

@@ -1,10 +1,10 @@
-import { type ClassKey, classRow } from '../calc/classes.js';
+import type { ClassKey } from '../calc/classes.js';
 import { type ParameterKey, parameterRow } from '../calc/parameters.js';
 import { fillDefaults } from '../calc/series.js';
 import { givenOfHeaders, lackingFor, type SeriesToDraft } from '../headers/draft-of-headers.js';
 import type { ReadValue } from '../headers/found.js';
+import { extraWords, seriesTitle } from '../session/header-words.js';
 import { sayParameter } from '../session/say-parameter.js';
-import { sayTime } from '../session/say-time.js';
 import { textTable } from '../session/text-table.js';
 import { wrapText } from '../session/wrap-text.js';
 import { cleanText } from '../study/clean-text.js';
@@ -42,13 +42,6 @@ function listed(text: string, page: Page): string[] {
 function seriesLines(one: SeriesToDraft, isPicked: boolean, page: Page): string[] {
   const { read, typed } = one;
   const { key, reason } = read.decision;
-  const title = [
-    `${read.id}: ${key === null ? 'class not decided' : classRow(key).label}`,
-    typeof read.plane.value === 'string' ? read.plane.value : 'plane not stated',
-    typeof read.fieldT.value === 'number' ? `${read.fieldT.value} T` : 'field not stated',
-    read.source === 'sidecar' ? 'a sidecar' : `${read.images} ${read.images === 1 ? 'image' : 'images'}`,
-    ...(read.seriesNumber === null ? [] : [`series number ${read.seriesNumber}`]),
-  ].join(', ');
   const known = read.values.filter(({ key: name, origin }) => origin !== 'missing' || typed[name] !== undefined);
   const rows = known.map((value) => [parameterRow(value.key).label, valueWords(value, typed[value.key]), originWords(value, typed)]);
   const columns = [
@@ -58,33 +51,14 @@ function seriesLines(one: SeriesToDraft, isPicked: boolean, page: Page): string[
   ] as const;
   const why = known.filter(({ key: name, origin }) => (origin === 'derived' || origin === 'guess') && typed[name] === undefined);
   return [
-    ...wrapText(title, page.width).map((line) => page.emphasis('heading', line)),
+    ...wrapText(seriesTitle(read), page.width).map((line) => page.emphasis('heading', line)),
     ...listed(`class: ${reason}`, page),
     ...(read.isDerived && !isPicked ? listed('made from other images: not in the draft unless it is picked (--series)', page) : []),
-    ...listed(extraWords(one), page),
+    ...listed(extraWords(read), page),
     ...textTable(columns, rows, page.reader),
     ...(why.length === 0 ? [] : ['Why', ...why.flatMap(({ key: name, words }) => listed(`${parameterRow(name).label}: ${words}`, page))]),
     ...missingLines(one, key, page),
   ];
-}
-
-/** Coverage, echoes, b-values and duration: what a series shows besides its parameters. */
-function extraWords({ read }: SeriesToDraft): string {
-  const parts = [
-    ...(read.coverageMm === null ? [] : [`coverage ${read.coverageMm} mm`]),
-    ...(read.echoTimesMs.length > 1 ? [`${read.echoTimesMs.length} echo times (${read.echoTimesMs.slice(0, 8).join(', ')} ms)`] : []),
-    ...(read.bValues.length > 0 ? [`b ${read.bValues.slice(0, 12).join(', ')} s/mm2`] : []),
-    ...(read.durationS === null ? [] : [`acquired in ${sayTime(read.durationS)}${timeWords(read.durationS, read.computedS)}`]),
-  ];
-  return parts.length === 0 ? 'neither coverage nor duration is stated' : parts.join('; ');
-}
-
-/** Real series run up to 6 % over the rules; further off, something that time hangs on is not as read. */
-function timeWords(durationS: number, computedS: number | null): string {
-  if (computedS === null) return '';
-  const ratio = computedS / durationS;
-  const agrees = ratio > 0.9 && ratio < 1.03;
-  return `, these values give ${sayTime(computedS)}${agrees ? '' : ': something that time hangs on is missing or not as read'}`;
 }
 
 function valueWords({ key, value }: ReadValue, own: unknown): string {

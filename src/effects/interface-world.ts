@@ -13,6 +13,9 @@ import type { SearchRunner } from './run-search.js';
 /** Everything outside that the effects of the interface touch. Tests put plain objects in its place. */
 export interface InterfaceWorld {
   readonly disk: Disk;
+  /** What a typed path begins at: `~` at the home, any other that does not begin at the root where the program was started. */
+  readonly homeFolder: string;
+  readonly workingFolder: string;
   readonly folders: Folders;
   readonly presetFolders: readonly PresetFolder[];
   readonly settings: Settings;

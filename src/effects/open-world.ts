@@ -13,6 +13,7 @@ import { defaultSettings, fileModeOf } from '../store/settings.js';
 import { readSettings } from '../store/settings-file.js';
 import type { ScannerFile } from '../study/scanner-file.js';
 import { toolVersion } from '../study/tool-version.js';
+import { stopHeaders } from './header-reading.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { loadDrafts, loadPresets } from './load-presets.js';
 import { stopReading } from './record-reading.js';
@@ -75,6 +76,8 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
   const pictures = pictureRunner(() => openPictureWorker(choices.programUrl));
   const world: InterfaceWorld = {
     disk,
+    homeFolder,
+    workingFolder,
     folders,
     presetFolders: presetFolders(folders.sitePresetsFolder, folders.ownPresetsFolder, choices.shippedPresets),
     settings,
@@ -126,6 +129,7 @@ export async function openWorld(choices: WorldChoices): Promise<OpenWorld> {
     leave: async (draft) => {
       searches.close();
       stopReading(world);
+      stopHeaders(world);
       pictures.close();
       clearInterval(beat);
       if (draft !== null) saver.change(draft);

@@ -2,6 +2,7 @@ import type { Answer, Effect } from '../session/message.js';
 import { carryPreset } from './carry-preset.js';
 import { claimDraft } from './claim-draft.js';
 import { drawPicture } from './draw-picture.js';
+import { stopHeaders } from './header-reading.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { listRecords } from './list-records.js';
 import { loadPresets } from './load-presets.js';
@@ -67,6 +68,18 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return readPastRecord(world, effect);
     case 'stop-reading':
       stopReading(world);
+      return null;
+    case 'read-headers': {
+      // What parses objects is loaded when somebody reads a folder, and not before.
+      const { readFolder } = await import('./read-folder.js');
+      return readFolder(world, effect);
+    }
+    case 'class-headers': {
+      const { classHeaders } = await import('./read-folder.js');
+      return classHeaders(world, effect);
+    }
+    case 'stop-headers':
+      stopHeaders(world);
       return null;
     case 'quit':
       return null;

@@ -6,8 +6,8 @@ import { sayTime } from '../session/say-time.js';
 import { isShelfScreen, shelfHeadline } from '../session/shelf-headline.js';
 import type { ScreenName, State } from '../session/state.js';
 import { type Headline, seriesHeadline, sessionHeadline } from '../session/verdicts.js';
-import { textWidth } from '../terminal/text-width.js';
-import { fitLine, type Line, lineWidth, type Span, type Style, span } from './line.js';
+import { fitText, textWidth } from '../terminal/text-width.js';
+import { fitLine, type Line, lineWidth, type Span, type Style, span, wrap } from './line.js';
 import type { Look } from './look.js';
 
 const headlineStyle: Readonly<Record<string, Style>> = { OVER: 'trouble', 'TOO CLOSE': 'attention', FITS: 'bold' };
@@ -60,7 +60,12 @@ export function noticeLine(state: State, look: Look, columns: number, idle: Line
   if (entry !== null) {
     const problem = notice === null ? [] : [span(`  ${notice.words}`, notice.level === 'trouble' ? 'trouble' : 'quiet')];
     return fitLine(
-      [span(entry.ask === null ? 'type: ' : 'reading: '), span(entry.text), { text: ' ', style: 'plain', cursor: true }, ...problem],
+      [
+        span(entry.ask === null ? 'type: ' : 'reading: '),
+        span(endOf(entry.text, columns - 12, look)),
+        { text: ' ', style: 'plain', cursor: true },
+        ...problem,
+      ],
       columns,
       look.glyphs.ellipsis,
     );
@@ -68,6 +73,19 @@ export function noticeLine(state: State, look: Look, columns: number, idle: Line
   if (notice !== null)
     return fitLine([span(notice.words, notice.level === 'trouble' ? 'trouble' : 'plain')], columns, look.glyphs.ellipsis);
   return fitLine(idle, columns, look.glyphs.ellipsis);
+}
+
+/** The end of a long text, where the hand is. */
+function endOf(text: string, columns: number, { glyphs }: Look): string {
+  if (textWidth(text) <= columns) return text;
+  const backward = fitText([...text].reverse().join(''), columns, glyphs.ellipsis);
+  return [...backward].reverse().join('');
+}
+
+/** What was said and has no room on its line, whole; nothing where it has. While something is typed there is little room. */
+export function longNotice({ entry, notice }: State, columns: number): Line[] {
+  if (notice === null || (entry === null && textWidth(notice.words) <= columns)) return [];
+  return wrap(notice.words, columns).map((words) => [span(words, notice.level === 'trouble' ? 'trouble' : 'bold')]);
 }
 
 /** What must not be pushed out of the bottom line by the others; equals keep the order of the map. */
@@ -93,6 +111,8 @@ function rank(brief: string): number {
       'revisions',
       'show',
       'report',
+      'review',
+      'pick',
     ].includes(brief)
   )
     return 1;

@@ -1,4 +1,5 @@
 import { formRow } from '../session/hands/form-commands.js';
+import { headerHint } from '../session/header-rows.js';
 import { presetRow } from '../session/preset-rows.js';
 import { releaseRow } from '../session/release-form.js';
 import type { State } from '../session/state.js';
@@ -22,6 +23,8 @@ export function idleWords(state: State): string {
   if (screen === 'release') return releaseRow(state)?.help ?? '';
   if (screen === 'revisions') return 'A released revision is never changed: d begins a draft of it';
   if (screen === 'report') return 'Small counts are said to be small; a suggestion is a variant to review';
+  if (screen === 'headers') return 'Read from headers, which say what a scanner wrote; a person reviews every value';
+  if (screen === 'header-values') return headerHint(state);
   if (screen === 'presets') return presetRow(state)?.study.title ?? '';
-  return screen === 'start' ? 'Presets are starting values; review before use.' : '';
+  return screen === 'start' ? 'Presets are starting values; review before use. / reads headers of a folder' : '';
 }

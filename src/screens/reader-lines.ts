@@ -27,6 +27,7 @@ import { shownWays, wayHere } from '../session/ways.js';
 import { otherMovesInWords, searchNotes, searchStatus, verdictWith, wayParagraphs, wayTitle, wayVerdict } from '../session/ways-words.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { frontPoint } from './front-screen.js';
+import { headerItems } from './header-items.js';
 import { idleWords } from './idle-words.js';
 import { fill, type Line, line, lineText, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
@@ -81,6 +82,9 @@ function itemsOf(state: State, look: Look): readonly Item[] {
     case 'past-record':
     case 'report':
       return shelfItems(state);
+    case 'headers':
+    case 'header-values':
+      return headerItems(state);
     case 'carry':
       return carryItems(state);
     case 'scanner':

@@ -5,6 +5,8 @@ import { chartScreen } from './chart-screen.js';
 import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { keepScreen, patientScreen, readingsScreen, recordScreen } from './form-screen.js';
 import { frontScreen } from './front-screen.js';
+import { headerValuesScreen } from './header-values-screen.js';
+import { headersScreen } from './headers-screen.js';
 import { idleWords } from './idle-words.js';
 import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
@@ -51,6 +53,8 @@ const bodies: Readonly<Record<ScreenName, Body>> = {
   records: recordsScreen,
   'past-record': shelfTextScreen,
   report: shelfTextScreen,
+  headers: headersScreen,
+  'header-values': headerValuesScreen,
   help: helpScreen,
 };
 

@@ -74,5 +74,7 @@ export const screenWords: Readonly<Record<ScreenName, string>> = {
   records: 'records',
   'past-record': 'one record',
   report: 'report',
+  headers: 'read headers',
+  'header-values': 'what was read, value by value',
   help: 'help',
 };

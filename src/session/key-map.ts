@@ -12,6 +12,7 @@ import {
 import { moveCursor, openChart, takeValue, turnFigure } from './hands/chart-commands.js';
 import { back, contrastGiven, quit, redo, show, undo } from './hands/common-commands.js';
 import { clearRow, enterRow, moveInForm, turnRow, typeRow } from './hands/form-commands.js';
+import { showHeaders } from './hands/header-commands.js';
 import {
   anotherSession,
   lockPlace,
@@ -58,6 +59,7 @@ import {
   takeWay,
   turnFront,
 } from './hands/ways-commands.js';
+import { headerKeys } from './header-keys.js';
 import { type KeyRow, row, upAndDown } from './key-row.js';
 import type { KeyPress } from './message.js';
 import { shelfKeys } from './shelf-keys.js';
@@ -141,6 +143,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     row('escape', 'Esc', 'leave', 'Forgets what was typed; with nothing typed, leaves.', clearOrLeave),
     row('right', 'Right', 'presets', 'The presets: revisions, comparing, drafts, releasing.', showPresets),
     row('left', 'Left', 'records', 'The records: what was used, and the report.', showRecords),
+    row('/', '/', 'headers', 'Reads the headers of a folder: what a scanner really did becomes a draft preset.', showHeaders),
     row('?', '?', 'help', 'Help for this screen.', show('help')),
   ],
   patient: [
@@ -277,6 +280,7 @@ export const keyMap: Readonly<Record<ScreenName, readonly KeyRow[]>> = {
     ...everywhere,
   ],
   ...shelfKeys,
+  ...headerKeys,
   help: [...upAndDown(scrollText, 'the text'), ...everywhere],
 };
 

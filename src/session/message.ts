@@ -9,6 +9,7 @@ import type { ScannerFile } from '../study/scanner-file.js';
 import type { SiteRules } from '../study/site-rules.js';
 import type { MustKeep, Study } from '../study/study.js';
 import type { Draft } from './draft.js';
+import type { HeaderAnswer, HeaderEffect } from './header-view.js';
 import type { ShelfAnswer, ShelfEffect } from './shelf-messages.js';
 import type { WaysAnswer } from './ways.js';
 
@@ -43,7 +44,8 @@ export type Answer =
   | { readonly kind: 'plan'; readonly plan: Budget }
   | { readonly kind: 'pictures'; readonly pictures: DrawnPictures }
   | { readonly kind: 'carried'; readonly carried: StudyCarry }
-  | ShelfAnswer;
+  | ShelfAnswer
+  | HeaderAnswer;
 
 /** Everything that can happen to the interface. */
 export type Message =
@@ -58,6 +60,8 @@ export type Message =
   | { readonly kind: 'note'; readonly words: string }
   /** How far a search or a reading of records is, 0 to 1. */
   | { readonly kind: 'progress'; readonly ask: number; readonly share: number }
+  /** How many files a reading of headers went through. */
+  | { readonly kind: 'counted'; readonly ask: number; readonly files: number }
   | { readonly kind: 'answer'; readonly ask: number; readonly answer: Answer };
 
 /** What the interface asks of the world outside. Asks carry a number; only the answer to the newest of its kind counts. */
@@ -77,6 +81,7 @@ export type Effect =
   /** Ends the search or plan that runs; a search answers with what it has. */
   | { readonly kind: 'stop-search' }
   | ShelfEffect
+  | HeaderEffect
   | { readonly kind: 'quit' };
 
 /** The name, unit and present value that an expression may use. */

@@ -51,7 +51,7 @@ const innerLabels: Readonly<Record<string, string>> = {
 const fieldsOfClass = new Map<string, readonly SeriesField[]>();
 
 /** Every field of a series, grouped as one thinks, in the order of the table. */
-export function seriesFields(series: StudySeries, parameters: Parameters): readonly SeriesField[] {
+export function seriesFields(series: Pick<StudySeries, 'family' | 'acquisition'>, parameters: Parameters): readonly SeriesField[] {
   const diffusion = parameters.diffusion !== undefined;
   const paced = parameters.pacing.kind;
   const key = `${classOf(series)} ${diffusion} ${paced}`;

@@ -1,9 +1,10 @@
+import { headersHeadline } from './header-words.js';
 import { presetRows, revisionRow } from './preset-rows.js';
 import { recordsHeadline } from './record-rows.js';
 import { releaseHeadline } from './release-form.js';
 import type { ScreenName, State } from './state.js';
 
-/** The screens of presets and records. */
+/** The screens of what lies outside a session: presets, records, headers. */
 export const shelfScreens = [
   'presets',
   'revisions',
@@ -12,16 +13,19 @@ export const shelfScreens = [
   'records',
   'past-record',
   'report',
+  'headers',
+  'header-values',
 ] as const satisfies readonly ScreenName[];
 
 export function isShelfScreen(screen: ScreenName): screen is (typeof shelfScreens)[number] {
   return (shelfScreens as readonly string[]).includes(screen);
 }
 
-/** The first line of a screen of presets or records: what it shows, in words. */
+/** The first line of a screen of presets, records or headers: what it shows, in words. */
 export function shelfHeadline(state: State): string {
   const { screen } = state.place;
   const { revisions, compared, record, report } = state.shelf;
+  if (screen === 'headers' || screen === 'header-values') return headersHeadline(state);
   if (screen === 'release') return releaseHeadline(state);
   if (screen === 'records') return recordsHeadline(state);
   if (screen === 'presets') {

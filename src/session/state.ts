@@ -5,6 +5,7 @@ import type { ScannerFile } from '../study/scanner-file.js';
 import { noSiteRules, type SiteRules } from '../study/site-rules.js';
 import type { CarryView } from './carry.js';
 import type { ScannerChoice } from './equipment.js';
+import { emptyHeaderView, type HeaderAsk, type HeaderView } from './header-view.js';
 import type { DraftChoice, KeyPress, PresetChoice } from './message.js';
 import { type PictureEyes, type PictureView, plainEyes } from './picture-eyes.js';
 import type { Opened, Session } from './session.js';
@@ -36,6 +37,8 @@ export const screenNames = [
   'records',
   'past-record',
   'report',
+  'headers',
+  'header-values',
   'help',
 ] as const;
 export type ScreenName = (typeof screenNames)[number];
@@ -126,7 +129,19 @@ export interface State {
   readonly open: Readonly<
     Partial<
       Record<
-        'record' | 'expression' | 'rules' | 'preset' | 'page' | 'draft' | 'picture' | 'search' | 'plan' | 'carry' | 'carryRules' | ShelfAsk,
+        | 'record'
+        | 'expression'
+        | 'rules'
+        | 'preset'
+        | 'page'
+        | 'draft'
+        | 'picture'
+        | 'search'
+        | 'plan'
+        | 'carry'
+        | 'carryRules'
+        | ShelfAsk
+        | HeaderAsk,
         number
       >
     >
@@ -154,6 +169,8 @@ export interface State {
   readonly carry: CarryView | null;
   /** Presets and records, as their screens show them. */
   readonly shelf: Shelf;
+  /** Headers that were read, as their screens show them. */
+  readonly headers: HeaderView;
 }
 
 export interface Defaults {
@@ -220,5 +237,6 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     pictureEyes: plainEyes,
     carry: null,
     shelf: emptyShelf,
+    headers: emptyHeaderView,
   };
 }

@@ -3,6 +3,8 @@ import { type Change, only, say } from './change.js';
 import { type Draft, draftLayout, draftSteps } from './draft.js';
 import { takeCarryAnswer } from './hands/carry-commands.js';
 import { takeExpression, typeKey } from './hands/entry-commands.js';
+import { takeHeaders } from './hands/header-commands.js';
+import { takeHeaderClass } from './hands/header-value-commands.js';
 import { judgeAgain, openDraft } from './hands/start-commands.js';
 import { keepDrawing } from './keep-drawing.js';
 import { keepSearching } from './keep-searching.js';
@@ -76,6 +78,11 @@ function carryOut(state: State, message: Message): Change {
       );
     case 'progress':
       return only(withReadingShare(withShare(state, message.ask, message.share), message.ask, message.share));
+    case 'counted': {
+      const { headers, open } = state;
+      if (open.headers !== message.ask || headers.reading === null) return only(state);
+      return only({ ...state, headers: { ...headers, reading: { files: message.files } } });
+    }
     case 'answer':
       return takeAnswer(state, message.ask, message.answer);
   }
@@ -92,7 +99,7 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
   if (kind === undefined) return only(state);
   const { [kind]: _answered, ...open } = state.open;
   const next = { ...state, open };
-  const failed = answer.kind === 'failed' ? answer.problems.map(({ message, hint }) => `${message} ${hint}`).join(' ') : null;
+  const failed = answer.kind === 'failed' ? answer.problems.map(({ message, hint }) => `${message} ${hint}`.trim()).join(' ') : null;
   switch (kind) {
     case 'record':
       if (answer.kind !== 'done') return only(say({ ...next, recordFailed: true }, failed ?? 'The record was not saved', 'trouble'));
@@ -143,6 +150,10 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
     case 'one-record':
     case 'report':
       return takeShelfAnswer(next, kind, answer, failed);
+    case 'headers':
+      return only(takeHeaders(next, answer, failed));
+    case 'headerClass':
+      return only(takeHeaderClass(next, answer, failed));
     case 'preset':
     case 'page':
       return only(answer.kind === 'done' ? say(next, answer.words) : say(next, failed ?? 'Not saved', 'trouble'));

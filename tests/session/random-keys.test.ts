@@ -20,6 +20,7 @@ import { RecordCounts } from '../../src/study/record-report.js';
 import type { Study } from '../../src/study/study.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
 import { knownProblem, picturesOf } from './drawn-picture.js';
+import { headerAnswer } from './invented-headers.js';
 import { keyOf, presetChoice } from './invented-state.js';
 import { startWithScanners } from './shipped-scanners.js';
 
@@ -44,12 +45,13 @@ const keys = named.concat([...'abcdefghijklmnopqrstuvwxyz0123456789.-+=/*^()% ?:
 
 const look = { glyphs: asciiGlyphs, set: 'ascii', colourLevel: 0, reader: false } as const;
 
-/** Where somebody begins: in the running order, among the presets, or with a release that lacks its word alone. */
+/** Where somebody begins: in the running order, among the presets, with a release that lacks its word alone, or with a folder of headers. */
 const beginnings = [
   [],
   ['m', 'enter', 'enter', 'escape'],
   ['m', 'tab', 'tab', 'escape', 'enter'],
   ['enter', 'down', '+', 'm', 'enter', 'r', 'down', 'down', 'enter', 'paste physicist', 'enter', 'enter', 'paste short', 'enter'],
+  ['/', 'paste /exam', 'enter', 'down', 'enter'],
 ] as const;
 
 /** A step of somebody at the keys, of the clock, of the window; by name, so that a failure can be read. */
@@ -177,7 +179,7 @@ function answerTo(effect: Effect, well: boolean): Message | null {
   if (effect.kind === 'plan') return { kind: 'answer', ask, answer: { kind: 'plan', plan: planFor(effect.problem) } };
   if (effect.kind === 'picture') return { kind: 'answer', ask, answer: { kind: 'pictures', pictures: picturesOf(knownProblem().problem) } };
   if (effect.kind === 'carry') return { kind: 'answer', ask, answer: { kind: 'carried', carried: carriedFor(effect.problem) } };
-  const shelf = shelfAnswer(effect);
+  const shelf = headerAnswer(effect) ?? shelfAnswer(effect);
   return { kind: 'answer', ask, answer: shelf ?? { kind: 'done', words: 'Saved' } };
 }
 
@@ -225,6 +227,11 @@ function faults(state: State): string[] {
   const readings = [open.list, open['one-record'], open.report].filter((ask) => ask !== undefined);
   must(readings.length <= 1, 'one reading of records at a time');
   must(open.release === undefined || state.shelf.release !== null, 'what is being released is known');
+  must((open.headers !== undefined) === (state.headers.reading !== null), 'headers are read while they are waited for');
+  must(
+    state.headers.picked.every((id) => state.headers.found?.series.some((one) => one.id === id)),
+    'what is picked was read',
+  );
   must(!place.back.includes(place.screen), 'back leads elsewhere');
   const { text } = headlineOf(state);
   must(text !== '' && !/NaN|undefined|Infinity|null/.test(text), `the verdict is words: ${text}`);
@@ -252,7 +259,7 @@ describe('update under random keys', () => {
               if (answer !== null) state = update(state, answer)[0];
             }
           };
-          send({ kind: 'key', key: keyOf('enter'), atMs: 1 });
+          if (beginning[0] !== '/') send({ kind: 'key', key: keyOf('enter'), atMs: 1 });
           for (const next of [...beginning, ...messages]) {
             send(messageOf(next, state));
             count += 1;

@@ -10,10 +10,13 @@ import type { Entry, State } from '../state.js';
 import { snapValue } from '../step-value.js';
 import { takeCarryField } from './carry-commands.js';
 import { commitRow } from './form-commands.js';
+import { commitPath } from './header-commands.js';
+import { commitHeaderValue, takeHeaderExpression } from './header-value-commands.js';
 import { commitRelease } from './release-commands.js';
 import { fieldsHere } from './series-commands.js';
 
-const longestEntry = 160;
+/** A path may be longer than any value. */
+const longestEntry = ({ field }: Entry) => (field === 'path' ? 4096 : 160);
 
 /** A key while something is typed. */
 export function typeKey(state: State, entry: Entry, key: KeyPress): Change {
@@ -26,7 +29,7 @@ export function typeKey(state: State, entry: Entry, key: KeyPress): Change {
     return only({ ...state, notice: null, entry: { ...entry, text } });
   }
   if (key.name !== 'text' && key.name !== 'paste') return only(state);
-  const text = (entry.text + (key.text ?? '').replace(/[\p{Cc}\p{Cf}]+/gu, ' ')).slice(0, longestEntry);
+  const text = (entry.text + (key.text ?? '').replace(/[\p{Cc}\p{Cf}]+/gu, ' ')).slice(0, longestEntry(entry));
   return only({ ...state, notice: null, entry: { ...entry, text } });
 }
 
@@ -34,6 +37,8 @@ export function typeKey(state: State, entry: Entry, key: KeyPress): Change {
 function commit(state: State, entry: Entry): Change {
   if (state.place.screen === 'release') return commitRelease(state, entry.field, entry.text);
   if (state.place.screen === 'carry') return only(takeCarryField(state, entry.text));
+  if (state.place.screen === 'headers') return commitPath(state, entry.text);
+  if (state.place.screen === 'header-values') return commitHeaderValue(state, entry);
   if (state.place.screen !== 'series') return only(commitRow(state, entry.field, entry.text));
   const field = fieldsHere(state).find(({ path }) => path === entry.field);
   if (field === undefined || entry.text.trim() === '') return only({ ...state, entry: null });
@@ -60,6 +65,7 @@ function isExpression(text: string): boolean {
 
 /** The number that an expression gave. */
 export function takeExpression(state: State, entry: Entry, value: number): State {
+  if (state.place.screen === 'header-values') return takeHeaderExpression(state, entry, value);
   const field = fieldsHere(state).find(({ path }) => path === entry.field);
   if (field === undefined) return { ...state, entry: null };
   const read = readSetValues([`${field.path}=${plainNumber(snapValue(field, value))}`], {

@@ -38,3 +38,9 @@ export function fileTrouble(trouble: FileTrouble, path: string): StoreProblem {
   const { code, says, hint } = troubles[trouble];
   return storeProblem(code, 65, path, `${cleanText(path)} ${says}.`, hint);
 }
+
+/** What is wrong with files of one kind, without any name: the name of a file may be that of a person. */
+export function namelessTrouble(code: string, files: number): string {
+  const says = Object.values(troubles).find((trouble) => trouble.code === code)?.says ?? `cannot be read (${code})`;
+  return `${files === 1 ? '1 file' : `${files} files, each`} ${says}`;
+}

@@ -11,6 +11,10 @@ export interface HeaderReceiver {
   readonly problem: (problem: StoreProblem) => void;
   /** After each file: how many were looked at so far. */
   readonly progress?: (files: number) => void;
+  /** True once nobody wants to go on: what is being read is finished, no more is begun. */
+  readonly isStopped?: () => boolean;
+  /** Between two files, and between some images of one: gives others their turn where that is due. */
+  readonly pause?: () => Promise<void> | null;
 }
 
 /** What was looked at. */
@@ -24,6 +28,9 @@ export interface HeadersRead {
 
 /** Files that are being read while one is gone through: the disk works meanwhile. */
 const ahead = 4;
+
+/** Images of one file that are taken without a pause. */
+const imagesAtOnce = 50;
 
 /**
  * Reads the headers of files and folders and gives them away one by one, in the order of the names: nothing is kept, so that memory
@@ -44,15 +51,22 @@ export async function readHeaders(disk: Disk, paths: readonly string[], receiver
       const result = await read;
       if (result.kind === 'headers') {
         counts.read += 1;
-        for (const header of result.headers) receiver.header(header);
+        let images = 0;
+        for (const header of result.headers) {
+          receiver.header(header);
+          images += 1;
+          if (images % imagesAtOnce === 0) await receiver.pause?.();
+        }
         if (result.problem !== null) receiver.problem(result.problem);
       } else if (result.kind === 'problem' || found.named) receiver.problem(result.problem);
       else counts.passedOver += 1;
       receiver.progress?.(counts.files);
+      await receiver.pause?.();
     }
     if (buffer !== null) buffers.push(buffer);
   };
   for await (const found of walkFiles(disk, paths)) {
+    if (receiver.isStopped?.() === true) break;
     if (found.kind === 'problem') waiting.push({ found, read: null, buffer: null });
     else {
       while (buffers.length === 0) await finishOne();

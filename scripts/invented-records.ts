@@ -95,6 +95,7 @@ export function auditRecords(study: Study = shippedStudy('liver-3t')): SessionRe
   const use = (set: GivenParameters, more: Partial<RecordedSeries>): RecordedSeries => ({
     ...plain,
     id: dynamic.id,
+    class: classOf(dynamic),
     ...rewritten(study, dynamic, set),
     ...more,
   });
@@ -145,6 +146,7 @@ export function* inventedRecords(count: number, seed = 1, study: Study = shipped
       ({ set, ...more }): RecordedSeries => ({
         ...plain,
         id: series.id,
+        class: classOf(series),
         ...rewritten(study, series, set),
         ...more,
       }),

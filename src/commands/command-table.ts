@@ -323,11 +323,16 @@ export const commandTable: readonly CommandRow[] = [
     arguments: [{ name: 'FILE', required: false, repeats: true }],
     options: [
       ...filterOptions,
+      { name: 'readings', value: null, help: "only the scanner's readings against predictions, by scanner and class" },
       { name: 'html', value: 'FILE', help: 'write the report as one page with plots as well' },
       { name: 'save-drafts', value: null, help: 'save suggested variants as draft presets, for review' },
       jsonOption,
     ],
-    examples: ['holdfast records report --from 2026-01-01', 'holdfast records report scanner-a.jsonl scanner-b.jsonl --html report.html'],
+    examples: [
+      'holdfast records report --from 2026-01-01',
+      'holdfast records report --readings',
+      'holdfast records report scanner-a.jsonl scanner-b.jsonl --html report.html',
+    ],
     load: async () => (await import('./records-report.js')).runRecordsReport,
   },
   {

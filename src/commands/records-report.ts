@@ -21,6 +21,7 @@ import { type CountedRecords, countRecords } from './records-counted.js';
  * `--save-drafts` suggestions become draft presets of this user, and nothing else ever comes of them.
  */
 export async function runRecordsReport(request: CommandRequest, io: CommandIo): Promise<ExitCode> {
+  if (request.has('readings')) return (await import('./records-readings.js')).runRecordsReadings(request, io);
   const counted = await countRecords(request, io);
   if (!counted.ok) return complain(counted, io);
   const page = pageOf(request, io);

@@ -50,8 +50,8 @@ export class StepCounts {
 
   /** Null where nothing was counted. */
   spread(): Spread | null {
-    const values = this.values();
     if (this.total === 0) return null;
+    const values = this.values();
     return {
       count: this.total,
       least: values[0]!.value,
@@ -60,6 +60,11 @@ export class StepCounts {
       highQuartile: quantile(values, this.total, 0.75),
       most: values.at(-1)!.value,
     };
+  }
+
+  /** Quantile, linear between neighbours; null where nothing was counted. */
+  quantile(share: number): number | null {
+    return this.total === 0 ? null : quantile(this.values(), this.total, share);
   }
 
   private widen(): void {

@@ -28,43 +28,55 @@ export type PredictionReport = Readonly<Record<PredictedQuantity, ErrorReport | 
 /** Errors are told apart to a thousandth. */
 const digits = 3;
 
+/** Errors of one quantity, counted, all and by month. Memory grows with neither. */
+export class ErrorCounts {
+  private readonly all = new StepCounts(digits);
+  private readonly months = new Map<string, StepCounts>();
+
+  /** What is no number is not counted. */
+  add(value: number | null, day: string | null): void {
+    if (value === null || !Number.isFinite(value)) return;
+    this.all.add(value);
+    if (day === null) return;
+    const month = day.slice(0, 7);
+    let counts = this.months.get(month);
+    if (counts === undefined) {
+      counts = new StepCounts(digits);
+      this.months.set(month, counts);
+    }
+    counts.add(value);
+  }
+
+  /** The error that nine in ten do not pass (type 7 of Hyndman and Fan); null where nothing was counted. */
+  ninthTenth(): number | null {
+    return this.all.quantile(0.9);
+  }
+
+  /** Null where nothing was counted. */
+  report(): ErrorReport | null {
+    const spread = this.all.spread();
+    return spread === null ? null : errorReport(spread, this.months);
+  }
+}
+
 /** Prediction errors of one series, counted. */
 export class PredictionCounts {
-  private readonly all = new Map<PredictedQuantity, StepCounts>();
-  private readonly months = new Map<PredictedQuantity, Map<string, StepCounts>>();
+  private readonly counts: Readonly<Record<PredictedQuantity, ErrorCounts>> = {
+    time: new ErrorCounts(),
+    b1rms: new ErrorCounts(),
+    sar: new ErrorCounts(),
+  };
 
   add(series: RecordedSeries, day: string | null): void {
     if (series.readings.after === null) return;
     const error = predictionError(series);
-    for (const quantity of predictedQuantities) {
-      const value = error[quantity];
-      if (value === null || !Number.isFinite(value)) continue;
-      countsIn(this.all, quantity).add(value);
-      if (day === null) continue;
-      let months = this.months.get(quantity);
-      if (months === undefined) {
-        months = new Map();
-        this.months.set(quantity, months);
-      }
-      countsIn(months, day.slice(0, 7)).add(value);
-    }
+    for (const quantity of predictedQuantities) this.counts[quantity].add(error[quantity], day);
   }
 
   report(): PredictionReport {
-    const of = (quantity: PredictedQuantity) => {
-      const spread = this.all.get(quantity)?.spread() ?? null;
-      return spread === null ? null : errorReport(spread, this.months.get(quantity) ?? new Map());
-    };
-    return { time: of('time'), b1rms: of('b1rms'), sar: of('sar') };
+    const { time, b1rms, sar } = this.counts;
+    return { time: time.report(), b1rms: b1rms.report(), sar: sar.report() };
   }
-}
-
-function countsIn<K>(map: Map<K, StepCounts>, key: K): StepCounts {
-  const known = map.get(key);
-  if (known !== undefined) return known;
-  const counts = new StepCounts(digits);
-  map.set(key, counts);
-  return counts;
 }
 
 function errorReport(spread: Spread, counted: ReadonlyMap<string, StepCounts>): ErrorReport {

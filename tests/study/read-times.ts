@@ -1,0 +1,24 @@
+import type { SessionRecord } from '../../src/study/record.js';
+import { inventedRecord, inventedSeries } from './records.js';
+
+/** Errors of twelve times in percent, six of January and six of March 2026, rising. Invented. */
+export const twelveErrors = [1, 2, 2.5, 3, 3.2, 3.3, 3.5, 4, 4, 4.5, 5, 6];
+
+/** A record of one series whose scan time of 10 s was read so many percent longer, with nothing read before. */
+export function readTime(percent: number, more: Partial<SessionRecord> = {}, series = 'spoiled-gradient-echo/3D'): SessionRecord {
+  const figures = { scanTimeS: 10, b1PlusRmsUt: 2 };
+  const values = { parameters: {}, figures };
+  const read = { before: null, after: { timeS: Number((10 * (1 + percent / 100)).toPrecision(12)) } };
+  return {
+    ...inventedRecord,
+    scanner: 'demo-3t',
+    reasons: [],
+    ...more,
+    series: [{ ...inventedSeries, class: series, reason: '', crossed: [], planned: values, used: values, readings: read }],
+  };
+}
+
+/** The twelve on one scanner. */
+export function twelveTimes(scanner = 'demo-3t'): SessionRecord[] {
+  return twelveErrors.map((percent, i) => readTime(percent, { scanner, day: `2026-0${i < 6 ? 1 : 3}-0${(i % 6) + 1}` }));
+}

@@ -1,5 +1,4 @@
 import { readFileSync } from 'node:fs';
-import { spoiledGradientEchoSignal } from '../src/calc/signal/spoiled-gradient-echo.js';
 import { Bests, bestsWithin } from '../src/search/bests.js';
 import { Pulse } from '../src/search/control.js';
 import { latticeSize } from '../src/search/lattice.js';
@@ -7,6 +6,7 @@ import { mostChanges, search } from '../src/search/search.js';
 import { tablesOf } from '../src/search/search-tables.js';
 import { settingOf } from '../src/search/setting.js';
 import { WholeLatticeSearch } from '../src/search/whole-lattice.js';
+import { bareSignal } from './bare-signal.js';
 import { type LatticeName, latticeOfSize } from './search-lattices.js';
 
 /** What searching one lattice took, in a process of its own. Times are of the processor, ms. */
@@ -38,29 +38,10 @@ function processMs(): number {
   return (user + system) / 1000;
 }
 
-/** Invented timings, angles and tissues, every one of them another: what stays the same in a loop is worked out once, and not timed. */
-const kinds = 4096;
-const spread = (low: number, high: number, step: number) =>
-  Float64Array.from({ length: kinds }, (_, i) => low + ((high - low) * ((i * step) % kinds)) / kinds);
-const repetitions = spread(3, 10, 1021);
-const echoes = spread(1, 3, 1669);
-const angles = spread(5, 20, 2113);
-const t1s = spread(500, 1500, 2741);
-const t2Stars = spread(10, 60, 3307);
-
 let sum = 0;
 
 function millionSignals(): void {
-  for (let i = 0; i < 1_000_000; i += 1) {
-    const k = i & (kinds - 1);
-    sum += spoiledGradientEchoSignal(
-      repetitions[k] as number,
-      echoes[k] as number,
-      angles[k] as number,
-      t1s[k] as number,
-      t2Stars[k] as number,
-    );
-  }
+  for (let i = 0; i < 1_000_000; i += 1) sum += bareSignal(i);
 }
 
 function timed(work: () => void): { readonly ownMs: number; readonly allMs: number } {

@@ -3,7 +3,7 @@ import { unknownBody } from '../../src/calc/body.js';
 import { echoAmplitude } from '../../src/calc/echo-train.js';
 import { evaluate } from '../../src/calc/evaluate.js';
 import { plainScanner } from '../../src/calc/scanner.js';
-import { spoiledGradientEchoSignal } from '../../src/calc/signal/spoiled-gradient-echo.js';
+import { bareSignal } from '../bare-signal.js';
 import { compareTimes, type Work } from '../compare-times.js';
 import { plainPhaseGraph } from '../plain-phase-graph.js';
 import { editedSeries, presetSeries } from '../preset-series.js';
@@ -26,10 +26,8 @@ function evaluation(
   return { work, echoes, refocusingAngleDeg, echoSpacingMs };
 }
 
-/** The bare signal equation, its timing and tissue changed at every call as an evaluation changes them. */
-const repetitionTimesMs = Float64Array.from({ length: 64 }, (_, i) => 3.5 + 0.1 * i);
+/** T1 of a plain phase-graph pass, another at every call. */
 const t1sMs = Float64Array.from({ length: 64 }, (_, i) => 800 + 20 * i);
-const bareSignal: Work = (turn) => spoiledGradientEchoSignal(repetitionTimesMs[turn & 63]!, 1.2, 10 + (turn & 7), t1sMs[turn & 63]!, 30);
 
 function trainless(preset: string, id: string, words: string): Row {
   return {

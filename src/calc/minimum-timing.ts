@@ -96,7 +96,18 @@ function crusherMs(geometry: Geometry, scanner: Scanner): number {
  */
 export function diffusionLobeMs(bSPerMm2: number, refocusingMs: number, scanner: Scanner): number {
   if (bSPerMm2 <= 0) return 0;
-  const wave = 2 * Math.PI * gammaBarMhzPerT * scanner.gradientMtPerM * 1e-3; // rad per ms per mm
+  const { gradientMtPerM } = scanner;
+  const last = lastLobe;
+  if (last.bSPerMm2 === bSPerMm2 && last.refocusingMs === refocusingMs && last.gradientMtPerM === gradientMtPerM) return last.lobeMs;
+  lastLobe = { bSPerMm2, refocusingMs, gradientMtPerM, lobeMs: rootOfLobeMs(bSPerMm2, refocusingMs, gradientMtPerM) };
+  return lastLobe.lobeMs;
+}
+
+/** The edits of a series seldom touch its b-values. */
+let lastLobe = { bSPerMm2: 0, refocusingMs: 0, gradientMtPerM: 0, lobeMs: 0 };
+
+function rootOfLobeMs(bSPerMm2: number, refocusingMs: number, gradientMtPerM: number): number {
+  const wave = 2 * Math.PI * gammaBarMhzPerT * gradientMtPerM * 1e-3; // rad per ms per mm
   const wanted = (bSPerMm2 * 1e3) / (wave * wave); // ms3
   // (2/3) d^3 + refocusing d^2 = wanted: either term alone gives too long a lobe, and from there Newton's steps only fall.
   let d = Math.min(Math.cbrt(1.5 * wanted), Math.sqrt(wanted / refocusingMs));

@@ -2,7 +2,7 @@ import type { ColourLevel } from '../terminal/colour-level.js';
 import { seriesColour, textColours } from '../terminal/colours.js';
 import type { Glyphs } from '../terminal/glyphs.js';
 import { cursorHere } from '../terminal/painter/cursor-mark.js';
-import type { Line, Style } from './line.js';
+import type { Line, Span, Style } from './line.js';
 
 /** How this terminal is drawn on. */
 export interface Look {
@@ -49,17 +49,30 @@ function opening(style: Style, level: ColourLevel): string {
   }
 }
 
-/** Codes of two greys: as they are in true colour, on the ramp of 24 between black and white of the 256 (232 to 255; 16 and 231). */
-function greyCodes(greys: readonly [number, number], level: ColourLevel): string {
-  const code = (grey: number) => {
-    if (level === 3) {
-      const value = Math.round(grey * 255);
-      return `2;${value};${value};${value}`;
-    }
-    const step = Math.round(grey * 25);
-    return `5;${step === 0 ? 16 : step === 25 ? 231 : 231 + step}`;
-  };
-  return `${sgr}38;${code(greys[0])};48;${code(greys[1])}m`;
+/** The code of a grey: as it is in true colour, on the ramp of 24 between black and white of the 256 (232 to 255; 16 and 231). */
+function greyCode(grey: number, level: ColourLevel): string {
+  if (level === 3) {
+    const value = Math.round(grey * 255);
+    return `2;${value};${value};${value}`;
+  }
+  const step = Math.round(grey * 25);
+  return `5;${step === 0 ? 16 : step === 25 ? 231 : 231 + step}`;
+}
+
+/** Sequences of two greys. The pairs of a picture stay the same while it is shown, and each is written out once. */
+const greySequences: Readonly<Record<ColourLevel, WeakMap<NonNullable<Span['greys']>, string>>> = {
+  0: new WeakMap(),
+  1: new WeakMap(),
+  2: new WeakMap(),
+  3: new WeakMap(),
+};
+
+function greySequence(greys: NonNullable<Span['greys']>, level: ColourLevel): string {
+  const known = greySequences[level].get(greys);
+  if (known !== undefined) return known;
+  const written = `${sgr}38;${greyCode(greys[0], level)};48;${greyCode(greys[1], level)}m`;
+  greySequences[level].set(greys, written);
+  return written;
 }
 
 /** A line with its styles as the painter reads them. */
@@ -70,7 +83,7 @@ export function paintLine(given: Line, { colourLevel }: Look): string {
   for (const { text, style, cursor, greys } of given) {
     if (text === '') continue;
     if (greys !== undefined) {
-      painted += `${greyCodes(greys, colourLevel)}${text}`;
+      painted += greySequence(greys, colourLevel) + text;
       inPicture = true;
       continue;
     }

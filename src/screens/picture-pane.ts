@@ -35,7 +35,11 @@ export function pictureView(
   return { view: { ...size, squareMm, middleMm: [0, 0] }, window: wholeWindow(pair) };
 }
 
-/** Draws a pane of cells: preset to the left of `from` columns, the series now from there on. */
+/** Panes of the pictures that are shown: every key draws the screen again, and few change what these show. */
+const panesOf = new WeakMap<DrawnPictures, Map<string, Line[]>>();
+const mostPanes = 8;
+
+/** A pane of cells: preset to the left of `from` columns, the series now from there on. */
 export function picturePane(
   drawn: DrawnPictures,
   seen: ReturnType<typeof pictureView>,
@@ -44,6 +48,18 @@ export function picturePane(
   rows: number,
   look: Look,
 ): Line[] {
+  const panes = panesOf.get(drawn) ?? new Map<string, Line[]>();
+  panesOf.set(drawn, panes);
+  const key = JSON.stringify([seen, which, columns, rows, squaresOf(look), look.set]);
+  const known = panes.get(key);
+  if (known !== undefined) return known;
+  if (panes.size >= mostPanes) panes.clear();
+  const lines = drawPane(drawn, seen, which, columns, rows, look);
+  panes.set(key, lines);
+  return lines;
+}
+
+function drawPane(...[drawn, seen, which, columns, rows, look]: Parameters<typeof picturePane>): Line[] {
   const { view, window } = seen;
   const [across, down] = squaresOf(look);
   const fieldOf = (name: 'preset' | 'now') => pictureField(drawn.pair[name], view, window);
@@ -62,7 +78,7 @@ export function picturePane(
         const at = row * down * view.columns + column;
         const [upper, lower] = [field[at] ?? 0, field[at + view.columns] ?? 0];
         if (look.set === 'ascii') return { text: ramp[Math.round(((upper + lower) / 2) * (ramp.length - 1))] ?? ' ', style: 'plain' };
-        return { text: '\u2580', style: 'plain', greys: [level(upper), level(lower)] };
+        return { text: '\u2580', style: 'plain', greys: greysOf(upper, lower) };
       }),
     ),
   );
@@ -70,7 +86,16 @@ export function picturePane(
 
 /** Few enough greys that neighbours are often equal, which keeps a frame short; enough that the grain is seen. */
 const greys = 40;
-const level = (grey: number) => Math.round(grey * greys) / greys;
+
+/** All pairs of greys, each of them one thing: what looks the same is the same. */
+const pairs: readonly (readonly [number, number])[] = Array.from({ length: (greys + 1) ** 2 }, (_, at) => [
+  Math.floor(at / (greys + 1)) / greys,
+  (at % (greys + 1)) / greys,
+]);
+
+function greysOf(upper: number, lower: number): NonNullable<Span['greys']> {
+  return pairs[Math.round(upper * greys) * (greys + 1) + Math.round(lower * greys)] as NonNullable<Span['greys']>;
+}
 
 function dotCell(dots: Uint8Array, columns: number, column: number, row: number): string {
   let bits = 0;
@@ -87,7 +112,7 @@ function joined(cells: readonly Span[]): Line {
   const spans: { text: string; style: Span['style']; greys?: Span['greys'] }[] = [];
   for (const cell of cells) {
     const last = spans.at(-1);
-    if (last !== undefined && last.greys?.[0] === cell.greys?.[0] && last.greys?.[1] === cell.greys?.[1]) last.text += cell.text;
+    if (last !== undefined && last.greys === cell.greys) last.text += cell.text;
     else spans.push({ ...cell });
   }
   return spans as Line;

@@ -35,15 +35,31 @@ export const blank: Cell = { text: ' ', width: 1, style: '' };
 const esc = '\u001b';
 const bel = '\u0007';
 /** ESC with a control sequence, a string sequence, or a single character. What is not SGR is left out of the frame. */
-const escapes = new RegExp(`${esc}\\[([0-9:;<=>?]*)[ -/]*([@-~])|${esc}[\\]PX^_][^${bel}${esc}]*(?:${bel}|${esc}\\\\)?|${esc}[ -~]?`, 'g');
+const escapes = new RegExp(`${esc}\\[[0-9:;<=>?]*[ -/]*[@-~]|${esc}[\\]PX^_][^${bel}${esc}]*(?:${bel}|${esc}\\\\)?|${esc}[ -~]?`, 'y');
+
+/** Where the parameters of the style sequence that begins at `at` end; -1 where something else begins there. */
+function parametersEnd(source: string, at: number): number {
+  if (source[at + 1] !== '[') return -1;
+  let end = at + 2;
+  // Digits, colon and semicolon.
+  for (let code = source.charCodeAt(end); code >= 0x30 && code <= 0x3b; code = source.charCodeAt(end)) end += 1;
+  return source[end] === 'm' ? end : -1;
+}
+
+/** Where what is no style sequence ends. */
+function otherEnd(source: string, at: number): number {
+  escapes.lastIndex = at;
+  return at + (escapes.exec(source)?.[0].length ?? 1);
+}
 
 /** Cells of a plain text; control characters and characters of no width are left out, a tab is one blank. */
 function pushCells(cells: Cell[], text: string, style: Style, columns: number): void {
   const plain = isPlainText(text);
-  const blankCell: Cell = blankIsPlain(style) ? blank : { text: ' ', width: 1, style };
+  let blankCell: Cell | null = null;
   for (const character of plain ? text : graphemesOf(text)) {
     if (cells.length >= columns) return;
     if (character === ' ' || character === '\t') {
+      blankCell ??= blankIsPlain(style) ? blank : { text: ' ', width: 1, style };
       cells.push(blankCell);
       continue;
     }
@@ -64,11 +80,13 @@ function readRow(source: string, styleBefore: Style, columns: number): Row {
   let style = styleBefore;
   let cursor: number | null = null;
   let from = 0;
-  for (const match of source.matchAll(escapes)) {
-    pushCells(cells, source.slice(from, match.index), style, columns);
-    from = match.index + match[0].length;
-    if (match[2] !== 'm') continue;
-    const parameters = match[1] ?? '';
+  // A picture has a style sequence for every cell: they are not searched for with the pattern of all sequences.
+  for (let at = source.indexOf(esc); at >= 0; at = source.indexOf(esc, from)) {
+    if (at > from) pushCells(cells, source.slice(from, at), style, columns);
+    const end = parametersEnd(source, at);
+    from = end < 0 ? otherEnd(source, at) : end + 1;
+    if (end < 0) continue;
+    const parameters = source.slice(at + 2, end);
     style = styleAfter(style, parameters);
     if (cursor === null && cells.length < columns && parameters === String(cursorMarkCode)) cursor = cells.length;
   }

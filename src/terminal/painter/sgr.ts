@@ -74,6 +74,24 @@ function applyTo(look: Look, codes: readonly number[]): Look {
   return { marks, foreground, background };
 }
 
+/** Parameters that set both colours: with no marks on, they are the style. A picture has little else. */
+const bothColours = /^38;(?:5;\d+|2;\d+;\d+;\d+);48;(?:5;\d+|2;\d+;\d+;\d+)$/;
+const coloursAlone = new Map<string, Style>();
+
+function styleOfColours(before: Style, parameters: string): Style | null {
+  // Marks come first in a style and have one digit, colours have two or more.
+  const marked = before !== '' && (before.length === 1 || before[1] === ';');
+  if (marked || !parameters.startsWith('38;')) return null;
+  const known = coloursAlone.get(parameters);
+  if (known !== undefined) return known;
+  if (!bothColours.test(parameters)) return null;
+  // Written anew: a part of a frame that is kept would keep the whole frame.
+  const style = parameters.split(';').map(Number).join(';');
+  if (coloursAlone.size >= mostKeptLooks) coloursAlone.clear();
+  if (style === parameters) coloursAlone.set(style, style);
+  return style;
+}
+
 /**
  * The style after an SGR sequence; codes it does not know change nothing.
  *
@@ -81,6 +99,8 @@ function applyTo(look: Look, codes: readonly number[]): Look {
  * @example styleAfter('1', '31') //=> '1;31'
  */
 export function styleAfter(style: Style, parameters: string): Style {
+  const colours = styleOfColours(style, parameters);
+  if (colours !== null) return colours;
   const look = applyTo(lookOf(style), parameters.replaceAll(':', ';').split(';').map(Number));
   const next = styleOf(look);
   if (!parsed.has(next)) {

@@ -1,3 +1,5 @@
+import { widestLine } from './measure-text.js';
+
 /** How ink hands over a text: each line goes through the functions of the components around it. */
 interface WriteOptions {
   readonly transformers: readonly ((line: string, index: number) => string)[];
@@ -5,8 +7,8 @@ interface WriteOptions {
 
 /**
  * Takes the place of ink's own `Output`, which takes every text apart into cells and puts them together again, though the painter is
- * about to do that by itself. Whole lines are all this program gives to ink, so they are passed on as they are; anything else is a
- * fault of the program and is refused.
+ * about to do that by itself. Whole lines are all this program gives to ink, so they are passed on as they are, texts of one line one
+ * after the other; anything else is a fault of the program and is refused.
  */
 export class FlatOutput {
   readonly #lines: string[];
@@ -18,17 +20,18 @@ export class FlatOutput {
   /** Takes a text whose first character stands at column `x` of line `y`, counted from 0. */
   write(x: number, y: number, text: string, { transformers }: WriteOptions): void {
     if (text === '') return;
-    if (x !== 0) throw new Error(`a text at column ${x}: only whole lines are drawn`);
     text.split('\n').forEach((given, index) => {
       const row = y + index;
       if (row >= this.#lines.length) return;
-      if (this.#lines[row] !== '') throw new Error(`two texts on line ${row}: only whole lines are drawn`);
-      this.#lines[row] = transformers.reduce((line, transform) => transform(line, index), given);
+      const before = this.#lines[row] as string;
+      const gap = x - widestLine(before);
+      if (gap < 0) throw new Error(`a text over another on line ${row}: only one after the other is drawn`);
+      this.#lines[row] = before + ' '.repeat(gap) + transformers.reduce((line, transform) => transform(line, index), given);
     });
   }
 
   clip(): void {
-    throw new Error('a box that cuts off what is in it: only whole lines are drawn');
+    throw new Error('a box that cuts off what is in it: only whole texts are drawn');
   }
 
   get(): { readonly output: string; readonly height: number } {

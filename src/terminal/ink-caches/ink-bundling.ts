@@ -67,16 +67,16 @@ export function replaceInkCaches(): Plugin {
         resolveDir: dirname(path),
       }));
       // Its first use compiles a pattern of all emoji, which takes tens of milliseconds: few screens ever ask for one.
-      build.onResolve({ filter: /^string-width$/ }, ({ path, pluginData, resolveDir }) =>
-        pluginData === 'own' ? undefined : { path, namespace: 'late', pluginData: resolveDir },
-      );
+      build.onResolve({ filter: /^string-width$/ }, ({ path, namespace, pluginData, resolveDir }) => {
+        if (pluginData === 'own') return undefined;
+        // Asked for by what stands in its place: the package itself.
+        if (namespace === 'late') return build.resolve(path, { kind: 'require-call', resolveDir, pluginData: 'own' });
+        return { path, namespace: 'late', pluginData: resolveDir };
+      });
       build.onLoad({ filter: /^string-width$/, namespace: 'late' }, ({ pluginData }) => ({
         contents: `let own; export default (text, options) => (own ??= require('string-width').default)(text, options);`,
         resolveDir: pluginData as string,
       }));
-      build.onResolve({ filter: /^string-width$/, namespace: 'late' }, ({ path, resolveDir }) =>
-        build.resolve(path, { kind: 'import-statement', resolveDir, pluginData: 'own' }),
-      );
       build.onLoad({ filter: /[\\/]ink[\\/]build[\\/]ink\.js$/ }, () => {
         inkSeen = true;
         return undefined;

@@ -1,6 +1,7 @@
 import { mkdirSync, mkdtempSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { pathToFileURL } from 'node:url';
 import { build } from 'esbuild';
 import fc from 'fast-check';
 import stringWidth from 'string-width';
@@ -81,12 +82,18 @@ describe('whole lines', () => {
     expect(output.get()).toEqual({ output: 'one', height: 1 });
   });
 
-  it('are all there is: texts beside each other, over each other or cut off are refused', () => {
+  it('stand at their column, one after the other', () => {
+    const output = new FlatOutput({ width: 20, height: 1 });
+    output.write(1, 0, '\u001b[1mone\u001b[0m', { transformers: [] });
+    output.write(6, 0, 'two', { transformers: [] });
+    expect(output.get().output).toBe(' \u001b[1mone\u001b[0m  two');
+  });
+
+  it('are all there is: texts over each other or cut off are refused', () => {
     const output = new FlatOutput({ width: 20, height: 2 });
     output.write(0, 0, 'one', { transformers: [] });
-    expect(() => output.write(4, 0, 'two', { transformers: [] })).toThrow('column 4');
-    expect(() => output.write(0, 0, 'two', { transformers: [] })).toThrow('line 0');
-    expect(() => output.clip()).toThrow('whole lines');
+    expect(() => output.write(2, 0, 'two', { transformers: [] })).toThrow('line 0');
+    expect(() => output.clip()).toThrow('whole texts');
   });
 
   it('keep every style: what else there is, the painter leaves out', () => {
@@ -135,6 +142,24 @@ describe('bundling', () => {
     const ours = inputs.filter((input) => input.startsWith('src/terminal/')).map((input) => input.split('/').at(-1));
     expect(new Set(ours)).toEqual(new Set(['bounded-cache.ts', 'flat-output.ts', 'measure-text.ts', 'text-width.ts', 'wrap-text.ts']));
     expect(inputs.filter((input) => input.includes('react-devtools-core'))).toEqual([]);
+  });
+
+  it('starts string-width at its first use, and then it counts as it does', async () => {
+    const contents =
+      "import stringWidth from 'string-width'; export const widths = ['abc', '\u6f22a', 'e\u0301'].map((text) => stringWidth(text));";
+    const { outputFiles } = await build({
+      stdin: { contents, resolveDir: process.cwd() },
+      bundle: true,
+      write: false,
+      platform: 'node',
+      format: 'esm',
+      plugins: [replaceInkCaches()],
+      logLevel: 'silent',
+    });
+    const file = join(mkdtempSync(join(tmpdir(), 'holdfast-bundle-')), 'late.mjs');
+    writeFileSync(file, outputFiles[0]?.text ?? '');
+    const { widths } = (await import(/* @vite-ignore */ pathToFileURL(file).href)) as { widths: number[] };
+    expect(widths).toEqual(['abc', '\u6f22a', 'e\u0301'].map((text) => stringWidth(text)));
   });
 
   it('fails if ink has moved them', async () => {

@@ -2,11 +2,12 @@ import type { Answer, Effect } from '../session/message.js';
 import { carryPreset } from './carry-preset.js';
 import { claimDraft } from './claim-draft.js';
 import { drawPicture } from './draw-picture.js';
-import { stopHeaders } from './header-reading.js';
+import { beginHeaders, stopHeaders } from './header-reading.js';
 import type { InterfaceWorld } from './interface-world.js';
 import { listRecords } from './list-records.js';
 import { loadPresets } from './load-presets.js';
 import { readPastRecord } from './read-past-record.js';
+import { readResiduals } from './read-residuals.js';
 import { readRevisions } from './read-revisions.js';
 import { readSessionRules } from './read-session-rules.js';
 import { readTypedExpression } from './read-typed-expression.js';
@@ -48,6 +49,8 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       return carryPreset(world, effect);
     case 'picture':
       return drawPicture(world, effect);
+    case 'read-residuals':
+      return readResiduals(world, effect);
     case 'stop-search':
       world.searches.stop();
       return null;
@@ -70,9 +73,11 @@ export async function runEffect(world: InterfaceWorld, effect: Effect): Promise<
       stopReading(world);
       return null;
     case 'read-headers': {
+      // Before anything is loaded: it may be stopped meanwhile.
+      const reading = beginHeaders(world);
       // What parses objects is loaded when somebody reads a folder, and not before.
       const { readFolder } = await import('./read-folder.js');
-      return readFolder(world, effect);
+      return readFolder(world, effect, reading);
     }
     case 'class-headers': {
       const { classHeaders } = await import('./read-folder.js');

@@ -2,6 +2,7 @@ import type { FormRow } from '../session/form-row.js';
 import { formRow, formRows } from '../session/hands/form-commands.js';
 import { labelSentence } from '../session/patient-form.js';
 import { reasonRows, recordForm } from '../session/record-form.js';
+import { residualsOf } from '../session/residuals.js';
 import type { State } from '../session/state.js';
 import { freeTextReminder } from '../study/record-text.js';
 import { fitText } from '../terminal/text-width.js';
@@ -25,6 +26,7 @@ export function readingsScreen(state: State, look: Look, columns: number, rows: 
     line('The first scales every later figure of this series: time, B1+rms, SAR.'),
     line('It holds for the same coil and the same patient; every series needs its own.', 'attention'),
     line("Read the scanner's value again before starting: figures here are trends."),
+    ...residualsOf(state, state.place.seriesId).map((words) => line(`Off so far here: ${words}`, 'quiet')),
   ];
   return [...formPane(state, formRows(state), formRow(state), look, columns, rows - note.length), ...note];
 }

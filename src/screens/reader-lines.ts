@@ -12,6 +12,7 @@ import { keptInWords } from '../session/keep-form.js';
 import { nextStep } from '../session/next-step.js';
 import { pictureSentences } from '../session/picture-sentences.js';
 import { planInWords, plannedInWords, planRows } from '../session/plan-words.js';
+import { residualsOf } from '../session/residuals.js';
 import { resultNow, studySeries } from '../session/results.js';
 import { sayField } from '../session/say-field.js';
 import { sayFigure } from '../session/say-figure.js';
@@ -29,6 +30,7 @@ import { headlineLine, keyLine, noticeLine } from './common-lines.js';
 import { frontPoint } from './front-screen.js';
 import { headerItems } from './header-items.js';
 import { idleWords } from './idle-words.js';
+import { labelLine } from './label-line.js';
 import { fill, type Line, line, lineText, span, windowOf, wrap } from './line.js';
 import type { Look } from './look.js';
 import { shelfItems } from './shelf-items.js';
@@ -53,11 +55,13 @@ export function readerLines(state: State, look: Look): Line[] {
     for (const [at, words] of wrap(said, columns - 1).entries())
       lines.push(item.here && at === 0 ? [{ text: words, style: 'bold', cursor: true }] : [span(words)]);
   }
-  const bodyRows = rows - 4;
+  const label = labelLine(state, columns, look);
+  const bodyRows = rows - 4 - label.length;
   return [
     headlineLine(state, look, columns),
     titleLine(state, look, columns),
     ...fill(windowOf(lines, here, bodyRows).items, bodyRows),
+    ...label,
     noticeLine(state, look, columns, line(idleWords(state))),
     keyLine(state, look, columns),
   ];
@@ -105,7 +109,7 @@ function itemsOf(state: State, look: Look): readonly Item[] {
       return text(helpScreen(state, look, state.size.columns - 1, state.size.rows - 4));
     default: {
       const here = formRow(state)?.field;
-      return formRows(state).map((row) => ({
+      const rows = formRows(state).map((row) => ({
         words:
           row.kind === 'heading'
             ? `${row.label}:`
@@ -114,6 +118,7 @@ function itemsOf(state: State, look: Look): readonly Item[] {
               : `${row.label.trim()}: ${row.shown === '-' ? 'blank' : row.shown.trim() || 'no'}`,
         here: row.field === here,
       }));
+      return state.place.screen === 'readings' ? [...rows, ...offItems(state)] : rows;
     }
   }
 }
@@ -223,6 +228,7 @@ function seriesItems(state: State): Item[] {
       words: `${figureTable[row.key].label} ${row.value}${row.change === '' ? '' : `, ${row.change}`}${row.over ? ', OVER its limit' : ''}${row.fromReading ? ', from the scanner reading' : ''}`,
       here: pane === 'consequences' && (figure === row.key || (figure === null && at === 0)),
     })),
+    ...offItems(state),
     { words: `Cautions: ${cautions.length === 0 ? 'none' : ''}` },
     ...cautions.map(({ level, text }, at) => ({
       words: `${level}: ${text}`,
@@ -234,6 +240,11 @@ function seriesItems(state: State): Item[] {
       return { words: `${each.label}: ${is}${is === was ? '' : `, preset ${was}`}` };
     }),
   ];
+}
+
+/** How far predictions have been off on this scanner. */
+function offItems(state: State): Item[] {
+  return residualsOf(state, state.place.seriesId).map((words) => ({ words: `Off so far here: ${words}` }));
 }
 
 function waysItems(state: State): Item[] {

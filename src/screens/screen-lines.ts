@@ -8,6 +8,7 @@ import { frontScreen } from './front-screen.js';
 import { headerValuesScreen } from './header-values-screen.js';
 import { headersScreen } from './headers-screen.js';
 import { idleWords } from './idle-words.js';
+import { labelLine } from './label-line.js';
 import { fill, fitLine, type Line, line, lineWidth, wrap } from './line.js';
 import type { Look } from './look.js';
 import { orderScreen } from './order-screen.js';
@@ -66,13 +67,15 @@ export function screenLines(state: State, look: Look): Line[] {
     return wrap(words, Math.max(1, columns)).map((each) => line(each));
   }
   if (look.reader) return readerLines(state, look);
-  const bodyRows = rows - 4;
+  const label = labelLine(state, columns, look);
+  const bodyRows = rows - 4 - label.length;
   return [
     headlineLine(state, look, columns),
     titleLine(state, look, columns),
     ...fill(bodies[state.place.screen](state, look, columns, bodyRows), bodyRows).map((each) =>
       lineWidth(each) > columns ? fitLine(each, columns, look.glyphs.ellipsis) : each,
     ),
+    ...label,
     noticeLine(state, look, columns, line(idleWords(state), 'quiet')),
     keyLine(state, look, columns),
   ];

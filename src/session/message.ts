@@ -4,6 +4,7 @@ import type { Budget, BudgetProblem } from '../search/budget.js';
 import type { CarryProblem, StudyCarry } from '../search/carry-study.js';
 import type { SearchProblem } from '../search/problem-to-solve.js';
 import type { Rules } from '../study/must-keep.js';
+import type { ClassReadings } from '../study/readings-report.js';
 import type { SessionRecord } from '../study/record.js';
 import type { ScannerFile } from '../study/scanner-file.js';
 import type { SiteRules } from '../study/site-rules.js';
@@ -44,6 +45,7 @@ export type Answer =
   | { readonly kind: 'plan'; readonly plan: Budget }
   | { readonly kind: 'pictures'; readonly pictures: DrawnPictures }
   | { readonly kind: 'carried'; readonly carried: StudyCarry }
+  | { readonly kind: 'residuals'; readonly classes: readonly ClassReadings[] }
   | ShelfAnswer
   | HeaderAnswer;
 
@@ -78,6 +80,8 @@ export type Effect =
   | { readonly kind: 'plan'; readonly ask: number; readonly problem: BudgetProblem }
   | { readonly kind: 'picture'; readonly ask: number; readonly problem: PictureProblem }
   | { readonly kind: 'carry'; readonly ask: number; readonly problem: CarryProblem }
+  /** How far predictions have been off on a scanner, by the records. */
+  | { readonly kind: 'read-residuals'; readonly ask: number; readonly scanner: string }
   /** Ends the search or plan that runs; a search answers with what it has. */
   | { readonly kind: 'stop-search' }
   | ShelfEffect

@@ -1,6 +1,7 @@
 import type { FigureKey } from '../calc/figures.js';
 import type { GivenParameters } from '../calc/series.js';
 import type { Rules } from '../study/must-keep.js';
+import type { ClassReadings } from '../study/readings-report.js';
 import type { ScannerFile } from '../study/scanner-file.js';
 import { noSiteRules, type SiteRules } from '../study/site-rules.js';
 import type { CarryView } from './carry.js';
@@ -78,6 +79,13 @@ export interface Place {
 export const panes = ['main', 'consequences', 'cautions'] as const;
 export type Pane = (typeof panes)[number];
 
+/** What the records say of predictions on one scanner. */
+export interface Residuals {
+  readonly scanner: string;
+  /** Null while they are read, and where they cannot be. */
+  readonly classes: readonly ClassReadings[] | null;
+}
+
 /** What is being typed. */
 export interface Entry {
   /** Where it goes: the row of the screen it was begun on. */
@@ -140,6 +148,7 @@ export interface State {
         | 'plan'
         | 'carry'
         | 'carryRules'
+        | 'residuals'
         | ShelfAsk
         | HeaderAsk,
         number
@@ -167,6 +176,8 @@ export interface State {
   readonly pictureEyes: PictureEyes;
   /** The preset that is carried to another field or scanner. */
   readonly carry: CarryView | null;
+  /** How far predictions have been off on the scanner of the session; null until it is asked. */
+  readonly residuals: Residuals | null;
   /** Presets and records, as their screens show them. */
   readonly shelf: Shelf;
   /** Headers that were read, as their screens show them. */
@@ -236,6 +247,7 @@ export function initialState(defaults: Defaults, size: State['size']): State {
     picture: null,
     pictureEyes: plainEyes,
     carry: null,
+    residuals: null,
     shelf: emptyShelf,
     headers: emptyHeaderView,
   };

@@ -10,6 +10,7 @@ import { keepDrawing } from './keep-drawing.js';
 import { keepSearching } from './keep-searching.js';
 import { keyRowFor } from './key-map.js';
 import type { Answer, Effect, KeyPress, Message } from './message.js';
+import { keepResiduals, takeResiduals } from './residuals.js';
 import type { State } from './state.js';
 import { takeShelfAnswer, withReadingShare } from './take-shelf-answer.js';
 
@@ -42,8 +43,9 @@ function takeOne(state: State, message: Message): Change {
   const [moved, asked] = carryOut(state, message);
   const [sought, searched] = keepSearching(state, moved);
   const [carrying, carried] = keepCarrying(sought);
-  const [next, drawn] = keepDrawing(state, carrying);
-  const more = [...searched, ...carried, ...drawn];
+  const [drawing, drawn] = keepDrawing(state, carrying);
+  const [next, looked] = keepResiduals(drawing);
+  const more = [...searched, ...carried, ...drawn, ...looked];
   const effects = more.length === 0 ? asked : [...asked, ...more];
   const draft = draftToSave(state, next);
   return draft === null ? [next, effects] : [next, [...effects, { kind: 'save-draft', draft } satisfies Effect]];
@@ -136,6 +138,8 @@ function takeAnswer(state: State, ask: number, answer: Answer): Change {
     case 'carry':
     case 'carryRules':
       return only(takeCarryAnswer(next, answer, failed));
+    case 'residuals':
+      return only(takeResiduals(next, answer.kind === 'residuals' ? answer.classes : null));
     case 'picture': {
       const { picture } = state;
       if (picture === null || picture.ask !== ask) return only(next);
@@ -169,7 +173,11 @@ function withShare(state: State, ask: number, share: number): State {
 /** The record stands in the file; only what was changed meanwhile still makes a draft. */
 function recordSaved(state: State, words: string): Change {
   const isWhole = state.session !== null && state.session === state.saving;
-  const next = say({ ...state, recordFailed: false, saving: null }, isWhole ? words : `${words}; what was changed meanwhile is not in it`);
+  // What it holds of readings counts from now on.
+  const next = say(
+    { ...state, recordFailed: false, saving: null, residuals: null },
+    isWhole ? words : `${words}; what was changed meanwhile is not in it`,
+  );
   return isWhole
     ? [{ ...next, session: { ...state.session, saved: true } as NonNullable<State['session']> }, [{ kind: 'drop-draft' }]]
     : only(next);

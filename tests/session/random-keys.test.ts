@@ -14,11 +14,13 @@ import type { Answer, Effect, Message, PresetChoice } from '../../src/session/me
 import { shelfScreens } from '../../src/session/shelf-headline.js';
 import type { ScreenName, State } from '../../src/session/state.js';
 import { draftNow, update } from '../../src/session/update.js';
+import { ReadingCounts } from '../../src/study/readings-report.js';
 import type { SessionRecord } from '../../src/study/record.js';
 import { isMeantRecord, namedRecord } from '../../src/study/record-meant.js';
 import { RecordCounts } from '../../src/study/record-report.js';
 import type { Study } from '../../src/study/study.js';
 import { asciiGlyphs } from '../../src/terminal/glyphs.js';
+import { twelveTimes } from '../study/read-times.js';
 import { knownProblem, picturesOf } from './drawn-picture.js';
 import { headerAnswer } from './invented-headers.js';
 import { keyOf, presetChoice } from './invented-state.js';
@@ -163,6 +165,13 @@ function carriedFor({ carry, circumstances }: CarryProblem): ReturnType<typeof c
   return known;
 }
 
+/** Twelve times that were read, and more of one class than of the others. */
+const readClasses = (() => {
+  const counts = new ReadingCounts();
+  for (const record of twelveTimes('')) counts.add(record);
+  return counts.report().scanners[0]?.classes ?? [];
+})();
+
 /** Answers what was asked, as the world might: well or badly. */
 function answerTo(effect: Effect, well: boolean): Message | null {
   if (!('ask' in effect)) return null;
@@ -179,6 +188,7 @@ function answerTo(effect: Effect, well: boolean): Message | null {
   if (effect.kind === 'plan') return { kind: 'answer', ask, answer: { kind: 'plan', plan: planFor(effect.problem) } };
   if (effect.kind === 'picture') return { kind: 'answer', ask, answer: { kind: 'pictures', pictures: picturesOf(knownProblem().problem) } };
   if (effect.kind === 'carry') return { kind: 'answer', ask, answer: { kind: 'carried', carried: carriedFor(effect.problem) } };
+  if (effect.kind === 'read-residuals') return { kind: 'answer', ask, answer: { kind: 'residuals', classes: readClasses } };
   const shelf = headerAnswer(effect) ?? shelfAnswer(effect);
   return { kind: 'answer', ask, answer: shelf ?? { kind: 'done', words: 'Saved' } };
 }
@@ -223,6 +233,7 @@ function faults(state: State): string[] {
   must(open.search === undefined || search?.ask === open.search, 'only the newest search is waited for');
   must(open.plan === undefined || plan?.ask === open.plan, 'only the newest plan is waited for');
   must([open.search, open.plan, open.carry].filter((ask) => ask !== undefined).length <= 1, 'one worker does one thing');
+  must(open.residuals === undefined || state.residuals !== null, 'what is asked of the records is waited for');
   must(place.screen !== 'carry' || state.carry !== null, 'the carry screen has a preset');
   const readings = [open.list, open['one-record'], open.report].filter((ask) => ask !== undefined);
   must(readings.length <= 1, 'one reading of records at a time');

@@ -1,8 +1,13 @@
-/** The reading of a folder that runs in a world. */
-const running = new WeakMap<object, { ended: 'no' | 'stopped' | 'replaced' }>();
+/** A reading of a folder, and what became of it. */
+export interface HeaderReading {
+  readonly ended: 'no' | 'stopped' | 'replaced';
+}
+
+/** The reading that runs in a world. */
+const running = new WeakMap<object, { ended: HeaderReading['ended'] }>();
 
 /** A reading begins: one before it ends and answers nobody. */
-export function beginHeaders(world: object): { readonly ended: 'no' | 'stopped' | 'replaced' } {
+export function beginHeaders(world: object): HeaderReading {
   const before = running.get(world);
   if (before !== undefined) before.ended = 'replaced';
   const now = { ended: 'no' as const };

@@ -5,7 +5,7 @@ import { SeriesCollector } from '../headers/series-collector.js';
 import type { Answer, Effect } from '../session/message.js';
 import { namelessTrouble } from '../store/dicom/file-trouble.js';
 import { type HeadersRead, readHeaders } from '../store/dicom/read-headers.js';
-import { beginHeaders } from './header-reading.js';
+import type { HeaderReading } from './header-reading.js';
 import type { InterfaceWorld } from './interface-world.js';
 
 /** How long a reading runs before its progress is said, and how often then, ms. */
@@ -21,8 +21,11 @@ const collected = new WeakMap<object, readonly CollectedSeries[]>();
  * Reads the headers of a folder that a person typed, piece by piece: keys go on between two pieces. Nothing that it answers names a
  * file, since a file may be called after a person. Null where another reading took its place.
  */
-export async function readFolder(world: InterfaceWorld, { ask, path }: Extract<Effect, { kind: 'read-headers' }>): Promise<Answer | null> {
-  const now = beginHeaders(world);
+export async function readFolder(
+  world: InterfaceWorld,
+  { ask, path }: Extract<Effect, { kind: 'read-headers' }>,
+  now: HeaderReading,
+): Promise<Answer | null> {
   const place = await placeOf(world, path);
   if ('says' in place) return failed('no-folder', place.says, '');
   const collector = new SeriesCollector();

@@ -10,12 +10,13 @@ import { fieldValue, type SeriesField, seriesFields } from './series-fields.js';
 import type { State } from './state.js';
 
 /** Where a value comes from, as the review groups them: what must be typed first. */
-export const valueGroups = ['needed', 'default', 'guess', 'derived', 'read', 'assumed'] as const;
+export const valueGroups = ['needed', 'some', 'default', 'guess', 'derived', 'read', 'assumed'] as const;
 export type ValueGroup = (typeof valueGroups)[number];
 
 /** What stands above each group. */
 const groupWords: Readonly<Record<ValueGroup, string>> = {
   needed: 'To type before it can be used',
+  some: 'There is some, the header does not say how much: the default is wrong',
   default: 'Missing: the default holds until it is typed',
   guess: 'Guessed: explains the rest of the header',
   derived: 'Derived from what the header says',
@@ -68,12 +69,14 @@ export function neededOf(one: SeriesToDraft): readonly string[] {
 
 function groupOf(value: ReadValue, key: ClassKey | null): ValueGroup {
   if (value.origin !== 'missing') return value.origin;
+  if (value.some === true) return 'some';
   // By what the header says: a line does not move when it is typed.
   return key !== null && lackingFor(key, {}).includes(value.key) ? 'needed' : 'default';
 }
 
 const originWords: Readonly<Record<ValueGroup, string>> = {
   needed: 'missing',
+  some: 'default',
   default: 'default',
   guess: 'A GUESS',
   derived: 'derived',
@@ -94,7 +97,7 @@ function valueRow(value: ReadValue, group: ValueGroup, one: SeriesToDraft, field
     origin: isTyped ? 'typed' : originWords[group],
     words: isTyped ? `the header: ${headerSays(value)}` : value.words,
     of: field,
-    attention: !isTyped && (group === 'needed' || group === 'guess'),
+    attention: !isTyped && ['needed', 'some', 'guess'].includes(group),
   };
 }
 

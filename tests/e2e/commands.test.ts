@@ -187,7 +187,7 @@ describe('what is loaded', () => {
     },
   );
 
-  it('the interface starts both, and the parser not yet: the counts can see it', async () => {
+  it('the interface starts both; the parser and the reader of objects not yet: the counts can see it', async () => {
     const reports = mkdtempSync(join(folder, 'coverage-'));
     const program = start(process.execPath, [bundle], { cwd: folder, env: { HOME: folder, NODE_V8_COVERAGE: reports } });
     // A word may stand there before anything that draws is loaded: wait for a whole screen.
@@ -199,6 +199,7 @@ describe('what is loaded', () => {
     );
     program.press(keyBytes.ctrlC);
     await program.exited;
-    expect([startsIn(reports, 'react'), startsIn(reports, 'ink'), startsIn(reports, 'parser')]).toEqual([1, 1, 0]);
+    const loaded = (['react', 'ink', 'parser', 'objects'] as const).map((which) => startsIn(reports, which));
+    expect(loaded).toEqual([1, 1, 0, 0]);
   });
 });

@@ -10,6 +10,8 @@ import { presetChoice } from './invented-state.js';
 
 const echoTime = '0018,0081';
 const scanningSequence = '0018,0020';
+/** Left out everywhere: series stand in the order they come in. */
+const seriesNumber = '0020,0011';
 
 /** The images of some series of shipped presets, a few slices each, without the attributes that are left out of each. */
 function invented(...wanted: readonly (readonly [preset: string, series: string, ...without: readonly string[]])[]): Buffer[] {
@@ -18,7 +20,7 @@ function invented(...wanted: readonly (readonly [preset: string, series: string,
     const series = study.series.find((one) => one.id === id);
     if (series === undefined) throw new Error(`no series ${id}`);
     const few = { ...series, parameters: { ...series.parameters, sliceCount: 4 } };
-    const kept = (image: readonly Attribute[]) => image.filter(({ tag }) => !without.includes(tag));
+    const kept = (image: readonly Attribute[]) => image.filter(({ tag }) => ![seriesNumber, ...without].includes(tag));
     return singleFrames(imagesOfPreset(few, study.fieldT), `1.2.3.${at + 1}`).map((image) => dicomObject(kept(image)));
   });
 }

@@ -7,8 +7,8 @@ interface WriteOptions {
 
 /**
  * Takes the place of ink's own `Output`, which takes every text apart into cells and puts them together again, though the painter is
- * about to do that by itself. Whole lines are all this program gives to ink, so they are passed on as they are, texts of one line one
- * after the other; anything else is a fault of the program and is refused.
+ * about to do that by itself. Whole lines are all this program gives to ink, so they are passed on as they are. Ink's own page about a
+ * component that threw is made of boxes: its texts come one after the other, none over another, so that its message can be read.
  */
 export class FlatOutput {
   readonly #lines: string[];
@@ -24,15 +24,15 @@ export class FlatOutput {
       const row = y + index;
       if (row >= this.#lines.length) return;
       const before = this.#lines[row] as string;
-      const gap = x - widestLine(before);
-      if (gap < 0) throw new Error(`a text over another on line ${row}: only one after the other is drawn`);
-      this.#lines[row] = before + ' '.repeat(gap) + transformers.reduce((line, transform) => transform(line, index), given);
+      const gap = ' '.repeat(Math.max(0, x - widestLine(before)));
+      this.#lines[row] = before + gap + transformers.reduce((line, transform) => transform(line, index), given);
     });
   }
 
-  clip(): void {
-    throw new Error('a box that cuts off what is in it: only whole texts are drawn');
-  }
+  /** Boxes that cut off what is in them are not drawn here. */
+  clip(): void {}
+
+  unclip(): void {}
 
   get(): { readonly output: string; readonly height: number } {
     return { output: this.#lines.join('\n'), height: this.#lines.length };

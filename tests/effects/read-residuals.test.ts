@@ -37,16 +37,16 @@ describe('how far predictions have been off, from the file of records', () => {
       ['spin-echo/2D', 1, 0.05],
       ['spoiled-gradient-echo/3D', 12, 0.034],
     ]);
-    await leave();
+    await leave(null);
   });
 
   it('of a scanner without readings, or where nobody recorded yet, is nothing', async () => {
     const { runEffect, leave } = await worldWith(twelveTimes());
     expect(await runEffect(ask('green room'))).toEqual({ kind: 'residuals', classes: [] });
-    await leave();
+    await leave(null);
     const empty = await worldWith(null);
     expect(await empty.runEffect(ask('demo-3t'))).toEqual({ kind: 'residuals', classes: [] });
-    await empty.leave();
+    await empty.leave(null);
   });
 
   it('lets others go between two pieces, and gives way to a newer ask', async () => {
@@ -63,6 +63,6 @@ describe('how far predictions have been off, from the file of records', () => {
     expect(first).toBeNull();
     expect(second?.kind).toBe('residuals');
     expect(turns).toBeGreaterThan(5);
-    await leave();
+    await leave(null);
   });
 });

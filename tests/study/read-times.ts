@@ -2,7 +2,7 @@ import type { SessionRecord } from '../../src/study/record.js';
 import { inventedRecord, inventedSeries } from './records.js';
 
 /** Errors of twelve times in percent, six of January and six of March 2026, rising. Invented. */
-export const twelveErrors = [1, 2, 2.5, 3, 3.2, 3.3, 3.5, 4, 4, 4.5, 5, 6];
+const twelveErrors = [1, 2, 2.5, 3, 3.2, 3.3, 3.5, 4, 4, 4.5, 5, 6];
 
 /** A record of one series whose scan time of 10 s was read so many percent longer, with nothing read before. */
 export function readTime(percent: number, more: Partial<SessionRecord> = {}, series = 'spoiled-gradient-echo/3D'): SessionRecord {

@@ -53,11 +53,22 @@ export function noiseDeviation(model: SeriesModel, baseline: Baseline, targetSnr
 /** White is at most this many times the brighter one of target and comparison, so that fat does not darken them. */
 const pairShare = 2.2;
 
-/** Computes both pictures. What cannot be drawn is a problem; what is left out or assumed stands in the notes. */
-export function picturePair(request: PairRequest): Outcome<PicturePair> {
+/** One of the pictures, and what it leaves out or assumes. */
+export type DrawnSeries = Outcome<{ readonly picture: Picture; readonly notes: readonly string[] }>;
+
+/** Computes the picture of the preset. */
+export function presetPicture(request: PairRequest): DrawnSeries {
+  return drawn(request.baseline.model, request);
+}
+
+/**
+ * Computes both pictures. What cannot be drawn is a problem; what is left out or assumed stands in the notes.
+ *
+ * @param preset The picture of the preset where it is known from an earlier request with the same object, body and baseline.
+ */
+export function picturePair(request: PairRequest, preset: DrawnSeries = presetPicture(request)): Outcome<PicturePair> {
   const { baseline, series, scanner } = request;
   const model = modelOf(series, scanner, baseline.model.slotFactor);
-  const preset = drawn(baseline.model, request);
   if (!preset.ok) return preset;
   const now = drawn(model, request);
   if (!now.ok) return now;
@@ -70,7 +81,7 @@ export function picturePair(request: PairRequest): Outcome<PicturePair> {
   return { ok: true, value: { preset: preset.value.picture, now: now.value.picture, white: white > 0 ? white : 1, notes } };
 }
 
-function drawn(model: SeriesModel, request: PairRequest): Outcome<{ readonly picture: Picture; readonly notes: readonly string[] }> {
+function drawn(model: SeriesModel, request: PairRequest): DrawnSeries {
   const { series } = model;
   const plane = picturePlane(series.plane, series.parameters.phaseDirection);
   const object = placeObject(request.object, series, plane, request.body);

@@ -4,7 +4,7 @@ import type { Outcome } from '../calc/problem.js';
 import { plainScanner, type Scanner } from '../calc/scanner.js';
 import type { Parameters, Series } from '../calc/series.js';
 import type { ObjectFile } from '../study/object-file.js';
-import { type PicturePair, picturePair, usualTargetSnr } from './picture-pair.js';
+import { type DrawnSeries, type PicturePair, picturePair, presetPicture, usualTargetSnr } from './picture-pair.js';
 import { type PictureWindow, squareWindow } from './picture-window.js';
 
 /** What a pair of pictures is asked with from the interface; plain values, so that a worker can be handed them. */
@@ -31,12 +31,28 @@ export interface DrawnPictures {
   readonly voxelMm: number;
 }
 
+/** Gives what was drawn for the same key the last time, else draws it. */
+export type KeepPreset = (key: string, draw: () => DrawnSeries) => DrawnSeries;
+
+/** Keeps one picture: the preset's stays the same while a series is adjusted, and is half of the work. */
+export function keepPreset(): KeepPreset {
+  let kept: { readonly key: string; readonly drawn: DrawnSeries } | null = null;
+  return (key, draw) => {
+    if (kept?.key !== key) kept = { key, drawn: draw() };
+    return kept.drawn;
+  };
+}
+
 /** Draws both pictures: the one path that worker and program share, so that both give the same. */
-export function drawPictures(problem: PictureProblem, object: ObjectFile): Outcome<DrawnPictures> {
+export function drawPictures(problem: PictureProblem, object: ObjectFile, keep: KeepPreset = keepPreset()): Outcome<DrawnPictures> {
   const { preset, presetFieldT, parameters, scanner, body } = problem;
   const baseline = baselineOf(preset, plainScanner(presetFieldT));
   const series = { ...preset, parameters };
-  const pair = picturePair({ object, series, scanner, body, baseline, targetSnr: usualTargetSnr, seed: 1, fineness: 1 });
+  const request = { object, series, scanner, body, baseline, targetSnr: usualTargetSnr, seed: 1, fineness: 1 };
+  const pair = picturePair(
+    request,
+    keep(JSON.stringify([preset, presetFieldT, body, object]), () => presetPicture(request)),
+  );
   if (!pair.ok) return pair;
   const voxels = [preset.parameters, parameters].flatMap((p) => [p.fieldOfViewMm / p.matrixRead, p.fieldOfViewMm / p.matrixPhase]);
   const { look, title } = object;

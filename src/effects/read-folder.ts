@@ -27,7 +27,7 @@ export async function readFolder(
   now: HeaderReading,
 ): Promise<Answer | null> {
   const place = await placeOf(world, path);
-  if ('says' in place) return failed('no-folder', place.says, '');
+  if ('says' in place) return failed('folder-not-there', place.says, '');
   const collector = new SeriesCollector();
   const kinds = new Map<string, number>();
   const tell = fileTeller(world, ask);

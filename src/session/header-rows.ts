@@ -16,7 +16,7 @@ export type ValueGroup = (typeof valueGroups)[number];
 /** What stands above each group. */
 const groupWords: Readonly<Record<ValueGroup, string>> = {
   needed: 'To type before it can be used',
-  some: 'There is some, the header does not say how much: the default is wrong',
+  some: 'There is some, how much is not said: the default is as if there were none',
   default: 'Missing: the default holds until it is typed',
   guess: 'Guessed: explains the rest of the header',
   derived: 'Derived from what the header says',
@@ -59,6 +59,11 @@ export function originCounts({
   const counts = { read: 0, derived: 0, assumed: 0, missing: 0, typed: 0 };
   for (const { key, origin } of read.values) counts[typed[key] !== undefined ? 'typed' : origin === 'guess' ? 'assumed' : origin] += 1;
   return counts;
+}
+
+/** Values of which the header says that there is some, not how much, and that nobody typed. */
+export function someOf({ read, typed }: SeriesToDraft): number {
+  return read.values.filter(({ key, some }) => some === true && typed[key] === undefined).length;
 }
 
 /** What a series cannot be without and nobody gave. */

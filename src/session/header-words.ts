@@ -1,7 +1,7 @@
 import { classRow } from '../calc/classes.js';
 import type { SeriesToDraft } from '../headers/draft-of-headers.js';
 import type { ReadSeries } from '../headers/read-series.js';
-import { neededOf, originCounts } from './header-rows.js';
+import { neededOf, originCounts, someOf } from './header-rows.js';
 import { headerDraft, seriesHere, seriesRead } from './header-view.js';
 import { sayTime } from './say-time.js';
 import type { State } from './state.js';
@@ -85,8 +85,9 @@ export function headersHeadline(state: State): string {
     const one = seriesHere(state);
     if (one === undefined) return 'No series was read';
     const { missing } = originCounts(one);
-    const lacks = lackWords(one);
-    return `${one.read.id}: ${lacks ?? `can be saved; ${missing} missing ${missing === 1 ? 'value has its default' : 'values have their defaults'}`}`;
+    const some = someOf(one);
+    const defaults = `${missing} missing at ${missing === 1 ? 'its default' : 'their defaults'}`;
+    return `${one.read.id}: ${lackWords(one) ?? `can be saved; ${defaults}${some === 0 ? '' : `, ${some} of them said to be there`}`}`;
   }
   const whole = headerDraft(state.headers).study?.series.length ?? 0;
   const count = found.series.length;

@@ -21,7 +21,7 @@ const reading = update(typing, { kind: 'key', key: keyOf('enter'), atMs: 1 })[0]
 const list = pressAnswered(typing, 'enter');
 
 function failed(): State {
-  const problems = [{ code: 'no-folder', path: '', message: 'Nothing is there under this path.', hint: '' }];
+  const problems = [{ code: 'folder-not-there', path: '', message: 'Nothing is there under this path.', hint: '' }];
   return update(reading, { kind: 'answer', ask: reading.open.headers as number, answer: { kind: 'failed', problems } })[0];
 }
 

@@ -56,7 +56,7 @@ describe('a folder that is typed', () => {
 
   it('a wrong path is told where it was typed, to be mended there; what was read before stays', () => {
     const [reading] = update(pressAnswered(list, '/', 'paste x'), { kind: 'key', key: keyOf('enter'), atMs: 1 });
-    const problems = [{ code: 'no-folder', path: '', message: 'Nothing is there under this path.', hint: '' }];
+    const problems = [{ code: 'folder-not-there', path: '', message: 'Nothing is there under this path.', hint: '' }];
     const told = update(reading, { kind: 'answer', ask: reading.open.headers as number, answer: { kind: 'failed', problems } })[0];
     expect(told.entry).toMatchObject({ field: 'path', text: '/examx' });
     expect(told.notice).toEqual({ words: 'Nothing is there under this path.', level: 'trouble' });
@@ -131,7 +131,7 @@ describe('the review', () => {
       words: 'the header: EchoTime is not stated',
     });
     expect(typed.notice?.words).toBe('TE: nothing more must be typed');
-    expect(headersHeadline(typed)).toMatch(/^s2: can be saved; \d+ missing values have their defaults$/);
+    expect(headersHeadline(typed)).toMatch(/^s2: can be saved; \d+ missing at their defaults, 1 of them said to be there$/);
     expect(headerDraft(typed.headers).study?.series.find(({ id }) => id === 's2')?.parameters.echoTimeMs).toBe(12);
     expect(headerDraft(typed.headers).study?.notes).toContain('typed echoTimeMs');
     const cleared = pressAnswered(typed, 'delete');

@@ -48,11 +48,13 @@ export function takeHeaders(state: State, answer: Answer, failed: string | null)
   const own = found.series.filter(({ isDerived }) => !isDerived).map(({ id }) => id);
   const first = found.series[0]?.id ?? '';
   const fields = { ...state.place.fields, headers: first, 'header-values': '' };
-  return {
+  const read: State = {
     ...state,
+    notice: null,
     place: { ...state.place, fields },
     headers: { ...headers, found, picked: own, typed: {}, fieldT: null, seriesId: first },
   };
+  return found.isStopped ? say(read, 'Stopped: slices, coverage and counts are of what was read so far') : read;
 }
 
 /** Ends the reading that runs and shows what there is; else goes back, to a list that knows the drafts that were saved. */

@@ -39,7 +39,7 @@ function addOneOfEach(): void {
   },
 `,
   );
-  putBefore('src/calc/signal/class-signal.ts', "  'spin-echo': spinEcho,", "  'invented-gradient-echo': spoiled,\n");
+  putBefore('src/calc/signal/class-signal.ts', "    case 'echo-planar-gradient-echo':", "    case 'invented-gradient-echo':\n");
 }
 
 /** A study of one series of the invented class; every value is invented. */

@@ -29,6 +29,7 @@ function listItems(state: State): ShelfItem[] {
         `${read === undefined ? id : seriesTitle(read)}, ${isPicked ? 'picked' : 'not picked'}`,
         ...(needed === null ? [`reason ${read?.decision.reason ?? ''}`] : []),
         `${slices === '-' ? 'slices not stated' : `${slices} slices`}, ${coverage === '-' ? 'coverage not stated' : `coverage ${coverage}`}`,
+        ...(needed === null || needed === 0 ? [] : [`${needed} to type before it can be used`]),
         `${asRead} values read, ${derived} derived, ${assumed} assumed, ${missing} missing${typed === 0 ? '' : `, ${typed} typed`}`,
       ];
       return { words: words.join('; '), here: id === here };

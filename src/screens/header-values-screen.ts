@@ -1,4 +1,4 @@
-import { type HeaderRow, headerRow, headerRows } from '../session/header-rows.js';
+import { classReason, type HeaderRow, headerRow, headerRows } from '../session/header-rows.js';
 import { seriesHere } from '../session/header-view.js';
 import { extraWords, seriesTitle } from '../session/header-words.js';
 import type { State } from '../session/state.js';
@@ -63,7 +63,7 @@ function detail(state: State, { glyphs }: Look, columns: number, rows: number, h
   const row = headerRow(state);
   if (one === undefined || row === undefined) return fill([], rows);
   const about = `${row.label} ${row.shown}${row.origin === '' ? '' : `, ${row.origin}`}: ${row.words}`;
-  const words = hasSeries ? [seriesTitle(one.read), `Class: ${one.read.decision.reason}`, extraWords(one.read), '', about] : [about];
+  const words = hasSeries ? [seriesTitle(one.read), `Class: ${classReason(one)}`, extraWords(one.read), '', about] : [about];
   const lines = words.flatMap((each) => wrap(each, columns));
   const long = longNotice(state, columns);
   const room = rows - long.length;

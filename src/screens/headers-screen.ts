@@ -1,3 +1,4 @@
+import { classReason } from '../session/header-rows.js';
 import { headerDraft, leftOutWords, seriesHere } from '../session/header-view.js';
 import { extraWords, type HeaderCells, headerCells, lackWords, seriesTitle } from '../session/header-words.js';
 import type { State } from '../session/state.js';
@@ -88,7 +89,7 @@ function aboutWords(one: NonNullable<ReturnType<typeof seriesHere>>): string[] {
   const lacks = lackWords(one);
   return [
     seriesTitle(read),
-    `Class: ${read.decision.reason}`,
+    `Class: ${classReason(one)}`,
     ...(read.isDerived ? ['Made from other images: in the draft only where it is picked'] : []),
     extraWords(read),
     ...(lacks === null ? [] : [`${lacks}: Enter`]),

@@ -93,16 +93,19 @@ function valueRow(value: ReadValue, group: ValueGroup, one: SeriesToDraft, field
   const isTyped = one.typed[value.key] !== undefined;
   const stands = one.typed[value.key] ?? value.value;
   const isNone = stands === undefined && (value.key === 'diffusion' || value.origin !== 'missing');
+  // Of a value with parts one may be stated and another not.
+  const lacksPart =
+    !isTyped && field.inner !== null && value.origin !== 'missing' && !isNone && fieldValue(field, parameters) === undefined;
   const shown = group === 'needed' && !isTyped ? 'to type' : isNone ? 'none' : sayField(field, fieldValue(field, parameters));
   return {
     field: field.path,
     kind: 'value',
     label: field.label,
     shown,
-    origin: isTyped ? 'typed' : originWords[group],
-    words: isTyped ? `the header: ${headerSays(value)}` : value.words,
+    origin: isTyped ? 'typed' : lacksPart ? 'missing' : originWords[group],
+    words: isTyped ? `the header: ${headerSays(value)}` : lacksPart ? 'not stated' : value.words,
     of: field,
-    attention: !isTyped && ['needed', 'some', 'guess'].includes(group),
+    attention: lacksPart || (!isTyped && ['needed', 'some', 'guess'].includes(group)),
   };
 }
 
@@ -122,6 +125,12 @@ const info = (field: string, label: string, shown: string, origin: string, words
   attention: false,
 });
 
+/** Why a series has its class. */
+export function classReason({ read }: SeriesToDraft): string {
+  const { reason } = read.decision;
+  return reason === 'typed' ? 'by hand' : reason;
+}
+
 /** Class and field first, then value by value: missing ones, guesses, derived ones, those that were read, what the draft assumes. */
 export function headerRows(state: State): readonly HeaderRow[] {
   const one = seriesHere(state);
@@ -130,7 +139,7 @@ export function headerRows(state: State): readonly HeaderRow[] {
   const { key, reason } = read.decision;
   const rows: HeaderRow[] = [
     {
-      ...info('class', 'class', key === null ? 'not decided' : classRow(key).label, reason === 'typed' ? 'chosen' : '', reason),
+      ...info('class', 'class', key === null ? 'not decided' : classRow(key).label, reason === 'typed' ? 'chosen' : '', classReason(one)),
       kind: 'class',
       attention: key === null,
     },

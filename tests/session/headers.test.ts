@@ -170,6 +170,18 @@ describe('the review', () => {
     expect(headerAnswer({ kind: 'class-headers', ask: 1, id: 's9', key: null })).toBeNull();
   });
 
+  it('a part of a value that is not stated says so, though the others are read', () => {
+    const read = { key: 'pacing', origin: 'read', value: { kind: 'respiratory-trigger' }, words: 'a gate' } as const;
+    const [first, ...others] = inventedHeaders.series;
+    const paced = { ...first!, values: first!.values.map((one) => (one.key === 'pacing' ? read : one)) };
+    const { headers } = review('s1');
+    const state = { ...review('s1'), headers: { ...headers, found: { ...inventedHeaders, series: [paced, ...others] } } };
+    expect(rowOf(state, 'pacing.kind')).toMatchObject({ shown: 'respiratory trigger', origin: 'read' });
+    expect(rowOf(state, 'pacing.periodMs')).toMatchObject({ origin: 'missing', words: 'not stated', attention: true });
+    const typed = pressAnswered(onLine(state, 'pacing.periodMs'), '4', ' ', 's', 'enter');
+    expect(typed.headers.typed.s1).toEqual({ pacing: { kind: 'respiratory-trigger', periodMs: 4000 } });
+  });
+
   it('choices and flags turn; b-values bring as many averages', () => {
     const state = review('s1');
     const turned = pressAnswered(onLine(state, 'flowCompensation'), 'right');

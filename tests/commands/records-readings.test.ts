@@ -1,23 +1,28 @@
-import { writeFileSync } from 'node:fs';
+import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import type { SessionRecord } from '../../src/study/record.js';
 import { recordLine } from '../../src/study/record-line.js';
 import { temporaryFolder } from '../store/temporary-folder.js';
-import { readTime, twelveTimes } from '../study/read-times.js';
+import { countedByHand } from '../study/read-times.js';
 import { runCommand } from './run-command.js';
+
+const linesOf = (records: readonly SessionRecord[]) => records.map((record) => `\n${recordLine(record)}\n`).join('');
 
 function fileOf(records: readonly SessionRecord[]) {
   const homeFolder = temporaryFolder();
   const file = join(homeFolder, 'records.jsonl');
-  writeFileSync(file, records.map((record) => `\n${recordLine(record)}\n`).join(''));
+  writeFileSync(file, linesOf(records));
   return (...args: string[]) => runCommand(['records', 'report', '--readings', file, ...args], { homeFolder });
 }
 
-const slow = Array.from({ length: 5 }, () => readTime(8, { scanner: '', day: '2026-02-02' }, 'fast-spin-echo/2D'));
-const all = [...twelveTimes(), readTime(-7, { day: '2026-03-09' }, 'fast-spin-echo/2D'), ...slow];
+const all = countedByHand();
 
 describe('records report --readings', () => {
+  it('the invented file of the example in README.md is the one counted by hand here', () => {
+    expect(readFileSync('scripts/invented-readings.jsonl', 'utf8')).toBe(linesOf(all));
+  });
+
   it('shows the error by class and scanner, its drift, small counts, and what to review', async () => {
     const { exit, out, err } = await fileOf(all)();
     expect([exit, err]).toEqual([0, '']);

@@ -11,6 +11,7 @@ export function readTime(percent: number, more: Partial<SessionRecord> = {}, ser
   const read = { before: null, after: { timeS: Number((10 * (1 + percent / 100)).toPrecision(12)) } };
   return {
     ...inventedRecord,
+    tool: '0.1.0 invented',
     scanner: 'demo-3t',
     reasons: [],
     ...more,
@@ -21,4 +22,10 @@ export function readTime(percent: number, more: Partial<SessionRecord> = {}, ser
 /** The twelve on one scanner. */
 export function twelveTimes(scanner = 'demo-3t'): SessionRecord[] {
   return twelveErrors.map((percent, i) => readTime(percent, { scanner, day: `2026-0${i < 6 ? 1 : 3}-0${(i % 6) + 1}` }));
+}
+
+/** The records of `scripts/invented-readings.jsonl`: the twelve, one of another class, and five on a scanner that nobody named. */
+export function countedByHand(): SessionRecord[] {
+  const slow = Array.from({ length: 5 }, () => readTime(8, { scanner: '', day: '2026-02-02' }, 'fast-spin-echo/2D'));
+  return [...twelveTimes(), readTime(-7, { day: '2026-03-09' }, 'fast-spin-echo/2D'), ...slow];
 }

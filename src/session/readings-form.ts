@@ -79,9 +79,12 @@ export function readingRows(state: State, when: When, id: string, reading: Recor
   ];
 }
 
-/** Conditions of a reading are those of its SAR, which alone hangs on the body; else those of its first number. */
+/** What a number typed now was read with. SAR alone hangs on the body: while it stays as it was read, so do the extents it was read with. */
 function readWith(state: State, reading: RecordedReading | null, key: keyof RecordedReading): ReadingConditions {
-  return key === 'sarWkg' ? conditionsNow(state) : (reading?.conditions ?? conditionsNow(state));
+  const now = conditionsNow(state);
+  const then = reading?.conditions;
+  if (key === 'sarWkg' || reading?.sarWkg === undefined || then === undefined) return now;
+  return { ...now, frontBackMm: then.frontBackMm, leftRightMm: then.leftRightMm };
 }
 
 /** A reading without what was taken out; null when nothing is left. */

@@ -46,6 +46,8 @@ describe('a reading', () => {
     ]);
     expect(resultNow(wider, id).evaluation.fromReading).toContain('scanTimeS');
     expect(seriesHeadline(press(wider, 'u'), id).text).toContain('SAR 1.00 W/kg');
+    // Another number typed now makes it no newer.
+    expect(seriesHeadline(typed(wider, 'readings', 'before timeS', '21'), id).text).toMatch(/^NOT JUDGED: SAR cap/);
     // Read again it holds again.
     expect(seriesHeadline(typed(wider, 'readings', 'before sarWkg', '1.1'), id).text).toContain('SAR 1.10 W/kg');
   });

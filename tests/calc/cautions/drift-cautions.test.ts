@@ -84,6 +84,11 @@ describe('contrast drift: ratio off by more than 10 %', () => {
     }
     expect(edit(series, { repetitionTimeMs: 650 }).codes).not.toContain('contrast-drift');
     expect(cautionOf(edit(series, { repetitionTimeMs: 3000 }), 'contrast-drift')?.level).toBe('caution');
+    const drifted = edit(series, { repetitionTimeMs: 3000 });
+    expect(cautionOf(drifted, 'contrast-drift')?.numbers).toEqual({
+      change: drifted.figures.contrastRatioChange,
+      contrastRatio: drifted.figures.contrastRatio,
+    });
   });
 
   it('sits at 10 % exactly', () => {

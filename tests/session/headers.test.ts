@@ -55,7 +55,7 @@ describe('a folder that is typed', () => {
   });
 
   it('a wrong path is told where it was typed, to be mended there; what was read before stays', () => {
-    const [reading] = update(pressAnswered(list, '/', 'paste x'), { kind: 'key', key: keyOf('enter'), atMs: 1 });
+    const [reading] = update(pressAnswered(list, '/', 'paste /examx'), { kind: 'key', key: keyOf('enter'), atMs: 1 });
     const problems = [{ code: 'folder-not-there', path: '', message: 'Nothing is there under this path.', hint: '' }];
     const told = update(reading, { kind: 'answer', ask: reading.open.headers as number, answer: { kind: 'failed', problems } })[0];
     expect(told.entry).toMatchObject({ field: 'path', text: '/examx' });

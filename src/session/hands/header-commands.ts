@@ -8,7 +8,7 @@ import type { Answer } from '../message.js';
 import type { State } from '../state.js';
 import { back } from './common-commands.js';
 
-/** Begins to type a path; what was typed last stands there. */
+/** Begins to type a path. */
 function beginPath(state: State, text: string): State {
   if (state.headers.reading !== null) return say(state, 'Headers are being read: Escape stops it');
   return { ...state, notice: null, entry: { field: 'path', text, ask: null, isText: true } };
@@ -17,10 +17,11 @@ function beginPath(state: State, text: string): State {
 /** Opens the screen of headers; where nothing was read yet, a path is typed at once. */
 export const showHeaders: Command = (state) => {
   const shown = open(state, 'headers');
-  return only(shown.headers.found === null && shown.headers.reading === null ? beginPath(shown, shown.headers.path) : shown);
+  return only(shown.headers.found === null && shown.headers.reading === null ? beginPath(shown, '') : shown);
 };
 
-export const typePath: Command = (state) => only(beginPath(state, state.headers.path));
+/** Another path from its beginning: it may be pasted. */
+export const typePath: Command = (state) => only(beginPath(state, ''));
 
 /** A path that is pasted begins its typing. */
 export const pastePath: Command = (state, key) => only(beginPath(state, (key.text ?? '').trim()));

@@ -2,7 +2,7 @@ import type { FigureKey } from '../calc/figures.js';
 import { usualTargetSnr } from '../picture/picture-pair.js';
 import { pictureSet } from './picture-view.js';
 import { pictureFigureWords } from './picture-words.js';
-import { resultOfPreset, resultWith, studySeries } from './results.js';
+import { resultOnOwnField, resultWith, studySeries } from './results.js';
 import { sayFigure } from './say-figure.js';
 import type { State } from './state.js';
 
@@ -27,7 +27,7 @@ export function pictureSentences(state: State): string[] {
   const { set, of } = pictureSet(state);
   const series = studySeries(state, seriesId);
   const now = resultWith(state, seriesId, set);
-  const before = resultOfPreset(state, seriesId).evaluation.figures;
+  const before = resultOnOwnField(state, seriesId).evaluation.figures;
   const { figures } = now.evaluation;
   const differences = seen.flatMap(([key, more, less]) => {
     const [was, is] = [key.startsWith('relative') ? 1 : before[key], figures[key]];

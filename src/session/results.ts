@@ -128,8 +128,15 @@ function numberOf(scanner: Scanner): number {
 }
 
 /** The same by what the values say, not by which object holds them. */
-function keptResult(state: State, series: StudySeries, own: Kept, set: GivenParameters, body: Body, readings: Readings): SeriesResult {
-  const scanner = scannerNow(state) ?? own.baseline.model.scanner;
+function keptResult(
+  state: State,
+  series: StudySeries,
+  own: Kept,
+  set: GivenParameters,
+  body: Body,
+  readings: Readings,
+  scanner = scannerNow(state) ?? own.baseline.model.scanner,
+): SeriesResult {
   const key = JSON.stringify([set, readings, body, state.rules.size, numberOf(scanner)]);
   const known = own.results.get(key);
   if (known !== undefined) return known;
@@ -158,4 +165,12 @@ export function modelOfPreset(state: State, id: string): SeriesResult {
 /** The preset of a series under the same circumstances. */
 export function resultOfPreset(state: State, id: string): SeriesResult {
   return resultWith(state, id, nothingSet);
+}
+
+/** The preset of a series as its file has it, at its own field, whatever scanner the session is on. */
+export function resultOnOwnField(state: State, id: string): SeriesResult {
+  const series = studySeries(state, id);
+  const own = keptOf(state, series);
+  const readings = readingsOf(state, sessionSeries(state, id));
+  return keptResult(state, series, own, nothingSet, bodyOf(state), readings, own.baseline.model.scanner);
 }

@@ -5,6 +5,7 @@ import { pictureSet } from '../../src/session/picture-view.js';
 import { update } from '../../src/session/update.js';
 import { pictureFailed, picturesOf, withPicture } from './drawn-picture.js';
 import { onField, press, sessionOn } from './invented-state.js';
+import { atScanner, startWithScanners } from './shipped-scanners.js';
 
 const order = press(sessionOn('liver-3t'), 'p', '11', 'enter', 'escape');
 const dwi = press(order, 'end', 'enter');
@@ -68,6 +69,14 @@ describe('pictures in the interface', () => {
     expect(asked(effects)).toHaveLength(1);
     expect(asked(update({ ...kept, size: { columns: 100, rows: 30 } }, key('+'))[1])).toEqual([]);
     expect(asked(update(press(wide, 's', 'k', 'k', 'escape'), key('+'))[1])).toEqual([]);
+  });
+
+  it('compare with the preset at the field of its file, as its picture is drawn, on whatever scanner the session is', () => {
+    const chosen = press(atScanner(startWithScanners(['shoulder-1.5t']), 'demo-3t shoulder'), 'enter', 'enter');
+    const said = pictureSentences(press(chosen, 'o', 'enter', 's'));
+    // At the same bandwidth fat lies 2.894 T / 1.5 T times as far away.
+    expect(said).toContain('Fat lies further from its place (0.60 mm to 1.16 mm)');
+    expect(said).toContain('chemical shift: 0.60 mm to 1.16 mm');
   });
 
   it('say each difference in a sentence, and what failed', () => {

@@ -50,7 +50,7 @@ function nothingIgnored(p: Parameters, usable: Usable): boolean {
     (p.referenceLines === 0 || usable.referenceLines) &&
     (p.partialFourierPhase === 1 || usable.partialFourierPhase) &&
     (p.partialFourierSlice === 1 || usable.partialFourierSlice) &&
-    (!p.ellipticalSampling || usable.ellipticalSampling) &&
+    (p.ellipticalSampling === false || usable.ellipticalSampling) &&
     (p.simultaneousSlices === 1 || usable.simultaneousSlices) &&
     (p.secondEchoTimeMs === undefined || usable.secondEchoTimeMs) &&
     (p.inversionTimeMs === undefined || usable.inversionTimeMs) &&

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { baselineOf } from '../../src/calc/baseline.js';
+import { compareWith } from '../../src/calc/compare.js';
 import type { TissueSignal } from '../../src/calc/evaluate.js';
 import { plainScanner } from '../../src/calc/scanner.js';
 import type { GivenParameters } from '../../src/calc/series.js';
@@ -152,5 +154,29 @@ describe('relativeContrast and contrastRatio', () => {
       { comparison: 'subcutaneous fat' },
     );
     expect(edit(series).figures).toMatchObject({ contrastRatio: null, contrastRatioChange: null, relativeContrast: 1 });
+  });
+});
+
+describe('target and comparison that are nearly equal in the baseline', () => {
+  // A share of 1 % of the larger one, chosen here; at the share itself there is still a contrast to compare with.
+  const series = spinEcho();
+  const { model, ...rest } = baselineOf(series, plainScanner(1.5));
+  const contrastAgainst = (targetSignal: number, comparisonSignal: number) =>
+    compareWith(model, { ...rest, model, targetSignal, comparisonSignal }).relativeContrast;
+
+  it.each([
+    [100, 99],
+    [99, 100],
+  ])('%i and %i have a contrast', (target, comparison) => {
+    expect(contrastAgainst(target, comparison)).toBeGreaterThan(0);
+  });
+
+  it.each([
+    [100, 99.001],
+    [99.001, 100],
+    [1, 1],
+    [0, 0],
+  ])('%d and %d have none', (target, comparison) => {
+    expect(contrastAgainst(target, comparison)).toBeNull();
   });
 });

@@ -17,7 +17,12 @@ describe.each(classKeys)('what %s cannot use', (key) => {
   });
 
   it('is each parameter of another class, named one by one', () => {
-    for (const name of foreign) expect(ignoredIn(key, { ...neutral, [name]: 7 } as Parameters)).toEqual([name]);
+    for (const name of foreign) {
+      for (const value of [7, 0, 1, 2, 99, 100, 101, -1, true, 'text']) {
+        const expected = value === neutral[name] ? [] : [name];
+        expect(ignoredIn(key, { ...neutral, [name]: value } as Parameters), `${name} ${value}`).toEqual(expected);
+      }
+    }
   });
 
   it('is none of its own', () => {

@@ -56,7 +56,7 @@ export function timeBandwidthOfPower(powerFactor: number): number {
   let before = powerFactor;
   let here = 1.3 * powerFactor;
   let offBefore = off(before);
-  for (let i = 0; i < 20 && here !== before; i += 1) {
+  for (let i = 0; i < 20; i += 1) {
     const offHere = off(here);
     if (offHere === offBefore) break;
     const next = here - (offHere * (here - before)) / (offHere - offBefore);

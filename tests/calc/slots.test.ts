@@ -20,6 +20,7 @@ describe('slotMs', () => {
     ['an earlier second echo counts for nothing', 'spoiled-gradient-echo/2D', { echoTimeMs: 4.6, secondEchoTimeMs: 2.3 }, 10.1],
     ['train: 1.25 + 16 x 10 + 5 + 2', 'fast-spin-echo/2D', { echoTimeMs: 80, echoTrainLength: 16, echoSpacingMs: 10 }, 168.25],
     ['gradient echo: 1 + 5 + 2.5 + 2', 'spoiled-gradient-echo/2D', { echoTimeMs: 5 }, 10.5],
+    ['an echo under 1 ms: 1 + 0.4 + 2.5 + 2', 'spoiled-gradient-echo/2D', { echoTimeMs: 0.4 }, 5.9],
     ['bandwidth: 500/1000', 'spoiled-gradient-echo/2D', { echoTimeMs: 5, pixelBandwidthHz: 1000 }, 8.5],
     [
       'echo-planar: 1.5 + 30 + half of 64 lines of 0.5 ms + 2',

@@ -170,8 +170,17 @@ const keyByFamily: Readonly<Record<string, Readonly<Partial<Record<Acquisition, 
 
 /** The class of a family and acquisition that are known to stand together in the table. */
 export function knownClass(family: Family, acquisition: Acquisition): ClassKey {
-  return keyByFamily[family]?.[acquisition] as ClassKey;
+  // The edits of a series ask for the same class again and again.
+  if (family !== lastFamily || acquisition !== lastAcquisition) {
+    lastFamily = family;
+    lastAcquisition = acquisition;
+    lastClass = keyByFamily[family]?.[acquisition] as ClassKey;
+  }
+  return lastClass;
 }
+let lastFamily: Family = 'spin-echo';
+let lastAcquisition: Acquisition = '2D';
+let lastClass: ClassKey = 'spin-echo/2D';
 
 /** The row of a class, widened for code that handles any class. */
 export function classRow(key: ClassKey): ClassRow {

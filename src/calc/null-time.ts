@@ -2,7 +2,7 @@ import { classRow } from './classes.js';
 import type { FatSuppression, Series } from './series.js';
 import { type ClassTiming, classTimingOf, type SignalSetting } from './signal/class-signal.js';
 import { trainEnd, trainLongitudinal } from './signal/echo-train-signal.js';
-import { inversionPreparedSignal } from './signal/inversion-prepared.js';
+import { readoutsOf, signalAfterInversion } from './signal/inversion-prepared.js';
 import { spinEchoLongitudinal } from './signal/spin-echo.js';
 import { fatTissue, fluidTissue, type Tissue } from './tissues.js';
 
@@ -46,7 +46,8 @@ export function nullTimeMs(setting: SignalSetting, { t1Ms, t2Ms }: Tissue, timin
   if (prepared !== null) {
     const lead = prepared.centre * prepared.echoSpacingMs;
     const longest = prepared.repetitionTimeMs - (prepared.readouts - prepared.centre) * prepared.echoSpacingMs;
-    return rootMs((ti) => inversionPreparedSignal(prepared, t1Ms, ti), lead, longest, t1Ms);
+    const readouts = readoutsOf(prepared, t1Ms);
+    return rootMs((ti) => signalAfterInversion(prepared, t1Ms, readouts, ti), lead, longest, t1Ms);
   }
   if (classRow(setting.key).train) {
     const end = timing.fromEquilibrium ? { z0: 0, gain: 0 } : trainEnd(timing, t1Ms, t2Ms);

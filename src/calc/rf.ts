@@ -29,8 +29,8 @@ export function repetitionEnergyUt2Ms(key: ClassKey, p: Parameters, lines: Lines
   const imaging =
     excitationCount(key, lines) * pulses.excitation.energyUt2Ms + refocusingCount(key, p) * (pulses.refocusing?.energyUt2Ms ?? 0);
   const volume = classRow(key).interleaving === 'volume';
-  const bands = p.saturationBands * (pulses.band?.energyUt2Ms ?? 0) * bandShare(key, p);
-  const fat = (pulses.fatSaturation?.energyUt2Ms ?? 0) * fatShare(key, p);
+  const bands = pulses.band === null ? 0 : p.saturationBands * pulses.band.energyUt2Ms * bandShare(key, p);
+  const fat = pulses.fatSaturation === null ? 0 : pulses.fatSaturation.energyUt2Ms * fatShare(key, p);
   // All pulses of a stretched series last longer, the inversion among them: its energy falls alike.
   const inversions = p.inversionTimeMs === undefined ? 0 : (inversionEnergyUt2Ms / p.rfPulseStretch) * (volume ? 1 : slices);
   return slots * (p.simultaneousSlices * imaging + bands + fat) + inversions;

@@ -18,13 +18,16 @@ export interface InterfaceSetup {
   readonly defaults: Defaults;
   /** Carries an effect out; null where nothing is answered. */
   readonly runEffect: (effect: Effect) => Promise<Answer | null>;
-  /** What is known at the start, in pieces, as it becomes known. */
+  /** What is known at the start, in pieces, as it becomes known; the first is what the first screen is about. */
   readonly firstMessages: readonly Promise<readonly Message[]>[];
   /** Hands over where things that happen outside are told. */
   readonly listen: (send: (message: Message) => void) => void;
   /** Saves what is not saved yet; called on every way out. */
   readonly leave: (draft: Draft | null) => Promise<void>;
 }
+
+/** So long the terminal shows the name of the program only; then that it waits. */
+const longestBlankMs = 150;
 
 /**
  * Opens the terminal interface. Answers its exit code when it is left.
@@ -78,14 +81,16 @@ export async function openInterface(setup: InterfaceSetup): Promise<number> {
   }
 
   setup.listen(send);
-  for (const messages of setup.firstMessages) {
+  const [shown] = setup.firstMessages.map((messages) =>
     messages.then((each) => {
       for (const message of each) send(message);
-    }, terminal.fail);
-  }
+    }, terminal.fail),
+  );
   mounted = await drawOn(
     terminal,
     look,
+    // A screen that says no more than that it waits would only delay the one that is about to come.
+    Promise.race([shown, new Promise((resolve) => setTimeout(resolve, longestBlankMs))]),
     () => state,
     (size) => {
       if (size.columns !== state.size.columns || size.rows !== state.size.rows) [state] = update(state, { kind: 'size', ...size });
@@ -102,6 +107,7 @@ export async function openInterface(setup: InterfaceSetup): Promise<number> {
 async function drawOn(
   terminal: ReturnType<typeof openTerminal>,
   look: Look,
+  worthShowing: Promise<unknown>,
   state: () => State,
   resized: (size: { readonly columns: number; readonly rows: number }) => void,
 ): Promise<Mounted> {
@@ -109,6 +115,7 @@ async function drawOn(
   const { loadInk } = await import('../terminal/load-ink.js');
   await loadInk();
   const [{ Frame }, { screenLines }] = await Promise.all([import('./frame.js'), import('./screen-lines.js')]);
+  await worthShowing;
   return mountOn(terminal, {
     colourLevel: look.colourLevel,
     element: (size) => {

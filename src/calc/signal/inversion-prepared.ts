@@ -22,19 +22,47 @@ export function inversionPreparedDelaysMs(s: InversionPreparedTiming): { readonl
  *
  * @example inversionPreparedSignal({ repetitionTimeMs: 2300, inversionTimeMs: 900, flipAngleDeg: 9, readouts: 176, centre: 88, echoSpacingMs: 7 }, 838) //=> 0.046769
  */
-export function inversionPreparedSignal(s: InversionPreparedTiming, t1Ms: number, inversionTimeMs = s.inversionTimeMs): number {
-  const beforeMs = inversionTimeMs - s.centre * s.echoSpacingMs;
-  const afterMs = s.repetitionTimeMs - beforeMs - s.readouts * s.echoSpacingMs;
+export function inversionPreparedSignal(s: InversionPreparedTiming, t1Ms: number): number {
+  return signalAfterInversion(s, t1Ms, readoutsOf(s, t1Ms), s.inversionTimeMs);
+}
+
+/** What the readouts of a cycle do to longitudinal magnetisation, whenever they begin. */
+export interface Readouts {
+  readonly sine: number;
+  /** What is left of M by all readouts, and by those before the centre. */
+  readonly keptByAll: number;
+  readonly keptByCentre: number;
+  /** What recovers meanwhile. */
+  readonly gainedByAll: number;
+  readonly gainedByCentre: number;
+}
+
+/** The readouts of a cycle for one T1. */
+export function readoutsOf(s: InversionPreparedTiming, t1Ms: number): Readouts {
   const angle = (s.flipAngleDeg * Math.PI) / 180;
   const e = Math.exp(-s.echoSpacingMs / t1Ms);
   const f = e * Math.cos(angle);
+  const keptByAll = wholePower(f, s.readouts);
+  const keptByCentre = wholePower(f, s.centre);
+  const share = (1 - e) / (1 - f);
+  return {
+    sine: Math.sin(angle),
+    keptByAll,
+    keptByCentre,
+    gainedByAll: share * (1 - keptByAll),
+    gainedByCentre: share * (1 - keptByCentre),
+  };
+}
+
+/** The same signal with the inversion `inversionTimeMs` before the centre. */
+export function signalAfterInversion(s: InversionPreparedTiming, t1Ms: number, readouts: Readouts, inversionTimeMs: number): number {
+  const beforeMs = inversionTimeMs - s.centre * s.echoSpacingMs;
+  const afterMs = s.repetitionTimeMs - beforeMs - s.readouts * s.echoSpacingMs;
   const eBefore = Math.exp(-beforeMs / t1Ms);
   const eAfter = Math.exp(-afterMs / t1Ms);
-  const fn = wholePower(f, s.centre);
-  const fN = wholePower(f, s.readouts);
-  const c = ((1 - e) * (1 - fN)) / (1 - f);
-  const steady = (1 + ((1 - eBefore) * fN + c - 1) * eAfter) / (1 + eBefore * fN * eAfter);
-  return Math.sin(angle) * ((1 - eBefore - steady * eBefore) * fn + ((1 - e) * (1 - fn)) / (1 - f));
+  const { sine, keptByAll, keptByCentre, gainedByAll, gainedByCentre } = readouts;
+  const steady = (1 + ((1 - eBefore) * keptByAll + gainedByAll - 1) * eAfter) / (1 + eBefore * keptByAll * eAfter);
+  return sine * ((1 - eBefore - steady * eBefore) * keptByCentre + gainedByCentre);
 }
 
 /** x to a whole power by repeated squaring: the general power takes several times as long. */

@@ -12,7 +12,7 @@ describe('an echo under 1 ms and no second one', () => {
 
   it('ends when it ends: the shortest TR of the estimate goes with TE', () => {
     const { minimumEchoTimeMs, minimumRepetitionTimeMs } = edit(series).figures;
-    const twice = edit(series, { secondEchoTimeMs: minimumEchoTimeMs }).figures;
+    const twice = edit(series, { secondEchoTimeMs: minimumEchoTimeMs as number }).figures;
     expect(twice.minimumRepetitionTimeMs).toBeCloseTo(minimumRepetitionTimeMs as number, 12);
   });
 

@@ -23,9 +23,9 @@ export function isCine(p: Parameters): boolean {
  */
 export function effectiveRepetitionTimeMs(p: Parameters): number {
   const { kind } = p.pacing;
-  if (kind === 'none' || kind === 'breath-hold') return p.repetitionTimeMs;
+  if (kind === 'none' || kind === 'breath-hold' || isCine(p)) return p.repetitionTimeMs;
   const period = pacingPeriodMs(p);
-  if (period === null || isCine(p)) return p.repetitionTimeMs;
+  if (period === null) return p.repetitionTimeMs;
   return period * guardedCeil(p.repetitionTimeMs / period);
 }
 

@@ -42,8 +42,10 @@ export function readoutsOf(s: InversionPreparedTiming, t1Ms: number): Readouts {
   const angle = (s.flipAngleDeg * Math.PI) / 180;
   const e = Math.exp(-s.echoSpacingMs / t1Ms);
   const f = e * Math.cos(angle);
-  const keptByAll = wholePower(f, s.readouts);
-  const keptByCentre = wholePower(f, s.centre);
+  // One logarithm and two exponentials are quicker than two powers; beyond 90 degrees each readout turns M over.
+  const decay = Math.log(f);
+  const keptByAll = f > 0 ? Math.exp(s.readouts * decay) : wholePower(f, s.readouts);
+  const keptByCentre = f > 0 ? Math.exp(s.centre * decay) : wholePower(f, s.centre);
   const share = (1 - e) / (1 - f);
   return {
     sine: Math.sin(angle),

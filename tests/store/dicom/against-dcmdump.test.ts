@@ -1,4 +1,4 @@
-import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { attributeRow, keywords, openedSequences, saturationBandSequence } from '../../../src/headers/attribute-table.js';
@@ -16,7 +16,7 @@ function realObjects(): readonly string[] {
   if (!existsSync(join(folder, 'complete'))) throw new Error(`${folder} is not there: run scripts/test-objects.sh (Debian, apt-get)`);
   return readdirSync(folder, { recursive: true, encoding: 'utf8' })
     .map((name) => join(folder, name))
-    .filter((path) => /\.dcm$|[\\/][A-Z]{2}\d+$|[\\/]\d{4,}$/.test(path));
+    .filter((path) => statSync(path).isFile() && /\.dcm$|[\\/][A-Z]{2}\d+$|[\\/]\d{4,}$/.test(path));
 }
 
 const mrClasses = ['=MRImageStorage', '=EnhancedMRImageStorage'];

@@ -41,7 +41,6 @@ export interface EvaluateOptions {
 }
 
 const noReadings: Readings = {};
-const noFigures: readonly FigureKey[] = [];
 
 /**
  * Evaluates a series on a scanner for a body, against a baseline. Total over every series the schema allows:
@@ -133,7 +132,6 @@ function blurOf(model: SeriesModel, t2Ms: number): number | null {
 
 /** Figures that come from a reading: time and breath-hold, B1+rms. SAR has no figure of its own: it follows the trend. */
 function fromReading(figures: Figures, readings: Readings): readonly FigureKey[] {
-  if (readings.timeS === undefined && readings.b1rmsUt === undefined) return noFigures;
   const keys: FigureKey[] = [];
   if (readings.timeS !== undefined) keys.push('scanTimeS', ...(figures.holdTimeS === null ? [] : (['holdTimeS'] as const)));
   if (readings.b1rmsUt !== undefined) keys.push('b1PlusRmsUt');
@@ -142,7 +140,6 @@ function fromReading(figures: Figures, readings: Readings): readonly FigureKey[]
 
 function signalsOf(model: SeriesModel, which: 'pair' | 'all'): TissueSignal[] {
   const { target, comparison } = model;
-  if (which === 'pair' && target !== null && comparison !== null) return [target, comparison];
   const signals: TissueSignal[] = [];
   if (target !== null) signals.push(target);
   if (comparison !== null) signals.push(comparison);

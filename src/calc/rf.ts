@@ -72,7 +72,6 @@ const fieldExponents = [2, 0.85] as const;
 
 /** Range of the SAR ratio to the baseline, sorted: equal to the RF power trend within one field. */
 export function sarTrend(powerTrend: number, fieldRatio: number): { readonly low: number; readonly high: number } {
-  if (fieldRatio === 1) return { low: powerTrend, high: powerTrend };
   const a = powerTrend * fieldRatio ** fieldExponents[0];
   const b = powerTrend * fieldRatio ** fieldExponents[1];
   return { low: Math.min(a, b), high: Math.max(a, b) };

@@ -91,25 +91,13 @@ export function fillDefaults(key: ClassKey, given: GivenParameters): Parameters 
   const filled: Record<string, unknown> = { ...seasoned };
   for (const name of parameterKeys) {
     const value = given[name];
-    filled[name] = value === undefined ? defaultOf(name, key) : ownWord(name, value);
+    filled[name] = value === undefined ? defaultOf(name, key) : value;
   }
   const parameters = filled as unknown as Parameters;
   if (row.otherwise.echoTrainLength === 'lines' && given.echoTrainLength === undefined) {
     filled.echoTrainLength = linesInOneTrain(key, acquiredLines(key, parameters));
   }
   return parameters;
-}
-
-/**
- * A choice as the table writes it. Equal texts are compared letter by letter unless they are one text in memory, and what a file
- * says is a text of its own.
- */
-function ownWord(name: ParameterKey, value: unknown): unknown {
-  const row = parameterRow(name);
-  if (row.kind === 'choice') return row.choices.find((choice) => choice === value) ?? value;
-  if (name !== 'pacing') return value;
-  const pacing = value as Pacing;
-  return { ...pacing, kind: pacingKinds.find((kind) => kind === pacing.kind) ?? pacing.kind };
 }
 
 /** Value of a parameter that was left out, before anything that depends on the lines. */

@@ -10,11 +10,11 @@ const { up, down, tab } = keyBytes;
 const burst = [down, '+', '-', down, '+', 'u', 'r', up, tab, down, tab, tab, '-', '+', down, 'n'].join('').repeat(4);
 
 describe('bursts of keys', () => {
-  it('a thousand keys in bursts leave the program alive, with the session on its screen', async () => {
+  it('three thousand keys in bursts leave the program alive, with the session on its screen', async () => {
     const screen = open(newHome());
     await screen.openPreset('3 liver');
     await screen.keys(keyBytes.enter, 'Series t1-3d');
-    for (let typed = 0; typed < 1000; typed += burst.length) {
+    for (let typed = 0; typed < 3000; typed += burst.length) {
       screen.program.press(burst);
       await screen.keys('h', 'Keys of this screen');
       await screen.escape('Series ');

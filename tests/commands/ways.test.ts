@@ -2,28 +2,13 @@ import { mkdtemp, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
+import { liverArterialPhase } from '../scenarios/invented-parameters.js';
 import { runCommand } from './run-command.js';
 
 const folder = await mkdtemp(join(tmpdir(), 'holdfast-ways-'));
 afterAll(() => rm(folder, { recursive: true, force: true }));
 
-/** Invented: 3D T1 of the liver, 17 s a hold. */
-const parameters = {
-  repetitionTimeMs: 3.55,
-  echoTimeMs: 1.2,
-  flipAngleDeg: 10,
-  pixelBandwidthHz: 635,
-  fieldOfViewMm: 380,
-  phaseFieldOfViewPercent: 80,
-  matrixRead: 320,
-  matrixPhase: 200,
-  sliceCount: 72,
-  sliceThicknessMm: 3,
-  sliceOversamplingPercent: 11,
-  partialFourierSlice: 0.75,
-  parallelFactorPhase: 2,
-  pacing: { kind: 'breath-hold' },
-};
+const { fatSuppression: _, ...parameters } = liverArterialPhase;
 
 /** An invented study of one series with few values to choose among, so that each test is quick. */
 async function preset(more: object = {}): Promise<string> {

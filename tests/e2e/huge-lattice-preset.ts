@@ -1,3 +1,5 @@
+import { liverArterialPhase } from '../scenarios/invented-parameters.js';
+
 /** 3D T1 of the liver in which so much is opened that its lattice holds more than 10^12 ways, read matrix and bandwidth among them. Invented. */
 export const hugeLatticePreset = {
   format: 'holdfast preset',
@@ -15,23 +17,7 @@ export const hugeLatticePreset = {
       acquisition: '3D',
       target: 'liver',
       comparison: 'spleen',
-      parameters: {
-        repetitionTimeMs: 3.55,
-        echoTimeMs: 1.2,
-        flipAngleDeg: 10,
-        pixelBandwidthHz: 635,
-        fieldOfViewMm: 380,
-        phaseFieldOfViewPercent: 80,
-        matrixRead: 320,
-        matrixPhase: 200,
-        sliceCount: 72,
-        sliceThicknessMm: 3,
-        sliceOversamplingPercent: 11,
-        partialFourierSlice: 0.75,
-        parallelFactorPhase: 2,
-        fatSuppression: 'spectral',
-        pacing: { kind: 'breath-hold' },
-      },
+      parameters: liverArterialPhase,
       opened: [
         'flipAngleDeg',
         'pixelBandwidthHz',

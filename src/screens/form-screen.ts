@@ -87,7 +87,9 @@ function formPane(
     all.findIndex(({ field }) => field === here?.field),
   );
   const shown = windowOf(all, at, rows);
-  const labelColumns = Math.min(26, Math.max(...all.map(({ label }) => label.length), 10) + 1);
+  // Wide screens have room for whole labels; narrow ones keep it for the values.
+  const widest = Math.max(26, Math.floor(0.45 * columns));
+  const labelColumns = Math.min(widest, Math.max(...all.map(({ label }) => label.length), 10) + 1);
   const lines = shown.items.map((row): Line => {
     if (row.kind === 'heading' || (row.kind === 'note' && row.shown === '')) return line(row.label, 'quiet');
     const isHere = row === here || row.field === here?.field;
